@@ -1,0 +1,11 @@
+package nightlag.pipeline.decode;
+
+/**
+ * Where the rows of a file went; {@code rows == used + leftOut}, asserted.
+ *
+ * @param rows data rows in the file
+ * @param used rows that entered a record
+ * @param leftOut rows with an empty cell in a needed column
+ * @param records records handed over
+ */
+public record DecodeCounts(long rows, long used, long leftOut, int records) {}

@@ -1,0 +1,57 @@
+package nightlag.stages.spectrum;
+
+import java.util.Locale;
+import java.util.OptionalDouble;
+
+/**
+ * One mode of a discrete spectrum, or one node of a continuous one.
+ *
+ * @param referenceTemperatureK the temperature it holds at, K
+ * @param kind relaxation or retardation
+ * @param form discrete or continuous
+ * @param timeS relaxation or retardation time, s
+ * @param value modulus in Pa or compliance in 1/Pa (continuous: per unit of ln time)
+ * @param low lower end of the 95 % band
+ * @param high upper end of the 95 % band
+ */
+public record SpectrumRow(
+        double referenceTemperatureK,
+        Kind kind,
+        Form form,
+        double timeS,
+        double value,
+        OptionalDouble low,
+        OptionalDouble high) {
+    /** Which spectrum. */
+    public enum Kind {
+        RELAXATION("Pa"),
+        RETARDATION("1/Pa");
+
+        private final String unit;
+
+        Kind(String unit) {
+            this.unit = unit;
+        }
+
+        /** The unit of the values. */
+        public String unit() {
+            return unit;
+        }
+
+        /** The word in tables. */
+        public String word() {
+            return name().toLowerCase(Locale.ROOT);
+        }
+    }
+
+    /** Modes or a density. */
+    public enum Form {
+        DISCRETE,
+        CONTINUOUS;
+
+        /** The word in tables. */
+        public String word() {
+            return name().toLowerCase(Locale.ROOT);
+        }
+    }
+}

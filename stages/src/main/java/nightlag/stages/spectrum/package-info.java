@@ -1,0 +1,7 @@
+/**
+ * Relaxation and retardation spectra, each from the other.
+ *
+ * <p>Discrete: s·Ĝ(s) = Ge + Σ g_i sτ_i/(1 + sτ_i) and s·Ĵ(s) = 1/(s·Ĝ(s)) (Gross 1953; Tschoegl 1989); non-negative
+ * least squares after Lawson &amp; Hanson (1974), modes as few as the data carry after Baumgaertel &amp; Winter (1989).
+ */
+package nightlag.stages.spectrum;
