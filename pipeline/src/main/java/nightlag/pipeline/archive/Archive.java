@@ -1,56 +1,221 @@
 package nightlag.pipeline.archive;
 
+import com.fasterxml.jackson.core.JsonProcessingException;
 import java.nio.file.Path;
+import java.sql.Connection;
+import java.sql.PreparedStatement;
+import java.sql.ResultSet;
+import java.sql.SQLException;
+import java.util.ArrayList;
 import java.util.Collection;
+import java.util.Collections;
+import java.util.Comparator;
 import java.util.List;
+import nightlag.pipeline.archive.ArchiveException.Kind;
 import nightlag.stages.Reduction;
 
 /** The archive file. Not safe for use by several threads; the night's own thread owns it. */
 public final class Archive implements AutoCloseable {
-    private Archive() {}
+    private static final Comparator<ArchivedFile> BY_NAME = Comparator.comparing(ArchivedFile::tableName)
+            .thenComparing(file -> file.identity().folder())
+            .thenComparing(file -> file.identity().relativePath());
 
-    /** Opens the archive, making it where it is not there yet. Opening and reading an existing one touches no file. */
+    private final Path file;
+    private final Connection connection;
+
+    private Archive(Path file, Connection connection) {
+        this.file = file;
+        this.connection = connection;
+    }
+
+    /**
+     * Opens the archive, making it where it is not there yet. Opening and reading an existing one touches no file, save
+     * that what a killed run left half written is taken back.
+     *
+     * @throws ArchiveException if the file cannot be opened, is damaged, or is not an archive of this version
+     */
     public static Archive open(Path file) throws ArchiveException {
-        throw new UnsupportedOperationException();
+        return new Archive(file, Store.open(file));
     }
 
     /** All files, by table name. */
     public List<ArchivedFile> files() throws ArchiveException {
-        throw new UnsupportedOperationException();
+        return files("list the files", "");
     }
 
-    /** Commits these outcomes in one transaction. */
+    /**
+     * Commits these outcomes in one transaction: all of them or, after an exception, none.
+     *
+     * @throws ArchiveException if nothing could be committed
+     */
     public void commit(Collection<FileOutcome> outcomes) throws ArchiveException {
-        throw new UnsupportedOperationException();
+        inTransaction("keep what was reduced", () -> {
+            try (Commit commit = new Commit(connection)) {
+                for (FileOutcome outcome : outcomes) {
+                    commit.put(outcome);
+                }
+            }
+        });
     }
 
     /** Notes a file's new size and modified time where its content turned out to be the same. */
     public void touched(Collection<ArchivedFile> files) throws ArchiveException {
-        throw new UnsupportedOperationException();
+        inTransaction("note modified times", () -> {
+            try (PreparedStatement update = connection.prepareStatement(
+                    "UPDATE file SET bytes = ?, modified_ms = ? WHERE folder = ? AND path = ?")) {
+                for (ArchivedFile touched : files) {
+                    update.setLong(1, touched.bytes());
+                    update.setLong(2, touched.modifiedMillis());
+                    update.setString(3, touched.identity().folder());
+                    update.setString(4, touched.identity().relativePath());
+                    update.executeUpdate();
+                }
+            }
+        });
     }
 
     /** All lots that have points, or are due because they lost theirs; sorted. */
     public List<LotState> lots() throws ArchiveException {
-        throw new UnsupportedOperationException();
+        String query = """
+                SELECT lot.grade, lot.lot, lot.due, lot.conclusion, coalesce(sum(record.points), 0)
+                FROM lot LEFT JOIN record ON record.grade = lot.grade AND record.lot = lot.lot
+                GROUP BY lot.grade, lot.lot""";
+        List<LotState> lots = new ArrayList<>();
+        try (PreparedStatement select = connection.prepareStatement(query);
+                ResultSet row = select.executeQuery()) {
+            while (row.next()) {
+                LotName name = new LotName(row.getString(1), row.getString(2));
+                lots.add(new LotState(name, row.getBoolean(3), row.getString(4), row.getInt(5)));
+            }
+        } catch (SQLException cause) {
+            throw StoreErrors.failure(file, "list the lots", cause);
+        }
+        lots.sort(Comparator.comparing(LotState::name));
+        return Collections.unmodifiableList(lots);
     }
 
-    /** All reductions of a lot, in no particular order; only points of this lot are in them. */
+    /**
+     * All reductions of a lot; only points of this lot are in them. They come by the identity of their file and then in
+     * the order of the file, however they were committed.
+     */
     public List<Reduction> reductions(LotName lot) throws ArchiveException {
-        throw new UnsupportedOperationException();
+        String query = """
+                SELECT record.body, file.table_name, record.number
+                FROM record JOIN file ON file.id = record.file
+                WHERE record.grade = ? AND record.lot = ?
+                ORDER BY file.table_name, file.folder, file.path, record.number""";
+        List<Reduction> reductions = new ArrayList<>();
+        try (PreparedStatement select = connection.prepareStatement(query)) {
+            select.setString(1, lot.grade());
+            select.setString(2, lot.lot());
+            try (ResultSet row = select.executeQuery()) {
+                while (row.next()) {
+                    reductions.add(read(row));
+                }
+            }
+        } catch (SQLException cause) {
+            throw StoreErrors.failure(file, "read the points of lot " + lot.lot(), cause);
+        }
+        return Collections.unmodifiableList(reductions);
+    }
+
+    private Reduction read(ResultSet row) throws SQLException, ArchiveException {
+        try {
+            return ReductionJson.read(row.getString(1));
+        } catch (JsonProcessingException cause) {
+            throw new ArchiveException(
+                    Kind.DAMAGED,
+                    "the archive " + file + " is damaged: record " + row.getInt(3) + " of " + row.getString(2)
+                            + " cannot be read (" + cause.getOriginalMessage() + ")",
+                    cause);
+        }
     }
 
     /** The files with points in a lot, by table name, for the provenance in its data package. */
     public List<ArchivedFile> filesOf(LotName lot) throws ArchiveException {
-        throw new UnsupportedOperationException();
+        return files(
+                "list the files of lot " + lot.lot(),
+                "WHERE id IN (SELECT record.file FROM record WHERE record.grade = ? AND record.lot = ?)",
+                lot.grade(),
+                lot.lot());
     }
 
     /** Notes that a lot's tables are swapped in; a lot without points is forgotten. */
     public void concluded(LotName lot, String conclusionFingerprint) throws ArchiveException {
-        throw new UnsupportedOperationException();
+        inTransaction("note that the tables of lot " + lot.lot() + " are written", () -> {
+            try (PreparedStatement forget = connection.prepareStatement("""
+                            DELETE FROM lot WHERE grade = ?1 AND lot = ?2
+                            AND NOT EXISTS (SELECT 1 FROM record WHERE record.grade = ?1 AND record.lot = ?2)""");
+                    PreparedStatement done = connection.prepareStatement(
+                            "UPDATE lot SET due = 0, conclusion = ?3 WHERE grade = ?1 AND lot = ?2")) {
+                for (PreparedStatement statement : List.of(forget, done)) {
+                    statement.setString(1, lot.grade());
+                    statement.setString(2, lot.lot());
+                }
+                done.setString(3, conclusionFingerprint);
+                forget.executeUpdate();
+                done.executeUpdate();
+            }
+        });
     }
 
     @Override
     public void close() throws ArchiveException {
-        throw new UnsupportedOperationException();
+        try {
+            connection.close();
+        } catch (SQLException cause) {
+            throw StoreErrors.failure(file, "close it", cause);
+        }
+    }
+
+    private List<ArchivedFile> files(String step, String condition, String... values) throws ArchiveException {
+        String query = """
+                SELECT folder, path, table_name, instrument, bytes, modified_ms, sha256, fingerprint, status, reason,
+                       points, grade, lot, specimen, rows, rows_left_out
+                FROM file\s""";
+        List<ArchivedFile> files = new ArrayList<>();
+        try (PreparedStatement select = connection.prepareStatement(query + condition)) {
+            for (int i = 0; i < values.length; i++) {
+                select.setString(i + 1, values[i]);
+            }
+            try (ResultSet row = select.executeQuery()) {
+                while (row.next()) {
+                    files.add(archivedFile(row));
+                }
+            }
+        } catch (SQLException cause) {
+            throw StoreErrors.failure(file, step, cause);
+        }
+        files.sort(BY_NAME);
+        return Collections.unmodifiableList(files);
+    }
+
+    private static ArchivedFile archivedFile(ResultSet row) throws SQLException {
+        int column = 0;
+        return new ArchivedFile(
+                new FileIdentity(row.getString(++column), row.getString(++column)),
+                row.getString(++column),
+                row.getString(++column),
+                row.getLong(++column),
+                row.getLong(++column),
+                row.getString(++column),
+                row.getString(++column),
+                FileStatus.of(row.getString(++column)),
+                row.getString(++column),
+                row.getInt(++column),
+                row.getString(++column),
+                row.getString(++column),
+                row.getString(++column),
+                row.getLong(++column),
+                row.getLong(++column));
+    }
+
+    /** Does the work and commits it; after a failure the archive is as it was before. */
+    private void inTransaction(String step, Store.Work work) throws ArchiveException {
+        try {
+            Store.inTransaction(connection, work);
+        } catch (SQLException cause) {
+            throw StoreErrors.failure(file, step, cause);
+        }
     }
 }

@@ -1,0 +1,81 @@
+package nightlag.pipeline.archive;
+
+import static org.assertj.core.api.Assertions.assertThat;
+import static org.assertj.core.api.Assertions.assertThatThrownBy;
+
+import com.fasterxml.jackson.core.JsonProcessingException;
+import java.util.List;
+import java.util.Optional;
+import java.util.OptionalDouble;
+import nightlag.pipeline.RandomPoints;
+import nightlag.stages.Reduction;
+import nightlag.stages.geometry.DeformationMode;
+import nightlag.stages.moduli.Harmonic;
+import nightlag.stages.moduli.Moduli;
+import nightlag.stages.moduli.ModulusPoint;
+import nightlag.stages.moduli.PointKey;
+import nightlag.stages.moduli.Quality;
+import org.junit.jupiter.api.Test;
+import org.junit.jupiter.params.ParameterizedTest;
+import org.junit.jupiter.params.provider.ValueSource;
+
+class ReductionJsonTest {
+    @ParameterizedTest(name = "seed {0}")
+    @ValueSource(longs = {1, 2, 3, 5, 8, 13, 21, 34, 55, 89})
+    void whatIsReadIsWhatWasWrittenToTheLastBit(long seed) throws JsonProcessingException {
+        for (Reduction reduction : new RandomPoints(seed).reductions("Heron 3", "L-17", "bench/a.csv", 100)) {
+            assertThat(ReductionJson.read(ReductionJson.write(reduction))).isEqualTo(reduction);
+        }
+    }
+
+    @Test
+    void infinityAndNotANumberSurvive() throws JsonProcessingException {
+        Reduction reduction = new Reduction(List.of(plainPoint(
+                OptionalDouble.of(Double.POSITIVE_INFINITY),
+                List.of(new Harmonic(1, Double.NaN, Double.NEGATIVE_INFINITY, 1, OptionalDouble.of(Double.NaN))))));
+
+        assertThat(ReductionJson.read(ReductionJson.write(reduction))).isEqualTo(reduction);
+    }
+
+    @Test
+    void whatIsNotThereTakesNoRoomAndHarmonicsAreArrays() {
+        Reduction reduction = new Reduction(List.of(
+                plainPoint(OptionalDouble.empty(), List.of(new Harmonic(1, 2.5, 0.25, 1, OptionalDouble.empty())))));
+
+        assertThat(ReductionJson.write(reduction))
+                .isEqualTo("{\"points\":[{\"key\":{\"grade\":\"Heron 3\",\"lot\":\"L-17\",\"specimen\":\"1\","
+                        + "\"sweep\":\"1\",\"point\":\"a\",\"sourceFile\":\"bench/a.csv\"},\"deformation\":\"SHEAR\","
+                        + "\"moduli\":{\"storagePa\":2.0,\"lossPa\":3.0},\"harmonics\":[[1,2.5,0.25,1.0,null]],"
+                        + "\"quality\":\"SOUND\",\"flags\":[],\"samplesUsed\":512,\"reasons\":[],\"loop\":[]}]}");
+    }
+
+    @ParameterizedTest
+    @ValueSource(strings = {"", "{", "{\"points\":[{}]}", "{\"points\":[],\"curve\":1}", "not JSON"})
+    void damagedTextIsRefused(String damaged) {
+        assertThatThrownBy(() -> ReductionJson.read(damaged)).isInstanceOf(JsonProcessingException.class);
+    }
+
+    private static ModulusPoint plainPoint(OptionalDouble strainSnrDb, List<Harmonic> harmonics) {
+        return new ModulusPoint(
+                new PointKey("Heron 3", "L-17", "1", "1", "a", "bench/a.csv"),
+                Optional.empty(),
+                DeformationMode.SHEAR,
+                OptionalDouble.empty(),
+                OptionalDouble.empty(),
+                OptionalDouble.empty(),
+                OptionalDouble.empty(),
+                OptionalDouble.empty(),
+                OptionalDouble.empty(),
+                Optional.of(new Moduli(2, 3, Optional.empty())),
+                harmonics,
+                Quality.SOUND,
+                List.of(),
+                OptionalDouble.empty(),
+                512,
+                strainSnrDb,
+                OptionalDouble.empty(),
+                OptionalDouble.empty(),
+                List.of(),
+                List.of());
+    }
+}
