@@ -8,8 +8,15 @@ import java.util.List;
 public final class NightTables {
     private NightTables() {}
 
-    /** Writes {@code files.csv} into a night's folder, sorted by file. */
+    /**
+     * Writes {@code files.csv} into a night's folder, sorted by file.
+     *
+     * @throws IOException if it cannot be written; it names the file
+     */
     public static void writeFiles(Path nightFolder, List<NightFileRow> rows) throws IOException {
-        throw new UnsupportedOperationException();
+        try (FolderSwap swap = FolderSwap.into(nightFolder)) {
+            swap.write(FilesTable.TABLE.fileName(), out -> FilesTable.TABLE.write(rows, out));
+            swap.swap();
+        }
     }
 }

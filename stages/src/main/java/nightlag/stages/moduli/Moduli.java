@@ -1,6 +1,7 @@
 package nightlag.stages.moduli;
 
 import java.util.Optional;
+import java.util.OptionalDouble;
 import nightlag.stages.numeric.Complex;
 
 /**
@@ -11,6 +12,9 @@ import nightlag.stages.numeric.Complex;
  * @param covariance covariance from the record's own noise; empty where none is known
  */
 public record Moduli(double storagePa, double lossPa, Optional<ModuliCovariance> covariance) {
+    /** No standard uncertainty is given smaller than this part of its value. */
+    private static final double RELATIVE_FLOOR = 1e-12;
+
     /** The complex modulus in Pa. */
     public Complex complex() {
         return new Complex(storagePa, lossPa);
@@ -29,5 +33,20 @@ public record Moduli(double storagePa, double lossPa, Optional<ModuliCovariance>
     /** tan δ = G''/G'. */
     public double tanDelta() {
         return lossPa / storagePa;
+    }
+
+    /**
+     * The standard uncertainty of tan δ by the law of propagation (JCGM 100:2008, 5.2): with t = G''/G',
+     * u²(t) = (t² u²(G') − 2 t u(G', G'') + u²(G''))/G'². Empty where no covariance is known.
+     */
+    public OptionalDouble tanDeltaU() {
+        if (covariance.isEmpty()) {
+            return OptionalDouble.empty();
+        }
+        ModuliCovariance known = covariance.get();
+        double t = tanDelta();
+        double variance = t * t * known.storageVariance() - 2 * t * known.covariance() + known.lossVariance();
+        double u = Math.sqrt(Math.max(variance, 0)) / Math.abs(storagePa);
+        return OptionalDouble.of(Math.max(u, RELATIVE_FLOOR * Math.abs(t)));
     }
 }

@@ -1,0 +1,70 @@
+package nightlag.pipeline.tables;
+
+import java.util.Comparator;
+import java.util.List;
+import nightlag.stages.moduli.Harmonic;
+import nightlag.stages.moduli.ModulusPoint;
+import nightlag.stages.moduli.PointKey;
+
+/** The declaration of {@code harmonics}. */
+final class HarmonicsTable {
+    static final Table<Row> TABLE = Table.of(
+            "harmonics",
+            "One order of the stress of one point, its phase referred to the strain γ₀ sin ωt",
+            LotColumns.before(
+                    row -> row.key().grade(),
+                    row -> row.key().lot(),
+                    row -> row.key().specimen(),
+                    List.of(
+                            Column.<Row>text(
+                                            "sweep",
+                                            "sweep of the specimen",
+                                            row -> row.key().sweep())
+                                    .asKey(),
+                            Column.<Row>text(
+                                            "point",
+                                            "point of the sweep, as in points",
+                                            row -> row.key().point())
+                                    .asKey(),
+                            Column.<Row>count(
+                                            "order",
+                                            "order n, a multiple of the frequency",
+                                            row -> row.harmonic().order())
+                                    .atLeast(1)
+                                    .asKey(),
+                            Column.<Row>number(
+                                    "stress_in_phase_Pa",
+                                    "Pa",
+                                    "amplitude σ'ₙ of sin nωt",
+                                    row -> row.harmonic().stressInPhasePa()),
+                            Column.<Row>number(
+                                    "stress_out_of_phase_Pa",
+                                    "Pa",
+                                    "amplitude σ''ₙ of cos nωt",
+                                    row -> row.harmonic().stressOutOfPhasePa()),
+                            Column.<Row>number(
+                                            "relative_intensity",
+                                            "1",
+                                            "magnitude of this order over that of the fundamental",
+                                            row -> row.harmonic().relativeIntensity())
+                                    .atLeast(0),
+                            Column.<Row>optional(
+                                            "relative_intensity_u",
+                                            "1",
+                                            "standard uncertainty of the relative intensity from the record's own noise",
+                                            row -> row.harmonic().relativeIntensityU())
+                                    .atLeast(0))),
+            Comparator.comparing(row -> row.key().sourceFile(), NaturalOrder.INSTANCE));
+
+    private HarmonicsTable() {}
+
+    /** Every order of every point. */
+    static List<Row> rows(List<ModulusPoint> points) {
+        return points.stream()
+                .flatMap(point -> point.harmonics().stream().map(harmonic -> new Row(point.key(), harmonic)))
+                .toList();
+    }
+
+    /** One order of a point. */
+    record Row(PointKey key, Harmonic harmonic) {}
+}
