@@ -1,0 +1,96 @@
+package nightlag.pipeline.config;
+
+import java.util.ArrayList;
+import java.util.HashSet;
+import java.util.List;
+import java.util.Optional;
+import java.util.OptionalDouble;
+import java.util.Set;
+import java.util.stream.Collectors;
+import java.util.stream.Stream;
+import nightlag.stages.acceptance.LimitPlan;
+
+/** Reads the sections {@code [[limit]]}. */
+final class LimitsReader {
+    private LimitsReader() {}
+
+    /** Those that are right, in the order of the file. */
+    static List<LimitPlan> read(List<SectionReader> sections) {
+        Set<String> columns = new HashSet<>();
+        List<LimitPlan> limits = new ArrayList<>();
+        for (SectionReader section : sections) {
+            limit(section, columns).ifPresent(limits::add);
+        }
+        return limits;
+    }
+
+    private static Optional<LimitPlan> limit(SectionReader section, Set<String> columns) {
+        Optional<String> name = section.text(GradeKeys.LIMIT_NAME).map(String::strip);
+        Optional<LimitProperty> property =
+                section.choice(GradeKeys.PROPERTY, List.of(LimitProperty.values()), LimitProperty::word);
+        OptionalDouble temperature = section.si(GradeKeys.LIMIT_TEMPERATURE);
+        OptionalDouble frequency = section.si(GradeKeys.LIMIT_FREQUENCY);
+        OptionalDouble coverage = section.real(GradeKeys.COVERAGE);
+        if (!section.has(GradeKeys.MIN) && !section.has(GradeKeys.MAX)) {
+            section.missing(GradeKeys.MIN, "min, max or both");
+        }
+        if (property.isEmpty()) {
+            return Optional.empty();
+        }
+        if (property.get().ofPoints()) {
+            for (Key key : List.of(GradeKeys.LIMIT_TEMPERATURE, GradeKeys.LIMIT_FREQUENCY)) {
+                if (!section.has(key)) {
+                    section.missing(key, "where the limit on " + property.get().word() + " holds");
+                }
+            }
+        }
+        OptionalDouble min = bound(section, GradeKeys.MIN, property.get());
+        OptionalDouble max = bound(section, GradeKeys.MAX, property.get());
+        if (min.isPresent() && max.isPresent() && min.getAsDouble() >= max.getAsDouble()) {
+            section.wrong(GradeKeys.MAX, "max is not above min", "a max above min");
+        }
+        String conditions = conditions(section);
+        String column = name.orElseGet(() -> (property.get().word() + " " + conditions).strip());
+        if (!columns.add(column)) {
+            section.wrong(
+                    section.has(GradeKeys.LIMIT_NAME) ? GradeKeys.LIMIT_NAME : GradeKeys.PROPERTY,
+                    "a second limit that is called \"" + column + "\"",
+                    "a name that stands once, as it heads a column");
+        }
+        if (coverage.isEmpty()) {
+            return Optional.empty();
+        }
+        return Optional.of(new LimitPlan(
+                name,
+                property.get().word(),
+                temperature,
+                frequency,
+                conditions,
+                min,
+                max,
+                property.get().unit(),
+                coverage.getAsDouble()));
+    }
+
+    private static OptionalDouble bound(SectionReader section, Key key, LimitProperty property) {
+        if (!section.has(key)) {
+            return OptionalDouble.empty();
+        }
+        KeyType.Measured type =
+                new KeyType.Measured(property.kind(), KeyType.Sign.ANY, property.kind() == QuantityKind.RATIO);
+        return section.node(key)
+                .flatMap(node -> section.quantity(key, node, type))
+                .map(quantity -> OptionalDouble.of(property.value(quantity)))
+                .orElseGet(OptionalDouble::empty);
+    }
+
+    /** Temperature and frequency as written. */
+    private static String conditions(SectionReader section) {
+        return Stream.of(GradeKeys.LIMIT_TEMPERATURE, GradeKeys.LIMIT_FREQUENCY)
+                .filter(section::has)
+                .flatMap(key -> section.node(key).stream())
+                .filter(node -> node instanceof Node.Scalar)
+                .map(node -> String.valueOf(((Node.Scalar) node).value()).strip())
+                .collect(Collectors.joining(" "));
+    }
+}

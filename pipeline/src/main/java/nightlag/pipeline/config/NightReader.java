@@ -1,0 +1,207 @@
+package nightlag.pipeline.config;
+
+import java.io.IOException;
+import java.io.UncheckedIOException;
+import java.nio.file.Files;
+import java.nio.file.InvalidPathException;
+import java.nio.file.Path;
+import java.util.ArrayList;
+import java.util.HashSet;
+import java.util.LinkedHashMap;
+import java.util.List;
+import java.util.Locale;
+import java.util.Map;
+import java.util.Optional;
+import java.util.OptionalDouble;
+import java.util.OptionalInt;
+import java.util.Set;
+import java.util.stream.Stream;
+
+/** Reads the night file itself; the instrument files its intakes name are read by the way. */
+final class NightReader {
+    private static final int LONGEST_SHEET_NAME = 31;
+
+    private final Path folder;
+    private final FileNames names;
+    private final FileSections file;
+    private final Problems problems;
+    private final List<Problem> instrumentProblems = new ArrayList<>();
+    private final Map<String, Optional<Instrument>> instruments = new LinkedHashMap<>();
+
+    /**
+     * @param folder the night file's folder, absolute and normalised
+     * @param names how files are called
+     * @param toml what stands in the night file
+     * @param problems where everything wrong with it goes
+     */
+    NightReader(Path folder, FileNames names, TomlFile toml, Problems problems) {
+        this.folder = folder;
+        this.names = names;
+        this.problems = problems;
+        problems.addAll(toml.problems());
+        this.file = new FileSections(NightKeys.KIND, toml.root(), problems);
+    }
+
+    /**
+     * What the night file says.
+     *
+     * @param results folder of results
+     * @param grades folder of grade files, as far as it is there
+     * @param workers at least 1
+     * @param settleS s
+     * @param intakes intakes whose instrument is right
+     * @param teamSheet the team's spreadsheet
+     */
+    record Night(
+            Optional<Path> results,
+            Optional<Path> grades,
+            OptionalInt workers,
+            OptionalDouble settleS,
+            List<Intake> intakes,
+            Optional<TeamSheet> teamSheet) {}
+
+    Night read() {
+        SectionReader top = file.top();
+        Optional<Path> results = path(top, NightKeys.RESULTS);
+        Optional<Path> grades = folderThatIsThere(top, NightKeys.GRADES);
+        Optional<Path> instrumentFolder = folderThatIsThere(top, NightKeys.INSTRUMENTS);
+        OptionalInt workers = top.whole(NightKeys.WORKERS);
+        OptionalDouble settle = top.si(NightKeys.SETTLE);
+        results.filter(path -> Files.exists(path) && !Files.isDirectory(path))
+                .ifPresent(
+                        path -> top.wrong(NightKeys.RESULTS, "this is a file", "a folder, which need not exist yet"));
+        List<Intake> intakes = intakes(instrumentFolder, results);
+        Optional<TeamSheet> teamSheet = file.optional(NightKeys.TEAM_SHEET).flatMap(this::teamSheet);
+        return new Night(results, grades, workers, settle, intakes, teamSheet);
+    }
+
+    List<Problem> instrumentProblems() {
+        return instrumentProblems;
+    }
+
+    /** Sections of the night file and of the instrument files in use that nothing is done with yet. */
+    List<String> notActedOn() {
+        List<String> lines = new ArrayList<>();
+        if (file.has(NightKeys.TEAM_SHEET)) {
+            lines.add("[team_sheet]: read and checked, not acted on yet");
+        }
+        for (Optional<Instrument> instrument : instruments.values()) {
+            instrument
+                    .filter(found -> !found.uncertainty().isEmpty())
+                    .ifPresent(found -> lines.add(
+                            "[uncertainty] of instrument " + found.id() + ": read and checked, not acted on yet"));
+        }
+        return lines;
+    }
+
+    private Optional<Path> path(SectionReader section, Key key) {
+        Optional<String> text = section.text(key);
+        try {
+            return text.map(written -> folder.resolve(written).normalize());
+        } catch (InvalidPathException e) {
+            section.wrong(key, "not a path: " + e.getReason(), "a path, with '/' between folders");
+            return Optional.empty();
+        }
+    }
+
+    private Optional<Path> folderThatIsThere(SectionReader section, Key key) {
+        Optional<Path> path = path(section, key);
+        if (path.isPresent() && !Files.isDirectory(path.get())) {
+            section.wrong(
+                    key,
+                    Files.exists(path.get())
+                            ? names.name(path.get()) + " is no folder"
+                            : "there is no folder " + names.name(path.get()),
+                    "a folder that exists; relative paths start at the night file");
+            return Optional.empty();
+        }
+        return path;
+    }
+
+    private List<Intake> intakes(Optional<Path> instrumentFolder, Optional<Path> results) {
+        List<SectionReader> sections = file.repeated(NightKeys.INTAKE);
+        if (!file.has(NightKeys.INTAKE)) {
+            problems.missing(file.at(), "[[intake]]", "missing", "at least one section [[intake]]");
+        }
+        List<Intake> intakes = new ArrayList<>();
+        Set<List<Object>> seen = new HashSet<>();
+        for (SectionReader section : sections) {
+            Optional<Path> path = path(section, NightKeys.FOLDER);
+            Optional<String> id = section.text(NightKeys.INSTRUMENT).map(String::strip);
+            if (path.isPresent() && id.isPresent() && !seen.add(List.of(path.get(), id.get()))) {
+                section.wrong(
+                        NightKeys.FOLDER,
+                        "this folder is taken in with instrument " + id.get() + " already",
+                        "each folder once for an instrument");
+            }
+            if (path.isPresent() && results.isPresent() && results.get().startsWith(path.get())) {
+                section.wrong(
+                        NightKeys.FOLDER,
+                        "the results lie in this folder and would be taken in again",
+                        "an intake folder that does not hold the results");
+            }
+            Optional<Instrument> instrument = instrumentFolder.isPresent() && id.isPresent()
+                    ? instrument(section, instrumentFolder.get(), id.get())
+                    : Optional.empty();
+            if (path.isPresent() && path.get().getFileName() == null) {
+                section.wrong(NightKeys.FOLDER, "this is the root of a drive", "a folder with a name");
+            } else if (path.isPresent() && instrument.isPresent()) {
+                intakes.add(new Intake(path.get(), path.get().getFileName().toString(), instrument.get()));
+            }
+        }
+        return intakes;
+    }
+
+    private Optional<Instrument> instrument(SectionReader section, Path instrumentFolder, String id) {
+        if (instruments.containsKey(id)) {
+            return instruments.get(id);
+        }
+        List<String> known = namesIn(instrumentFolder);
+        Optional<Instrument> instrument = Optional.empty();
+        if (known.contains(id)) {
+            Path path = instrumentFolder.resolve(id + ".toml");
+            instrument = InstrumentReader.read(id, TomlFile.read(path, names.name(path)), instrumentProblems);
+            instruments.put(id, instrument);
+        } else {
+            section.wrong(
+                    NightKeys.INSTRUMENT,
+                    "there is no file " + names.name(instrumentFolder) + "/" + id + ".toml"
+                            + Suggestion.clause(id, known),
+                    known.isEmpty() ? "the name of an instrument file" : "one of " + String.join(", ", known));
+        }
+        return instrument;
+    }
+
+    private static List<String> namesIn(Path instrumentFolder) {
+        try (Stream<Path> files = Files.list(instrumentFolder)) {
+            return files.map(file -> file.getFileName().toString())
+                    .filter(name -> name.endsWith(".toml") && !name.startsWith("."))
+                    .map(name -> name.substring(0, name.length() - ".toml".length()))
+                    .sorted()
+                    .toList();
+        } catch (IOException | UncheckedIOException e) {
+            return List.of();
+        }
+    }
+
+    private Optional<TeamSheet> teamSheet(SectionReader section) {
+        Optional<Path> path = path(section, NightKeys.FILE);
+        Optional<String> sheet = section.text(NightKeys.SHEET);
+        if (path.isPresent()) {
+            String name = path.get().toString().toLowerCase(Locale.ROOT);
+            if (!name.endsWith(".csv") && !name.endsWith(".xlsx")) {
+                section.wrong(NightKeys.FILE, "this is no .csv and no .xlsx", "a .csv or an .xlsx");
+            }
+        }
+        if (sheet.isPresent()
+                && (sheet.get().length() > LONGEST_SHEET_NAME || sheet.get().matches(".*[\\[\\]:*?/\\\\].*"))) {
+            section.wrong(
+                    NightKeys.SHEET,
+                    "no workbook can hold a sheet of this name",
+                    "at most 31 characters, none of [ ] : * ? / \\");
+        }
+        return path.isPresent() && sheet.isPresent()
+                ? Optional.of(new TeamSheet(path.get(), sheet.get()))
+                : Optional.empty();
+    }
+}

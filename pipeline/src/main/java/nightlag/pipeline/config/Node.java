@@ -1,0 +1,65 @@
+package nightlag.pipeline.config;
+
+import java.util.Collections;
+import java.util.LinkedHashMap;
+import java.util.List;
+import java.util.Map;
+
+/** What stands in a configuration file, each piece with its place, so that pieces of several files can be merged. */
+sealed interface Node {
+    /** Where it stands. */
+    At at();
+
+    /** What it is, for a message. */
+    String found();
+
+    /**
+     * A table.
+     *
+     * @param at its heading
+     * @param entries its keys in the order they stand
+     */
+    record Table(At at, Map<String, Node> entries) implements Node {
+        public Table {
+            entries = Collections.unmodifiableMap(new LinkedHashMap<>(entries));
+        }
+
+        @Override
+        public String found() {
+            return "a table";
+        }
+    }
+
+    /**
+     * A list.
+     *
+     * @param at where it begins
+     * @param items its items
+     */
+    record Sequence(At at, List<Node> items) implements Node {
+        public Sequence {
+            items = List.copyOf(items);
+        }
+
+        @Override
+        public String found() {
+            return items.isEmpty() ? "an empty list" : "a list of " + items.size();
+        }
+    }
+
+    /**
+     * A single value.
+     *
+     * @param at where it stands
+     * @param value a String, Long, Double, Boolean or a date of java.time
+     */
+    record Scalar(At at, Object value) implements Node {
+        @Override
+        public String found() {
+            if (value instanceof String text) {
+                return "\"" + text + "\"";
+            }
+            return value instanceof Boolean || value instanceof Number ? value.toString() : "the date " + value;
+        }
+    }
+}
