@@ -9,7 +9,6 @@ import java.util.Arrays;
  */
 public final class LevenbergMarquardt {
     private static final double FIRST_DAMPING = 1e-3;
-    private static final double NO_PROGRESS = 1e-9;
 
     private LevenbergMarquardt() {}
 
@@ -37,9 +36,11 @@ public final class LevenbergMarquardt {
      * @param start where to begin, finite, within the bounds
      * @param lower lower bounds
      * @param upper upper bounds
+     * @param enough the search ends when a step, or the best it can hope for, takes less than this share off χ²
      * @param maxSteps the most steps taken
      */
-    public static Fit minimise(Problem problem, double[] start, double[] lower, double[] upper, int maxSteps) {
+    public static Fit minimise(
+            Problem problem, double[] start, double[] lower, double[] upper, double enough, int maxSteps) {
         double[] place = start.clone();
         double[] residuals = problem.residuals(place);
         double cost = square(residuals);
@@ -69,12 +70,12 @@ public final class LevenbergMarquardt {
                 place = next;
                 residuals = nextResiduals;
                 cost = nextCost;
-                if (progress < NO_PROGRESS) {
+                if (progress < enough) {
                     break;
                 }
                 linear = new Step(problem.jacobian(place), residuals, place, lower, upper);
             } else {
-                if (!(expected > NO_PROGRESS * 1e-3 * cost)) {
+                if (!(expected > enough * cost)) {
                     break;
                 }
                 damping *= growth;

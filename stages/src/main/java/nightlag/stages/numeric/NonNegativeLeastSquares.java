@@ -71,6 +71,14 @@ public final class NonNegativeLeastSquares {
 
     private double[] run() {
         int n = columns.length;
+        Arrays.fill(free, true);
+        double[] unbound = solveFree();
+        if (unbound.length == n && Arrays.stream(unbound).allMatch(value -> value > 0)) {
+            // positive by itself: no bound is at work
+            x = unbound;
+            return unscaled();
+        }
+        Arrays.fill(free, false);
         double tolerance = 1e-13 * HouseholderTriangle.norm(target, 0);
         boolean[] refused = new boolean[n];
         for (int round = 0; round < 10 * n + 10; round++) {
@@ -99,7 +107,11 @@ public final class NonNegativeLeastSquares {
             }
             Arrays.fill(refused, false);
         }
-        return IntStream.range(0, n)
+        return unscaled();
+    }
+
+    private double[] unscaled() {
+        return IntStream.range(0, x.length)
                 .mapToDouble(j -> norms[j] == 0 ? 0 : x[j] / norms[j])
                 .toArray();
     }

@@ -1,0 +1,28 @@
+package nightlag.stages;
+
+import nightlag.stages.fault.ReasonCode;
+
+/** What could not be concluded about a lot, and why. */
+public enum ConclusionReason implements ReasonCode {
+    /** Nothing. */
+    SPECTRUM_NO_POINTS("no spectrum: the lot has no usable point with a temperature and a frequency"),
+    /** Reference temperature in °C. */
+    SPECTRUM_NO_ISOTHERM_AT_REFERENCE(
+            "no spectrum: no frequency sweep within 0.5 K of the reference temperature {0} °C"),
+    /** How many temperatures. */
+    SPECTRUM_SEVERAL_TEMPERATURES(
+            "no spectrum: frequency sweeps at {0} temperatures and no reference temperature to choose by"),
+    /** Nothing. */
+    SPECTRUM_MIXED_DEFORMATION("no spectrum: the lot holds points in shear and in extension, two different moduli");
+
+    private final String template;
+
+    ConclusionReason(String template) {
+        this.template = template;
+    }
+
+    @Override
+    public String template() {
+        return template;
+    }
+}

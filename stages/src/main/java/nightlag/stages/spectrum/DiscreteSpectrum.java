@@ -1,0 +1,184 @@
+package nightlag.stages.spectrum;
+
+import java.util.ArrayList;
+import java.util.List;
+import java.util.Locale;
+import java.util.OptionalDouble;
+import nightlag.stages.moduli.Marker;
+
+/** The relaxation modes fitted to readings, the retardation modes that are their exact inverse, and what follows from both. */
+public final class DiscreteSpectrum {
+    private final RelaxationModes relaxation;
+    private final RetardationModes retardation;
+    private final SupportedWindow window;
+    private final ModeUncertainty uncertainty;
+    private final boolean scatterKnown;
+
+    DiscreteSpectrum(WeightedReadings readings, ModeRefinement refinement, FittedModes modes) {
+        relaxation = RelaxationModes.of(modes.equilibrium(), modes.times(), modes.strengths());
+        retardation = relaxation.retardation();
+        window = SupportedWindow.of(readings.lowestFrequency(), readings.highestFrequency());
+        uncertainty = new ModeUncertainty(readings, refinement, modes);
+        scatterKnown = readings.scatterKnown();
+    }
+
+    /** The fitted modes. */
+    public RelaxationModes relaxation() {
+        return relaxation;
+    }
+
+    /** Their exact inverse. */
+    public RetardationModes retardation() {
+        return retardation;
+    }
+
+    /** The times the data support. */
+    public SupportedWindow window() {
+        return window;
+    }
+
+    /** Both sets as rows, relaxation first, times rising. */
+    public List<SpectrumRow> rows(double temperatureK) {
+        List<SpectrumRow> rows = new ArrayList<>();
+        add(rows, temperatureK, SpectrumRow.Kind.RELAXATION, relaxation.timesS(), relaxation.strengthsPa());
+        add(rows, temperatureK, SpectrumRow.Kind.RETARDATION, retardation.timesS(), retardation.strengthsPerPa());
+        return rows;
+    }
+
+    private static void add(
+            List<SpectrumRow> rows, double temperatureK, SpectrumRow.Kind kind, double[] times, double[] strengths) {
+        for (int i = 0; i < times.length; i++) {
+            rows.add(new SpectrumRow(
+                    temperatureK,
+                    kind,
+                    SpectrumRow.Form.DISCRETE,
+                    times[i],
+                    strengths[i],
+                    OptionalDouble.empty(),
+                    OptionalDouble.empty()));
+        }
+    }
+
+    /**
+     * The figures that complete the two sets, and those that follow: Ge, G(0), J(0) and, for a liquid, η0 = Σ gτ, Je0 =
+     * Σ gτ²/η0² and the mean time Σ gτ²/Σ gτ. With the rows they make s·Ĝ(s) and s·Ĵ(s) exact inverses.
+     */
+    public List<Marker> markers(double temperatureK) {
+        List<Marker> markers = new ArrayList<>();
+        double stiffness = relaxation.instantaneousModulusPa();
+        ModeUncertainty.Figure instantaneous =
+                new ModeUncertainty.Figure(stiffness, (g, time) -> new double[] {1, 0}, 1);
+        if (relaxation.isLiquid()) {
+            double viscosity = relaxation.viscosityPaS();
+            double moment = relaxation.secondMomentPaS2();
+            markers.add(marker(
+                    "zero_shear_viscosity",
+                    "Pa·s",
+                    "sum of g τ",
+                    slowEnd(),
+                    temperatureK,
+                    new ModeUncertainty.Figure(viscosity, (g, time) -> new double[] {time, g}, 0)));
+            markers.add(marker(
+                    "steady_state_compliance",
+                    "1/Pa",
+                    "sum of g τ² over the square of the sum of g τ",
+                    slowEnd(),
+                    temperatureK,
+                    new ModeUncertainty.Figure(
+                            relaxation.steadyStateCompliancePerPa(),
+                            (g, time) -> new double[] {
+                                time * (time - 2 * moment / viscosity) / viscosity / viscosity,
+                                2 * g * (time - moment / viscosity) / viscosity / viscosity
+                            },
+                            0)));
+            markers.add(marker(
+                    "mean_relaxation_time",
+                    "s",
+                    "sum of g τ² over the sum of g τ",
+                    slowEnd(),
+                    temperatureK,
+                    new ModeUncertainty.Figure(
+                            relaxation.meanTimeS(),
+                            (g, time) -> new double[] {
+                                time * (time - moment / viscosity) / viscosity,
+                                g * (2 * time - moment / viscosity) / viscosity
+                            },
+                            0)));
+        } else {
+            markers.add(marker(
+                    "equilibrium_modulus",
+                    "Pa",
+                    "fitted together with the modes",
+                    slowEnd(),
+                    temperatureK,
+                    new ModeUncertainty.Figure(relaxation.equilibriumPa(), (g, time) -> new double[] {0, 0}, 1)));
+        }
+        markers.add(marker(
+                "instantaneous_modulus",
+                "Pa",
+                relaxation.isLiquid() ? "sum of g" : "equilibrium modulus and sum of g",
+                fastEnd(),
+                temperatureK,
+                instantaneous));
+        markers.add(marker(
+                "instantaneous_compliance",
+                "1/Pa",
+                "one over the instantaneous modulus",
+                fastEnd(),
+                temperatureK,
+                new ModeUncertainty.Figure(
+                        retardation.instantaneousPerPa(),
+                        (g, time) -> new double[] {-1 / stiffness / stiffness, 0},
+                        -1 / stiffness / stiffness)));
+        return markers;
+    }
+
+    private Marker marker(
+            String property,
+            String unit,
+            String how,
+            String caution,
+            double temperatureK,
+            ModeUncertainty.Figure figure) {
+        String method = String.format(
+                Locale.ROOT,
+                "%s, %d relaxation mode%s, u from %s%s",
+                how,
+                relaxation.count(),
+                relaxation.count() == 1 ? "" : "s",
+                scatterKnown ? "the fit" : "the scatter about the fit",
+                caution);
+        return new Marker(
+                "",
+                "",
+                property,
+                OptionalDouble.of(temperatureK),
+                OptionalDouble.empty(),
+                figure.value(),
+                uncertainty.of(figure),
+                unit,
+                method);
+    }
+
+    private String slowEnd() {
+        double slowest = relaxation.timesS()[relaxation.count() - 1];
+        return slowest <= window.longestS()
+                ? ""
+                : String.format(
+                        Locale.ROOT,
+                        "; the slowest mode, %.3g s, lies beyond the %.3g s the data support: slower ones may be missing",
+                        slowest,
+                        window.longestS());
+    }
+
+    private String fastEnd() {
+        double fastest = relaxation.timesS()[0];
+        return fastest >= window.shortestS()
+                ? ""
+                : String.format(
+                        Locale.ROOT,
+                        "; the fastest mode, %.3g s, lies before the %.3g s the data support: faster ones may be missing",
+                        fastest,
+                        window.shortestS());
+    }
+}

@@ -1,0 +1,27 @@
+package nightlag.stages.spectrum;
+
+import nightlag.stages.fault.ReasonCode;
+
+/** Why a lot has no spectrum, or not the one that was asked for. */
+public enum SpectrumReason implements ReasonCode {
+    /** Frequencies found, frequencies needed. */
+    SPECTRUM_TOO_FEW_FREQUENCIES("no spectrum: {0} different frequencies, at least {1} are needed"),
+    /** Modes wanted, readings there, most modes. */
+    SPECTRUM_TOO_MANY_MODES("no spectrum: {0} modes are asked for, but {1} points carry at most {2}"),
+    /** Nothing. */
+    SPECTRUM_NO_MODULUS("no spectrum: every modulus is zero"),
+    /** Nothing. */
+    EQUILIBRIUM_MODULUS_ZERO(
+            "the fitted equilibrium modulus is zero: the spectrum is that of a liquid, with a viscosity in its place");
+
+    private final String template;
+
+    SpectrumReason(String template) {
+        this.template = template;
+    }
+
+    @Override
+    public String template() {
+        return template;
+    }
+}

@@ -1,0 +1,155 @@
+package nightlag.stages.spectrum;
+
+import java.util.Arrays;
+import java.util.List;
+import nightlag.stages.moduli.Moduli;
+import nightlag.stages.moduli.ModuliCovariance;
+
+/**
+ * Readings brought to residuals of unit variance: two rows a reading, the difference of G' and G'' times the inverse
+ * Cholesky factor of their covariance.
+ *
+ * <p>Where any reading comes without a covariance, all count by their relative deviation and what the scatter is has to
+ * come from the fit. No modulus is taken for truer than a hundred-thousandth of itself, so that what its last digits hold
+ * is not chased with ever more modes.
+ */
+final class WeightedReadings {
+    /** Smallest standard uncertainty as a share of the modulus itself, and of |G*|. */
+    private static final double FLOOR = 1e-5;
+
+    private static final double FLOOR_OF_MAGNITUDE = 1e-8;
+    /** A modulus without u that is less than this share of |G*| counts as if it were that share. */
+    private static final double SMALLEST_SHARE = 1e-3;
+
+    private final double[] angularFrequencies;
+    private final double[] first;
+    private final double[] mixed;
+    private final double[] second;
+    private final double[] target;
+    private final boolean scatterKnown;
+    private final double largest;
+
+    WeightedReadings(List<ModulusReading> readings) {
+        int count = readings.size();
+        angularFrequencies = new double[count];
+        first = new double[count];
+        mixed = new double[count];
+        second = new double[count];
+        target = new double[2 * count];
+        scatterKnown = readings.stream()
+                .allMatch(reading -> reading.moduli()
+                        .covariance()
+                        .filter(WeightedReadings::isSound)
+                        .isPresent());
+        largest = readings.stream()
+                .mapToDouble(reading -> reading.moduli().magnitudePa())
+                .max()
+                .orElseThrow();
+        for (int i = 0; i < count; i++) {
+            Moduli moduli = readings.get(i).moduli();
+            angularFrequencies[i] = readings.get(i).angularFrequency();
+            ModuliCovariance covariance = scatterKnown ? floored(moduli) : relative(moduli);
+            double storageU = covariance.storageU();
+            double tied = covariance.covariance() / storageU;
+            double freeVariance = covariance.lossVariance() - tied * tied;
+            double lossU = Math.sqrt(Math.max(freeVariance, 1e-12 * covariance.lossVariance()));
+            first[i] = 1 / storageU;
+            mixed[i] = -tied / (storageU * lossU);
+            second[i] = 1 / lossU;
+            put(target, i, moduli.storagePa(), moduli.lossPa());
+        }
+    }
+
+    private static boolean isSound(ModuliCovariance covariance) {
+        return covariance.storageVariance() >= 0
+                && covariance.lossVariance() >= 0
+                && Double.isFinite(covariance.storageVariance() + covariance.lossVariance() + covariance.covariance());
+    }
+
+    private static ModuliCovariance floored(Moduli moduli) {
+        ModuliCovariance given = moduli.covariance().orElseThrow();
+        double least = square(FLOOR_OF_MAGNITUDE * moduli.magnitudePa());
+        return new ModuliCovariance(
+                given.storageVariance() + square(FLOOR * moduli.storagePa()) + least,
+                given.lossVariance() + square(FLOOR * moduli.lossPa()) + least,
+                given.covariance());
+    }
+
+    private static ModuliCovariance relative(Moduli moduli) {
+        double least = SMALLEST_SHARE * moduli.magnitudePa();
+        return new ModuliCovariance(
+                square(Math.max(Math.abs(moduli.storagePa()), least)),
+                square(Math.max(Math.abs(moduli.lossPa()), least)),
+                0);
+    }
+
+    private static double square(double value) {
+        return value * value;
+    }
+
+    /** Whether the residuals' variance is known to be 1; else it has to be had from the fit. */
+    boolean scatterKnown() {
+        return scatterKnown;
+    }
+
+    /** The smallest variance of the residuals worth looking at. */
+    double leastVariance() {
+        return scatterKnown ? 1 : FLOOR * FLOOR;
+    }
+
+    int rows() {
+        return target.length;
+    }
+
+    double lowestFrequency() {
+        return Arrays.stream(angularFrequencies).min().orElseThrow();
+    }
+
+    double highestFrequency() {
+        return Arrays.stream(angularFrequencies).max().orElseThrow();
+    }
+
+    double largestModulus() {
+        return largest;
+    }
+
+    double[] target() {
+        return target.clone();
+    }
+
+    /** What a mode of unit strength adds to each row. */
+    double[] mode(double time) {
+        double[] column = new double[rows()];
+        for (int i = 0; i < angularFrequencies.length; i++) {
+            double x = angularFrequencies[i] * time;
+            double share = x / (1 + x * x);
+            put(column, i, share * x, share);
+        }
+        return column;
+    }
+
+    /** Its derivative by ln τ. */
+    double[] modeByLogTime(double time) {
+        double[] column = new double[rows()];
+        for (int i = 0; i < angularFrequencies.length; i++) {
+            double x = angularFrequencies[i] * time;
+            double share = x / (1 + x * x);
+            put(column, i, 2 * share * share, share * (1 - x * x) / (1 + x * x));
+        }
+        return column;
+    }
+
+    /** What an equilibrium modulus of 1 Pa adds to each row. */
+    double[] equilibrium() {
+        double[] column = new double[rows()];
+        for (int i = 0; i < angularFrequencies.length; i++) {
+            put(column, i, 1, 0);
+        }
+        return column;
+    }
+
+    private void put(double[] rows, int i, double storage, double loss) {
+        rows[2 * i] = first[i] * storage;
+        rows[2 * i + 1] = mixed[i] * storage + second[i] * loss;
+    }
+}
