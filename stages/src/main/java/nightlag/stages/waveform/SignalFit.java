@@ -20,6 +20,7 @@ import nightlag.stages.numeric.Complex;
  * @param deformationNoise standard deviation of the deformation's residuals
  * @param loadNoise standard deviation of the load's residuals
  * @param cyclesUsed cycles covered by the samples used
+ * @param firstSample place in the record of the first sample after the start-up cycles, from 0
  * @param samplesUsed samples that entered the fit
  * @param samplesLeftOut samples left out, start-up cycles, spikes and clipped runs included
  * @param meanTemperatureK mean of the temperature channel in K over the samples used
@@ -37,6 +38,7 @@ public record SignalFit(
         double deformationNoise,
         double loadNoise,
         double cyclesUsed,
+        int firstSample,
         int samplesUsed,
         int samplesLeftOut,
         OptionalDouble meanTemperatureK,

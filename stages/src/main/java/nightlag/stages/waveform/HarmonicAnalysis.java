@@ -1,0 +1,323 @@
+package nightlag.stages.waveform;
+
+import java.util.ArrayList;
+import java.util.Arrays;
+import java.util.Comparator;
+import java.util.List;
+import java.util.Optional;
+import java.util.OptionalDouble;
+import nightlag.stages.fault.Reason;
+import nightlag.stages.fault.ReductionFault;
+import nightlag.stages.numeric.Complex;
+import nightlag.stages.waveform.ScreeningFigures.Figure;
+
+/**
+ * One record to complex amplitudes. The transform of the record shows where the frequency is; drift, harmonics and the
+ * frequency shared by both channels are then fitted jointly on the true time stamps ({@link JointFit}). The bins of the
+ * transform are used as they are only where that is the same thing: no drift asked for, the tagged frequency exact, an even
+ * clock, no sample left out, a whole number of cycles.
+ *
+ * <p>Samples at a channel's limit, and isolated spikes, are left out first. Neither costs a clean record more than a pass
+ * over its samples.
+ */
+public final class HarmonicAnalysis {
+    /** Below so many cycles with all orders the fit has several minima, and a grid comes before the refinement. */
+    private static final double FEW_CYCLES = 2.5;
+    /** Below so many cycles no order above the first can be told from the drift. */
+    private static final double CYCLES_FOR_HARMONICS = 1.1;
+    /** An order this near half the samples a cycle (as part of them) counts as at it. */
+    private static final double BELOW_HALF = 0.495;
+    /** Degrees of freedom a channel must keep. */
+    private static final int SPARE_SAMPLES = 2;
+    /** Where more samples than this stand at a limit, leaving them out would leave no record. */
+    private static final double MOST_CLIPPED = 0.4;
+    /** A spike is larger than this part of the amplitude; smaller ones do no harm and may be the file's last digit. */
+    private static final double SMALLEST_SPIKE = 1e-6;
+
+    private static final int SPIKE_ROUNDS = 5;
+    /** The ratio of signal to noise in dB that stands for "no noise seen in double numbers". */
+    private static final double HIGHEST_SNR_DB = 300;
+    /** A first look need not settle the frequency finer than this part of its uncertainty. */
+    private static final double ROUGH = 0.3;
+    /** What the frequency may still be off at the end, as part of its uncertainty. */
+    private static final double FINE = 1e-3;
+
+    private final Waveform waveform;
+    private final ExtractionPlan plan;
+    private final boolean exact;
+    private final List<Reason> notes = new ArrayList<>();
+    private final boolean[] leftOut;
+    private int first;
+    private int clipped;
+    private int spikes;
+
+    private HarmonicAnalysis(Waveform waveform, ExtractionPlan plan) {
+        this.waveform = waveform;
+        this.plan = plan;
+        this.exact = plan.frequencyFrom() == FrequencySource.TAG
+                && waveform.nominalFrequencyHz().isPresent();
+        this.leftOut = new boolean[waveform.size()];
+    }
+
+    /**
+     * Takes the amplitudes out of a record.
+     *
+     * @throws ReductionFault if the record has too few samples, a channel that does not move, or no oscillation
+     */
+    public static SignalFit analyse(Waveform waveform, ExtractionPlan plan) throws ReductionFault {
+        return new HarmonicAnalysis(waveform, plan).run();
+    }
+
+    /** A fit and what it was made of. */
+    private record Fitted(Samples samples, Basis basis, JointFit.Result result) {
+        double amplitude(int channel) {
+            int column = basis.cosineColumn(1);
+            double[] coefficients = result.coefficients()[channel];
+            return Math.hypot(coefficients[column], coefficients[column + 1]);
+        }
+    }
+
+    private SignalFit run() throws ReductionFault {
+        RecordChecks.check(waveform);
+        leaveOutDamage();
+        Samples all = Samples.of(waveform, 0, leftOut);
+        requireSamples(all.size());
+        OptionalDouble tag = waveform.nominalFrequencyHz();
+        if (plan.frequencyFrom() == FrequencySource.TAG && !exact) {
+            notes.add(WaveformReason.WAVEFORM_NO_TAG.with());
+        }
+        double omega = exact
+                ? 2 * Math.PI * tag.getAsDouble()
+                : new FrequencySearch(all, plan.drift().degree()).start(tag);
+        Samples samples = plan.startUpCycles() > 0 ? withoutStartUp(all, omega) : all;
+        Clock clock = Clock.of(waveform.timeS(), first);
+        Fitted fitted = fit(samples, clock, omega);
+        fitted = withoutSpikes(fitted, clock);
+        for (int c = 0; c < Samples.CHANNELS; c++) {
+            if (!(fitted.amplitude(c) > 0 && Double.isFinite(fitted.amplitude(c)))) {
+                throw new ReductionFault(WaveformReason.WAVEFORM_NO_OSCILLATION.with(RecordChecks.channelName(c)));
+            }
+        }
+        return summary(fitted, clock);
+    }
+
+    private void leaveOutDamage() {
+        spikes = Damage.markTowering(waveform.deformation(), 0, leftOut)
+                + Damage.markTowering(waveform.load(), 0, leftOut);
+        boolean[] atLimit = leftOut.clone();
+        clipped = Damage.markClipped(waveform.deformation(), 0, atLimit)
+                + Damage.markClipped(waveform.load(), 0, atLimit);
+        if (clipped == 0) {
+            return;
+        }
+        int marked = 0;
+        for (boolean mark : atLimit) {
+            marked += mark ? 1 : 0;
+        }
+        if (marked <= MOST_CLIPPED * waveform.size()) {
+            System.arraycopy(atLimit, 0, leftOut, 0, leftOut.length);
+            notes.add(WaveformReason.WAVEFORM_CLIPPED_LEFT_OUT.with(clipped, marked - spikes));
+        }
+    }
+
+    private void requireSamples(int found) throws ReductionFault {
+        int needed = plan.drift().degree() + 1 + 2 + SPARE_SAMPLES;
+        if (found < needed) {
+            throw new ReductionFault(WaveformReason.WAVEFORM_TOO_FEW_SAMPLES.with(found, needed));
+        }
+    }
+
+    private Samples withoutStartUp(Samples all, double omega) throws ReductionFault {
+        double[] timeS = waveform.timeS();
+        double end = timeS[0] + plan.startUpCycles() * 2 * Math.PI / omega - 1e-6 * all.intervalS();
+        while (first < timeS.length && timeS[first] < end) {
+            first++;
+        }
+        Samples rest = Samples.of(waveform, first, leftOut);
+        if (rest.size() < 2) {
+            throw new ReductionFault(WaveformReason.WAVEFORM_ALL_START_UP.with(
+                    plan.startUpCycles(), omega * all.durationS() / (2 * Math.PI)));
+        }
+        requireSamples(rest.size());
+        return rest;
+    }
+
+    private Fitted fit(Samples samples, Clock clock, double start) throws ReductionFault {
+        int degree = plan.drift().degree();
+        double omega = exact
+                ? start
+                : new JointFit(samples, 1, degree)
+                        .refined(start, ROUGH)
+                        .orElseThrow(() -> new ReductionFault(WaveformReason.WAVEFORM_NOT_SEPARABLE.with()))
+                        .angularFrequency();
+        double cycles = omega * samples.durationS() / (2 * Math.PI);
+        int orders = ordersBelowHalf(omega, clock);
+        int separable = Math.min(orders, (samples.size() - SPARE_SAMPLES - degree - 1) / 2);
+        if (cycles < CYCLES_FOR_HARMONICS) {
+            separable = 1;
+        }
+        for (int harmonics = separable; harmonics >= 1; harmonics--) {
+            JointFit fit = new JointFit(samples, harmonics, degree);
+            Optional<JointFit.Result> result =
+                    exact ? atTag(fit, samples, clock, omega) : refined(fit, samples, omega, cycles);
+            if (result.isPresent()) {
+                if (harmonics < orders) {
+                    notes.add(WaveformReason.WAVEFORM_ORDERS_NOT_SEPARABLE.with(
+                            harmonics, plan.harmonics(), samples.size(), cycles));
+                }
+                return new Fitted(samples, fit.basis(), result.get());
+            }
+        }
+        throw new ReductionFault(WaveformReason.WAVEFORM_NOT_SEPARABLE.with());
+    }
+
+    private int ordersBelowHalf(double omega, Clock clock) {
+        double perCycle = 2 * Math.PI / (omega * clock.intervalS());
+        int highest = (int) Math.max(1, Math.floor(BELOW_HALF * perCycle));
+        if (highest < plan.harmonics()) {
+            notes.add(WaveformReason.WAVEFORM_ORDERS_ABOVE_SAMPLING.with(highest, plan.harmonics(), perCycle));
+        }
+        return Math.min(plan.harmonics(), highest);
+    }
+
+    private Optional<JointFit.Result> atTag(JointFit fit, Samples samples, Clock clock, double omega) {
+        boolean complete = samples.size() == waveform.size() - first;
+        if (plan.drift() == Drift.NONE && complete && WholeCycleBins.applies(samples, clock, omega)) {
+            return fit.given(omega, WholeCycleBins.coefficients(samples, fit.basis(), omega));
+        }
+        return fit.atFixed(omega);
+    }
+
+    private Optional<JointFit.Result> refined(JointFit fit, Samples samples, double omega, double cycles) {
+        if (cycles >= FEW_CYCLES) {
+            return fit.refined(omega, FINE);
+        }
+        int harmonics = fit.basis().harmonics();
+        int degree = plan.drift().degree();
+        return Arrays.stream(FrequencySearch.minimaNearby(samples, omega, harmonics, degree))
+                .mapToObj(start -> fit.refined(start, FINE))
+                .flatMap(Optional::stream)
+                .min(Comparator.comparingDouble(JointFit.Result::misfit));
+    }
+
+    private Fitted withoutSpikes(Fitted start, Clock clock) throws ReductionFault {
+        Fitted fitted = start;
+        for (int round = 0; round < SPIKE_ROUNDS; round++) {
+            int found = 0;
+            for (int c = 0; c < Samples.CHANNELS; c++) {
+                double[] residuals = fitted.result().residuals()[c];
+                if (Damage.suspicious(residuals)) {
+                    double freedom = residuals.length - fitted.basis().columns();
+                    for (int place : Damage.spikes(residuals, freedom, SMALLEST_SPIKE * fitted.amplitude(c))) {
+                        int index = fitted.samples().indices()[place];
+                        found += leftOut[index] ? 0 : 1;
+                        leftOut[index] = true;
+                    }
+                }
+            }
+            if (found == 0) {
+                break;
+            }
+            spikes += found;
+            notes.removeIf(note -> note.code().equals(WaveformReason.WAVEFORM_ORDERS_ABOVE_SAMPLING.name())
+                    || note.code().equals(WaveformReason.WAVEFORM_ORDERS_NOT_SEPARABLE.name()));
+            Samples rest = Samples.of(waveform, first, leftOut);
+            requireSamples(rest.size());
+            fitted = fit(rest, clock, fitted.result().angularFrequency());
+        }
+        return fitted;
+    }
+
+    private SignalFit summary(Fitted fitted, Clock clock) {
+        Samples samples = fitted.samples();
+        JointFit.Result result = fitted.result();
+        Noise noise = Noise.of(samples, fitted.basis(), result, !exact);
+        FitCovariance covariance = new FitCovariance(fitted.basis(), result, noise, !exact);
+        double omega = result.angularFrequency();
+        double frequencyU = Math.sqrt(covariance.phaseVariance()) / samples.halfSpanS() / (2 * Math.PI);
+        double frequency = exact ? waveform.nominalFrequencyHz().getAsDouble() : omega / (2 * Math.PI);
+        double cycles = wholeWithin(samples.durationS() * frequency, samples.durationS() * 3 * frequencyU + 1e-9);
+        addNotes(noise);
+        int samplesHeld = waveform.size() - first;
+        Steadiness steadiness = new Steadiness(samples, fitted.basis(), result, noise);
+        ScreeningFigures figures = new ScreeningFigures(
+                (double) clipped / waveform.size(),
+                (double) spikes / waveform.size(),
+                clock.gapShare(),
+                clock.jitter(),
+                snrDb(fitted, noise, Samples.DEFORMATION),
+                snrDb(fitted, noise, Samples.LOAD),
+                steadiness.baseline(),
+                steadiness.cycleTrend(),
+                Steadiness.temperatureWander(waveform.temperatureK(), samples.indices(), samples.size() / cycles),
+                frequencyMismatch(fitted, noise, frequency, frequencyU));
+        return new SignalFit(
+                frequency,
+                frequencyU,
+                samples.originS(),
+                amplitudes(fitted, Samples.DEFORMATION),
+                amplitudes(fitted, Samples.LOAD),
+                covariance.matrix(),
+                covariance.degreesOfFreedom(),
+                Math.sqrt(noise.whole(Samples.DEFORMATION).variance()),
+                Math.sqrt(noise.whole(Samples.LOAD).variance()),
+                cycles,
+                first,
+                samples.size(),
+                samplesHeld + first - samples.size(),
+                Steadiness.meanTemperature(waveform.temperatureK(), samples.indices()),
+                figures,
+                List.copyOf(notes));
+    }
+
+    private void addNotes(Noise noise) {
+        if (spikes > 0) {
+            notes.add(WaveformReason.WAVEFORM_SPIKES_LEFT_OUT.with(spikes));
+        }
+        if (waveform.rowsLeftOut() > 0) {
+            notes.add(WaveformReason.WAVEFORM_ROWS_MISSING.with(waveform.rowsLeftOut()));
+        }
+        for (int c = 0; c < Samples.CHANNELS; c++) {
+            if (noise.beside(c, 1).pooled()) {
+                notes.add(WaveformReason.WAVEFORM_POOLED_NOISE.with(RecordChecks.channelName(c)));
+            }
+        }
+    }
+
+    private Optional<Figure> frequencyMismatch(Fitted fitted, Noise noise, double frequency, double frequencyU) {
+        if (waveform.nominalFrequencyHz().isEmpty()) {
+            return Optional.empty();
+        }
+        double tag = waveform.nominalFrequencyHz().getAsDouble();
+        if (!exact) {
+            return Optional.of(new Figure(Math.abs(frequency - tag) / tag, frequencyU / tag));
+        }
+        // the tag was taken as it is; where the signal would have gone is still worth knowing
+        JointFit.Result result = fitted.result();
+        double perFrequency = fitted.samples().halfSpanS() * result.angularFrequency();
+        double variance = new FitCovariance(fitted.basis(), result, noise, true).phaseVariance();
+        return Optional.of(new Figure(Math.abs(result.phaseStep()) / perFrequency, Math.sqrt(variance) / perFrequency));
+    }
+
+    private static double snrDb(Fitted fitted, Noise noise, int channel) {
+        double deviation = Math.sqrt(noise.whole(channel).variance());
+        double rms = fitted.amplitude(channel) / Math.sqrt(2);
+        return Math.min(HIGHEST_SNR_DB, 20 * Math.log10(rms / deviation));
+    }
+
+    private static Complex[] amplitudes(Fitted fitted, int channel) {
+        Complex[] amplitudes = new Complex[fitted.basis().harmonics()];
+        double[] coefficients = fitted.result().coefficients()[channel];
+        for (int n = 1; n <= amplitudes.length; n++) {
+            int column = fitted.basis().cosineColumn(n);
+            amplitudes[n - 1] = new Complex(coefficients[column], -coefficients[column + 1]);
+        }
+        return amplitudes;
+    }
+
+    /** A number that cannot be told from a whole one is that one. */
+    private static double wholeWithin(double number, double tolerance) {
+        double whole = Math.rint(number);
+        return whole > 0 && Math.abs(number - whole) <= tolerance ? whole : number;
+    }
+}

@@ -1,0 +1,203 @@
+package nightlag.stages.waveform;
+
+import java.util.Optional;
+import java.util.OptionalDouble;
+import nightlag.stages.waveform.ScreeningFigures.Figure;
+
+/** Whether a record stayed the same from its first cycle to its last: its means, its modulus, its temperature. */
+final class Steadiness {
+    private static final int MOST_STRETCHES = 32;
+
+    private final Samples samples;
+    private final Basis basis;
+    private final JointFit.Result fit;
+    private final Noise noise;
+
+    Steadiness(Samples samples, Basis basis, JointFit.Result fit, Noise noise) {
+        this.samples = samples;
+        this.basis = basis;
+        this.fit = fit;
+        this.noise = noise;
+    }
+
+    private double amplitude(int channel) {
+        int column = basis.cosineColumn(1);
+        return Math.hypot(fit.coefficients()[channel][column], fit.coefficients()[channel][column + 1]);
+    }
+
+    /** Movement of the mean over the record as part of the amplitude, of the channel where it is larger. */
+    Figure baseline() {
+        Figure worst = new Figure(0, 0);
+        for (int c = 0; c < Samples.CHANNELS; c++) {
+            Figure figure = basis.driftTerms() == 1 ? unfittedLine(c) : fittedDrift(c);
+            Figure relative = new Figure(figure.value() / amplitude(c), figure.u() / amplitude(c));
+            if (relative.value() > worst.value()) {
+                worst = relative;
+            }
+        }
+        return worst;
+    }
+
+    /** Highest less lowest value of the fitted polynomial. */
+    private Figure fittedDrift(int channel) {
+        double slope = fit.coefficients()[channel][1];
+        double curve = basis.driftTerms() > 2 ? fit.coefficients()[channel][2] : 0;
+        double[] places = {-1, 1, Math.abs(slope) < 2 * Math.abs(curve) ? -slope / (2 * curve) : 1};
+        double low = places[0];
+        double high = places[0];
+        for (double u : places) {
+            double value = u * (slope + u * curve);
+            low = value < low * (slope + low * curve) ? u : low;
+            high = value > high * (slope + high * curve) ? u : high;
+        }
+        double[] difference = new double[basis.columns()];
+        difference[1] = high - low;
+        if (basis.driftTerms() > 2) {
+            difference[2] = high * high - low * low;
+        }
+        double move = slope * difference[1] + (basis.driftTerms() > 2 ? curve * difference[2] : 0);
+        double variance = noise.beside(channel, 1).variance() * fit.normal().inverseForm(difference);
+        return new Figure(move, Math.sqrt(variance));
+    }
+
+    /** A straight line that was not asked for, from what the fit left of it. */
+    private Figure unfittedLine(int channel) {
+        double[] products = new double[basis.columns()];
+        double[][] column = new double[basis.columns()][1];
+        double squares = 0;
+        double overlap = 0;
+        double halfSpan = samples.halfSpanS();
+        for (int i = 0; i < samples.size(); i++) {
+            double u = samples.seconds()[i] / halfSpan;
+            basis.fill(i, 1, column);
+            for (int j = 0; j < products.length; j++) {
+                products[j] += u * column[j][0];
+            }
+            squares += u * u;
+            overlap += u * fit.residuals()[channel][i];
+        }
+        double free = squares - fit.normal().inverseForm(products);
+        if (free <= 0) {
+            return new Figure(0, 0);
+        }
+        return new Figure(
+                2 * Math.abs(overlap) / free,
+                2 * Math.sqrt(noise.beside(channel, 1).variance() / free));
+    }
+
+    /**
+     * Change of |load / deformation| over the record: by a straight line through its stretches of whole cycles, or of the
+     * first stretch against the others (a start-up that lasted longer than said), whichever is larger and stands out of the
+     * noise.
+     */
+    Optional<Figure> cycleTrend() {
+        double cyclesPerSecond = fit.angularFrequency() / (2 * Math.PI);
+        // a record of whole cycles must not lose its last one to rounding
+        int cycles =
+                (int) Math.floor(samples.durationS() * cyclesPerSecond + 0.5 * samples.intervalS() * cyclesPerSecond);
+        if (cycles < 2) {
+            return Optional.empty();
+        }
+        int perStretch = (cycles + MOST_STRETCHES - 1) / MOST_STRETCHES;
+        int stretches = cycles / perStretch;
+        double[] ratios = ratios(stretches, perStretch / cyclesPerSecond);
+        double mean = 0;
+        for (double ratio : ratios) {
+            mean += ratio / stretches;
+        }
+        double middle = (stretches - 1) / 2.0;
+        double slope = 0;
+        double spread = 0;
+        for (int k = 0; k < stretches; k++) {
+            slope += (k - middle) * ratios[k];
+            spread += (k - middle) * (k - middle);
+        }
+        double perStretchVariance = 0;
+        for (int c = 0; c < Samples.CHANNELS; c++) {
+            perStretchVariance +=
+                    2 * noise.beside(c, 1).variance() * stretches / (samples.size() * amplitude(c) * amplitude(c));
+        }
+        double stretchesInRecord = samples.durationS() * cyclesPerSecond / perStretch;
+        Figure trend = new Figure(
+                Math.abs(slope / spread / mean) * stretchesInRecord,
+                Math.sqrt(perStretchVariance / spread) * stretchesInRecord);
+        double others = (mean * stretches - ratios[0]) / (stretches - 1);
+        Figure start = new Figure(
+                Math.abs(ratios[0] / others - 1), Math.sqrt(perStretchVariance * (1 + 1.0 / (stretches - 1))));
+        return Optional.of(start.significant() && start.value() > trend.value() ? start : trend);
+    }
+
+    /** |load / deformation| of each stretch: the fitted amplitudes and what the residuals add to them there. */
+    private double[] ratios(int stretches, double secondsPerStretch) {
+        double[][][] sums = new double[stretches][Samples.CHANNELS][2];
+        int[] counts = new int[stretches];
+        double begin = samples.seconds()[0] - samples.intervalS() / 2;
+        for (int i = 0; i < samples.size(); i++) {
+            int stretch = (int) ((samples.seconds()[i] - begin) / secondsPerStretch);
+            if (stretch < stretches) {
+                counts[stretch]++;
+                for (int c = 0; c < Samples.CHANNELS; c++) {
+                    sums[stretch][c][0] += fit.residuals()[c][i] * basis.cosine()[i];
+                    sums[stretch][c][1] += fit.residuals()[c][i] * basis.sine()[i];
+                }
+            }
+        }
+        double[] ratios = new double[stretches];
+        int column = basis.cosineColumn(1);
+        for (int k = 0; k < stretches; k++) {
+            double[] sizes = new double[Samples.CHANNELS];
+            for (int c = 0; c < Samples.CHANNELS; c++) {
+                double factor = 2.0 / Math.max(1, counts[k]);
+                sizes[c] = Math.hypot(
+                        fit.coefficients()[c][column] + factor * sums[k][c][0],
+                        fit.coefficients()[c][column + 1] + factor * sums[k][c][1]);
+            }
+            ratios[k] = sizes[Samples.LOAD] / sizes[Samples.DEFORMATION];
+        }
+        return ratios;
+    }
+
+    /** Mean of the temperature over the samples used, K; rows without one do not count. */
+    static OptionalDouble meanTemperature(double[] temperatureK, int[] indices) {
+        if (temperatureK.length == 0) {
+            return OptionalDouble.empty();
+        }
+        double reference = Double.NaN;
+        double sum = 0;
+        int count = 0;
+        for (int index : indices) {
+            double value = temperatureK[index];
+            if (Double.isFinite(value)) {
+                reference = count == 0 ? value : reference;
+                sum += value - reference;
+                count++;
+            }
+        }
+        return count == 0 ? OptionalDouble.empty() : OptionalDouble.of(reference + sum / count);
+    }
+
+    /** Highest less lowest temperature, each a mean over one cycle, K. */
+    static OptionalDouble temperatureWander(double[] temperatureK, int[] indices, double samplesPerCycle) {
+        OptionalDouble mean = meanTemperature(temperatureK, indices);
+        if (mean.isEmpty()) {
+            return OptionalDouble.empty();
+        }
+        double[] sums = new double[indices.length + 1];
+        int count = 0;
+        for (int index : indices) {
+            if (Double.isFinite(temperatureK[index])) {
+                sums[count + 1] = sums[count] + (temperatureK[index] - mean.getAsDouble());
+                count++;
+            }
+        }
+        int window = (int) Math.max(1, Math.min(count, Math.round(samplesPerCycle)));
+        double low = Double.POSITIVE_INFINITY;
+        double high = Double.NEGATIVE_INFINITY;
+        for (int end = window; end <= count; end++) {
+            double value = (sums[end] - sums[end - window]) / window;
+            low = Math.min(low, value);
+            high = Math.max(high, value);
+        }
+        return OptionalDouble.of(high - low);
+    }
+}
