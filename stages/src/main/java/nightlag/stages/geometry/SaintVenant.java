@@ -8,6 +8,9 @@ final class SaintVenant {
     /** Σ 1/n⁵ over odd n: (31/32) ζ(5), with ζ(5) = 1.036927755143369926… to the digits a double holds. */
     private static final double ODD_FIFTH_POWERS = 31.0 / 32.0 * 1.03692775514337;
 
+    /** A term this small against the sum changes no digit of it. */
+    private static final double NEGLIGIBLE = 1e-17;
+
     private SaintVenant() {}
 
     /**
@@ -19,7 +22,7 @@ final class SaintVenant {
     static double stiffnessFactor(double ratio) {
         double rest = 0;
         double term = 1;
-        for (int n = 1; term > 0 && rest + term != rest; n += 2) {
+        for (int n = 1; term > NEGLIGIBLE * rest; n += 2) {
             term = 2 / (fifthPower(n) * (Math.exp(n * Math.PI * ratio) + 1));
             rest += term;
         }
@@ -34,7 +37,7 @@ final class SaintVenant {
     static double stressFactor(double ratio) {
         double sum = 0;
         double term = 1;
-        for (int n = 1; term > 0 && sum + term != sum; n += 2) {
+        for (int n = 1; term > NEGLIGIBLE * sum; n += 2) {
             term = 1 / ((double) n * n * Math.cosh(n * Math.PI * ratio / 2));
             sum += term;
         }

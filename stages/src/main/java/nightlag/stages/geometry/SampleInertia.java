@@ -13,9 +13,12 @@ import nightlag.stages.numeric.Complex;
  * z tan z = ρω²h²/A (moving). Both are functions of w = z² alone. The root is the one that grows from w = 0 as the density
  * grows from nothing, the inertia-free modulus being that limit. Past the quarter-wave resonance of a nearly elastic layer
  * that root at the moving wall turns into one that would make work out of nothing (a negative storage or loss modulus);
- * then the root is taken that is reached by way of a stiff wall, if that one is passive.
+ * then the root is taken that is reached by way of a stiff wall, if that one does not.
  */
 public final class SampleInertia {
+    /** A phase this far outside 0 to 90° is put down to noise. */
+    private static final double NOISE_RAD = 0.1;
+
     private final MeasuringWall wall;
     private final double inertialStressPerSquaredFrequency;
 
@@ -74,8 +77,10 @@ public final class SampleInertia {
                 .or(() -> wave.rootByStiffWall(target))
                 .orElseThrow(() -> new ReductionFault(
                         GeometryReason.GEOMETRY_SAMPLE_INERTIA_NO_ROOT.with(apparentModulus.abs(), inertialStress)));
-        if (!passive(root)) {
-            root = wave.rootByStiffWall(target).filter(SampleInertia::passive).orElse(root);
+        if (!nearlyPassive(root)) {
+            root = wave.rootByStiffWall(target)
+                    .filter(SampleInertia::nearlyPassive)
+                    .orElse(root);
         }
         return new Complex(inertialStress, 0).over(root);
     }
@@ -111,8 +116,12 @@ public final class SampleInertia {
         return inertialStressPerSquaredFrequency * angularFrequency * angularFrequency;
     }
 
-    /** Whether w = ρω²h²/G* belongs to a material that stores and loses, not gives: G', G'' at or above zero. */
-    private static boolean passive(Complex w) {
-        return w.re() >= 0 && w.im() <= 0;
+    /**
+     * Whether w = ρω²h²/G* belongs to a material that stores and loses, not gives: G' and G'' at or above zero, but for what
+     * noise does to a nearly viscous or nearly elastic one.
+     */
+    private static boolean nearlyPassive(Complex w) {
+        double slack = NOISE_RAD * w.abs();
+        return w.re() >= -slack && w.im() <= slack;
     }
 }

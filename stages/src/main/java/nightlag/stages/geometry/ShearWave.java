@@ -69,20 +69,23 @@ record ShearWave(MeasuringWall wall) {
     private Optional<Complex> follow(Complex start, Complex from, Complex to) {
         Complex way = to.minus(from);
         Complex w = start;
-        double done = 0;
-        for (int step = 0; step < MOST_STEPS && done < 1; step++) {
+        double left = 1;
+        for (int step = 0; step < MOST_STEPS; step++) {
             Complex slope = slope(w);
-            double length = Math.min(
-                    1 - done,
-                    CAUTION * slope.abs() / (curvature(w) * way.over(slope).abs()));
+            double length =
+                    CAUTION * slope.abs() / (curvature(w) * way.over(slope).abs());
+            if (length >= left) {
+                Complex end = refine(w.plus(way.times(left).over(slope)), to);
+                return Optional.of(end).filter(Complex::isFinite);
+            }
             // written so that NaN ends it too
             if (!(length > SHORTEST_STEP)) {
                 return Optional.empty();
             }
-            done = length == 1 - done ? 1 : done + length;
-            w = refine(w.plus(way.times(length).over(slope)), done == 1 ? to : from.plus(way.times(done)));
+            left -= length;
+            w = refine(w.plus(way.times(length).over(slope)), to.minus(way.times(left)));
         }
-        return done == 1 && w.isFinite() ? Optional.of(w) : Optional.empty();
+        return Optional.empty();
     }
 
     /** Newton's method to the last digit. */
