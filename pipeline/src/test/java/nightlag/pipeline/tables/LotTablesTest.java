@@ -1,24 +1,36 @@
 package nightlag.pipeline.tables;
 
 import static org.assertj.core.api.Assertions.assertThat;
+import static org.assertj.core.api.Assertions.assertThatThrownBy;
 
 import java.io.IOException;
 import java.nio.file.Files;
 import java.nio.file.Path;
+import java.util.ArrayList;
+import java.util.Collections;
 import java.util.List;
+import java.util.Locale;
+import java.util.Map;
 import java.util.Optional;
 import java.util.OptionalDouble;
+import java.util.Random;
+import java.util.TreeMap;
+import java.util.stream.Stream;
 import nightlag.stages.LotResult;
 import nightlag.stages.geometry.DeformationMode;
 import nightlag.stages.moduli.Flag;
 import nightlag.stages.moduli.Harmonic;
+import nightlag.stages.moduli.Marker;
 import nightlag.stages.moduli.Moduli;
 import nightlag.stages.moduli.ModuliCovariance;
 import nightlag.stages.moduli.ModulusPoint;
 import nightlag.stages.moduli.PointKey;
 import nightlag.stages.moduli.Quality;
+import nightlag.stages.spectrum.SpectrumRow;
 import org.junit.jupiter.api.Test;
 import org.junit.jupiter.api.io.TempDir;
+import org.junit.jupiter.params.ParameterizedTest;
+import org.junit.jupiter.params.provider.ValueSource;
 
 class LotTablesTest {
     private static final Provenance FROM = new Provenance(
@@ -60,8 +72,7 @@ class LotTablesTest {
         write(new LotResult(List.of(point), List.of(), List.of(), List.of()));
 
         // |G*| = 5000 Pa, δ = atan(4/3), u(tan δ)² = (16/9 · 9 + 16)/3000²; a 1 rad/s oscillation has |η*| = |G*|
-        assertThat(table("points"))
-                .isEqualTo("""
+        assertThat(table("points")).isEqualTo("""
                         grade,lot,specimen,sweep,point,deformation,temperature_C,frequency_Hz,angular_frequency_rad_s,\
                         elapsed_s,strain_amplitude,stress_amplitude_Pa,storage_modulus_Pa,storage_modulus_u_Pa,\
                         loss_modulus_Pa,loss_modulus_u_Pa,complex_modulus_Pa,phase_angle_deg,tan_delta,tan_delta_u,\
@@ -72,13 +83,179 @@ class LotTablesTest {
                         4000,4,5000,53.13010235415598,1.3333333333333333,0.0018856180831641268,\
                         5000,0.01,doubtful,few-cycles;nonlinear,2.5,512,\
                         ,60.5,melt-bench/L-17/1/012.csv,500
-                        """.formatted(Cells.number(Math.sqrt(32) / 3000)).replace("\n", "\r\n"));
+                        """.replace("\n", "\r\n"));
         assertThat(table("harmonics")).isEqualTo("""
                         grade,lot,specimen,sweep,point,order,stress_in_phase_Pa,stress_out_of_phase_Pa,\
                         relative_intensity,relative_intensity_u
                         Heron 3,L-17,1,1,012,1,30,40,1,
                         Heron 3,L-17,1,1,012,3,-0.3,0.4,0.01,0.00001
-                        """.replace("1e-05", "0.00001").replace("\n", "\r\n"));
+                        """.replace("\n", "\r\n"));
+    }
+
+    @Test
+    void aTableWithoutRowsIsItsHeader() throws IOException {
+        write(new LotResult(List.of(), List.of(), List.of(), List.of()));
+
+        assertThat(table("markers"))
+                .isEqualTo("grade,lot,specimen,sweep,property,temperature_C,frequency_Hz,value,u,unit,method\r\n");
+        assertThat(table("spectrum"))
+                .isEqualTo("grade,lot,specimen,reference_temperature_C,kind,form,time_s,value,low,high,unit\r\n");
+        assertThat(table("points"))
+                .startsWith("grade,lot,specimen,sweep,point,")
+                .containsOnlyOnce("\r\n");
+        assertThat(table("harmonics"))
+                .startsWith("grade,lot,specimen,sweep,point,order,")
+                .containsOnlyOnce("\r\n");
+    }
+
+    @Test
+    void markersAreSortedAndTemperaturesAreCelsiusInTheValueToo() throws IOException {
+        Marker peak = new Marker(
+                "1",
+                "1",
+                "glass_transition_loss_peak",
+                OptionalDouble.empty(),
+                OptionalDouble.of(1),
+                300.4,
+                OptionalDouble.of(0.2),
+                "°C",
+                "parabola through 5 points");
+        Marker viscosity = new Marker(
+                "",
+                "",
+                "zero_shear_viscosity",
+                OptionalDouble.of(463.15),
+                OptionalDouble.empty(),
+                51234.5,
+                OptionalDouble.empty(),
+                "Pa·s",
+                "sum of g τ, 8 modes");
+
+        write(new LotResult(List.of(), List.of(peak, viscosity), List.of(), List.of()));
+
+        assertThat(table("markers").lines().skip(1))
+                .containsExactly(
+                        "Heron 3,L-17,,,zero_shear_viscosity,190,,51234.5,,Pa·s,\"sum of g τ, 8 modes\"",
+                        "Heron 3,L-17,1,1,glass_transition_loss_peak,,1,27.25,0.2,°C,parabola through 5 points");
+    }
+
+    @Test
+    void aSpectrumAscendsInTimeAndSaysItsUnit() throws IOException {
+        SpectrumRow slow = mode(SpectrumRow.Kind.RELAXATION, 10, 2000);
+        SpectrumRow fast = mode(SpectrumRow.Kind.RELAXATION, 0.01, 1e5);
+        SpectrumRow retarded = mode(SpectrumRow.Kind.RETARDATION, 3e-7, 1.25e-12);
+
+        write(new LotResult(List.of(), List.of(), List.of(retarded, slow, fast), List.of()));
+
+        assertThat(table("spectrum").lines().skip(1))
+                .containsExactly(
+                        "Heron 3,L-17,,190,relaxation,discrete,0.01,100000,,,Pa",
+                        "Heron 3,L-17,,190,relaxation,discrete,10,2000,,,Pa",
+                        "Heron 3,L-17,,190,retardation,discrete,3e-7,1.25e-12,,,1/Pa");
+    }
+
+    @Test
+    void aPointWithoutModulusHasEmptyCells() throws IOException {
+        write(new LotResult(List.of(point("5", "b/5.csv", Optional.empty())), List.of(), List.of(), List.of()));
+
+        assertThat(table("points").lines().skip(1))
+                .containsExactly("Heron 3,L-17,1,1,5,extension,,,,,,,,,,,,,,,,,unusable,,,0,,,b/5.csv,");
+    }
+
+    @Test
+    void whatIsNotFiniteIsAnEmptyCell() throws IOException {
+        Moduli withoutStorage = new Moduli(0, 1e300, Optional.of(new ModuliCovariance(1, 1, 0)));
+        write(new LotResult(
+                List.of(point("5", "b/5.csv", Optional.of(withoutStorage))), List.of(), List.of(), List.of()));
+
+        assertThat(table("points").lines().skip(1))
+                .containsExactly("Heron 3,L-17,1,1,5,extension,,,,,,,0,1,1e300,1,1e300,90,,,,,unusable,,,0,,,b/5.csv,");
+    }
+
+    @Test
+    void pointsAreSortedByKeyWithDigitsAsNumbersAndThenBySourceFile() throws IOException {
+        List<ModulusPoint> points = Stream.of(
+                        "10 b/2.csv", "9 b/10.csv", "9 b/9.csv", "9.5 b/1.csv", "a2 b/1.csv", "a10 b/1.csv")
+                .map(text -> text.split(" ", -1))
+                .map(parts -> point(parts[0], parts[1], Optional.empty()))
+                .toList();
+
+        write(new LotResult(reversed(points), List.of(), List.of(), List.of()));
+
+        assertThat(table("points").lines().skip(1).map(line -> line.split(",", -1)[4] + " " + line.split(",", -1)[28]))
+                .containsExactly("9 b/9.csv", "9 b/10.csv", "9.5 b/1.csv", "10 b/2.csv", "a2 b/1.csv", "a10 b/1.csv");
+    }
+
+    @Test
+    void textThatLooksLikeAFormulaIsMadeHarmless() throws IOException {
+        Provenance hostile = new Provenance("=1+1", "../../etc", List.of(), List.of(), "1.2.3");
+        PointKey key = new PointKey("=1+1", "../../etc", "@s", "+1", "-2", "a,\"b\"\r\nc/x.csv");
+
+        LotTables.write(
+                results,
+                new LotResult(List.of(point(key, Optional.empty())), List.of(), List.of(), List.of()),
+                hostile);
+
+        Path folder = LotTables.folder(results, "=1+1", "../../etc");
+        assertThat(folder.getParent().getParent()).isEqualTo(results);
+        assertThat(Files.readString(folder.resolve("points.csv")))
+                .contains("\r\n'=1+1,../../etc,'@s,'+1,'-2,extension,")
+                .contains(",\"a,\"\"b\"\"\r\nc/x.csv\",");
+    }
+
+    @ParameterizedTest(name = "seed {0}")
+    @ValueSource(longs = {1, 2, 3, 4, 5})
+    void theSameLotIsTheSameBytesInAnyOrderAndAnyLanguage(long seed) throws IOException {
+        LotResult result = randomResult(seed);
+        LotResult shuffled = new LotResult(
+                shuffled(result.points(), seed),
+                shuffled(result.markers(), seed),
+                shuffled(result.spectrum(), seed),
+                List.of());
+        Locale was = Locale.getDefault();
+
+        write(result);
+        Map<String, String> first = filesOfTheLot();
+        try {
+            Locale.setDefault(Locale.forLanguageTag("ar-EG-u-nu-arab"));
+            write(shuffled);
+        } finally {
+            Locale.setDefault(was);
+        }
+
+        assertThat(filesOfTheLot()).isEqualTo(first);
+        assertThat(first.keySet())
+                .containsExactly("datapackage.json", "harmonics.csv", "markers.csv", "points.csv", "spectrum.csv");
+        assertThat(first.values()).noneMatch(text -> text.contains("NaN") || text.contains("Infinity"));
+    }
+
+    @Test
+    void whatAKilledRunLeftOnItsWayIsClearedAway() throws IOException {
+        Path folder = Files.createDirectories(LotTables.folder(results, FROM.grade(), FROM.lot()));
+        Files.writeString(folder.resolve("points.csv" + FolderSwap.ON_ITS_WAY), "half a ta");
+        Files.writeString(folder.resolve("a-table-of-another-version.csv" + FolderSwap.ON_ITS_WAY), "x");
+        Files.writeString(folder.resolve("notes.txt"), "a colleague's own file stays");
+
+        write(new LotResult(List.of(), List.of(), List.of(), List.of()));
+
+        assertThat(filesOfTheLot().keySet())
+                .containsExactly(
+                        "datapackage.json", "harmonics.csv", "markers.csv", "notes.txt", "points.csv", "spectrum.csv");
+    }
+
+    @Test
+    void aTableThatCannotBeReplacedIsNamedAndNothingIsLeftOnItsWay() throws IOException {
+        Path folder = LotTables.folder(results, FROM.grade(), FROM.lot());
+        Files.createDirectories(folder.resolve("harmonics.csv").resolve("in the way"));
+
+        assertThatThrownBy(() -> write(new LotResult(List.of(), List.of(), List.of(), List.of())))
+                .isInstanceOf(IOException.class)
+                .hasMessageContaining("cannot replace " + folder.resolve("harmonics.csv"));
+
+        try (Stream<Path> left = Files.list(folder)) {
+            assertThat(left.map(path -> path.getFileName().toString()))
+                    .noneMatch(name -> name.endsWith(FolderSwap.ON_ITS_WAY));
+        }
     }
 
     private void write(LotResult result) throws IOException {
@@ -88,5 +265,64 @@ class LotTablesTest {
     private String table(String name) throws IOException {
         return Files.readString(
                 LotTables.folder(results, FROM.grade(), FROM.lot()).resolve(name + ".csv"));
+    }
+
+    private Map<String, String> filesOfTheLot() throws IOException {
+        Map<String, String> texts = new TreeMap<>();
+        try (Stream<Path> files = Files.list(LotTables.folder(results, FROM.grade(), FROM.lot()))) {
+            for (Path file : files.toList()) {
+                texts.put(file.getFileName().toString(), Files.readString(file));
+            }
+        }
+        return texts;
+    }
+
+    private static SpectrumRow mode(SpectrumRow.Kind kind, double timeS, double value) {
+        return new SpectrumRow(
+                463.15, kind, SpectrumRow.Form.DISCRETE, timeS, value, OptionalDouble.empty(), OptionalDouble.empty());
+    }
+
+    private static ModulusPoint point(String point, String sourceFile, Optional<Moduli> moduli) {
+        return point(new PointKey("Heron 3", "L-17", "1", "1", point, sourceFile), moduli);
+    }
+
+    private static ModulusPoint point(PointKey key, Optional<Moduli> moduli) {
+        return new ModulusPoint(
+                key,
+                Optional.empty(),
+                DeformationMode.EXTENSION,
+                OptionalDouble.empty(),
+                OptionalDouble.empty(),
+                OptionalDouble.empty(),
+                OptionalDouble.empty(),
+                OptionalDouble.empty(),
+                OptionalDouble.empty(),
+                moduli,
+                List.of(),
+                Quality.UNUSABLE,
+                List.of(),
+                OptionalDouble.empty(),
+                0,
+                OptionalDouble.empty(),
+                OptionalDouble.empty(),
+                OptionalDouble.empty(),
+                List.of(),
+                List.of());
+    }
+
+    private static LotResult randomResult(long seed) {
+        return new RandomLot(seed).result(FROM.grade(), FROM.lot());
+    }
+
+    private static <T> List<T> reversed(List<T> list) {
+        List<T> reversed = new ArrayList<>(list);
+        Collections.reverse(reversed);
+        return reversed;
+    }
+
+    private static <T> List<T> shuffled(List<T> list, long seed) {
+        List<T> shuffled = new ArrayList<>(list);
+        Collections.shuffle(shuffled, new Random(seed));
+        return shuffled;
     }
 }

@@ -1,0 +1,72 @@
+package nightlag.pipeline.tables;
+
+import java.util.ArrayList;
+import java.util.List;
+import java.util.OptionalDouble;
+import java.util.Random;
+import nightlag.pipeline.RandomPoints;
+import nightlag.stages.LotResult;
+import nightlag.stages.moduli.Marker;
+import nightlag.stages.moduli.ModulusPoint;
+import nightlag.stages.moduli.PointKey;
+import nightlag.stages.spectrum.SpectrumRow;
+
+/** A lot of no material, with rows in every table; every row differs from every other in its key. */
+final class RandomLot {
+    private final Random random;
+    private final RandomPoints points;
+
+    RandomLot(long seed) {
+        random = new Random(seed);
+        points = new RandomPoints(seed);
+    }
+
+    LotResult result(String grade, String lot) {
+        return new LotResult(points(grade, lot), markers(), spectrum(), List.of());
+    }
+
+    private List<ModulusPoint> points(String grade, String lot) {
+        List<ModulusPoint> made = new ArrayList<>();
+        for (int i = 0; i < 60; i++) {
+            String specimen = Integer.toString(random.nextInt(12));
+            String sweep = random.nextBoolean() ? "up" : "down";
+            String point = Integer.toString(random.nextInt(12));
+            made.add(points.point(new PointKey(grade, lot, specimen, sweep, point, "bench; \"2\"/ä" + i + ".csv")));
+        }
+        return made;
+    }
+
+    private List<Marker> markers() {
+        List<Marker> made = new ArrayList<>();
+        for (int i = 0; i < 20; i++) {
+            made.add(new Marker(
+                    random.nextBoolean() ? "" : "1",
+                    random.nextBoolean() ? "" : "up",
+                    "figure_" + i,
+                    maybe(random.nextDouble(200, 500)),
+                    maybe(random.nextDouble(0.01, 100)),
+                    points.number(),
+                    maybe(Math.abs(points.number())),
+                    random.nextBoolean() ? "°C" : "Pa·s",
+                    "by trial, \"for a test\""));
+        }
+        return made;
+    }
+
+    private List<SpectrumRow> spectrum() {
+        List<SpectrumRow> made = new ArrayList<>();
+        for (SpectrumRow.Kind kind : SpectrumRow.Kind.values()) {
+            for (SpectrumRow.Form form : SpectrumRow.Form.values()) {
+                for (int i = 0; i < 8; i++) {
+                    made.add(new SpectrumRow(
+                            463.15, kind, form, Math.pow(10, i - 4), Math.abs(points.number()), maybe(0), maybe(1e9)));
+                }
+            }
+        }
+        return made;
+    }
+
+    private OptionalDouble maybe(double value) {
+        return random.nextInt(3) == 0 ? OptionalDouble.empty() : OptionalDouble.of(value);
+    }
+}
