@@ -58,17 +58,16 @@ public final class Archive implements AutoCloseable {
         });
     }
 
-    /** Notes a file's new size and modified time where its content turned out to be the same. */
-    public void touched(Collection<ArchivedFile> files) throws ArchiveException {
-        inTransaction("note modified times", () -> {
-            try (PreparedStatement update = connection.prepareStatement(
-                    "UPDATE file SET bytes = ?, modified_ms = ? WHERE folder = ? AND path = ?")) {
-                for (ArchivedFile touched : files) {
-                    update.setLong(1, touched.bytes());
-                    update.setLong(2, touched.modifiedMillis());
-                    update.setString(3, touched.identity().folder());
-                    update.setString(4, touched.identity().relativePath());
-                    update.executeUpdate();
+    /**
+     * Puts new states of known files in the place of the old ones; their reductions stay as they are, and so do their lots.
+     *
+     * @throws ArchiveException if nothing could be noted
+     */
+    public void amend(Collection<ArchivedFile> files) throws ArchiveException {
+        inTransaction("note what became of a file", () -> {
+            try (Commit commit = new Commit(connection)) {
+                for (ArchivedFile file : files) {
+                    commit.putFile(file);
                 }
             }
         });

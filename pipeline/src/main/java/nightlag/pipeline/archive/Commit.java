@@ -88,7 +88,8 @@ final class Commit implements AutoCloseable {
         dropRecords.executeUpdate();
     }
 
-    private long putFile(ArchivedFile file) throws SQLException {
+    /** Puts the state of a file in the place of the old one and gives its row; its records are not touched. */
+    long putFile(ArchivedFile file) throws SQLException {
         int column = 0;
         putFile.setString(++column, file.identity().folder());
         putFile.setString(++column, file.identity().relativePath());

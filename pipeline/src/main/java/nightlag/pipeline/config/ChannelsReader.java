@@ -211,12 +211,6 @@ final class ChannelsReader {
             section.missing(key(ChannelName.STORAGE_MODULUS), choice);
         }
         both(section, present, ChannelName.STORAGE_MODULUS_U, ChannelName.LOSS_MODULUS_U);
-        if (polar && present.contains(ChannelName.STORAGE_MODULUS_U)) {
-            section.wrong(
-                    key(ChannelName.STORAGE_MODULUS_U),
-                    "an uncertainty of a channel that is not there",
-                    "it beside storage_modulus and loss_modulus");
-        }
         for (ChannelName name : List.of(
                 ChannelName.TIME,
                 ChannelName.ANGLE,

@@ -143,48 +143,33 @@ class ArchiveTest {
     }
 
     @Test
-    void touchingAFileChangesSizeAndTimeAndNothingElse() throws ArchiveException {
+    void amendingAFileReplacesItsStateAndKeepsItsReductions() throws ArchiveException {
         FileOutcome outcome = reduced("a.csv", SEVENTEEN, 3);
+        ArchivedFile stopped = new ArchivedFile(
+                outcome.file().identity(),
+                outcome.file().tableName(),
+                "other",
+                999,
+                12345,
+                "other",
+                "other",
+                FileStatus.SET_ASIDE,
+                "its grade file is wrong",
+                0,
+                "",
+                "",
+                "",
+                0,
+                0);
         try (Archive archive = open()) {
             archive.commit(List.of(outcome));
             archive.concluded(SEVENTEEN, "c1");
-            ArchivedFile was = outcome.file();
 
-            archive.touched(List.of(new ArchivedFile(
-                    was.identity(),
-                    "other",
-                    "other",
-                    999,
-                    12345,
-                    "other",
-                    "other",
-                    FileStatus.SET_ASIDE,
-                    "other",
-                    0,
-                    "other",
-                    "other",
-                    "other",
-                    0,
-                    0)));
+            archive.amend(List.of(stopped));
 
-            assertThat(archive.files())
-                    .containsExactly(new ArchivedFile(
-                            was.identity(),
-                            was.tableName(),
-                            was.instrument(),
-                            999,
-                            12345,
-                            was.sha256(),
-                            was.fingerprint(),
-                            was.status(),
-                            was.reason(),
-                            was.points(),
-                            was.grade(),
-                            was.lot(),
-                            was.specimen(),
-                            was.rows(),
-                            was.rowsLeftOut()));
-            assertThat(archive.lots()).extracting(LotState::due).containsExactly(false);
+            assertThat(archive.files()).containsExactly(stopped);
+            assertThat(archive.reductions(SEVENTEEN)).isEqualTo(outcome.reductions());
+            assertThat(archive.lots()).containsExactly(new LotState(SEVENTEEN, false, "c1", 3));
         }
     }
 

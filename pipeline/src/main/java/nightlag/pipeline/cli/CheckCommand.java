@@ -1,0 +1,129 @@
+package nightlag.pipeline.cli;
+
+import java.io.PrintWriter;
+import java.nio.file.Path;
+import java.time.Clock;
+import java.time.ZoneId;
+import java.util.List;
+import java.util.Optional;
+import java.util.concurrent.Callable;
+import java.util.stream.Collectors;
+import nightlag.pipeline.config.Configuration;
+import nightlag.pipeline.config.ConfigurationException;
+import nightlag.pipeline.config.ConfigurationReader;
+import nightlag.pipeline.config.Intake;
+import nightlag.pipeline.decode.FileDescription;
+import nightlag.pipeline.decode.FileDescription.DescribedChannel;
+import nightlag.pipeline.decode.FileDescription.DescribedTag;
+import nightlag.pipeline.intake.RawFile;
+import nightlag.pipeline.night.NightFault;
+import nightlag.pipeline.night.Preview;
+import nightlag.pipeline.night.Preview.FirstFile;
+import picocli.CommandLine.Command;
+import picocli.CommandLine.Model.CommandSpec;
+import picocli.CommandLine.Parameters;
+import picocli.CommandLine.Spec;
+
+/** {@code check}: the configuration, and what the next run would do. */
+@Command(
+        name = "check",
+        description = {
+            "Reads and checks the whole configuration, lists what the next run would take up, and shows how the first file of"
+                    + " each intake decodes. Writes nothing."
+        },
+        mixinStandardHelpOptions = true,
+        versionProvider = Nightlag.Version.class,
+        exitCodeListHeading = "%nExit codes:%n",
+        exitCodeList = {"0:the configuration is right", "2:something in the configuration is wrong; all of it is listed"
+        })
+final class CheckCommand implements Callable<Integer> {
+    private static final int MOST_FILES = 20;
+
+    @Spec
+    private CommandSpec spec;
+
+    @Parameters(
+            index = "0",
+            arity = "0..1",
+            paramLabel = "NIGHT.toml",
+            defaultValue = "config/night.toml",
+            description = "The night file (${DEFAULT-VALUE}).")
+    private Path nightFile;
+
+    @Override
+    public Integer call() {
+        PrintWriter out = spec.commandLine().getOut();
+        PrintWriter err = spec.commandLine().getErr();
+        try {
+            Configuration configuration = ConfigurationReader.read(nightFile);
+            print(configuration, out);
+            print(Preview.of(configuration, Clock.system(ZoneId.systemDefault())), out);
+            configuration.gradeProblems().forEach(problem -> err.println(problem.sentence()));
+            return configuration.gradeProblems().isEmpty() ? Nightlag.ALL_WELL : Nightlag.CANNOT_BEGIN;
+        } catch (ConfigurationException e) {
+            e.problems().forEach(problem -> err.println(problem.sentence()));
+            return Nightlag.CANNOT_BEGIN;
+        } catch (NightFault e) {
+            err.println("nightlag: " + e.getMessage());
+            return e.kind() == NightFault.Kind.CANNOT_BEGIN ? Nightlag.CANNOT_BEGIN : Nightlag.STOPPED;
+        }
+    }
+
+    private static void print(Configuration configuration, PrintWriter out) {
+        out.println(
+                "grades    " + configuration.grades().keySet().stream().sorted().collect(Collectors.joining(", ")));
+        configuration.notActedOn().forEach(out::println);
+        configuration.grades().values().stream()
+                .sorted((a, b) -> a.name().compareTo(b.name()))
+                .forEach(grade -> grade.notActedOn().forEach(line -> out.println(grade.name() + ": " + line)));
+    }
+
+    private static void print(Preview preview, PrintWriter out) {
+        out.println("next run  takes up " + preview.toLookAt().size() + " files, waits for "
+                + preview.waiting().size() + ", leaves " + preview.left() + " as they are");
+        list(out, "takes up", preview.toLookAt());
+        list(out, "waits for", preview.waiting());
+        preview.unreadable().forEach(line -> out.println("cannot be read: " + line));
+        preview.firstFiles().forEach((intake, first) -> print(out, intake, first));
+    }
+
+    private static void list(PrintWriter out, String heading, List<RawFile> files) {
+        files.stream().limit(MOST_FILES).forEach(file -> out.println("  " + heading + " " + file.tableName()));
+        if (files.size() > MOST_FILES) {
+            out.println("  and " + (files.size() - MOST_FILES) + " more");
+        }
+    }
+
+    private static void print(PrintWriter out, Intake intake, Optional<FirstFile> first) {
+        out.println();
+        out.println("intake " + intake.folder() + ", instrument "
+                + intake.instrument().name());
+        if (first.isEmpty()) {
+            out.println("  no file matches " + intake.instrument().files().match());
+        } else if (first.get().description().isEmpty()) {
+            out.println("  " + first.get().problem());
+        } else {
+            print(out, first.get().description().get());
+        }
+    }
+
+    private static void print(PrintWriter out, FileDescription file) {
+        out.println("  " + file.file() + ": " + file.charset() + (file.byteOrderMark() ? " by its byte-order mark" : "")
+                + ", layout " + file.layout().word()
+                + (file.headerLine() > 0 ? ", header in line " + file.headerLine() : ", no header")
+                + ", data from line " + file.firstDataLine());
+        for (DescribedChannel channel : file.channels()) {
+            out.println("  " + channel.name().word() + " from column " + channel.column()
+                    + channel.header().map(header -> " '" + header + "'").orElse("") + " in " + channel.unit() + " ("
+                    + channel.unitFrom() + "): "
+                    + channel.firstValues().stream()
+                            .map(value -> value.map(String::valueOf).orElse("empty"))
+                            .collect(Collectors.joining(", "))
+                    + " " + channel.si());
+        }
+        for (DescribedTag tag : file.tags()) {
+            out.println("  " + tag.name().word() + " = " + tag.text()
+                    + tag.value().map(value -> " = " + value).orElse("") + " from " + tag.from());
+        }
+    }
+}

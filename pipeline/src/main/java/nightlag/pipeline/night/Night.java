@@ -1,0 +1,132 @@
+package nightlag.pipeline.night;
+
+import java.io.IOException;
+import java.nio.file.Files;
+import java.nio.file.Path;
+import java.time.Clock;
+import java.util.Comparator;
+import java.util.List;
+import java.util.stream.Collectors;
+import nightlag.pipeline.archive.Archive;
+import nightlag.pipeline.archive.ArchiveException;
+import nightlag.pipeline.config.Configuration;
+import nightlag.pipeline.config.Intake;
+import nightlag.pipeline.decode.RunSheets;
+import nightlag.pipeline.tables.NightTables;
+import org.apache.logging.log4j.LogManager;
+import org.apache.logging.log4j.Logger;
+
+/**
+ * One night's work: survey the intakes, look at what is new, commit it, rebuild the tables of the lots it touches.
+ * Files are looked at side by side and committed in the order of their names, so that the number of workers shows nowhere.
+ */
+public final class Night {
+    /** The archive's file name below the results folder. */
+    static final String ARCHIVE = "archive.sqlite";
+
+    private static final Logger LOG = LogManager.getLogger(Night.class);
+
+    private final Configuration configuration;
+    private final RunOptions options;
+    private final Progress progress;
+    private final Clock clock;
+    private final String version;
+
+    /** A night over a configuration; the clock names its folder and judges which files have settled. */
+    public Night(Configuration configuration, RunOptions options, Progress progress, Clock clock) {
+        this.configuration = configuration;
+        this.options = options;
+        this.progress = progress;
+        this.clock = clock;
+        this.version = ProgramVersion.get();
+    }
+
+    /**
+     * Runs the night.
+     *
+     * @throws NightFault if it cannot begin, or has to stop; what was committed is kept
+     */
+    public NightOutcome run() throws NightFault {
+        checkGradesAsked();
+        checkSomeIntakeReadable();
+        Path results = configuration.results();
+        try {
+            Files.createDirectories(results);
+        } catch (IOException e) {
+            throw stopped("the results folder " + results + " cannot be made", e);
+        }
+        try (RunLock lock = RunLock.take(results)) {
+            lock.requireHeld();
+            return workLocked(results);
+        } catch (ArchiveException e) {
+            throw new NightFault(NightFault.Kind.STOPPED, e.getMessage(), e);
+        } catch (IOException e) {
+            throw stopped("the results folder " + results + " cannot be written", e);
+        }
+    }
+
+    private NightOutcome workLocked(Path results) throws ArchiveException, IOException, NightFault {
+        try (Archive archive = Archive.open(results.resolve(ARCHIVE))) {
+            Path folder = NightFolder.make(results, clock);
+            try (NightLog log = NightLog.open(folder)) {
+                log.info("Nightlag " + version + ", " + workers() + " workers, results in " + results);
+                return work(archive, folder);
+            }
+        }
+    }
+
+    private NightOutcome work(Archive archive, Path folder) throws ArchiveException, IOException, NightFault {
+        configuration.notActedOn().forEach(LOG::info);
+        RunSheets runSheets = new RunSheets();
+        Survey survey = Survey.of(configuration, archive.files(), runSheets, options.redo(), version, clock);
+        Tally tally = new Tally(folder);
+        survey.unreadable().forEach(tally::unreadable);
+        new FileStage(configuration, options, progress, version, workers(), archive, tally).work(survey, runSheets);
+        new LotStage(configuration, options, version, workers(), archive, tally).work();
+        NightOutcome outcome = tally.outcome();
+        NightTables.writeFiles(folder, outcome.files());
+        LOG.info(
+                "{} files; {} lots rebuilt",
+                outcome.files().size(),
+                outcome.lotsConcluded().size());
+        return outcome;
+    }
+
+    private int workers() {
+        return options.workers().orElse(configuration.workers());
+    }
+
+    private void checkGradesAsked() throws NightFault {
+        List<String> unknown = options.grades().stream()
+                .filter(grade -> !configuration.grades().containsKey(grade)
+                        && !configuration.wrongGrades().containsKey(grade))
+                .sorted()
+                .toList();
+        if (!unknown.isEmpty()) {
+            throw new NightFault(
+                    NightFault.Kind.CANNOT_BEGIN,
+                    "no grade file says grade = '" + String.join("', '", unknown) + "'; there are files for '"
+                            + configuration.grades().keySet().stream()
+                                    .sorted(Comparator.naturalOrder())
+                                    .collect(Collectors.joining("', '"))
+                            + "'");
+        }
+    }
+
+    private void checkSomeIntakeReadable() throws NightFault {
+        List<Intake> intakes = configuration.intakes();
+        if (intakes.stream()
+                .noneMatch(intake -> Files.isDirectory(intake.folder()) && Files.isReadable(intake.folder()))) {
+            throw new NightFault(
+                    NightFault.Kind.CANNOT_BEGIN,
+                    "no intake can be read: "
+                            + intakes.stream()
+                                    .map(intake -> intake.folder().toString())
+                                    .collect(Collectors.joining(", ")));
+        }
+    }
+
+    private static NightFault stopped(String what, IOException e) {
+        return new NightFault(NightFault.Kind.STOPPED, what + ": " + IoSentences.of(e), e);
+    }
+}

@@ -1,0 +1,47 @@
+package nightlag.pipeline.night;
+
+import java.nio.file.Path;
+import java.util.List;
+import java.util.Map;
+import nightlag.pipeline.archive.LotName;
+import nightlag.pipeline.tables.NightFileRow;
+import nightlag.stages.moduli.Flag;
+import nightlag.stages.moduli.Quality;
+
+/**
+ * What a night came to.
+ *
+ * @param folder the night's folder
+ * @param files every file of the intake, and what became of it
+ * @param newlySetAside files this run set aside, with the reason
+ * @param stillSetAside files set aside before that have not changed, with the reason
+ * @param unreadableIntakes intakes that could not be read, with the reason
+ * @param lotsConcluded lots whose tables were rebuilt, with what could not be had for them
+ * @param lotsNotConcluded lots whose tables could not be rebuilt, with the reason
+ * @param quality points reduced this night, by quality
+ * @param flags how often each flag was raised on them
+ * @param rows rows read this night
+ * @param rowsLeftOut rows among them left out for an empty cell
+ */
+public record NightOutcome(
+        Path folder,
+        List<NightFileRow> files,
+        List<String> newlySetAside,
+        List<String> stillSetAside,
+        List<String> unreadableIntakes,
+        Map<LotName, List<String>> lotsConcluded,
+        Map<LotName, String> lotsNotConcluded,
+        Map<Quality, Integer> quality,
+        Map<Flag, Integer> flags,
+        long rows,
+        long rowsLeftOut) {
+    /** Whether all went well; files that wait, and files set aside before, do not count against it. */
+    public boolean allWell() {
+        return newlySetAside.isEmpty() && unreadableIntakes.isEmpty() && lotsNotConcluded.isEmpty();
+    }
+
+    /** How many files ended with a status. */
+    public long count(NightFileRow.Status status) {
+        return files.stream().filter(file -> file.status() == status).count();
+    }
+}

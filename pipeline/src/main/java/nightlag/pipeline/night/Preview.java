@@ -1,0 +1,100 @@
+package nightlag.pipeline.night;
+
+import java.io.IOException;
+import java.nio.file.Files;
+import java.nio.file.Path;
+import java.time.Clock;
+import java.util.ArrayList;
+import java.util.LinkedHashMap;
+import java.util.List;
+import java.util.Map;
+import java.util.Optional;
+import nightlag.pipeline.archive.Archive;
+import nightlag.pipeline.archive.ArchiveException;
+import nightlag.pipeline.archive.ArchivedFile;
+import nightlag.pipeline.config.Configuration;
+import nightlag.pipeline.config.Intake;
+import nightlag.pipeline.decode.DecodeException;
+import nightlag.pipeline.decode.FileDescription;
+import nightlag.pipeline.decode.RawFileDecoder;
+import nightlag.pipeline.decode.RunSheets;
+import nightlag.pipeline.intake.RawFile;
+
+/**
+ * What the next run would do, found without writing anything.
+ *
+ * @param toLookAt files it would take up
+ * @param waiting files that have not settled
+ * @param left how many files it would leave as they are
+ * @param unreadable what could not be read, with the reason
+ * @param firstFiles how the first file of each intake decodes; empty for an intake without files
+ */
+public record Preview(
+        List<RawFile> toLookAt,
+        List<RawFile> waiting,
+        int left,
+        List<String> unreadable,
+        Map<Intake, Optional<FirstFile>> firstFiles) {
+    /**
+     * How a file decodes.
+     *
+     * @param file the file
+     * @param description how it decodes; empty if it does not
+     * @param problem why it does not; empty text otherwise
+     */
+    public record FirstFile(RawFile file, Optional<FileDescription> description, String problem) {}
+
+    /**
+     * Looks at the intakes and the archive.
+     *
+     * @throws NightFault if there is an archive that cannot be read
+     */
+    public static Preview of(Configuration configuration, Clock clock) throws NightFault {
+        RunSheets runSheets = new RunSheets();
+        Survey survey =
+                Survey.of(configuration, archived(configuration), runSheets, false, ProgramVersion.get(), clock);
+        List<RawFile> toLookAt = new ArrayList<>();
+        List<RawFile> waiting = new ArrayList<>();
+        Map<Intake, Optional<FirstFile>> firstFiles = new LinkedHashMap<>();
+        configuration.intakes().forEach(intake -> firstFiles.put(intake, Optional.empty()));
+        for (Survey.Candidate candidate : survey.candidates()) {
+            RawFile file = candidate.file();
+            if (candidate.task() == Survey.Task.LOOK) {
+                toLookAt.add(file);
+            } else if (candidate.task() == Survey.Task.WAIT) {
+                waiting.add(file);
+            }
+            firstFiles.compute(
+                    file.intake(),
+                    (intake, before) -> before.isPresent() ? before : Optional.of(describe(file, runSheets)));
+        }
+        return new Preview(
+                toLookAt,
+                waiting,
+                survey.candidates().size() - toLookAt.size() - waiting.size(),
+                survey.unreadable(),
+                firstFiles);
+    }
+
+    private static List<ArchivedFile> archived(Configuration configuration) throws NightFault {
+        Path file = configuration.results().resolve(Night.ARCHIVE);
+        if (!Files.exists(file)) {
+            return List.of();
+        }
+        try (Archive archive = Archive.open(file)) {
+            return archive.files();
+        } catch (ArchiveException e) {
+            throw new NightFault(NightFault.Kind.STOPPED, e.getMessage(), e);
+        }
+    }
+
+    private static FirstFile describe(RawFile file, RunSheets runSheets) {
+        try {
+            return new FirstFile(file, Optional.of(RawFileDecoder.describe(file, runSheets.rowOf(file))), "");
+        } catch (DecodeException e) {
+            return new FirstFile(file, Optional.empty(), e.problem().sentence());
+        } catch (IOException e) {
+            return new FirstFile(file, Optional.empty(), file.tableName() + ": " + IoSentences.of(e));
+        }
+    }
+}

@@ -1,0 +1,102 @@
+package nightlag.pipeline.night;
+
+import java.nio.file.Path;
+import java.util.ArrayList;
+import java.util.EnumMap;
+import java.util.List;
+import java.util.Map;
+import java.util.TreeMap;
+import nightlag.pipeline.archive.LotName;
+import nightlag.pipeline.decode.DecodeCounts;
+import nightlag.pipeline.tables.NightFileRow;
+import nightlag.stages.Reduction;
+import nightlag.stages.moduli.Flag;
+import nightlag.stages.moduli.ModulusPoint;
+import nightlag.stages.moduli.Quality;
+import org.apache.logging.log4j.LogManager;
+import org.apache.logging.log4j.Logger;
+
+/** Counts what becomes of every file, row, point and lot, and says to the log what a person should know. */
+final class Tally {
+    private static final Logger LOG = LogManager.getLogger(Tally.class);
+
+    private final Path folder;
+    private final List<NightFileRow> files = new ArrayList<>();
+    private final List<String> newlySetAside = new ArrayList<>();
+    private final List<String> stillSetAside = new ArrayList<>();
+    private final List<String> unreadableIntakes = new ArrayList<>();
+    private final Map<LotName, List<String>> lotsConcluded = new TreeMap<>();
+    private final Map<LotName, String> lotsNotConcluded = new TreeMap<>();
+    private final Map<Quality, Integer> quality = new EnumMap<>(Quality.class);
+    private final Map<Flag, Integer> flags = new EnumMap<>(Flag.class);
+    private long rows;
+    private long rowsLeftOut;
+
+    Tally(Path folder) {
+        this.folder = folder;
+    }
+
+    void file(NightFileRow row) {
+        files.add(row);
+    }
+
+    void newlySetAside(NightFileRow row) {
+        files.add(row);
+        newlySetAside.add(row.reason());
+        LOG.warn("set aside: {}", row.reason());
+    }
+
+    void stillSetAside(NightFileRow row) {
+        files.add(row);
+        stillSetAside.add(row.reason());
+        LOG.info("still set aside: {}", row.reason());
+    }
+
+    void unreadable(String sentence) {
+        unreadableIntakes.add(sentence);
+        LOG.warn("intake cannot be read: {}", sentence);
+    }
+
+    void reduced(String file, DecodeCounts counts, List<Reduction> reductions) {
+        rows += counts.rows();
+        rowsLeftOut += counts.leftOut();
+        if (counts.leftOut() > 0) {
+            LOG.info("{}: {} of {} rows left out for an empty cell", file, counts.leftOut(), counts.rows());
+        }
+        for (Reduction reduction : reductions) {
+            for (ModulusPoint point : reduction.points()) {
+                quality.merge(point.quality(), 1, Integer::sum);
+                point.flags().forEach(flag -> flags.merge(flag, 1, Integer::sum));
+                point.reasons()
+                        .forEach(reason ->
+                                LOG.info("{}, point {}: {}", file, point.key().point(), reason.sentence()));
+            }
+        }
+    }
+
+    void concluded(LotName lot, List<String> notes) {
+        lotsConcluded.put(lot, notes);
+        LOG.info("{} lot {}: tables rebuilt", lot.grade(), lot.lot());
+        notes.forEach(note -> LOG.info("{} lot {}: {}", lot.grade(), lot.lot(), note));
+    }
+
+    void notConcluded(LotName lot, String reason) {
+        lotsNotConcluded.put(lot, reason);
+        LOG.warn("{} lot {}: not concluded: {}", lot.grade(), lot.lot(), reason);
+    }
+
+    NightOutcome outcome() {
+        return new NightOutcome(
+                folder,
+                List.copyOf(files),
+                List.copyOf(newlySetAside),
+                List.copyOf(stillSetAside),
+                List.copyOf(unreadableIntakes),
+                new TreeMap<>(lotsConcluded),
+                new TreeMap<>(lotsNotConcluded),
+                new EnumMap<>(quality),
+                new EnumMap<>(flags),
+                rows,
+                rowsLeftOut);
+    }
+}
