@@ -1,5 +1,22 @@
 package nightlag.stages;
 
+import java.util.List;
+import java.util.Optional;
+import java.util.OptionalDouble;
+import nightlag.stages.fault.ReductionFault;
+import nightlag.stages.geometry.DeformationMode;
+import nightlag.stages.geometry.GeometryKind;
+import nightlag.stages.geometry.GeometrySpec;
+import nightlag.stages.geometry.SignalCorrection;
+import nightlag.stages.moduli.Moduli;
+import nightlag.stages.moduli.ModuliCovariance;
+import nightlag.stages.moduli.ModulusPoint;
+import nightlag.stages.moduli.ModulusPoints;
+import nightlag.stages.moduli.ModulusPoints.Origin;
+import nightlag.stages.moduli.ModulusPoints.Ranges;
+import nightlag.stages.waveform.HarmonicAnalysis;
+import nightlag.stages.waveform.SignalFit;
+
 /** One record to its points: samples to amplitudes, corrections and geometry, moduli, screening. */
 public final class Reduce {
     private Reduce() {}
@@ -9,6 +26,57 @@ public final class Reduce {
      * thrown for bad data.
      */
     public static Reduction reduce(MeasuredRecord record, ReductionPlan plan) {
-        throw new UnsupportedOperationException();
+        if (record instanceof WaveformRecord waveforms) {
+            return new Reduction(List.of(fromWaveform(waveforms, plan)));
+        }
+        return new Reduction(List.of(fromModuli((GivenModuli) record, plan)));
+    }
+
+    private static ModulusPoint fromWaveform(WaveformRecord record, ReductionPlan plan) {
+        Origin origin = origin(record.tags());
+        GeometrySpec spec =
+                plan.geometry().orElseGet(GeometrySpec::none).with(record.tags().dimensions());
+        try {
+            SignalCorrection correction =
+                    SignalCorrection.of(spec, plan.corrections(), record.deformationSignal(), record.loadSignal());
+            SignalFit fit = HarmonicAnalysis.analyse(record.waveform(), plan.extraction());
+            Ranges ranges = Ranges.of(
+                    plan.deformationRange(), record.deformationSignal(), plan.loadRange(), record.loadSignal());
+            return ModulusPoints.of(origin, record.waveform(), fit, correction, ranges, plan.screening());
+        } catch (ReductionFault fault) {
+            OptionalDouble tagged = record.waveform().nominalFrequencyHz();
+            return ModulusPoints.unusable(origin, mode(plan), tagged, fault.reason());
+        }
+    }
+
+    private static ModulusPoint fromModuli(GivenModuli record, ReductionPlan plan) {
+        Optional<ModuliCovariance> covariance =
+                record.storageUPa().isPresent() && record.lossUPa().isPresent()
+                        ? Optional.of(new ModuliCovariance(
+                                square(record.storageUPa().getAsDouble()),
+                                square(record.lossUPa().getAsDouble()),
+                                0))
+                        : Optional.empty();
+        return ModulusPoints.given(
+                origin(record.tags()),
+                mode(plan),
+                record.frequencyHz(),
+                new Moduli(record.storagePa(), record.lossPa(), covariance),
+                record.strainAmplitude());
+    }
+
+    private static Origin origin(RecordTags tags) {
+        return new Origin(tags.key(), tags.made(), tags.temperatureK(), tags.elapsedS());
+    }
+
+    private static DeformationMode mode(ReductionPlan plan) {
+        GeometrySpec spec = plan.geometry().orElseGet(GeometrySpec::none);
+        return spec.deformation()
+                .filter(mode -> spec.kind() == GeometryKind.NONE)
+                .orElse(spec.kind().usualMode());
+    }
+
+    private static double square(double value) {
+        return value * value;
     }
 }

@@ -7,7 +7,7 @@ import java.util.function.DoubleUnaryOperator;
 import nightlag.stages.numeric.Complex;
 
 /** Builds records for tests: two channels of known harmonics on a drift, with noise if wanted. */
-final class Recording {
+public final class Recording {
     private double frequencyHz = 1;
     private double cycles = 5;
     private double samplesPerCycle = 64;
@@ -25,7 +25,7 @@ final class Recording {
     private DoubleUnaryOperator temperatureK = t -> Double.NaN;
     private long seed = 1;
 
-    static Recording of(double frequencyHz, double cycles, double samplesPerCycle) {
+    public static Recording of(double frequencyHz, double cycles, double samplesPerCycle) {
         Recording recording = new Recording();
         recording.frequencyHz = frequencyHz;
         recording.cycles = cycles;
@@ -33,71 +33,71 @@ final class Recording {
         return recording;
     }
 
-    Recording startingAt(double seconds) {
+    public Recording startingAt(double seconds) {
         startS = seconds;
         return this;
     }
 
-    Recording tagged(double hz) {
+    public Recording tagged(double hz) {
         tag = OptionalDouble.of(hz);
         return this;
     }
 
     /** Amplitudes by order, phase counted from the first sample. */
-    Recording deformation(Complex... amplitudes) {
+    public Recording deformation(Complex... amplitudes) {
         deformation = amplitudes;
         return this;
     }
 
-    Recording load(Complex... amplitudes) {
+    public Recording load(Complex... amplitudes) {
         load = amplitudes;
         return this;
     }
 
     /** Polynomials in t/duration, lowest power first. */
-    Recording drifts(double[] ofDeformation, double[] ofLoad) {
+    public Recording drifts(double[] ofDeformation, double[] ofLoad) {
         deformationDrift = ofDeformation;
         loadDrift = ofLoad;
         return this;
     }
 
-    Recording jitter(double partOfInterval) {
+    public Recording jitter(double partOfInterval) {
         jitter = partOfInterval;
         return this;
     }
 
-    Recording missing(double share) {
+    public Recording missing(double share) {
         missing = share;
         return this;
     }
 
-    Recording noise(double ofDeformation, double ofLoad) {
+    public Recording noise(double ofDeformation, double ofLoad) {
         deformationNoise = ofDeformation;
         loadNoise = ofLoad;
         return this;
     }
 
     /** Noise of first-order memory: n_i = a n_(i−1) + white, of the same total variance. */
-    Recording noiseMemory(double coefficient) {
+    public Recording noiseMemory(double coefficient) {
         noiseMemory = coefficient;
         return this;
     }
 
-    Recording temperature(DoubleUnaryOperator kelvin) {
+    public Recording temperature(DoubleUnaryOperator kelvin) {
         temperatureK = kelvin;
         return this;
     }
 
-    Recording seed(long value) {
+    public Recording seed(long value) {
         seed = value;
         return this;
     }
 
-    double durationS() {
+    public double durationS() {
         return cycles / frequencyHz;
     }
 
-    Waveform build() {
+    public Waveform build() {
         Random random = new Random(seed);
         int count = (int) Math.round(cycles * samplesPerCycle);
         double interval = 1 / (frequencyHz * samplesPerCycle);

@@ -1,0 +1,196 @@
+package nightlag.stages.moduli;
+
+import java.util.ArrayList;
+import java.util.List;
+import java.util.Map;
+import java.util.Optional;
+import java.util.OptionalDouble;
+import nightlag.stages.fault.Reason;
+import nightlag.stages.fault.ReductionFault;
+import nightlag.stages.geometry.DeformationMode;
+import nightlag.stages.geometry.SignalCorrection;
+import nightlag.stages.waveform.SignalFit;
+import nightlag.stages.waveform.Waveform;
+
+/** Points, from fitted records, from moduli reduced elsewhere, and from records that give none. */
+public final class ModulusPoints {
+    private ModulusPoints() {}
+
+    /**
+     * What is known about a point besides what was measured.
+     *
+     * @param key what it is called
+     * @param made the lot's date as tagged
+     * @param taggedTemperatureK the tag, K
+     * @param elapsedS time since the start of the run, s
+     */
+    public record Origin(
+            PointKey key, Optional<String> made, OptionalDouble taggedTemperatureK, OptionalDouble elapsedS) {}
+
+    /**
+     * The amplitudes a record is trusted with.
+     *
+     * @param deformation of its deformation channel, in that channel's SI unit
+     * @param load of its load channel, in that channel's SI unit
+     */
+    public record Ranges(Optional<SignalRange> deformation, Optional<SignalRange> load) {
+        /** The ranges of the signals a record holds. */
+        public static <D, L> Ranges of(
+                Map<D, SignalRange> deformation, D deformationSignal, Map<L, SignalRange> load, L loadSignal) {
+            return new Ranges(
+                    Optional.ofNullable(deformation.get(deformationSignal)), Optional.ofNullable(load.get(loadSignal)));
+        }
+    }
+
+    /**
+     * The point of a fitted record.
+     *
+     * @throws ReductionFault if the corrected amplitudes give no modulus
+     */
+    public static ModulusPoint of(
+            Origin origin,
+            Waveform waveform,
+            SignalFit fit,
+            SignalCorrection correction,
+            Ranges ranges,
+            ScreeningPlan plan)
+            throws ReductionFault {
+        StressHarmonics stress = new StressHarmonics(fit, correction);
+        List<Harmonic> harmonics = stress.harmonics();
+        Screening screening = Screening.of(
+                fit,
+                harmonics,
+                stress.inertiaRatio(),
+                stress.complianceRatio(),
+                ranges.deformation(),
+                ranges.load(),
+                plan);
+        Moduli moduli = stress.moduli();
+        List<Reason> reasons = new ArrayList<>(screening.reasons());
+        reasons.addAll(fit.notes());
+        reasons.addAll(signs(moduli));
+        return new ModulusPoint(
+                origin.key(),
+                origin.made(),
+                correction.deformationMode(),
+                fit.meanTemperatureK().isPresent() ? fit.meanTemperatureK() : origin.taggedTemperatureK(),
+                origin.taggedTemperatureK(),
+                OptionalDouble.of(fit.frequencyHz()),
+                origin.elapsedS(),
+                OptionalDouble.of(stress.strainAmplitude()),
+                OptionalDouble.of(stress.stressAmplitudePa()),
+                Optional.of(moduli),
+                harmonics,
+                screening.quality(),
+                screening.flags(),
+                OptionalDouble.of(fit.cyclesUsed()),
+                fit.samplesUsed(),
+                OptionalDouble.of(fit.screening().deformationSnrDb()),
+                OptionalDouble.of(fit.screening().loadSnrDb()),
+                OptionalDouble.of(fit.degreesOfFreedom()),
+                reasons,
+                screening.quality() == Quality.SOUND ? List.of() : Loop.of(waveform, fit, correction.at(0)));
+    }
+
+    /**
+     * The point of a row of moduli reduced elsewhere. It is sound unless it gives no modulus.
+     *
+     * @param frequencyHz frequency, Hz
+     * @param moduli as given
+     * @param strainAmplitude as given
+     */
+    public static ModulusPoint given(
+            Origin origin,
+            DeformationMode deformation,
+            double frequencyHz,
+            Moduli moduli,
+            OptionalDouble strainAmplitude) {
+        if (!(frequencyHz > 0 && frequencyHz < Double.POSITIVE_INFINITY)) {
+            return unusable(
+                    origin,
+                    deformation,
+                    OptionalDouble.empty(),
+                    ModuliReason.MODULI_FREQUENCY_NOT_POSITIVE.with(frequencyHz));
+        }
+        OptionalDouble frequency = OptionalDouble.of(frequencyHz);
+        if (!moduli.complex().isFinite()) {
+            return unusable(
+                    origin,
+                    deformation,
+                    frequency,
+                    ModuliReason.MODULI_NOT_FINITE.with(moduli.storagePa(), moduli.lossPa()));
+        }
+        if (moduli.magnitudePa() == 0) {
+            return unusable(origin, deformation, frequency, ModuliReason.MODULI_ZERO.with());
+        }
+        OptionalDouble stress = strainAmplitude.isPresent()
+                ? OptionalDouble.of(strainAmplitude.getAsDouble() * moduli.magnitudePa())
+                : OptionalDouble.empty();
+        return point(
+                origin,
+                deformation,
+                frequency,
+                strainAmplitude,
+                stress,
+                Optional.of(moduli),
+                Quality.SOUND,
+                signs(moduli));
+    }
+
+    /** A record that can be read but gives no modulus. */
+    public static ModulusPoint unusable(
+            Origin origin, DeformationMode deformation, OptionalDouble frequencyHz, Reason reason) {
+        return point(
+                origin,
+                deformation,
+                frequencyHz,
+                OptionalDouble.empty(),
+                OptionalDouble.empty(),
+                Optional.empty(),
+                Quality.UNUSABLE,
+                List.of(reason));
+    }
+
+    private static ModulusPoint point(
+            Origin origin,
+            DeformationMode deformation,
+            OptionalDouble frequencyHz,
+            OptionalDouble strainAmplitude,
+            OptionalDouble stressAmplitudePa,
+            Optional<Moduli> moduli,
+            Quality quality,
+            List<Reason> reasons) {
+        return new ModulusPoint(
+                origin.key(),
+                origin.made(),
+                deformation,
+                origin.taggedTemperatureK(),
+                origin.taggedTemperatureK(),
+                frequencyHz,
+                origin.elapsedS(),
+                strainAmplitude,
+                stressAmplitudePa,
+                moduli,
+                List.of(),
+                quality,
+                List.of(),
+                OptionalDouble.empty(),
+                0,
+                OptionalDouble.empty(),
+                OptionalDouble.empty(),
+                OptionalDouble.empty(),
+                reasons,
+                List.of());
+    }
+
+    private static List<Reason> signs(Moduli moduli) {
+        List<Reason> reasons = new ArrayList<>();
+        if (moduli.lossPa() < 0) {
+            reasons.add(ModuliReason.MODULI_LOSS_NEGATIVE.with(moduli.lossPa()));
+        }
+        if (moduli.storagePa() < 0) {
+            reasons.add(ModuliReason.MODULI_STORAGE_NEGATIVE.with(moduli.storagePa()));
+        }
+        return reasons;
+    }
+}

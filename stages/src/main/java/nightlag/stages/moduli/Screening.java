@@ -1,0 +1,149 @@
+package nightlag.stages.moduli;
+
+import java.util.ArrayList;
+import java.util.Comparator;
+import java.util.List;
+import java.util.Locale;
+import java.util.Optional;
+import java.util.OptionalDouble;
+import nightlag.stages.fault.Reason;
+import nightlag.stages.waveform.ScreeningFigures;
+import nightlag.stages.waveform.ScreeningFigures.Figure;
+import nightlag.stages.waveform.SignalFit;
+
+/**
+ * The flags of a point and what they make of it. A flag is raised where its figure is strictly beyond its limit; figures
+ * that noise alone can feign (harmonics, drift, trend, frequency) must also exceed three of their own uncertainties.
+ */
+final class Screening {
+    private static final OptionalDouble NEVER = OptionalDouble.empty();
+
+    private final List<Flag> flags = new ArrayList<>();
+    private final List<Reason> reasons = new ArrayList<>();
+    private Quality quality = Quality.SOUND;
+
+    private Screening() {}
+
+    /** The flags, in the order of {@link Flag}. */
+    List<Flag> flags() {
+        return flags;
+    }
+
+    /** The figure and the threshold behind each. */
+    List<Reason> reasons() {
+        return reasons;
+    }
+
+    /** What they make of the point. */
+    Quality quality() {
+        return quality;
+    }
+
+    /**
+     * Screens one record.
+     *
+     * @param stress orders of the stress
+     * @param inertiaRatio inertia's load over the specimen's own
+     * @param complianceRatio the frame's share of the movement
+     * @param deformationRange trusted amplitudes of the deformation channel
+     * @param loadRange trusted amplitudes of the load channel
+     */
+    static Screening of(
+            SignalFit fit,
+            List<Harmonic> stress,
+            double inertiaRatio,
+            double complianceRatio,
+            Optional<SignalRange> deformationRange,
+            Optional<SignalRange> loadRange,
+            ScreeningPlan plan) {
+        ScreeningFigures figures = fit.screening();
+        Screening screening = new Screening();
+        screening.below(ScreeningReason.SCREENING_FEW_CYCLES, fit.cyclesUsed(), plan.minCycles());
+        screening.above(
+                ScreeningReason.SCREENING_CLIPPED, figures.clippedShare() + figures.spikeShare(), plan.clipped());
+        screening.above(ScreeningReason.SCREENING_GAPS, figures.gapShare(), plan.gaps());
+        screening.above(ScreeningReason.SCREENING_UNEVEN_CLOCK, figures.clockJitter(), plan.clock());
+        screening.below(
+                ScreeningReason.SCREENING_WEAK_SIGNAL,
+                Math.min(figures.deformationSnrDb(), figures.loadSnrDb()),
+                plan.snrDb());
+        screening.above(ScreeningReason.SCREENING_DRIFTING, figures.baseline(), plan.baseline());
+        figures.cycleTrend()
+                .ifPresent(trend -> screening.above(ScreeningReason.SCREENING_UNSETTLED, trend, plan.cycleTrend()));
+        for (Harmonic harmonic : stress) {
+            if (harmonic.order() == 3) {
+                screening.above(ScreeningReason.SCREENING_NONLINEAR, figure(harmonic), plan.thirdHarmonic());
+            }
+        }
+        stress.stream()
+                .filter(harmonic -> harmonic.order() % 2 == 0)
+                .map(Screening::figure)
+                .filter(Figure::significant)
+                .max(Comparator.comparingDouble(Figure::value))
+                .ifPresent(largest ->
+                        screening.above(ScreeningReason.SCREENING_EVEN_HARMONICS, largest, plan.evenHarmonics()));
+        screening.above(ScreeningReason.SCREENING_INERTIA_HEAVY, inertiaRatio, plan.inertia());
+        screening.above(ScreeningReason.SCREENING_COMPLIANCE_HEAVY, complianceRatio, plan.compliance());
+        screening.outOf(deformationRange, "deformation", fit.deformation()[0].abs());
+        screening.outOf(loadRange, "load", fit.load()[0].abs());
+        figures.temperatureWanderK()
+                .ifPresent(wander -> screening.above(
+                        ScreeningReason.SCREENING_TEMPERATURE_WANDER, wander, plan.temperatureWanderK()));
+        figures.frequencyMismatch()
+                .ifPresent(mismatch -> screening.above(
+                        ScreeningReason.SCREENING_FREQUENCY_MISMATCH, mismatch, plan.frequencyMismatch()));
+        return screening;
+    }
+
+    private static Figure figure(Harmonic harmonic) {
+        return new Figure(
+                harmonic.relativeIntensity(), harmonic.relativeIntensityU().orElse(0));
+    }
+
+    private void above(ScreeningReason reason, Figure figure, Threshold limit) {
+        if (figure.significant()) {
+            above(reason, figure.value(), limit);
+        }
+    }
+
+    private void above(ScreeningReason reason, double figure, Threshold limit) {
+        if (figure > limit.doubtful()) {
+            boolean unusable =
+                    limit.unusable().isPresent() && figure > limit.unusable().getAsDouble();
+            raise(reason, figure, limit.doubtful(), unusable ? limit.unusable() : NEVER);
+        }
+    }
+
+    private void below(ScreeningReason reason, double figure, Threshold limit) {
+        if (figure < limit.doubtful()) {
+            boolean unusable =
+                    limit.unusable().isPresent() && figure < limit.unusable().getAsDouble();
+            raise(reason, figure, limit.doubtful(), unusable ? limit.unusable() : NEVER);
+        }
+    }
+
+    private void outOf(Optional<SignalRange> range, String channel, double amplitude) {
+        if (range.isPresent()
+                && (amplitude < range.get().low() || amplitude > range.get().high())) {
+            double end = amplitude < range.get().low()
+                    ? range.get().low()
+                    : range.get().high();
+            raise(ScreeningReason.SCREENING_OUT_OF_RANGE, amplitude, end, NEVER, channel);
+        }
+    }
+
+    private void raise(
+            ScreeningReason reason, double figure, double doubtful, OptionalDouble unusable, Object... more) {
+        Quality verdict = unusable.isPresent() ? Quality.UNUSABLE : Quality.DOUBTFUL;
+        List<Object> parts = new ArrayList<>(
+                List.of(figure, unusable.orElse(doubtful), verdict.name().toLowerCase(Locale.ROOT)));
+        parts.addAll(List.of(more));
+        reasons.add(reason.with(parts.toArray()));
+        if (!flags.contains(reason.flag())) {
+            flags.add(reason.flag());
+        }
+        if (verdict.compareTo(quality) > 0) {
+            quality = verdict;
+        }
+    }
+}

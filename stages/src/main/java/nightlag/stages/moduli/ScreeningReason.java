@@ -1,0 +1,45 @@
+package nightlag.stages.moduli;
+
+import nightlag.stages.fault.ReasonCode;
+
+/**
+ * The figure and the threshold behind each flag. Parts: {0} figure, {1} threshold passed, {2} what the point becomes by it.
+ */
+public enum ScreeningReason implements ReasonCode {
+    SCREENING_FEW_CYCLES(Flag.FEW_CYCLES, "{0} cycles used, {1} wanted"),
+    SCREENING_CLIPPED(Flag.CLIPPED, "{0} of the samples stand at a channel''s limit or are spikes, the limit is {1}"),
+    SCREENING_GAPS(Flag.GAPS, "{0} of the record is missing, the limit is {1}"),
+    SCREENING_UNEVEN_CLOCK(Flag.UNEVEN_CLOCK, "the sampling interval scatters by {0} of its mean, the limit is {1}"),
+    SCREENING_WEAK_SIGNAL(Flag.WEAK_SIGNAL, "{0} dB from signal to noise, {1} dB wanted"),
+    SCREENING_DRIFTING(Flag.DRIFTING, "the mean moves by {0} of the amplitude, the limit is {1}"),
+    SCREENING_UNSETTLED(Flag.UNSETTLED, "the modulus changes by {0} over the record, the limit is {1}"),
+    SCREENING_NONLINEAR(Flag.NONLINEAR, "the third harmonic is {0} of the first, the limit is {1}"),
+    SCREENING_EVEN_HARMONICS(Flag.EVEN_HARMONICS, "an even harmonic is {0} of the first, the limit is {1}"),
+    SCREENING_INERTIA_HEAVY(
+            Flag.INERTIA_HEAVY, "the load that inertia takes is {0} times the specimen''s own, the limit is {1}"),
+    SCREENING_COMPLIANCE_HEAVY(Flag.COMPLIANCE_HEAVY, "the frame makes {0} of the whole movement, the limit is {1}"),
+    /** Parts: {0} amplitude, {1} end of the range it lies beyond, {2} what the point becomes, {3} channel. */
+    SCREENING_OUT_OF_RANGE(Flag.OUT_OF_RANGE, "the amplitude of the {3} is {0}, the range ends at {1} (SI)"),
+    SCREENING_TEMPERATURE_WANDER(
+            Flag.TEMPERATURE_WANDER, "the temperature moves by {0} K over the record, the limit is {1} K"),
+    SCREENING_FREQUENCY_MISMATCH(
+            Flag.FREQUENCY_MISMATCH, "the frequency is off the tagged one by {0} of it, the limit is {1}");
+
+    private final Flag flag;
+    private final String template;
+
+    ScreeningReason(Flag flag, String figures) {
+        this.flag = flag;
+        this.template = flag.word() + ": " + figures + " ({2})";
+    }
+
+    /** The flag it explains. */
+    public Flag flag() {
+        return flag;
+    }
+
+    @Override
+    public String template() {
+        return template;
+    }
+}
