@@ -25,7 +25,7 @@ final class Alder {
 
     static void addTo(Map<String, byte[]> files) {
         StringBuilder text = new StringBuilder(
-                        "\uFEFFGrade,Lot,Specimen,Temperature,Frequency,Complex modulus,Phase angle,")
+                        "\uFEFFGrade,Lot,Specimen,Temperature,Frequency,Storage modulus,Loss modulus,")
                 .append("u storage,u loss\r\n");
         Noise noise = new Noise("partner-table/alder-2026-02.csv".hashCode());
         lot(text, "A12-77", 1, noise);
@@ -52,10 +52,8 @@ final class Alder {
                 text.append("Alder 12,").append(lot).append(",1,");
                 text.append(Text.fixed(celsius, 1)).append(',');
                 text.append(Text.fixed(frequency, 1)).append(',');
-                text.append(Text.significant(1e-6 * StrictMath.hypot(storage, loss), 6))
-                        .append(',');
-                text.append(Text.fixed(StrictMath.toDegrees(StrictMath.atan2(loss, storage)), 4))
-                        .append(',');
+                text.append(Text.significant(1e-6 * storage, 6)).append(',');
+                text.append(Text.significant(1e-6 * loss, 6)).append(',');
                 text.append(Text.significant(1e-6 * RELATIVE_U * modulus.re(), 3))
                         .append(',');
                 text.append(Text.significant(1e-6 * RELATIVE_U * modulus.im(), 3))
