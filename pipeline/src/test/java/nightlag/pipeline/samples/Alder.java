@@ -15,6 +15,7 @@ final class Alder {
     static final double EXPONENT = 0.6;
     static final double ACTIVATION_J_PER_MOL = 95e3;
     static final double REFERENCE_C = 25;
+    static final double SECOND_LOT_TIME = 1.08;
 
     private static final double GAS_CONSTANT = 8.31446261815324;
     private static final double[] TEMPERATURES_C = {5, 15, 25, 35, 45};
@@ -29,7 +30,7 @@ final class Alder {
                 .append("u storage,u loss\r\n");
         Noise noise = new Noise("partner-table/alder-2026-02.csv".hashCode());
         lot(text, "A12-77", 1, noise);
-        lot(text, "A12-78", 1.08, noise);
+        lot(text, "A12-78", SECOND_LOT_TIME, noise);
         files.put("partner-table/alder-2026-02.csv", text.toString().getBytes(StandardCharsets.UTF_8));
     }
 

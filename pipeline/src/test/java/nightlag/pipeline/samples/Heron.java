@@ -13,6 +13,7 @@ final class Heron {
     static final Maxwell MELT =
             new Maxwell(0, new double[] {1.4e5, 7.5e4, 3.0e4, 8e3, 9e2}, new double[] {3e-4, 2e-3, 1.2e-2, 7e-2, 0.35});
 
+    static final Maxwell SECOND_LOT = MELT.scaled(1.06, 1.15);
     static final double REFERENCE_C = 190;
     static final double WLF_C1 = 4.1;
     static final double WLF_C2 = 260;
@@ -35,18 +36,17 @@ final class Heron {
                 put(files, record("H3-0417", "A", isotherm, step, 5.3, MELT));
             }
         }
-        Maxwell second = MELT.scaled(1.06, 1.15);
         for (int step = 1; step <= FREQUENCIES_HZ.length; step++) {
-            put(files, record("H3-0418", "A", 190, step, 5.3, second));
+            put(files, record("H3-0418", "A", 190, step, 5.3, SECOND_LOT));
         }
         for (double isotherm : new double[] {175, 205}) {
             for (int step : SHORT_SWEEP) {
                 // somebody stopped the slowest one at 175 °C early
                 double cycles = isotherm == 175 && step == 7 ? 3.2 : 5.3;
-                put(files, record("H3-0418", "A", isotherm, step, cycles, second));
+                put(files, record("H3-0418", "A", isotherm, step, cycles, SECOND_LOT));
             }
         }
-        Sample spoilt = record("H3-0418", "B", 190, 1, 5.3, second);
+        Sample spoilt = record("H3-0418", "B", 190, 1, 5.3, SECOND_LOT);
         put(files, new Sample(spoilt.path(), overloaded(spoilt.text())));
     }
 
