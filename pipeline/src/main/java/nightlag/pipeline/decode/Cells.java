@@ -88,6 +88,19 @@ final class Cells {
         count++;
     }
 
+    /** A text without the blanks around it. */
+    static String trim(String text) {
+        int start = 0;
+        int end = text.length();
+        while (start < end && blank(text.charAt(start))) {
+            start++;
+        }
+        while (end > start && blank(text.charAt(end - 1))) {
+            end--;
+        }
+        return text.substring(start, end);
+    }
+
     /** Whether a character is blank: white space, or one of the spaces that do not break a line. */
     static boolean blank(char c) {
         return c <= ' ' || (c >= 0x80 && (Character.isWhitespace(c) || Character.isSpaceChar(c)));

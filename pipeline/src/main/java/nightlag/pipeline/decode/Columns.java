@@ -39,6 +39,9 @@ record Columns(Complaints complaints, List<String> headers, int headerLine, List
         int[] found = IntStream.range(0, headers.size())
                 .filter(i -> headers.get(i).equals(name))
                 .toArray();
+        if (headerLine == 0) {
+            throw complaints.at(0, column.toString(), "no header row", "a column by its number");
+        }
         if (found.length == 0) {
             throw complaints.at(headerLine, column.toString(), "no such column", "one of the header's: " + listed());
         }

@@ -55,8 +55,11 @@ final class ModuliRows implements RowTaker {
         if (frequencyHz.isEmpty() && !has(ChannelName.FREQUENCY)) {
             throw facts.recordFacts().missing(TagName.FREQUENCY, line);
         }
+        if (temperatureK.isEmpty() && !has(ChannelName.TEMPERATURE)) {
+            throw facts.recordFacts().missing(TagName.TEMPERATURE, line);
+        }
         boolean complete = frequencyHz.isPresent()
-                && (temperatureK.isPresent() || !has(ChannelName.TEMPERATURE))
+                && temperatureK.isPresent()
                 && read.keySet().containsAll(pair());
         if (!complete) {
             tally.leaveOut();

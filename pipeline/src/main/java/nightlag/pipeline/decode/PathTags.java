@@ -29,7 +29,7 @@ final class PathTags {
         } catch (TooManySteps e) {
             throw spot.complaint(
                     "path_pattern takes for ever on " + Complaints.shown(path),
-                    "a pattern without repetitions inside repetitions: " + pattern.get());
+                    "one with fewer repetitions than " + pattern.get());
         } catch (IllegalArgumentException e) {
             throw spot.complaint("no group '" + group + "' in path_pattern", "a group of " + pattern.get());
         }

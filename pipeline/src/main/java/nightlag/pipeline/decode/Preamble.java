@@ -79,14 +79,14 @@ final class Preamble {
             return Optional.empty();
         }
         List<String> others = cells.subList(1, cells.size());
-        String rest = cells.get(0).substring(label.length()).strip();
+        String rest = Cells.trim(cells.get(0).substring(label.length()));
         if (rest.isEmpty()) {
             return others.isEmpty() ? Optional.empty() : Optional.of(cells(others, number));
         }
         if (rest.charAt(0) != ':' && rest.charAt(0) != '=') {
             return Optional.empty();
         }
-        String value = rest.substring(1).strip();
+        String value = Cells.trim(rest.substring(1));
         return Optional.of(
                 value.isEmpty()
                         ? cells(others, number)
@@ -96,7 +96,7 @@ final class Preamble {
     /** What stands behind a colon or an equals sign; a delimiter may follow at once. */
     private Entry marked(String rest, int number) throws DecodeException {
         if (delimiter == ' ') {
-            String value = rest.strip();
+            String value = Cells.trim(rest);
             List<String> cells = value.startsWith("\"") ? splitter.splitLoosely(value) : List.of(value);
             return cells(cells, number);
         }

@@ -29,7 +29,7 @@ final class Quantities {
             throw notANumber(text, decimal, spot);
         }
         double number = Numerals.parse(parts.group(1), decimal);
-        String written = parts.group(2).strip();
+        String written = Cells.trim(parts.group(2));
         if (!written.isEmpty()) {
             return finite(UnitText.required(written, kind, spot).toSi(number), text, decimal, spot);
         }

@@ -7,6 +7,7 @@ import java.util.Map;
 import java.util.Optional;
 import java.util.OptionalDouble;
 import java.util.TreeMap;
+import java.util.stream.Collectors;
 import nightlag.pipeline.config.Instrument;
 import nightlag.pipeline.config.QuantityKind;
 import nightlag.pipeline.config.TagName;
@@ -106,7 +107,10 @@ final class TagReader {
             throw spot.complaint(
                     "no such column",
                     "one of the run sheet's: "
-                            + row.cells().keySet().stream().sorted().toList());
+                            + row.cells().keySet().stream()
+                                    .sorted()
+                                    .map(Complaints::shown)
+                                    .collect(Collectors.joining(", ")));
         }
         String from = "run sheet " + row.sheet() + ", line " + row.line() + ", column '" + source.column() + "'";
         return value(tag, cell, source.unit(), spot, from);
@@ -124,7 +128,7 @@ final class TagReader {
     /** Makes a value of a text, unless it is empty. */
     static Optional<TagValue> value(TagName tag, String text, Optional<Unit> unit, char decimal, Spot spot, String from)
             throws DecodeException {
-        String trimmed = text.strip();
+        String trimmed = Cells.trim(text);
         if (trimmed.isEmpty()) {
             return Optional.empty();
         }

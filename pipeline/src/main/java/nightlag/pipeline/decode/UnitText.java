@@ -33,12 +33,12 @@ final class UnitText {
 
     /** The text without brackets round it. */
     static String bare(String text) {
-        String symbol = text.strip();
+        String symbol = Cells.trim(text);
         for (int i = 0; i < BRACKETS.length(); i += 2) {
             if (symbol.length() >= 2
                     && symbol.charAt(0) == BRACKETS.charAt(i)
                     && symbol.charAt(symbol.length() - 1) == BRACKETS.charAt(i + 1)) {
-                symbol = symbol.substring(1, symbol.length() - 1).strip();
+                symbol = Cells.trim(symbol.substring(1, symbol.length() - 1));
             }
         }
         return symbol.equals("-") || symbol.equals("–") ? "1" : symbol;

@@ -37,6 +37,7 @@ final class WaveformRows implements RowTaker {
     private final ChannelColumn deformation;
     private final ChannelColumn load;
     private final Optional<ChannelColumn> temperature;
+    private final Optional<ChannelColumn> frequency;
     private final DeformationSignal deformationSignal;
     private final LoadSignal loadSignal;
     private final Optional<ColumnTag> divider;
@@ -50,6 +51,7 @@ final class WaveformRows implements RowTaker {
     private long rowOfRecord;
     private int rowsLeftOut;
     private double lastTime;
+    private double frequencyHz;
 
     /** For a file of the layout {@code single}, or {@code column} where a record ends when {@code divided}. */
     WaveformRows(FileFacts facts, boolean divided, Tally tally) throws DecodeException {
@@ -62,6 +64,7 @@ final class WaveformRows implements RowTaker {
         this.deformation = channels.get(deformationName);
         this.load = channels.get(loadName);
         this.temperature = Optional.ofNullable(channels.get(ChannelName.TEMPERATURE));
+        this.frequency = Optional.ofNullable(channels.get(ChannelName.FREQUENCY));
         this.deformationSignal = DEFORMATIONS.get(deformationName);
         this.loadSignal = LOADS.get(loadName);
         this.divider = divided ? Optional.of(facts.columnTag(TagName.POINT)) : Optional.empty();
@@ -83,6 +86,9 @@ final class WaveformRows implements RowTaker {
         goToRecord(cells, line);
         for (ColumnTag tag : columnTags) {
             tag.takeInto(values, cells, line);
+        }
+        if (frequency.isPresent()) {
+            takeFrequency(frequency.get(), cells, line);
         }
         double timeS = time.isPresent() ? clockS : rowOfRecord;
         rowOfRecord++;
@@ -129,6 +135,7 @@ final class WaveformRows implements RowTaker {
         rowOfRecord = 0;
         rowsLeftOut = 0;
         lastTime = Double.NEGATIVE_INFINITY;
+        frequencyHz = Double.NaN;
         if (divider.isPresent()) {
             String point = cells.text(divider.get().index());
             if (!pointsDone.add(point)) {
@@ -139,6 +146,18 @@ final class WaveformRows implements RowTaker {
                                 "the rows of one point together");
             }
         }
+    }
+
+    /** A frequency in a column of samples is the one the record was driven at; an empty cell says nothing. */
+    private void takeFrequency(ChannelColumn column, Cells cells, int line) throws DecodeException {
+        double hz = column.read(cells, line);
+        if (!Double.isNaN(hz) && !Double.isNaN(frequencyHz) && hz != frequencyHz) {
+            throw column.spot(line)
+                    .complaint(
+                            Complaints.shown(cells.text(column.index())) + ", not that of the rows before",
+                            "one frequency throughout a record");
+        }
+        frequencyHz = Double.isNaN(hz) ? frequencyHz : hz;
     }
 
     private void checkRise(double timeS, Cells cells, int line) throws DecodeException {
@@ -160,7 +179,7 @@ final class WaveformRows implements RowTaker {
                 samples.deformation(),
                 samples.load(),
                 samples.temperature(timeS),
-                RecordFacts.si(values, TagName.FREQUENCY),
+                Double.isNaN(frequencyHz) ? RecordFacts.si(values, TagName.FREQUENCY) : OptionalDouble.of(frequencyHz),
                 rowsLeftOut);
         tally.handOver(
                 new WaveformRecord(
