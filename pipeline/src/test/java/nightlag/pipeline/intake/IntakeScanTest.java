@@ -110,10 +110,14 @@ class IntakeScanTest {
         Files.move(folder.resolve("two"), inner);
         try {
             IntakeFiles found = IntakeScan.scan(intake("**/*.csv"));
-            assertThat(found.files()).extracting(RawFile::relativePath).containsExactly("a.csv", "one/" + deep + "/b.csv");
-            assertThat(found.unreadable()).singleElement().satisfies(problem -> assertThat(problem.sentence())
-                    .startsWith("bench/one/ddd")
-                    .contains("cannot be looked into"));
+            assertThat(found.files())
+                    .extracting(RawFile::relativePath)
+                    .containsExactly("a.csv", "one/" + deep + "/b.csv");
+            assertThat(found.unreadable())
+                    .singleElement()
+                    .satisfies(problem -> assertThat(problem.sentence())
+                            .startsWith("bench/one/ddd")
+                            .contains("cannot be looked into"));
         } finally {
             Files.move(inner, folder.resolve("two"));
         }
