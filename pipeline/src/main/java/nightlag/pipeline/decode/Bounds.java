@@ -8,8 +8,8 @@ final class Bounds {
     static final int LINE_CHARS = 1 << 20;
     /** Cells in one line. */
     static final int COLUMNS = 10_000;
-    /** Rows of one waveform: with four channels 64 MB. */
-    static final int RECORD_ROWS = 2_000_000;
+    /** Rows of one waveform: with four channels 32 MB, and as much again while they are handed over. */
+    static final int RECORD_ROWS = 1_000_000;
     /** Records of one file. */
     static final int RECORDS = 200_000;
     /** Characters in a tag. */
