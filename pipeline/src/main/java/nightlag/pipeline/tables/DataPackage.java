@@ -9,6 +9,7 @@ import com.fasterxml.jackson.databind.node.ArrayNode;
 import com.fasterxml.jackson.databind.node.ObjectNode;
 import java.io.IOException;
 import java.io.OutputStream;
+import java.math.BigDecimal;
 import java.util.Locale;
 
 /**
@@ -73,8 +74,8 @@ final class DataPackage {
         if (rule.required()) {
             constraints.put("required", true);
         }
-        rule.minimum().ifPresent(minimum -> constraints.put("minimum", minimum));
-        rule.maximum().ifPresent(maximum -> constraints.put("maximum", maximum));
+        rule.minimum().ifPresent(minimum -> constraints.put("minimum", decimal(minimum)));
+        rule.maximum().ifPresent(maximum -> constraints.put("maximum", decimal(maximum)));
         rule.pattern().ifPresent(pattern -> constraints.put("pattern", pattern));
         if (!rule.words().isEmpty()) {
             rule.words().forEach(constraints.putArray("enum")::add);
@@ -82,6 +83,10 @@ final class DataPackage {
         if (!constraints.isEmpty()) {
             field.set("constraints", constraints);
         }
+    }
+
+    private static BigDecimal decimal(double number) {
+        return new BigDecimal(Cells.number(number));
     }
 
     private void addProvenance(Provenance provenance) {

@@ -18,9 +18,16 @@ final class FilesTable {
                     Column.text("instrument", "instrument file it was read by", NightFileRow::instrument)
                             .required()
                             .asKey(),
-                    Column.text("grade", "its material grade; empty where it holds more than one", NightFileRow::grade),
-                    Column.text("lot", "its lot; empty where it holds more than one", NightFileRow::lot),
-                    Column.text("specimen", "its specimen; empty where it holds more than one", NightFileRow::specimen),
+                    Column.text(
+                            "grade",
+                            "its material grade; empty where it holds more than one, or none is known",
+                            NightFileRow::grade),
+                    Column.text(
+                            "lot", "its lot; empty where it holds more than one, or none is known", NightFileRow::lot),
+                    Column.text(
+                            "specimen",
+                            "its specimen; empty where it holds more than one, or none is known",
+                            NightFileRow::specimen),
                     Column.word(
                             "status",
                             "what became of it",

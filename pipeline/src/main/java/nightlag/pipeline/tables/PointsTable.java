@@ -116,7 +116,7 @@ final class PointsTable {
                                     point -> point.quality().word()),
                             Column.<ModulusPoint>text(
                                             "flags",
-                                            "why it is not sound, words between semicolons",
+                                            "why it is not sound, words between semicolons: " + flagWords(", "),
                                             PointsTable::flags)
                                     .matching(flagPattern()),
                             Column.<ModulusPoint>optional(
@@ -192,7 +192,11 @@ final class PointsTable {
     }
 
     private static String flagPattern() {
-        String any = Arrays.stream(Flag.values()).map(Flag::word).collect(Collectors.joining("|", "(", ")"));
+        String any = "(" + flagWords("|") + ")";
         return "^" + any + "(;" + any + ")*$";
+    }
+
+    private static String flagWords(String between) {
+        return Arrays.stream(Flag.values()).map(Flag::word).collect(Collectors.joining(between));
     }
 }
