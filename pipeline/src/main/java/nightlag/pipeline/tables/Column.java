@@ -7,6 +7,7 @@ import java.util.OptionalDouble;
 import java.util.function.Function;
 import java.util.function.ToDoubleFunction;
 import java.util.function.ToLongFunction;
+import nightlag.stages.sweep.NaturalOrder;
 
 /**
  * One column of a table, declared once: the table file, the data package and the docs all come from here.

@@ -5,6 +5,7 @@ import java.util.List;
 import nightlag.stages.moduli.Harmonic;
 import nightlag.stages.moduli.ModulusPoint;
 import nightlag.stages.moduli.PointKey;
+import nightlag.stages.sweep.NaturalOrder;
 
 /** The declaration of {@code harmonics}. */
 final class HarmonicsTable {

@@ -3,6 +3,7 @@ package nightlag.pipeline.tables;
 import java.util.Comparator;
 import java.util.List;
 import nightlag.stages.moduli.Marker;
+import nightlag.stages.sweep.NaturalOrder;
 
 /** The declaration of {@code markers}. */
 final class MarkersTable {

@@ -12,6 +12,7 @@ import nightlag.stages.moduli.Moduli;
 import nightlag.stages.moduli.ModuliCovariance;
 import nightlag.stages.moduli.ModulusPoint;
 import nightlag.stages.moduli.Quality;
+import nightlag.stages.sweep.PointOrder;
 
 /** The declaration of {@code points}. */
 final class PointsTable {
@@ -150,7 +151,8 @@ final class PointsTable {
                                             "1",
                                             "effective degrees of freedom behind the standard uncertainties",
                                             ModulusPoint::degreesOfFreedom)
-                                    .atLeast(0))));
+                                    .atLeast(0))),
+            PointOrder.BY_KEY);
 
     private PointsTable() {}
 
