@@ -11,6 +11,7 @@ import java.util.Collection;
 import java.util.Collections;
 import java.util.Comparator;
 import java.util.List;
+import java.util.Optional;
 import nightlag.pipeline.archive.ArchiveException.Kind;
 import nightlag.stages.Reduction;
 
@@ -189,7 +190,7 @@ public final class Archive implements AutoCloseable {
         return Collections.unmodifiableList(files);
     }
 
-    private static ArchivedFile archivedFile(ResultSet row) throws SQLException {
+    private ArchivedFile archivedFile(ResultSet row) throws SQLException, ArchiveException {
         int column = 0;
         return new ArchivedFile(
                 new FileIdentity(row.getString(++column), row.getString(++column)),
@@ -199,7 +200,7 @@ public final class Archive implements AutoCloseable {
                 row.getLong(++column),
                 row.getString(++column),
                 row.getString(++column),
-                FileStatus.of(row.getString(++column)),
+                status(row.getString(++column)),
                 row.getString(++column),
                 row.getInt(++column),
                 row.getString(++column),
@@ -207,6 +208,15 @@ public final class Archive implements AutoCloseable {
                 row.getString(++column),
                 row.getLong(++column),
                 row.getLong(++column));
+    }
+
+    private FileStatus status(String word) throws ArchiveException {
+        Optional<FileStatus> status = FileStatus.of(word);
+        if (status.isEmpty()) {
+            throw new ArchiveException(
+                    Kind.DAMAGED, "the archive " + file + " is damaged: \"" + word + "\" is no status of a file");
+        }
+        return status.get();
     }
 
     /** Does the work and commits it; after a failure the archive is as it was before. */

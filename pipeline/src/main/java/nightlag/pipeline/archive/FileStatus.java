@@ -1,5 +1,8 @@
 package nightlag.pipeline.archive;
 
+import java.util.Arrays;
+import java.util.Optional;
+
 /** What the archive knows of a raw file. */
 public enum FileStatus {
     REDUCED("reduced"),
@@ -16,13 +19,10 @@ public enum FileStatus {
         return word;
     }
 
-    /** The status with this word. */
-    static FileStatus of(String word) {
-        for (FileStatus status : values()) {
-            if (status.word.equals(word)) {
-                return status;
-            }
-        }
-        throw new IllegalArgumentException("\"" + word + "\" is no status of a file");
+    /** The status with this word, if it is one. */
+    static Optional<FileStatus> of(String word) {
+        return Arrays.stream(values())
+                .filter(status -> status.word.equals(word))
+                .findFirst();
     }
 }

@@ -69,12 +69,11 @@ final class FolderSwap implements AutoCloseable {
         forceFolder();
     }
 
-    private static void replace(Path beside, Path target) throws IOException {
+    private static void replace(Path beside, Path target) throws TableInUseException {
         try {
             Files.move(beside, target, StandardCopyOption.ATOMIC_MOVE, StandardCopyOption.REPLACE_EXISTING);
         } catch (IOException cause) {
-            throw new IOException(
-                    "cannot replace " + target + " (it may be open in another program): " + cause.getMessage(), cause);
+            throw new TableInUseException(target, cause);
         }
     }
 

@@ -32,7 +32,8 @@ public final class LotTables {
      * @param results the results folder
      * @param result what the lot became
      * @param provenance what it was made from
-     * @throws IOException if a table cannot be written or replaced; it names the file
+     * @throws TableInUseException if a table is written but cannot be replaced; it names the table
+     * @throws IOException if a table cannot be written
      */
     public static void write(Path results, LotResult result, Provenance provenance) throws IOException {
         DataPackage dataPackage = new DataPackage(provenance);

@@ -11,7 +11,8 @@ public final class NightTables {
     /**
      * Writes {@code files.csv} into a night's folder, sorted by file.
      *
-     * @throws IOException if it cannot be written; it names the file
+     * @throws TableInUseException if it is written but cannot be replaced
+     * @throws IOException if it cannot be written
      */
     public static void writeFiles(Path nightFolder, List<NightFileRow> rows) throws IOException {
         try (FolderSwap swap = FolderSwap.into(nightFolder)) {

@@ -122,6 +122,15 @@ class ArchiveFileTest {
     }
 
     @Test
+    void aStatusThatIsNoneIsDamage() throws ArchiveException, SQLException {
+        fill(2);
+        execute("UPDATE file SET status = 'fine'");
+
+        assertThat(failureToRead().kind()).isEqualTo(Kind.DAMAGED);
+        assertThat(failureToRead()).hasMessageContaining("\"fine\" is no status of a file");
+    }
+
+    @Test
     void aFolderInItsPlaceCannotBeOpened() throws IOException {
         Files.createDirectory(file());
 

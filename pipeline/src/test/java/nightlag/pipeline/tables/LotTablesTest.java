@@ -249,7 +249,7 @@ class LotTablesTest {
         Files.createDirectories(folder.resolve("harmonics.csv").resolve("in the way"));
 
         assertThatThrownBy(() -> write(new LotResult(List.of(), List.of(), List.of(), List.of())))
-                .isInstanceOf(IOException.class)
+                .isInstanceOf(TableInUseException.class)
                 .hasMessageContaining("cannot replace " + folder.resolve("harmonics.csv"));
 
         try (Stream<Path> left = Files.list(folder)) {
