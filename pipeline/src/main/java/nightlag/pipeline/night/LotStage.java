@@ -1,7 +1,6 @@
 package nightlag.pipeline.night;
 
 import java.io.IOException;
-import java.nio.file.AccessDeniedException;
 import java.nio.file.Files;
 import java.nio.file.Path;
 import java.util.ArrayList;
@@ -17,6 +16,7 @@ import nightlag.pipeline.config.Fingerprints;
 import nightlag.pipeline.config.Grade;
 import nightlag.pipeline.tables.LotTables;
 import nightlag.pipeline.tables.Provenance;
+import nightlag.pipeline.tables.TableInUseException;
 import nightlag.stages.Conclude;
 import nightlag.stages.LotResult;
 import nightlag.stages.Reduction;
@@ -120,9 +120,9 @@ final class LotStage {
         LotResult result = concluded.result().get();
         try {
             LotTables.write(configuration.results(), result, provenance(lot, grade));
-        } catch (AccessDeniedException e) {
-            // on Windows: a table is open in another program; the lot stays due
-            tally.notConcluded(lot, "a table cannot be replaced: " + IoSentences.of(e));
+        } catch (TableInUseException e) {
+            // the lot stays due
+            tally.notConcluded(lot, e.getMessage());
             return;
         } catch (IOException e) {
             throw new NightFault(
