@@ -37,7 +37,7 @@ public final class DiscreteFit {
         }
         WeightedReadings weighted = new WeightedReadings(readings);
         ModeRefinement refinement = new ModeRefinement(weighted, plan.fitEquilibrium());
-        FittedModes modes = new ModeSearch(weighted, refinement).find(wanted);
+        FittedModes modes = new ModeSearch(weighted, refinement, plan.fitEquilibrium()).find(wanted);
         return new DiscreteSpectrum(weighted, refinement, modes);
     }
 }

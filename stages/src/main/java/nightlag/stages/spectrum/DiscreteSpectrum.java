@@ -4,6 +4,7 @@ import java.util.ArrayList;
 import java.util.List;
 import java.util.Locale;
 import java.util.OptionalDouble;
+import java.util.function.ToDoubleFunction;
 import nightlag.stages.moduli.Marker;
 
 /** The relaxation modes fitted to readings, the retardation modes that are their exact inverse, and what follows from both. */
@@ -65,99 +66,73 @@ public final class DiscreteSpectrum {
      */
     public List<Marker> markers(double temperatureK) {
         List<Marker> markers = new ArrayList<>();
-        double stiffness = relaxation.instantaneousModulusPa();
-        ModeUncertainty.Figure instantaneous =
-                new ModeUncertainty.Figure(stiffness, (g, time) -> new double[] {1, 0}, 1);
         if (relaxation.isLiquid()) {
-            double viscosity = relaxation.viscosityPaS();
-            double moment = relaxation.secondMomentPaS2();
             markers.add(marker(
                     "zero_shear_viscosity",
                     "Pa·s",
-                    "sum of g τ",
-                    slowEnd(),
+                    "sum of g τ" + counted() + slowEnd(),
                     temperatureK,
-                    new ModeUncertainty.Figure(viscosity, (g, time) -> new double[] {time, g}, 0)));
+                    RelaxationModes::viscosityPaS));
             markers.add(marker(
                     "steady_state_compliance",
                     "1/Pa",
-                    "sum of g τ² over the square of the sum of g τ",
-                    slowEnd(),
+                    "sum of g τ² over the square of the sum of g τ" + counted() + slowEnd(),
                     temperatureK,
-                    new ModeUncertainty.Figure(
-                            relaxation.steadyStateCompliancePerPa(),
-                            (g, time) -> new double[] {
-                                time * (time - 2 * moment / viscosity) / viscosity / viscosity,
-                                2 * g * (time - moment / viscosity) / viscosity / viscosity
-                            },
-                            0)));
+                    RelaxationModes::steadyStateCompliancePerPa));
             markers.add(marker(
                     "mean_relaxation_time",
                     "s",
-                    "sum of g τ² over the sum of g τ",
-                    slowEnd(),
+                    "sum of g τ² over the sum of g τ" + counted() + slowEnd(),
                     temperatureK,
-                    new ModeUncertainty.Figure(
-                            relaxation.meanTimeS(),
-                            (g, time) -> new double[] {
-                                time * (time - moment / viscosity) / viscosity,
-                                g * (2 * time - moment / viscosity) / viscosity
-                            },
-                            0)));
+                    RelaxationModes::meanTimeS));
         } else {
             markers.add(marker(
                     "equilibrium_modulus",
                     "Pa",
-                    "fitted together with the modes",
-                    slowEnd(),
+                    "fitted together with the modes" + counted() + slowEnd(),
                     temperatureK,
-                    new ModeUncertainty.Figure(relaxation.equilibriumPa(), (g, time) -> new double[] {0, 0}, 1)));
+                    RelaxationModes::equilibriumPa));
         }
         markers.add(marker(
                 "instantaneous_modulus",
                 "Pa",
-                relaxation.isLiquid() ? "sum of g" : "equilibrium modulus and sum of g",
-                fastEnd(),
+                (relaxation.isLiquid() ? "sum of g" : "equilibrium modulus and sum of g") + counted() + fastEnd(),
                 temperatureK,
-                instantaneous));
+                RelaxationModes::instantaneousModulusPa));
         markers.add(marker(
                 "instantaneous_compliance",
                 "1/Pa",
-                "one over the instantaneous modulus",
-                fastEnd(),
+                "one over the instantaneous modulus" + counted() + fastEnd(),
                 temperatureK,
-                new ModeUncertainty.Figure(
-                        retardation.instantaneousPerPa(),
-                        (g, time) -> new double[] {-1 / stiffness / stiffness, 0},
-                        -1 / stiffness / stiffness)));
+                modes -> 1 / modes.instantaneousModulusPa()));
         return markers;
     }
 
     private Marker marker(
             String property,
             String unit,
-            String how,
-            String caution,
+            String method,
             double temperatureK,
-            ModeUncertainty.Figure figure) {
-        String method = String.format(
-                Locale.ROOT,
-                "%s, %d relaxation mode%s, u from %s%s",
-                how,
-                relaxation.count(),
-                relaxation.count() == 1 ? "" : "s",
-                scatterKnown ? "the fit" : "the scatter about the fit",
-                caution);
+            ToDoubleFunction<RelaxationModes> figure) {
         return new Marker(
                 "",
                 "",
                 property,
                 OptionalDouble.of(temperatureK),
                 OptionalDouble.empty(),
-                figure.value(),
+                figure.applyAsDouble(relaxation),
                 uncertainty.of(figure),
                 unit,
                 method);
+    }
+
+    private String counted() {
+        return String.format(
+                Locale.ROOT,
+                ", %d relaxation mode%s, u from %s",
+                relaxation.count(),
+                relaxation.count() == 1 ? "" : "s",
+                scatterKnown ? "the fit" : "the scatter about the fit");
     }
 
     private String slowEnd() {

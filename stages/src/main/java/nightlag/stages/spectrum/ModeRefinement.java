@@ -109,6 +109,11 @@ final class ModeRefinement {
         return refine(start, 0, AT_LAST);
     }
 
+    /** The best fit with a further contribution of given strength that is not fitted; χ² is that of both together. */
+    FittedModes refineBeside(FittedModes start, double[] column, double strength) {
+        return new ModeRefinement(readings.less(column, strength), fitEquilibrium, shortest, longest).refine(start);
+    }
+
     private FittedModes refine(FittedModes start, double spring, double enough) {
         double weakest = Arrays.stream(start.strengths())
                 .filter(strength -> strength > 0)

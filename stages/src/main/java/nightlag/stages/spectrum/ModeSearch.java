@@ -22,13 +22,17 @@ final class ModeSearch {
     /** Steps down the ladder go on past the best set while they are no worse than this many modes. */
     private static final double PATIENCE_IN_MODES = 3;
 
+    private static final double AGAINST_A_SOLID = 25;
+
     private final WeightedReadings readings;
     private final ModeRefinement refinement;
+    private final boolean fitEquilibrium;
     private final double priceOfNumber;
 
-    ModeSearch(WeightedReadings readings, ModeRefinement refinement) {
+    ModeSearch(WeightedReadings readings, ModeRefinement refinement, boolean fitEquilibrium) {
         this.readings = readings;
         this.refinement = refinement;
+        this.fitEquilibrium = fitEquilibrium;
         this.priceOfNumber = Math.log(readings.rows());
     }
 
@@ -134,7 +138,20 @@ final class ModeSearch {
                 break;
             }
         }
-        return best;
+        return settled(best, variance);
+    }
+
+    /**
+     * Where an equilibrium modulus is wanted but the slowest mode took its place, the material is said to be a solid, and the
+     * modulus goes before the mode unless the readings speak against it by five standard deviations.
+     */
+    private FittedModes settled(FittedModes best, double variance) {
+        if (!fitEquilibrium || best.equilibrium() > 0 || best.count() < 2) {
+            return best;
+        }
+        FittedModes solid = fitted(best.timesWithout(best.count() - 1));
+        double against = (solid.chiSquared() - best.chiSquared()) / variance;
+        return solid.equilibrium() > 0 && against <= AGAINST_A_SOLID ? solid : best;
     }
 
     private double cost(FittedModes modes, double variance) {

@@ -1,37 +1,33 @@
 package nightlag.stages.spectrum;
 
 import java.util.ArrayList;
-import java.util.Collections;
+import java.util.Arrays;
 import java.util.List;
 import java.util.OptionalDouble;
-import nightlag.stages.numeric.Complex;
+import java.util.function.ToDoubleFunction;
 import nightlag.stages.numeric.LinearisedUncertainty;
 
 /**
  * Uncertainty of figures drawn from fitted modes: the linearised fit's covariance, times the scatter about the fit where
  * that is larger than the readings' own uncertainty, or where these have none.
  *
- * <p>Where the slowest mode lies beyond the window the data support, more could lie there unseen. The fit is then taken to
- * hold one further mode, half a decade further out than any fitted one may go, of strength zero give or take what the
- * readings leave open; its share enters the figures' uncertainty. The same at the fast end.
+ * <p>Where the slowest mode lies beyond the window the data support, more could lie there unseen: what the strongest
+ * {@link UnseenMode} would change is added in quadrature. The same at the fast end.
  */
 final class ModeUncertainty {
     /** What a logarithm of a strength or time is known to before the data: within a factor of e¹⁰. */
     private static final double PRIOR_U_OF_LOGARITHM = 10;
 
-    private static final double REACH = Math.pow(10, 1.5);
+    /** Step in a logarithm for a derivative; figures are smooth in them. */
+    private static final double STEP = 1e-5;
 
     private final FittedModes modes;
     private final LinearisedUncertainty linearised;
-    private final List<Double> unseenTimes;
     private final OptionalDouble scatter;
+    private final List<RelaxationModes> alternatives;
 
     ModeUncertainty(WeightedReadings readings, ModeRefinement refinement, FittedModes modes) {
         this.modes = modes;
-        this.unseenTimes = new ArrayList<>();
-        RelaxationModes material = RelaxationModes.of(modes.equilibrium(), modes.times(), modes.strengths());
-        List<double[]> jacobian = new ArrayList<>(List.of(refinement.jacobian(modes)));
-        List<Double> priors = new ArrayList<>(Collections.nCopies(modes.parameters(), PRIOR_U_OF_LOGARITHM));
         int free = readings.rows() - modes.parameters();
         double own = free > 0 ? Math.sqrt(modes.chiSquared() / free) : 0;
         if (readings.scatterKnown()) {
@@ -39,58 +35,55 @@ final class ModeUncertainty {
         } else {
             scatter = free > 0 ? OptionalDouble.of(own) : OptionalDouble.empty();
         }
-        double unit = scatter.orElse(1);
-        SupportedWindow window = SupportedWindow.of(readings.lowestFrequency(), readings.highestFrequency());
-        double slowest = modes.times()[modes.count() - 1];
-        if (slowest > window.longestS()) {
-            unseenTimes.add(REACH / readings.lowestFrequency());
-            jacobian.add(readings.mode(REACH / readings.lowestFrequency()));
-            priors.add(material.modulusPa(readings.lowestFrequency()).abs() / unit);
+        double[] priors = new double[modes.parameters()];
+        Arrays.fill(priors, PRIOR_U_OF_LOGARITHM);
+        linearised = new LinearisedUncertainty(refinement.jacobian(modes), priors);
+        alternatives = new ArrayList<>();
+        if (scatter.isPresent()) {
+            double variance = Math.max(readings.leastVariance(), scatter.getAsDouble() * scatter.getAsDouble());
+            UnseenMode unseen = new UnseenMode(readings, refinement, modes, variance);
+            SupportedWindow window = SupportedWindow.of(readings.lowestFrequency(), readings.highestFrequency());
+            if (modes.times()[modes.count() - 1] > window.longestS()) {
+                alternatives.add(unseen.slow());
+            }
+            if (modes.times()[0] < window.shortestS()) {
+                alternatives.add(unseen.fast());
+            }
         }
-        if (modes.times()[0] < window.shortestS()) {
-            Complex fastest = material.modulusPa(readings.highestFrequency());
-            unseenTimes.add(1 / (REACH * readings.highestFrequency()));
-            jacobian.add(readings.mode(1 / (REACH * readings.highestFrequency())));
-            priors.add(fastest.abs() * REACH / unit);
-        }
-        linearised = new LinearisedUncertainty(
-                jacobian.toArray(double[][]::new),
-                priors.stream().mapToDouble(Double::doubleValue).toArray());
     }
 
-    /**
-     * How a figure changes with the modes.
-     *
-     * @param value the figure
-     * @param byMode its derivative by a mode's strength and by its time, given both
-     * @param byEquilibrium its derivative by Ge
-     */
-    record Figure(double value, ModeDerivatives byMode, double byEquilibrium) {}
-
-    /** Derivatives of a figure by the strength and the time of a mode. */
-    interface ModeDerivatives {
-        /** ∂/∂g and ∂/∂τ of a mode of strength g and time τ. */
-        double[] at(double strength, double time);
-    }
-
-    /** Standard uncertainty of a figure; empty where the readings have no uncertainty and leave no scatter to take one from. */
-    OptionalDouble of(Figure figure) {
+    /** Standard uncertainty of a figure; empty where the readings have none and leave no scatter to take one from. */
+    OptionalDouble of(ToDoubleFunction<RelaxationModes> figure) {
         if (scatter.isEmpty()) {
             return scatter;
         }
+        double[] derivatives = new double[modes.parameters()];
+        for (int i = 0; i < derivatives.length; i++) {
+            derivatives[i] =
+                    (figure.applyAsDouble(moved(i, STEP)) - figure.applyAsDouble(moved(i, -STEP))) / (2 * STEP);
+        }
+        double square = Math.pow(scatter.getAsDouble() * linearised.of(derivatives), 2);
+        double value = figure.applyAsDouble(moved(0, 0));
+        for (RelaxationModes alternative : alternatives) {
+            square += Math.pow(figure.applyAsDouble(alternative) - value, 2);
+        }
+        return OptionalDouble.of(Math.sqrt(square));
+    }
+
+    /** The material with one fitted number moved by a step of its logarithm. */
+    private RelaxationModes moved(int parameter, double step) {
         int count = modes.count();
-        double[] derivatives = new double[modes.parameters() + unseenTimes.size()];
-        for (int i = 0; i < count; i++) {
-            double[] byMode = figure.byMode().at(modes.strengths()[i], modes.times()[i]);
-            derivatives[i] = byMode[0] * modes.strengths()[i];
-            derivatives[count + i] = byMode[1] * modes.times()[i];
+        double factor = Math.exp(step);
+        double[] times = modes.times().clone();
+        double[] strengths = modes.strengths().clone();
+        double equilibrium = modes.equilibrium();
+        if (parameter < count) {
+            strengths[parameter] *= factor;
+        } else if (parameter < 2 * count) {
+            times[parameter - count] *= factor;
+        } else {
+            equilibrium *= factor;
         }
-        if (modes.equilibrium() > 0) {
-            derivatives[2 * count] = figure.byEquilibrium() * modes.equilibrium();
-        }
-        for (int k = 0; k < unseenTimes.size(); k++) {
-            derivatives[modes.parameters() + k] = figure.byMode().at(0, unseenTimes.get(k))[0];
-        }
-        return OptionalDouble.of(scatter.getAsDouble() * linearised.of(derivatives));
+        return RelaxationModes.of(equilibrium, times, strengths);
     }
 }

@@ -1,6 +1,7 @@
 package nightlag.stages.spectrum;
 
 import java.util.ArrayList;
+import java.util.Arrays;
 import java.util.List;
 import nightlag.stages.numeric.AnchoredValue;
 import nightlag.stages.numeric.Complex;
@@ -36,6 +37,15 @@ public final class RelaxationModes {
      */
     public static RelaxationModes of(double equilibriumPa, double[] timesS, double[] strengthsPa) {
         return new RelaxationModes(DoubleDouble.of(equilibriumPa), ModeSet.of(timesS, strengthsPa));
+    }
+
+    /** The same with one mode more. */
+    public RelaxationModes with(double timeS, double strengthPa) {
+        double[] times = Arrays.copyOf(timesS(), count() + 1);
+        double[] strengths = Arrays.copyOf(strengthsPa(), count() + 1);
+        times[count()] = timeS;
+        strengths[count()] = strengthPa;
+        return of(equilibriumPa(), times, strengths);
     }
 
     /** How many modes there are. */

@@ -60,6 +60,25 @@ final class WeightedReadings {
         }
     }
 
+    private WeightedReadings(WeightedReadings other, double[] target) {
+        angularFrequencies = other.angularFrequencies;
+        first = other.first;
+        mixed = other.mixed;
+        second = other.second;
+        scatterKnown = other.scatterKnown;
+        largest = other.largest;
+        this.target = target;
+    }
+
+    /** The readings without a contribution, given as its rows at unit strength. */
+    WeightedReadings less(double[] column, double strength) {
+        double[] rest = target.clone();
+        for (int row = 0; row < rest.length; row++) {
+            rest[row] -= strength * column[row];
+        }
+        return new WeightedReadings(this, rest);
+    }
+
     private static boolean isSound(ModuliCovariance covariance) {
         return covariance.storageVariance() >= 0
                 && covariance.lossVariance() >= 0
