@@ -1,0 +1,213 @@
+package nightlag.stages;
+
+import static nightlag.stages.TestPoints.point;
+import static org.assertj.core.api.Assertions.assertThat;
+
+import java.util.ArrayList;
+import java.util.Collections;
+import java.util.List;
+import java.util.Map;
+import java.util.Optional;
+import java.util.OptionalDouble;
+import java.util.OptionalInt;
+import java.util.Random;
+import java.util.stream.IntStream;
+import java.util.stream.Stream;
+import nightlag.stages.fault.Reason;
+import nightlag.stages.geometry.DeformationMode;
+import nightlag.stages.moduli.Marker;
+import nightlag.stages.moduli.ModulusPoint;
+import nightlag.stages.moduli.Quality;
+import nightlag.stages.numeric.Complex;
+import nightlag.stages.spectrum.RelaxationModes;
+import nightlag.stages.spectrum.SpectrumPlan;
+import nightlag.stages.spectrum.SpectrumRow;
+import nightlag.stages.superposition.SuperpositionPlan;
+import nightlag.stages.sweep.SweepPlan;
+import org.junit.jupiter.api.Test;
+import org.junit.jupiter.params.ParameterizedTest;
+import org.junit.jupiter.params.provider.ValueSource;
+
+class ConcludeTest {
+    private static final RelaxationModes MATERIAL =
+            RelaxationModes.of(0, new double[] {0.01, 0.1, 1}, new double[] {1e5, 2e4, 1e3});
+    private static final ConclusionPlan NOTHING_WANTED = plan(Optional.empty(), Optional.empty());
+    private static final ConclusionPlan SPECTRUM_WANTED =
+            plan(Optional.of(new SpectrumPlan(false, OptionalInt.empty(), false)), Optional.empty());
+
+    @Test
+    void pointsStandInTheOrderOfTheirKeys() {
+        List<TestPoints> given = List.of(
+                point().named("2", "1", "1", "b"),
+                point().named("1", "1", "10", "b"),
+                point().named("1", "1", "2", "b"),
+                point().named("1", "1", "2", "a"),
+                point().named("10", "1", "1", "a"));
+
+        LotResult result = conclude(given.stream(), NOTHING_WANTED);
+
+        assertThat(result.points())
+                .extracting(p -> p.key().specimen() + "/" + p.key().point() + "/"
+                        + p.key().sourceFile())
+                .containsExactly("1/2/a", "1/2/b", "1/10/b", "2/1/b", "10/1/a");
+    }
+
+    @ParameterizedTest(name = "seed {0}")
+    @ValueSource(longs = {1, 2, 3})
+    void theOrderOfTheReductionsShowsNowhere(long seed) {
+        List<TestPoints> shuffled = new ArrayList<>(sweep(463.15, "1").toList());
+        Collections.shuffle(shuffled, new Random(seed));
+
+        assertThat(conclude(shuffled.stream(), SPECTRUM_WANTED))
+                .isEqualTo(conclude(sweep(463.15, "1"), SPECTRUM_WANTED));
+    }
+
+    @Test
+    void aFrequencySweepGivesBothSpectraAndTheirFigures() {
+        LotResult result = conclude(sweep(463.15, "1"), SPECTRUM_WANTED);
+
+        assertThat(result.notes()).isEmpty();
+        assertThat(result.spectrum())
+                .extracting(SpectrumRow::kind)
+                .containsExactly(
+                        SpectrumRow.Kind.RELAXATION,
+                        SpectrumRow.Kind.RELAXATION,
+                        SpectrumRow.Kind.RELAXATION,
+                        SpectrumRow.Kind.RETARDATION,
+                        SpectrumRow.Kind.RETARDATION);
+        assertThat(result.spectrum()).allMatch(row -> row.referenceTemperatureK() == 463.15);
+        assertThat(result.markers())
+                .extracting(Marker::property)
+                .containsExactly(
+                        "instantaneous_compliance",
+                        "instantaneous_modulus",
+                        "mean_relaxation_time",
+                        "steady_state_compliance",
+                        "zero_shear_viscosity");
+        assertThat(result.markers())
+                .allMatch(
+                        marker -> marker.specimen().isEmpty() && marker.sweep().isEmpty());
+        assertThat(result.markers()).allMatch(marker -> marker.temperatureK().equals(OptionalDouble.of(463.15)));
+    }
+
+    @Test
+    void noSpectrumIsMadeThatWasNotAskedFor() {
+        LotResult result = conclude(sweep(463.15, "1"), NOTHING_WANTED);
+
+        assertThat(result.points()).hasSize(31);
+        assertThat(result.spectrum()).isEmpty();
+        assertThat(result.markers()).isEmpty();
+        assertThat(result.notes()).isEmpty();
+    }
+
+    @Test
+    void anUnusablePointIsPublishedButNotUsed() {
+        TestPoints wild = point().named("1", "1", "99", "z.csv")
+                .hz(1)
+                .modulus(new Complex(1e9, 1e3))
+                .quality(Quality.UNUSABLE);
+
+        LotResult result = conclude(Stream.concat(sweep(463.15, "1"), Stream.of(wild)), SPECTRUM_WANTED);
+
+        LotResult without = conclude(sweep(463.15, "1"), SPECTRUM_WANTED);
+        assertThat(result.points()).hasSize(32);
+        assertThat(result.spectrum()).isEqualTo(without.spectrum());
+        assertThat(result.markers()).isEqualTo(without.markers());
+    }
+
+    @Test
+    void anAmplitudeSweepBesideItDoesNotEnter() {
+        Stream<TestPoints> amplitude = IntStream.range(0, 12)
+                .mapToObj(
+                        i -> point().named("1", "amplitude", "" + i, "a.csv").modulus(new Complex(10.0 / (i + 1), 5)));
+
+        LotResult result = conclude(Stream.concat(sweep(463.15, "1"), amplitude), SPECTRUM_WANTED);
+
+        assertThat(result.spectrum())
+                .isEqualTo(conclude(sweep(463.15, "1"), SPECTRUM_WANTED).spectrum());
+    }
+
+    @Test
+    void theReferenceTemperatureChoosesTheIsotherm() {
+        Stream<TestPoints> three = Stream.of(443.15, 463.15, 483.15)
+                .flatMap(temperature -> sweep(temperature, "" + (int) temperature.doubleValue()));
+        ConclusionPlan plan = plan(SPECTRUM_WANTED.spectrum(), Optional.of(superposition(463.4)));
+
+        LotResult result = conclude(three, plan);
+
+        assertThat(result.notes()).isEmpty();
+        assertThat(result.spectrum()).isNotEmpty().allMatch(row -> row.referenceTemperatureK() == 463.15);
+    }
+
+    @Test
+    void whatStandsInTheWayIsSaid() {
+        ConclusionPlan elsewhere = plan(SPECTRUM_WANTED.spectrum(), Optional.of(superposition(300)));
+        Stream<TestPoints> twoTemperatures = Stream.concat(sweep(443.15, "1"), sweep(463.15, "2"));
+        Stream<TestPoints> twoModuli =
+                Stream.concat(sweep(463.15, "1"), sweep(463.15, "2").map(p -> p.in(DeformationMode.EXTENSION)));
+
+        assertThat(noteOf(conclude(sweep(463.15, "1"), elsewhere))).isEqualTo("SPECTRUM_NO_ISOTHERM_AT_REFERENCE");
+        assertThat(noteOf(conclude(twoTemperatures, SPECTRUM_WANTED))).isEqualTo("SPECTRUM_SEVERAL_TEMPERATURES");
+        assertThat(noteOf(conclude(twoModuli, SPECTRUM_WANTED))).isEqualTo("SPECTRUM_MIXED_DEFORMATION");
+        assertThat(noteOf(conclude(Stream.of(point()), SPECTRUM_WANTED))).isEqualTo("SPECTRUM_TOO_FEW_FREQUENCIES");
+        assertThat(noteOf(conclude(Stream.of(point().quality(Quality.UNUSABLE)), SPECTRUM_WANTED)))
+                .isEqualTo("SPECTRUM_NO_POINTS");
+        assertThat(noteOf(conclude(Stream.empty(), SPECTRUM_WANTED))).isEqualTo("SPECTRUM_NO_POINTS");
+    }
+
+    @Test
+    void anEquilibriumModulusOfZeroMakesALiquidAndIsSaid() {
+        ConclusionPlan solid = plan(Optional.of(new SpectrumPlan(true, OptionalInt.empty(), false)), Optional.empty());
+        RelaxationModes flowing = RelaxationModes.of(0, new double[] {1}, new double[] {1e3});
+        Stream<TestPoints> points = IntStream.range(0, 31).mapToObj(i -> {
+            double hz = Math.pow(10, -2 + i / 7.5);
+            Complex modulus = flowing.modulusPa(2 * Math.PI * hz);
+            // a storage modulus that falls off faster than any liquid's leaves no room for an equilibrium modulus
+            double storage = hz < 0.1 ? modulus.re() * 0.97 : modulus.re();
+            return point().named("1", "1", "" + i, "s.csv").hz(hz).modulus(new Complex(storage, modulus.im()));
+        });
+
+        LotResult result = conclude(points, solid);
+
+        assertThat(noteOf(result)).isEqualTo("EQUILIBRIUM_MODULUS_ZERO");
+        assertThat(result.markers()).extracting(Marker::property).contains("zero_shear_viscosity");
+    }
+
+    private static String noteOf(LotResult result) {
+        assertThat(result.notes()).hasSize(1);
+        Reason note = result.notes().get(0);
+        assertThat(note.sentence()).isNotBlank().doesNotContain("{").doesNotEndWith(".");
+        return note.code();
+    }
+
+    private static Stream<TestPoints> sweep(double temperatureK, String sweep) {
+        return IntStream.range(0, 31).mapToObj(i -> {
+            double hz = Math.pow(10, -2 + i / 7.5);
+            return point().named("1", sweep, "" + (i + 1), "f" + i + ".csv")
+                    .at(temperatureK)
+                    .hz(hz)
+                    .modulus(MATERIAL.modulusPa(2 * Math.PI * hz));
+        });
+    }
+
+    private static LotResult conclude(Stream<TestPoints> points, ConclusionPlan plan) {
+        return Conclude.conclude(
+                points.map(TestPoints::build)
+                        .map((ModulusPoint point) -> new Reduction(List.of(point)))
+                        .toList(),
+                plan);
+    }
+
+    private static SuperpositionPlan superposition(double referenceK) {
+        return new SuperpositionPlan(
+                referenceK,
+                SuperpositionPlan.VerticalShift.NONE,
+                OptionalDouble.empty(),
+                SuperpositionPlan.ShiftLaw.AUTO,
+                0.003);
+    }
+
+    private static ConclusionPlan plan(Optional<SpectrumPlan> spectrum, Optional<SuperpositionPlan> superposition) {
+        return new ConclusionPlan(SweepPlan.withDefaults(), superposition, spectrum, List.of(), List.of(), Map.of());
+    }
+}
