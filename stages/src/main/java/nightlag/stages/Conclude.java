@@ -11,9 +11,9 @@ import nightlag.stages.sweep.PointOrder;
 
 /** All reductions of one lot to what is published about it. */
 public final class Conclude {
-    private static final Comparator<Marker> MARKER_ORDER = Comparator.comparing(Marker::specimen, NaturalOrder.INSTANCE)
-            .thenComparing(Marker::sweep, NaturalOrder.INSTANCE)
-            .thenComparing(Marker::property, NaturalOrder.INSTANCE)
+    private static final Comparator<Marker> MARKER_ORDER = Comparator.comparing(Marker::specimen, NaturalOrder::compare)
+            .thenComparing(Marker::sweep, NaturalOrder::compare)
+            .thenComparing(Marker::property, NaturalOrder::compare)
             .thenComparingDouble(marker -> marker.temperatureK().orElse(Double.NEGATIVE_INFINITY))
             .thenComparingDouble(marker -> marker.frequencyHz().orElse(Double.NEGATIVE_INFINITY));
 

@@ -1,22 +1,14 @@
 package nightlag.stages.sweep;
 
-import java.io.Serializable;
-import java.util.Comparator;
-
 /**
  * Order of text in which runs of digits count as numbers: {@code p2} before {@code p10}. Text that is equal in this sense,
  * such as {@code 1} and {@code 01}, goes by its characters, so that no two different texts are equal.
  */
-public final class NaturalOrder implements Comparator<String>, Serializable {
-    /** The order. */
-    public static final NaturalOrder INSTANCE = new NaturalOrder();
-
-    private static final long serialVersionUID = 1L;
-
+public final class NaturalOrder {
     private NaturalOrder() {}
 
-    @Override
-    public int compare(String left, String right) {
+    /** Negative, zero or positive as the left text comes before, is, or comes after the right one. */
+    public static int compare(String left, String right) {
         int i = 0;
         int j = 0;
         while (i < left.length() && j < right.length()) {
@@ -67,9 +59,5 @@ public final class NaturalOrder implements Comparator<String>, Serializable {
 
     private static boolean isDigit(char c) {
         return c >= '0' && c <= '9';
-    }
-
-    private Object readResolve() {
-        return INSTANCE;
     }
 }

@@ -30,7 +30,7 @@ public final class PointOrder {
     private PointOrder() {}
 
     private static Comparator<ModulusPoint> by(Function<PointKey, String> part) {
-        return Comparator.comparing(point -> part.apply(point.key()), NaturalOrder.INSTANCE);
+        return Comparator.comparing(point -> part.apply(point.key()), NaturalOrder::compare);
     }
 
     private static Comparator<ModulusPoint> byNumber(ToDoubleFunction<ModulusPoint> number) {
