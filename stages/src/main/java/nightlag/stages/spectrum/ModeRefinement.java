@@ -19,6 +19,7 @@ final class ModeRefinement {
     private static final double SPRING = 0.3;
     private static final double WHILE_SEARCHING = 1e-4;
     private static final double AT_LAST = 1e-10;
+    private static final int MAX_STEPS_WHILE_SEARCHING = 25;
     private static final int MAX_STEPS = 100;
 
     private final WeightedReadings readings;
@@ -63,7 +64,10 @@ final class ModeRefinement {
                 .toArray();
         ModeRefinement inside = new ModeRefinement(readings, fitEquilibrium, fastest, slowest);
         return inside.refine(
-                new FittedModes(times, strengths, fitting.equilibrium(), Double.NaN), SPRING * scatter, AT_LAST);
+                new FittedModes(times, strengths, fitting.equilibrium(), Double.NaN),
+                SPRING * scatter,
+                AT_LAST,
+                MAX_STEPS);
     }
 
     /** Times spread evenly in ln τ over all that is allowed. */
@@ -101,12 +105,12 @@ final class ModeRefinement {
 
     /** Strengths and times moved to where the fit is best; a mode of no strength starts with a little of the weakest. */
     FittedModes refine(FittedModes start) {
-        return refine(start, 0, WHILE_SEARCHING);
+        return refine(start, 0, WHILE_SEARCHING, MAX_STEPS_WHILE_SEARCHING);
     }
 
     /** The same to the last digit. */
     FittedModes polish(FittedModes start) {
-        return refine(start, 0, AT_LAST);
+        return refine(start, 0, AT_LAST, MAX_STEPS);
     }
 
     /** The best fit with a further contribution of given strength that is not fitted; χ² is that of both together. */
@@ -114,7 +118,7 @@ final class ModeRefinement {
         return new ModeRefinement(readings.less(column, strength), fitEquilibrium, shortest, longest).refine(start);
     }
 
-    private FittedModes refine(FittedModes start, double spring, double enough) {
+    private FittedModes refine(FittedModes start, double spring, double enough, int maxSteps) {
         double weakest = Arrays.stream(start.strengths())
                 .filter(strength -> strength > 0)
                 .min()
@@ -141,7 +145,7 @@ final class ModeRefinement {
             upper[2 * count] = Double.POSITIVE_INFINITY;
         }
         LevenbergMarquardt.Fit fit =
-                LevenbergMarquardt.minimise(new Model(count, solid, spring), place, lower, upper, enough, MAX_STEPS);
+                LevenbergMarquardt.minimise(new Model(count, solid, spring), place, lower, upper, enough, maxSteps);
         return sorted(fit.parameters(), count, solid && fit.parameters()[2 * count] > least);
     }
 

@@ -51,7 +51,7 @@ class DiscreteFitTest {
         assertThat(spectrum.retardation().isLiquid()).isFalse();
     }
 
-    /** Bounds: η0 within 0.5 %, Je0 within 2 % from 1 % noise; the seeds hold the worst of the first twenty. */
+    /** Bounds: η0 within 0.5 %, Je0 within 2 % from moduli with 1 % noise. */
     @ParameterizedTest(name = "seed {0}")
     @ValueSource(longs = {0, 1, 2, 3, 4, 5, 6, 7, 8, 9, 10, 11, 12, 13, 14, 15, 16, 17, 18, 19})
     void launsModesFromNoisyModuli(long seed) throws ReductionFault {
