@@ -79,7 +79,7 @@ record Column<R>(
                 Rule.NONE,
                 false,
                 row -> Cells.text(getter.apply(row)),
-                Comparator.comparing(getter, NaturalOrder.INSTANCE));
+                Comparator.comparing(getter, NaturalOrder::compare));
     }
 
     /** A column that holds one of a few words. */

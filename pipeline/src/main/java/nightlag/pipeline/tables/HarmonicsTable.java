@@ -55,7 +55,7 @@ final class HarmonicsTable {
                                             "standard uncertainty of the relative intensity from the record's own noise",
                                             row -> row.harmonic().relativeIntensityU())
                                     .atLeast(0))),
-            Comparator.comparing(row -> row.key().sourceFile(), NaturalOrder.INSTANCE));
+            Comparator.comparing(row -> row.key().sourceFile(), NaturalOrder::compare));
 
     private HarmonicsTable() {}
 

@@ -57,7 +57,7 @@ final class MarkersTable {
                                     "method",
                                     "how it was found",
                                     row -> row.marker().method()))),
-            Comparator.comparing((Row row) -> row.marker().method(), NaturalOrder.INSTANCE)
+            Comparator.comparing((Row row) -> row.marker().method(), NaturalOrder::compare)
                     .thenComparingDouble(MarkersTable::value));
 
     private MarkersTable() {}
