@@ -22,6 +22,7 @@ final class ModeSearch {
     /** Steps down the ladder go on past the best set while they are no worse than this many modes. */
     private static final double PATIENCE_IN_MODES = 3;
 
+    /** Rise of χ², in variances, from which the readings speak against an equilibrium modulus. */
     private static final double AGAINST_A_SOLID = 25;
 
     private final WeightedReadings readings;
@@ -38,7 +39,7 @@ final class ModeSearch {
 
     /** The best set; of exactly this many modes where a number is given. */
     FittedModes find(OptionalInt wanted) {
-        FittedModes richest = enriched(mergedGrid());
+        FittedModes richest = enriched(atMost(mostModes(), mergedGrid()));
         return wanted.isPresent() ? withExactly(wanted.getAsInt(), richest) : refinement.polish(best(richest));
     }
 
@@ -85,11 +86,16 @@ final class ModeSearch {
         return current;
     }
 
-    private FittedModes withExactly(int wanted, FittedModes richest) {
-        FittedModes current = richest;
-        while (current.count() > wanted) {
+    private FittedModes atMost(int most, FittedModes richer) {
+        FittedModes current = richer;
+        while (current.count() > most) {
             current = withOneLess(current);
         }
+        return current;
+    }
+
+    private FittedModes withExactly(int wanted, FittedModes richest) {
+        FittedModes current = atMost(wanted, richest);
         if (current.count() == wanted) {
             return refinement.polish(current);
         }
@@ -97,10 +103,14 @@ final class ModeSearch {
         return refinement.spread(wanted, natural, Math.sqrt(variance(natural)));
     }
 
-    /** No more than the readings can pay for, and than three a decade: these follow any smooth spectrum to 1e-5. */
+    /**
+     * No more than the readings can pay for, some of them left over for the scatter where that is not known, and no more than
+     * three a decade: these follow any smooth spectrum to 1e-5.
+     */
     private int mostModes() {
+        int spare = readings.scatterKnown() ? 1 : 3;
         double decades = Math.log10(readings.highestFrequency() / readings.lowestFrequency());
-        return Math.max(1, Math.min((readings.rows() - 3) / 2, (int) (3 * decades) + 3));
+        return Math.max(1, Math.min((readings.rows() - spare) / 2, (int) (3 * decades) + 3));
     }
 
     private FittedModes withOneMore(FittedModes current) {

@@ -203,6 +203,19 @@ class DiscreteFitTest {
         });
     }
 
+    @Test
+    void fewReadingsWithoutUncertaintiesLeaveSomethingForTheScatter() throws ReductionFault {
+        List<ModulusReading> readings = List.of(
+                reading(0.1, new Complex(0.9, 10), 0),
+                reading(1, new Complex(50, 49), 0),
+                reading(10, new Complex(101, 9.9), 0));
+
+        DiscreteSpectrum spectrum = DiscreteFit.fit(readings, LIQUID);
+
+        assertThat(spectrum.relaxation().count()).isEqualTo(1);
+        assertThat(marker(spectrum, "zero_shear_viscosity").u().orElseThrow()).isBetween(0.5, 50.0);
+    }
+
     private static double[][] written(DiscreteSpectrum spectrum, SpectrumRow.Kind kind) {
         List<SpectrumRow> rows =
                 spectrum.rows(463.15).stream().filter(row -> row.kind() == kind).toList();
