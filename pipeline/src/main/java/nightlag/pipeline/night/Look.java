@@ -19,7 +19,12 @@ sealed interface Look {
      * @param reductions one a record
      * @param state what decided about it, for the archive
      */
-    record Reduced(String sha256, DecodeCounts counts, List<Reduction> reductions, String state) implements Look {}
+    record Reduced(String sha256, DecodeCounts counts, List<Reduction> reductions, String state) implements Look {
+        /** Copies the list. */
+        public Reduced {
+            reductions = List.copyOf(reductions);
+        }
+    }
 
     /**
      * Only its time stamp changed.
@@ -45,7 +50,13 @@ sealed interface Look {
             Set<String> specimens,
             String state,
             boolean keepsReductions)
-            implements Look {}
+            implements Look {
+        /** Copies the sets. */
+        public SetAside {
+            lots = Set.copyOf(lots);
+            specimens = Set.copyOf(specimens);
+        }
+    }
 
     /**
      * It is still being written.

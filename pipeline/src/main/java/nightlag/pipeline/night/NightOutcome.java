@@ -1,8 +1,10 @@
 package nightlag.pipeline.night;
 
 import java.nio.file.Path;
+import java.util.Collections;
 import java.util.List;
 import java.util.Map;
+import java.util.TreeMap;
 import nightlag.pipeline.archive.LotName;
 import nightlag.pipeline.tables.NightFileRow;
 import nightlag.stages.moduli.Flag;
@@ -35,6 +37,18 @@ public record NightOutcome(
         Map<Flag, Integer> flags,
         long rows,
         long rowsLeftOut) {
+    /** Copies the collections; the maps keep their order. */
+    public NightOutcome {
+        files = List.copyOf(files);
+        newlySetAside = List.copyOf(newlySetAside);
+        stillSetAside = List.copyOf(stillSetAside);
+        unreadableIntakes = List.copyOf(unreadableIntakes);
+        lotsConcluded = Collections.unmodifiableMap(new TreeMap<>(lotsConcluded));
+        lotsNotConcluded = Collections.unmodifiableMap(new TreeMap<>(lotsNotConcluded));
+        quality = Collections.unmodifiableMap(new TreeMap<>(quality));
+        flags = Collections.unmodifiableMap(new TreeMap<>(flags));
+    }
+
     /** Whether all went well; files that wait, and files set aside before, do not count against it. */
     public boolean allWell() {
         return newlySetAside.isEmpty() && unreadableIntakes.isEmpty() && lotsNotConcluded.isEmpty();

@@ -5,6 +5,7 @@ import java.nio.file.Files;
 import java.nio.file.Path;
 import java.time.Clock;
 import java.util.ArrayList;
+import java.util.Collections;
 import java.util.LinkedHashMap;
 import java.util.List;
 import java.util.Map;
@@ -35,6 +36,14 @@ public record Preview(
         int left,
         List<String> unreadable,
         Map<Intake, Optional<FirstFile>> firstFiles) {
+    /** Copies the collections; the map keeps the order of the intakes. */
+    public Preview {
+        toLookAt = List.copyOf(toLookAt);
+        waiting = List.copyOf(waiting);
+        unreadable = List.copyOf(unreadable);
+        firstFiles = Collections.unmodifiableMap(new LinkedHashMap<>(firstFiles));
+    }
+
     /**
      * How a file decodes.
      *

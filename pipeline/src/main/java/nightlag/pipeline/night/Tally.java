@@ -88,14 +88,14 @@ final class Tally {
     NightOutcome outcome() {
         return new NightOutcome(
                 folder,
-                List.copyOf(files),
-                List.copyOf(newlySetAside),
-                List.copyOf(stillSetAside),
-                List.copyOf(unreadableIntakes),
-                new TreeMap<>(lotsConcluded),
-                new TreeMap<>(lotsNotConcluded),
-                new EnumMap<>(quality),
-                new EnumMap<>(flags),
+                files,
+                newlySetAside,
+                stillSetAside,
+                unreadableIntakes,
+                lotsConcluded,
+                lotsNotConcluded,
+                quality,
+                flags,
                 rows,
                 rowsLeftOut);
     }
