@@ -103,6 +103,10 @@ final class ChannelsReader {
     }
 
     static Optional<Unit> unit(SectionReader reader, Key key, QuantityKind kind) {
+        if (key.required() && !reader.has(key)) {
+            reader.missing(key, Units.allowed(kind));
+            return Optional.empty();
+        }
         return reader.text(key).flatMap(text -> accept(reader, key, Units.parse(text, kind)));
     }
 

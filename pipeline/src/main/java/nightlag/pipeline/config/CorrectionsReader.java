@@ -31,9 +31,10 @@ final class CorrectionsReader {
         OptionalDouble mass = section.si(InstrumentKeys.MOVING_MASS);
         OptionalDouble damping = section.si(InstrumentKeys.DAMPING);
         Optional<MeasuringWall> wall = section.word(InstrumentKeys.TORQUE_AT, MeasuringWall.class);
-        boolean turns = named.contains(ChannelName.TORQUE) && named.contains(ChannelName.ANGLE);
-        boolean pulls = named.contains(ChannelName.FORCE) && named.contains(ChannelName.DISPLACEMENT);
-        OptionalDouble compliance = compliance(section, turns, pulls);
+        // Files of stress and strain leave open which of the two it is; a geometry may say so later.
+        boolean turns = named.contains(ChannelName.TORQUE) || named.contains(ChannelName.ANGLE);
+        boolean pulls = named.contains(ChannelName.FORCE) || named.contains(ChannelName.DISPLACEMENT);
+        Compliance compliance = compliance(section, turns, pulls);
         if (layout == Layout.MODULI) {
             given.ifPresent(present -> present.problems()
                     .wrong(
@@ -42,10 +43,10 @@ final class CorrectionsReader {
                             "points already reduced cannot be corrected",
                             "no such section with layout moduli"));
         } else {
-            refuseUnless(section, turns, "torque and angle", List.of(InstrumentKeys.INERTIA, InstrumentKeys.FRICTION));
-            refuseUnless(
+            refuseIf(section, pulls, "torque and angle", List.of(InstrumentKeys.INERTIA, InstrumentKeys.FRICTION));
+            refuseIf(
                     section,
-                    pulls,
+                    turns,
                     "force and displacement",
                     List.of(InstrumentKeys.MOVING_MASS, InstrumentKeys.DAMPING));
         }
@@ -54,8 +55,7 @@ final class CorrectionsReader {
                 && friction.isPresent()
                 && mass.isPresent()
                 && damping.isPresent()
-                && wall.isPresent()
-                && compliance.isPresent();
+                && wall.isPresent();
         this.corrections = complete
                 ? Optional.of(new Corrections(
                         delay(channels, ChannelsReader.DEFORMATIONS),
@@ -64,8 +64,8 @@ final class CorrectionsReader {
                         friction.getAsDouble(),
                         mass.getAsDouble(),
                         damping.getAsDouble(),
-                        turns ? compliance.getAsDouble() : 0,
-                        pulls ? compliance.getAsDouble() : 0,
+                        compliance.angular(),
+                        compliance.linear(),
                         wall.get()))
                 : Optional.empty();
     }
@@ -82,37 +82,40 @@ final class CorrectionsReader {
                 .sum();
     }
 
-    private static OptionalDouble compliance(SectionReader section, boolean turns, boolean pulls) {
+    /**
+     * What the frame gives, of which at most one is not 0.
+     *
+     * @param angular rad/(N·m)
+     * @param linear m/N
+     */
+    private record Compliance(double angular, double linear) {}
+
+    private static Compliance compliance(SectionReader section, boolean turns, boolean pulls) {
         Key key = InstrumentKeys.COMPLIANCE;
         if (!section.has(key)) {
-            return OptionalDouble.of(0);
+            return new Compliance(0, 0);
         }
-        if (!turns && !pulls) {
-            section.problems()
-                    .missing(
-                            section.at(key),
-                            "[corrections] " + key.name(),
-                            "the channels hold no load and movement that go together",
-                            "it with the channels torque and angle, or force and displacement");
-            return OptionalDouble.of(0);
-        }
-        QuantityKind kind = turns ? QuantityKind.ANGULAR_COMPLIANCE : QuantityKind.LINEAR_COMPLIANCE;
-        return section.node(key)
-                .flatMap(node ->
-                        section.quantity(key, node, new KeyType.Measured(kind, KeyType.Sign.NOT_NEGATIVE, false)))
-                .map(quantity -> OptionalDouble.of(quantity.si()))
-                .orElseGet(OptionalDouble::empty);
+        Node node = section.node(key).orElseThrow();
+        boolean linear = pulls || (!turns && isLinear(node));
+        QuantityKind kind = linear ? QuantityKind.LINEAR_COMPLIANCE : QuantityKind.ANGULAR_COMPLIANCE;
+        double value = section.quantity(key, node, new KeyType.Measured(kind, KeyType.Sign.NOT_NEGATIVE, false))
+                .map(Quantity::si)
+                .orElse(0.0);
+        return linear ? new Compliance(0, value) : new Compliance(value, 0);
     }
 
-    private static void refuseUnless(SectionReader section, boolean there, String channels, List<Key> keys) {
+    private static boolean isLinear(Node node) {
+        return node instanceof Node.Scalar scalar
+                && scalar.value() instanceof String text
+                && Quantity.parse(text, QuantityKind.LINEAR_COMPLIANCE)
+                        .toOptional()
+                        .isPresent();
+    }
+
+    private static void refuseIf(SectionReader section, boolean other, String channels, List<Key> keys) {
         for (Key key : keys) {
-            if (section.has(key) && !there) {
-                section.problems()
-                        .missing(
-                                section.at(key),
-                                "[corrections] " + key.name(),
-                                "the channels are not " + channels,
-                                "it with the channels " + channels);
+            if (section.has(key) && other) {
+                section.wrong(key, "the channels are not " + channels, "it with the channels " + channels);
             }
         }
     }

@@ -79,7 +79,7 @@ final class FileSections {
         } else if (node != null) {
             problems.wrong(
                     node.at(),
-                    section.name(),
+                    "[" + section.name() + "]",
                     "found " + node.found(),
                     "a section headed " + section.heading() + ", with two brackets");
         }

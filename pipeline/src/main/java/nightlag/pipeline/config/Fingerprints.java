@@ -45,6 +45,9 @@ public final class Fingerprints {
             // How a unit was spelt does not matter, only what it does.
             write(unit.factor(), out);
             write(unit.offset(), out);
+        } else if (value instanceof TagSource.Fixed fixed && fixed.unit().isPresent()) {
+            writeText("Fixed", out);
+            write(new Quantity(Double.parseDouble(fixed.value()), fixed.unit().get()).si(), out);
         } else if (value instanceof Record record) {
             writeRecord(record, out);
         } else if (value instanceof Map<?, ?> map) {

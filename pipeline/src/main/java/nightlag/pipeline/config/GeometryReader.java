@@ -1,6 +1,6 @@
 package nightlag.pipeline.config;
 
-import java.util.Arrays;
+import java.util.ArrayList;
 import java.util.EnumMap;
 import java.util.List;
 import java.util.Map;
@@ -8,10 +8,9 @@ import java.util.Optional;
 import java.util.OptionalDouble;
 import java.util.OptionalInt;
 import java.util.Set;
-import java.util.stream.Collectors;
-import java.util.stream.Stream;
 import nightlag.stages.geometry.DeformationMode;
 import nightlag.stages.geometry.Dimension;
+import nightlag.stages.geometry.Geometry;
 import nightlag.stages.geometry.GeometryKind;
 import nightlag.stages.geometry.GeometrySpec;
 
@@ -44,6 +43,7 @@ final class GeometryReader {
         }
         GeometryReader reader = new GeometryReader(section, kind.get());
         reader.refuseWhatMeansNothing();
+        reader.refuseContradiction();
         reader.checkValues(dimensions, poisson);
         return Optional.of(new GeometrySpec(
                 kind.get(),
@@ -58,59 +58,33 @@ final class GeometryReader {
         return GeometryKeys.GEOMETRY.key(dimension.word()).orElseThrow();
     }
 
-    /** The keys that mean something for a kind, the kind itself included. */
-    static List<String> keysOf(GeometryKind kind) {
-        Stream<String> options = switch (kind) {
-            case CLAMPED_BENDING -> Stream.of(GeometryKeys.SPANS.name(), GeometryKeys.POISSON.name());
-            case THREE_POINT_BENDING -> Stream.of(GeometryKeys.POISSON.name());
-            case COAXIAL_CYLINDERS -> Stream.of(GeometryKeys.END_FACTOR.name());
-            case NONE -> Stream.of(GeometryKeys.DEFORMATION.name());
-            default -> Stream.empty();
-        };
-        return Stream.of(
-                        Stream.of(GeometryKeys.KIND.name()),
-                        GeometryRules.dimensions(kind).stream().map(Dimension::word),
-                        options)
-                .flatMap(words -> words)
-                .toList();
-    }
-
-    /** Whether an inherited key stays when a file names a new kind: density and Poisson's ratio are the material's. */
-    static boolean staysUnder(String key, Object newKind) {
-        boolean material = key.equals(Dimension.DENSITY.word()) || key.equals(GeometryKeys.POISSON.name());
-        return material
-                && Arrays.stream(GeometryKind.values())
-                        .anyMatch(kind ->
-                                kind.word().equals(newKind) && keysOf(kind).contains(key));
-    }
-
     private void refuseWhatMeansNothing() {
-        List<String> meaningful = keysOf(kind);
+        List<String> meaningful = GeometryRules.keys(kind);
         for (Key key : GeometryKeys.GEOMETRY.keys()) {
-            if (section.has(key) && !meaningful.contains(key.name())) {
-                section.wrong(
-                        key,
-                        "this means nothing for the kind " + kind.word(),
-                        "for this kind " + String.join(", ", meaningful.subList(1, meaningful.size())));
+            if (section.has(key) && !key.equals(GeometryKeys.KIND) && !meaningful.contains(key.name())) {
+                String allowed = String.join(", ", meaningful);
+                section.wrong(key, "this means nothing for the kind " + kind.word(), "for this kind " + allowed);
             }
         }
-        List<Set<Dimension>> sets = GeometryRules.completeSets(kind);
-        boolean[] started = new boolean[sets.size()];
-        for (int i = 0; i < sets.size(); i++) {
-            for (Dimension dimension : sets.get(i)) {
-                started[i] |= section.has(key(dimension))
-                        && sets.stream().filter(set -> set.contains(dimension)).count() == 1;
-            }
+    }
+
+    /** A cross-section said in two ways; dimensions that both ways share say neither. */
+    private void refuseContradiction() {
+        List<List<Dimension>> given = new ArrayList<>();
+        List<Set<Dimension>> ways = Geometry.requiredDimensions(kind);
+        for (Set<Dimension> way : ways) {
+            given.add(way.stream()
+                    .filter(dimension ->
+                            ways.stream().filter(set -> set.contains(dimension)).count() == 1)
+                    .filter(dimension -> section.has(key(dimension)))
+                    .sorted()
+                    .toList());
         }
-        if (started.length == 2 && started[0] && started[1]) {
-            Dimension second = sets.get(1).stream()
-                    .filter(dimension -> !sets.get(0).contains(dimension))
-                    .findFirst()
-                    .orElseThrow();
+        if (given.size() == 2 && given.stream().noneMatch(List::isEmpty)) {
             section.wrong(
-                    key(second),
-                    "this says the cross-section a second time",
-                    "one of these sets: " + GeometryRules.inWords(kind));
+                    key(given.get(1).get(0)),
+                    given.get(1).get(0).word() + " and " + given.get(0).get(0).word() + " contradict each other",
+                    GeometryRules.inWords(kind) + ", not both");
         }
     }
 
@@ -141,20 +115,5 @@ final class GeometryReader {
                     larger.word() + " is smaller than " + smaller.word() + (strictly ? ", or equal to it" : ""),
                     "the larger one in " + larger.word());
         }
-    }
-
-    /** The dimensions a kind still lacks when some are known, as words; empty text if it is complete. */
-    static String lacking(GeometryKind kind, Set<Dimension> known) {
-        List<Set<Dimension>> sets = GeometryRules.completeSets(kind);
-        if (sets.stream().anyMatch(known::containsAll)) {
-            return "";
-        }
-        return sets.stream()
-                .map(set -> set.stream()
-                        .filter(dimension -> !known.contains(dimension))
-                        .map(Dimension::word)
-                        .collect(Collectors.joining(" and ")))
-                .distinct()
-                .collect(Collectors.joining(", or "));
     }
 }

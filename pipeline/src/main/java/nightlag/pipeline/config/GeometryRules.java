@@ -1,74 +1,72 @@
 package nightlag.pipeline.config;
 
 import java.util.Arrays;
+import java.util.Collection;
 import java.util.EnumSet;
 import java.util.List;
 import java.util.Set;
 import java.util.stream.Collectors;
+import java.util.stream.Stream;
 import nightlag.stages.geometry.Dimension;
+import nightlag.stages.geometry.Geometry;
 import nightlag.stages.geometry.GeometryKind;
 
-/** Which dimensions and options each kind of geometry has. */
+/** Which keys of {@code [geometry]} each kind has a use for. */
 final class GeometryRules {
     private GeometryRules() {}
-
-    /** The sets of dimensions any one of which makes a kind complete. */
-    static List<Set<Dimension>> completeSets(GeometryKind kind) {
-        return switch (kind) {
-            case PARALLEL_PLATE -> List.of(EnumSet.of(Dimension.DIAMETER, Dimension.GAP));
-            case CONE_PLATE -> List.of(EnumSet.of(Dimension.DIAMETER, Dimension.CONE_ANGLE));
-            case COAXIAL_CYLINDERS ->
-                List.of(EnumSet.of(Dimension.INNER_DIAMETER, Dimension.OUTER_DIAMETER, Dimension.LENGTH));
-            case ROD_TORSION -> List.of(EnumSet.of(Dimension.DIAMETER, Dimension.LENGTH));
-            case BAR_TORSION, CLAMPED_BENDING, THREE_POINT_BENDING ->
-                List.of(EnumSet.of(Dimension.LENGTH, Dimension.WIDTH, Dimension.THICKNESS));
-            case TWO_LAYER_SHEAR ->
-                List.of(
-                        EnumSet.of(Dimension.GAP, Dimension.WIDTH, Dimension.LENGTH),
-                        EnumSet.of(Dimension.GAP, Dimension.AREA));
-            case TENSION, COMPRESSION ->
-                List.of(
-                        EnumSet.of(Dimension.LENGTH, Dimension.WIDTH, Dimension.THICKNESS),
-                        EnumSet.of(Dimension.LENGTH, Dimension.DIAMETER));
-            case NONE -> List.of(EnumSet.noneOf(Dimension.class));
-        };
-    }
-
-    /** Whether sample inertia is known for a kind, so that a density means something. */
-    static boolean takesDensity(GeometryKind kind) {
-        return kind == GeometryKind.PARALLEL_PLATE
-                || kind == GeometryKind.CONE_PLATE
-                || kind == GeometryKind.TWO_LAYER_SHEAR;
-    }
-
-    /** Whether a kind bends, so that Poisson's ratio means something. */
-    static boolean takesPoisson(GeometryKind kind) {
-        return kind == GeometryKind.CLAMPED_BENDING || kind == GeometryKind.THREE_POINT_BENDING;
-    }
-
-    /** Whether a kind turns (torque and angle) rather than pulls (force and displacement). */
-    static boolean turns(GeometryKind kind) {
-        return switch (kind) {
-            case PARALLEL_PLATE, CONE_PLATE, COAXIAL_CYLINDERS, ROD_TORSION, BAR_TORSION -> true;
-            case TWO_LAYER_SHEAR, CLAMPED_BENDING, THREE_POINT_BENDING, TENSION, COMPRESSION, NONE -> false;
-        };
-    }
 
     /** Every dimension a kind can have. */
     static Set<Dimension> dimensions(GeometryKind kind) {
         Set<Dimension> all = EnumSet.noneOf(Dimension.class);
-        completeSets(kind).forEach(all::addAll);
-        if (takesDensity(kind)) {
-            all.add(Dimension.DENSITY);
-        }
+        Geometry.requiredDimensions(kind).forEach(all::addAll);
+        all.addAll(Geometry.optionalDimensions(kind));
         return all;
     }
 
-    /** {@code gap, and width and length or area}, for a message. */
+    /** The keys that mean something for a kind, but for the kind itself. */
+    static List<String> keys(GeometryKind kind) {
+        Stream<Key> options = switch (kind) {
+            case CLAMPED_BENDING -> Stream.of(GeometryKeys.SPANS, GeometryKeys.POISSON);
+            case THREE_POINT_BENDING -> Stream.of(GeometryKeys.POISSON);
+            case COAXIAL_CYLINDERS -> Stream.of(GeometryKeys.END_FACTOR);
+            case NONE -> Stream.of(GeometryKeys.DEFORMATION);
+            case PARALLEL_PLATE, CONE_PLATE, ROD_TORSION, BAR_TORSION, TWO_LAYER_SHEAR, TENSION, COMPRESSION ->
+                Stream.empty();
+        };
+        return Stream.concat(dimensions(kind).stream().map(Dimension::word), options.map(Key::name))
+                .toList();
+    }
+
+    /** Whether an inherited key stays when a file names a new kind: density and Poisson's ratio are the material's. */
+    static boolean staysUnder(String key, Object newKind) {
+        boolean material = key.equals(Dimension.DENSITY.word()) || key.equals(GeometryKeys.POISSON.name());
+        return material
+                && Arrays.stream(GeometryKind.values())
+                        .anyMatch(kind ->
+                                kind.word().equals(newKind) && keys(kind).contains(key));
+    }
+
+    /** The dimensions a kind still lacks when some are known, as words; empty text if it is complete. */
+    static String lacking(GeometryKind kind, Set<Dimension> known) {
+        List<Set<Dimension>> sets = Geometry.requiredDimensions(kind);
+        if (sets.stream().anyMatch(known::containsAll)) {
+            return "";
+        }
+        return sets.stream()
+                .map(set -> words(
+                        set.stream()
+                                .filter(dimension -> !known.contains(dimension))
+                                .toList(),
+                        " and "))
+                .distinct()
+                .collect(Collectors.joining(", or "));
+    }
+
+    /** {@code gap and area, or gap and length and width}, for a message. */
     static String inWords(GeometryKind kind) {
-        return completeSets(kind).stream()
-                .map(set -> set.stream().map(Dimension::word).collect(Collectors.joining(", ")))
-                .collect(Collectors.joining("; or "));
+        return Geometry.requiredDimensions(kind).stream()
+                .map(set -> words(set, " and "))
+                .collect(Collectors.joining(", or "));
     }
 
     /** The kinds that have a dimension, for the documentation. */
@@ -77,5 +75,9 @@ final class GeometryRules {
                 .filter(kind -> dimensions(kind).contains(dimension))
                 .map(kind -> "`" + kind.word() + "`")
                 .collect(Collectors.joining(", ", "", "."));
+    }
+
+    private static String words(Collection<Dimension> dimensions, String between) {
+        return dimensions.stream().sorted().map(Dimension::word).collect(Collectors.joining(between));
     }
 }

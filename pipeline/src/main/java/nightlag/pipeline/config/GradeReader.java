@@ -113,15 +113,25 @@ final class GradeReader {
     private static Optional<SpectrumPlan> spectrum(SectionReader section) {
         Optional<Equilibrium> equilibrium = section.word(GradeKeys.EQUILIBRIUM, Equilibrium.class);
         Optional<Boolean> continuous = section.flag(GradeKeys.CONTINUOUS);
-        OptionalInt modes = OptionalInt.empty();
-        Node node = section.node(GradeKeys.MODES).orElseThrow();
-        if (!(node instanceof Node.Scalar scalar && "auto".equals(scalar.value()))) {
-            modes = section.whole(GradeKeys.MODES, node, new KeyType.Whole(1, GradeKeys.MOST_MODES));
-        }
+        OptionalInt modes = modes(section);
         if (equilibrium.isEmpty() || continuous.isEmpty()) {
             return Optional.empty();
         }
         return Optional.of(new SpectrumPlan(equilibrium.get() == Equilibrium.FITTED, modes, continuous.get()));
+    }
+
+    private static OptionalInt modes(SectionReader section) {
+        Node node = section.node(GradeKeys.MODES).orElseThrow();
+        if (node instanceof Node.Scalar scalar && scalar.value() instanceof Long) {
+            return section.whole(GradeKeys.MODES, node, new KeyType.Whole(1, GradeKeys.MOST_MODES));
+        }
+        if (!(node instanceof Node.Scalar scalar) || !"auto".equals(scalar.value())) {
+            section.wrong(
+                    GradeKeys.MODES,
+                    "found " + node.found(),
+                    GradeKeys.MODES.type().words());
+        }
+        return OptionalInt.empty();
     }
 
     private Map<Dimension, Double> uncertainty() {

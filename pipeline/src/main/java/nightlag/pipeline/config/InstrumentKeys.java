@@ -95,7 +95,7 @@ final class InstrumentKeys {
             Arrays.stream(ChannelName.values())
                     .map(channel -> Key.optional(
                             channel.word(),
-                            new Shape("channel: " + channel.kind().noun().replaceFirst("^an? ", "")),
+                            new Shape("channel: " + channel.kind().bareNoun()),
                             channelMeaning(channel)))
                     .toList());
 
@@ -103,7 +103,7 @@ final class InstrumentKeys {
             "column",
             new Shape("header text, or column number from 1"),
             "The column, by its trimmed header or by number.");
-    static final Key UNIT = Key.required("unit", new Text(), "The unit of its cells.");
+    static final Key UNIT = Key.required("unit", new Shape("unit"), "The unit of its cells.");
     static final Key SENSITIVITY = Key.optional(
             "sensitivity",
             new Shape("quantity per volt, such as \"20 mN·m/V\""),
@@ -145,8 +145,8 @@ final class InstrumentKeys {
             new Shape("header text, or column number from 1"),
             "A column of the data, which must not change within a record.");
     static final Key SHEET_COLUMN = Key.optional("run_sheet", new Text(), "A column of the run sheet, by its header.");
-    static final Key TAG_UNIT =
-            Key.optional("unit", new Text(), "The unit of a bare number; a value that brings its own unit keeps it.");
+    static final Key TAG_UNIT = Key.optional(
+            "unit", new Shape("unit"), "The unit of a bare number; a value that brings its own unit keeps it.");
     static final Section TAG = new Section(
             "a tag",
             "The keys of one tag: exactly one of the first five, and a unit where the fact is a quantity.",

@@ -45,7 +45,7 @@ sealed interface KeyType {
     record Measured(QuantityKind kind, Sign sign, boolean bare) implements KeyType {
         @Override
         public String words() {
-            String noun = kind.noun().replaceFirst("^an? ", "");
+            String noun = kind.bareNoun();
             String units = " (" + String.join(", ", kind.examples()) + ")";
             return (bare ? "number, or quantity" + units : noun + units) + sign.words();
         }

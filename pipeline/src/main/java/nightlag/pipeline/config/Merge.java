@@ -38,11 +38,11 @@ final class Merge {
     /** Under a new kind only what describes the material stays, and that only where the new kind has a use for it. */
     private static Node.Table withoutOldDimensions(Node.Table old, Node.Table fresh) {
         Optional<Object> kind = value(fresh);
-        if (kind.isEmpty() || kind.equals(value(old))) {
+        if (kind.isEmpty() || value(old).isEmpty() || kind.equals(value(old))) {
             return old;
         }
         Map<String, Node> kept = new LinkedHashMap<>(old.entries());
-        kept.keySet().removeIf(key -> !GeometryReader.staysUnder(key, kind.get()));
+        kept.keySet().removeIf(key -> !GeometryRules.staysUnder(key, kind.get()));
         return new Node.Table(old.at(), kept);
     }
 

@@ -10,9 +10,11 @@ import nightlag.pipeline.config.KeyType.Whole;
 final class NightKeys {
     private static final int MOST_WORKERS = 1024;
 
-    static final Key RESULTS = Key.required("results", new Text(), "Everything a run writes goes below this folder.");
-    static final Key GRADES = Key.required("grades", new Text(), "Folder of the grade files.");
-    static final Key INSTRUMENTS = Key.required("instruments", new Text(), "Folder of the instrument files.");
+    static final Key RESULTS =
+            Key.required("results", new Shape("path of a folder"), "Everything a run writes goes below this folder.");
+    static final Key GRADES = Key.required("grades", new Shape("path of a folder"), "Folder of the grade files.");
+    static final Key INSTRUMENTS =
+            Key.required("instruments", new Shape("path of a folder"), "Folder of the instrument files.");
     static final Key WORKERS = Key.withDefault(
             "workers",
             new Whole(0, MOST_WORKERS),
@@ -27,11 +29,11 @@ final class NightKeys {
     static final Section TOP =
             new Section("", "Where things are.", List.of(RESULTS, GRADES, INSTRUMENTS, WORKERS, SETTLE));
 
-    static final Key FOLDER =
-            Key.required("folder", new Text(), "The folder the instrument writes to; it is only read.");
+    static final Key FOLDER = Key.required(
+            "folder", new Shape("path of a folder"), "The folder the instrument writes to; it is only read.");
     static final Key INSTRUMENT = Key.required(
             "instrument",
-            new Text(),
+            new Shape("name of an instrument file, without .toml"),
             "Name of the instrument file without `.toml`. One folder may stand several times, each time with another "
                     + "instrument file.");
     static final Section INTAKE = new Section(

@@ -11,6 +11,7 @@ import nightlag.stages.geometry.Dimension;
 import nightlag.stages.geometry.GeometryKind;
 import nightlag.stages.geometry.GeometrySpec;
 import nightlag.stages.geometry.LoadSignal;
+import nightlag.stages.geometry.Movement;
 import nightlag.stages.moduli.SignalRange;
 
 /** What an instrument and a grade come to when they meet, which is known only once a file has named its grade. */
@@ -70,14 +71,14 @@ public final class Plans {
                         "a section [geometry] here or in the instrument file");
             }
             GeometryKind kind = geometry.get().kind();
-            if (GeometryRules.turns(kind) != turns) {
+            if ((kind.movement() == Movement.TURN) != turns) {
                 return problem(
                         grade,
                         "[geometry] kind",
                         kind.word() + " does not go with the " + records + " of instrument " + instrument.id(),
                         "a kind for " + (turns ? "torque and angle" : "force and displacement"));
             }
-            String lacking = GeometryReader.lacking(kind, known(instrument, geometry.get()));
+            String lacking = GeometryRules.lacking(kind, known(instrument, geometry.get()));
             if (!lacking.isEmpty()) {
                 return problem(
                         grade,

@@ -1,7 +1,7 @@
 package nightlag.pipeline.config;
 
 import java.math.BigDecimal;
-import java.util.Locale;
+import java.util.List;
 import java.util.Optional;
 import java.util.regex.Matcher;
 import java.util.regex.Pattern;
@@ -87,11 +87,10 @@ public record Quantity(double number, Unit unit) {
         });
     }
 
-    private static String example(QuantityKind kind) {
-        return String.format(
-                Locale.ROOT,
-                "a number and a unit of %s, such as \"1 %s\"",
-                kind.noun().replaceFirst("^an? ", ""),
-                kind.examples().get(0));
+    /** A clause with an example of a quantity of some kind. */
+    static String example(QuantityKind kind) {
+        List<String> units = kind.examples();
+        String usual = kind == QuantityKind.RATIO ? units.get(units.size() - 1) : units.get(0);
+        return "a number with its unit, such as \"1 " + usual + "\"";
     }
 }

@@ -19,7 +19,7 @@ public enum QuantityKind {
     RATIO("1", "a pure number", "1 %"),
     TEMPERATURE("K", "a temperature", "°C degC Cel K"),
     /** A difference of temperatures; °C is refused. */
-    TEMPERATURE_DIFFERENCE("K", "a difference of temperatures", "K mK"),
+    TEMPERATURE_DIFFERENCE("K", "a temperature difference", "K mK"),
     EXPANSION("1/K", "a thermal expansion", "1/K"),
     VISCOSITY("Pa·s", "a viscosity", "Pa·s mPa·s kPa·s"),
     COMPLIANCE_OF_MATERIAL("1/Pa", "a compliance", "1/Pa 1/MPa"),
@@ -50,6 +50,11 @@ public enum QuantityKind {
     /** What it is called in a sentence, with its article. */
     public String noun() {
         return noun;
+    }
+
+    /** What it is called, without an article. */
+    public String bareNoun() {
+        return noun.substring(noun.indexOf(' ') + 1);
     }
 
     /** Some units people write it in, the usual one first. */

@@ -80,7 +80,10 @@ final class SectionReader {
             return Optional.of(node);
         }
         if (key.required()) {
-            missing(key, key.type().words());
+            missing(
+                    key,
+                    (key.type() instanceof KeyType.Word ? "one of " : "")
+                            + key.type().words());
         }
         return key.fallback().isEmpty() ? Optional.empty() : Optional.of(TomlFile.literal(key.fallback(), table.at()));
     }
@@ -95,7 +98,7 @@ final class SectionReader {
                     key,
                     node,
                     "found " + node.found() + " instead of a text",
-                    key.type().words() + " in quotes");
+                    key.type().words() + ", in quotes");
             return Optional.empty();
         }
         if (text.isBlank()) {
@@ -164,8 +167,11 @@ final class SectionReader {
             return checked(key, node, bare, type);
         }
         if (node instanceof Node.Scalar scalar && scalar.value() instanceof Number number) {
-            String example = "\"" + number + " " + type.kind().examples().get(0) + "\"";
-            wrong(key, node, "the bare number " + number + " has no unit", "a text with its unit, such as " + example);
+            wrong(
+                    key,
+                    node,
+                    "the bare number " + number + " has no unit",
+                    Quantity.example(type.kind()) + ", in quotes");
             return Optional.empty();
         }
         if (!(node instanceof Node.Scalar scalar) || !(scalar.value() instanceof String text)) {
@@ -187,7 +193,9 @@ final class SectionReader {
         if (Double.isFinite(quantity.si()) && sign.allows(quantity.si())) {
             return Optional.of(quantity);
         }
-        String allowed = type.kind() == QuantityKind.TEMPERATURE ? "a temperature above absolute zero" : type.words();
+        String allowed = type.kind() == QuantityKind.TEMPERATURE
+                ? "a temperature above absolute zero"
+                : type.kind().noun() + type.sign().words();
         wrong(key, node, "found " + node.found(), allowed);
         return Optional.empty();
     }
@@ -234,8 +242,9 @@ final class SectionReader {
             return Optional.of(
                     new SectionReader(declaration, inside, prefix + key.name() + ".", problems).refuseUnknown());
         }
-        node.ifPresent(found -> wrong(
-                key, found, "found " + found.found(), "a table: " + key.type().words()));
+        String keys = String.join(", ", declaration.names());
+        node.ifPresent(
+                found -> wrong(key, found, "found " + found.found(), "a table in braces, its keys out of " + keys));
         return Optional.empty();
     }
 

@@ -26,7 +26,7 @@ public sealed interface TagSource {
     /**
      * The same for every file.
      *
-     * @param value the value; for a quantity a bare number in {@code unit}
+     * @param value the value; for a quantity a bare number in {@code unit}, with a decimal point
      * @param unit unit of the number
      */
     record Fixed(String value, Optional<Unit> unit) implements TagSource {}

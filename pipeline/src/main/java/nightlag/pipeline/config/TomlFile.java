@@ -91,6 +91,9 @@ record TomlFile(Node.Table root, List<Problem> problems) {
 
     private static String clause(TomlParseError error) {
         String message = String.valueOf(error.getMessage()).strip();
+        if (message.contains("previously defined")) {
+            return "it stands a second time: " + message;
+        }
         int expected = message.indexOf(", expected ");
         String found = expected > 0 ? message.substring(0, expected) : message;
         return "not TOML at column " + error.position().column() + ": " + found;
@@ -98,6 +101,9 @@ record TomlFile(Node.Table root, List<Problem> problems) {
 
     private static String hint(TomlParseError error, String line) {
         String message = String.valueOf(error.getMessage());
+        if (message.contains("previously defined")) {
+            return "each key and each section once";
+        }
         if (message.contains("escape")) {
             return "'single quotes' round a text with backslashes, or / in paths";
         }

@@ -106,7 +106,14 @@ public final class Units {
 
     /** A clause that says what units a kind takes. */
     public static String allowed(QuantityKind kind) {
-        return kind.noun() + " in " + String.join(", ", kind.examples()) + " or another unit of it";
+        List<String> examples = kind.examples();
+        String last = examples.get(examples.size() - 1);
+        String listed = examples.size() == 1
+                ? last
+                : String.join(", ", examples.subList(0, examples.size() - 1)) + " or " + last;
+        return kind == QuantityKind.RATIO
+                ? "no unit but " + listed
+                : "a unit of " + kind.bareNoun() + ", such as " + listed;
     }
 
     private static Parsed<Unit> refused(String found, QuantityKind kind) {
@@ -126,9 +133,10 @@ public final class Units {
         return Arrays.stream(QuantityKind.values())
                 .filter(kind -> found.sameAs(dimensionOf(kind)))
                 .findFirst()
-                .map(kind -> "'" + symbol + "' is a unit of " + kind.noun().replaceFirst("^an? ", "") + ", not of "
-                        + asked.noun().replaceFirst("^an? ", ""))
-                .orElse("'" + symbol + "' is not a unit of " + asked.noun().replaceFirst("^an? ", ""));
+                .map(kind -> "'" + symbol + (kind == QuantityKind.RATIO ? "' makes " : "' is a unit of ")
+                        + (kind == QuantityKind.RATIO ? kind.noun() : kind.bareNoun())
+                        + ", where " + asked.noun() + " belongs")
+                .orElse("'" + symbol + "' is no unit of " + asked.bareNoun());
     }
 
     private static Measure dimensionOf(QuantityKind kind) {
