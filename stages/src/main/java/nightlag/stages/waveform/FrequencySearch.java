@@ -158,13 +158,19 @@ final class FrequencySearch {
             candidates[i] = omega * (1 + NEARBY_REACH * (i - NEARBY_STEPS) / NEARBY_STEPS);
             misfits[i] = fit.atFixed(candidates[i]).map(JointFit.Result::misfit).orElse(Double.POSITIVE_INFINITY);
         }
-        return IntStream.range(0, candidates.length)
-                .filter(i -> (i == 0 || misfits[i] <= misfits[i - 1])
-                        && (i == candidates.length - 1 || misfits[i] < misfits[i + 1]))
+        // a minimum at the edge belongs to another frequency, such as half of this one
+        double[] minima = IntStream.range(1, candidates.length - 1)
+                .filter(i -> misfits[i] <= misfits[i - 1] && misfits[i] < misfits[i + 1])
                 .boxed()
                 .sorted(Comparator.comparingDouble(i -> misfits[i]))
                 .limit(MOST_MINIMA)
                 .mapToDouble(i -> candidates[i])
                 .toArray();
+        return minima.length == 0 ? new double[] {omega} : minima;
+    }
+
+    /** Whether a refined frequency still is the one that {@link #minimaNearby} looked around. */
+    static boolean near(double refined, double omega) {
+        return Math.abs(refined / omega - 1) < 1.25 * NEARBY_REACH;
     }
 }

@@ -23,11 +23,6 @@ import nightlag.stages.waveform.ScreeningFigures.Figure;
 public final class HarmonicAnalysis {
     /** Below so many cycles with all orders the fit has several minima, and a grid comes before the refinement. */
     private static final double FEW_CYCLES = 2.5;
-    /**
-     * How far from its start a refinement may end and still be at the same line. Half the frequency with all orders fits a
-     * record just as well, its second order taking the fundamental's place.
-     */
-    private static final double SAME_LINE = 0.3;
     /** Below so many cycles no order above the first can be told from the drift. */
     private static final double CYCLES_FOR_HARMONICS = 1.1;
     /** An order this near half the samples a cycle (as part of them) counts as at it. */
@@ -202,7 +197,7 @@ public final class HarmonicAnalysis {
         return Arrays.stream(FrequencySearch.minimaNearby(samples, omega, harmonics, degree))
                 .mapToObj(start -> fit.refined(start, FINE))
                 .flatMap(Optional::stream)
-                .filter(result -> Math.abs(result.angularFrequency() / omega - 1) < SAME_LINE)
+                .filter(result -> FrequencySearch.near(result.angularFrequency(), omega))
                 .min(Comparator.comparingDouble(JointFit.Result::misfit));
     }
 
