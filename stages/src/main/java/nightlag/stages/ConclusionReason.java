@@ -12,6 +12,9 @@ public enum ConclusionReason implements ReasonCode {
     /** How many temperatures. */
     SPECTRUM_SEVERAL_TEMPERATURES(
             "no spectrum: frequency sweeps at {0} temperatures and no reference temperature to choose by"),
+    /** Mean temperature of the isotherm and reference temperature, °C. */
+    SPECTRUM_MEASURED_BESIDE_REFERENCE(
+            "the spectrum at the reference temperature {1} °C comes from points measured at {0} °C, not shifted"),
     /** Nothing. */
     SPECTRUM_MIXED_DEFORMATION("no spectrum: the lot holds points in shear and in extension, two different moduli");
 

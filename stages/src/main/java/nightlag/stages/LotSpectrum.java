@@ -1,5 +1,6 @@
 package nightlag.stages;
 
+import java.util.ArrayList;
 import java.util.List;
 import java.util.Optional;
 import nightlag.stages.fault.Reason;
@@ -26,13 +27,15 @@ import nightlag.stages.sweep.Isotherms;
  */
 record LotSpectrum(List<Marker> markers, List<SpectrumRow> rows, List<Reason> notes) {
     private static final double KELVIN_AT_ZERO_CELSIUS = 273.15;
+    private static final double UNNOTED_KELVIN = 0.1;
 
     /** No spectrum, because none was asked for. */
     static final LotSpectrum NONE = new LotSpectrum(List.of(), List.of(), List.of());
 
     /**
      * Fits the spectrum at the reference temperature if there is one, else where there is only one temperature with a
-     * frequency sweep. It holds at that isotherm's mean temperature.
+     * frequency sweep. It is said to hold at the reference temperature, else at that isotherm's mean temperature; how far a
+     * reference is from where the points were measured is noted where it is more than a thermometer would hide.
      *
      * @param usable the lot's usable points, in table order
      */
@@ -48,12 +51,17 @@ record LotSpectrum(List<Marker> markers, List<SpectrumRow> rows, List<Reason> no
             }
             DiscreteSpectrum spectrum = DiscreteFit.fit(
                     sweep.points().stream().map(LotSpectrum::reading).toList(), plan);
-            boolean flowsUnasked =
-                    plan.fitEquilibrium() && spectrum.relaxation().isLiquid();
-            return new LotSpectrum(
-                    spectrum.markers(sweep.temperatureK()),
-                    spectrum.rows(sweep.temperatureK()),
-                    flowsUnasked ? List.of(SpectrumReason.EQUILIBRIUM_MODULUS_ZERO.with()) : List.of());
+            List<Reason> notes = new ArrayList<>();
+            if (plan.fitEquilibrium() && spectrum.relaxation().isLiquid()) {
+                notes.add(SpectrumReason.EQUILIBRIUM_MODULUS_ZERO.with());
+            }
+            double temperatureK =
+                    superposition.map(SuperpositionPlan::referenceTemperatureK).orElse(sweep.temperatureK());
+            if (Math.abs(temperatureK - sweep.temperatureK()) > UNNOTED_KELVIN) {
+                notes.add(ConclusionReason.SPECTRUM_MEASURED_BESIDE_REFERENCE.with(
+                        sweep.temperatureK() - KELVIN_AT_ZERO_CELSIUS, temperatureK - KELVIN_AT_ZERO_CELSIUS));
+            }
+            return new LotSpectrum(spectrum.markers(temperatureK), spectrum.rows(temperatureK), List.copyOf(notes));
         } catch (ReductionFault fault) {
             return new LotSpectrum(List.of(), List.of(), List.of(fault.reason()));
         }

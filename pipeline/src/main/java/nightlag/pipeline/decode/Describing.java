@@ -1,6 +1,8 @@
 package nightlag.pipeline.decode;
 
 import java.io.IOException;
+import java.math.BigDecimal;
+import java.math.MathContext;
 import java.util.ArrayList;
 import java.util.EnumMap;
 import java.util.List;
@@ -91,7 +93,15 @@ final class Describing {
     private static FileDescription.DescribedTag tag(TagName name, TagValue value) {
         Optional<String> si = name.kind()
                 .filter(kind -> value.si().isPresent())
-                .map(kind -> value.si().getAsDouble() + " " + kind.si());
+                .map(kind -> toTenDigits(value.si().getAsDouble()) + " " + kind.si());
         return new FileDescription.DescribedTag(name, value.text(), si, value.from());
+    }
+
+    /** Without what the conversion of a decimal number to SI leaves in the last digits. */
+    private static String toTenDigits(double value) {
+        return new BigDecimal(value)
+                .round(new MathContext(10))
+                .stripTrailingZeros()
+                .toPlainString();
     }
 }
