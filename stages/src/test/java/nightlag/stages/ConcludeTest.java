@@ -129,14 +129,30 @@ class ConcludeTest {
 
     @Test
     void theReferenceTemperatureChoosesTheIsotherm() {
-        Stream<TestPoints> three = Stream.of(443.15, 463.15, 483.15)
-                .flatMap(temperature -> sweep(temperature, "" + (int) temperature.doubleValue()));
-        ConclusionPlan plan = plan(SPECTRUM_WANTED.spectrum(), Optional.of(superposition(463.4)));
-
-        LotResult result = conclude(three, plan);
+        LotResult result = concludedAtReference(463.2);
 
         assertThat(result.notes()).isEmpty();
-        assertThat(result.spectrum()).isNotEmpty().allMatch(row -> row.referenceTemperatureK() == 463.15);
+        assertThat(result.spectrum())
+                .isNotEmpty()
+                .allMatch(row -> row.referenceTemperatureK() == 463.2)
+                .extracting(SpectrumRow::value)
+                .isEqualTo(conclude(sweep(463.15, "463"), SPECTRUM_WANTED).spectrum().stream()
+                        .map(SpectrumRow::value)
+                        .toList());
+    }
+
+    @Test
+    void pointsMeasuredBesideTheReferenceTemperatureAreSaid() {
+        LotResult result = concludedAtReference(463.4);
+
+        assertThat(noteOf(result)).isEqualTo("SPECTRUM_MEASURED_BESIDE_REFERENCE");
+        assertThat(result.spectrum()).isNotEmpty().allMatch(row -> row.referenceTemperatureK() == 463.4);
+    }
+
+    private static LotResult concludedAtReference(double referenceK) {
+        Stream<TestPoints> three = Stream.of(443.15, 463.15, 483.15)
+                .flatMap(temperature -> sweep(temperature, "" + (int) temperature.doubleValue()));
+        return conclude(three, plan(SPECTRUM_WANTED.spectrum(), Optional.of(superposition(referenceK))));
     }
 
     @Test
