@@ -27,7 +27,7 @@ final class FileSections {
         if (headings.isEmpty() || value instanceof Node.Table) {
             problems.wrong(
                     value.at(),
-                    value instanceof Node.Table ? "[" + key + "]" : key,
+                    value instanceof Node.Table ? "[" + Node.shown(key) + "]" : Node.shown(key),
                     (value instanceof Node.Table ? "unknown section" : "unknown key") + Suggestion.clause(key, known),
                     "one of " + String.join(", ", known));
         } else {

@@ -36,11 +36,12 @@ record GradeFolder(Map<String, Grade> right, Map<String, List<Problem>> wrong, L
         Map<String, String> fileNames = new TreeMap<>();
         try (Stream<Path> listed = Files.list(folder)) {
             for (Path path : listed.sorted().toList()) {
-                String name = path.getFileName().toString();
+                String name = FileNames.last(path);
                 if (name.toLowerCase(Locale.ROOT).endsWith(SUFFIX)
                         && !name.startsWith(".")
                         && !Files.isDirectory(path)) {
-                    String id = name.substring(0, name.length() - SUFFIX.length());
+                    String stem = name.substring(0, name.length() - SUFFIX.length());
+                    String id = files.containsKey(stem) ? name : stem; // where only the suffix's capitals differ
                     files.put(id, TomlFile.read(path, names.name(path)));
                     fileNames.put(id, names.name(path));
                 }
@@ -81,18 +82,18 @@ record GradeFolder(Map<String, Grade> right, Map<String, List<Problem>> wrong, L
             Map<String, Grade> right = new TreeMap<>();
             Map<String, List<Problem>> wrong = new TreeMap<>();
             Set<Problem> every = new LinkedHashSet<>();
-            for (String id : files.keySet()) {
+            files.forEach((id, file) -> {
                 Set<Problem> all = new LinkedHashSet<>(own.get(id));
                 chain(id).forEach(ancestor -> all.addAll(own.get(ancestor)));
                 every.addAll(all);
-                nameOf(files.get(id)).ifPresent(name -> {
+                nameOf(file).ifPresent(name -> {
                     if (all.isEmpty()) {
                         right.put(name, grades.get(id).orElseThrow());
                     } else {
                         wrong.merge(name, List.copyOf(all), Reading::joined);
                     }
                 });
-            }
+            });
             Problems sorted = new Problems(false);
             sorted.addAll(every.stream()
                     .sorted(java.util.Comparator.comparing(Problem::file))

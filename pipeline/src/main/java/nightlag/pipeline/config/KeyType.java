@@ -53,6 +53,10 @@ sealed interface KeyType {
 
     /** One of a few words. */
     record Word(List<String> allowed) implements KeyType {
+        public Word {
+            allowed = List.copyOf(allowed);
+        }
+
         @Override
         public String words() {
             return allowed.stream()

@@ -143,10 +143,10 @@ final class NightReader {
             Optional<Instrument> instrument = instrumentFolder.isPresent() && id.isPresent()
                     ? instrument(section, instrumentFolder.get(), id.get())
                     : Optional.empty();
-            if (path.isPresent() && path.get().getFileName() == null) {
+            if (path.isPresent() && FileNames.last(path.get()).isEmpty()) {
                 section.wrong(NightKeys.FOLDER, "this is the root of a drive", "a folder with a name");
             } else if (path.isPresent() && instrument.isPresent()) {
-                intakes.add(new Intake(path.get(), path.get().getFileName().toString(), instrument.get()));
+                intakes.add(new Intake(path.get(), FileNames.last(path.get()), instrument.get()));
             }
         }
         return intakes;
@@ -174,7 +174,7 @@ final class NightReader {
 
     private static List<String> namesIn(Path instrumentFolder) {
         try (Stream<Path> files = Files.list(instrumentFolder)) {
-            return files.map(file -> file.getFileName().toString())
+            return files.map(FileNames::last)
                     .filter(name -> name.endsWith(".toml") && !name.startsWith("."))
                     .map(name -> name.substring(0, name.length() - ".toml".length()))
                     .sorted()

@@ -7,6 +7,9 @@ import java.util.Map;
 
 /** What stands in a configuration file, each piece with its place, so that pieces of several files can be merged. */
 sealed interface Node {
+    /** Characters of a text that a message shows. */
+    int LONGEST_SHOWN = 80;
+
     /** Where it stands. */
     At at();
 
@@ -57,9 +60,15 @@ sealed interface Node {
         @Override
         public String found() {
             if (value instanceof String text) {
-                return "\"" + text + "\"";
+                return "\"" + shown(text) + "\"";
             }
             return value instanceof Boolean || value instanceof Number ? value.toString() : "the date " + value;
         }
+    }
+
+    /** A text as a message shows it: on one line, and no longer than a line. */
+    static String shown(String text) {
+        String line = text.replaceAll("\\p{Cntrl}", " ");
+        return line.length() <= LONGEST_SHOWN ? line : line.substring(0, LONGEST_SHOWN) + "…";
     }
 }

@@ -38,11 +38,6 @@ public final class Plans {
                 grade.screening());
     }
 
-    /** Digest of all that decides how a record is reduced: of the instrument's values and of the grade's. */
-    public static String reductionFingerprint(Instrument instrument, Grade grade) {
-        return Fingerprints.of(instrument.fingerprint(), grade.reductionFingerprint());
-    }
-
     /** The instrument's own geometry if it has one, else the grade's. */
     public static Optional<GeometrySpec> geometry(Instrument instrument, Grade grade) {
         return instrument.geometry().or(grade::geometry);

@@ -48,26 +48,26 @@ public record Quantity(double number, Unit unit) {
         String pointed = decimal == ',' ? written.replace(',', '.') : written;
         Matcher matcher = NUMBER_THEN_UNIT.matcher(pointed);
         if (!matcher.matches()) {
-            return new Parsed.Refused<>("\"" + text + "\" does not begin with a number", example(kind));
+            return new Parsed.Refused<>("\"" + Node.shown(text) + "\" does not begin with a number", example(kind));
         }
         if (decimal == ',' && written.substring(0, matcher.end(1)).indexOf('.') >= 0) {
-            return new Parsed.Refused<>("\"" + text + "\" holds a decimal point", "a decimal comma here");
+            return new Parsed.Refused<>("\"" + Node.shown(text) + "\" holds a decimal point", "a decimal comma here");
         }
         double number = Double.parseDouble(matcher.group(1));
         String symbol = written.substring(matcher.start(2));
         if (symbol.startsWith(",")) {
             return new Parsed.Refused<>(
-                    "\"" + text + "\" holds a decimal comma", "a decimal point here: " + example(kind));
+                    "\"" + Node.shown(text) + "\" holds a decimal comma", "a decimal point here: " + example(kind));
         }
         if (symbol.isEmpty() && bareUnit.isEmpty()) {
-            return new Parsed.Refused<>("\"" + text + "\" has no unit", example(kind));
+            return new Parsed.Refused<>("\"" + Node.shown(text) + "\" has no unit", example(kind));
         }
         Parsed<Unit> unit = symbol.isEmpty() ? new Parsed.Value<>(bareUnit.get()) : Units.parse(symbol, kind);
         return unit.then(known -> {
             Quantity quantity = new Quantity(number, known);
             return Double.isFinite(quantity.si())
                     ? new Parsed.Value<>(quantity)
-                    : new Parsed.Refused<>("\"" + text + "\" is too large a number", example(kind));
+                    : new Parsed.Refused<>("\"" + Node.shown(text) + "\" is too large a number", example(kind));
         });
     }
 
@@ -76,14 +76,14 @@ public record Quantity(double number, Unit unit) {
         Matcher matcher = NUMBER_THEN_UNIT.matcher(text.strip().replace('−', '-'));
         String allowed = "a number and " + kind.noun() + " over a voltage, such as \"20 " + kind.si() + "/V\"";
         if (!matcher.matches()) {
-            return new Parsed.Refused<>("\"" + text + "\" does not begin with a number", allowed);
+            return new Parsed.Refused<>("\"" + Node.shown(text) + "\" does not begin with a number", allowed);
         }
         double number = Double.parseDouble(matcher.group(1));
         return Units.parseSensitivity(matcher.group(2), kind).then(unit -> {
             Quantity quantity = new Quantity(number, unit);
             return Double.isFinite(quantity.si())
                     ? new Parsed.Value<>(quantity)
-                    : new Parsed.Refused<>("\"" + text + "\" is too large a number", allowed);
+                    : new Parsed.Refused<>("\"" + Node.shown(text) + "\" is too large a number", allowed);
         });
     }
 

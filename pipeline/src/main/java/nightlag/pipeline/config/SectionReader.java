@@ -39,7 +39,7 @@ final class SectionReader {
             if (!known.contains(key)) {
                 problems.wrong(
                         value.at(),
-                        prefix + key,
+                        prefix + Node.shown(key),
                         "unknown key" + Suggestion.clause(key, known),
                         "one of " + String.join(", ", known));
             }

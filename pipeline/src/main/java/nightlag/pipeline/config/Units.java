@@ -54,7 +54,7 @@ public final class Units {
             return new Parsed.Value<>(new Unit(symbol.strip(), 1, CELSIUS_ZERO.doubleValue()));
         }
         if (CELSIUS.contains(written) && kind == QuantityKind.TEMPERATURE_DIFFERENCE) {
-            return refused("'" + symbol.strip() + "' is a reading of temperature, not a difference", kind);
+            return refused("'" + Node.shown(symbol.strip()) + "' is a reading of temperature, not a difference", kind);
         }
         Optional<Measure> measure = measure(written);
         if (measure.isEmpty()) {
@@ -67,7 +67,7 @@ public final class Units {
             return new Parsed.Value<>(found.divided(cycle).unit(symbol.strip()));
         }
         if (kind == QuantityKind.FREQUENCY && found.sameAs(Measure.NUMBER.over(second()))) {
-            return refused("'" + symbol.strip() + "' could mean either Hz or rad/s", kind);
+            return refused("'" + Node.shown(symbol.strip()) + "' could mean either Hz or rad/s", kind);
         }
         // N·m·s/rad and the like: rotary friction is a torque per angular speed, so an explicit radian is right there.
         Measure asked = dimensionOf(kind);
@@ -90,10 +90,11 @@ public final class Units {
         String allowed = kind.noun() + " over a voltage, such as " + kind.si() + "/V";
         Optional<Measure> found = measure(normal(symbol));
         if (found.isEmpty()) {
-            return new Parsed.Refused<>("'" + symbol.strip() + "' is not a unit known here", allowed);
+            return new Parsed.Refused<>("'" + Node.shown(symbol.strip()) + "' is not a unit known here", allowed);
         }
         if (!found.get().sameAs(asked)) {
-            return new Parsed.Refused<>("'" + symbol.strip() + "' is not " + kind.noun() + " over a voltage", allowed);
+            return new Parsed.Refused<>(
+                    "'" + Node.shown(symbol.strip()) + "' is not " + kind.noun() + " over a voltage", allowed);
         }
         return new Parsed.Value<>(found.get().unit(symbol.strip()));
     }
@@ -121,7 +122,7 @@ public final class Units {
     }
 
     private static String unknown(String symbol, QuantityKind kind) {
-        String clause = symbol.isEmpty() ? "there is no unit" : "'" + symbol + "' is not a unit known here";
+        String clause = symbol.isEmpty() ? "there is no unit" : "'" + Node.shown(symbol) + "' is not a unit known here";
         return kind.examples().stream()
                 .filter(example -> normal(example).equalsIgnoreCase(normal(symbol)))
                 .findFirst()

@@ -169,6 +169,17 @@ class ConfigurationReaderTest {
         assertThat(configuration.grades()).containsOnlyKeys("Heron 3");
     }
 
+    @Test
+    void whateverStandsInAFileAMessageStaysOneLine() throws IOException, ConfigurationException {
+        Path night = night();
+        String text = "\"\"\"\n" + "x".repeat(10_000) + "\n\"\"\"";
+        file("grades/heron.toml", "grade = \"Heron 3\"\n[geometry]\nkind = " + text + "\ngap = " + text + "\n");
+        assertThat(ConfigurationReader.read(night).gradeProblems())
+                .hasSize(2)
+                .allSatisfy(problem ->
+                        assertThat(problem.sentence()).doesNotContain("\n").hasSizeLessThan(600));
+    }
+
     /** The project's own configuration must load, every grade of it. */
     @Test
     void theProjectsOwnConfigurationIsRight() throws ConfigurationException {

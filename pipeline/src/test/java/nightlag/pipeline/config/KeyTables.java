@@ -18,7 +18,7 @@ final class KeyTables {
         StringBuilder out = new StringBuilder();
         while (matcher.find()) {
             String name = matcher.group(1);
-            String region = "<!-- keys of " + name + " -->\n" + tables(name) + "<!-- end -->";
+            String region = "<!-- keys of " + name + " -->\n" + tables(name) + "\n<!-- end -->";
             matcher.appendReplacement(out, Matcher.quoteReplacement(region));
         }
         return matcher.appendTail(out).toString();
@@ -69,7 +69,7 @@ final class KeyTables {
                     .append(cell(key.meaning()))
                     .append(" |\n");
         }
-        return out.append('\n').toString();
+        return out.toString();
     }
 
     private static String cell(String text) {

@@ -126,15 +126,4 @@ class PlansTest {
         assertThat(instrument(STRESS_AND_STRAIN + linear).corrections().linearComplianceMPerN())
                 .isEqualTo(4e-7);
     }
-
-    @Test
-    void bothFingerprintsDecideWhetherARecordIsReducedAgain() {
-        Instrument instrument = instrument(STRESS_AND_STRAIN);
-        String before = Plans.reductionFingerprint(instrument, grade(""));
-        assertThat(Plans.reductionFingerprint(instrument, grade("[extraction]\nharmonics = 3\n")))
-                .isNotEqualTo(before);
-        assertThat(Plans.reductionFingerprint(instrument(LINEAR), grade(""))).isNotEqualTo(before);
-        assertThat(Plans.reductionFingerprint(instrument, grade("[sweeps]\nrepeats = \"averaged\"\n")))
-                .isEqualTo(before);
-    }
 }
