@@ -136,7 +136,7 @@ class BadFileTest {
                         2,
                         "column 'M'",
                         "'mMn'",
-                        "a torque in N·m"),
+                        "a unit of torque, such as N·m"),
                 fault(
                         "unit of something else",
                         Bench::unitRow,
@@ -144,7 +144,7 @@ class BadFileTest {
                         2,
                         "column 'M'",
                         "'mN' is a unit of force",
-                        "a torque in"),
+                        "a unit of torque"),
                 fault(
                         "no line of numbers",
                         BadFileTest::headless,
@@ -232,7 +232,7 @@ class BadFileTest {
                         1,
                         "tag gap, 'Gap'",
                         "'1,0' without a unit",
-                        "a length in mm"),
+                        "a unit of length, such as mm"),
                 fault(
                         "quantity in a unit of something else",
                         bench -> bench.preamble(TagName.GAP, "Gap", "mm"),
@@ -240,7 +240,7 @@ class BadFileTest {
                         2,
                         "tag gap, 'Gap'",
                         "'s' is a unit of time",
-                        "a length in mm"),
+                        "a unit of length, such as mm"),
                 fault(
                         "quantity that is a text",
                         bench -> bench.preamble(TagName.GAP, "Gap", "mm"),
