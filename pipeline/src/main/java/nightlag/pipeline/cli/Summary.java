@@ -47,6 +47,7 @@ final class Summary {
         out.println("lots    " + outcome.lotsConcluded().size() + " rebuilt");
         grades().forEach(grade -> grade.notActedOn().forEach(line -> out.println(grade.name() + ": " + line)));
         list(out, "look at: set aside", outcome.newlySetAside());
+        list(out, "look at: points that are not sound", outcome.notSound());
         list(out, "look at: intakes that cannot be read", outcome.unreadableIntakes());
         list(
                 out,

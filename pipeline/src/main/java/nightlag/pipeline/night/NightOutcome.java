@@ -21,6 +21,7 @@ import nightlag.stages.moduli.Quality;
  * @param lotsConcluded lots whose tables were rebuilt, with what could not be had for them
  * @param lotsNotConcluded lots whose tables could not be rebuilt, with the reason
  * @param quality points reduced this night, by quality
+ * @param notSound the first of them that are not sound, unusable ones first, each with its reasons
  * @param flags how often each flag was raised on them
  * @param rows rows read this night
  * @param rowsLeftOut rows among them left out for an empty cell
@@ -34,6 +35,7 @@ public record NightOutcome(
         Map<LotName, List<String>> lotsConcluded,
         Map<LotName, String> lotsNotConcluded,
         Map<Quality, Integer> quality,
+        List<String> notSound,
         Map<Flag, Integer> flags,
         long rows,
         long rowsLeftOut) {
@@ -46,6 +48,7 @@ public record NightOutcome(
         lotsConcluded = Collections.unmodifiableMap(new TreeMap<>(lotsConcluded));
         lotsNotConcluded = Collections.unmodifiableMap(new TreeMap<>(lotsNotConcluded));
         quality = Collections.unmodifiableMap(new TreeMap<>(quality));
+        notSound = List.copyOf(notSound);
         flags = Collections.unmodifiableMap(new TreeMap<>(flags));
     }
 

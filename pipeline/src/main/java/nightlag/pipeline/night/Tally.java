@@ -6,10 +6,12 @@ import java.util.EnumMap;
 import java.util.List;
 import java.util.Map;
 import java.util.TreeMap;
+import java.util.stream.Collectors;
 import nightlag.pipeline.archive.LotName;
 import nightlag.pipeline.decode.DecodeCounts;
 import nightlag.pipeline.tables.NightFileRow;
 import nightlag.stages.Reduction;
+import nightlag.stages.fault.Reason;
 import nightlag.stages.moduli.Flag;
 import nightlag.stages.moduli.ModulusPoint;
 import nightlag.stages.moduli.Quality;
@@ -20,6 +22,9 @@ import org.apache.logging.log4j.Logger;
 final class Tally {
     private static final Logger LOG = LogManager.getLogger(Tally.class);
 
+    /** Of so many points that are not sound a person reads the reasons at the end; the log has them all. */
+    private static final int MOST_NOT_SOUND = 100;
+
     private final Path folder;
     private final List<NightFileRow> files = new ArrayList<>();
     private final List<String> newlySetAside = new ArrayList<>();
@@ -29,6 +34,7 @@ final class Tally {
     private final Map<LotName, String> lotsNotConcluded = new TreeMap<>();
     private final Map<Quality, Integer> quality = new EnumMap<>(Quality.class);
     private final Map<Flag, Integer> flags = new EnumMap<>(Flag.class);
+    private final Map<Quality, List<String>> notSound = new EnumMap<>(Quality.class);
     private long rows;
     private long rowsLeftOut;
 
@@ -66,11 +72,23 @@ final class Tally {
         for (Reduction reduction : reductions) {
             for (ModulusPoint point : reduction.points()) {
                 quality.merge(point.quality(), 1, Integer::sum);
+                if (point.quality() != Quality.SOUND) {
+                    notSound(file, point);
+                }
                 point.flags().forEach(flag -> flags.merge(flag, 1, Integer::sum));
                 point.reasons()
                         .forEach(reason ->
                                 LOG.info("{}, point {}: {}", file, point.key().point(), reason.sentence()));
             }
+        }
+    }
+
+    private void notSound(String file, ModulusPoint point) {
+        List<String> lines = notSound.computeIfAbsent(point.quality(), any -> new ArrayList<>());
+        if (lines.size() < MOST_NOT_SOUND) {
+            String reasons = point.reasons().stream().map(Reason::sentence).collect(Collectors.joining("; "));
+            lines.add(file + ", point " + point.key().point() + ", "
+                    + point.quality().word() + ": " + reasons);
         }
     }
 
@@ -86,6 +104,8 @@ final class Tally {
     }
 
     NightOutcome outcome() {
+        List<String> worstFirst = new ArrayList<>(notSound.getOrDefault(Quality.UNUSABLE, List.of()));
+        worstFirst.addAll(notSound.getOrDefault(Quality.DOUBTFUL, List.of()));
         return new NightOutcome(
                 folder,
                 files,
@@ -95,6 +115,7 @@ final class Tally {
                 lotsConcluded,
                 lotsNotConcluded,
                 quality,
+                worstFirst,
                 flags,
                 rows,
                 rowsLeftOut);
