@@ -19,8 +19,12 @@ final class FrequencySearch {
     private static final double FEWEST_CYCLES = 0.5;
     private static final double MOST_CYCLES = 5;
     private static final double CYCLE_STEP = 0.1;
-    private static final int SAMPLES_PER_CYCLE = 64;
-    private static final int NEARBY_STEPS = 20;
+    /** More samples a cycle tell a grid of frequencies with one order nothing new. */
+    private static final int SAMPLES_PER_CYCLE = 24;
+    /** The same with all orders. */
+    private static final int SAMPLES_PER_CYCLE_ALL_ORDERS = 48;
+
+    private static final int NEARBY_STEPS = 16;
     private static final double NEARBY_REACH = 0.2;
     private static final int MOST_MINIMA = 3;
     /** A line near the tagged frequency is preferred to a stronger one elsewhere down to this part of its power. */
@@ -105,14 +109,17 @@ final class FrequencySearch {
         double perSecond = 1 / samples.halfSpanS();
         for (int i = 0; i < length; i++) {
             double u = samples.seconds()[i] * perSecond;
-            double[] powers = {1, u, u * u - 1.0 / 3};
-            for (int p = 0; p < 3; p++) {
-                moments[p] += powers[p] * values[i];
-                for (int q = 0; q <= p; q++) {
-                    gram[p][q] += powers[p] * powers[q];
-                }
-            }
+            double curve = u * u - 1.0 / 3;
+            gram[1][0] += u;
+            gram[1][1] += u * u;
+            gram[2][0] += curve;
+            gram[2][1] += u * curve;
+            gram[2][2] += curve * curve;
+            moments[0] += values[i];
+            moments[1] += u * values[i];
+            moments[2] += curve * values[i];
         }
+        gram[0][0] = length;
         double[] trend = Cholesky.of(gram).map(normal -> normal.solve(moments)).orElse(new double[3]);
         double[] rest = new double[length];
         for (int i = 0; i < length; i++) {
@@ -132,7 +139,7 @@ final class FrequencySearch {
         int last = (int) Math.round((MOST_CYCLES - FEWEST_CYCLES) / CYCLE_STEP);
         for (int step = 0; step <= last; step++) {
             double omega = cycle * (FEWEST_CYCLES + step * CYCLE_STEP);
-            double misfit = fit.atFixed(omega).map(JointFit.Result::misfit).orElse(Double.POSITIVE_INFINITY);
+            double misfit = fit.misfitAt(omega);
             if (misfit < least) {
                 least = misfit;
                 best = omega;
@@ -150,13 +157,13 @@ final class FrequencySearch {
     static double[] minimaNearby(Samples samples, double omega, int harmonics, int driftDegree) {
         double cycles = omega * samples.durationS() / (2 * Math.PI);
         double perCycle = samples.size() / cycles;
-        Samples thin = samples.thinned(Math.max(1, (int) (perCycle / SAMPLES_PER_CYCLE)));
+        Samples thin = samples.thinned(Math.max(1, (int) (perCycle / SAMPLES_PER_CYCLE_ALL_ORDERS)));
         JointFit fit = new JointFit(thin, harmonics, driftDegree);
         double[] candidates = new double[2 * NEARBY_STEPS + 1];
         double[] misfits = new double[candidates.length];
         for (int i = 0; i < candidates.length; i++) {
             candidates[i] = omega * (1 + NEARBY_REACH * (i - NEARBY_STEPS) / NEARBY_STEPS);
-            misfits[i] = fit.atFixed(candidates[i]).map(JointFit.Result::misfit).orElse(Double.POSITIVE_INFINITY);
+            misfits[i] = fit.misfitAt(candidates[i]);
         }
         // a minimum at the edge belongs to another frequency, such as half of this one
         double[] minima = IntStream.range(1, candidates.length - 1)

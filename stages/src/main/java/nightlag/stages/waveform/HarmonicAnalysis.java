@@ -37,10 +37,6 @@ public final class HarmonicAnalysis {
     private static final int SPIKE_ROUNDS = 5;
     /** The ratio of signal to noise in dB that stands for "no noise seen in double numbers". */
     private static final double HIGHEST_SNR_DB = 300;
-    /** A first look need not settle the frequency finer than this part of its uncertainty. */
-    private static final double ROUGH = 0.3;
-    /** What the frequency may still be off at the end, as part of its uncertainty. */
-    private static final double FINE = 1e-3;
 
     private final Waveform waveform;
     private final ExtractionPlan plan;
@@ -147,7 +143,7 @@ public final class HarmonicAnalysis {
         double omega = exact
                 ? start
                 : new JointFit(samples, 1, degree)
-                        .refined(start, ROUGH)
+                        .roughlyRefined(start)
                         .orElseThrow(() -> new ReductionFault(WaveformReason.WAVEFORM_NOT_SEPARABLE.with()))
                         .angularFrequency();
         double cycles = omega * samples.durationS() / (2 * Math.PI);
@@ -190,12 +186,12 @@ public final class HarmonicAnalysis {
 
     private Optional<JointFit.Result> refined(JointFit fit, Samples samples, double omega, double cycles) {
         if (cycles >= FEW_CYCLES) {
-            return fit.refined(omega, FINE);
+            return fit.refined(omega);
         }
         int harmonics = fit.basis().harmonics();
         int degree = plan.drift().degree();
         return Arrays.stream(FrequencySearch.minimaNearby(samples, omega, harmonics, degree))
-                .mapToObj(start -> fit.refined(start, FINE))
+                .mapToObj(start -> fit.refined(start))
                 .flatMap(Optional::stream)
                 .filter(result -> FrequencySearch.near(result.angularFrequency(), omega))
                 .min(Comparator.comparingDouble(JointFit.Result::misfit));

@@ -14,6 +14,15 @@ final class JointFit {
     private static final int BLOCK = 256;
     private static final int MOST_STEPS = 40;
     private static final double LARGEST_PHASE_STEP = 0.7;
+    /** A step of ω this part of its uncertainty is the last: what it leaves is of second order. */
+    private static final double SETTLED_SHARE = 0.1;
+
+    /** … if it is also this small, in rad at the record's end. */
+    private static final double LINEAR_PHASE = 1e-3;
+
+    private static final double ROUGH_PHASE = 0.02;
+    /** AᵀA taken at a frequency serves until the phase at the record's end has moved so far, rad. */
+    private static final double SAME_GRAM = 1e-4;
 
     private final Samples samples;
     private final Basis basis;
@@ -22,6 +31,9 @@ final class JointFit {
     private final double[][] blockSlope = new double[Samples.CHANNELS][BLOCK];
     private final double[][] residuals;
     private final double[] totalSquares = new double[Samples.CHANNELS];
+    private double[][] gram = new double[0][0];
+    private double gramFrequency = Double.NaN;
+    private Optional<Cholesky> normal = Optional.empty();
 
     JointFit(Samples samples, int harmonics, int driftDegree) {
         this.samples = samples;
@@ -43,7 +55,6 @@ final class JointFit {
     /**
      * One point on the way: sums over the samples at given ω and coefficients.
      *
-     * @param gram AᵀA, lower triangle
      * @param slopes Aᵀg_c
      * @param gradient Aᵀr_c
      * @param slopeSquares |g_c|²
@@ -51,7 +62,6 @@ final class JointFit {
      * @param residualSquares |r_c|²
      */
     private record Sums(
-            double[][] gram,
             double[][] slopes,
             double[][] gradient,
             double[] slopeSquares,
@@ -100,29 +110,47 @@ final class JointFit {
 
     /** The linear fit at a fixed frequency. */
     Optional<Result> atFixed(double angularFrequency) {
-        return iterate(angularFrequency, new double[Samples.CHANNELS][columns], false, 1);
+        return iterate(angularFrequency, new double[Samples.CHANNELS][columns], false, 0);
     }
 
     /** The residuals and sums of given coefficients, which stay as they are. */
     Optional<Result> given(double angularFrequency, double[][] coefficients) {
         Sums sums = sums(angularFrequency, coefficients);
-        return Cholesky.of(sums.gram()).map(normal -> {
-            Step step = step(sums, normal);
-            return result(angularFrequency, coefficients, sums, normal, step);
-        });
+        return normal.map(factored -> result(angularFrequency, coefficients, sums, factored, step(sums, factored)));
+    }
+
+    /**
+     * {@link Result#misfit} of the linear fit at a frequency in one pass, good enough to compare frequencies by; infinite
+     * where the columns cannot be told apart.
+     */
+    double misfitAt(double angularFrequency) {
+        Sums sums = sums(angularFrequency, new double[Samples.CHANNELS][columns]);
+        if (normal.isEmpty()) {
+            return Double.POSITIVE_INFINITY;
+        }
+        double misfit = 0;
+        for (int c = 0; c < Samples.CHANNELS; c++) {
+            double rest = sums.residualSquares()[c] - normal.get().inverseForm(sums.gradient()[c]);
+            misfit += Math.log(Math.max(rest, 1e-14 * totalSquares[c]));
+        }
+        return misfit;
     }
 
     /**
      * The fit with ω free.
      *
      * @param start where ω starts, rad/s; it must lie within about a third of a bin of the truth
-     * @param precision ω is settled when its step is this part of its own uncertainty
      */
-    Optional<Result> refined(double start, double precision) {
-        return iterate(start, new double[Samples.CHANNELS][columns], true, precision);
+    Optional<Result> refined(double start) {
+        return iterate(start, new double[Samples.CHANNELS][columns], true, 0);
     }
 
-    private Optional<Result> iterate(double start, double[][] startCoefficients, boolean free, double precision) {
+    /** The same as far as another fit needs it to start from: the last step may have been {@link #ROUGH_PHASE}. */
+    Optional<Result> roughlyRefined(double start) {
+        return iterate(start, new double[Samples.CHANNELS][columns], true, ROUGH_PHASE);
+    }
+
+    private Optional<Result> iterate(double start, double[][] startCoefficients, boolean free, double settledPhase) {
         double halfSpan = samples.halfSpanS();
         double omega = start;
         double[][] x = startCoefficients;
@@ -142,7 +170,6 @@ final class JointFit {
                 x = moved(baseX, step, share);
                 continue;
             }
-            Optional<Cholesky> normal = Cholesky.of(sums.gram());
             if (normal.isEmpty()) {
                 return Optional.empty();
             }
@@ -151,7 +178,8 @@ final class JointFit {
             double rounding = 1e-15 * Math.max(1, Math.abs(omega) * halfSpan);
             boolean settled = free
                     ? count > 0
-                            && (size <= Math.max(rounding, precision * next.phaseU())
+                            && (size <= Math.max(rounding, settledPhase)
+                                    || size <= Math.min(LINEAR_PHASE, SETTLED_SHARE * next.phaseU())
                                     || (size < 1e-9 && size > lastSize / 2))
                     : count > 0;
             if (settled) {
@@ -191,15 +219,15 @@ final class JointFit {
         }
     }
 
-    private Step step(Sums sums, Cholesky normal) {
+    private Step step(Sums sums, Cholesky factored) {
         double[][] linear = new double[Samples.CHANNELS][];
         double[][] pull = new double[Samples.CHANNELS][];
         double[] freeSlopeSquares = new double[Samples.CHANNELS];
         double numerator = 0;
         double denominator = 0;
         for (int c = 0; c < Samples.CHANNELS; c++) {
-            linear[c] = normal.solve(sums.gradient()[c]);
-            pull[c] = normal.solve(sums.slopes()[c]);
+            linear[c] = factored.solve(sums.gradient()[c]);
+            pull[c] = factored.solve(sums.slopes()[c]);
             double weight = samples.size() / Math.max(sums.residualSquares()[c], 1e-32 * totalSquares[c]);
             double taken = 0;
             double explained = 0;
@@ -230,7 +258,7 @@ final class JointFit {
         return moved;
     }
 
-    private Result result(double omega, double[][] coefficients, Sums sums, Cholesky normal, Step step) {
+    private Result result(double omega, double[][] coefficients, Sums sums, Cholesky factored, Step step) {
         double[][] copies = new double[Samples.CHANNELS][];
         for (int c = 0; c < Samples.CHANNELS; c++) {
             copies[c] = residuals[c].clone();
@@ -240,7 +268,7 @@ final class JointFit {
                 coefficients,
                 copies,
                 sums.residualSquares(),
-                normal,
+                factored,
                 step.pull(),
                 step.freeSlopeSquares(),
                 step.phase());
@@ -256,8 +284,12 @@ final class JointFit {
 
     private Sums sums(double omega, double[][] coefficients) {
         basis.at(omega);
+        boolean sameGram = Math.abs(omega - gramFrequency) * samples.halfSpanS() <= SAME_GRAM;
+        if (!sameGram) {
+            gram = new double[columns][columns];
+            gramFrequency = omega;
+        }
         Sums sums = new Sums(
-                new double[columns][columns],
                 new double[Samples.CHANNELS][columns],
                 new double[Samples.CHANNELS][columns],
                 new double[Samples.CHANNELS],
@@ -266,9 +298,9 @@ final class JointFit {
         for (int first = 0; first < samples.size(); first += BLOCK) {
             int count = Math.min(BLOCK, samples.size() - first);
             basis.fill(first, count, block);
-            for (int i = 0; i < columns; i++) {
+            for (int i = 0; i < columns && !sameGram; i++) {
                 for (int j = 0; j <= i; j++) {
-                    sums.gram()[i][j] += dot(block[i], 0, block[j], 0, count);
+                    gram[i][j] += dot(block[i], 0, block[j], 0, count);
                 }
             }
             for (int c = 0; c < Samples.CHANNELS; c++) {
@@ -284,6 +316,9 @@ final class JointFit {
                 sums.slopeGradient()[c] += dot(slope, 0, residual, first, count);
                 sums.residualSquares()[c] += dot(residual, first, residual, first, count);
             }
+        }
+        if (!sameGram) {
+            normal = Cholesky.of(gram);
         }
         return sums;
     }

@@ -1,5 +1,6 @@
 package nightlag.stages.waveform;
 
+import java.util.Arrays;
 import nightlag.stages.numeric.RealTransform;
 import nightlag.stages.numeric.RealTransform.Bins;
 
@@ -91,11 +92,17 @@ final class Noise {
         double[][][] products = products(transform, length, wanted, frequencyFree);
         double[][] variances = new double[Samples.CHANNELS][lastBin + 1];
         double[][] left = new double[Samples.CHANNELS][lastBin + 1];
+        double[] takenByColumns = new double[lastBin + 1];
+        for (int k = 1; k <= lastBin; k++) {
+            if (wanted[k]) {
+                takenByColumns[k] = takenByColumns(products[k]);
+            }
+        }
         for (int c = 0; c < Samples.CHANNELS; c++) {
-            Bins residuals = transform.forward(java.util.Arrays.copyOf(fit.residuals()[c], length));
+            Bins residuals = transform.forward(Arrays.copyOf(fit.residuals()[c], length));
             for (int k = 1; k <= lastBin; k++) {
                 if (wanted[k]) {
-                    left[c][k] = left(products[k], c, perSlope[c], length);
+                    left[c][k] = 1 - (takenByColumns[k] + takenBySlope(products[k], c, perSlope[c])) / length;
                     variances[c][k] = residuals.power(k) / length / left[c][k];
                 }
             }
@@ -132,22 +139,29 @@ final class Noise {
         return bins < FEWEST_BINS ? whole[channel] : new Level(sum / bins, freedom, false);
     }
 
-    /** 1 − ‖Qᴴe‖² of one bin for one channel. */
-    private double left(double[][] product, int channel, double perSlope, int length) {
-        int columns = basis.columns();
+    /** n‖Qᴴe‖² of one bin over the columns of the model. */
+    private double takenByColumns(double[][] product) {
         double taken = 0;
-        for (int part = 0; part < 2; part++) {
-            double[] columnProducts = product[part];
-            taken += fit.normal().inverseForm(java.util.Arrays.copyOf(columnProducts, columns));
-            if (perSlope > 0) {
-                double slope = columnProducts[columns + channel];
-                for (int j = 0; j < columns; j++) {
-                    slope -= columnProducts[j] * fit.pull()[channel][j];
-                }
-                taken += slope * slope * perSlope;
-            }
+        for (double[] part : product) {
+            taken += fit.normal().inverseForm(Arrays.copyOf(part, basis.columns()));
         }
-        return 1 - taken / length;
+        return taken;
+    }
+
+    /** The same over the direction of ω, as far as one channel decides it. */
+    private double takenBySlope(double[][] product, int channel, double perSlope) {
+        if (perSlope == 0) {
+            return 0;
+        }
+        double taken = 0;
+        for (double[] part : product) {
+            double slope = part[basis.columns() + channel];
+            for (int j = 0; j < basis.columns(); j++) {
+                slope -= part[j] * fit.pull()[channel][j];
+            }
+            taken += slope * slope * perSlope;
+        }
+        return taken;
     }
 
     /** For each wanted bin, Re and Im of its products with the columns of the model and with both channels' slopes. */
