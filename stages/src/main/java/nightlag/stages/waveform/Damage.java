@@ -2,16 +2,8 @@ package nightlag.stages.waveform;
 
 import java.util.Arrays;
 
-/** Samples that say nothing about the specimen: those at a channel's limit, and isolated spikes. */
+/** Samples that say nothing about the specimen: isolated spikes. Those at a channel's limit are {@link LimitRun}s. */
 final class Damage {
-    /** A shorter run at a channel's extreme may be chance. */
-    private static final int SHORTEST_RUN = 3;
-    /** The top of a wave in coarse steps ends by one or two steps; at a channel's limit the wave leaves it at a slope. */
-    private static final double STEPS_OUT_OF_A_RUN = 3;
-    /** A channel that stands at its extremes nearly always is a square wave, not a wave cut off. */
-    private static final double SQUARE_WAVE_SHARE = 0.9;
-    /** Samples this near an extreme (as part of the range) tell the channel's step there. */
-    private static final double NEAR_EXTREME = 0.1;
     /** Residuals beyond this many of their rms are worth a closer look; white noise hardly ever gets there. */
     private static final double SUSPICIOUS = 5;
     /** Residuals beyond this many robust standard deviations are spikes. */
@@ -30,103 +22,30 @@ final class Damage {
     private Damage() {}
 
     /**
-     * Marks runs of samples at a channel's limit and one sample on either side.
-     *
-     * @return how many samples stand at the limit
-     */
-    static int markClipped(double[] values, int first, boolean[] leftOut) {
-        double low = Double.POSITIVE_INFINITY;
-        double high = Double.NEGATIVE_INFINITY;
-        int atLow = 0;
-        int atHigh = 0;
-        for (int i = first; i < values.length; i++) {
-            double value = values[i];
-            if (value > high) {
-                high = value;
-                atHigh = 0;
-            }
-            if (value < low) {
-                low = value;
-                atLow = 0;
-            }
-            atHigh += value == high ? 1 : 0;
-            atLow += value == low ? 1 : 0;
-        }
-        boolean squareWave = atLow + atHigh > SQUARE_WAVE_SHARE * (values.length - first);
-        int clipped = 0;
-        if (!squareWave && atHigh >= SHORTEST_RUN) {
-            clipped += markRuns(values, first, high, high - low, leftOut);
-        }
-        if (!squareWave && atLow >= SHORTEST_RUN) {
-            clipped += markRuns(values, first, low, high - low, leftOut);
-        }
-        return clipped;
-    }
-
-    private static int markRuns(double[] values, int first, double limit, double range, boolean[] leftOut) {
-        double step = stepNear(values, first, limit, NEAR_EXTREME * range);
-        int clipped = 0;
-        int i = first;
-        while (i < values.length) {
-            if (values[i] != limit) {
-                i++;
-                continue;
-            }
-            int end = i;
-            while (end < values.length && values[end] == limit) {
-                end++;
-            }
-            double before = i > first ? Math.abs(values[i - 1] - limit) : 0;
-            double after = end < values.length ? Math.abs(values[end] - limit) : 0;
-            if (end - i >= SHORTEST_RUN && Math.max(before, after) > STEPS_OUT_OF_A_RUN * step) {
-                clipped += end - i;
-                Arrays.fill(leftOut, Math.max(first, i - 1), Math.min(values.length, end + 1), true);
-            }
-            i = end;
-        }
-        return clipped;
-    }
-
-    /** The smallest change between neighbouring samples near a limit; 0 if there is none to see. */
-    private static double stepNear(double[] values, int first, double limit, double reach) {
-        double smallest = Double.POSITIVE_INFINITY;
-        for (int i = first + 1; i < values.length; i++) {
-            double change = Math.abs(values[i] - values[i - 1]);
-            if (change > 0
-                    && change < smallest
-                    && Math.abs(values[i] - limit) <= reach
-                    && Math.abs(values[i - 1] - limit) <= reach) {
-                smallest = change;
-            }
-        }
-        return smallest == Double.POSITIVE_INFINITY ? 0 : smallest;
-    }
-
-    /**
      * Marks samples that tower over a whole channel, before anything is fitted: left in, they would drown the line in the
      * transform.
      *
      * @return how many
      */
-    static int markTowering(double[] values, int first, boolean[] leftOut) {
-        int count = values.length - first;
+    static int markTowering(double[] values, boolean[] leftOut) {
+        int count = values.length;
         double mean = 0;
-        for (int i = first; i < values.length; i++) {
-            mean += (values[i] - values[first]) / count;
+        for (int i = 0; i < values.length; i++) {
+            mean += (values[i] - values[0]) / count;
         }
-        mean += values[first];
+        mean += values[0];
         double[] distances = new double[count];
         for (int i = 0; i < count; i++) {
-            distances[i] = values[first + i] - mean;
+            distances[i] = values[i] - mean;
         }
         if (!suspicious(distances)) {
             return 0;
         }
-        double[] sorted = Arrays.copyOfRange(values, first, values.length);
+        double[] sorted = values.clone();
         Arrays.sort(sorted);
         double median = sorted[count / 2];
         for (int i = 0; i < count; i++) {
-            distances[i] = Math.abs(values[first + i] - median);
+            distances[i] = Math.abs(values[i] - median);
         }
         sorted = distances.clone();
         Arrays.sort(sorted);
@@ -140,7 +59,7 @@ final class Damage {
             return 0;
         }
         for (int i = 0; i < count; i++) {
-            leftOut[first + i] |= distances[i] > limit;
+            leftOut[i] |= distances[i] > limit;
         }
         return towering;
     }

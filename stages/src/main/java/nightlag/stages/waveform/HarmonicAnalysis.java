@@ -35,6 +35,7 @@ public final class HarmonicAnalysis {
     private static final double SMALLEST_SPIKE = 1e-6;
 
     private static final int SPIKE_ROUNDS = 5;
+    private static final int START_UP_ROUNDS = 3;
     /** The ratio of signal to noise in dB that stands for "no noise seen in double numbers". */
     private static final double HIGHEST_SNR_DB = 300;
 
@@ -43,6 +44,7 @@ public final class HarmonicAnalysis {
     private final boolean exact;
     private final List<Reason> notes = new ArrayList<>();
     private final boolean[] leftOut;
+    private final List<LimitRun> limitRuns = new ArrayList<>();
     private int first;
     private int clipped;
     private int spikes;
@@ -64,17 +66,9 @@ public final class HarmonicAnalysis {
         return new HarmonicAnalysis(waveform, plan).run();
     }
 
-    /** A fit and what it was made of. */
-    private record Fitted(Samples samples, Basis basis, JointFit.Result result) {
-        double amplitude(int channel) {
-            int column = basis.cosineColumn(1);
-            double[] coefficients = result.coefficients()[channel];
-            return Math.hypot(coefficients[column], coefficients[column + 1]);
-        }
-    }
-
     private SignalFit run() throws ReductionFault {
         RecordChecks.check(waveform);
+        requireSamples(waveform.size());
         leaveOutDamage();
         Samples all = Samples.of(waveform, 0, leftOut);
         requireSamples(all.size());
@@ -88,6 +82,14 @@ public final class HarmonicAnalysis {
         Samples samples = plan.startUpCycles() > 0 ? withoutStartUp(all, omega) : all;
         Clock clock = Clock.of(waveform.timeS(), first);
         Fitted fitted = fit(samples, clock, omega);
+        for (int round = 0; round < START_UP_ROUNDS && startUpEnd(fitted, all) != first; round++) {
+            // the first look was misled by the start-up itself; now its end is known better
+            notes.removeIf(HarmonicAnalysis::isAboutOrders);
+            samples = withoutStartUp(all, fitted.result().angularFrequency());
+            clock = Clock.of(waveform.timeS(), first);
+            fitted = fit(samples, clock, fitted.result().angularFrequency());
+        }
+        fitted = withoutFalseLimits(fitted, clock);
         fitted = withoutSpikes(fitted, clock);
         for (int c = 0; c < Samples.CHANNELS; c++) {
             if (!(fitted.amplitude(c) > 0 && Double.isFinite(fitted.amplitude(c)))) {
@@ -98,22 +100,45 @@ public final class HarmonicAnalysis {
     }
 
     private void leaveOutDamage() {
-        spikes = Damage.markTowering(waveform.deformation(), 0, leftOut)
-                + Damage.markTowering(waveform.load(), 0, leftOut);
-        boolean[] atLimit = leftOut.clone();
-        clipped = Damage.markClipped(waveform.deformation(), 0, atLimit)
-                + Damage.markClipped(waveform.load(), 0, atLimit);
-        if (clipped == 0) {
-            return;
+        spikes = Damage.markTowering(waveform.deformation(), leftOut) + Damage.markTowering(waveform.load(), leftOut);
+        limitRuns.addAll(LimitRun.of(waveform));
+        int atLimit = 0;
+        for (LimitRun run : limitRuns) {
+            atLimit += run.length();
         }
-        int marked = 0;
-        for (boolean mark : atLimit) {
-            marked += mark ? 1 : 0;
+        if (atLimit > MOST_CLIPPED * waveform.size()) {
+            // without them nothing is left to tell coarse steps from a limit, nor to fit
+            clipped = atLimit;
+            limitRuns.clear();
         }
-        if (marked <= MOST_CLIPPED * waveform.size()) {
-            System.arraycopy(atLimit, 0, leftOut, 0, leftOut.length);
-            notes.add(WaveformReason.WAVEFORM_CLIPPED_LEFT_OUT.with(clipped, marked - spikes));
+        limitRuns.forEach(run -> run.mark(leftOut));
+    }
+
+    /** Takes back in what only looked like a limit. */
+    private Fitted withoutFalseLimits(Fitted start, Clock clock) throws ReductionFault {
+        if (limitRuns.isEmpty()) {
+            return start;
         }
+        int marked = limitRuns.size();
+        limitRuns.removeIf(run -> !run.cutsOff(start, waveform));
+        for (LimitRun run : limitRuns) {
+            clipped += run.length();
+        }
+        Fitted fitted = start;
+        if (limitRuns.size() < marked) {
+            Arrays.fill(leftOut, false);
+            Damage.markTowering(waveform.deformation(), leftOut);
+            Damage.markTowering(waveform.load(), leftOut);
+            limitRuns.forEach(run -> run.mark(leftOut));
+            notes.removeIf(HarmonicAnalysis::isAboutOrders);
+            fitted = fit(
+                    Samples.of(waveform, first, leftOut), clock, start.result().angularFrequency());
+        }
+        if (clipped > 0) {
+            int without = waveform.size() - first - fitted.samples().size();
+            notes.add(WaveformReason.WAVEFORM_CLIPPED_LEFT_OUT.with(clipped, without));
+        }
+        return fitted;
     }
 
     private void requireSamples(int found) throws ReductionFault {
@@ -124,11 +149,7 @@ public final class HarmonicAnalysis {
     }
 
     private Samples withoutStartUp(Samples all, double omega) throws ReductionFault {
-        double[] timeS = waveform.timeS();
-        double end = timeS[0] + plan.startUpCycles() * 2 * Math.PI / omega - 1e-6 * all.intervalS();
-        while (first < timeS.length && timeS[first] < end) {
-            first++;
-        }
+        first = startUpEnd(omega, all);
         Samples rest = Samples.of(waveform, first, leftOut);
         if (rest.size() < 2) {
             throw new ReductionFault(WaveformReason.WAVEFORM_ALL_START_UP.with(
@@ -136,6 +157,26 @@ public final class HarmonicAnalysis {
         }
         requireSamples(rest.size());
         return rest;
+    }
+
+    private int startUpEnd(Fitted fitted, Samples all) {
+        return plan.startUpCycles() > 0 ? startUpEnd(fitted.result().angularFrequency(), all) : 0;
+    }
+
+    /** The first sample after the start-up cycles. */
+    private int startUpEnd(double omega, Samples all) {
+        double[] timeS = waveform.timeS();
+        double end = timeS[0] + plan.startUpCycles() * 2 * Math.PI / omega - 0.25 * all.intervalS();
+        int index = 0;
+        while (index < timeS.length && timeS[index] < end) {
+            index++;
+        }
+        return index;
+    }
+
+    private static boolean isAboutOrders(Reason note) {
+        return note.code().equals(WaveformReason.WAVEFORM_ORDERS_ABOVE_SAMPLING.name())
+                || note.code().equals(WaveformReason.WAVEFORM_ORDERS_NOT_SEPARABLE.name());
     }
 
     private Fitted fit(Samples samples, Clock clock, double start) throws ReductionFault {
@@ -216,8 +257,7 @@ public final class HarmonicAnalysis {
                 break;
             }
             spikes += found;
-            notes.removeIf(note -> note.code().equals(WaveformReason.WAVEFORM_ORDERS_ABOVE_SAMPLING.name())
-                    || note.code().equals(WaveformReason.WAVEFORM_ORDERS_NOT_SEPARABLE.name()));
+            notes.removeIf(HarmonicAnalysis::isAboutOrders);
             Samples rest = Samples.of(waveform, first, leftOut);
             requireSamples(rest.size());
             fitted = fit(rest, clock, fitted.result().angularFrequency());
@@ -242,8 +282,8 @@ public final class HarmonicAnalysis {
                 (double) spikes / waveform.size(),
                 clock.gapShare(),
                 clock.jitter(),
-                snrDb(fitted, noise, Samples.DEFORMATION),
-                snrDb(fitted, noise, Samples.LOAD),
+                snrDb(fitted, steadiness, Samples.DEFORMATION),
+                snrDb(fitted, steadiness, Samples.LOAD),
                 steadiness.baseline(),
                 steadiness.cycleTrend(),
                 Steadiness.temperatureWander(waveform.temperatureK(), samples.indices(), samples.size() / cycles),
@@ -296,8 +336,8 @@ public final class HarmonicAnalysis {
         return Optional.of(new Figure(Math.abs(result.phaseStep()) / perFrequency, Math.sqrt(variance) / perFrequency));
     }
 
-    private static double snrDb(Fitted fitted, Noise noise, int channel) {
-        double deviation = Math.sqrt(noise.whole(channel).variance());
+    private static double snrDb(Fitted fitted, Steadiness steadiness, int channel) {
+        double deviation = Math.sqrt(steadiness.steadyVariance(channel));
         double rms = fitted.amplitude(channel) / Math.sqrt(2);
         return Math.min(HIGHEST_SNR_DB, 20 * Math.log10(rms / deviation));
     }

@@ -5,10 +5,11 @@ package nightlag.stages.waveform;
  *
  * @param seconds time after {@code originS}, rising, s
  * @param channels deformation and load less their means
+ * @param means what was taken off each channel
  * @param originS the middle of the first and the last time, s
  * @param indices place of each sample in the record
  */
-record Samples(double[] seconds, double[][] channels, double originS, int[] indices) {
+record Samples(double[] seconds, double[][] channels, double[] means, double originS, int[] indices) {
     /** The place of the deformation among the channels. */
     static final int DEFORMATION = 0;
 
@@ -45,19 +46,23 @@ record Samples(double[] seconds, double[][] channels, double originS, int[] indi
         for (int i = 0; i < count; i++) {
             seconds[i] = waveform.timeS()[indices[i]] - origin;
         }
+        double[] means = {mean(waveform.deformation(), indices), mean(waveform.load(), indices)};
         double[][] channels = {
-            lessMean(waveform.deformation(), indices), lessMean(waveform.load(), indices),
+            less(waveform.deformation(), means[DEFORMATION], indices), less(waveform.load(), means[LOAD], indices),
         };
-        return new Samples(seconds, channels, origin, indices);
+        return new Samples(seconds, channels, means, origin, indices);
     }
 
-    private static double[] lessMean(double[] values, int[] indices) {
-        double mean = 0;
+    private static double mean(double[] values, int[] indices) {
+        double sum = 0;
         double reference = indices.length == 0 ? 0 : values[indices[0]];
         for (int index : indices) {
-            mean += values[index] - reference;
+            sum += values[index] - reference;
         }
-        mean = reference + mean / Math.max(1, indices.length);
+        return reference + sum / Math.max(1, indices.length);
+    }
+
+    private static double[] less(double[] values, double mean, int[] indices) {
         double[] centred = new double[indices.length];
         for (int i = 0; i < centred.length; i++) {
             centred[i] = values[indices[i]] - mean;
@@ -82,7 +87,7 @@ record Samples(double[] seconds, double[][] channels, double originS, int[] indi
         for (int i = 0; i < count; i++) {
             thinSeconds[i] -= shift;
         }
-        return new Samples(thinSeconds, thinChannels, originS + shift, thinIndices);
+        return new Samples(thinSeconds, thinChannels, means, originS + shift, thinIndices);
     }
 
     /** The number of samples. */

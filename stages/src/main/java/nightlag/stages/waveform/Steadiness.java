@@ -7,17 +7,20 @@ import nightlag.stages.waveform.ScreeningFigures.Figure;
 /** Whether a record stayed the same from its first cycle to its last: its means, its modulus, its temperature. */
 final class Steadiness {
     private static final int MOST_STRETCHES = 32;
+    private static final int FEWEST_FREEDOM = 8;
 
     private final Samples samples;
     private final Basis basis;
     private final JointFit.Result fit;
     private final Noise noise;
+    private final Optional<Stretches> stretches;
 
     Steadiness(Samples samples, Basis basis, JointFit.Result fit, Noise noise) {
         this.samples = samples;
         this.basis = basis;
         this.fit = fit;
         this.noise = noise;
+        this.stretches = cut();
     }
 
     private double amplitude(int channel) {
@@ -86,11 +89,16 @@ final class Steadiness {
     }
 
     /**
-     * Change of |load / deformation| over the record: by a straight line through its stretches of whole cycles, or of the
-     * first stretch against the others (a start-up that lasted longer than said), whichever is larger and stands out of the
-     * noise.
+     * The record cut into stretches of whole cycles.
+     *
+     * @param count how many
+     * @param cyclesEach whole cycles in each
+     * @param samplesIn samples in each
+     * @param excess what the residuals add there to the amplitude of the fundamental: stretch, channel, cos and sin
      */
-    Optional<Figure> cycleTrend() {
+    private record Stretches(int count, int cyclesEach, int[] samplesIn, double[][][] excess) {}
+
+    private Optional<Stretches> cut() {
         double cyclesPerSecond = fit.angularFrequency() / (2 * Math.PI);
         // a record of whole cycles must not lose its last one to rounding
         int cycles =
@@ -98,59 +106,93 @@ final class Steadiness {
         if (cycles < 2) {
             return Optional.empty();
         }
-        int perStretch = (cycles + MOST_STRETCHES - 1) / MOST_STRETCHES;
-        int stretches = cycles / perStretch;
-        double[] ratios = ratios(stretches, perStretch / cyclesPerSecond);
-        double mean = 0;
-        for (double ratio : ratios) {
-            mean += ratio / stretches;
-        }
-        double middle = (stretches - 1) / 2.0;
-        double slope = 0;
-        double spread = 0;
-        for (int k = 0; k < stretches; k++) {
-            slope += (k - middle) * ratios[k];
-            spread += (k - middle) * (k - middle);
-        }
-        double perStretchVariance = 0;
-        for (int c = 0; c < Samples.CHANNELS; c++) {
-            perStretchVariance +=
-                    2 * noise.beside(c, 1).variance() * stretches / (samples.size() * amplitude(c) * amplitude(c));
-        }
-        double stretchesInRecord = samples.durationS() * cyclesPerSecond / perStretch;
-        Figure trend = new Figure(
-                Math.abs(slope / spread / mean) * stretchesInRecord,
-                Math.sqrt(perStretchVariance / spread) * stretchesInRecord);
-        double others = (mean * stretches - ratios[0]) / (stretches - 1);
-        Figure start = new Figure(
-                Math.abs(ratios[0] / others - 1), Math.sqrt(perStretchVariance * (1 + 1.0 / (stretches - 1))));
-        return Optional.of(start.significant() && start.value() > trend.value() ? start : trend);
-    }
-
-    /** |load / deformation| of each stretch: the fitted amplitudes and what the residuals add to them there. */
-    private double[] ratios(int stretches, double secondsPerStretch) {
-        double[][][] sums = new double[stretches][Samples.CHANNELS][2];
-        int[] counts = new int[stretches];
+        int cyclesEach = (cycles + MOST_STRETCHES - 1) / MOST_STRETCHES;
+        int count = cycles / cyclesEach;
+        double[][][] excess = new double[count][Samples.CHANNELS][2];
+        int[] samplesIn = new int[count];
         double begin = samples.seconds()[0] - samples.intervalS() / 2;
+        double perSecond = cyclesPerSecond / cyclesEach;
         for (int i = 0; i < samples.size(); i++) {
-            int stretch = (int) ((samples.seconds()[i] - begin) / secondsPerStretch);
-            if (stretch < stretches) {
-                counts[stretch]++;
+            int stretch = (int) ((samples.seconds()[i] - begin) * perSecond);
+            if (stretch < count) {
+                samplesIn[stretch]++;
                 for (int c = 0; c < Samples.CHANNELS; c++) {
-                    sums[stretch][c][0] += fit.residuals()[c][i] * basis.cosine()[i];
-                    sums[stretch][c][1] += fit.residuals()[c][i] * basis.sine()[i];
+                    excess[stretch][c][0] += fit.residuals()[c][i] * basis.cosine()[i];
+                    excess[stretch][c][1] += fit.residuals()[c][i] * basis.sine()[i];
                 }
             }
         }
-        double[] ratios = new double[stretches];
+        for (int k = 0; k < count; k++) {
+            for (double[] ofChannel : excess[k]) {
+                ofChannel[0] *= 2.0 / Math.max(1, samplesIn[k]);
+                ofChannel[1] *= 2.0 / Math.max(1, samplesIn[k]);
+            }
+        }
+        return Optional.of(new Stretches(count, cyclesEach, samplesIn, excess));
+    }
+
+    /**
+     * Noise of a channel without what a change of its amplitude from stretch to stretch leaves in the residuals: that is
+     * unsteadiness, not noise.
+     */
+    double steadyVariance(int channel) {
+        Noise.Level whole = noise.whole(channel);
+        if (stretches.isEmpty()) {
+            return whole.variance();
+        }
+        Stretches cut = stretches.get();
+        double freedom = whole.freedom() - 2 * (cut.count() - 1);
+        double squares = whole.variance() * whole.freedom();
+        for (int k = 0; k < cut.count(); k++) {
+            double[] excess = cut.excess()[k][channel];
+            squares -= cut.samplesIn()[k] * (excess[0] * excess[0] + excess[1] * excess[1]) / 2;
+        }
+        return freedom >= FEWEST_FREEDOM && squares > 0 ? squares / freedom : whole.variance();
+    }
+
+    /**
+     * Change of |load / deformation| over the record: by a straight line through its stretches of whole cycles, or of the
+     * first stretch against the others (a start-up that lasted longer than said), whichever is larger and stands out of the
+     * noise.
+     */
+    Optional<Figure> cycleTrend() {
+        return stretches.map(this::cycleTrend);
+    }
+
+    private Figure cycleTrend(Stretches cut) {
+        int count = cut.count();
+        double[] ratios = ratios(cut);
+        double mean = 0;
+        for (double ratio : ratios) {
+            mean += ratio / count;
+        }
+        double middle = (count - 1) / 2.0;
+        double slope = 0;
+        double spread = 0;
+        for (int k = 0; k < count; k++) {
+            slope += (k - middle) * ratios[k];
+            spread += (k - middle) * (k - middle);
+        }
+        double variance = 0;
+        for (int c = 0; c < Samples.CHANNELS; c++) {
+            variance += 2 * steadyVariance(c) * count / (samples.size() * amplitude(c) * amplitude(c));
+        }
+        double inRecord = samples.durationS() * fit.angularFrequency() / (2 * Math.PI) / cut.cyclesEach();
+        Figure trend = new Figure(Math.abs(slope / spread / mean) * inRecord, Math.sqrt(variance / spread) * inRecord);
+        double others = (mean * count - ratios[0]) / (count - 1);
+        Figure start = new Figure(Math.abs(ratios[0] / others - 1), Math.sqrt(variance * (1 + 1.0 / (count - 1))));
+        return start.significant() && start.value() > trend.value() ? start : trend;
+    }
+
+    private double[] ratios(Stretches cut) {
+        double[] ratios = new double[cut.count()];
         int column = basis.cosineColumn(1);
-        for (int k = 0; k < stretches; k++) {
+        for (int k = 0; k < ratios.length; k++) {
             double[] sizes = new double[Samples.CHANNELS];
             for (int c = 0; c < Samples.CHANNELS; c++) {
-                double factor = 2.0 / Math.max(1, counts[k]);
                 sizes[c] = Math.hypot(
-                        fit.coefficients()[c][column] + factor * sums[k][c][0],
-                        fit.coefficients()[c][column + 1] + factor * sums[k][c][1]);
+                        fit.coefficients()[c][column] + cut.excess()[k][c][0],
+                        fit.coefficients()[c][column + 1] + cut.excess()[k][c][1]);
             }
             ratios[k] = sizes[Samples.LOAD] / sizes[Samples.DEFORMATION];
         }

@@ -1,0 +1,52 @@
+package nightlag.stages.waveform;
+
+/**
+ * A fit and what it was made of.
+ *
+ * @param samples the samples that entered
+ * @param basis the columns of the model
+ * @param result the fit itself
+ */
+record Fitted(Samples samples, Basis basis, JointFit.Result result) {
+    /** Amplitude of a channel's fundamental. */
+    double amplitude(int channel) {
+        int column = basis.cosineColumn(1);
+        double[] coefficients = result.coefficients()[channel];
+        return Math.hypot(coefficients[column], coefficients[column + 1]);
+    }
+
+    /** Standard deviation of a channel's residuals. */
+    double deviation(int channel) {
+        double freedom = Math.max(1, samples.size() - basis.columns());
+        return Math.sqrt(result.residualSquares()[channel] / freedom);
+    }
+
+    /** What the model says of a channel at a time of the record, in s, sampled or not. */
+    double model(int channel, double timeS) {
+        double[] columns = columnsAt(timeS);
+        double value = samples.means()[channel];
+        for (int j = 0; j < columns.length; j++) {
+            value += result.coefficients()[channel][j] * columns[j];
+        }
+        return value;
+    }
+
+    /** The standard uncertainty of {@link #model}, with the residuals for noise. */
+    double modelU(int channel, double timeS) {
+        return deviation(channel) * Math.sqrt(result.normal().inverseForm(columnsAt(timeS)));
+    }
+
+    private double[] columnsAt(double timeS) {
+        double seconds = timeS - samples.originS();
+        double u = seconds / samples.halfSpanS();
+        double[] columns = new double[basis.columns()];
+        double[] polynomials = {1, u, u * u - 1.0 / 3};
+        System.arraycopy(polynomials, 0, columns, 0, basis.driftTerms());
+        for (int n = 1; n <= basis.harmonics(); n++) {
+            double phase = n * result.angularFrequency() * seconds;
+            columns[basis.cosineColumn(n)] = Math.cos(phase);
+            columns[basis.cosineColumn(n) + 1] = Math.sin(phase);
+        }
+        return columns;
+    }
+}
