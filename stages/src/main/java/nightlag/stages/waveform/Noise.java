@@ -1,6 +1,7 @@
 package nightlag.stages.waveform;
 
 import java.util.Arrays;
+import java.util.Optional;
 import nightlag.stages.numeric.RealTransform;
 import nightlag.stages.numeric.RealTransform.Bins;
 
@@ -19,6 +20,8 @@ final class Noise {
     private static final int REACH_BINS = 12;
 
     private static final double REACH_CYCLES = 4;
+    /** The level at an order may differ from the mean of its bins by this factor at most. */
+    private static final double MOST_TILT = 2;
 
     /**
      * A noise level.
@@ -119,10 +122,9 @@ final class Noise {
     private Level nearest(double centre, double reach, double[] variances, double[] left, int channel) {
         int below = (int) Math.floor(centre);
         int above = below + 1;
-        int bins = 0;
-        double sum = 0;
-        double freedom = 0;
-        while (bins < WANTED_BINS) {
+        int[] bins = new int[WANTED_BINS];
+        int found = 0;
+        while (found < WANTED_BINS) {
             boolean belowIn = below >= 1 && centre - below <= reach;
             boolean aboveIn = above < left.length && above - centre <= reach;
             if (!belowIn && !aboveIn) {
@@ -131,12 +133,42 @@ final class Noise {
             boolean down = belowIn && (!aboveIn || centre - below <= above - centre);
             int k = down ? below-- : above++;
             if (k < left.length && left[k] > LEAST_LEFT) {
-                sum += variances[k];
-                freedom += 2 * left[k];
-                bins++;
+                bins[found++] = k;
             }
         }
-        return bins < FEWEST_BINS ? whole[channel] : new Level(sum / bins, freedom, false);
+        return found < FEWEST_BINS
+                ? whole[channel]
+                : levelAt(centre, Arrays.copyOf(bins, found), variances, left).orElse(whole[channel]);
+    }
+
+    /**
+     * The level at the order from the bins around it. Where they lie unevenly (near the record's lowest bins more of them
+     * are above than below) it is read off a straight line through them, at the price of some degrees of freedom: noise
+     * that falls with frequency would else come out too low. Empty where the line is worth fewer bins than are needed.
+     */
+    private static Optional<Level> levelAt(double centre, int[] bins, double[] variances, double[] left) {
+        double mean = 0;
+        double middle = 0;
+        double freedom = 0;
+        for (int k : bins) {
+            mean += variances[k] / bins.length;
+            middle += (k - centre) / bins.length;
+            freedom += 2 * left[k];
+        }
+        double spread = 0;
+        double slope = 0;
+        for (int k : bins) {
+            double offset = k - centre - middle;
+            spread += offset * offset;
+            slope += offset * variances[k];
+        }
+        slope /= spread;
+        double worth = 1 / (1 + middle * middle * bins.length / spread);
+        if (bins.length * worth < FEWEST_BINS) {
+            return Optional.empty();
+        }
+        double level = Math.max(mean / MOST_TILT, Math.min(mean * MOST_TILT, mean - slope * middle));
+        return Optional.of(new Level(level, freedom * worth, false));
     }
 
     /** n‖Qᴴe‖² of one bin over the columns of the model. */

@@ -2,15 +2,18 @@ package nightlag.stages.waveform;
 
 import static org.assertj.core.api.Assertions.assertThat;
 
-import java.util.ArrayList;
 import java.util.List;
 import java.util.Locale;
+import java.util.Random;
+import java.util.stream.Stream;
 import nightlag.stages.numeric.Cholesky;
 import nightlag.stages.numeric.Complex;
 import org.apache.commons.math3.distribution.TDistribution;
 import org.junit.jupiter.api.Tag;
-import org.junit.jupiter.api.Test;
 import org.junit.jupiter.api.condition.EnabledIfSystemProperty;
+import org.junit.jupiter.params.ParameterizedTest;
+import org.junit.jupiter.params.provider.Arguments;
+import org.junit.jupiter.params.provider.MethodSource;
 
 /**
  * The error of the extraction against the Cramér–Rao bound, and how often its 95 % intervals hold the truth, by Monte Carlo.
@@ -31,7 +34,8 @@ class ExtractionStudyTest {
             Drift drift,
             double memory,
             double missing,
-            double jitter) {
+            double jitter,
+            double spikes) {
         Recording recording(long seed) {
             double part = Math.pow(10, -snrDb / 20) / Math.sqrt(2);
             double[] drift = {0.3, drift().degree() > 0 ? 0.2 : 0, drift().degree() > 1 ? -0.1 : 0};
@@ -59,14 +63,28 @@ class ExtractionStudyTest {
     }
 
     /** Outcome: rms errors over the bound, and coverages. */
-    private record Outcome(double storage, double loss, double phase, double coverStorage, double coverLoss) {}
+    private record Outcome(
+            int draws, double storage, double loss, double phase, double coverStorage, double coverLoss) {
+        /** Three standard errors of the study itself are allowed for. */
+        void requireErrors(double limit) {
+            double allowed = limit * (1 + 3 / Math.sqrt(2.0 * draws));
+            assertThat(List.of(storage, loss, phase))
+                    .allSatisfy(ratio -> assertThat(ratio).isLessThan(allowed));
+        }
+
+        void requireCoverage(double low, double high) {
+            double error = 3 * Math.sqrt(0.95 * 0.05 / draws);
+            assertThat(coverStorage).isBetween(low - error, high + error);
+            assertThat(coverLoss).isBetween(low - error, high + error);
+        }
+    }
 
     private static Outcome run(Condition condition, int draws) throws Exception {
         double[] squares = new double[3];
         int[] held = new int[2];
         double[] bound = new double[3];
         for (int k = 0; k < draws; k++) {
-            Waveform waveform = condition.recording(1000 + k).build();
+            Waveform waveform = spiked(condition, condition.recording(1000 + k).build(), 1000 + k);
             if (k == 0 || condition.missing() > 0 || condition.jitter() > 0) {
                 double[] own = bound(waveform, condition);
                 for (int i = 0; i < 3; i++) {
@@ -92,11 +110,32 @@ class ExtractionStudyTest {
             }
         }
         return new Outcome(
+                draws,
                 Math.sqrt(squares[0] / bound[0]),
                 Math.sqrt(squares[1] / bound[1]),
                 Math.sqrt(squares[2] / bound[2]),
                 held[0] / (double) draws,
                 held[1] / (double) draws);
+    }
+
+    /** Ten amplitudes on some samples of either channel. */
+    private static Waveform spiked(Condition condition, Waveform waveform, long seed) {
+        if (condition.spikes() == 0) {
+            return waveform;
+        }
+        Random random = new Random(seed);
+        double[] deformation = waveform.deformation().clone();
+        double[] load = waveform.load().clone();
+        for (int k = 0; k < Math.round(condition.spikes() * waveform.size()); k++) {
+            double sign = random.nextBoolean() ? 10 : -10;
+            int place = random.nextInt(waveform.size());
+            if (random.nextBoolean()) {
+                load[place] += sign * STRESS.abs();
+            } else {
+                deformation[place] += sign * STRAIN.abs();
+            }
+        }
+        return new Waveform(waveform.timeS(), deformation, load, new double[0], waveform.nominalFrequencyHz(), 0);
     }
 
     private static double[] uncertainties(SignalFit fit, Complex modulus) {
@@ -196,66 +235,80 @@ class ExtractionStudyTest {
         };
     }
 
-    @Test
-    void whiteNoise() throws Exception {
-        List<String> table = new ArrayList<>();
-        for (Drift drift : Drift.values()) {
-            for (double cycles : new double[] {1.5, 1.6, 1.8, 2, 2.5}) {
-                for (double perCycle : new double[] {16, 40}) {
-                    for (double snr : new double[] {20, 40, 80}) {
-                        if (cycles * perCycle > 3000) {
-                            continue;
-                        }
-                        int draws = cycles * perCycle > 600 ? 500 : 600;
-                        report(table, new Condition(cycles, perCycle, snr, drift, 0, 0, 0), draws);
-                    }
+    static Stream<Arguments> whiteNoise() {
+        Stream.Builder<Arguments> conditions = Stream.builder();
+        for (double cycles : new double[] {1.5, 2.2, 3, 5.4, 12, 50}) {
+            for (double perCycle : new double[] {16, 50, 400}) {
+                if (cycles * perCycle < 3000) {
+                    double snr = perCycle < 20 ? 80 : perCycle < 100 ? 20 : 45;
+                    Drift drift = perCycle > 100 ? Drift.QUADRATIC : Drift.LINEAR;
+                    conditions.add(Arguments.of(new Condition(cycles, perCycle, snr, drift, 0, 0, 0, 0)));
                 }
             }
         }
-        assertThat(table).isNotEmpty();
+        return conditions.build();
     }
 
-    @Test
-    void rememberingNoise() throws Exception {
-        List<String> table = new ArrayList<>();
-        for (double cycles : new double[] {5, 6.4, 10, 20}) {
-            for (double perCycle : new double[] {16, 40, 256}) {
-                report(
-                        table,
-                        new Condition(cycles, perCycle, 40, Drift.LINEAR, 0.7, 0, 0),
-                        cycles * perCycle > 600 ? 500 : 1500);
+    /** RMS error at most 1.05 of the bound, intervals that hold the truth in 93–97 % from 3 cycles up, 90–98 % below. */
+    @ParameterizedTest(name = "{0}")
+    @MethodSource("whiteNoise")
+    void whiteNoiseIsMetAtTheBound(Condition condition) throws Exception {
+        Outcome outcome = report(condition);
+        outcome.requireErrors(1.05);
+        outcome.requireCoverage(condition.cycles() < 3 ? 0.90 : 0.93, condition.cycles() < 3 ? 0.98 : 0.97);
+    }
+
+    static Stream<Arguments> rememberingNoise() {
+        Stream.Builder<Arguments> conditions = Stream.builder();
+        for (double cycles : new double[] {5, 6.4, 20}) {
+            for (double perCycle : new double[] {16, 40, 200}) {
+                conditions.add(Arguments.of(new Condition(cycles, perCycle, 40, Drift.LINEAR, 0.7, 0, 0, 0)));
             }
         }
-        assertThat(table).isNotEmpty();
+        return conditions.build();
     }
 
-    @Test
-    void missingRowsAndJitter() throws Exception {
-        List<String> table = new ArrayList<>();
-        for (double cycles : new double[] {3, 5, 10}) {
-            for (double perCycle : new double[] {16, 64}) {
-                report(table, new Condition(cycles, perCycle, 40, Drift.LINEAR, 0, 0.02, 0.01), 800);
-            }
-        }
-        assertThat(table).isNotEmpty();
+    /** Under first-order memory (coefficient 0.7) the intervals hold the truth in 92–98 % from 5 cycles up. */
+    @ParameterizedTest(name = "{0}")
+    @MethodSource("rememberingNoise")
+    void noiseWithMemoryIsMeasuredBesideTheBin(Condition condition) throws Exception {
+        report(condition).requireCoverage(0.92, 0.98);
     }
 
-    private static void report(List<String> table, Condition condition, int draws) throws Exception {
-        Outcome outcome = run(condition, draws);
-        String line = String.format(
+    static Stream<Arguments> damage() {
+        return Stream.of(
+                Arguments.of(new Condition(3, 16, 40, Drift.LINEAR, 0, 0.02, 0.01, 0), 1.1),
+                Arguments.of(new Condition(5.5, 64, 40, Drift.LINEAR, 0, 0.02, 0.01, 0), 1.1),
+                Arguments.of(new Condition(5, 200, 40, Drift.LINEAR, 0, 0, 0, 0.005), 1.2),
+                Arguments.of(new Condition(10, 64, 30, Drift.LINEAR, 0, 0, 0, 0.005), 1.2));
+    }
+
+    /** 2 % of rows missing and 1 % jitter: 1.1 of the bound of what is left; 0.5 % spikes of ten amplitudes: 1.2. */
+    @ParameterizedTest(name = "{0}")
+    @MethodSource("damage")
+    void damageCostsLittle(Condition condition, double limit) throws Exception {
+        report(condition).requireErrors(limit);
+    }
+
+    private static Outcome report(Condition condition) throws Exception {
+        Outcome outcome = run(condition, condition.cycles() * condition.samplesPerCycle() > 500 ? 400 : 1000);
+        System.out.printf(
                 Locale.ROOT,
-                "%-9s c=%4.1f M=%5.0f SNR %2.0f dB AR %.1f | rms/bound G' %.3f G'' %.3f delta %.3f | cover G' %.3f G'' %.3f",
+                "%-9s %4.1f cycles of %3.0f, %2.0f dB, memory %.1f, missing %.3f, jitter %.3f, spikes %.3f |"
+                        + " rms/bound G' %.3f G'' %.3f delta %.3f | 95 %% hold G' %.3f G'' %.3f%n",
                 condition.drift(),
                 condition.cycles(),
                 condition.samplesPerCycle(),
                 condition.snrDb(),
                 condition.memory(),
+                condition.missing(),
+                condition.jitter(),
+                condition.spikes(),
                 outcome.storage(),
                 outcome.loss(),
                 outcome.phase(),
                 outcome.coverStorage(),
                 outcome.coverLoss());
-        System.out.println(line);
-        table.add(line);
+        return outcome;
     }
 }
