@@ -7,11 +7,9 @@ import java.util.ArrayList;
 import java.util.Iterator;
 import java.util.List;
 import java.util.Optional;
-import nightlag.pipeline.archive.Archive;
 import nightlag.pipeline.archive.ArchiveException;
 import nightlag.pipeline.archive.LotName;
 import nightlag.pipeline.archive.LotState;
-import nightlag.pipeline.config.Configuration;
 import nightlag.pipeline.config.Fingerprints;
 import nightlag.pipeline.config.Grade;
 import nightlag.pipeline.tables.LotTables;
@@ -28,26 +26,10 @@ import org.apache.logging.log4j.Logger;
 final class LotStage {
     private static final Logger LOG = LogManager.getLogger(LotStage.class);
 
-    private final Configuration configuration;
-    private final RunOptions options;
-    private final String version;
-    private final int workers;
-    private final Archive archive;
-    private final Tally tally;
+    private final NightWork night;
 
-    LotStage(
-            Configuration configuration,
-            RunOptions options,
-            String version,
-            int workers,
-            Archive archive,
-            Tally tally) {
-        this.configuration = configuration;
-        this.options = options;
-        this.version = version;
-        this.workers = workers;
-        this.archive = archive;
-        this.tally = tally;
+    LotStage(NightWork night) {
+        this.night = night;
     }
 
     /** A lot with everything it is concluded from. */
@@ -59,13 +41,13 @@ final class LotStage {
     /** Rebuilds what is due; the lots of a grade that has no right grade file stay due. */
     void work() throws ArchiveException, IOException, NightFault {
         List<LotState> due = new ArrayList<>();
-        for (LotState lot : archive.lots()) {
-            Grade grade = configuration.grades().get(lot.name().grade());
-            if (grade != null && options.wants(lot.name()) && isDue(lot, grade)) {
+        for (LotState lot : night.archive().lots()) {
+            Grade grade = night.configuration().grades().get(lot.name().grade());
+            if (grade != null && night.options().wants(lot.name()) && isDue(lot, grade)) {
                 due.add(lot);
             }
         }
-        try (SideBySide<Due, Concluded> results = new SideBySide<>(read(due), LotStage::conclude, workers)) {
+        try (SideBySide<Due, Concluded> results = new SideBySide<>(read(due), LotStage::conclude, night.workers())) {
             while (results.hasNext()) {
                 publish(results.next());
             }
@@ -76,13 +58,15 @@ final class LotStage {
 
     private boolean isDue(LotState lot, Grade grade) {
         Path points = LotTables.folder(
-                        configuration.results(), lot.name().grade(), lot.name().lot())
+                        night.configuration().results(),
+                        lot.name().grade(),
+                        lot.name().lot())
                 .resolve("points.csv");
         return lot.due() || !lot.conclusionFingerprint().equals(conclusionState(grade)) || !Files.exists(points);
     }
 
     private String conclusionState(Grade grade) {
-        return Fingerprints.of(version, grade.conclusionFingerprint());
+        return Fingerprints.of(night.version(), grade.conclusionFingerprint());
     }
 
     /** Reads each lot from the archive only when its turn has nearly come. */
@@ -91,7 +75,10 @@ final class LotStage {
                 .map(LotState::name)
                 .map(lot -> {
                     try {
-                        return new Due(lot, configuration.grades().get(lot.grade()), archive.reductions(lot));
+                        return new Due(
+                                lot,
+                                night.configuration().grades().get(lot.grade()),
+                                night.archive().reductions(lot));
                     } catch (ArchiveException e) {
                         throw new UncheckedArchiveException(e);
                     }
@@ -113,16 +100,16 @@ final class LotStage {
     private void publish(Concluded concluded) throws ArchiveException, IOException, NightFault {
         LotName lot = concluded.due().lot();
         if (concluded.result().isEmpty()) {
-            tally.notConcluded(lot, concluded.reason());
+            night.tally().notConcluded(lot, concluded.reason());
             return;
         }
         Grade grade = concluded.due().grade();
         LotResult result = concluded.result().get();
         try {
-            LotTables.write(configuration.results(), result, provenance(lot, grade));
+            LotTables.write(night.configuration().results(), result, provenance(lot, grade));
         } catch (TableInUseException e) {
             // the lot stays due
-            tally.notConcluded(lot, e.getMessage());
+            night.tally().notConcluded(lot, e.getMessage());
             return;
         } catch (IOException e) {
             throw new NightFault(
@@ -131,21 +118,22 @@ final class LotStage {
                             .formatted(lot.grade(), lot.lot(), IoSentences.of(e)),
                     e);
         }
-        archive.concluded(lot, conclusionState(grade));
-        tally.concluded(lot, result.notes().stream().map(Reason::sentence).toList());
+        night.archive().concluded(lot, conclusionState(grade));
+        night.tally()
+                .concluded(lot, result.notes().stream().map(Reason::sentence).toList());
     }
 
     private Provenance provenance(LotName lot, Grade grade) throws ArchiveException {
         return new Provenance(
                 lot.grade(),
                 lot.lot(),
-                archive.filesOf(lot).stream()
+                night.archive().filesOf(lot).stream()
                         .map(file -> new Provenance.Input(file.tableName(), file.sha256()))
                         .toList(),
                 List.of(
                         new Provenance.Plan("reduction", grade.reductionFingerprint()),
                         new Provenance.Plan("conclusion", grade.conclusionFingerprint())),
-                version);
+                night.version());
     }
 
     /** Carries an archive fault out of a stream. */

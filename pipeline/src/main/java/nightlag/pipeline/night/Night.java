@@ -81,8 +81,9 @@ public final class Night {
         Survey survey = Survey.of(configuration, archive.files(), runSheets, options.redo(), version, clock);
         Tally tally = new Tally(folder);
         survey.unreadable().forEach(tally::unreadable);
-        new FileStage(configuration, options, progress, version, workers(), archive, tally).work(survey, runSheets);
-        new LotStage(configuration, options, version, workers(), archive, tally).work();
+        NightWork night = new NightWork(configuration, options, version, workers(), archive, tally);
+        new FileStage(night, progress).work(survey, runSheets);
+        new LotStage(night).work();
         NightOutcome outcome = tally.outcome();
         NightTables.writeFiles(folder, outcome.files());
         LOG.info(
