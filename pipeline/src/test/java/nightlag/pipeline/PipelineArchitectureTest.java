@@ -9,6 +9,11 @@ import com.tngtech.archunit.core.importer.ImportOption;
 import com.tngtech.archunit.junit.AnalyzeClasses;
 import com.tngtech.archunit.junit.ArchTest;
 import com.tngtech.archunit.lang.ArchRule;
+import nightlag.pipeline.archive.Archive;
+import nightlag.pipeline.decode.RawFileDecoder;
+import nightlag.pipeline.intake.IntakeScan;
+import nightlag.pipeline.tables.LotTables;
+import nightlag.pipeline.tables.NightTables;
 
 /** The rules that keep the rooms of the pipeline apart: the night alone knows them all. */
 @AnalyzeClasses(packages = "nightlag.pipeline", importOptions = ImportOption.DoNotIncludeTests.class)
@@ -50,6 +55,15 @@ class PipelineArchitectureTest {
             .doNotHaveFullyQualifiedName("nightlag.pipeline.cli.Nightlag")
             .should()
             .callMethod(System.class, "exit", int.class);
+
+    /** It prints what the night found; it reads and writes nothing itself. */
+    @ArchTest
+    static final ArchRule theCommandLineLeavesTheWorkToTheNight = noClasses()
+            .that()
+            .resideInAPackage("nightlag.pipeline.cli..")
+            .should()
+            .dependOnClassesThat()
+            .belongToAnyOf(Archive.class, IntakeScan.class, LotTables.class, NightTables.class, RawFileDecoder.class);
 
     private static Room room(String name) {
         return new Room(name);

@@ -11,6 +11,10 @@ import com.tngtech.archunit.core.importer.ImportOption;
 import com.tngtech.archunit.junit.AnalyzeClasses;
 import com.tngtech.archunit.junit.ArchTest;
 import com.tngtech.archunit.lang.ArchRule;
+import java.util.Date;
+import java.util.Locale;
+import java.util.Random;
+import java.util.TimeZone;
 
 /** The rules that keep the stages pure and in their order. */
 @AnalyzeClasses(packages = "nightlag.stages", importOptions = ImportOption.DoNotIncludeTests.class)
@@ -65,7 +69,9 @@ class StagesArchitectureTest {
             .areDeclaredInClassesThat()
             .resideInAPackage("nightlag.stages.numeric..")
             .should()
-            .notHaveRawReturnType(NUMERICAL_LIBRARIES);
+            .notHaveRawReturnType(NUMERICAL_LIBRARIES)
+            .andShould()
+            .notHaveRawParameterTypes(DescribedPredicate.anyElementThat(NUMERICAL_LIBRARIES));
 
     @ArchTest
     static final ArchRule stagesTouchNothingOfTheWorld = noClasses()
@@ -92,6 +98,21 @@ class StagesArchitectureTest {
             .callMethod(System.class, "getProperty", String.class)
             .orShould()
             .callMethod(System.class, "getenv", String.class)
+            .orShould()
+            .callMethod(System.class, "getenv")
+            .orShould()
+            .callMethod(Locale.class, "getDefault")
+            .orShould()
+            .callMethod(String.class, "format", String.class, Object[].class)
+            .orShould()
+            .callMethod(String.class, "formatted", Object[].class)
+            .orShould()
+            .callMethod(Math.class, "random")
+            .orShould()
+            .callConstructor(Random.class)
+            .orShould()
+            .dependOnClassesThat()
+            .belongToAnyOf(Date.class, TimeZone.class)
             .orShould()
             .dependOnClassesThat()
             .areAssignableTo(Thread.class)

@@ -39,8 +39,6 @@ import picocli.CommandLine.Spec;
         exitCodeList = {"0:the configuration is right", "2:something in the configuration is wrong; all of it is listed"
         })
 final class CheckCommand implements Callable<Integer> {
-    private static final int MOST_FILES = 20;
-
     @Spec
     private CommandSpec spec;
 
@@ -59,9 +57,11 @@ final class CheckCommand implements Callable<Integer> {
         try {
             Configuration configuration = ConfigurationReader.read(nightFile);
             print(configuration, out);
-            print(Preview.of(configuration, Clock.system(ZoneId.systemDefault())), out);
+            Preview preview = Preview.of(configuration, Clock.system(ZoneId.systemDefault()));
+            print(preview, out);
             configuration.gradeProblems().forEach(problem -> err.println(problem.sentence()));
-            return configuration.gradeProblems().isEmpty() ? Nightlag.ALL_WELL : Nightlag.CANNOT_BEGIN;
+            boolean right = configuration.gradeProblems().isEmpty() && preview.someIntakeReadable();
+            return right ? Nightlag.ALL_WELL : Nightlag.CANNOT_BEGIN;
         } catch (ConfigurationException e) {
             e.problems().forEach(problem -> err.println(problem.sentence()));
             return Nightlag.CANNOT_BEGIN;
@@ -74,10 +74,7 @@ final class CheckCommand implements Callable<Integer> {
     private static void print(Configuration configuration, PrintWriter out) {
         out.println(
                 "grades    " + configuration.grades().keySet().stream().sorted().collect(Collectors.joining(", ")));
-        configuration.notActedOn().forEach(out::println);
-        configuration.grades().values().stream()
-                .sorted((a, b) -> a.name().compareTo(b.name()))
-                .forEach(grade -> grade.notActedOn().forEach(line -> out.println(grade.name() + ": " + line)));
+        NotActedOn.print(configuration, out);
     }
 
     private static void print(Preview preview, PrintWriter out) {
@@ -87,13 +84,20 @@ final class CheckCommand implements Callable<Integer> {
         list(out, "waits for", preview.waiting());
         preview.unreadable().forEach(line -> out.println("cannot be read: " + line));
         preview.firstFiles().forEach((intake, first) -> print(out, intake, first));
+        List<String> problems = preview.firstFiles().values().stream()
+                .flatMap(Optional::stream)
+                .map(FirstFile::problem)
+                .filter(problem -> !problem.isEmpty())
+                .toList();
+        if (!problems.isEmpty()) {
+            out.println();
+            out.println("look at: first files that would be set aside (" + problems.size() + ")");
+            problems.forEach(problem -> out.println("  " + problem));
+        }
     }
 
     private static void list(PrintWriter out, String heading, List<RawFile> files) {
-        files.stream().limit(MOST_FILES).forEach(file -> out.println("  " + heading + " " + file.tableName()));
-        if (files.size() > MOST_FILES) {
-            out.println("  and " + (files.size() - MOST_FILES) + " more");
-        }
+        files.forEach(file -> out.println("  " + heading + " " + file.tableName()));
     }
 
     private static void print(PrintWriter out, Intake intake, Optional<FirstFile> first) {
@@ -102,10 +106,11 @@ final class CheckCommand implements Callable<Integer> {
                 + intake.instrument().name());
         if (first.isEmpty()) {
             out.println("  no file matches " + intake.instrument().files().match());
-        } else if (first.get().description().isEmpty()) {
-            out.println("  " + first.get().problem());
-        } else {
-            print(out, first.get().description().get());
+            return;
+        }
+        first.get().description().ifPresent(description -> print(out, description));
+        if (!first.get().problem().isEmpty()) {
+            out.println("  would be set aside: " + first.get().problem());
         }
     }
 

@@ -1,7 +1,10 @@
 package nightlag.pipeline.cli;
 
+import java.io.Console;
 import java.io.PrintWriter;
+import java.nio.charset.Charset;
 import java.nio.charset.StandardCharsets;
+import java.util.Optional;
 import nightlag.pipeline.night.ProgramVersion;
 import picocli.CommandLine;
 import picocli.CommandLine.Command;
@@ -35,10 +38,11 @@ public final class Nightlag implements Runnable {
 
     /** Starts the program; the only place that ends the process. */
     public static void main(String[] args) {
-        System.exit(execute(
-                new PrintWriter(System.out, true, StandardCharsets.UTF_8),
-                new PrintWriter(System.err, true, StandardCharsets.UTF_8),
-                args));
+        // a Windows console has a code page of its own
+        Charset charset =
+                Optional.ofNullable(System.console()).map(Console::charset).orElse(StandardCharsets.UTF_8);
+        System.exit(
+                execute(new PrintWriter(System.out, true, charset), new PrintWriter(System.err, true, charset), args));
     }
 
     /** Runs one command line against these streams and returns its exit code. */
@@ -46,7 +50,7 @@ public final class Nightlag implements Runnable {
         return new CommandLine(new Nightlag())
                 .setOut(out)
                 .setErr(err)
-                .setCaseInsensitiveEnumValuesAllowed(true)
+                .setExpandAtFiles(false)
                 .setExecutionExceptionHandler((fault, command, parsed) -> {
                     err.println("nightlag: stopped by an internal fault: " + fault);
                     fault.printStackTrace(err);

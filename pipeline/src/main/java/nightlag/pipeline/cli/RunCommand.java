@@ -34,7 +34,7 @@ import picocli.CommandLine.Spec;
         versionProvider = Nightlag.Version.class,
         exitCodeListHeading = "%nExit codes:%n",
         exitCodeList = {
-            "0:all went well; files that wait count as well",
+            "0:all went well; files that wait, and files set aside earlier and not changed since, count as well",
             "1:finished, but files were set aside, an intake could not be read, or a lot could not be concluded; each is named",
             "2:the command line, the night file or an instrument file is wrong, or no intake can be read: nothing was touched",
             "3:stopped by a fault; what was done is kept and the same command carries on"
@@ -80,7 +80,7 @@ final class RunCommand implements Callable<Integer> {
         try {
             Configuration configuration = ConfigurationReader.read(nightFile);
             if (!quiet) {
-                configuration.notActedOn().forEach(out::println);
+                NotActedOn.print(configuration, out);
             }
             Night night = new Night(
                     configuration,

@@ -8,7 +8,6 @@ import java.util.Map;
 import java.util.stream.Collectors;
 import nightlag.pipeline.archive.LotName;
 import nightlag.pipeline.config.Configuration;
-import nightlag.pipeline.config.Grade;
 import nightlag.pipeline.night.NightOutcome;
 import nightlag.pipeline.tables.NightFileRow.Status;
 import nightlag.stages.moduli.Quality;
@@ -45,7 +44,6 @@ final class Summary {
                             .collect(Collectors.joining(", ")));
         }
         out.println("lots    " + outcome.lotsConcluded().size() + " rebuilt");
-        grades().forEach(grade -> grade.notActedOn().forEach(line -> out.println(grade.name() + ": " + line)));
         list(out, "look at: set aside", outcome.newlySetAside());
         list(out, "look at: points that are not sound", outcome.notSound());
         list(out, "look at: intakes that cannot be read", outcome.unreadableIntakes());
@@ -64,14 +62,6 @@ final class Summary {
                         .map(problem -> problem.sentence())
                         .toList());
         out.println("in      " + outcome.folder());
-    }
-
-    private List<Grade> grades() {
-        return outcome.lotsConcluded().keySet().stream()
-                .map(LotName::grade)
-                .distinct()
-                .map(configuration.grades()::get)
-                .toList();
     }
 
     private List<String> notes() {

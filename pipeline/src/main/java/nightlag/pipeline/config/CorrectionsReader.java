@@ -31,6 +31,7 @@ final class CorrectionsReader {
         OptionalDouble mass = section.si(InstrumentKeys.MOVING_MASS);
         OptionalDouble damping = section.si(InstrumentKeys.DAMPING);
         Optional<MeasuringWall> wall = section.word(InstrumentKeys.TORQUE_AT, MeasuringWall.class);
+        // What corrects the other drive is left alone: a bench may name both.
         // Files of stress and strain leave open which of the two it is; a geometry may say so later.
         boolean turns = named.contains(ChannelName.TORQUE) || named.contains(ChannelName.ANGLE);
         boolean pulls = named.contains(ChannelName.FORCE) || named.contains(ChannelName.DISPLACEMENT);
@@ -42,13 +43,6 @@ final class CorrectionsReader {
                             "[corrections]",
                             "points already reduced cannot be corrected",
                             "no such section with layout moduli"));
-        } else {
-            refuseIf(section, pulls, "torque and angle", List.of(InstrumentKeys.INERTIA, InstrumentKeys.FRICTION));
-            refuseIf(
-                    section,
-                    turns,
-                    "force and displacement",
-                    List.of(InstrumentKeys.MOVING_MASS, InstrumentKeys.DAMPING));
         }
         boolean complete = delay.isPresent()
                 && inertia.isPresent()
@@ -110,13 +104,5 @@ final class CorrectionsReader {
                 && Quantity.parse(text, QuantityKind.LINEAR_COMPLIANCE)
                         .toOptional()
                         .isPresent();
-    }
-
-    private static void refuseIf(SectionReader section, boolean other, String channels, List<Key> keys) {
-        for (Key key : keys) {
-            if (section.has(key) && other) {
-                section.wrong(key, "the channels are not " + channels, "it with the channels " + channels);
-            }
-        }
     }
 }

@@ -124,9 +124,10 @@ record GradeFolder(Map<String, Grade> right, Map<String, List<Problem>> wrong, L
                         "the name that records carry in their tag grade");
             }
             List<String> chain = chain(id);
-            Node.Table merged = file.root();
-            for (String ancestor : chain.subList(1, chain.size())) {
-                merged = Merge.over(files.get(ancestor).root(), merged);
+            // from the oldest ancestor down, so that each file is laid over all that it inherits
+            Node.Table merged = files.get(chain.get(chain.size() - 1)).root();
+            for (int i = chain.size() - 2; i >= 0; i--) {
+                merged = Merge.over(merged, files.get(chain.get(i)).root());
             }
             return GradeReader.read(nameOf(file).orElse(""), fileNames.get(id), merged, problems);
         }

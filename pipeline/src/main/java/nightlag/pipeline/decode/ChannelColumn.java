@@ -13,6 +13,7 @@ import nightlag.pipeline.config.Unit;
 /**
  * A channel in one file: which cell it is and what the number in it means.
  *
+ * @param kind what its values stand for
  * @param channel the channel as the instrument file has it
  * @param index position of its cell from 0
  * @param unit the unit in force in this file
@@ -20,21 +21,29 @@ import nightlag.pipeline.config.Unit;
  * @param decimal decimal sign
  * @param complaints the file's
  */
-record ChannelColumn(Channel channel, int index, Unit unit, String unitFrom, char decimal, Complaints complaints) {
+record ChannelColumn(
+        QuantityKind kind,
+        Channel channel,
+        int index,
+        Unit unit,
+        String unitFrom,
+        char decimal,
+        Complaints complaints) {
 
     /** The channels of a file. */
     static Map<ChannelName, ChannelColumn> of(Instrument instrument, Columns columns) throws DecodeException {
         Map<ChannelName, ChannelColumn> found = new EnumMap<>(ChannelName.class);
         for (Map.Entry<ChannelName, Channel> entry : new TreeMap<>(instrument.channels()).entrySet()) {
             Channel channel = entry.getValue();
-            QuantityKind kind = channel.sensitivity().isPresent()
+            QuantityKind kindOfCell = channel.sensitivity().isPresent()
                     ? QuantityKind.VOLTAGE
                     : entry.getKey().kind();
             int index = columns.indexOf(channel.column());
-            Optional<Unit> inFile = columns.unitOf(index, channel.column(), kind);
+            Optional<Unit> inFile = columns.unitOf(index, channel.column(), kindOfCell);
             found.put(
                     entry.getKey(),
                     new ChannelColumn(
+                            entry.getKey().kind(),
                             channel,
                             index,
                             inFile.orElse(channel.unit()),
@@ -55,6 +64,9 @@ record ChannelColumn(Channel channel, int index, Unit unit, String unitFrom, cha
         double si = (channel.invert() ? -value : value) * channel.sensitivity().orElse(1);
         if (!Double.isFinite(si)) {
             throw Quantities.notANumber(cells.text(index), decimal, spot(line));
+        }
+        if (si <= 0 && (kind == QuantityKind.TEMPERATURE || kind == QuantityKind.FREQUENCY)) {
+            Quantities.possible(si, kind, cells.text(index), spot(line));
         }
         return si;
     }

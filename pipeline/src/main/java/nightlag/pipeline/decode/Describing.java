@@ -12,6 +12,7 @@ import java.util.OptionalDouble;
 import nightlag.pipeline.config.ChannelName;
 import nightlag.pipeline.config.Layout;
 import nightlag.pipeline.config.TagName;
+import nightlag.pipeline.config.TagSource;
 import nightlag.pipeline.intake.RawFile;
 import nightlag.stages.RecordTags;
 
@@ -57,9 +58,32 @@ final class Describing {
                                 table.columns(),
                                 firstValues.get(channel.getKey())))
                         .toList(),
-                values.entrySet().stream()
-                        .map(tag -> tag(tag.getKey(), tag.getValue()))
-                        .toList());
+                tags(values, file.intake().instrument().tags()));
+    }
+
+    /** What is set, and what the instrument file names a source for but this file does not hold. */
+    private static List<FileDescription.DescribedTag> tags(
+            Map<TagName, TagValue> values, Map<TagName, TagSource> sources) {
+        List<FileDescription.DescribedTag> tags = new ArrayList<>();
+        for (TagName name : TagName.values()) {
+            if (values.containsKey(name)) {
+                tags.add(tag(name, values.get(name)));
+            } else if (sources.containsKey(name)) {
+                tags.add(new FileDescription.DescribedTag(
+                        name, "not set", Optional.empty(), "nowhere: " + sought(sources.get(name))));
+            }
+        }
+        return tags;
+    }
+
+    private static String sought(TagSource source) {
+        if (source instanceof TagSource.Preamble preamble) {
+            return "no line '" + preamble.label() + "' with a value above the header";
+        }
+        if (source instanceof TagSource.RunSheet sheet) {
+            return "no cell '" + sheet.column() + "' in a run sheet's row for this file";
+        }
+        return "its source is empty";
     }
 
     private static void addDefaults(Map<TagName, TagValue> values, FileFacts facts, Layout layout, int line)

@@ -31,11 +31,24 @@ final class Quantities {
         double number = Numerals.parse(parts.group(1), decimal);
         String written = Cells.trim(parts.group(2));
         if (!written.isEmpty()) {
-            return finite(UnitText.required(written, kind, spot).toSi(number), text, decimal, spot);
+            double si = finite(UnitText.required(written, kind, spot).toSi(number), text, decimal, spot);
+            return possible(si, kind, text, spot);
         }
         Unit known =
                 unit.orElseThrow(() -> spot.complaint(Complaints.shown(text) + " without a unit", Units.allowed(kind)));
-        return finite(known.toSi(number), text, decimal, spot);
+        return possible(finite(known.toSi(number), text, decimal, spot), kind, text, spot);
+    }
+
+    /** A value that can be, of its kind: no temperature below absolute zero, no frequency that is not above zero. */
+    static double possible(double si, QuantityKind kind, String text, Spot spot) throws DecodeException {
+        if (kind == QuantityKind.TEMPERATURE && si < 0) {
+            throw spot.complaint(
+                    Complaints.shown(text) + ", which is below absolute zero", "a temperature above −273.15 °C");
+        }
+        if (kind == QuantityKind.FREQUENCY && si <= 0) {
+            throw spot.complaint(Complaints.shown(text) + ", which is no frequency", "a frequency above 0");
+        }
+        return si;
     }
 
     /** A value that was read from a text, if it is one. */

@@ -195,14 +195,6 @@ final class WaveformRows implements RowTaker {
         if (rate.isEmpty()) {
             throw facts.recordFacts().missing(TagName.SAMPLE_RATE, firstLine);
         }
-        if (!(rate.getAsDouble() > 0)) {
-            throw facts.complaints()
-                    .at(
-                            firstLine,
-                            "tag " + TagName.SAMPLE_RATE.word(),
-                            Complaints.shown(values.get(TagName.SAMPLE_RATE).text()),
-                            "a rate above 0");
-        }
         return rate.getAsDouble();
     }
 }

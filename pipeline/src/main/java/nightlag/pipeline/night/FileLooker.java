@@ -2,6 +2,7 @@ package nightlag.pipeline.night;
 
 import java.io.IOException;
 import java.nio.file.Files;
+import java.nio.file.InvalidPathException;
 import java.nio.file.attribute.BasicFileAttributes;
 import java.util.ArrayList;
 import java.util.HashMap;
@@ -77,12 +78,14 @@ final class FileLooker {
             return setAside(candidate, sha256, e.problem().sentence(), records, false);
         } catch (IOException e) {
             String reason = file.tableName() + ": cannot be read: " + IoSentences.of(e);
-            return new Look.SetAside(sha256, reason, records.lots, records.specimens, ReductionState.TRY_AGAIN, true);
+            return tryAgain(candidate, sha256, reason, records);
+        } catch (InvalidPathException e) {
+            return tryAgain(candidate, sha256, file.tableName() + ": " + IoSentences.of(e), records);
         } catch (RuntimeException | StackOverflowError e) {
             // a bug stops this file and nothing else; the log has what is needed to mend it
             LOG.error("{}: internal fault", file.tableName(), e);
             String reason = file.tableName() + ": internal fault: " + e;
-            return new Look.SetAside(sha256, reason, records.lots, records.specimens, ReductionState.TRY_AGAIN, true);
+            return tryAgain(candidate, sha256, reason, records);
         }
     }
 
@@ -115,6 +118,17 @@ final class FileLooker {
                 keepsReductions && sameContent);
     }
 
+    /** Set aside for tonight only; what it gave before stays unless its content is known to have changed. */
+    private static Look tryAgain(Survey.Candidate candidate, String sha256, String reason, Records records) {
+        boolean changed = !sha256.isEmpty()
+                && candidate
+                        .known()
+                        .map(ArchivedFile::sha256)
+                        .filter(sha256::equals)
+                        .isEmpty();
+        return new Look.SetAside(sha256, reason, records.lots, records.specimens, ReductionState.TRY_AGAIN, !changed);
+    }
+
     private String state(Survey.Candidate candidate, Set<String> grades) {
         return ReductionState.of(
                 version, candidate.file().intake().instrument(), candidate.runSheetDigest(), grades, configuration);
@@ -145,15 +159,10 @@ final class FileLooker {
         }
 
         private ReductionPlan plan(String gradeName) {
-            Grade grade = configuration.grades().get(gradeName);
-            if (grade == null) {
-                throw new GradeStopped(stoppedBecause(gradeName, configuration));
-            }
-            Optional<Problem> mismatch = Plans.mismatch(instrument, grade);
-            if (mismatch.isPresent()) {
-                throw new GradeStopped(mismatch.get().sentence());
-            }
-            return Plans.reduction(instrument, grade);
+            stoppedBecause(gradeName, instrument, configuration).ifPresent(reason -> {
+                throw new GradeStopped(reason);
+            });
+            return Plans.reduction(instrument, configuration.grades().get(gradeName));
         }
 
         Set<String> grades() {
@@ -161,15 +170,20 @@ final class FileLooker {
         }
     }
 
-    /** Why a grade without a right grade file stops the files that name it. */
-    private static String stoppedBecause(String grade, Configuration configuration) {
+    /** Why no file of this instrument that names this grade can be reduced; empty if it can. */
+    static Optional<String> stoppedBecause(String grade, Instrument instrument, Configuration configuration) {
         List<Problem> problems = configuration.wrongGrades().get(grade);
         if (problems != null) {
-            return "the grade file of '" + grade + "' is wrong: "
-                    + problems.stream().map(Problem::sentence).collect(Collectors.joining(" | "));
+            return Optional.of("the grade file of '" + grade + "' is wrong: "
+                    + problems.stream().map(Problem::sentence).collect(Collectors.joining(" | ")));
         }
-        String known = configuration.grades().keySet().stream().sorted().collect(Collectors.joining("', '"));
-        return "no grade file says grade = '" + grade + "'; there are files for '" + known + "'";
+        Grade right = configuration.grades().get(grade);
+        if (right == null) {
+            String known = configuration.grades().keySet().stream().sorted().collect(Collectors.joining("', '"));
+            return Optional.of("no grade file says grade = '" + grade
+                    + "' (capitals and spaces count); there are files for '" + known + "'");
+        }
+        return Plans.mismatch(instrument, right).map(Problem::sentence);
     }
 
     /** A record names a grade that has no right grade file. */

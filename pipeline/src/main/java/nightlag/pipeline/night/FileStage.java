@@ -1,6 +1,7 @@
 package nightlag.pipeline.night;
 
 import java.util.ArrayList;
+import java.util.Comparator;
 import java.util.HashSet;
 import java.util.List;
 import java.util.Locale;
@@ -30,6 +31,7 @@ final class FileStage {
     private final NightWork night;
     private final Progress progress;
     private final List<FileOutcome> pending = new ArrayList<>();
+    private final List<ArchivedFile> amended = new ArrayList<>();
     private final Set<FileIdentity> toLookAt = new HashSet<>();
 
     /** Lots by grade and lower-case name, to find those that differ only in case. */
@@ -48,40 +50,91 @@ final class FileStage {
             }
         }
         Set<FileIdentity> wanted = wantedFiles();
+        survey.candidates().stream()
+                .filter(candidate -> candidate.task() != Task.LOOK && inside(candidate, wanted))
+                .forEach(this::leaveAlone);
+        lookAt(survey, runSheets, wanted);
+    }
+
+    private boolean inside(Candidate candidate, Set<FileIdentity> wanted) {
+        return !night.options().narrowed()
+                || wanted.contains(candidate.identity())
+                || candidate.known().filter(this::namesWantedLot).isPresent();
+    }
+
+    private void leaveAlone(Candidate candidate) {
+        if (candidate.task() == Task.WAIT) {
+            String reason =
+                    "changed less than " + night.configuration().settle().toSeconds() + " s ago; the next run takes it";
+            night.tally().file(FileStates.waiting(candidate, reason));
+        } else {
+            leave(candidate.known().orElseThrow(), candidate.file());
+        }
+    }
+
+    /**
+     * Files with points come before new ones, and among them those that name another lot than before come last: a known lot
+     * goes before one that differs from it only in case, whatever the names of their files.
+     */
+    private void lookAt(Survey survey, RunSheets runSheets, Set<FileIdentity> wanted) throws ArchiveException {
         List<Candidate> looks = survey.candidates().stream()
                 .filter(candidate -> candidate.task() == Task.LOOK)
+                .sorted(Comparator.comparing(candidate -> !hasPoints(candidate)))
                 .toList();
         looks.forEach(candidate -> toLookAt.add(candidate.identity()));
         FileLooker looker =
                 new FileLooker(night.configuration(), runSheets, night.options().redo(), night.version());
+        List<Looked> namesAnotherLot = new ArrayList<>();
         progress.begin(looks.size());
         try (SideBySide<Candidate, Look> results = new SideBySide<>(looks.iterator(), looker::look, night.workers())) {
-            for (Candidate candidate : survey.candidates()) {
-                boolean inside = !night.options().narrowed()
-                        || wanted.contains(candidate.identity())
-                        || candidate.known().filter(this::namesWantedLot).isPresent();
-                if (candidate.task() == Task.LOOK) {
-                    Look look = results.next();
-                    if (inside || namesWantedLot(look)) {
-                        end(candidate, look, survey.vanished());
-                    }
-                    toLookAt.remove(candidate.identity());
-                    progress.fileDone();
-                } else if (inside && candidate.task() == Task.WAIT) {
-                    night.tally()
-                            .file(FileStates.waiting(
-                                    candidate,
-                                    "changed less than "
-                                            + night.configuration().settle().toSeconds()
-                                            + " s ago; the next run takes it"));
-                } else if (inside) {
-                    leave(candidate.known().orElseThrow(), candidate.file());
+            for (Candidate candidate : looks) {
+                Looked looked = new Looked(candidate, results.next());
+                if (!hasPoints(candidate)) {
+                    endAll(namesAnotherLot, survey.vanished());
                 }
+                if (!inside(candidate, wanted) && !namesWantedLot(looked.look())) {
+                    toLookAt.remove(candidate.identity());
+                } else if (namesAnotherLot(looked)) {
+                    namesAnotherLot.add(looked);
+                } else {
+                    end(looked, survey.vanished());
+                }
+                progress.fileDone();
             }
+            endAll(namesAnotherLot, survey.vanished());
             commit();
         } finally {
             progress.end();
         }
+    }
+
+    /** A file and what looking at it gave. */
+    private record Looked(Candidate candidate, Look look) {}
+
+    private static boolean hasPoints(Candidate candidate) {
+        return candidate.known().filter(known -> known.points() > 0).isPresent();
+    }
+
+    private static boolean namesAnotherLot(Looked looked) {
+        return looked.look() instanceof Look.Reduced reduced
+                && looked.candidate()
+                        .known()
+                        .filter(known -> known.points() > 0 && !known.lot().isEmpty())
+                        .filter(known -> !FileStates.lots(reduced.reductions())
+                                .equals(Set.of(new LotName(known.grade(), known.lot()))))
+                        .isPresent();
+    }
+
+    private void endAll(List<Looked> looked, Map<String, List<ArchivedFile>> vanished) throws ArchiveException {
+        for (Looked one : looked) {
+            end(one, vanished);
+        }
+        looked.clear();
+    }
+
+    private void end(Looked looked, Map<String, List<ArchivedFile>> vanished) throws ArchiveException {
+        end(looked.candidate(), looked.look(), vanished);
+        toLookAt.remove(looked.candidate().identity());
     }
 
     private void end(Candidate candidate, Look look, Map<String, List<ArchivedFile>> vanished) throws ArchiveException {
@@ -90,7 +143,7 @@ final class FileStage {
         } else if (look instanceof Look.Unchanged) {
             ArchivedFile known = candidate.known().orElseThrow();
             ArchivedFile restamped = FileStates.restamped(candidate, known);
-            night.archive().amend(List.of(restamped));
+            amend(restamped);
             leave(restamped, candidate.file());
         } else if (look instanceof Look.SetAside aside) {
             setAside(candidate, aside);
@@ -137,11 +190,12 @@ final class FileStage {
                 .filter(known -> known.status() == FileStatus.SET_ASIDE
                         && known.sha256().equals(look.sha256())
                         && known.fingerprint().equals(look.state())
-                        && !look.state().equals(ReductionState.TRY_AGAIN))
+                        && known.reason().equals(look.reason()))
                 .isPresent();
+        boolean archiveHasIt = candidate.known().filter(file::equals).isPresent();
         if (look.keepsReductions() && candidate.known().isPresent()) {
-            night.archive().amend(List.of(file));
-        } else {
+            amend(file);
+        } else if (!archiveHasIt) {
             // a vanished file keeps its points until its content can be reduced elsewhere
             pending.add(new FileOutcome(file, List.of(), Optional.empty()));
         }
@@ -161,7 +215,18 @@ final class FileStage {
         }
     }
 
+    private void amend(ArchivedFile file) throws ArchiveException {
+        amended.add(file);
+        if (amended.size() >= FILES_PER_COMMIT) {
+            commit();
+        }
+    }
+
     private void commit() throws ArchiveException {
+        if (!amended.isEmpty()) {
+            night.archive().amend(amended);
+            amended.clear();
+        }
         if (!pending.isEmpty()) {
             night.archive().commit(pending);
             pending.clear();

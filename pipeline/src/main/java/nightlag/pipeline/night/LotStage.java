@@ -2,8 +2,10 @@ package nightlag.pipeline.night;
 
 import java.io.IOException;
 import java.nio.file.Files;
+import java.nio.file.InvalidPathException;
 import java.nio.file.Path;
 import java.util.ArrayList;
+import java.util.Comparator;
 import java.util.Iterator;
 import java.util.List;
 import java.util.Optional;
@@ -26,6 +28,8 @@ import org.apache.logging.log4j.Logger;
 final class LotStage {
     private static final Logger LOG = LogManager.getLogger(LotStage.class);
 
+    private static final int PROBE_BYTES = 1 << 16;
+
     private final NightWork night;
 
     LotStage(NightWork night) {
@@ -47,6 +51,8 @@ final class LotStage {
                 due.add(lot);
             }
         }
+        // a lot that lost its points goes first: where case does not count, one that took its place has the same folder
+        due.sort(Comparator.comparing(lot -> lot.points() > 0));
         try (SideBySide<Due, Concluded> results = new SideBySide<>(read(due), LotStage::conclude, night.workers())) {
             while (results.hasNext()) {
                 publish(results.next());
@@ -57,12 +63,16 @@ final class LotStage {
     }
 
     private boolean isDue(LotState lot, Grade grade) {
-        Path points = LotTables.folder(
-                        night.configuration().results(),
-                        lot.name().grade(),
-                        lot.name().lot())
-                .resolve("points.csv");
-        return lot.due() || !lot.conclusionFingerprint().equals(conclusionState(grade)) || !Files.exists(points);
+        return lot.due() || !lot.conclusionFingerprint().equals(conclusionState(grade)) || !hasTables(lot.name());
+    }
+
+    private boolean hasTables(LotName lot) {
+        try {
+            Path folder = LotTables.folder(night.configuration().results(), lot.grade(), lot.lot());
+            return Files.exists(folder.resolve("points.csv"));
+        } catch (InvalidPathException cannotBeNamedHere) {
+            return false;
+        }
     }
 
     private String conclusionState(Grade grade) {
@@ -111,7 +121,15 @@ final class LotStage {
             // the lot stays due
             night.tally().notConcluded(lot, e.getMessage());
             return;
+        } catch (InvalidPathException e) {
+            night.tally().notConcluded(lot, IoSentences.of(e));
+            return;
         } catch (IOException e) {
+            if (canBeWritten(night.configuration().results())) {
+                // something stands in the way of this lot alone; it stays due
+                night.tally().notConcluded(lot, "its tables cannot be written: " + IoSentences.of(e));
+                return;
+            }
             throw new NightFault(
                     NightFault.Kind.STOPPED,
                     "the tables of %s lot %s cannot be written: %s"
@@ -121,6 +139,21 @@ final class LotStage {
         night.archive().concluded(lot, conclusionState(grade));
         night.tally()
                 .concluded(lot, result.notes().stream().map(Reason::sentence).toList());
+    }
+
+    /** Whether there is still room and leave to write: a new small file tells. */
+    private static boolean canBeWritten(Path results) {
+        try {
+            Path probe = Files.createTempFile(results, "probe", ".nightlag-new");
+            try {
+                Files.write(probe, new byte[PROBE_BYTES]);
+            } finally {
+                Files.delete(probe);
+            }
+            return true;
+        } catch (IOException e) {
+            return false;
+        }
     }
 
     private Provenance provenance(LotName lot, Grade grade) throws ArchiveException {

@@ -55,9 +55,13 @@ public final class Night {
         } catch (IOException e) {
             throw stopped("the results folder " + results + " cannot be made", e);
         }
-        try (RunLock lock = RunLock.take(results)) {
-            lock.requireHeld();
-            return workLocked(results);
+        try {
+            RunLock lock = RunLock.take(results);
+            try {
+                return workLocked(results);
+            } finally {
+                lock.close();
+            }
         } catch (ArchiveException e) {
             throw new NightFault(NightFault.Kind.STOPPED, e.getMessage(), e);
         } catch (IOException e) {
@@ -114,10 +118,15 @@ public final class Night {
         }
     }
 
+    /** Whether there is anything to look at at all. */
+    static boolean someIntakeReadable(Configuration configuration) {
+        return configuration.intakes().stream()
+                .anyMatch(intake -> Files.isDirectory(intake.folder()) && Files.isReadable(intake.folder()));
+    }
+
     private void checkSomeIntakeReadable() throws NightFault {
-        List<Intake> intakes = configuration.intakes();
-        if (intakes.stream()
-                .noneMatch(intake -> Files.isDirectory(intake.folder()) && Files.isReadable(intake.folder()))) {
+        if (!someIntakeReadable(configuration)) {
+            List<Intake> intakes = configuration.intakes();
             throw new NightFault(
                     NightFault.Kind.CANNOT_BEGIN,
                     "no intake can be read: "

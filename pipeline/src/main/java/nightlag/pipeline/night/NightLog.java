@@ -1,11 +1,13 @@
 package nightlag.pipeline.night;
 
+import java.io.IOException;
 import java.nio.charset.StandardCharsets;
+import java.nio.file.Files;
 import java.nio.file.Path;
 import org.apache.logging.log4j.Level;
 import org.apache.logging.log4j.LogManager;
 import org.apache.logging.log4j.core.LoggerContext;
-import org.apache.logging.log4j.core.appender.FileAppender;
+import org.apache.logging.log4j.core.appender.OutputStreamAppender;
 import org.apache.logging.log4j.core.config.Configuration;
 import org.apache.logging.log4j.core.layout.PatternLayout;
 
@@ -14,21 +16,22 @@ final class NightLog implements AutoCloseable {
     private static final String NAME = "night";
 
     private final LoggerContext context;
-    private final FileAppender appender;
+    private final OutputStreamAppender appender;
 
-    private NightLog(LoggerContext context, FileAppender appender) {
+    private NightLog(LoggerContext context, OutputStreamAppender appender) {
         this.context = context;
         this.appender = appender;
     }
 
     /** Opens {@code night.log} in the night's folder. */
-    static NightLog open(Path nightFolder) {
+    static NightLog open(Path nightFolder) throws IOException {
         LoggerContext context = (LoggerContext) LogManager.getContext(false);
         Configuration configuration = context.getConfiguration();
-        FileAppender appender = FileAppender.newBuilder()
+        // a stream of our own: the appender for files takes the name through the platform's charset
+        OutputStreamAppender appender = OutputStreamAppender.newBuilder()
                 .setName(NAME)
                 .setConfiguration(configuration)
-                .setFileName(nightFolder.resolve("night.log").toString())
+                .setTarget(Files.newOutputStream(nightFolder.resolve("night.log")))
                 .setLayout(PatternLayout.newBuilder()
                         .setConfiguration(configuration)
                         .setCharset(StandardCharsets.UTF_8)

@@ -2,6 +2,7 @@ package nightlag.pipeline.night;
 
 import java.io.IOException;
 import java.nio.file.Files;
+import java.nio.file.InvalidPathException;
 import java.nio.file.Path;
 import java.time.Clock;
 import java.util.ArrayList;
@@ -15,6 +16,7 @@ import nightlag.pipeline.archive.ArchiveException;
 import nightlag.pipeline.archive.ArchivedFile;
 import nightlag.pipeline.config.Configuration;
 import nightlag.pipeline.config.Intake;
+import nightlag.pipeline.config.TagName;
 import nightlag.pipeline.decode.DecodeException;
 import nightlag.pipeline.decode.FileDescription;
 import nightlag.pipeline.decode.RawFileDecoder;
@@ -28,6 +30,7 @@ import nightlag.pipeline.intake.RawFile;
  * @param waiting files that have not settled
  * @param left how many files it would leave as they are
  * @param unreadable what could not be read, with the reason
+ * @param someIntakeReadable whether a run could begin
  * @param firstFiles how the first file of each intake decodes; empty for an intake without files
  */
 public record Preview(
@@ -35,6 +38,7 @@ public record Preview(
         List<RawFile> waiting,
         int left,
         List<String> unreadable,
+        boolean someIntakeReadable,
         Map<Intake, Optional<FirstFile>> firstFiles) {
     /** Copies the collections; the map keeps the order of the intakes. */
     public Preview {
@@ -49,7 +53,7 @@ public record Preview(
      *
      * @param file the file
      * @param description how it decodes; empty if it does not
-     * @param problem why it does not; empty text otherwise
+     * @param problem why it, or every file like it, would be set aside; empty text otherwise
      */
     public record FirstFile(RawFile file, Optional<FileDescription> description, String problem) {}
 
@@ -75,13 +79,15 @@ public record Preview(
             }
             firstFiles.compute(
                     file.intake(),
-                    (intake, before) -> before.isPresent() ? before : Optional.of(describe(file, runSheets)));
+                    (intake, before) ->
+                            before.isPresent() ? before : Optional.of(describe(file, runSheets, configuration)));
         }
         return new Preview(
                 toLookAt,
                 waiting,
                 survey.candidates().size() - toLookAt.size() - waiting.size(),
                 survey.unreadable(),
+                Night.someIntakeReadable(configuration),
                 firstFiles);
     }
 
@@ -97,12 +103,23 @@ public record Preview(
         }
     }
 
-    private static FirstFile describe(RawFile file, RunSheets runSheets) {
+    private static FirstFile describe(RawFile file, RunSheets runSheets, Configuration configuration) {
         try {
-            return new FirstFile(file, Optional.of(RawFileDecoder.describe(file, runSheets.rowOf(file))), "");
+            FileDescription description = RawFileDecoder.describe(file, runSheets.rowOf(file));
+            String stopped = description.tags().stream()
+                    .filter(tag -> tag.name() == TagName.GRADE)
+                    .map(tag ->
+                            FileLooker.stoppedBecause(tag.text(), file.intake().instrument(), configuration))
+                    .flatMap(Optional::stream)
+                    .findFirst()
+                    .map(reason -> file.tableName() + ": " + reason)
+                    .orElse("");
+            return new FirstFile(file, Optional.of(description), stopped);
         } catch (DecodeException e) {
             return new FirstFile(file, Optional.empty(), e.problem().sentence());
         } catch (IOException e) {
+            return new FirstFile(file, Optional.empty(), file.tableName() + ": " + IoSentences.of(e));
+        } catch (InvalidPathException e) {
             return new FirstFile(file, Optional.empty(), file.tableName() + ": " + IoSentences.of(e));
         }
     }

@@ -48,13 +48,6 @@ final class RunLock implements AutoCloseable {
                 NightFault.Kind.STOPPED, "another run is at work on " + results + "; start again when it has ended");
     }
 
-    /** That nobody else is at work is what everything under the lock rests on. */
-    void requireHeld() {
-        if (!channel.isOpen()) {
-            throw new IllegalStateException("the lock on the results folder is gone");
-        }
-    }
-
     private static void closeQuietly(FileChannel channel) {
         try {
             if (channel != null) {

@@ -2,6 +2,7 @@ package nightlag.pipeline.night;
 
 import java.io.IOException;
 import java.nio.file.Files;
+import java.nio.file.InvalidPathException;
 import java.nio.file.Path;
 import java.time.Clock;
 import java.util.ArrayList;
@@ -147,13 +148,23 @@ record Survey(List<Candidate> candidates, List<String> unreadable, Map<String, L
         Map<String, List<ArchivedFile>> vanished = new HashMap<>();
         for (ArchivedFile file : archived) {
             FileIdentity identity = file.identity();
-            if (!seen.contains(identity)
+            if (!file.sha256().isEmpty()
+                    && !seen.contains(identity)
                     && !unreadableFolders.contains(identity.folder())
-                    && !Files.exists(Path.of(identity.folder()).resolve(identity.relativePath()))) {
+                    && isGone(identity)) {
                 vanished.computeIfAbsent(file.sha256(), sha -> new ArrayList<>())
                         .add(file);
             }
         }
         return vanished;
+    }
+
+    private static boolean isGone(FileIdentity identity) {
+        try {
+            return !Files.exists(Path.of(identity.folder()).resolve(identity.relativePath()));
+        } catch (InvalidPathException notOfThisPlatform) {
+            // an archive that came from another PC
+            return true;
+        }
     }
 }

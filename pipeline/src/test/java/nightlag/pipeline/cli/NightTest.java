@@ -1,6 +1,7 @@
 package nightlag.pipeline.cli;
 
 import static org.assertj.core.api.Assertions.assertThat;
+import static org.assertj.core.api.Assertions.tuple;
 import static org.assertj.core.api.Assertions.within;
 
 import java.io.IOException;
@@ -10,6 +11,10 @@ import java.nio.file.Files;
 import java.nio.file.Path;
 import java.nio.file.StandardOpenOption;
 import java.nio.file.attribute.FileTime;
+import java.sql.Connection;
+import java.sql.DriverManager;
+import java.sql.SQLException;
+import java.sql.Statement;
 import java.time.Instant;
 import java.util.List;
 import java.util.Map;
@@ -116,6 +121,15 @@ class NightTest {
         lab.record("bench/A1/p3.csv", "plover", "A1", 1, 1);
         assertThat(lab.run().exitCode()).isZero();
         assertThat(lab.table("plover", "A1", "points")).hasSize(6);
+    }
+
+    @Test
+    void aValueThatCannotBeIsRefused() {
+        lab.write("bench/p1.csv", Lab.recordText("plover", "A1", 1, 1).replace("f,1.0", "f,-1.0"));
+
+        assertThat(lab.run().exitCode()).isEqualTo(1);
+
+        assertThat(lab.files().get(0).get("reason")).contains("line 3").contains("'-1.0', which is no frequency");
     }
 
     @Test
@@ -320,6 +334,115 @@ class NightTest {
         lab.sweep("plover", "A1");
 
         assertThat(lab.run().out()).contains("[[limit]]");
+    }
+
+    @Test
+    void aKnownLotGoesBeforeItsTwinInCaseWhateverTheFilesAreCalled() {
+        lab.record("bench/z.csv", "plover", "L1", 1, 1);
+        lab.run();
+        lab.record("bench/a.csv", "plover", "l1", 1, 1);
+        assertThat(lab.run().exitCode()).isEqualTo(1);
+
+        lab.run("--redo");
+
+        assertThat(lab.files())
+                .extracting(row -> row.get("file"), row -> row.get("status"))
+                .containsExactly(tuple("bench/a.csv", "set-aside"), tuple("bench/z.csv", "reduced"));
+        assertThat(lab.table("plover", "L1", "points")).hasSize(1);
+        assertThat(lab.path("results/plover/l1")).doesNotExist();
+    }
+
+    @Test
+    void aLotWhoseFilesAllChangeTheirCaseTakesTheNewName() {
+        lab.record("bench/a.csv", "plover", "L1", 1, 1);
+        lab.record("bench/b.csv", "plover", "L1", 3, 1);
+        lab.run();
+        lab.record("bench/a.csv", "plover", "l1", 1, 1);
+        lab.record("bench/b.csv", "plover", "l1", 3, 1);
+
+        assertThat(lab.run().exitCode()).isZero();
+
+        assertThat(lab.table("plover", "l1", "points")).hasSize(2);
+    }
+
+    @Test
+    void aLotLeftDueByAKillBeforeTheSwapGetsItsTables() throws SQLException {
+        lab.sweep("plover", "A1");
+        lab.run();
+        Map<String, String> whole = lab.tables();
+        lab.write("results/plover/A1/points.csv", "the tables of an earlier night");
+        try (Connection archive = DriverManager.getConnection("jdbc:sqlite:" + lab.path("results/archive.sqlite"));
+                Statement statement = archive.createStatement()) {
+            assertThat(statement.executeUpdate("UPDATE lot SET due = 1")).isEqualTo(1);
+        }
+
+        assertThat(lab.run().exitCode()).isZero();
+
+        assertThat(lab.tables()).isEqualTo(whole);
+    }
+
+    @Test
+    void whatStandsInTheWayOfOneLotStopsNoOther() {
+        lab.sweep("plover", "A1");
+        lab.sweep("plover", "A2");
+        lab.write("results/plover/A1", "a file where a folder belongs");
+
+        Lab.Ended night = lab.run();
+
+        assertThat(night.exitCode()).isEqualTo(1);
+        assertThat(night.out()).contains("plover lot A1").contains("A1");
+        assertThat(lab.table("plover", "A2", "points")).hasSize(6);
+        lab.delete("results/plover/A1");
+        assertThat(lab.run().exitCode()).isZero();
+        assertThat(lab.table("plover", "A1", "points")).hasSize(6);
+    }
+
+    @Test
+    void aFileThatVanishedKeepsItsPointsWhenItsContentTurnsUpWhereItCannotBeReduced() {
+        lab.sweep("plover", "A1");
+        lab.write(
+                "config/instruments/other.toml",
+                text("config/instruments/bench.toml").replace("\"t,\"", "\"time,\""));
+        lab.write(
+                "config/night.toml",
+                text("config/night.toml") + "\n[[intake]]\nfolder = \"../other\"\ninstrument = \"other\"\n");
+        lab.run();
+        lab.write("other/lost.csv", text("bench/A1/p2.csv"));
+        lab.delete("bench/A1/p2.csv");
+
+        assertThat(lab.run().exitCode()).isEqualTo(1);
+
+        assertThat(lab.table("plover", "A1", "points")).hasSize(6);
+    }
+
+    @Test
+    void checkShowsHowTheFirstFileDecodesAndWritesNothing() {
+        lab.sweep("plover", "A1");
+
+        Lab.Ended check = lab.command("check");
+
+        assertThat(check.exitCode()).as(check.err()).isZero();
+        assertThat(check.out())
+                .contains("takes up bench/A1/p6.csv")
+                .contains("stress from column 3 'stress' in Pa")
+                .contains("frequency = 0.1 = 0.1 Hz");
+        assertThat(lab.path("results")).doesNotExist();
+    }
+
+    @Test
+    void checkSaysWhatWouldBeSetAsideAndWhatIsNotSet() {
+        lab.sweep("curlew", "C1");
+        lab.write(
+                "config/instruments/bench.toml",
+                text("config/instruments/bench.toml").replace("\"f\"", "\"freq\""));
+
+        Lab.Ended check = lab.command("check");
+
+        assertThat(check.out())
+                .contains("would be set aside")
+                .contains("no grade file says grade = 'curlew'")
+                .contains("frequency = not set")
+                .contains("no line 'freq'");
     }
 
     private String text(String name) {

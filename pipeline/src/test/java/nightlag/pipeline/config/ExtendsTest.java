@@ -196,4 +196,28 @@ class ExtendsTest {
                                 + " grade; names must differ in more than capitals",
                         "unnamed.toml, line 2, grade: found 5 instead of a text; expected text, in quotes");
     }
+
+    @Test
+    void threeFilesAreLaidOverEachOtherFromTheOldestDown() throws IOException {
+        write("wide", "extends = \"melt\"\n[geometry]\ngap = \"2 mm\"\n");
+        write("cone", """
+                grade = "Cone"
+                extends = "wide"
+                [geometry]
+                kind = "cone-plate"
+                diameter = "40 mm"
+                cone_angle = "1 deg"
+                """);
+        write("flat", "grade = \"Flat\"\nextends = \"wide\"\n");
+
+        GradeFolder read = read();
+
+        assertThat(read.problems()).isEmpty();
+        assertThat(read.right().get("Cone").geometry().orElseThrow().dimensions())
+                .doesNotContainKey(Dimension.GAP)
+                .containsEntry(Dimension.DIAMETER, 0.04);
+        assertThat(read.right().get("Flat").geometry().orElseThrow().dimensions())
+                .containsEntry(Dimension.GAP, 0.002)
+                .containsEntry(Dimension.DIAMETER, 0.025);
+    }
 }
