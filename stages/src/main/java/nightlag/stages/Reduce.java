@@ -16,6 +16,7 @@ import nightlag.stages.moduli.ModulusPoints.Origin;
 import nightlag.stages.moduli.ModulusPoints.Ranges;
 import nightlag.stages.waveform.HarmonicAnalysis;
 import nightlag.stages.waveform.SignalFit;
+import nightlag.stages.waveform.Waveform;
 
 /** One record to its points: samples to amplitudes, corrections and geometry, moduli, screening. */
 public final class Reduce {
@@ -42,11 +43,20 @@ public final class Reduce {
             SignalFit fit = HarmonicAnalysis.analyse(record.waveform(), plan.extraction());
             Ranges ranges = Ranges.of(
                     plan.deformationRange(), record.deformationSignal(), plan.loadRange(), record.loadSignal());
-            return ModulusPoints.of(origin, record.waveform(), fit, correction, ranges, plan.screening());
+            Origin placed = record.waveform().isWindow() ? origin.after(fit.originS()) : origin;
+            return ModulusPoints.of(placed, record.waveform(), fit, correction, ranges, plan.screening());
         } catch (ReductionFault fault) {
             OptionalDouble tagged = record.waveform().nominalFrequencyHz();
-            return ModulusPoints.unusable(origin, mode(plan), tagged, fault.reason());
+            Origin placed = record.waveform().isWindow() ? origin.after(middle(record.waveform())) : origin;
+            return ModulusPoints.unusable(placed, mode(plan), tagged, fault.reason());
         }
+    }
+
+    private static double middle(Waveform window) {
+        double[] timeS = window.timeS();
+        return timeS.length == 0
+                ? window.windowOfRecordFromS().orElseThrow()
+                : timeS[0] + (timeS[timeS.length - 1] - timeS[0]) / 2;
     }
 
     private static ModulusPoint fromModuli(GivenModuli record, ReductionPlan plan) {

@@ -72,11 +72,20 @@ final class InstrumentKeys {
                     + "rows of one stand together. `rolling`: one long record at one frequency, cut into windows; needs "
                     + "the tag `frequency`. `moduli`: no waveforms, each row is a point already reduced. `multisine`: a "
                     + "record holds several frequencies. `chirp`: an exponential sweep of frequency. `creep`: steps of "
-                    + "stress and their recovery. Files of the layouts `rolling`, `multisine`, `chirp` and `creep` are "
+                    + "stress and their recovery. Files of the layouts `multisine`, `chirp` and `creep` are "
                     + "not reduced yet.");
-    static final Key WINDOW = Key.withDefault("window", new Whole(1, 100_000), "6", "`rolling`: cycles per window.");
-    static final Key ADVANCE =
-            Key.withDefault("advance", new Whole(1, 100_000), "3", "`rolling`: cycles from one window to the next.");
+    static final Key WINDOW = Key.withDefault(
+            "window",
+            new Whole(1, 100_000),
+            "6",
+            "`rolling`: cycles per window. How the specimen changes within a window can be told from 3 cycles up; in "
+                    + "shorter ones it is taken as steady (1) or as changing evenly (2).");
+    static final Key ADVANCE = Key.withDefault(
+            "advance",
+            new Whole(1, 100_000),
+            "3",
+            "`rolling`: cycles from one window to the next. Rows between windows, where this is over `window`, and "
+                    + "behind the last full window are left out and counted.");
     static final Key FREQUENCIES = Key.optional(
             "frequencies",
             new Shape("list of frequencies, such as [\"0.5 Hz\", \"1 Hz\"]"),

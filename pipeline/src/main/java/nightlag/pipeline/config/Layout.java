@@ -14,7 +14,7 @@ public enum Layout {
 
     /** Whether this version reduces it. */
     public boolean supported() {
-        return this == SINGLE || this == COLUMN || this == MODULI;
+        return this == SINGLE || this == COLUMN || this == ROLLING || this == MODULI;
     }
 
     /** The word in configuration. */

@@ -5,7 +5,7 @@ package nightlag.pipeline.decode;
  *
  * @param rows data rows in the file
  * @param used rows that entered a record
- * @param leftOut rows with an empty cell in a needed column
+ * @param leftOut rows with an empty cell in a needed column, and rows of a long record that enter no window
  * @param records records handed over
  */
 public record DecodeCounts(long rows, long used, long leftOut, int records) {}

@@ -93,8 +93,15 @@ final class Describing {
                 facts.recordFacts().tags(values, OptionalDouble.empty(), byFile ? facts.fileStem() : "1", line);
         values.putIfAbsent(TagName.SPECIMEN, byDefault(tags.key().specimen(), "default"));
         values.putIfAbsent(TagName.SWEEP, byDefault(tags.key().sweep(), "default"));
-        values.putIfAbsent(
-                TagName.POINT, byDefault(tags.key().point(), byFile ? "default, the file's name" : "default, the row"));
+        values.putIfAbsent(TagName.POINT, byDefault(tags.key().point(), defaultPoint(layout)));
+    }
+
+    private static String defaultPoint(Layout layout) {
+        return switch (layout) {
+            case SINGLE -> "default, the file's name";
+            case ROLLING -> "default, the window";
+            default -> "default, the row";
+        };
     }
 
     private static TagValue byDefault(String text, String from) {

@@ -70,7 +70,7 @@ public final class RawFileDecoder {
                     0,
                     "[records] layout",
                     "layout " + layout.word() + " is not acted on yet",
-                    "single, column or moduli");
+                    "single, column, rolling or moduli");
         }
     }
 
@@ -79,7 +79,8 @@ public final class RawFileDecoder {
             case MODULI -> new ModuliRows(facts, tally);
             case COLUMN -> new WaveformRows(facts, true, tally);
             case SINGLE -> new WaveformRows(facts, false, tally);
-            case ROLLING, MULTISINE, CHIRP, CREEP -> throw new IllegalStateException("refused before");
+            case ROLLING -> new RollingRows(facts, file.intake().instrument().records(), tally);
+            case MULTISINE, CHIRP, CREEP -> throw new IllegalStateException("refused before");
         };
     }
 }

@@ -1,7 +1,7 @@
 package nightlag.pipeline.decode;
 
 /** Makes records of rows. */
-sealed interface RowTaker permits WaveformRows, ModuliRows {
+sealed interface RowTaker permits WaveformRows, RollingRows, ModuliRows {
     /** Takes a row. */
     void row(Cells cells, int line) throws DecodeException;
 

@@ -26,6 +26,22 @@ final class Samples {
         size = 0;
     }
 
+    /** Forgets the oldest ones. */
+    void drop(int count) {
+        size -= count;
+        System.arraycopy(time, count, time, 0, size);
+        System.arraycopy(deformation, count, deformation, 0, size);
+        System.arraycopy(load, count, load, 0, size);
+        if (withTemperature) {
+            System.arraycopy(temperature, count, temperature, 0, size);
+        }
+    }
+
+    /** The time of one. */
+    double timeAt(int index) {
+        return time[index];
+    }
+
     /** Adds one; the temperature may be NaN for "not known". */
     void add(double timeS, double deformationSi, double loadSi, double temperatureK) {
         if (size == time.length) {
@@ -70,6 +86,15 @@ final class Samples {
      * ends; empty if none is known.
      */
     double[] temperature(double[] timeS) {
+        return temperature(timeS, true);
+    }
+
+    /** The same, but those before the first and after the last known one stay NaN: in a ramp the nearest would mislead. */
+    double[] temperatureBetweenReadings(double[] timeS) {
+        return temperature(timeS, false);
+    }
+
+    private double[] temperature(double[] timeS, boolean toTheEnds) {
         if (!withTemperature) {
             return new double[0];
         }
@@ -77,14 +102,18 @@ final class Samples {
         int before = -1;
         for (int i = 0; i < size; i++) {
             if (!Double.isNaN(filled[i])) {
-                fill(filled, timeS, before, i);
+                if (before >= 0 || toTheEnds) {
+                    fill(filled, timeS, before, i);
+                }
                 before = i;
             }
         }
         if (before < 0) {
             return new double[0];
         }
-        fill(filled, timeS, before, size);
+        if (toTheEnds) {
+            fill(filled, timeS, before, size);
+        }
         return filled;
     }
 

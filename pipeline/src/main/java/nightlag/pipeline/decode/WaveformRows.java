@@ -7,11 +7,8 @@ import java.util.Map;
 import java.util.Optional;
 import java.util.OptionalDouble;
 import java.util.Set;
-import nightlag.pipeline.config.ChannelName;
 import nightlag.pipeline.config.TagName;
 import nightlag.stages.WaveformRecord;
-import nightlag.stages.geometry.DeformationSignal;
-import nightlag.stages.geometry.LoadSignal;
 import nightlag.stages.waveform.Waveform;
 
 /**
@@ -22,24 +19,9 @@ import nightlag.stages.waveform.Waveform;
  * A temperature is no needed column: recorders often write it less often than the signals.
  */
 final class WaveformRows implements RowTaker {
-    private static final Map<ChannelName, DeformationSignal> DEFORMATIONS = Map.of(
-            ChannelName.STRAIN, DeformationSignal.STRAIN,
-            ChannelName.ANGLE, DeformationSignal.ANGLE,
-            ChannelName.DISPLACEMENT, DeformationSignal.DISPLACEMENT);
-    private static final Map<ChannelName, LoadSignal> LOADS = Map.of(
-            ChannelName.STRESS, LoadSignal.STRESS,
-            ChannelName.TORQUE, LoadSignal.TORQUE,
-            ChannelName.FORCE, LoadSignal.FORCE);
-
     private final FileFacts facts;
     private final Tally tally;
-    private final Optional<ChannelColumn> time;
-    private final ChannelColumn deformation;
-    private final ChannelColumn load;
-    private final Optional<ChannelColumn> temperature;
-    private final Optional<ChannelColumn> frequency;
-    private final DeformationSignal deformationSignal;
-    private final LoadSignal loadSignal;
+    private final SignalColumns columns;
     private final Optional<ColumnTag> divider;
     private final List<ColumnTag> columnTags;
     private final Samples samples;
@@ -50,35 +32,21 @@ final class WaveformRows implements RowTaker {
     private int firstLine;
     private long rowOfRecord;
     private int rowsLeftOut;
-    private double lastTime;
-    private double frequencyHz;
 
     /** For a file of the layout {@code single}, or {@code column} where a record ends when {@code divided}. */
     WaveformRows(FileFacts facts, boolean divided, Tally tally) throws DecodeException {
         this.facts = facts;
         this.tally = tally;
-        Map<ChannelName, ChannelColumn> channels = facts.channels();
-        ChannelName deformationName = facts.oneOf(DEFORMATIONS.keySet());
-        ChannelName loadName = facts.oneOf(LOADS.keySet());
-        this.time = Optional.ofNullable(channels.get(ChannelName.TIME));
-        this.deformation = channels.get(deformationName);
-        this.load = channels.get(loadName);
-        this.temperature = Optional.ofNullable(channels.get(ChannelName.TEMPERATURE));
-        this.frequency = Optional.ofNullable(channels.get(ChannelName.FREQUENCY));
-        this.deformationSignal = DEFORMATIONS.get(deformationName);
-        this.loadSignal = LOADS.get(loadName);
+        this.columns = new SignalColumns(facts);
         this.divider = divided ? Optional.of(facts.columnTag(TagName.POINT)) : Optional.empty();
         this.columnTags = facts.columnTags();
-        this.samples = new Samples(temperature.isPresent());
+        this.samples = new Samples(columns.hasTemperature());
         this.values = facts.values();
     }
 
     @Override
     public void row(Cells cells, int line) throws DecodeException {
-        double deformationSi = deformation.read(cells, line);
-        double loadSi = load.read(cells, line);
-        double temperatureK = temperature.isPresent() ? temperature.get().read(cells, line) : Double.NaN;
-        double clockS = time.isPresent() ? time.get().read(cells, line) : Double.NaN;
+        columns.read(cells, line);
         if (divider.isPresent() && cells.empty(divider.get().index())) {
             tally.leaveOut();
             return;
@@ -87,15 +55,10 @@ final class WaveformRows implements RowTaker {
         for (ColumnTag tag : columnTags) {
             tag.takeInto(values, cells, line);
         }
-        if (frequency.isPresent()) {
-            takeFrequency(frequency.get(), cells, line);
-        }
-        double timeS = time.isPresent() ? clockS : rowOfRecord;
+        columns.follow(cells, line);
+        double timeS = columns.hasTime() ? columns.clockS() : rowOfRecord;
         rowOfRecord++;
-        if (!Double.isNaN(clockS)) {
-            checkRise(clockS, cells, line);
-        }
-        if (Double.isNaN(timeS) || Double.isNaN(deformationSi) || Double.isNaN(loadSi)) {
+        if (Double.isNaN(timeS) || Double.isNaN(columns.deformation()) || Double.isNaN(columns.load())) {
             rowsLeftOut++;
             tally.leaveOut();
             return;
@@ -104,7 +67,7 @@ final class WaveformRows implements RowTaker {
             throw facts.complaints()
                     .at(line, "", "more than " + Bounds.RECORD_ROWS + " rows in one record", "a shorter record");
         }
-        samples.add(timeS, deformationSi, loadSi, temperatureK);
+        samples.add(timeS, columns.deformation(), columns.load(), columns.temperatureK());
     }
 
     @Override
@@ -134,8 +97,7 @@ final class WaveformRows implements RowTaker {
         firstLine = line;
         rowOfRecord = 0;
         rowsLeftOut = 0;
-        lastTime = Double.NEGATIVE_INFINITY;
-        frequencyHz = Double.NaN;
+        columns.begin();
         if (divider.isPresent()) {
             String point = cells.text(divider.get().index());
             if (!pointsDone.add(point)) {
@@ -148,53 +110,22 @@ final class WaveformRows implements RowTaker {
         }
     }
 
-    /** A frequency in a column of samples is the one the record was driven at; an empty cell says nothing. */
-    private void takeFrequency(ChannelColumn column, Cells cells, int line) throws DecodeException {
-        double hz = column.read(cells, line);
-        if (!Double.isNaN(hz) && !Double.isNaN(frequencyHz) && hz != frequencyHz) {
-            throw column.spot(line)
-                    .complaint(
-                            Complaints.shown(cells.text(column.index())) + ", not that of the rows before",
-                            "one frequency throughout a record");
-        }
-        frequencyHz = Double.isNaN(hz) ? frequencyHz : hz;
-    }
-
-    private void checkRise(double timeS, Cells cells, int line) throws DecodeException {
-        if (timeS <= lastTime) {
-            ChannelColumn clock = time.orElseThrow();
-            throw clock.spot(line)
-                    .complaint(
-                            Complaints.shown(cells.text(clock.index())) + ", no later than the row before",
-                            "a time that rises from row to row");
-        }
-        lastTime = timeS;
-    }
-
     private void close() throws DecodeException {
         open = false;
-        double[] timeS = time.isPresent() ? samples.time() : samples.timeOver(sampleRate());
+        double[] timeS = columns.hasTime() ? samples.time() : samples.timeOver(columns.sampleRateHz(values, firstLine));
         Waveform waveform = new Waveform(
                 timeS,
                 samples.deformation(),
                 samples.load(),
                 samples.temperature(timeS),
-                Double.isNaN(frequencyHz) ? RecordFacts.si(values, TagName.FREQUENCY) : OptionalDouble.of(frequencyHz),
+                columns.frequencyHz(values),
                 rowsLeftOut);
         tally.handOver(
                 new WaveformRecord(
                         facts.recordFacts().tags(values, OptionalDouble.empty(), facts.fileStem(), firstLine),
-                        deformationSignal,
-                        loadSignal,
+                        columns.deformationSignal(),
+                        columns.loadSignal(),
                         waveform),
                 samples.size());
-    }
-
-    private double sampleRate() throws DecodeException {
-        OptionalDouble rate = RecordFacts.si(values, TagName.SAMPLE_RATE);
-        if (rate.isEmpty()) {
-            throw facts.recordFacts().missing(TagName.SAMPLE_RATE, firstLine);
-        }
-        return rate.getAsDouble();
     }
 }

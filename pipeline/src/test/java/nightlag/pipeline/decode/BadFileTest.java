@@ -299,12 +299,12 @@ class BadFileTest {
                         "at most 10000"),
                 fault(
                         "layout to come",
-                        bench -> bench.layout(Layout.ROLLING),
+                        bench -> bench.layout(Layout.CREEP),
                         "t;phi;M|0;1;2",
                         0,
                         "[records] layout",
-                        "layout rolling is not acted on yet",
-                        "single, column or moduli"),
+                        "layout creep is not acted on yet",
+                        "single, column, rolling or moduli"),
                 fault(
                         "moduli without a frequency",
                         bench -> moduli(bench).preamble(TagName.FREQUENCY, "f", "Hz"),

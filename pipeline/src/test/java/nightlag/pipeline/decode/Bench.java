@@ -46,6 +46,8 @@ final class Bench {
     private Optional<String> runSheet = Optional.empty();
     private Optional<Pattern> pathPattern = Optional.empty();
     private Layout layout = Layout.SINGLE;
+    private int windowCycles = 6;
+    private int advanceCycles = 3;
 
     private Bench(Path folder) {
         this.folder = folder;
@@ -116,6 +118,13 @@ final class Bench {
         return this;
     }
 
+    /** Layout rolling: cycles per window, and from one to the next. */
+    Bench rolling(int window, int advance) {
+        windowCycles = window;
+        advanceCycles = advance;
+        return layout(Layout.ROLLING);
+    }
+
     Bench channel(ChannelName name, String column, String unit) {
         return channel(name, ColumnRef.named(column), unit);
     }
@@ -173,7 +182,7 @@ final class Bench {
                 "bench",
                 "An invented bench",
                 new FileFormat(match, charset, delimiter, decimal, header, unitRow, runSheet, pathPattern),
-                new RecordFormat(layout, 6, 3, List.of()),
+                new RecordFormat(layout, windowCycles, advanceCycles, List.of()),
                 channels,
                 tags,
                 Corrections.none(),

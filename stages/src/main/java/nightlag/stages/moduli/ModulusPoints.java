@@ -25,7 +25,12 @@ public final class ModulusPoints {
      * @param elapsedS time since the start of the run, s
      */
     public record Origin(
-            PointKey key, Optional<String> made, OptionalDouble taggedTemperatureK, OptionalDouble elapsedS) {}
+            PointKey key, Optional<String> made, OptionalDouble taggedTemperatureK, OptionalDouble elapsedS) {
+        /** The same so much later, s; without a time as if the run had begun at 0. */
+        public Origin after(double seconds) {
+            return new Origin(key, made, taggedTemperatureK, OptionalDouble.of(elapsedS.orElse(0) + seconds));
+        }
+    }
 
     /**
      * The amplitudes a record is trusted with.

@@ -15,6 +15,11 @@ record Fitted(Samples samples, Basis basis, JointFit.Result result) {
         return Math.hypot(coefficients[column], coefficients[column + 1]);
     }
 
+    /** Whether the amplitude may change, so that the frequency is no unknown of the fit itself. */
+    boolean hasTrend() {
+        return basis.trendDegree() > 0;
+    }
+
     /** Standard deviation of a channel's residuals. */
     double deviation(int channel) {
         double freedom = Math.max(1, samples.size() - basis.columns());
@@ -46,6 +51,12 @@ record Fitted(Samples samples, Basis basis, JointFit.Result result) {
             double phase = n * result.angularFrequency() * seconds;
             columns[basis.cosineColumn(n)] = Math.cos(phase);
             columns[basis.cosineColumn(n) + 1] = Math.sin(phase);
+        }
+        double raised = 1;
+        for (int power = 1; power <= basis.trendDegree(); power++) {
+            raised *= u;
+            columns[basis.trendColumn(power)] = raised * columns[basis.cosineColumn(1)];
+            columns[basis.trendColumn(power) + 1] = raised * columns[basis.cosineColumn(1) + 1];
         }
         return columns;
     }

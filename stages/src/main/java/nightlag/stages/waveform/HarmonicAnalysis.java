@@ -84,7 +84,7 @@ public final class HarmonicAnalysis {
         Fitted fitted = fit(samples, clock, omega);
         for (int round = 0; round < START_UP_ROUNDS && startUpEnd(fitted, all) != first; round++) {
             // the first look was misled by the start-up itself; now its end is known better
-            notes.removeIf(HarmonicAnalysis::isAboutOrders);
+            notes.removeIf(HarmonicAnalysis::isAboutTheModel);
             samples = withoutStartUp(all, fitted.result().angularFrequency());
             clock = Clock.of(waveform.timeS(), first);
             fitted = fit(samples, clock, fitted.result().angularFrequency());
@@ -130,7 +130,7 @@ public final class HarmonicAnalysis {
             Damage.markTowering(waveform.deformation(), leftOut);
             Damage.markTowering(waveform.load(), leftOut);
             limitRuns.forEach(run -> run.mark(leftOut));
-            notes.removeIf(HarmonicAnalysis::isAboutOrders);
+            notes.removeIf(HarmonicAnalysis::isAboutTheModel);
             fitted = fit(
                     Samples.of(waveform, first, leftOut), clock, start.result().angularFrequency());
         }
@@ -151,6 +151,11 @@ public final class HarmonicAnalysis {
     private Samples withoutStartUp(Samples all, double omega) throws ReductionFault {
         first = startUpEnd(omega, all);
         Samples rest = Samples.of(waveform, first, leftOut);
+        if (rest.size() < 2 && waveform.isWindow()) {
+            double endS = waveform.timeS()[waveform.size() - 1];
+            throw new ReductionFault(WaveformReason.WAVEFORM_WINDOW_IN_START_UP.with(
+                    plan.startUpCycles(), (endS - beginS()) / cycleS(omega)));
+        }
         if (rest.size() < 2) {
             throw new ReductionFault(WaveformReason.WAVEFORM_ALL_START_UP.with(
                     plan.startUpCycles(), omega * all.durationS() / (2 * Math.PI)));
@@ -166,7 +171,7 @@ public final class HarmonicAnalysis {
     /** The first sample after the start-up cycles. */
     private int startUpEnd(double omega, Samples all) {
         double[] timeS = waveform.timeS();
-        double end = timeS[0] + plan.startUpCycles() * 2 * Math.PI / omega - 0.25 * all.intervalS();
+        double end = beginS() + plan.startUpCycles() * cycleS(omega) - 0.25 * all.intervalS();
         int index = 0;
         while (index < timeS.length && timeS[index] < end) {
             index++;
@@ -174,9 +179,20 @@ public final class HarmonicAnalysis {
         return index;
     }
 
-    private static boolean isAboutOrders(Reason note) {
+    private double beginS() {
+        return waveform.windowOfRecordFromS().orElse(waveform.timeS()[0]);
+    }
+
+    /** The length of a start-up cycle; those before a window are not seen here, so their length follows from the tag. */
+    private double cycleS(double omega) {
+        OptionalDouble tag = waveform.nominalFrequencyHz();
+        return waveform.isWindow() && tag.isPresent() ? 1 / tag.getAsDouble() : 2 * Math.PI / omega;
+    }
+
+    private static boolean isAboutTheModel(Reason note) {
         return note.code().equals(WaveformReason.WAVEFORM_ORDERS_ABOVE_SAMPLING.name())
-                || note.code().equals(WaveformReason.WAVEFORM_ORDERS_NOT_SEPARABLE.name());
+                || note.code().equals(WaveformReason.WAVEFORM_ORDERS_NOT_SEPARABLE.name())
+                || note.code().equals(WaveformReason.WAVEFORM_WINDOW_TOO_SHORT.name());
     }
 
     private Fitted fit(Samples samples, Clock clock, double start) throws ReductionFault {
@@ -202,10 +218,22 @@ public final class HarmonicAnalysis {
                     notes.add(WaveformReason.WAVEFORM_ORDERS_NOT_SEPARABLE.with(
                             harmonics, plan.harmonics(), samples.size(), cycles));
                 }
-                return new Fitted(samples, fit.basis(), result.get());
+                Fitted constant = new Fitted(samples, fit.basis(), result.get());
+                return waveform.isWindow() ? withTrend(constant, cycles) : constant;
             }
         }
         throw new ReductionFault(WaveformReason.WAVEFORM_NOT_SEPARABLE.with());
+    }
+
+    private Fitted withTrend(Fitted constant, double cycles) {
+        int harmonics = constant.basis().harmonics();
+        Optional<Fitted> window = new WindowFit(
+                        constant.samples(), harmonics, plan.drift().degree(), exact)
+                .fit(constant.result().angularFrequency());
+        if (window.isEmpty()) {
+            notes.add(WaveformReason.WAVEFORM_WINDOW_TOO_SHORT.with(cycles));
+        }
+        return window.orElse(constant);
     }
 
     private int ordersBelowHalf(double omega, Clock clock) {
@@ -218,7 +246,7 @@ public final class HarmonicAnalysis {
     }
 
     private Optional<JointFit.Result> atTag(JointFit fit, Samples samples, Clock clock, double omega) {
-        boolean complete = samples.size() == waveform.size() - first;
+        boolean complete = samples.size() == waveform.size() - first && !waveform.isWindow();
         if (plan.drift() == Drift.NONE && complete && WholeCycleBins.applies(samples, clock, omega)) {
             return fit.given(omega, WholeCycleBins.coefficients(samples, fit.basis(), omega));
         }
@@ -257,7 +285,7 @@ public final class HarmonicAnalysis {
                 break;
             }
             spikes += found;
-            notes.removeIf(HarmonicAnalysis::isAboutOrders);
+            notes.removeIf(HarmonicAnalysis::isAboutTheModel);
             Samples rest = Samples.of(waveform, first, leftOut);
             requireSamples(rest.size());
             fitted = fit(rest, clock, fitted.result().angularFrequency());
@@ -268,14 +296,20 @@ public final class HarmonicAnalysis {
     private SignalFit summary(Fitted fitted, Clock clock) {
         Samples samples = fitted.samples();
         JointFit.Result result = fitted.result();
-        Noise noise = Noise.of(samples, fitted.basis(), result, !exact);
-        FitCovariance covariance = new FitCovariance(fitted.basis(), result, noise, !exact);
+        boolean frequencyFree = !exact && !fitted.hasTrend();
+        Noise noise = Noise.of(samples, fitted.basis(), result, frequencyFree);
+        FitCovariance covariance = new FitCovariance(fitted.basis(), result, noise, frequencyFree);
         double omega = result.angularFrequency();
-        double frequencyU = Math.sqrt(covariance.phaseVariance()) / samples.halfSpanS() / (2 * Math.PI);
+        double phaseU =
+                fitted.hasTrend() && !exact ? phaseGained(fitted, noise).u() : Math.sqrt(covariance.phaseVariance());
+        double frequencyU = phaseU / samples.halfSpanS() / (2 * Math.PI);
         double frequency = exact ? waveform.nominalFrequencyHz().getAsDouble() : omega / (2 * Math.PI);
         double cycles = wholeWithin(samples.durationS() * frequency, samples.durationS() * 3 * frequencyU + 1e-9);
         addNotes(noise);
         int samplesHeld = waveform.size() - first;
+        TemperatureLine temperature = waveform.isWindow()
+                ? TemperatureLine.through(waveform.temperatureK(), samples)
+                : TemperatureLine.flat(waveform.temperatureK(), samples);
         Steadiness steadiness = new Steadiness(samples, fitted.basis(), result, noise);
         ScreeningFigures figures = new ScreeningFigures(
                 (double) clipped / waveform.size(),
@@ -286,7 +320,7 @@ public final class HarmonicAnalysis {
                 snrDb(fitted, steadiness, Samples.LOAD),
                 steadiness.baseline(),
                 steadiness.cycleTrend(),
-                Steadiness.temperatureWander(waveform.temperatureK(), samples.indices(), samples.size() / cycles),
+                Steadiness.temperatureWander(temperature.about(), samples.indices(), samples.size() / cycles),
                 frequencyMismatch(fitted, noise, frequency, frequencyU));
         return new SignalFit(
                 frequency,
@@ -302,7 +336,7 @@ public final class HarmonicAnalysis {
                 first,
                 samples.size(),
                 samplesHeld + first - samples.size(),
-                Steadiness.meanTemperature(waveform.temperatureK(), samples.indices()),
+                temperature.middleK(),
                 figures,
                 List.copyOf(notes));
     }
@@ -332,8 +366,19 @@ public final class HarmonicAnalysis {
         // the tag was taken as it is; where the signal would have gone is still worth knowing
         JointFit.Result result = fitted.result();
         double perFrequency = fitted.samples().halfSpanS() * result.angularFrequency();
+        if (fitted.hasTrend()) {
+            Figure phase = phaseGained(fitted, noise);
+            return Optional.of(new Figure(Math.abs(phase.value()) / perFrequency, phase.u() / perFrequency));
+        }
         double variance = new FitCovariance(fitted.basis(), result, noise, true).phaseVariance();
         return Optional.of(new Figure(Math.abs(result.phaseStep()) / perFrequency, Math.sqrt(variance) / perFrequency));
+    }
+
+    private static Figure phaseGained(Fitted fitted, Noise noise) {
+        return WindowFit.phaseGained(fitted, new double[] {
+            noise.beside(Samples.DEFORMATION, 1).variance(),
+            noise.beside(Samples.LOAD, 1).variance()
+        });
     }
 
     private static double snrDb(Fitted fitted, Steadiness steadiness, int channel) {

@@ -36,8 +36,13 @@ final class JointFit {
     private Optional<Cholesky> normal = Optional.empty();
 
     JointFit(Samples samples, int harmonics, int driftDegree) {
+        this(samples, harmonics, driftDegree, 0);
+    }
+
+    /** With a polynomial of this degree for the amplitude of the fundamental. */
+    JointFit(Samples samples, int harmonics, int driftDegree, int trendDegree) {
         this.samples = samples;
-        this.basis = new Basis(samples, harmonics, driftDegree);
+        this.basis = new Basis(samples, harmonics, driftDegree, trendDegree);
         this.columns = basis.columns();
         this.block = new double[columns][BLOCK];
         this.residuals = new double[Samples.CHANNELS][samples.size()];

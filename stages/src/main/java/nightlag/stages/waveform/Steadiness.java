@@ -94,9 +94,10 @@ final class Steadiness {
      * @param count how many
      * @param cyclesEach whole cycles in each
      * @param samplesIn samples in each
+     * @param middles the mean of their times, u = t/half span
      * @param excess what the residuals add there to the amplitude of the fundamental: stretch, channel, cos and sin
      */
-    private record Stretches(int count, int cyclesEach, int[] samplesIn, double[][][] excess) {}
+    private record Stretches(int count, int cyclesEach, int[] samplesIn, double[] middles, double[][][] excess) {}
 
     private Optional<Stretches> cut() {
         double cyclesPerSecond = fit.angularFrequency() / (2 * Math.PI);
@@ -110,12 +111,14 @@ final class Steadiness {
         int count = cycles / cyclesEach;
         double[][][] excess = new double[count][Samples.CHANNELS][2];
         int[] samplesIn = new int[count];
+        double[] middles = new double[count];
         double begin = samples.seconds()[0] - samples.intervalS() / 2;
         double perSecond = cyclesPerSecond / cyclesEach;
         for (int i = 0; i < samples.size(); i++) {
             int stretch = (int) ((samples.seconds()[i] - begin) * perSecond);
             if (stretch < count) {
                 samplesIn[stretch]++;
+                middles[stretch] += samples.seconds()[i] / samples.halfSpanS();
                 for (int c = 0; c < Samples.CHANNELS; c++) {
                     excess[stretch][c][0] += fit.residuals()[c][i] * basis.cosine()[i];
                     excess[stretch][c][1] += fit.residuals()[c][i] * basis.sine()[i];
@@ -123,12 +126,13 @@ final class Steadiness {
             }
         }
         for (int k = 0; k < count; k++) {
+            middles[k] /= Math.max(1, samplesIn[k]);
             for (double[] ofChannel : excess[k]) {
                 ofChannel[0] *= 2.0 / Math.max(1, samplesIn[k]);
                 ofChannel[1] *= 2.0 / Math.max(1, samplesIn[k]);
             }
         }
-        return Optional.of(new Stretches(count, cyclesEach, samplesIn, excess));
+        return Optional.of(new Stretches(count, cyclesEach, samplesIn, middles, excess));
     }
 
     /**
@@ -141,7 +145,7 @@ final class Steadiness {
             return whole.variance();
         }
         Stretches cut = stretches.get();
-        double freedom = whole.freedom() - 2 * (cut.count() - 1);
+        double freedom = whole.freedom() - 2 * Math.max(0, cut.count() - 1 - basis.trendDegree());
         double squares = whole.variance() * whole.freedom();
         for (int k = 0; k < cut.count(); k++) {
             double[] excess = cut.excess()[k][channel];
@@ -186,17 +190,28 @@ final class Steadiness {
 
     private double[] ratios(Stretches cut) {
         double[] ratios = new double[cut.count()];
-        int column = basis.cosineColumn(1);
         for (int k = 0; k < ratios.length; k++) {
+            double middle = cut.middles()[k];
             double[] sizes = new double[Samples.CHANNELS];
             for (int c = 0; c < Samples.CHANNELS; c++) {
                 sizes[c] = Math.hypot(
-                        fit.coefficients()[c][column] + cut.excess()[k][c][0],
-                        fit.coefficients()[c][column + 1] + cut.excess()[k][c][1]);
+                        fitted(c, 0, middle) + cut.excess()[k][c][0], fitted(c, 1, middle) + cut.excess()[k][c][1]);
             }
             ratios[k] = sizes[Samples.LOAD] / sizes[Samples.DEFORMATION];
         }
         return ratios;
+    }
+
+    /** The coefficient of cos ωt (part 0) or sin ωt (part 1) at u, with what the fit let it change. */
+    private double fitted(int channel, int part, double u) {
+        double[] coefficients = fit.coefficients()[channel];
+        double value = coefficients[basis.cosineColumn(1) + part];
+        double raised = 1;
+        for (int power = 1; power <= basis.trendDegree(); power++) {
+            raised *= u;
+            value += raised * coefficients[basis.trendColumn(power) + part];
+        }
+        return value;
     }
 
     /** Mean of the temperature over the samples used, K; rows without one do not count. */

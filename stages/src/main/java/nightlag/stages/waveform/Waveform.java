@@ -11,6 +11,8 @@ import java.util.OptionalDouble;
  * @param temperatureK temperature in K, one value a time, or an empty array without such a channel
  * @param nominalFrequencyHz the frequency the record is tagged with, in Hz
  * @param rowsLeftOut rows of the record without a value in a needed column
+ * @param windowOfRecordFromS for a window cut out of a longer record, in which the specimen may change: when that record
+ *     began, s; empty where these samples are the whole record
  */
 public record Waveform(
         double[] timeS,
@@ -18,7 +20,19 @@ public record Waveform(
         double[] load,
         double[] temperatureK,
         OptionalDouble nominalFrequencyHz,
-        int rowsLeftOut) {
+        int rowsLeftOut,
+        OptionalDouble windowOfRecordFromS) {
+    /** A whole record. */
+    public Waveform(
+            double[] timeS,
+            double[] deformation,
+            double[] load,
+            double[] temperatureK,
+            OptionalDouble nominalFrequencyHz,
+            int rowsLeftOut) {
+        this(timeS, deformation, load, temperatureK, nominalFrequencyHz, rowsLeftOut, OptionalDouble.empty());
+    }
+
     /** Checks the shapes. */
     public Waveform {
         if (deformation.length != timeS.length
@@ -26,6 +40,11 @@ public record Waveform(
                 || (temperatureK.length != 0 && temperatureK.length != timeS.length)) {
             throw new IllegalArgumentException("channels of unequal length");
         }
+    }
+
+    /** Whether it is a window cut out of a longer record. */
+    public boolean isWindow() {
+        return windowOfRecordFromS.isPresent();
     }
 
     /** The number of samples. */

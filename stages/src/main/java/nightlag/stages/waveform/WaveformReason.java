@@ -16,6 +16,11 @@ public enum WaveformReason implements ReasonCode {
     WAVEFORM_NO_OSCILLATION("no oscillation is left in the {0} at the frequency of the record"),
     /** {0} start-up cycles, {1} cycles in the record. */
     WAVEFORM_ALL_START_UP("start_up_cycles leaves out {0} cycles, and the record holds only {1}"),
+    /** {0} start-up cycles, {1} cycles from the beginning of the record to the end of the window. */
+    WAVEFORM_WINDOW_IN_START_UP(
+            "start_up_cycles leaves out the first {0} cycles of the record, and this window ends after {1}"),
+    /** {0} cycles. */
+    WAVEFORM_WINDOW_TOO_SHORT("amplitudes taken as constant within the window: {0} cycles do not tell how they change"),
     /** {0} tagged frequency in Hz. */
     WAVEFORM_BAD_TAG("the tagged frequency is {0} Hz; it must be above zero and finite"),
     /** No parts. */
