@@ -129,7 +129,7 @@ final class Describing {
     }
 
     /** Without what the conversion of a decimal number to SI leaves in the last digits. */
-    private static String toTenDigits(double value) {
+    static String toTenDigits(double value) {
         return new BigDecimal(value)
                 .round(new MathContext(10))
                 .stripTrailingZeros()

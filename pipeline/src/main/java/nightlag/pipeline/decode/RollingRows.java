@@ -114,9 +114,10 @@ final class RollingRows implements RowTaker {
                     .at(
                             firstLine,
                             "",
-                            "a record that ends " + shortened(lastS() - beginS) + " s after its first row",
-                            "at least one window: " + format.windowCycles() + " cycles at " + shortened(frequencyHz)
-                                    + " Hz are " + shortened(windowS()) + " s");
+                            "a record that ends " + Describing.toTenDigits(lastS() - beginS) + " s after its first row",
+                            "at least one window: " + format.windowCycles() + " cycles at "
+                                    + Describing.toTenDigits(frequencyHz) + " Hz are "
+                                    + Describing.toTenDigits(windowS()) + " s");
         }
         drop(samples.size());
     }
@@ -133,7 +134,11 @@ final class RollingRows implements RowTaker {
         frequencyHz = frequency.getAsDouble();
         if (!(frequencyHz > 0)) {
             throw facts.complaints()
-                    .at(line, "tag " + TagName.FREQUENCY.word(), shortened(frequencyHz) + " Hz", "a frequency above 0");
+                    .at(
+                            line,
+                            "tag " + TagName.FREQUENCY.word(),
+                            Describing.toTenDigits(frequencyHz) + " Hz",
+                            "a frequency above 0");
         }
         beginS = timeS;
         begun = true;
@@ -218,9 +223,5 @@ final class RollingRows implements RowTaker {
                 held - entered);
         entered = held;
         some = true;
-    }
-
-    private static String shortened(double value) {
-        return Double.toString((double) Math.round(value * 1e6) / 1e6);
     }
 }

@@ -125,7 +125,7 @@ class RollingRowsTest {
                 .isInstanceOfSatisfying(
                         DecodeException.class,
                         e -> assertThat(e.problem().sentence())
-                                .contains("line 2", "ends 4.75 s after its first row", "6 cycles at 1.0 Hz are 6.0 s"));
+                                .contains("line 2", "ends 4.75 s after its first row", "6 cycles at 1 Hz are 6 s"));
     }
 
     @Test
