@@ -20,8 +20,8 @@ final class WindowFit {
     private static final double CYCLES_FOR_A_LINE = 1.9;
 
     private static final double CYCLES_FOR_A_PARABOLA = 2.9;
-    /** |A₁|² over its variance per part, beyond which noise alone hardly ever gets (exp(−6) = 0.25 %). */
-    private static final double STANDS_OUT = 12;
+    /** |A₁|² over the variance of its real part; noise hardly ever gets beyond (a thousandth, as the noise is estimated too). */
+    private static final double STANDS_OUT = 20;
     /** How far the frequency may be off, as the phase at the window's end over its uncertainty, and in rad. */
     private static final double SETTLED_PART = 1e-3;
 
