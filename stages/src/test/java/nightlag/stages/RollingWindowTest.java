@@ -219,6 +219,48 @@ class RollingWindowTest {
         assertThat(error(reduce(made.build(true)), temperature, 1.002)).isLessThan(5e-5);
     }
 
+    @ParameterizedTest(name = "tag {0} Hz, flagged {1}")
+    @CsvSource({"1.0005, false", "1.002, true"})
+    void aTagThatIsTakenAsItIsMayStillBeWrong(double taggedHz, boolean flagged) {
+        Window made = new Window(355);
+        made.taggedHz = taggedHz;
+        ModulusPoint point = reduce(
+                made.build(true), new ExtractionPlan(0, 7, Drift.LINEAR, FrequencySource.TAG), OptionalDouble.empty());
+        assertThat(point.flags()).isEqualTo(flagged ? List.of(Flag.FREQUENCY_MISMATCH) : List.of());
+        assertThat(error(point, 355, 1)).isLessThan(5e-5);
+    }
+
+    @Test
+    void spikesInARampAreLeftOut() {
+        Waveform clean = new Window(377).build(true);
+        double[] load = clean.load().clone();
+        for (int place : new int[] {11, 300, 777}) {
+            load[place] += 10 * STRAIN * modulus(377, 1).abs();
+        }
+        Waveform spiked = new Waveform(
+                clean.timeS(),
+                clean.deformation(),
+                load,
+                clean.temperatureK(),
+                clean.nominalFrequencyHz(),
+                0,
+                clean.windowOfRecordFromS());
+        ModulusPoint point = reduce(spiked);
+        assertThat(point.samplesUsed()).isEqualTo(clean.size() - 3);
+        assertThat(error(point, 377, 1)).isLessThan(5e-5);
+    }
+
+    @Test
+    void aWindowOfOneCycleTakesTheSpecimenForSteadyAndSaysSo() {
+        Window made = new Window(375);
+        made.cycles = 1;
+        ModulusPoint point = reduce(made.build(true));
+        assertThat(point.reasons())
+                .extracting(reason -> reason.sentence())
+                .anyMatch(sentence -> sentence.startsWith("amplitudes taken as constant within the window: "));
+        assertThat(error(point, 375, 1)).isLessThan(5e-3);
+    }
+
     @Test
     void aPointStandsAtTheMiddleOfItsWindowInTimeAndTemperature() {
         Waveform whole = new Window(375).build(true);
