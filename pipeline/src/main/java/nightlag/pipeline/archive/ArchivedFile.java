@@ -17,7 +17,7 @@ package nightlag.pipeline.archive;
  * @param lot its lot, likewise
  * @param specimen its specimen, likewise
  * @param rows data rows in it
- * @param rowsLeftOut rows left out for an empty cell
+ * @param rowsLeftOut rows left out: an empty cell, or outside the windows of a long record
  */
 public record ArchivedFile(
         FileIdentity identity,

@@ -30,8 +30,7 @@ final class Summary {
                         .map(status -> outcome.count(status) + " " + status.word())
                         .collect(Collectors.joining(", ")));
         if (outcome.rows() > 0) {
-            out.println(
-                    "rows    " + outcome.rows() + " read, " + outcome.rowsLeftOut() + " left out for an empty cell");
+            out.println("rows    " + outcome.rows() + " read, " + outcome.rowsLeftOut() + " left out");
             out.println("points  "
                     + Arrays.stream(Quality.values())
                             .map(quality -> outcome.quality().getOrDefault(quality, 0) + " " + quality.word())

@@ -172,7 +172,7 @@ final class RollingRows implements RowTaker {
     private void add(double timeS) {
         if (timeS < beginS(window)) {
             // between two windows
-            tally.leaveOut();
+            tally.leaveOutsideWindows();
             return;
         }
         int place = samples.size();
@@ -193,7 +193,7 @@ final class RollingRows implements RowTaker {
 
     private void drop(int count) {
         for (int i = entered; i < count; i++) {
-            tally.leaveOut();
+            tally.leaveOutsideWindows();
         }
         entered = Math.max(0, entered - count);
         samples.drop(count);

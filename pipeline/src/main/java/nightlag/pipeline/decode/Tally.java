@@ -8,6 +8,7 @@ final class Tally {
     private final Complaints complaints;
     private long used;
     private long leftOut;
+    private long outsideWindows;
     private int records;
 
     Tally(RecordSink sink, Complaints complaints) {
@@ -25,9 +26,15 @@ final class Tally {
         records++;
     }
 
-    /** Counts a row that enters no record. */
+    /** Counts a row with an empty cell, which enters no record. */
     void leaveOut() {
         leftOut++;
+    }
+
+    /** Counts a complete row of a long record that enters no window. */
+    void leaveOutsideWindows() {
+        leftOut++;
+        outsideWindows++;
     }
 
     /**
@@ -40,6 +47,6 @@ final class Tally {
             throw new IllegalStateException(
                     complaints.file() + ": of " + rows + " rows " + used + " were used and " + leftOut + " left out");
         }
-        return new DecodeCounts(rows, used, leftOut, records);
+        return new DecodeCounts(rows, used, leftOut, outsideWindows, records);
     }
 }

@@ -24,7 +24,7 @@ import nightlag.stages.moduli.Quality;
  * @param notSound the first of them that are not sound, unusable ones first, each with its reasons
  * @param flags how often each flag was raised on them
  * @param rows rows read this night
- * @param rowsLeftOut rows among them left out for an empty cell
+ * @param rowsLeftOut rows among them left out: an empty cell, or outside the windows of a long record
  */
 public record NightOutcome(
         Path folder,

@@ -67,7 +67,13 @@ final class Tally {
         rows += counts.rows();
         rowsLeftOut += counts.leftOut();
         if (counts.leftOut() > 0) {
-            LOG.info("{}: {} of {} rows left out for an empty cell", file, counts.leftOut(), counts.rows());
+            LOG.info(
+                    "{}: {} of {} rows left out, {} for an empty cell, {} outside the windows of a long record",
+                    file,
+                    counts.leftOut(),
+                    counts.rows(),
+                    counts.leftOut() - counts.outsideWindows(),
+                    counts.outsideWindows());
         }
         for (Reduction reduction : reductions) {
             for (ModulusPoint point : reduction.points()) {
