@@ -18,6 +18,7 @@ final class SampleFiles {
         Heron.addTo(files);
         Bracken.addTo(files);
         Alder.addTo(files);
+        AlderRamp.addTo(files);
         return Collections.unmodifiableSortedMap(files);
     }
 }
