@@ -140,6 +140,21 @@ class ReduceTest {
     }
 
     @Test
+    void aRecordWithoutSamplesIsAnUnusablePointWithItsReason() {
+        double[] none = new double[0];
+        ModulusPoint point = only(Reduce.reduce(
+                new WaveformRecord(
+                        tags(Map.of()),
+                        DeformationSignal.STRAIN,
+                        LoadSignal.STRESS,
+                        new Waveform(none, none, none, none, OptionalDouble.of(1), 0)),
+                plan(Optional.empty(), Corrections.none())));
+        assertThat(point.quality()).isEqualTo(Quality.UNUSABLE);
+        assertThat(point.moduli()).isEmpty();
+        assertThat(point.reasons()).extracting(Reason::sentence).containsExactly("the record holds no samples");
+    }
+
+    @Test
     void torqueWithoutAGeometryIsAnUnusablePointWithItsReason() {
         Waveform waveform = Recording.of(1, 5, 64).tagged(1).build();
         ModulusPoint point = only(Reduce.reduce(

@@ -29,6 +29,9 @@ final class Damage {
      */
     static int markTowering(double[] values, boolean[] leftOut) {
         int count = values.length;
+        if (count == 0) {
+            return 0;
+        }
         double mean = 0;
         for (int i = 0; i < values.length; i++) {
             mean += (values[i] - values[0]) / count;

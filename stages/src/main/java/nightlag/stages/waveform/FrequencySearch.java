@@ -5,7 +5,6 @@ import java.util.OptionalDouble;
 import java.util.stream.IntStream;
 import nightlag.stages.numeric.Cholesky;
 import nightlag.stages.numeric.RealTransform;
-import nightlag.stages.numeric.RealTransform.Bins;
 
 /**
  * Where the refinement of the frequency starts: the strongest line of both channels together, each scaled to its own
@@ -20,18 +19,13 @@ final class FrequencySearch {
     private static final double MOST_CYCLES = 5;
     private static final double CYCLE_STEP = 0.1;
     /** More samples a cycle tell a grid of frequencies with one order nothing new. */
-    private static final int SAMPLES_PER_CYCLE = 24;
+    static final int SAMPLES_PER_CYCLE = 24;
     /** The same with all orders. */
     private static final int SAMPLES_PER_CYCLE_ALL_ORDERS = 48;
 
     private static final int NEARBY_STEPS = 16;
     private static final double NEARBY_REACH = 0.2;
     private static final int MOST_MINIMA = 3;
-    /** A line near the tagged frequency is preferred to a stronger one elsewhere down to this part of its power. */
-    private static final double TAG_PREFERENCE = 0.1;
-
-    private static final double TAG_NEIGHBOURHOOD = 1.5;
-
     private final Samples samples;
     private final int driftDegree;
 
@@ -40,70 +34,28 @@ final class FrequencySearch {
         this.driftDegree = driftDegree;
     }
 
-    /** A frequency in rad/s from which the fit finds its way. */
-    double start(OptionalDouble taggedHz) {
+    /** Frequencies in rad/s from which the fit finds its way: one, unless gaps leave more to choose from. */
+    double[] starts(OptionalDouble taggedHz) {
+        return GappedSearch.wanted(samples)
+                ? new GappedSearch(samples, driftDegree).starts(taggedHz)
+                : new double[] {start(taggedHz)};
+    }
+
+    private double start(OptionalDouble taggedHz) {
         int length = RealTransform.fastLengthUpTo(samples.size());
         double interval = (samples.seconds()[length - 1] - samples.seconds()[0]) / (length - 1);
-        RealTransform transform = new RealTransform(length);
-        Bins[] bins = new Bins[Samples.CHANNELS];
-        double[] share = new double[Samples.CHANNELS];
+        double[][] values = new double[Samples.CHANNELS][];
         for (int c = 0; c < Samples.CHANNELS; c++) {
-            bins[c] = transform.forward(detrended(samples.channels()[c], length));
-            double total = 0;
-            for (int k = 1; k < bins[c].size(); k++) {
-                total += bins[c].power(k);
-            }
-            share[c] = total > 0 ? 1 / total : 0;
+            values[c] = detrended(samples, c, length);
         }
-        int peak = strongest(bins, share, 1, bins[0].size() - 1);
-        if (taggedHz.isPresent()) {
-            double expected = taggedHz.getAsDouble() * interval * length;
-            int near = strongest(bins, share, (int) Math.max(1, Math.floor(expected / TAG_NEIGHBOURHOOD)), (int)
-                    Math.min(bins[0].size() - 1.0, Math.ceil(expected * TAG_NEIGHBOURHOOD)));
-            if (near > 0 && power(bins, share, near) > TAG_PREFERENCE * power(bins, share, peak)) {
-                peak = near;
-            }
-        }
-        return peak <= LAST_UNSURE_BIN
-                ? bestOnGrid()
-                : 2 * Math.PI * interpolated(bins, share, peak) / (interval * length);
+        LineSpectrum spectrum = LineSpectrum.of(values, interval);
+        int peak = spectrum.strongest(taggedHz);
+        return peak <= LAST_UNSURE_BIN ? bestOnGrid() : 2 * Math.PI * spectrum.interpolated(peak) / (interval * length);
     }
 
-    private static int strongest(Bins[] bins, double[] share, int from, int to) {
-        int best = 0;
-        double most = 0;
-        for (int k = from; k <= to; k++) {
-            double power = power(bins, share, k);
-            if (power > most) {
-                most = power;
-                best = k;
-            }
-        }
-        return best;
-    }
-
-    private static double power(Bins[] bins, double[] share, int k) {
-        double power = 0;
-        for (int c = 0; c < bins.length; c++) {
-            power += share[c] * bins[c].power(k);
-        }
-        return power;
-    }
-
-    /** The place of a line between bins from three of them, in the channel that shows it best. */
-    private static double interpolated(Bins[] bins, double[] share, int peak) {
-        if (peak + 1 >= bins[0].size()) {
-            return peak;
-        }
-        Bins best = share[0] * bins[0].power(peak) >= share[1] * bins[1].power(peak) ? bins[0] : bins[1];
-        var outer = best.at(peak - 1).minus(best.at(peak + 1));
-        var inner = best.at(peak).times(2).minus(best.at(peak - 1)).minus(best.at(peak + 1));
-        double offset = inner.abs() == 0 ? 0 : outer.over(inner).re();
-        return peak + Math.max(-0.5, Math.min(0.5, offset));
-    }
-
-    /** Without its best parabola: low bins would else show the drift. */
-    private double[] detrended(double[] values, int length) {
+    /** The first samples of a channel without their best parabola: low bins would else show the drift. */
+    static double[] detrended(Samples samples, int channel, int length) {
+        double[] values = samples.channels()[channel];
         double[][] gram = new double[3][3];
         double[] moments = new double[3];
         double perSecond = 1 / samples.halfSpanS();

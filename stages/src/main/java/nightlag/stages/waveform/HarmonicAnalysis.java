@@ -67,6 +67,9 @@ public final class HarmonicAnalysis {
     }
 
     private SignalFit run() throws ReductionFault {
+        if (waveform.size() == 0) {
+            throw new ReductionFault(WaveformReason.WAVEFORM_NO_SAMPLES.with());
+        }
         RecordChecks.check(waveform);
         requireSamples(waveform.size());
         leaveOutDamage();
@@ -76,12 +79,12 @@ public final class HarmonicAnalysis {
         if (plan.frequencyFrom() == FrequencySource.TAG && !exact) {
             notes.add(WaveformReason.WAVEFORM_NO_TAG.with());
         }
-        double omega = exact
-                ? 2 * Math.PI * tag.getAsDouble()
-                : new FrequencySearch(all, plan.drift().degree()).start(tag);
-        Samples samples = plan.startUpCycles() > 0 ? withoutStartUp(all, omega) : all;
+        double[] starts = exact
+                ? new double[] {2 * Math.PI * tag.getAsDouble()}
+                : new FrequencySearch(all, plan.drift().degree()).starts(tag);
+        Samples samples = plan.startUpCycles() > 0 ? withoutStartUp(all, starts[0]) : all;
         Clock clock = Clock.of(waveform.timeS(), first);
-        Fitted fitted = fit(samples, clock, omega);
+        Fitted fitted = best(samples, clock, starts);
         for (int round = 0; round < START_UP_ROUNDS && startUpEnd(fitted, all) != first; round++) {
             // the first look was misled by the start-up itself; now its end is known better
             notes.removeIf(HarmonicAnalysis::isAboutTheModel);
@@ -195,14 +198,45 @@ public final class HarmonicAnalysis {
                 || note.code().equals(WaveformReason.WAVEFORM_WINDOW_TOO_SHORT.name());
     }
 
+    /** The best fit from several frequencies to start from. */
+    private Fitted best(Samples samples, Clock clock, double[] starts) throws ReductionFault {
+        List<Reason> before = List.copyOf(notes);
+        Optional<Fitted> best = Optional.empty();
+        List<Reason> notesOfBest = before;
+        Optional<ReductionFault> firstFault = Optional.empty();
+        for (double start : starts) {
+            try {
+                Fitted fitted = fit(samples, clock, start);
+                double least = best.map(b -> b.result().misfit()).orElse(Double.POSITIVE_INFINITY);
+                if (best.isEmpty() || fitted.result().misfit() < least) {
+                    best = Optional.of(fitted);
+                    notesOfBest = List.copyOf(notes);
+                }
+            } catch (ReductionFault fault) {
+                firstFault = firstFault.isPresent() ? firstFault : Optional.of(fault);
+            }
+            notes.clear();
+            notes.addAll(before);
+        }
+        notes.clear();
+        notes.addAll(notesOfBest);
+        if (best.isEmpty() && firstFault.isPresent()) {
+            throw firstFault.get();
+        }
+        return best.orElseThrow();
+    }
+
     private Fitted fit(Samples samples, Clock clock, double start) throws ReductionFault {
         int degree = plan.drift().degree();
         double omega = exact
                 ? start
                 : new JointFit(samples, 1, degree)
                         .roughlyRefined(start)
-                        .orElseThrow(() -> new ReductionFault(WaveformReason.WAVEFORM_NOT_SEPARABLE.with()))
+                        .orElseThrow(() -> new ReductionFault(notSeparable(start, clock)))
                         .angularFrequency();
+        if (atHalfTheSampling(omega, clock)) {
+            throw new ReductionFault(tooFewACycle(omega, clock));
+        }
         double cycles = omega * samples.durationS() / (2 * Math.PI);
         int orders = ordersBelowHalf(omega, clock);
         int separable = Math.min(orders, (samples.size() - SPARE_SAMPLES - degree - 1) / 2);
@@ -236,9 +270,28 @@ public final class HarmonicAnalysis {
         return window.orElse(constant);
     }
 
+    private static double samplesPerCycle(double omega, Clock clock) {
+        return 2 * Math.PI / (omega * clock.intervalS());
+    }
+
+    /** Whether the fundamental itself is no order below half the samples a cycle. */
+    private static boolean atHalfTheSampling(double omega, Clock clock) {
+        return BELOW_HALF * samplesPerCycle(omega, clock) < 1;
+    }
+
+    private static Reason tooFewACycle(double omega, Clock clock) {
+        return WaveformReason.WAVEFORM_TOO_FEW_A_CYCLE.with(samplesPerCycle(omega, clock), 1 / BELOW_HALF);
+    }
+
+    private static Reason notSeparable(double start, Clock clock) {
+        return atHalfTheSampling(start, clock)
+                ? tooFewACycle(start, clock)
+                : WaveformReason.WAVEFORM_NOT_SEPARABLE.with();
+    }
+
     private int ordersBelowHalf(double omega, Clock clock) {
-        double perCycle = 2 * Math.PI / (omega * clock.intervalS());
-        int highest = (int) Math.max(1, Math.floor(BELOW_HALF * perCycle));
+        double perCycle = samplesPerCycle(omega, clock);
+        int highest = (int) Math.floor(BELOW_HALF * perCycle);
         if (highest < plan.harmonics()) {
             notes.add(WaveformReason.WAVEFORM_ORDERS_ABOVE_SAMPLING.with(highest, plan.harmonics(), perCycle));
         }

@@ -4,6 +4,8 @@ import nightlag.stages.fault.ReasonCode;
 
 /** Why no amplitudes can be taken out of a record, or what was done differently from the plan. */
 public enum WaveformReason implements ReasonCode {
+    /** No parts. */
+    WAVEFORM_NO_SAMPLES("the record holds no samples"),
     /** {0} samples found, {1} samples needed. */
     WAVEFORM_TOO_FEW_SAMPLES("the record has {0} samples to use; at least {1} are needed"),
     /** {0} name of the channel, {1} number of the sample from 1. */
@@ -12,6 +14,8 @@ public enum WaveformReason implements ReasonCode {
     WAVEFORM_TIME_NOT_RISING("the time of sample {0} is not after the one before it"),
     /** {0} name of the channel. */
     WAVEFORM_CONSTANT_CHANNEL("the {0} does not move: it holds one value throughout"),
+    /** {0} name of the channel, {1} its largest or its smallest extent, {2} and {3} least and most. */
+    WAVEFORM_OUT_OF_BOUNDS("the {0} spans {1} in SI units; numbers can be worked with from {2} to {3}"),
     /** {0} name of the channel. */
     WAVEFORM_NO_OSCILLATION("no oscillation is left in the {0} at the frequency of the record"),
     /** {0} start-up cycles, {1} cycles in the record. */
@@ -25,6 +29,9 @@ public enum WaveformReason implements ReasonCode {
     WAVEFORM_BAD_TAG("the tagged frequency is {0} Hz; it must be above zero and finite"),
     /** No parts. */
     WAVEFORM_NOT_SEPARABLE("drift and oscillation cannot be told apart in so short a record"),
+    /** {0} samples per cycle, {1} samples per cycle needed. */
+    WAVEFORM_TOO_FEW_A_CYCLE(
+            "the record has {0} samples a cycle; above {1} are needed, else a wave and its phase cannot be told from them"),
     /** {0} orders fitted, {1} orders wanted, {2} samples per cycle. */
     WAVEFORM_ORDERS_ABOVE_SAMPLING(
             "harmonics end at order {0} instead of {1}: {2} samples a cycle carry no order at or above half their number"),

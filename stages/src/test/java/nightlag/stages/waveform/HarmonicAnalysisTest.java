@@ -309,7 +309,7 @@ class HarmonicAnalysisTest {
         assertFault(t, broken, wave, "WAVEFORM_NOT_FINITE");
         assertFault(back, wave, wave, "WAVEFORM_TIME_NOT_RISING");
         assertFault(Arrays.copyOf(t, 4), Arrays.copyOf(wave, 4), Arrays.copyOf(wave, 4), "WAVEFORM_TOO_FEW_SAMPLES");
-        assertFault(new double[0], new double[0], new double[0], "WAVEFORM_TOO_FEW_SAMPLES");
+        assertFault(new double[0], new double[0], new double[0], "WAVEFORM_NO_SAMPLES");
         assertThatThrownBy(() -> HarmonicAnalysis.analyse(
                         new Waveform(t, wave, wave, new double[0], OptionalDouble.empty(), 0),
                         new ExtractionPlan(30, 7, Drift.LINEAR, FrequencySource.SIGNAL)))
