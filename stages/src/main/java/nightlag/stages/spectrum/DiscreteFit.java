@@ -1,6 +1,7 @@
 package nightlag.stages.spectrum;
 
 import java.util.List;
+import java.util.Optional;
 import java.util.OptionalInt;
 import nightlag.stages.fault.ReductionFault;
 import nightlag.stages.sweep.FrequencySweeps;
@@ -14,7 +15,8 @@ public final class DiscreteFit {
 
     /**
      * Fits as few modes as the readings carry, or a given number, by {@link ModeSearch}. Where an equilibrium modulus is
-     * fitted and comes out as zero, the spectrum is a liquid's.
+     * fitted and comes out as zero, the spectrum is a liquid's. Readings without uncertainties are weighted by
+     * {@link SelfWeighing}.
      *
      * @param readings finite moduli at positive frequencies, in any order, repeats allowed
      * @param plan what is wanted
@@ -35,9 +37,17 @@ public final class DiscreteFit {
         if (readings.stream().noneMatch(reading -> reading.moduli().magnitudePa() > 0)) {
             throw new ReductionFault(SpectrumReason.SPECTRUM_NO_MODULUS.with());
         }
-        WeightedReadings weighted = new WeightedReadings(readings);
+        if (WeightedReadings.haveCovariances(readings)) {
+            WeightedReadings weighted = WeightedReadings.byCovariances(readings);
+            return new DiscreteSpectrum(weighted, plan.fitEquilibrium(), search(weighted, plan), Optional.empty());
+        }
+        SelfWeighing.Weighed weighed = new SelfWeighing(readings, weighted -> search(weighted, plan)).fit();
+        return new DiscreteSpectrum(
+                weighed.readings(), plan.fitEquilibrium(), weighed.modes(), Optional.of(weighed.model()));
+    }
+
+    private static FittedModes search(WeightedReadings weighted, SpectrumPlan plan) {
         ModeRefinement refinement = new ModeRefinement(weighted, plan.fitEquilibrium());
-        FittedModes modes = new ModeSearch(weighted, refinement, plan.fitEquilibrium()).find(wanted);
-        return new DiscreteSpectrum(weighted, refinement, modes);
+        return new ModeSearch(weighted, refinement, plan.fitEquilibrium()).find(plan.modes());
     }
 }

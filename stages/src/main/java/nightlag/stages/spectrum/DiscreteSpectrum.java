@@ -3,6 +3,7 @@ package nightlag.stages.spectrum;
 import java.util.ArrayList;
 import java.util.List;
 import java.util.Locale;
+import java.util.Optional;
 import java.util.OptionalDouble;
 import java.util.function.ToDoubleFunction;
 import nightlag.stages.moduli.Marker;
@@ -13,14 +14,22 @@ public final class DiscreteSpectrum {
     private final RetardationModes retardation;
     private final SupportedWindow window;
     private final ModeUncertainty uncertainty;
-    private final boolean scatterKnown;
+    private final Optional<ErrorModel> model;
+    private final boolean unshownSolid;
 
-    DiscreteSpectrum(WeightedReadings readings, ModeRefinement refinement, FittedModes modes) {
+    /**
+     * What a fit gave.
+     *
+     * @param solid whether an equilibrium modulus was looked for
+     * @param model how the errors were taken to grow, where the readings had none of their own
+     */
+    DiscreteSpectrum(WeightedReadings readings, boolean solid, FittedModes modes, Optional<ErrorModel> model) {
         relaxation = RelaxationModes.of(modes.equilibrium(), modes.times(), modes.strengths());
         retardation = relaxation.retardation();
         window = SupportedWindow.of(readings.lowestFrequency(), readings.highestFrequency());
-        uncertainty = new ModeUncertainty(readings, refinement, modes);
-        scatterKnown = readings.scatterKnown();
+        uncertainty = new ModeUncertainty(readings, solid, modes);
+        unshownSolid = solid && relaxation.isLiquid();
+        this.model = model;
     }
 
     /** The fitted modes. */
@@ -129,10 +138,17 @@ public final class DiscreteSpectrum {
     private String counted() {
         return String.format(
                 Locale.ROOT,
-                ", %d relaxation mode%s, u from %s",
+                ", %d relaxation mode%s, %s",
                 relaxation.count(),
                 relaxation.count() == 1 ? "" : "s",
-                scatterKnown ? "the fit" : "the scatter about the fit");
+                model.map(this::sourceOfU).orElse("u from the fit"));
+    }
+
+    private String sourceOfU(ErrorModel errors) {
+        OptionalDouble scatter = uncertainty.scatter();
+        return scatter.isPresent()
+                ? "the moduli came without u: u from the scatter about the fit, " + errors.words(scatter.getAsDouble())
+                : "the moduli came without u and the fit leaves no scatter to take one from";
     }
 
     private String slowEnd() {
@@ -141,9 +157,12 @@ public final class DiscreteSpectrum {
                 ? ""
                 : String.format(
                         Locale.ROOT,
-                        "; the slowest mode, %.3g s, lies beyond the %.3g s the data support: slower ones may be missing",
+                        "; the slowest mode, %.3g s, lies beyond the %.3g s the data support: %s",
                         slowest,
-                        window.longestS());
+                        window.longestS(),
+                        unshownSolid
+                                ? "it may be a solid whose equilibrium modulus they do not reach"
+                                : "slower ones may be missing");
     }
 
     private String fastEnd() {

@@ -13,6 +13,7 @@ import nightlag.stages.numeric.LinearisedUncertainty;
  *
  * <p>Where the slowest mode lies beyond the window the data support, more could lie there unseen: what the strongest
  * {@link UnseenMode} would change is added in quadrature. The same at the fast end.
+ * Where rounded readings come back, the scatter of one is added too, for all of a plateau err alike.
  */
 final class ModeUncertainty {
     /** What a logarithm of a strength or time is known to before the data: within a factor of e¹⁰. */
@@ -25,8 +26,10 @@ final class ModeUncertainty {
     private final LinearisedUncertainty linearised;
     private final OptionalDouble scatter;
     private final List<RelaxationModes> alternatives;
+    private final double commonError;
 
-    ModeUncertainty(WeightedReadings readings, ModeRefinement refinement, FittedModes modes) {
+    ModeUncertainty(WeightedReadings readings, boolean solid, FittedModes modes) {
+        ModeRefinement refinement = new ModeRefinement(readings, solid);
         this.modes = modes;
         int free = readings.rows() - modes.parameters();
         double own = free > 0 ? Math.sqrt(modes.chiSquared() / free) : 0;
@@ -38,18 +41,24 @@ final class ModeUncertainty {
         double[] priors = new double[modes.parameters()];
         Arrays.fill(priors, PRIOR_U_OF_LOGARITHM);
         linearised = new LinearisedUncertainty(refinement.jacobian(modes), priors);
+        commonError = !readings.scatterKnown() && readings.repeating() ? scatter.orElse(0) : 0;
         alternatives = new ArrayList<>();
         if (scatter.isPresent()) {
             double variance = Math.max(readings.leastVariance(), scatter.getAsDouble() * scatter.getAsDouble());
             UnseenMode unseen = new UnseenMode(readings, refinement, modes, variance);
             SupportedWindow window = SupportedWindow.of(readings.lowestFrequency(), readings.highestFrequency());
             if (modes.times()[modes.count() - 1] > window.longestS()) {
-                alternatives.add(unseen.slow());
+                alternatives.add(solid && modes.equilibrium() == 0 ? unseen.nearlySolid() : unseen.slow());
             }
             if (modes.times()[0] < window.shortestS()) {
                 alternatives.add(unseen.fast());
             }
         }
+    }
+
+    /** Standard deviation of the weighted residuals that counts; empty where there is none to be had. */
+    OptionalDouble scatter() {
+        return scatter;
     }
 
     /** Standard uncertainty of a figure; empty where the readings have none and leave no scatter to take one from. */
@@ -64,6 +73,7 @@ final class ModeUncertainty {
         }
         double square = Math.pow(scatter.getAsDouble() * linearised.of(derivatives), 2);
         double value = figure.applyAsDouble(moved(0, 0));
+        square += Math.pow(commonError * value, 2);
         for (RelaxationModes alternative : alternatives) {
             square += Math.pow(figure.applyAsDouble(alternative) - value, 2);
         }

@@ -11,6 +11,9 @@ final class UnseenMode {
     /** How far beyond the data's ends it sits, in time. */
     private static final double REACH = Math.pow(10, 1.5);
 
+    /** The same for a mode that stands in for an equilibrium modulus. */
+    private static final double REACH_OF_A_SOLID = 1e5;
+
     /** Strength is sought to this factor. */
     private static final double FINENESS = 1.1;
 
@@ -36,6 +39,11 @@ final class UnseenMode {
     /** The material with the strongest unseen slow mode. */
     RelaxationModes slow() {
         return with(REACH / readings.lowestFrequency());
+    }
+
+    /** The material with the strongest unseen mode so slow that only an equilibrium modulus would be slower. */
+    RelaxationModes nearlySolid() {
+        return with(REACH_OF_A_SOLID / readings.lowestFrequency());
     }
 
     /** The material with the strongest unseen fast mode. */

@@ -1,15 +1,19 @@
 package nightlag.stages.spectrum;
 
 import java.util.Arrays;
+import java.util.Comparator;
 import java.util.List;
+import java.util.function.ToDoubleFunction;
+import java.util.stream.IntStream;
 import nightlag.stages.moduli.Moduli;
 import nightlag.stages.moduli.ModuliCovariance;
+import nightlag.stages.numeric.Complex;
 
 /**
  * Readings brought to residuals of unit variance: two rows a reading, the difference of G' and G'' times the inverse
  * Cholesky factor of their covariance.
  *
- * <p>Where any reading comes without a covariance, all count by their relative deviation and what the scatter is has to
+ * <p>Where any reading comes without a covariance, all count by an {@link ErrorModel} and how large the scatter is has to
  * come from the fit. No modulus is taken for truer than a hundred-thousandth of itself, so that what its last digits hold
  * is not chased with ever more modes.
  */
@@ -17,9 +21,14 @@ final class WeightedReadings {
     /** Smallest standard uncertainty as a share of the modulus itself, and of |G*|. */
     private static final double FLOOR = 1e-5;
 
+    /** What the relative variance is not taken below where it has to come from the fit. */
+    static final double LEAST_UNKNOWN_VARIANCE = FLOOR * FLOOR;
+
     private static final double FLOOR_OF_MAGNITUDE = 1e-8;
-    /** A modulus without u that is less than this share of |G*| counts as if it were that share. */
-    private static final double SMALLEST_SHARE = 1e-3;
+    /** What arithmetic leaves of equality. */
+    private static final double SAME = 1e-12;
+
+    private static final int TELLING_REPEATS = 3;
 
     private final double[] angularFrequencies;
     private final double[] first;
@@ -28,19 +37,17 @@ final class WeightedReadings {
     private final double[] target;
     private final boolean scatterKnown;
     private final double largest;
+    private final boolean repeating;
 
-    WeightedReadings(List<ModulusReading> readings) {
+    private WeightedReadings(List<ModulusReading> readings, List<ModuliCovariance> covariances, boolean scatterKnown) {
         int count = readings.size();
+        this.scatterKnown = scatterKnown;
         angularFrequencies = new double[count];
         first = new double[count];
         mixed = new double[count];
         second = new double[count];
         target = new double[2 * count];
-        scatterKnown = readings.stream()
-                .allMatch(reading -> reading.moduli()
-                        .covariance()
-                        .filter(WeightedReadings::isSound)
-                        .isPresent());
+        repeating = repeats(readings) >= TELLING_REPEATS;
         largest = readings.stream()
                 .mapToDouble(reading -> reading.moduli().magnitudePa())
                 .max()
@@ -48,7 +55,7 @@ final class WeightedReadings {
         for (int i = 0; i < count; i++) {
             Moduli moduli = readings.get(i).moduli();
             angularFrequencies[i] = readings.get(i).angularFrequency();
-            ModuliCovariance covariance = scatterKnown ? floored(moduli) : relative(moduli);
+            ModuliCovariance covariance = covariances.get(i);
             double storageU = covariance.storageU();
             double tied = covariance.covariance() / storageU;
             double freeVariance = covariance.lossVariance() - tied * tied;
@@ -67,7 +74,35 @@ final class WeightedReadings {
         second = other.second;
         scatterKnown = other.scatterKnown;
         largest = other.largest;
+        repeating = other.repeating;
         this.target = target;
+    }
+
+    /** Whether every reading has a covariance one can weigh by. */
+    static boolean haveCovariances(List<ModulusReading> readings) {
+        return readings.stream()
+                .allMatch(reading -> reading.moduli()
+                        .covariance()
+                        .filter(WeightedReadings::isSound)
+                        .isPresent());
+    }
+
+    /** Readings weighted by their own covariances, which they all have. */
+    static WeightedReadings byCovariances(List<ModulusReading> readings) {
+        return new WeightedReadings(
+                readings,
+                readings.stream().map(reading -> floored(reading.moduli())).toList(),
+                true);
+    }
+
+    /**
+     * Readings weighted by a model of their errors.
+     *
+     * @param moduli about where the moduli are, one a reading
+     */
+    static WeightedReadings byModel(List<ModulusReading> readings, ErrorModel model, List<Complex> moduli) {
+        return new WeightedReadings(
+                readings, moduli.stream().map(model::covariance).toList(), false);
     }
 
     /** The readings without a contribution, given as its rows at unit strength. */
@@ -94,14 +129,6 @@ final class WeightedReadings {
                 given.covariance());
     }
 
-    private static ModuliCovariance relative(Moduli moduli) {
-        double least = SMALLEST_SHARE * moduli.magnitudePa();
-        return new ModuliCovariance(
-                square(Math.max(Math.abs(moduli.storagePa()), least)),
-                square(Math.max(Math.abs(moduli.lossPa()), least)),
-                0);
-    }
-
     private static double square(double value) {
         return value * value;
     }
@@ -111,9 +138,39 @@ final class WeightedReadings {
         return scatterKnown;
     }
 
+    /**
+     * Whether values of |G*|, G' or G'' come back to the last digit at other frequencies: then they were rounded, and where
+     * they hardly change they all err alike.
+     */
+    boolean repeating() {
+        return repeating;
+    }
+
+    private static int repeats(List<ModulusReading> readings) {
+        return Math.max(
+                repeats(readings, Moduli::magnitudePa),
+                Math.max(repeats(readings, Moduli::storagePa), repeats(readings, Moduli::lossPa)));
+    }
+
+    /** How many of the readings have a neighbour in frequency of the same value. */
+    private static int repeats(List<ModulusReading> readings, ToDoubleFunction<Moduli> part) {
+        List<ModulusReading> rising = readings.stream()
+                .sorted(Comparator.comparingDouble(ModulusReading::angularFrequency))
+                .toList();
+        return (int) IntStream.range(1, rising.size())
+                .filter(i ->
+                        rising.get(i).angularFrequency() > rising.get(i - 1).angularFrequency())
+                .filter(i -> {
+                    double value = part.applyAsDouble(rising.get(i).moduli());
+                    double before = part.applyAsDouble(rising.get(i - 1).moduli());
+                    return Math.abs(value - before) <= SAME * Math.abs(value);
+                })
+                .count();
+    }
+
     /** The smallest variance of the residuals worth looking at. */
     double leastVariance() {
-        return scatterKnown ? 1 : FLOOR * FLOOR;
+        return scatterKnown ? 1 : LEAST_UNKNOWN_VARIANCE;
     }
 
     int rows() {
