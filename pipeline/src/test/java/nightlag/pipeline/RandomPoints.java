@@ -11,6 +11,7 @@ import java.util.stream.IntStream;
 import nightlag.stages.Reduction;
 import nightlag.stages.fault.Reason;
 import nightlag.stages.geometry.DeformationMode;
+import nightlag.stages.geometry.GeometryKind;
 import nightlag.stages.moduli.Flag;
 import nightlag.stages.moduli.Harmonic;
 import nightlag.stages.moduli.LoopPair;
@@ -62,7 +63,9 @@ public final class RandomPoints {
                 maybe(random.nextDouble(1, 4000)),
                 List.of(new Reason(
                         "FEW_CYCLES", "1.2 cycles, at least 3 are wanted; \"quoted\", ümläuts, \u2028 and \u0007")),
-                loop(quality == Quality.SOUND ? 0 : random.nextInt(257)));
+                loop(quality == Quality.SOUND ? 0 : random.nextInt(257)),
+                random.nextBoolean() ? Optional.of(anyOf(GeometryKind.values())) : Optional.empty(),
+                random.nextBoolean() ? Optional.of(anyOf(Flag.values())) : Optional.empty());
     }
 
     /** Any finite double, the ends of the range and zeros of both signs among them. */

@@ -2,6 +2,7 @@ package nightlag.stages;
 
 import java.util.Comparator;
 import java.util.List;
+import java.util.stream.Stream;
 import nightlag.stages.moduli.Marker;
 import nightlag.stages.moduli.ModulusPoint;
 import nightlag.stages.moduli.Quality;
@@ -30,10 +31,13 @@ public final class Conclude {
      * drawn from them. Unusable points are published with the others and kept out of all else.
      */
     public static LotResult conclude(List<Reduction> reductions, ConclusionPlan plan) {
-        List<ModulusPoint> points = reductions.stream()
-                .flatMap(reduction -> reduction.points().stream())
-                .sorted(PointOrder.BY_KEY)
-                .toList();
+        LotPoints lot = LotPoints.of(
+                reductions.stream()
+                        .flatMap(reduction -> reduction.points().stream())
+                        .sorted(PointOrder.BY_KEY)
+                        .toList(),
+                plan.sweeps());
+        List<ModulusPoint> points = lot.points();
         List<ModulusPoint> usable = points.stream()
                 .filter(point -> point.quality() != Quality.UNUSABLE)
                 .toList();
@@ -44,6 +48,6 @@ public final class Conclude {
                 points,
                 spectrum.markers().stream().sorted(MARKER_ORDER).toList(),
                 spectrum.rows().stream().sorted(ROW_ORDER).toList(),
-                spectrum.notes());
+                Stream.concat(lot.notes().stream(), spectrum.notes().stream()).toList());
     }
 }

@@ -16,7 +16,11 @@ public enum ConclusionReason implements ReasonCode {
     SPECTRUM_MEASURED_BESIDE_REFERENCE(
             "the spectrum at the reference temperature {1} °C comes from points measured at {0} °C, not shifted"),
     /** Nothing. */
-    SPECTRUM_MIXED_DEFORMATION("no spectrum: the lot holds points in shear and in extension, two different moduli");
+    SPECTRUM_MIXED_DEFORMATION("no spectrum: the lot holds points in shear and in extension, two different moduli"),
+    /** Specimen, sweep, how many strains, how many are needed. */
+    RIM_TOO_FEW_STRAINS(
+            "specimen {0}, sweep {1}: {2} strains between parallel plates, {3} are needed to correct to the rim; its moduli"
+                    + " stand as for a material that is linear");
 
     private final String template;
 

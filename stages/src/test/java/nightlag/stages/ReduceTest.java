@@ -3,6 +3,9 @@ package nightlag.stages;
 import static org.assertj.core.api.Assertions.assertThat;
 import static org.assertj.core.api.Assertions.within;
 
+import java.util.ArrayList;
+import java.util.Comparator;
+import java.util.List;
 import java.util.Map;
 import java.util.Optional;
 import java.util.OptionalDouble;
@@ -15,11 +18,13 @@ import nightlag.stages.geometry.GeometryKind;
 import nightlag.stages.geometry.GeometrySpec;
 import nightlag.stages.geometry.LoadSignal;
 import nightlag.stages.geometry.MeasuringWall;
+import nightlag.stages.moduli.Flag;
 import nightlag.stages.moduli.ModulusPoint;
 import nightlag.stages.moduli.PointKey;
 import nightlag.stages.moduli.Quality;
 import nightlag.stages.moduli.ScreeningPlan;
 import nightlag.stages.numeric.Complex;
+import nightlag.stages.sweep.SweepPlan;
 import nightlag.stages.waveform.ExtractionPlan;
 import nightlag.stages.waveform.Recording;
 import nightlag.stages.waveform.Waveform;
@@ -69,6 +74,8 @@ class ReduceTest {
         assertThat(point.quality()).isEqualTo(Quality.SOUND);
         assertThat(point.flags()).isEmpty();
         assertThat(point.loop()).isEmpty();
+        assertThat(point.torqueGeometry()).hasValue(GeometryKind.PARALLEL_PLATE);
+        assertThat(point.unusableOnlyBy()).isEmpty();
         assertThat(point.moduli().orElseThrow().complex().minus(modulus).abs() / modulus.abs())
                 .isLessThan(1e-9);
         assertThat(point.frequencyHz().orElseThrow()).isCloseTo(1.7, within(1.7e-9));
@@ -76,6 +83,71 @@ class ReduceTest {
         // the mean of the samples, 387 of them, the last at (387 − 1)/(1.7·90) s
         assertThat(point.temperatureK().orElseThrow()).isCloseTo(453.15 + 0.01 * 386 / 153 / 2, within(1e-9));
         assertThat(point.taggedTemperatureK()).hasValue(453.15);
+    }
+
+    /** From records to published points: the torque of a cubic material between plates, built ring by ring (exact). */
+    @Test
+    void anAmplitudeSweepBetweenPlatesEndsAtTheRim() {
+        double radius = 12.5e-3;
+        double gap = 1e-3;
+        double stiffening = 0.5;
+        double toStress = 2 / (Math.PI * radius * radius * radius);
+        GeometrySpec plates = new GeometrySpec(
+                GeometryKind.PARALLEL_PLATE,
+                Map.of(Dimension.DIAMETER, 2 * radius, Dimension.GAP, gap),
+                1,
+                1,
+                OptionalDouble.empty(),
+                Optional.empty());
+        List<Reduction> reductions = new ArrayList<>();
+        List<Double> strains = new ArrayList<>();
+        for (double strain = 0.05; strain < 4; strain *= 1.25) {
+            // σ = G(γ + k γ³): the plates show 2/3 of what is cubic; sin³ = ¾ sin − ¼ sin 3
+            double cubic = 1000 * stiffening * Math.pow(strain, 3) * 2 / 3;
+            Complex first = new Complex(1000 * strain + 0.75 * cubic, 0).times(1 / toStress);
+            Complex third = new Complex(-cubic / 4, 0).times(1 / toStress);
+            // a sine: Re(−i A e^{iωt})
+            Complex sine = new Complex(0, -1);
+            Waveform waveform = Recording.of(1, 5, 64)
+                    .deformation(sine.times(strain * gap / radius))
+                    .load(sine.times(first), Complex.ZERO, sine.times(third))
+                    .noise(1e-7 * strain, 1e-5 * strain / toStress)
+                    .build();
+            reductions.add(Reduce.reduce(
+                    new WaveformRecord(tags(Map.of()), DeformationSignal.ANGLE, LoadSignal.TORQUE, waveform),
+                    plan(Optional.of(plates), Corrections.none())));
+            strains.add(strain);
+        }
+        ModulusPoint strongest = only(reductions.get(reductions.size() - 1));
+        assertThat(strongest.quality()).isEqualTo(Quality.UNUSABLE);
+        assertThat(strongest.unusableOnlyBy()).hasValue(Flag.NONLINEAR);
+        List<ModulusPoint> published = Conclude.conclude(
+                        reductions,
+                        new ConclusionPlan(
+                                SweepPlan.withDefaults(),
+                                Optional.empty(),
+                                Optional.empty(),
+                                List.of(),
+                                List.of(),
+                                Map.of()))
+                .points()
+                .stream()
+                .sorted(Comparator.comparingDouble(
+                        point -> point.strainAmplitude().orElseThrow()))
+                .toList();
+        assertThat(published).hasSameSizeAs(strains);
+        for (int i = 0; i < strains.size(); i++) {
+            double square = stiffening * strains.get(i) * strains.get(i);
+            ModulusPoint point = published.get(i);
+            assertThat(point.quality()).isNotEqualTo(Quality.UNUSABLE);
+            double truth = 1000 * (1 + 0.75 * square);
+            assertThat(point.moduli().orElseThrow().storagePa()).isCloseTo(truth, within(2e-2 * truth));
+            if (i > 3 && i < strains.size() - 3) {
+                assertThat(point.moduli().orElseThrow().storagePa()).isCloseTo(truth, within(5e-4 * truth));
+                assertThat(point.harmonics().get(2).relativeIntensity())
+                        .isCloseTo(square / 4 / (1 + 0.75 * square), within(2e-3 * square));
+            }
+        }
     }
 
     @Test

@@ -95,6 +95,8 @@ public record TestPoints(
                 OptionalDouble.empty(),
                 OptionalDouble.empty(),
                 List.of(),
-                List.of());
+                List.of(),
+                Optional.empty(),
+                Optional.empty());
     }
 }

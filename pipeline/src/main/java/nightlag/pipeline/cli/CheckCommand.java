@@ -1,8 +1,6 @@
 package nightlag.pipeline.cli;
 
 import java.io.PrintWriter;
-import java.math.BigDecimal;
-import java.math.MathContext;
 import java.nio.file.Path;
 import java.time.Clock;
 import java.time.ZoneId;
@@ -114,12 +112,6 @@ final class CheckCommand implements Callable<Integer> {
         }
     }
 
-    /** Seven digits are enough to tell whether a column was read right. */
-    private static String toSevenDigits(double value) {
-        BigDecimal rounded = new BigDecimal(value).round(new MathContext(7)).stripTrailingZeros();
-        return rounded.toString().replace("E", "e");
-    }
-
     private static void print(PrintWriter out, FileDescription file) {
         out.println("  " + file.file() + ": " + file.charset() + (file.byteOrderMark() ? " by its byte-order mark" : "")
                 + ", layout " + file.layout().word()
@@ -130,7 +122,7 @@ final class CheckCommand implements Callable<Integer> {
                     + channel.header().map(header -> " '" + header + "'").orElse("") + " in " + channel.unit() + " ("
                     + channel.unitFrom() + "): "
                     + channel.firstValues().stream()
-                            .map(value -> value.map(CheckCommand::toSevenDigits).orElse("empty"))
+                            .map(value -> value.map(Figures::sevenDigits).orElse("empty"))
                             .collect(Collectors.joining(", "))
                     + " " + channel.si());
         }

@@ -19,7 +19,7 @@ import picocli.CommandLine.Spec;
         description = "Reduces a polymer lab's raw oscillation records to moduli, spectra and tidy tables.",
         mixinStandardHelpOptions = true,
         versionProvider = Nightlag.Version.class,
-        subcommands = {RunCommand.class, CheckCommand.class, HelpCommand.class})
+        subcommands = {RunCommand.class, CheckCommand.class, TraceCommand.class, HelpCommand.class})
 public final class Nightlag implements Runnable {
     /** All went well. */
     static final int ALL_WELL = 0;
@@ -61,7 +61,7 @@ public final class Nightlag implements Runnable {
 
     @Override
     public void run() {
-        throw new CommandLine.ParameterException(spec.commandLine(), "say what to do: run or check");
+        throw new CommandLine.ParameterException(spec.commandLine(), "say what to do: run, check or trace");
     }
 
     /** The version from the build. */

@@ -5,10 +5,8 @@ import java.nio.file.Files;
 import java.nio.file.InvalidPathException;
 import java.nio.file.attribute.BasicFileAttributes;
 import java.util.ArrayList;
-import java.util.HashMap;
 import java.util.LinkedHashSet;
 import java.util.List;
-import java.util.Map;
 import java.util.Optional;
 import java.util.Set;
 import java.util.TreeSet;
@@ -16,10 +14,7 @@ import java.util.stream.Collectors;
 import nightlag.pipeline.archive.ArchivedFile;
 import nightlag.pipeline.archive.LotName;
 import nightlag.pipeline.config.Configuration;
-import nightlag.pipeline.config.Grade;
 import nightlag.pipeline.config.Instrument;
-import nightlag.pipeline.config.Plans;
-import nightlag.pipeline.config.Problem;
 import nightlag.pipeline.decode.DecodeCounts;
 import nightlag.pipeline.decode.DecodeException;
 import nightlag.pipeline.decode.RawFileDecoder;
@@ -30,7 +25,6 @@ import nightlag.pipeline.intake.RawFile;
 import nightlag.stages.MeasuredRecord;
 import nightlag.stages.Reduce;
 import nightlag.stages.Reduction;
-import nightlag.stages.ReductionPlan;
 import nightlag.stages.moduli.PointKey;
 import org.apache.logging.log4j.LogManager;
 import org.apache.logging.log4j.Logger;
@@ -71,7 +65,7 @@ final class FileLooker {
                 return new Look.Waiting("", "it changed while it was read");
             }
             return new Look.Reduced(sha256, counts, records.reductions, state(candidate, records.grades()));
-        } catch (GradeStopped stopped) {
+        } catch (GradePlans.GradeStopped stopped) {
             String reason = file.tableName() + ": " + stopped.getMessage();
             return setAside(candidate, sha256, reason, records, true);
         } catch (DecodeException e) {
@@ -141,57 +135,24 @@ final class FileLooker {
 
     /** Reduces the records of one file as they come. */
     private final class Records {
-        private final Instrument instrument;
-        private final Map<String, ReductionPlan> plans = new HashMap<>();
+        private final GradePlans plans;
         private final List<Reduction> reductions = new ArrayList<>();
         private final Set<LotName> lots = new LinkedHashSet<>();
         private final Set<String> specimens = new LinkedHashSet<>();
 
         Records(Instrument instrument) {
-            this.instrument = instrument;
+            this.plans = new GradePlans(configuration, instrument);
         }
 
         void add(MeasuredRecord record) {
             PointKey key = record.tags().key();
             lots.add(new LotName(key.grade(), key.lot()));
             specimens.add(key.specimen());
-            reductions.add(Reduce.reduce(record, plans.computeIfAbsent(key.grade(), this::plan)));
-        }
-
-        private ReductionPlan plan(String gradeName) {
-            stoppedBecause(gradeName, instrument, configuration).ifPresent(reason -> {
-                throw new GradeStopped(reason);
-            });
-            return Plans.reduction(instrument, configuration.grades().get(gradeName));
+            reductions.add(Reduce.reduce(record, plans.of(key.grade())));
         }
 
         Set<String> grades() {
             return lots.stream().map(LotName::grade).collect(Collectors.toCollection(TreeSet::new));
-        }
-    }
-
-    /** Why no file of this instrument that names this grade can be reduced; empty if it can. */
-    static Optional<String> stoppedBecause(String grade, Instrument instrument, Configuration configuration) {
-        List<Problem> problems = configuration.wrongGrades().get(grade);
-        if (problems != null) {
-            return Optional.of("the grade file of '" + grade + "' is wrong: "
-                    + problems.stream().map(Problem::sentence).collect(Collectors.joining(" | ")));
-        }
-        Grade right = configuration.grades().get(grade);
-        if (right == null) {
-            String known = configuration.grades().keySet().stream().sorted().collect(Collectors.joining("', '"));
-            return Optional.of("no grade file says grade = '" + grade
-                    + "' (capitals and spaces count); there are files for '" + known + "'");
-        }
-        return Plans.mismatch(instrument, right).map(Problem::sentence);
-    }
-
-    /** A record names a grade that has no right grade file. */
-    private static final class GradeStopped extends RuntimeException {
-        private static final long serialVersionUID = 1L;
-
-        GradeStopped(String message) {
-            super(message);
         }
     }
 }

@@ -109,7 +109,7 @@ public record Preview(
             String stopped = description.tags().stream()
                     .filter(tag -> tag.name() == TagName.GRADE)
                     .map(tag ->
-                            FileLooker.stoppedBecause(tag.text(), file.intake().instrument(), configuration))
+                            GradePlans.stoppedBecause(tag.text(), file.intake().instrument(), configuration))
                     .flatMap(Optional::stream)
                     .findFirst()
                     .map(reason -> file.tableName() + ": " + reason)

@@ -76,6 +76,8 @@ class ReductionJsonTest {
                 OptionalDouble.empty(),
                 OptionalDouble.empty(),
                 List.of(),
-                List.of());
+                List.of(),
+                Optional.empty(),
+                Optional.empty());
     }
 }

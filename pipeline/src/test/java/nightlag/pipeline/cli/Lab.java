@@ -131,6 +131,14 @@ final class Lab {
         }
     }
 
+    String read(String name) {
+        try {
+            return Files.readString(path(name));
+        } catch (IOException e) {
+            throw new UncheckedIOException(e);
+        }
+    }
+
     void delete(String name) {
         try {
             Files.delete(path(name));

@@ -67,7 +67,9 @@ class LotTablesTest {
                 OptionalDouble.of(60.5),
                 OptionalDouble.of(500),
                 List.of(),
-                List.of());
+                List.of(),
+                Optional.empty(),
+                Optional.empty());
 
         write(new LotResult(List.of(point), List.of(), List.of(), List.of()));
 
@@ -86,9 +88,11 @@ class LotTablesTest {
                         """.replace("\n", "\r\n"));
         assertThat(table("harmonics")).isEqualTo("""
                         grade,lot,specimen,sweep,point,order,stress_in_phase_Pa,stress_out_of_phase_Pa,\
-                        relative_intensity,relative_intensity_u
-                        Heron 3,L-17,1,1,012,1,30,40,1,
-                        Heron 3,L-17,1,1,012,3,-0.3,0.4,0.01,0.00001
+                        relative_intensity,relative_intensity_u,elastic_chebyshev_Pa,viscous_chebyshev_Pa_s,\
+                        minimum_strain_modulus_Pa,largest_strain_modulus_Pa,\
+                        minimum_rate_viscosity_Pa_s,largest_rate_viscosity_Pa_s
+                        Heron 3,L-17,1,1,012,1,30,40,1,,3000,4000,2910,3030,3880,4040
+                        Heron 3,L-17,1,1,012,3,-0.3,0.4,0.01,0.00001,30,40,,,,
                         """.replace("\n", "\r\n"));
     }
 
@@ -307,7 +311,9 @@ class LotTablesTest {
                 OptionalDouble.empty(),
                 OptionalDouble.empty(),
                 List.of(),
-                List.of());
+                List.of(),
+                Optional.empty(),
+                Optional.empty());
     }
 
     private static LotResult randomResult(long seed) {

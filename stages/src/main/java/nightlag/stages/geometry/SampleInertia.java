@@ -60,6 +60,11 @@ public final class SampleInertia {
         return new SampleInertia(wall, sizes.of(Dimension.DENSITY) * squaredGap);
     }
 
+    /** Density times the square of the gap, kg/m; for a cone of its mean over the torque. */
+    public double massTimesSquaredGap() {
+        return inertialStressPerSquaredFrequency;
+    }
+
     /**
      * The specimen's modulus from the apparent one.
      *

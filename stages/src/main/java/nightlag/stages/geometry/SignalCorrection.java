@@ -26,7 +26,10 @@ import nightlag.stages.numeric.Complex;
  * again. Where no geometry is known there is no way back, and such a correction is refused.
  */
 public final class SignalCorrection {
+    private static final String MEASURED_LOAD = "the measured load";
+
     private final Geometry geometry;
+    private final LoadSignal load;
     private final double deformationDelayS;
     private final double loadDelayS;
     private final double inertia;
@@ -38,11 +41,13 @@ public final class SignalCorrection {
 
     private SignalCorrection(
             Geometry geometry,
+            LoadSignal load,
             Corrections corrections,
             double rawDeformation,
             double rawLoad,
             Optional<SampleInertia> sampleInertia) {
         this.geometry = geometry;
+        this.load = load;
         this.deformationDelayS = corrections.deformationDelayS();
         this.loadDelayS = corrections.loadDelayS();
         Movement movement = geometry.kind().movement();
@@ -85,6 +90,7 @@ public final class SignalCorrection {
                     new GivenStressAndStrain(spec.deformation()
                             .filter(mode -> spec.kind() == GeometryKind.NONE)
                             .orElse(spec.kind().usualMode())),
+                    load,
                     corrections,
                     1,
                     1,
@@ -93,6 +99,7 @@ public final class SignalCorrection {
         Geometry geometry = Geometry.of(spec);
         return new SignalCorrection(
                 geometry,
+                load,
                 corrections,
                 deformation == DeformationSignal.STRAIN ? 1 / geometry.strainPerDeformation() : 1,
                 load == LoadSignal.STRESS ? 1 / geometry.stressPerLoad() : 1,
@@ -102,6 +109,11 @@ public final class SignalCorrection {
     /** Which modulus the record gives. */
     public DeformationMode deformationMode() {
         return geometry.deformationMode();
+    }
+
+    /** The geometry whose factor makes a torque the stress; empty where the record holds another load. */
+    public Optional<GeometryKind> torqueGeometry() {
+        return load == LoadSignal.TORQUE ? Optional.of(geometry.kind()) : Optional.empty();
     }
 
     /** Sample inertia, to be taken out of the modulus; empty where no density is given or the kind has no gap. */
@@ -143,6 +155,65 @@ public final class SignalCorrection {
                 own.times(geometry.stressPerLoad()),
                 inertial == 0 ? 0 : inertial / own.abs(),
                 compliance == 0 ? 0 : given.abs() / movement.abs());
+    }
+
+    /** The geometry the amplitudes go through. */
+    public Geometry geometry() {
+        return geometry;
+    }
+
+    /**
+     * What each correction that was asked for comes to, in the order in which they are made. The signals as recorded follow
+     * from the result, for every correction can be undone.
+     *
+     * @param angularFrequency ω, rad/s
+     * @param strainAmplitude corrected strain amplitude
+     * @param modulus corrected modulus, Pa
+     */
+    public List<CorrectionSize> sizes(double angularFrequency, double strainAmplitude, Complex modulus) {
+        Complex apparent = sampleInertia
+                .map(inertial -> inertial.apparent(modulus, angularFrequency))
+                .orElse(modulus);
+        Complex own = apparent.times(strainAmplitude / geometry.stressPerLoad());
+        Complex given = own.times(compliance);
+        Complex movement = given.plus(new Complex(strainAmplitude / geometry.strainPerDeformation(), 0));
+        double measured = own.minus(drag(angularFrequency).times(movement)).abs();
+        boolean turns = geometry.kind().movement() == Movement.TURN;
+        double rate = angularFrequency * movement.abs();
+        List<CorrectionSize> sizes = new ArrayList<>();
+        sizes.add(delay("delay of the deformation", deformationDelayS, angularFrequency, "deformation"));
+        sizes.add(delay("delay of the load", loadDelayS, angularFrequency, "load"));
+        sizes.add(new CorrectionSize(
+                turns ? "inertia" : "moving mass",
+                inertia,
+                turns ? "kg·m²" : "kg",
+                inertia * angularFrequency * rate / measured,
+                MEASURED_LOAD));
+        sizes.add(new CorrectionSize(
+                turns ? "friction" : "damping",
+                friction,
+                turns ? "N·m·s" : "N·s/m",
+                friction * rate / measured,
+                MEASURED_LOAD));
+        sizes.add(new CorrectionSize(
+                "compliance",
+                compliance,
+                turns ? "rad/(N·m)" : "m/N",
+                given.abs() / movement.abs(),
+                "the measured movement"));
+        sizes.removeIf(size -> size.value() == 0);
+        sampleInertia.ifPresent(inertial -> sizes.add(new CorrectionSize(
+                "inertia of the specimen",
+                inertial.massTimesSquaredGap(),
+                "kg/m",
+                modulus.minus(apparent).abs() / apparent.abs(),
+                "the modulus without it")));
+        return sizes;
+    }
+
+    private static CorrectionSize delay(String name, double delayS, double angularFrequency, String channel) {
+        return new CorrectionSize(
+                name, delayS, "s", 2 * Math.abs(Math.sin(angularFrequency * delayS / 2)), "the " + channel);
     }
 
     /** Iω² − ibω: what is to be added to the load per unit of movement. */

@@ -17,7 +17,8 @@ public enum Flag {
     COMPLIANCE_HEAVY,
     OUT_OF_RANGE,
     TEMPERATURE_WANDER,
-    FREQUENCY_MISMATCH;
+    FREQUENCY_MISMATCH,
+    SIGN_OR_DELAY;
 
     /** The word in tables. */
     public String word() {

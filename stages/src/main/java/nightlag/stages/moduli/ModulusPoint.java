@@ -3,8 +3,10 @@ package nightlag.stages.moduli;
 import java.util.List;
 import java.util.Optional;
 import java.util.OptionalDouble;
+import java.util.stream.Stream;
 import nightlag.stages.fault.Reason;
 import nightlag.stages.geometry.DeformationMode;
+import nightlag.stages.geometry.GeometryKind;
 
 /**
  * One point as reduced. A record that can be read but gives no modulus is a point without {@code moduli} and of quality
@@ -30,6 +32,8 @@ import nightlag.stages.geometry.DeformationMode;
  * @param degreesOfFreedom effective degrees of freedom behind the uncertainties
  * @param reasons the figure and the threshold behind each flag, and whatever else is worth knowing
  * @param loop at most 256 pairs of strain and stress from the last cycles, where the point is not sound
+ * @param torqueGeometry the geometry by which a torque was made the stress; empty where the record held another load
+ * @param unusableOnlyBy the flag that alone makes the point unusable; empty where none does, or more than one
  */
 public record ModulusPoint(
         PointKey key,
@@ -51,12 +55,84 @@ public record ModulusPoint(
         OptionalDouble stressSnrDb,
         OptionalDouble degreesOfFreedom,
         List<Reason> reasons,
-        List<LoopPair> loop) {
+        List<LoopPair> loop,
+        Optional<GeometryKind> torqueGeometry,
+        Optional<Flag> unusableOnlyBy) {
     /** Copies the lists. */
     public ModulusPoint {
         harmonics = List.copyOf(harmonics);
         flags = List.copyOf(flags);
         reasons = List.copyOf(reasons);
         loop = List.copyOf(loop);
+    }
+    /**
+     * The same point with the stress of the plates' rim.
+     *
+     * @param rim the modulus there
+     * @param rimStressPa the stress amplitude there, Pa
+     * @param rimHarmonics the orders of the stress there
+     * @param why what was done
+     */
+    public ModulusPoint atRim(Moduli rim, double rimStressPa, List<Harmonic> rimHarmonics, Reason why) {
+        return changed(
+                OptionalDouble.of(rimStressPa),
+                Optional.of(rim),
+                rimHarmonics,
+                quality,
+                flags,
+                and(why),
+                unusableOnlyBy);
+    }
+
+    /** The same point with one more flag; it is no better than doubtful. */
+    public ModulusPoint flagged(Flag flag, Reason why) {
+        List<Flag> more = Stream.concat(flags.stream(), Stream.of(flag))
+                .distinct()
+                .sorted()
+                .toList();
+        Quality worse = quality == Quality.SOUND ? Quality.DOUBTFUL : quality;
+        return changed(stressAmplitudePa, moduli, harmonics, worse, more, and(why), unusableOnlyBy);
+    }
+
+    /** The same point, its unusable verdict softened to doubtful. */
+    public ModulusPoint merelyDoubtful(Reason why) {
+        return changed(stressAmplitudePa, moduli, harmonics, Quality.DOUBTFUL, flags, and(why), Optional.empty());
+    }
+
+    private List<Reason> and(Reason why) {
+        return Stream.concat(reasons.stream(), Stream.of(why)).toList();
+    }
+
+    private ModulusPoint changed(
+            OptionalDouble newStressPa,
+            Optional<Moduli> newModuli,
+            List<Harmonic> newHarmonics,
+            Quality newQuality,
+            List<Flag> newFlags,
+            List<Reason> newReasons,
+            Optional<Flag> newUnusableOnlyBy) {
+        return new ModulusPoint(
+                key,
+                made,
+                deformation,
+                temperatureK,
+                taggedTemperatureK,
+                frequencyHz,
+                elapsedS,
+                strainAmplitude,
+                newStressPa,
+                newModuli,
+                newHarmonics,
+                newQuality,
+                newFlags,
+                cyclesUsed,
+                samplesUsed,
+                strainSnrDb,
+                stressSnrDb,
+                degreesOfFreedom,
+                newReasons,
+                loop,
+                torqueGeometry,
+                newUnusableOnlyBy);
     }
 }

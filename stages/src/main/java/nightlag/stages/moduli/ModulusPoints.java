@@ -94,7 +94,9 @@ public final class ModulusPoints {
                 OptionalDouble.of(fit.screening().loadSnrDb()),
                 OptionalDouble.of(fit.degreesOfFreedom()),
                 reasons,
-                screening.quality() == Quality.SOUND ? List.of() : Loop.of(waveform, fit, correction.at(0)));
+                screening.quality() == Quality.SOUND ? List.of() : Loop.of(waveform, fit, correction.at(0)),
+                correction.torqueGeometry(),
+                screening.unusableOnlyBy());
     }
 
     /**
@@ -185,7 +187,9 @@ public final class ModulusPoints {
                 OptionalDouble.empty(),
                 OptionalDouble.empty(),
                 reasons,
-                List.of());
+                List.of(),
+                Optional.empty(),
+                Optional.empty());
     }
 
     private static List<Reason> signs(Moduli moduli) {

@@ -2,10 +2,12 @@ package nightlag.stages.moduli;
 
 import java.util.ArrayList;
 import java.util.Comparator;
+import java.util.EnumSet;
 import java.util.List;
 import java.util.Locale;
 import java.util.Optional;
 import java.util.OptionalDouble;
+import java.util.Set;
 import nightlag.stages.fault.Reason;
 import nightlag.stages.waveform.ScreeningFigures;
 import nightlag.stages.waveform.ScreeningFigures.Figure;
@@ -20,6 +22,7 @@ final class Screening {
 
     private final List<Flag> flags = new ArrayList<>();
     private final List<Reason> reasons = new ArrayList<>();
+    private final Set<Flag> decisive = EnumSet.noneOf(Flag.class);
     private Quality quality = Quality.SOUND;
 
     private Screening() {}
@@ -37,6 +40,11 @@ final class Screening {
     /** What they make of the point. */
     Quality quality() {
         return quality;
+    }
+
+    /** The flag that alone makes the point unusable. */
+    Optional<Flag> unusableOnlyBy() {
+        return decisive.size() == 1 ? Optional.of(decisive.iterator().next()) : Optional.empty();
     }
 
     /**
@@ -141,6 +149,9 @@ final class Screening {
         reasons.add(reason.with(parts.toArray()));
         if (!flags.contains(reason.flag())) {
             flags.add(reason.flag());
+        }
+        if (verdict == Quality.UNUSABLE) {
+            decisive.add(reason.flag());
         }
         if (verdict.compareTo(quality) > 0) {
             quality = verdict;

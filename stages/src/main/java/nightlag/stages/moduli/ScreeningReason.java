@@ -23,7 +23,12 @@ public enum ScreeningReason implements ReasonCode {
     SCREENING_TEMPERATURE_WANDER(
             Flag.TEMPERATURE_WANDER, "the temperature moves by {0} K over the record, the limit is {1} K"),
     SCREENING_FREQUENCY_MISMATCH(
-            Flag.FREQUENCY_MISMATCH, "the frequency is off the tagged one by {0} of it, the limit is {1}");
+            Flag.FREQUENCY_MISMATCH, "the frequency is off the tagged one by {0} of it, the limit is {1}"),
+    /** Parts: {0} share of the sweep's points, {1} limit, {2} what the point becomes. Raised when a lot is concluded. */
+    SCREENING_SIGN_OR_DELAY(
+            Flag.SIGN_OR_DELAY,
+            "the loss modulus is below zero in {0} of the sweep''s points, the limit is {1}: the polarity of a channel or"
+                    + " a delay is wrong");
 
     private final Flag flag;
     private final String template;

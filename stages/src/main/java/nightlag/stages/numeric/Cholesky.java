@@ -60,6 +60,15 @@ public final class Cholesky {
         return scale.length;
     }
 
+    /** ln det M. */
+    public double logDeterminant() {
+        double sum = 0;
+        for (int i = 0; i < scale.length; i++) {
+            sum += 2 * Math.log(lower[i][i] / scale[i]);
+        }
+        return sum;
+    }
+
     /** The solution x of M x = b. */
     public double[] solve(double[] b) {
         double[] x = whiten(b);

@@ -5,7 +5,6 @@ import java.util.HashSet;
 import java.util.List;
 import java.util.Map;
 import java.util.Set;
-import java.util.stream.Collectors;
 import nightlag.stages.moduli.ModulusPoint;
 
 /** The frequency sweeps among the points of an isotherm. */
@@ -20,7 +19,7 @@ public final class FrequencySweeps {
      * apart; all points where no single sweep does so, for then each record was made as a sweep of its own.
      */
     public static List<ModulusPoint> among(List<ModulusPoint> points) {
-        Map<SweepName, List<ModulusPoint>> sweeps = points.stream().collect(Collectors.groupingBy(SweepName::of));
+        Map<SweepName, List<ModulusPoint>> sweeps = SweepName.group(points);
         Set<SweepName> varying = new HashSet<>();
         sweeps.forEach((name, members) -> {
             if (distinctFrequencies(members) > 1) {
@@ -54,11 +53,5 @@ public final class FrequencySweeps {
             }
         }
         return count;
-    }
-
-    private record SweepName(String specimen, String sweep) {
-        static SweepName of(ModulusPoint point) {
-            return new SweepName(point.key().specimen(), point.key().sweep());
-        }
     }
 }
