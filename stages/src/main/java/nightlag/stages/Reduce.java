@@ -28,7 +28,10 @@ public final class Reduce {
      */
     public static Reduction reduce(MeasuredRecord record, ReductionPlan plan) {
         if (record instanceof WaveformRecord waveforms) {
-            return new Reduction(List.of(fromWaveform(waveforms, plan)));
+            return new Reduction(
+                    waveforms.kind() instanceof RecordKind.OneFrequency
+                            ? List.of(fromWaveform(waveforms, plan))
+                            : SeveralFrequencies.points(waveforms, plan));
         }
         return new Reduction(List.of(fromModuli((GivenModuli) record, plan)));
     }
@@ -75,11 +78,13 @@ public final class Reduce {
                 record.strainAmplitude());
     }
 
-    private static Origin origin(RecordTags tags) {
+    /** What a point is besides its measurement. */
+    static Origin origin(RecordTags tags) {
         return new Origin(tags.key(), tags.made(), tags.temperatureK(), tags.elapsedS());
     }
 
-    private static DeformationMode mode(ReductionPlan plan) {
+    /** Which modulus a plan's records give. */
+    static DeformationMode mode(ReductionPlan plan) {
         GeometrySpec spec = plan.geometry().orElseGet(GeometrySpec::none);
         return spec.deformation()
                 .filter(mode -> spec.kind() == GeometryKind.NONE)

@@ -71,8 +71,9 @@ final class InstrumentKeys {
             "`single`: a file is one record. `column`: a file holds many records, told apart by the tag `point`; the "
                     + "rows of one stand together. `rolling`: one long record at one frequency, cut into windows; needs "
                     + "the tag `frequency`. `moduli`: no waveforms, each row is a point already reduced. `multisine`: a "
-                    + "record holds several frequencies. `chirp`: an exponential sweep of frequency. `creep`: steps of "
-                    + "stress and their recovery. Files of the layouts `multisine`, `chirp` and `creep` are "
+                    + "file is one record of several frequencies at once, a point each. `chirp`: a file is one "
+                    + "exponential sweep of frequency. `creep`: steps of "
+                    + "stress and their recovery. Files of the layout `creep` are "
                     + "not reduced yet.");
     static final Key WINDOW = Key.withDefault(
             "window",
@@ -89,9 +90,17 @@ final class InstrumentKeys {
     static final Key FREQUENCIES = Key.optional(
             "frequencies",
             new Shape("list of frequencies, such as [\"0.5 Hz\", \"1 Hz\"]"),
-            "`multisine`: the frequencies; without them they are found.");
-    static final Section RECORDS =
-            new Section("[records]", "How records stand in a file.", List.of(LAYOUT, WINDOW, ADVANCE, FREQUENCIES));
+            "`multisine`: the frequencies; without them they are found. They are exact with `frequency_from = \"tag\"`, else "
+                    + "right but for one factor, the recorder's clock against the drive's.");
+    static final Key POINTS_PER_DECADE = Key.withDefault(
+            "points_per_decade",
+            new Whole(1, 100),
+            "10",
+            "`chirp`: points for each decade of frequency, evenly spaced in its logarithm.");
+    static final Section RECORDS = new Section(
+            "[records]",
+            "How records stand in a file.",
+            List.of(LAYOUT, WINDOW, ADVANCE, FREQUENCIES, POINTS_PER_DECADE));
 
     static final Section CHANNELS = new Section(
             "[channels]",

@@ -106,16 +106,28 @@ final class InstrumentReader {
         OptionalInt window = section.whole(InstrumentKeys.WINDOW);
         OptionalInt advance = section.whole(InstrumentKeys.ADVANCE);
         Optional<List<Double>> frequencies = frequencies(section);
+        OptionalInt pointsPerDecade = section.whole(InstrumentKeys.POINTS_PER_DECADE);
         if (section.has(InstrumentKeys.FREQUENCIES) && layout.isPresent() && layout.get() != Layout.MULTISINE) {
             section.wrong(
                     InstrumentKeys.FREQUENCIES,
                     "layout " + layout.get().word() + " has one frequency a record",
                     "it with layout multisine");
         }
-        if (layout.isEmpty() || window.isEmpty() || advance.isEmpty() || frequencies.isEmpty()) {
+        if (section.has(InstrumentKeys.POINTS_PER_DECADE) && layout.isPresent() && layout.get() != Layout.CHIRP) {
+            section.wrong(
+                    InstrumentKeys.POINTS_PER_DECADE,
+                    "layout " + layout.get().word() + " has no sweep inside a record",
+                    "it with layout chirp");
+        }
+        if (layout.isEmpty()
+                || window.isEmpty()
+                || advance.isEmpty()
+                || frequencies.isEmpty()
+                || pointsPerDecade.isEmpty()) {
             return Optional.empty();
         }
-        return Optional.of(new RecordFormat(layout.get(), window.getAsInt(), advance.getAsInt(), frequencies.get()));
+        return Optional.of(new RecordFormat(
+                layout.get(), window.getAsInt(), advance.getAsInt(), frequencies.get(), pointsPerDecade.getAsInt()));
     }
 
     private static Optional<List<Double>> frequencies(SectionReader section) {

@@ -14,7 +14,12 @@ public enum Layout {
 
     /** Whether this version reduces it. */
     public boolean supported() {
-        return this == SINGLE || this == COLUMN || this == ROLLING || this == MODULI;
+        return this != CREEP;
+    }
+
+    /** Whether a file is one record, its point named after the file where no tag names it. */
+    public boolean oneRecordAFile() {
+        return this == SINGLE || this == MULTISINE || this == CHIRP;
     }
 
     /** The word in configuration. */

@@ -88,7 +88,7 @@ final class Describing {
 
     private static void addDefaults(Map<TagName, TagValue> values, FileFacts facts, Layout layout, int line)
             throws DecodeException {
-        boolean byFile = layout == Layout.SINGLE;
+        boolean byFile = layout.oneRecordAFile();
         RecordTags tags =
                 facts.recordFacts().tags(values, OptionalDouble.empty(), byFile ? facts.fileStem() : "1", line);
         values.putIfAbsent(TagName.SPECIMEN, byDefault(tags.key().specimen(), "default"));

@@ -70,7 +70,7 @@ public final class RawFileDecoder {
                     0,
                     "[records] layout",
                     "layout " + layout.word() + " is not acted on yet",
-                    "single, column, rolling or moduli");
+                    "single, column, rolling, moduli, multisine or chirp");
         }
     }
 
@@ -78,9 +78,9 @@ public final class RawFileDecoder {
         return switch (file.intake().instrument().records().layout()) {
             case MODULI -> new ModuliRows(facts, tally);
             case COLUMN -> new WaveformRows(facts, true, tally);
-            case SINGLE -> new WaveformRows(facts, false, tally);
+            case SINGLE, MULTISINE, CHIRP -> new WaveformRows(facts, false, tally);
             case ROLLING -> new RollingRows(facts, file.intake().instrument().records(), tally);
-            case MULTISINE, CHIRP, CREEP -> throw new IllegalStateException("refused before");
+            case CREEP -> throw new IllegalStateException("refused before");
         };
     }
 }

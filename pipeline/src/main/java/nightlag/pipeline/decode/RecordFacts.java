@@ -7,6 +7,7 @@ import java.util.OptionalDouble;
 import nightlag.pipeline.config.Instrument;
 import nightlag.pipeline.config.TagName;
 import nightlag.pipeline.config.TagSource;
+import nightlag.stages.RecordKind;
 import nightlag.stages.RecordTags;
 import nightlag.stages.geometry.Dimension;
 import nightlag.stages.moduli.PointKey;
@@ -52,6 +53,11 @@ final class RecordFacts {
                 temperatureK.isPresent() ? temperatureK : si(values, TagName.TEMPERATURE),
                 si(values, TagName.ELAPSED),
                 dimensions);
+    }
+
+    /** What a record of samples holds. */
+    RecordKind kind() {
+        return instrument.records().kind();
     }
 
     /** The SI value of a quantity tag. */

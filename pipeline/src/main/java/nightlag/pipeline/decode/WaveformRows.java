@@ -12,8 +12,8 @@ import nightlag.stages.WaveformRecord;
 import nightlag.stages.waveform.Waveform;
 
 /**
- * Records of samples: the layouts {@code single}, where the file is one, and {@code column}, where the tag {@code point} tells
- * them apart.
+ * Records of samples: the layouts {@code single}, {@code multisine} and {@code chirp}, where the file is one, and
+ * {@code column}, where the tag {@code point} tells them apart.
  *
  * <p>A row without a time, a deformation or a load is left out, and so is one of the layout {@code column} without a point.
  * A temperature is no needed column: recorders often write it less often than the signals.
@@ -33,7 +33,7 @@ final class WaveformRows implements RowTaker {
     private long rowOfRecord;
     private int rowsLeftOut;
 
-    /** For a file of the layout {@code single}, or {@code column} where a record ends when {@code divided}. */
+    /** For a file that is one record, or of the layout {@code column} where a record ends when {@code divided}. */
     WaveformRows(FileFacts facts, boolean divided, Tally tally) throws DecodeException {
         this.facts = facts;
         this.tally = tally;
@@ -125,7 +125,8 @@ final class WaveformRows implements RowTaker {
                         facts.recordFacts().tags(values, OptionalDouble.empty(), facts.fileStem(), firstLine),
                         columns.deformationSignal(),
                         columns.loadSignal(),
-                        waveform),
+                        waveform,
+                        facts.recordFacts().kind()),
                 samples.size());
     }
 }

@@ -77,7 +77,7 @@ class AcceptedConfigurationTest {
         assertThat(files.pathPattern().orElseThrow().matcher("L7/a/x.txt").matches())
                 .isTrue();
         assertThat(instrument(0).name()).isEqualTo("Melt bench");
-        assertThat(instrument(0).records()).isEqualTo(new RecordFormat(Layout.COLUMN, 6, 3, List.of()));
+        assertThat(instrument(0).records()).isEqualTo(new RecordFormat(Layout.COLUMN, 6, 3, List.of(), 10));
     }
 
     @Test

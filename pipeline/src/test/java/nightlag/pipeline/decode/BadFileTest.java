@@ -304,7 +304,7 @@ class BadFileTest {
                         0,
                         "[records] layout",
                         "layout creep is not acted on yet",
-                        "single, column, rolling or moduli"),
+                        "single, column, rolling, moduli, multisine or chirp"),
                 fault(
                         "moduli without a frequency",
                         bench -> moduli(bench).preamble(TagName.FREQUENCY, "f", "Hz"),

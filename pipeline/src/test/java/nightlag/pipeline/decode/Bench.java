@@ -182,7 +182,7 @@ final class Bench {
                 "bench",
                 "An invented bench",
                 new FileFormat(match, charset, delimiter, decimal, header, unitRow, runSheet, pathPattern),
-                new RecordFormat(layout, windowCycles, advanceCycles, List.of()),
+                new RecordFormat(layout, windowCycles, advanceCycles, List.of(), 10),
                 channels,
                 tags,
                 Corrections.none(),

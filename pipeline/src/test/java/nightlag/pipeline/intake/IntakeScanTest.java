@@ -169,7 +169,7 @@ class IntakeScanTest {
                         false,
                         runSheet,
                         Optional.empty()),
-                new RecordFormat(Layout.SINGLE, 6, 3, List.of()),
+                new RecordFormat(Layout.SINGLE, 6, 3, List.of(), 10),
                 Map.of(),
                 Map.of(),
                 Corrections.none(),

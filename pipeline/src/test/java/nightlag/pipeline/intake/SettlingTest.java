@@ -50,7 +50,7 @@ class SettlingTest {
                 "bench",
                 "An invented bench",
                 format,
-                new RecordFormat(Layout.SINGLE, 6, 3, List.of()),
+                new RecordFormat(Layout.SINGLE, 6, 3, List.of(), 10),
                 Map.of(),
                 Map.of(),
                 Corrections.none(),

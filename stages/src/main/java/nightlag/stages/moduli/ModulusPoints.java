@@ -60,8 +60,33 @@ public final class ModulusPoints {
             Ranges ranges,
             ScreeningPlan plan)
             throws ReductionFault {
+        return of(origin, Optional.of(waveform), fit, correction, ranges, plan);
+    }
+
+    /**
+     * The point of one frequency out of a record of several. It has no harmonics, because they are other frequencies of the
+     * record, and no loop.
+     *
+     * @param fit a fit of one order
+     * @throws ReductionFault if the corrected amplitudes give no modulus
+     */
+    public static ModulusPoint amongOthers(
+            Origin origin, SignalFit fit, SignalCorrection correction, Ranges ranges, ScreeningPlan plan)
+            throws ReductionFault {
+        return of(origin, Optional.empty(), fit, correction, ranges, plan);
+    }
+
+    /** With the waveform where the record is of one frequency. */
+    private static ModulusPoint of(
+            Origin origin,
+            Optional<Waveform> waveform,
+            SignalFit fit,
+            SignalCorrection correction,
+            Ranges ranges,
+            ScreeningPlan plan)
+            throws ReductionFault {
         StressHarmonics stress = new StressHarmonics(fit, correction);
-        List<Harmonic> harmonics = stress.harmonics();
+        List<Harmonic> harmonics = waveform.isPresent() ? stress.harmonics() : List.of();
         Screening screening = Screening.of(
                 fit,
                 harmonics,
@@ -94,7 +119,9 @@ public final class ModulusPoints {
                 OptionalDouble.of(fit.screening().loadSnrDb()),
                 OptionalDouble.of(fit.degreesOfFreedom()),
                 reasons,
-                screening.quality() == Quality.SOUND ? List.of() : Loop.of(waveform, fit, correction.at(0)),
+                waveform.filter(samples -> screening.quality() != Quality.SOUND)
+                        .map(samples -> Loop.of(samples, fit, correction.at(0)))
+                        .orElse(List.of()),
                 correction.torqueGeometry(),
                 screening.unusableOnlyBy());
     }

@@ -46,7 +46,7 @@ final class FrequencySearch {
         double interval = (samples.seconds()[length - 1] - samples.seconds()[0]) / (length - 1);
         double[][] values = new double[Samples.CHANNELS][];
         for (int c = 0; c < Samples.CHANNELS; c++) {
-            values[c] = detrended(samples, c, length);
+            values[c] = detrended(samples, samples.channels()[c], length);
         }
         LineSpectrum spectrum = LineSpectrum.of(values, interval);
         int peak = spectrum.strongest(taggedHz);
@@ -54,8 +54,7 @@ final class FrequencySearch {
     }
 
     /** The first samples of a channel without their best parabola: low bins would else show the drift. */
-    static double[] detrended(Samples samples, int channel, int length) {
-        double[] values = samples.channels()[channel];
+    static double[] detrended(Samples samples, double[] values, int length) {
         double[][] gram = new double[3][3];
         double[] moments = new double[3];
         double perSecond = 1 / samples.halfSpanS();

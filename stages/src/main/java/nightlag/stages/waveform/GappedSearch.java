@@ -120,7 +120,7 @@ final class GappedSearch {
         int length = RealTransform.fastLengthUpTo(2 * cells);
         double[][] onGrid = new double[Samples.CHANNELS][];
         for (int c = 0; c < Samples.CHANNELS; c++) {
-            onGrid[c] = onGrid(FrequencySearch.detrended(samples, c, samples.size()), length);
+            onGrid[c] = onGrid(FrequencySearch.detrended(samples, samples.channels()[c], samples.size()), length);
         }
         return LineSpectrum.of(onGrid, stepS).strongest(taggedHz) / (stepS * length);
     }

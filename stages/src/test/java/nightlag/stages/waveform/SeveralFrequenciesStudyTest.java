@@ -1,0 +1,75 @@
+package nightlag.stages.waveform;
+
+import static org.assertj.core.api.Assertions.assertThat;
+
+import java.util.Locale;
+import java.util.Random;
+import nightlag.stages.numeric.Complex;
+import org.junit.jupiter.api.Tag;
+import org.junit.jupiter.api.Test;
+import org.junit.jupiter.api.condition.EnabledIfSystemProperty;
+
+/**
+ * How far the responses of chirps are off on random materials of relaxation modes, without noise: what cutting a record out
+ * of time and the bend of the response leave. Run with
+ * {@code mvn -pl stages test -Dtest=SeveralFrequenciesStudyTest -Dnightlag.study=true}; the table goes to the console.
+ */
+@Tag("study")
+@EnabledIfSystemProperty(named = "nightlag.study", matches = "true")
+class SeveralFrequenciesStudyTest {
+    private static final int MATERIALS = 40;
+    private static final double[] FROM_CYCLES = {6, 12, 24, 48};
+
+    private static Chirp random(Random random) {
+        double slowest = 0.05 * Math.pow(10, random.nextDouble());
+        double fastest = slowest * Math.pow(10, 1 + 1.5 * random.nextDouble());
+        double seconds = (6 + 20 * random.nextDouble()) / slowest;
+        int modes = 1 + random.nextInt(5);
+        double[] strengths = new double[modes];
+        double[] times = new double[modes];
+        for (int i = 0; i < modes; i++) {
+            strengths[i] = 1e3 * Math.pow(10, 2 * random.nextDouble());
+            times[i] = Math.pow(10, 1 - 3.5 * random.nextDouble()) / (2 * Math.PI * slowest);
+        }
+        return Chirp.of(slowest, fastest, seconds, strengths, times)
+                .rest(random.nextBoolean() ? 0 : 0.02 * seconds, random.nextBoolean() ? 0 : 0.05 * seconds)
+                .equilibrium(random.nextBoolean() ? 0 : 1e3)
+                .taper(0.05 + 0.2 * random.nextDouble());
+    }
+
+    @Test
+    void chirps() throws Exception {
+        Random random = new Random(5);
+        double[] largest = new double[FROM_CYCLES.length];
+        double[] squares = new double[FROM_CYCLES.length];
+        int[] counts = new int[FROM_CYCLES.length];
+        for (int material = 0; material < MATERIALS; material++) {
+            Chirp chirp = random(random);
+            for (SignalFit fit : ChirpAnalysis.analyse(chirp.build(), 10, Drift.LINEAR)) {
+                Complex truth = chirp.modulus(fit.frequencyHz());
+                Complex found = fit.load()[0].over(fit.deformation()[0]);
+                double error = found.minus(truth).abs() / truth.abs();
+                int row = FROM_CYCLES.length - 1;
+                while (row > 0 && fit.cyclesUsed() < FROM_CYCLES[row]) {
+                    row--;
+                }
+                largest[row] = Math.max(largest[row], error);
+                squares[row] += error * error;
+                counts[row]++;
+            }
+        }
+        System.out.println("| cycles in the record | points | rms of |ΔG*|/|G*| | largest |");
+        System.out.println("|---|---|---|---|");
+        for (int row = 0; row < FROM_CYCLES.length; row++) {
+            System.out.printf(
+                    Locale.ROOT,
+                    "| from %.0f | %d | %.1e | %.1e |%n",
+                    FROM_CYCLES[row],
+                    counts[row],
+                    Math.sqrt(squares[row] / counts[row]),
+                    largest[row]);
+        }
+        assertThat(largest[0]).isLessThan(1e-2);
+        assertThat(largest[3]).isLessThan(2e-4);
+    }
+}
