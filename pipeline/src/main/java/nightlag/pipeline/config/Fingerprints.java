@@ -2,17 +2,14 @@ package nightlag.pipeline.config;
 
 import java.lang.reflect.RecordComponent;
 import java.nio.charset.Charset;
-import java.nio.charset.StandardCharsets;
-import java.security.MessageDigest;
-import java.security.NoSuchAlgorithmException;
 import java.util.Collection;
-import java.util.HexFormat;
 import java.util.Map;
 import java.util.Optional;
 import java.util.OptionalDouble;
 import java.util.OptionalInt;
 import java.util.TreeMap;
 import java.util.regex.Pattern;
+import org.apache.commons.codec.digest.DigestUtils;
 
 /**
  * Digests of values: equal values have equal digests, whatever order or spelling they were written in. A value is a
@@ -27,16 +24,7 @@ public final class Fingerprints {
         for (Object value : values) {
             write(value, text);
         }
-        return ofText(text.toString());
-    }
-
-    private static String ofText(String text) {
-        try {
-            MessageDigest digest = MessageDigest.getInstance("SHA-256");
-            return HexFormat.of().formatHex(digest.digest(text.getBytes(StandardCharsets.UTF_8)));
-        } catch (NoSuchAlgorithmException e) {
-            throw new IllegalStateException("every Java has SHA-256", e);
-        }
+        return DigestUtils.sha256Hex(text.toString());
     }
 
     /** Writes a value so that no two different values read the same: texts are written with their length. */

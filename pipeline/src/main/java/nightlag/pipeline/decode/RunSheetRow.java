@@ -3,7 +3,7 @@ package nightlag.pipeline.decode;
 import java.util.Map;
 import java.util.TreeMap;
 import java.util.stream.Collectors;
-import nightlag.pipeline.intake.Digests;
+import org.apache.commons.codec.digest.DigestUtils;
 
 /**
  * The row of a run sheet that speaks of one raw file.
@@ -29,7 +29,7 @@ public record RunSheetRow(String sheet, int line, Map<String, String> cells) {
         Map<String, String> facts = new TreeMap<>(cells);
         facts.remove(FILE);
         // cells hold no zero characters, so the text can be taken apart in one way only
-        return Digests.ofText(facts.entrySet().stream()
+        return DigestUtils.sha256Hex(facts.entrySet().stream()
                 .map(entry -> entry.getKey() + "\0" + entry.getValue())
                 .collect(Collectors.joining("\0")));
     }

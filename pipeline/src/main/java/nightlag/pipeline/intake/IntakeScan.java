@@ -38,19 +38,6 @@ public final class IntakeScan {
         return new IntakeFiles(walk.files, walk.unreadable);
     }
 
-    /**
-     * The raw files of a folder that can be read throughout.
-     *
-     * @throws IOException if the folder, or anything below it, cannot be read
-     */
-    public static List<RawFile> files(Intake intake) throws IOException {
-        IntakeFiles found = scan(intake);
-        if (!found.unreadable().isEmpty()) {
-            throw new IOException(found.unreadable().get(0).sentence());
-        }
-        return found.files();
-    }
-
     private static FileGlob globOf(Intake intake, Path folder) throws IOException {
         String glob = intake.instrument().files().match();
         try {

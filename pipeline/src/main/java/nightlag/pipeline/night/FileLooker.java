@@ -20,7 +20,6 @@ import nightlag.pipeline.decode.DecodeException;
 import nightlag.pipeline.decode.RawFileDecoder;
 import nightlag.pipeline.decode.RunSheetRow;
 import nightlag.pipeline.decode.RunSheets;
-import nightlag.pipeline.intake.Digests;
 import nightlag.pipeline.intake.RawFile;
 import nightlag.stages.MeasuredRecord;
 import nightlag.stages.Reduce;
@@ -51,7 +50,7 @@ final class FileLooker {
         String sha256 = "";
         Records records = new Records(file.intake().instrument());
         try {
-            sha256 = Digests.ofFile(file.path());
+            sha256 = file.sha256();
             if (isUnchanged(candidate, sha256)) {
                 return new Look.Unchanged(sha256);
             }

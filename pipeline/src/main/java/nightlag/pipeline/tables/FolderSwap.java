@@ -12,11 +12,11 @@ import java.nio.file.StandardCopyOption;
 import java.nio.file.StandardOpenOption;
 import java.security.DigestOutputStream;
 import java.security.MessageDigest;
-import java.security.NoSuchAlgorithmException;
 import java.util.HexFormat;
 import java.util.LinkedHashMap;
 import java.util.List;
 import java.util.Map;
+import org.apache.commons.codec.digest.DigestUtils;
 
 /**
  * Puts several files into one folder: each is written beside its place and waited for until it is on the disk, then all
@@ -49,7 +49,7 @@ final class FolderSwap implements AutoCloseable {
         Path target = folder.resolve(name);
         Path beside = folder.resolve(name + ON_ITS_WAY);
         written.put(beside, target);
-        MessageDigest digest = sha256();
+        MessageDigest digest = DigestUtils.getSha256Digest();
         try (FileChannel channel = FileChannel.open(beside, StandardOpenOption.CREATE_NEW, StandardOpenOption.WRITE)) {
             OutputStream out =
                     new DigestOutputStream(new BufferedOutputStream(Channels.newOutputStream(channel)), digest);
@@ -93,14 +93,6 @@ final class FolderSwap implements AutoCloseable {
     public void close() throws IOException {
         for (Path beside : written.keySet()) {
             Files.deleteIfExists(beside);
-        }
-    }
-
-    private static MessageDigest sha256() {
-        try {
-            return MessageDigest.getInstance("SHA-256");
-        } catch (NoSuchAlgorithmException cause) {
-            throw new IllegalStateException("every Java has SHA-256", cause);
         }
     }
 

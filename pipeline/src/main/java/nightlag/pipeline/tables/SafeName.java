@@ -1,12 +1,9 @@
 package nightlag.pipeline.tables;
 
-import java.nio.charset.StandardCharsets;
-import java.security.MessageDigest;
-import java.security.NoSuchAlgorithmException;
 import java.text.Normalizer;
-import java.util.HexFormat;
 import java.util.Locale;
 import java.util.Set;
+import org.apache.commons.codec.digest.DigestUtils;
 
 /**
  * A folder's name made from the name of a grade or a lot, which may hold anything: never a way out of the folder it is
@@ -43,7 +40,7 @@ final class SafeName {
             return name;
         }
         String front = kept.isEmpty() ? "_" : shortened(kept);
-        return front + "-" + sha256(name).substring(0, HASH_DIGITS);
+        return front + "-" + DigestUtils.sha256Hex(name).substring(0, HASH_DIGITS);
     }
 
     private static String keep(String name) {
@@ -93,14 +90,5 @@ final class SafeName {
         }
         boolean splitsACharacter = Character.isHighSurrogate(name.charAt(LONGEST - 1));
         return name.substring(0, splitsACharacter ? LONGEST - 1 : LONGEST);
-    }
-
-    private static String sha256(String text) {
-        try {
-            byte[] digest = MessageDigest.getInstance("SHA-256").digest(text.getBytes(StandardCharsets.UTF_8));
-            return HexFormat.of().formatHex(digest);
-        } catch (NoSuchAlgorithmException cause) {
-            throw new IllegalStateException("every Java has SHA-256", cause);
-        }
     }
 }
