@@ -73,8 +73,8 @@ final class FileStage {
     }
 
     /**
-     * Files with points come before new ones, and among them those that name another lot than before come last: a known lot
-     * goes before one that differs from it only in case, whatever the names of their files.
+     * Files with points come before new ones, and among them those whose lot now differs from a known one only in case come
+     * last: the known lot goes first, whatever the names of the files.
      */
     private void lookAt(Survey survey, RunSheets runSheets, Set<FileIdentity> wanted) throws ArchiveException {
         List<Candidate> looks = survey.candidates().stream()
@@ -84,24 +84,24 @@ final class FileStage {
         looks.forEach(candidate -> toLookAt.add(candidate.identity()));
         FileLooker looker =
                 new FileLooker(night.configuration(), runSheets, night.options().redo(), night.version());
-        List<Looked> namesAnotherLot = new ArrayList<>();
+        List<Looked> twins = new ArrayList<>();
         progress.begin(looks.size());
         try (SideBySide<Candidate, Look> results = new SideBySide<>(looks.iterator(), looker::look, night.workers())) {
             for (Candidate candidate : looks) {
                 Looked looked = new Looked(candidate, results.next());
                 if (!hasPoints(candidate)) {
-                    endAll(namesAnotherLot, survey.vanished());
+                    endAll(twins, survey.vanished());
                 }
                 if (!inside(candidate, wanted) && !namesWantedLot(looked.look())) {
                     toLookAt.remove(candidate.identity());
-                } else if (namesAnotherLot(looked)) {
-                    namesAnotherLot.add(looked);
+                } else if (namesATwin(looked)) {
+                    twins.add(looked);
                 } else {
                     end(looked, survey.vanished());
                 }
                 progress.fileDone();
             }
-            endAll(namesAnotherLot, survey.vanished());
+            endAll(twins, survey.vanished());
             commit();
         } finally {
             progress.end();
@@ -115,14 +115,14 @@ final class FileStage {
         return candidate.known().filter(known -> known.points() > 0).isPresent();
     }
 
-    private static boolean namesAnotherLot(Looked looked) {
-        return looked.look() instanceof Look.Reduced reduced
-                && looked.candidate()
-                        .known()
-                        .filter(known -> known.points() > 0 && !known.lot().isEmpty())
-                        .filter(known -> !FileStates.lots(reduced.reductions())
-                                .equals(Set.of(new LotName(known.grade(), known.lot()))))
-                        .isPresent();
+    /** Whether a file that has points now names a lot that differs from a known one only in case. */
+    private boolean namesATwin(Looked looked) {
+        return hasPoints(looked.candidate())
+                && looked.look() instanceof Look.Reduced reduced
+                && FileStates.lots(reduced.reductions()).stream()
+                        .anyMatch(lot -> !lotsByLowerCase
+                                .getOrDefault(lowerCase(lot), lot)
+                                .equals(lot));
     }
 
     private void endAll(List<Looked> looked, Map<String, List<ArchivedFile>> vanished) throws ArchiveException {
@@ -159,7 +159,8 @@ final class FileStage {
                         candidate.file().tableName() + ": " + clash.get(),
                         FileStates.lots(reduced.reductions()),
                         FileStates.specimens(reduced.reductions()),
-                        reduced.state(),
+                        // it depends on other files than this one, so it is looked at again every night
+                        ReductionState.TRY_AGAIN,
                         false);
                 setAside(candidate, aside);
             } else {

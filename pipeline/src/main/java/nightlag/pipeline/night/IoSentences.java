@@ -13,7 +13,7 @@ final class IoSentences {
 
     /** What a name that this platform cannot write down means. */
     static String of(InvalidPathException e) {
-        return "the name '" + e.getInput() + "' cannot be written in this session's charset ("
+        return "the name '" + e.getInput() + "' cannot be written in the charset that Java found for file names ("
                 + System.getProperty("sun.jnu.encoding") + "); start with a UTF-8 locale, such as LC_ALL=C.UTF-8";
     }
 

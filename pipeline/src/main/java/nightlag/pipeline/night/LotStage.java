@@ -28,7 +28,8 @@ import org.apache.logging.log4j.Logger;
 final class LotStage {
     private static final Logger LOG = LogManager.getLogger(LotStage.class);
 
-    private static final int PROBE_BYTES = 1 << 16;
+    /** With less room than this the disk counts as full. */
+    private static final long ROOM_BYTES = 1 << 24;
 
     private final NightWork night;
 
@@ -141,19 +142,9 @@ final class LotStage {
                 .concluded(lot, result.notes().stream().map(Reason::sentence).toList());
     }
 
-    /** Whether there is still room and leave to write: a new small file tells. */
-    private static boolean canBeWritten(Path results) {
-        try {
-            Path probe = Files.createTempFile(results, "probe", ".nightlag-new");
-            try {
-                Files.write(probe, new byte[PROBE_BYTES]);
-            } finally {
-                Files.delete(probe);
-            }
-            return true;
-        } catch (IOException e) {
-            return false;
-        }
+    /** Whether there is still room and leave to write; else it is no matter of one lot. */
+    private static boolean canBeWritten(Path results) throws IOException {
+        return Files.isWritable(results) && Files.getFileStore(results).getUsableSpace() > ROOM_BYTES;
     }
 
     private Provenance provenance(LotName lot, Grade grade) throws ArchiveException {

@@ -9,7 +9,7 @@ import java.util.Properties;
 public final class ProgramVersion {
     private ProgramVersion() {}
 
-    /** Such as {@code 0.1.0}. */
+    /** Such as {@code 0.2.0}. */
     public static String get() {
         try (InputStream in = ProgramVersion.class.getResourceAsStream("/nightlag/version.properties")) {
             Properties properties = new Properties();
