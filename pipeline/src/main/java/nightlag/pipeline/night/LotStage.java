@@ -20,7 +20,6 @@ import nightlag.pipeline.tables.TableInUseException;
 import nightlag.stages.Conclude;
 import nightlag.stages.LotResult;
 import nightlag.stages.Reduction;
-import nightlag.stages.fault.Reason;
 import org.apache.logging.log4j.LogManager;
 import org.apache.logging.log4j.Logger;
 
@@ -138,8 +137,7 @@ final class LotStage {
                     e);
         }
         night.archive().concluded(lot, conclusionState(grade));
-        night.tally()
-                .concluded(lot, result.notes().stream().map(Reason::sentence).toList());
+        night.tally().concluded(lot, result);
     }
 
     /** Whether there is still room and leave to write; else it is no matter of one lot. */

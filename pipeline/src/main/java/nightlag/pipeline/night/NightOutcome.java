@@ -20,7 +20,7 @@ import nightlag.stages.moduli.Quality;
  * @param unreadableIntakes intakes that could not be read, with the reason
  * @param lotsConcluded lots whose tables were rebuilt, with what could not be had for them
  * @param lotsNotConcluded lots whose tables could not be rebuilt, with the reason
- * @param quality points reduced this night, by quality
+ * @param quality points reduced this night, by quality, as their lots publish them
  * @param notSound the first of them that are not sound, unusable ones first, each with its reasons
  * @param flags how often each flag was raised on them
  * @param rows rows read this night

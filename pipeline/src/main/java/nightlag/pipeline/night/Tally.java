@@ -3,13 +3,16 @@ package nightlag.pipeline.night;
 import java.nio.file.Path;
 import java.util.ArrayList;
 import java.util.EnumMap;
+import java.util.HashSet;
 import java.util.List;
 import java.util.Map;
+import java.util.Set;
 import java.util.TreeMap;
 import java.util.stream.Collectors;
 import nightlag.pipeline.archive.LotName;
 import nightlag.pipeline.decode.DecodeCounts;
 import nightlag.pipeline.tables.NightFileRow;
+import nightlag.stages.LotResult;
 import nightlag.stages.Reduction;
 import nightlag.stages.fault.Reason;
 import nightlag.stages.moduli.Flag;
@@ -34,6 +37,7 @@ final class Tally {
     private final Map<LotName, String> lotsNotConcluded = new TreeMap<>();
     private final Map<Quality, Integer> quality = new EnumMap<>(Quality.class);
     private final Map<Flag, Integer> flags = new EnumMap<>(Flag.class);
+    private final Set<String> reducedTonight = new HashSet<>();
     private final Map<Quality, List<String>> notSound = new EnumMap<>(Quality.class);
     private long rows;
     private long rowsLeftOut;
@@ -63,7 +67,9 @@ final class Tally {
         LOG.warn("intake cannot be read: {}", sentence);
     }
 
+    /** Says what each point of a file was found to be; they are counted as their lots publish them. */
     void reduced(String file, DecodeCounts counts, List<Reduction> reductions) {
+        reducedTonight.add(file);
         rows += counts.rows();
         rowsLeftOut += counts.leftOut();
         if (counts.leftOut() > 0) {
@@ -77,31 +83,39 @@ final class Tally {
         }
         for (Reduction reduction : reductions) {
             for (ModulusPoint point : reduction.points()) {
-                quality.merge(point.quality(), 1, Integer::sum);
-                if (point.quality() != Quality.SOUND) {
-                    notSound(file, point);
+                for (Reason reason : point.reasons()) {
+                    LOG.info("{}, point {}: {}", file, point.key().point(), reason.sentence());
                 }
-                point.flags().forEach(flag -> flags.merge(flag, 1, Integer::sum));
-                point.reasons()
-                        .forEach(reason ->
-                                LOG.info("{}, point {}: {}", file, point.key().point(), reason.sentence()));
             }
         }
     }
 
-    private void notSound(String file, ModulusPoint point) {
-        List<String> lines = notSound.computeIfAbsent(point.quality(), any -> new ArrayList<>());
-        if (lines.size() < MOST_NOT_SOUND) {
-            String reasons = point.reasons().stream().map(Reason::sentence).collect(Collectors.joining("; "));
-            lines.add(file + ", point " + point.key().point() + ", "
-                    + point.quality().word() + ": " + reasons);
-        }
-    }
-
-    void concluded(LotName lot, List<String> notes) {
+    /** Counts the points of a lot that come from files reduced this night, as they are published. */
+    void concluded(LotName lot, LotResult result) {
+        List<String> notes = result.notes().stream().map(Reason::sentence).toList();
         lotsConcluded.put(lot, notes);
         LOG.info("{} lot {}: tables rebuilt", lot.grade(), lot.lot());
         notes.forEach(note -> LOG.info("{} lot {}: {}", lot.grade(), lot.lot(), note));
+        for (ModulusPoint point : result.points()) {
+            if (reducedTonight.contains(point.key().sourceFile())) {
+                quality.merge(point.quality(), 1, Integer::sum);
+                point.flags().forEach(flag -> flags.merge(flag, 1, Integer::sum));
+                if (point.quality() != Quality.SOUND) {
+                    notSound(point);
+                }
+            }
+        }
+    }
+
+    private void notSound(ModulusPoint point) {
+        String name = point.key().sourceFile() + ", point " + point.key().point();
+        String words = point.flags().stream().map(Flag::word).collect(Collectors.joining(", "));
+        LOG.info("{}: published as {}: {}", name, point.quality().word(), words);
+        List<String> lines = notSound.computeIfAbsent(point.quality(), any -> new ArrayList<>());
+        if (lines.size() < MOST_NOT_SOUND) {
+            String reasons = point.reasons().stream().map(Reason::sentence).collect(Collectors.joining("; "));
+            lines.add(name + ", " + point.quality().word() + ": " + reasons);
+        }
     }
 
     void notConcluded(LotName lot, String reason) {

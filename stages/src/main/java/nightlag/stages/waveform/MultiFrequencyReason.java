@@ -5,7 +5,7 @@ import nightlag.stages.fault.ReasonCode;
 /** Why a record is not the mixture or the sweep of frequencies it is said to be, or what to know about its points. */
 public enum MultiFrequencyReason implements ReasonCode {
     /** No parts. */
-    MULTISINE_NO_TONES("layout multisine: no frequency stands out of the deformation's noise"),
+    MULTISINE_NO_TONES("layout multisine: no frequency stands out of the deformation''s noise"),
     /** {0} the frequency in Hz. */
     MULTISINE_ONE_TONE(
             "layout multisine: the deformation holds one frequency only, {0} Hz; layout single reads such a record"),
