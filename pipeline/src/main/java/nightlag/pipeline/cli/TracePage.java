@@ -181,6 +181,12 @@ final class TracePage {
                             + "; signal to noise " + decibel(point.strainSnrDb()) + " deformation, "
                             + decibel(point.stressSnrDb()) + " load");
         }
+        followed.fit()
+                .flatMap(fit -> fit.screening().cycleScatter())
+                .ifPresent(scatter -> line(
+                        "relative u",
+                        digits(SHORT, scatter.noiseU()) + " from the noise, " + digits(SHORT, scatter.cyclesU())
+                                + " from cycle to cycle"));
         point.temperatureK()
                 .ifPresent(kelvin -> line("temperature", digits(LONG, kelvin - KELVIN_AT_ZERO_CELSIUS) + " °C"));
     }

@@ -9,6 +9,8 @@ import java.util.Optional;
 import java.util.OptionalDouble;
 import java.util.Set;
 import nightlag.stages.fault.Reason;
+import nightlag.stages.waveform.ClockJump;
+import nightlag.stages.waveform.CycleScatter;
 import nightlag.stages.waveform.ScreeningFigures;
 import nightlag.stages.waveform.ScreeningFigures.Figure;
 import nightlag.stages.waveform.SignalFit;
@@ -19,6 +21,12 @@ import nightlag.stages.waveform.SignalFit;
  */
 final class Screening {
     private static final OptionalDouble NEVER = OptionalDouble.empty();
+    /** A scatter so much over the noise that the noise's u tells less than half of it. */
+    private static final double CYCLES_OVER_NOISE = 2;
+    /** Noise alone makes a ratio that large less often than once in so many records: once in some nights of thousands. */
+    private static final double RARE = 1e-4;
+    /** A relative uncertainty below it is a file's last digits. */
+    private static final double SMALLEST_SCATTER = 1e-6;
 
     private final List<Flag> flags = new ArrayList<>();
     private final List<Reason> reasons = new ArrayList<>();
@@ -71,6 +79,7 @@ final class Screening {
                 ScreeningReason.SCREENING_CLIPPED, figures.clippedShare() + figures.spikeShare(), plan.clipped());
         screening.above(ScreeningReason.SCREENING_GAPS, figures.gapShare(), plan.gaps());
         screening.above(ScreeningReason.SCREENING_UNEVEN_CLOCK, figures.clockJitter(), plan.clock());
+        figures.clockJump().ifPresent(screening::clockJumped);
         screening.below(
                 ScreeningReason.SCREENING_WEAK_SIGNAL,
                 Math.min(figures.deformationSnrDb(), figures.loadSnrDb()),
@@ -78,6 +87,7 @@ final class Screening {
         screening.above(ScreeningReason.SCREENING_DRIFTING, figures.baseline(), plan.baseline());
         figures.cycleTrend()
                 .ifPresent(trend -> screening.above(ScreeningReason.SCREENING_UNSETTLED, trend, plan.cycleTrend()));
+        figures.cycleScatter().ifPresent(screening::cyclesAgainstNoise);
         for (Harmonic harmonic : stress) {
             if (harmonic.order() == 3) {
                 screening.above(ScreeningReason.SCREENING_NONLINEAR, figure(harmonic), plan.thirdHarmonic());
@@ -128,6 +138,29 @@ final class Screening {
                     limit.unusable().isPresent() && figure < limit.unusable().getAsDouble();
             raise(reason, figure, limit.doubtful(), unusable ? limit.unusable() : NEVER);
         }
+    }
+
+    private void cyclesAgainstNoise(CycleScatter scatter) {
+        if (scatter.cyclesU() > SMALLEST_SCATTER && scatter.ratio() > CYCLES_OVER_NOISE && scatter.chance() < RARE) {
+            raise(
+                    ScreeningReason.SCREENING_CYCLES_DISAGREE,
+                    scatter.ratio(),
+                    CYCLES_OVER_NOISE,
+                    NEVER,
+                    scatter.cyclesU(),
+                    scatter.noiseU());
+        }
+    }
+
+    private void clockJumped(ClockJump jump) {
+        raise(
+                ScreeningReason.SCREENING_CLOCK_JUMPED,
+                jump.seconds(),
+                ClockJump.SMALLEST_CYCLES,
+                NEVER,
+                jump.atS(),
+                Math.abs(jump.cycles()),
+                jump.samplesLeftOut());
     }
 
     private void outOf(Optional<SignalRange> range, String channel, double amplitude) {

@@ -10,9 +10,22 @@ public enum ScreeningReason implements ReasonCode {
     SCREENING_CLIPPED(Flag.CLIPPED, "{0} of the samples stand at a channel''s limit or are spikes, the limit is {1}"),
     SCREENING_GAPS(Flag.GAPS, "{0} of the record is missing, the limit is {1}"),
     SCREENING_UNEVEN_CLOCK(Flag.UNEVEN_CLOCK, "the sampling interval scatters by {0} of its mean, the limit is {1}"),
+    /**
+     * Parts: {0} jump in s, {1} smallest step in cycles, {2} what the point becomes, {3} time in s, {4} step in cycles,
+     * {5} samples left out.
+     */
+    SCREENING_CLOCK_JUMPED(
+            Flag.UNEVEN_CLOCK,
+            "the clock jumped by {0} s at {3} s, the oscillation did not: its phase steps by {4} cycles, the limit is {1};"
+                    + " the longest stretch is used, {5} samples are left out"),
     SCREENING_WEAK_SIGNAL(Flag.WEAK_SIGNAL, "{0} dB from signal to noise, {1} dB wanted"),
     SCREENING_DRIFTING(Flag.DRIFTING, "the mean moves by {0} of the amplitude, the limit is {1}"),
     SCREENING_UNSETTLED(Flag.UNSETTLED, "the modulus changes by {0} over the record, the limit is {1}"),
+    /** Parts: {0} ratio, {1} limit, {2} what the point becomes, {3} relative u from the cycles, {4} relative u from the noise. */
+    SCREENING_CYCLES_DISAGREE(
+            Flag.UNSETTLED,
+            "the modulus scatters from cycle to cycle {0} times as much as its noise, the limit is {1}: relative u {3} from"
+                    + " the cycles, {4} from the noise"),
     SCREENING_NONLINEAR(Flag.NONLINEAR, "the third harmonic is {0} of the first, the limit is {1}"),
     SCREENING_EVEN_HARMONICS(Flag.EVEN_HARMONICS, "an even harmonic is {0} of the first, the limit is {1}"),
     SCREENING_INERTIA_HEAVY(

@@ -63,14 +63,28 @@ public final class HarmonicAnalysis {
      * @throws ReductionFault if the record has too few samples, a channel that does not move, or no oscillation
      */
     public static SignalFit analyse(Waveform waveform, ExtractionPlan plan) throws ReductionFault {
-        return new HarmonicAnalysis(waveform, plan).run();
-    }
-
-    private SignalFit run() throws ReductionFault {
         if (waveform.size() == 0) {
             throw new ReductionFault(WaveformReason.WAVEFORM_NO_SAMPLES.with());
         }
         RecordChecks.check(waveform);
+        Optional<ClockCheck.Stretch> stretch = ClockCheck.stretch(waveform, plan);
+        if (stretch.isEmpty()) {
+            return wholeRecord(waveform, plan);
+        }
+        double startUp = waveform.isWindow()
+                ? plan.startUpCycles()
+                : Math.max(0, plan.startUpCycles() - stretch.get().cyclesBefore());
+        ExtractionPlan ofStretch = new ExtractionPlan(startUp, plan.harmonics(), plan.drift(), plan.frequencyFrom());
+        return wholeRecord(stretch.get().of(waveform), ofStretch)
+                .outOf(stretch.get().from(), stretch.get().jump());
+    }
+
+    /** The same for a record that has been checked, its time stamps taken as they are. */
+    static SignalFit wholeRecord(Waveform waveform, ExtractionPlan plan) throws ReductionFault {
+        return new HarmonicAnalysis(waveform, plan).run();
+    }
+
+    private SignalFit run() throws ReductionFault {
         requireSamples(waveform.size());
         leaveOutDamage();
         Samples all = Samples.of(waveform, 0, leftOut);
@@ -374,7 +388,9 @@ public final class HarmonicAnalysis {
                 steadiness.baseline(),
                 steadiness.cycleTrend(),
                 Steadiness.temperatureWander(temperature.about(), samples.indices(), samples.size() / cycles),
-                frequencyMismatch(fitted, noise, frequency, frequencyU));
+                frequencyMismatch(fitted, noise, frequency, frequencyU),
+                steadiness.cycleScatter(covariance.degreesOfFreedom()),
+                Optional.empty());
         return new SignalFit(
                 frequency,
                 frequencyU,

@@ -16,6 +16,8 @@ import java.util.OptionalDouble;
  * @param cycleTrend relative change of |load / deformation| over the record; empty where the record is too short to tell
  * @param temperatureWanderK highest less lowest temperature in K, smoothed over a cycle; empty without the channel
  * @param frequencyMismatch |found − tagged| / tagged frequency; empty without a tag
+ * @param cycleScatter the uncertainty told twice, by the noise and by the cycles; empty where the record is too short to tell
+ * @param clockJump the place where the time stamps jump and the oscillation does not; empty where there is none
  */
 public record ScreeningFigures(
         double clippedShare,
@@ -27,7 +29,53 @@ public record ScreeningFigures(
         Figure baseline,
         Optional<Figure> cycleTrend,
         OptionalDouble temperatureWanderK,
-        Optional<Figure> frequencyMismatch) {
+        Optional<Figure> frequencyMismatch,
+        Optional<CycleScatter> cycleScatter,
+        Optional<ClockJump> clockJump) {
+    /** Figures of a record whose cycles were not compared with each other and whose clock went on. */
+    public ScreeningFigures(
+            double clippedShare,
+            double spikeShare,
+            double gapShare,
+            double clockJitter,
+            double deformationSnrDb,
+            double loadSnrDb,
+            Figure baseline,
+            Optional<Figure> cycleTrend,
+            OptionalDouble temperatureWanderK,
+            Optional<Figure> frequencyMismatch) {
+        this(
+                clippedShare,
+                spikeShare,
+                gapShare,
+                clockJitter,
+                deformationSnrDb,
+                loadSnrDb,
+                baseline,
+                cycleTrend,
+                temperatureWanderK,
+                frequencyMismatch,
+                Optional.empty(),
+                Optional.empty());
+    }
+
+    /** The same of a record whose clock jumped. */
+    ScreeningFigures with(ClockJump jump) {
+        return new ScreeningFigures(
+                clippedShare,
+                spikeShare,
+                gapShare,
+                clockJitter,
+                deformationSnrDb,
+                loadSnrDb,
+                baseline,
+                cycleTrend,
+                temperatureWanderK,
+                frequencyMismatch,
+                cycleScatter,
+                Optional.of(jump));
+    }
+
     /**
      * A figure and how well it is known.
      *

@@ -53,4 +53,25 @@ public record SignalFit(
     public int harmonics() {
         return load.length;
     }
+
+    /** The same as of a longer record, from whose sample {@code from} on the samples fitted were taken. */
+    SignalFit outOf(int from, ClockJump jump) {
+        return new SignalFit(
+                frequencyHz,
+                frequencyUHz,
+                originS,
+                deformation,
+                load,
+                covariance,
+                degreesOfFreedom,
+                deformationNoise,
+                loadNoise,
+                cyclesUsed,
+                from + firstSample,
+                samplesUsed,
+                samplesLeftOut + jump.samplesLeftOut(),
+                meanTemperatureK,
+                screening.with(jump),
+                notes);
+    }
 }

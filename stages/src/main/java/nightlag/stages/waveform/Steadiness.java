@@ -1,25 +1,39 @@
 package nightlag.stages.waveform;
 
+import java.util.Arrays;
+import java.util.List;
 import java.util.Optional;
 import java.util.OptionalDouble;
+import java.util.stream.IntStream;
+import nightlag.stages.numeric.Complex;
 import nightlag.stages.waveform.ScreeningFigures.Figure;
 
 /** Whether a record stayed the same from its first cycle to its last: its means, its modulus, its temperature. */
 final class Steadiness {
     private static final int MOST_STRETCHES = 32;
     private static final int FEWEST_FREEDOM = 8;
+    /** From so many stretches their scatter tells an uncertainty. */
+    private static final int FEWEST_STRETCHES = 4;
+
+    private static final double LEAST_SCATTER_FREEDOM = 4;
+    /** A drift not asked for whose overlap with the residuals is within the noise (squared, in its variances) is none. */
+    private static final double WORTH_A_LOOK = 4;
+    /** A stretch that lacks more of its samples does not take part in the scatter. */
+    private static final double NEARLY_FULL = 0.8;
 
     private final Samples samples;
     private final Basis basis;
     private final JointFit.Result fit;
     private final Noise noise;
     private final Optional<Stretches> stretches;
+    private final Unfitted[] unfitted;
 
     Steadiness(Samples samples, Basis basis, JointFit.Result fit, Noise noise) {
         this.samples = samples;
         this.basis = basis;
         this.fit = fit;
         this.noise = noise;
+        this.unfitted = new Unfitted[] {unfitted(Samples.DEFORMATION), unfitted(Samples.LOAD)};
         this.stretches = cut();
     }
 
@@ -28,14 +42,18 @@ final class Steadiness {
         return Math.hypot(fit.coefficients()[channel][column], fit.coefficients()[channel][column + 1]);
     }
 
-    /** Movement of the mean over the record as part of the amplitude, of the channel where it is larger. */
+    /**
+     * Movement of the mean over the record as part of the amplitude, of the channel where it is larger: of the drift fitted,
+     * or of the next power that was not.
+     */
     Figure baseline() {
         Figure worst = new Figure(0, 0);
         for (int c = 0; c < Samples.CHANNELS; c++) {
-            Figure figure = basis.driftTerms() == 1 ? unfittedLine(c) : fittedDrift(c);
-            Figure relative = new Figure(figure.value() / amplitude(c), figure.u() / amplitude(c));
-            if (relative.value() > worst.value()) {
-                worst = relative;
+            for (Figure figure : List.of(fittedDrift(c), unfitted[c].movement())) {
+                Figure relative = new Figure(figure.value() / amplitude(c), figure.u() / amplitude(c));
+                if (relative.value() > worst.value()) {
+                    worst = relative;
+                }
             }
         }
         return worst;
@@ -43,6 +61,9 @@ final class Steadiness {
 
     /** Highest less lowest value of the fitted polynomial. */
     private Figure fittedDrift(int channel) {
+        if (basis.driftTerms() == 1) {
+            return new Figure(0, 0);
+        }
         double slope = fit.coefficients()[channel][1];
         double curve = basis.driftTerms() > 2 ? fit.coefficients()[channel][2] : 0;
         double[] places = {-1, 1, Math.abs(slope) < 2 * Math.abs(curve) ? -slope / (2 * curve) : 1};
@@ -63,29 +84,75 @@ final class Steadiness {
         return new Figure(move, Math.sqrt(variance));
     }
 
-    /** A straight line that was not asked for, from what the fit left of it. */
-    private Figure unfittedLine(int channel) {
-        double[] products = new double[basis.columns()];
-        double[][] column = new double[basis.columns()][1];
+    /**
+     * The next power of a channel's drift, which was not asked for, from what the fit left of it.
+     *
+     * @param movement what it moves the mean by over the record
+     * @param squares what it adds to the squares of the residuals
+     * @param residuals the channel's residuals without it
+     */
+    private record Unfitted(Figure movement, double squares, double[] residuals) {
+        static Unfitted none(double[] residuals) {
+            return new Unfitted(new Figure(0, 0), 0, residuals);
+        }
+    }
+
+    /** A straight line under a record taken for level, a parabola under one taken for straight. */
+    private Unfitted unfitted(int channel) {
+        int power = basis.driftTerms();
+        if (power > 2) {
+            return Unfitted.none(fit.residuals()[channel]);
+        }
         double squares = 0;
         double overlap = 0;
-        double halfSpan = samples.halfSpanS();
         for (int i = 0; i < samples.size(); i++) {
-            double u = samples.seconds()[i] / halfSpan;
+            double term = term(power, i);
+            squares += term * term;
+            overlap += term * fit.residuals()[channel][i];
+        }
+        double variance = noise.beside(channel, 1).variance();
+        if (overlap * overlap < WORTH_A_LOOK * variance * squares) {
+            return Unfitted.none(fit.residuals()[channel]);
+        }
+        double[] products = new double[basis.columns()];
+        double[][] column = new double[basis.columns()][1];
+        for (int i = 0; i < samples.size(); i++) {
             basis.fill(i, 1, column);
             for (int j = 0; j < products.length; j++) {
-                products[j] += u * column[j][0];
+                products[j] += term(power, i) * column[j][0];
             }
-            squares += u * u;
-            overlap += u * fit.residuals()[channel][i];
         }
         double free = squares - fit.normal().inverseForm(products);
         if (free <= 0) {
-            return new Figure(0, 0);
+            return Unfitted.none(fit.residuals()[channel]);
         }
-        return new Figure(
-                2 * Math.abs(overlap) / free,
-                2 * Math.sqrt(noise.beside(channel, 1).variance() / free));
+        // u moves by 2 from end to end, u² by 1 from the middle to either
+        double range = power == 1 ? 2 : 1;
+        Figure movement = new Figure(range * Math.abs(overlap) / free, range * Math.sqrt(variance / free));
+        return movement.significant()
+                ? new Unfitted(movement, overlap * overlap / free, without(channel, power, products, overlap / free))
+                : new Unfitted(movement, 0, fit.residuals()[channel]);
+    }
+
+    /** The residuals without so much of the term, as far as the fit did not take it already. */
+    private double[] without(int channel, int power, double[] products, double coefficient) {
+        double[] taken = fit.normal().solve(products);
+        double[][] column = new double[basis.columns()][1];
+        double[] rest = fit.residuals()[channel].clone();
+        for (int i = 0; i < rest.length; i++) {
+            basis.fill(i, 1, column);
+            double left = term(power, i);
+            for (int j = 0; j < taken.length; j++) {
+                left -= taken[j] * column[j][0];
+            }
+            rest[i] -= coefficient * left;
+        }
+        return rest;
+    }
+
+    private double term(int power, int sample) {
+        double u = samples.seconds()[sample] / samples.halfSpanS();
+        return power == 1 ? u : u * u - 1.0 / 3;
     }
 
     /**
@@ -120,8 +187,8 @@ final class Steadiness {
                 samplesIn[stretch]++;
                 middles[stretch] += samples.seconds()[i] / samples.halfSpanS();
                 for (int c = 0; c < Samples.CHANNELS; c++) {
-                    excess[stretch][c][0] += fit.residuals()[c][i] * basis.cosine()[i];
-                    excess[stretch][c][1] += fit.residuals()[c][i] * basis.sine()[i];
+                    excess[stretch][c][0] += unfitted[c].residuals()[i] * basis.cosine()[i];
+                    excess[stretch][c][1] += unfitted[c].residuals()[i] * basis.sine()[i];
                 }
             }
         }
@@ -136,8 +203,8 @@ final class Steadiness {
     }
 
     /**
-     * Noise of a channel without what a change of its amplitude from stretch to stretch leaves in the residuals: that is
-     * unsteadiness, not noise.
+     * Noise of a channel without what a change of its amplitude from stretch to stretch, or a drift that was not asked for,
+     * leaves in the residuals: that is unsteadiness, not noise.
      */
     double steadyVariance(int channel) {
         Noise.Level whole = noise.whole(channel);
@@ -151,6 +218,7 @@ final class Steadiness {
             double[] excess = cut.excess()[k][channel];
             squares -= cut.samplesIn()[k] * (excess[0] * excess[0] + excess[1] * excess[1]) / 2;
         }
+        squares -= unfitted[channel].squares();
         return freedom >= FEWEST_FREEDOM && squares > 0 ? squares / freedom : whole.variance();
     }
 
@@ -186,6 +254,62 @@ final class Steadiness {
         double others = (mean * count - ratios[0]) / (count - 1);
         Figure start = new Figure(Math.abs(ratios[0] / others - 1), Math.sqrt(variance * (1 + 1.0 / (count - 1))));
         return start.significant() && start.value() > trend.value() ? start : trend;
+    }
+
+    /**
+     * The uncertainty of load / deformation from the noise beside the fundamental and from the scatter of the stretches; empty
+     * with fewer than four of them.
+     *
+     * @param noiseFreedom degrees of freedom behind the noise
+     */
+    Optional<CycleScatter> cycleScatter(double noiseFreedom) {
+        return stretches.flatMap(cut -> cycleScatter(cut, noiseFreedom));
+    }
+
+    private Optional<CycleScatter> cycleScatter(Stretches cut, double noiseFreedom) {
+        int expected = samples.size() / cut.count();
+        int[] full = IntStream.range(0, cut.count())
+                .filter(k -> cut.samplesIn()[k] >= NEARLY_FULL * expected)
+                .toArray();
+        if (full.length < FEWEST_STRETCHES) {
+            return Optional.empty();
+        }
+        Complex[] deviations = new Complex[full.length];
+        double[] places = new double[full.length];
+        double[] weights = new double[full.length];
+        for (int i = 0; i < full.length; i++) {
+            int k = full[i];
+            deviations[i] = relativeExcess(cut, k, Samples.LOAD).minus(relativeExcess(cut, k, Samples.DEFORMATION));
+            places[i] = cut.middles()[k];
+            weights[i] = cut.samplesIn()[k];
+        }
+        // a fit that lets the amplitude follow a parabola has taken that from the scatter as well
+        double freedom = 2.0 * (full.length - Math.max(2, basis.trendDegree() + 1));
+        if (freedom < LEAST_SCATTER_FREEDOM) {
+            return Optional.empty();
+        }
+        double squares = CycleScatter.squaresAboutALine(
+                        places,
+                        weights,
+                        Arrays.stream(deviations).mapToDouble(Complex::re).toArray())
+                + CycleScatter.squaresAboutALine(
+                        places,
+                        weights,
+                        Arrays.stream(deviations).mapToDouble(Complex::im).toArray());
+        double variance = 0;
+        for (int c = 0; c < Samples.CHANNELS; c++) {
+            variance += 2 * noise.beside(c, 1).variance() / (amplitude(c) * amplitude(c) * samples.size());
+        }
+        double scatter = squares / (freedom * samples.size());
+        return Optional.of(new CycleScatter(Math.sqrt(variance), noiseFreedom, Math.sqrt(scatter), freedom));
+    }
+
+    /** What a stretch adds to a channel's complex amplitude, as part of what the fit has there. */
+    private Complex relativeExcess(Stretches cut, int stretch, int channel) {
+        double[] excess = cut.excess()[stretch][channel];
+        double middle = cut.middles()[stretch];
+        return new Complex(excess[0], -excess[1])
+                .over(new Complex(fitted(channel, 0, middle), -fitted(channel, 1, middle)));
     }
 
     private double[] ratios(Stretches cut) {

@@ -126,6 +126,47 @@ class ScreeningTest {
                 .build());
     }
 
+    /** A parabola under a record taken for straight: from the middle to either end it rises by this many amplitudes. */
+    private static Setting curvedDrift(double amplitudes) {
+        double rise = 4 * amplitudes * STRESS.abs();
+        return Setting.plain(recording(6, 64)
+                .drifts(new double[] {0}, new double[] {0, -rise, rise})
+                .build());
+    }
+
+    /** Stick and slip in turns: every other cycle is stiffer by this part on either side of the mean. */
+    private static Setting everyOtherCycle(double change) {
+        Waveform steady = recording(20, 64)
+                .noise(1e-3 * STRAIN.abs(), 1e-3 * STRESS.abs())
+                .build();
+        double[] load = steady.load().clone();
+        for (int i = 0; i < load.length; i++) {
+            load[i] *= 1 + (i / 64 % 2 == 0 ? change : -change);
+        }
+        return Setting.plain(withLoad(steady, load));
+    }
+
+    /** A load that is short by this part at first and settles over half a cycle. */
+    private static Setting startUp(double shortBy) {
+        Waveform steady = recording(8, 64).noise(1e-7, 5e-3).build();
+        double[] load = steady.load().clone();
+        for (int i = 0; i < load.length; i++) {
+            load[i] *= 1 - shortBy * Math.exp(-i / 32.0);
+        }
+        return Setting.plain(withLoad(steady, load));
+    }
+
+    /** The stamps jump by 0.3 cycles; the waves go on. */
+    private static Setting clockJump() {
+        Waveform steady = recording(10, 64).build();
+        double[] timeS = steady.timeS().clone();
+        for (int i = 400; i < timeS.length; i++) {
+            timeS[i] += 0.3;
+        }
+        return Setting.plain(
+                new Waveform(timeS, steady.deformation(), steady.load(), new double[0], OptionalDouble.empty(), 0));
+    }
+
     private static Setting trend(double change) {
         Waveform steady = recording(8, 64).noise(1e-7, 5e-3).build();
         double[] load = steady.load().clone();
@@ -186,10 +227,14 @@ class ScreeningTest {
                         Flag.UNEVEN_CLOCK,
                         Setting.plain(recording(6, 64).jitter(0.042).build()),
                         Setting.plain(recording(6, 64).jitter(0.03).build())),
+                Arguments.of(Flag.UNEVEN_CLOCK, clockJump(), withGap(1)),
                 Arguments.of(Flag.WEAK_SIGNAL, snr(38), snr(42)),
                 Arguments.of(Flag.DRIFTING, drift(0.105), drift(0.095)),
+                Arguments.of(Flag.DRIFTING, curvedDrift(0.105), curvedDrift(0.095)),
                 Arguments.of(Flag.UNSETTLED, trend(0.022), trend(0.018)),
                 Arguments.of(Flag.UNSETTLED, trend(-0.06), trend(-0.019)),
+                Arguments.of(Flag.UNSETTLED, startUp(0.15), startUp(0.03)),
+                Arguments.of(Flag.UNSETTLED, everyOtherCycle(1e-3), everyOtherCycle(5e-4)),
                 Arguments.of(Flag.NONLINEAR, order(3, 0.0105), order(3, 0.0095)),
                 Arguments.of(Flag.EVEN_HARMONICS, order(4, 0.0105), order(4, 0.0095)),
                 Arguments.of(Flag.INERTIA_HEAVY, inertia(1.05), inertia(0.95)),
@@ -282,12 +327,19 @@ class ScreeningTest {
     }
 
     @Test
-    void aStartUpLongerThanSaidIsUnsettled() throws Exception {
-        Waveform steady = recording(8, 64).noise(1e-7, 5e-3).build();
-        double[] load = steady.load().clone();
-        for (int i = 0; i < load.length; i++) {
-            load[i] *= 1 - 0.15 * Math.exp(-i / 30.0);
-        }
-        assertThat(point(Setting.plain(withLoad(steady, load))).flags()).contains(Flag.UNSETTLED);
+    void cyclesThatDisagreeWithTheNoiseAreNamedWithBothFigures() throws Exception {
+        assertThat(point(everyOtherCycle(1e-3)).reasons()).anySatisfy(reason -> {
+            assertThat(reason.code()).isEqualTo("SCREENING_CYCLES_DISAGREE");
+            assertThat(reason.sentence()).contains("from the cycles").contains("from the noise");
+        });
+    }
+
+    @Test
+    void aTrueGapOfTheSameLengthIsOnlyAGap() throws Exception {
+        assertThat(point(withGap(30)).flags()).containsExactly(Flag.GAPS);
+        assertThat(point(clockJump()).reasons()).anySatisfy(reason -> {
+            assertThat(reason.code()).isEqualTo("SCREENING_CLOCK_JUMPED");
+            assertThat(reason.sentence()).contains("the clock jumped by 0.3").contains("240 samples are left out");
+        });
     }
 }
