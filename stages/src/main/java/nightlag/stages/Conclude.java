@@ -42,7 +42,7 @@ public final class Conclude {
                 .filter(point -> point.quality() != Quality.UNUSABLE)
                 .toList();
         LotSpectrum spectrum = plan.spectrum()
-                .map(wanted -> LotSpectrum.of(usable, wanted, plan.superposition()))
+                .map(wanted -> LotSpectrum.of(usable, lot.amplitudeSweeps(), wanted, plan.superposition()))
                 .orElse(LotSpectrum.NONE);
         return new LotResult(
                 points,

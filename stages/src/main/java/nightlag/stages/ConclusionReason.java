@@ -17,6 +17,8 @@ public enum ConclusionReason implements ReasonCode {
             "the spectrum at the reference temperature {1} °C comes from points measured at {0} °C, not shifted"),
     /** Nothing. */
     SPECTRUM_MIXED_DEFORMATION("no spectrum: the lot holds points in shear and in extension, two different moduli"),
+    /** How many points. */
+    SPECTRUM_WITHOUT_AMPLITUDE_SWEEPS("points of amplitude sweeps kept out of the spectrum: {0}"),
     /** Specimen, sweep, how many strains, how many are needed. */
     RIM_TOO_FEW_STRAINS(
             "specimen {0}, sweep {1}: {2} strains between parallel plates, {3} are needed to correct to the rim; its moduli"

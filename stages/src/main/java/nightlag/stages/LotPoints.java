@@ -1,7 +1,9 @@
 package nightlag.stages;
 
 import java.util.ArrayList;
+import java.util.IdentityHashMap;
 import java.util.List;
+import java.util.function.UnaryOperator;
 import nightlag.stages.fault.Reason;
 import nightlag.stages.moduli.Flag;
 import nightlag.stages.moduli.ModuliCovariance;
@@ -19,9 +21,10 @@ import nightlag.stages.sweep.SweepReason;
  * The points of a lot as published: what only their neighbours can say about them is in them.
  *
  * @param points points in table order
+ * @param amplitudeSweeps those of them that are in amplitude sweeps, the same objects
  * @param notes what could not be done, and why
  */
-record LotPoints(List<ModulusPoint> points, List<Reason> notes) {
+record LotPoints(List<ModulusPoint> points, List<List<ModulusPoint>> amplitudeSweeps, List<Reason> notes) {
     /** A sweep with more than this share of negative loss moduli has a wrong sign or delay. */
     private static final double MOST = 0.5;
 
@@ -30,16 +33,20 @@ record LotPoints(List<ModulusPoint> points, List<Reason> notes) {
     /** Publishes the points, given in table order. */
     static LotPoints of(List<ModulusPoint> reduced, SweepPlan plan) {
         AmplitudeSweeps found = AmplitudeSweeps.among(reduced, plan.kind());
-        List<ModulusPoint> points = new ArrayList<>(found.others());
         List<Reason> notes = new ArrayList<>();
-        for (List<ModulusPoint> sweep : found.sweeps()) {
-            points.addAll(amplitudeSweep(
-                    sweep.stream().map(LotPoints::nonlinearByDesign).toList(), notes));
-        }
+        List<List<ModulusPoint>> sweeps = found.sweeps().stream()
+                .map(sweep -> amplitudeSweep(
+                        sweep.stream().map(LotPoints::nonlinearByDesign).toList(), notes))
+                .toList();
+        List<ModulusPoint> points = new ArrayList<>(found.others());
+        sweeps.forEach(points::addAll);
+        IdentityHashMap<ModulusPoint, ModulusPoint> flagged = new IdentityHashMap<>();
+        SweepName.group(points).values().forEach(sweep -> flagged.putAll(flaggedForSign(sweep)));
+        UnaryOperator<ModulusPoint> published = point -> flagged.getOrDefault(point, point);
         return new LotPoints(
-                SweepName.group(points).values().stream()
-                        .flatMap(sweep -> checkedForSign(sweep).stream())
-                        .sorted(PointOrder.BY_KEY)
+                points.stream().map(published).sorted(PointOrder.BY_KEY).toList(),
+                sweeps.stream()
+                        .map(sweep -> sweep.stream().map(published).toList())
                         .toList(),
                 notes);
     }
@@ -73,21 +80,25 @@ record LotPoints(List<ModulusPoint> points, List<Reason> notes) {
      * Flags the points of a sweep whose loss modulus is below zero where most of its points are like that. A specimen cannot
      * give back more than was put in, so one such point may be noise or an inertia badly known, but most of a sweep means that
      * a channel is inverted or the load's delay is wrong.
+     *
+     * @return by point, the flagged one in its place; points that stay as they are have none
      */
-    private static List<ModulusPoint> checkedForSign(List<ModulusPoint> sweep) {
+    private static IdentityHashMap<ModulusPoint, ModulusPoint> flaggedForSign(List<ModulusPoint> sweep) {
         List<ModulusPoint> usable = sweep.stream()
                 .filter(point ->
                         point.quality() != Quality.UNUSABLE && point.moduli().isPresent())
                 .toList();
         long negative = usable.stream().filter(LotPoints::givesEnergyBack).count();
         double share = (double) negative / usable.size();
+        IdentityHashMap<ModulusPoint, ModulusPoint> flagged = new IdentityHashMap<>();
         if (!(share > MOST)) {
-            return sweep;
+            return flagged;
         }
         Reason why = ScreeningReason.SCREENING_SIGN_OR_DELAY.with(share, MOST, Quality.DOUBTFUL.word());
-        return sweep.stream()
-                .map(point -> givesEnergyBack(point) ? point.flagged(Flag.SIGN_OR_DELAY, why) : point)
-                .toList();
+        sweep.stream()
+                .filter(LotPoints::givesEnergyBack)
+                .forEach(point -> flagged.put(point, point.flagged(Flag.SIGN_OR_DELAY, why)));
+        return flagged;
     }
 
     /** Below zero by more than noise can make of a loss that is small. */

@@ -38,20 +38,26 @@ record LotSpectrum(List<Marker> markers, List<SpectrumRow> rows, List<Reason> no
      * reference is from where the points were measured is noted where it is more than a thermometer would hide.
      *
      * @param usable the lot's usable points, in table order
+     * @param amplitudeSweeps the amplitude sweeps among the lot's points, holding the same objects
      */
-    static LotSpectrum of(List<ModulusPoint> usable, SpectrumPlan plan, Optional<SuperpositionPlan> superposition) {
+    static LotSpectrum of(
+            List<ModulusPoint> usable,
+            List<List<ModulusPoint>> amplitudeSweeps,
+            SpectrumPlan plan,
+            Optional<SuperpositionPlan> superposition) {
         try {
             Isotherm sweep = chosenIsotherm(usable, superposition);
-            if (sweep.points().stream()
-                            .map(ModulusPoint::deformation)
-                            .distinct()
-                            .count()
-                    > 1) {
+            List<ModulusPoint> points = FrequencySweeps.withoutAmplitudeSweeps(sweep.points(), amplitudeSweeps);
+            if (points.stream().map(ModulusPoint::deformation).distinct().count() > 1) {
                 throw new ReductionFault(ConclusionReason.SPECTRUM_MIXED_DEFORMATION.with());
             }
-            DiscreteSpectrum spectrum = DiscreteFit.fit(
-                    sweep.points().stream().map(LotSpectrum::reading).toList(), plan);
+            DiscreteSpectrum spectrum =
+                    DiscreteFit.fit(points.stream().map(LotSpectrum::reading).toList(), plan);
             List<Reason> notes = new ArrayList<>();
+            int keptOut = sweep.points().size() - points.size();
+            if (keptOut > 0) {
+                notes.add(ConclusionReason.SPECTRUM_WITHOUT_AMPLITUDE_SWEEPS.with(keptOut));
+            }
             if (plan.fitEquilibrium() && spectrum.relaxation().isLiquid()) {
                 notes.add(SpectrumReason.EQUILIBRIUM_MODULUS_ZERO.with());
             }

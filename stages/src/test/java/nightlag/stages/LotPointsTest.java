@@ -1,19 +1,30 @@
 package nightlag.stages;
 
 import static org.assertj.core.api.Assertions.assertThat;
+import static org.assertj.core.api.Assertions.within;
 
 import java.util.ArrayList;
 import java.util.List;
 import java.util.Map;
 import java.util.Optional;
+import java.util.OptionalInt;
+import java.util.Random;
+import java.util.stream.Stream;
 import nightlag.stages.fault.Reason;
 import nightlag.stages.geometry.GeometryKind;
 import nightlag.stages.moduli.Flag;
+import nightlag.stages.moduli.Marker;
 import nightlag.stages.moduli.ModulusPoint;
 import nightlag.stages.moduli.Quality;
 import nightlag.stages.numeric.Complex;
+import nightlag.stages.spectrum.RelaxationModes;
+import nightlag.stages.spectrum.SpectrumPlan;
+import nightlag.stages.sweep.FrequencySweeps;
 import nightlag.stages.sweep.SweepPlan;
 import org.junit.jupiter.api.Test;
+import org.junit.jupiter.params.ParameterizedTest;
+import org.junit.jupiter.params.provider.CsvSource;
+import org.junit.jupiter.params.provider.EnumSource;
 
 /** What only the neighbours of a point can say about it. */
 class LotPointsTest {
@@ -130,10 +141,163 @@ class LotPointsTest {
         assertThat(result.notes()).isEmpty();
     }
 
+    /**
+     * On a frame as stiff as the specimen half-way through, the share of the set deflection that reaches the specimen falls
+     * as it stiffens and its stress rises; as it softens the other way about. The same points, made larger step by step
+     * instead, would be an amplitude sweep with a modulus that falls by a factor of 100.
+     */
+    @ParameterizedTest(name = "stiffer {0}-fold, seed {1}")
+    @CsvSource({"100, 1", "100, 2", "0.01, 3", "0.01, 4"})
+    void aSpecimenThatChangesOnAFrameThatGivesIsNoAmplitudeSweep(double change, long seed) {
+        Random random = new Random(seed);
+        List<ModulusPoint> run = new ArrayList<>();
+        for (int i = 0; i <= 60; i++) {
+            double modulus = 1e4 * Math.pow(change, i / 60.0 - 0.5) * (1 + 0.01 * random.nextGaussian());
+            double strain = 0.01 / (1 + modulus / 1e4) * (1 + 0.01 * random.nextGaussian());
+            run.add(SweepPoint.of(strain, new Complex(modulus, 0.1 * modulus), 0.01)
+                    .build());
+        }
+        LotResult result = conclude(run, AUTO);
+        assertThat(result.points()).containsExactlyInAnyOrderElementsOf(run);
+        assertThat(result.notes()).isEmpty();
+        assertThat(conclude(run, kind(SweepPlan.Kind.AMPLITUDE)).points())
+                .allSatisfy(point ->
+                        assertThat(point.reasons()).extracting(Reason::code).containsExactly("SWEEP_RIM_CORRECTED"));
+    }
+
+    /** A run whose deflection is halved by the instrument each time the torque has reached its limit. */
+    @Test
+    void aCureWhoseStrainIsSteppedDownIsNoAmplitudeSweep() {
+        List<ModulusPoint> cure = new ArrayList<>();
+        double strain = 0.1;
+        for (int i = 0; i <= 60; i++) {
+            double modulus = 100 * Math.pow(10, i / 20.0);
+            strain = modulus * strain > 20 ? strain / 2 : strain;
+            cure.add(SweepPoint.of(strain, new Complex(modulus, 0.1 * modulus), 0.01)
+                    .build());
+        }
+        assertThat(conclude(cure, AUTO).points()).containsExactlyInAnyOrderElementsOf(cure);
+    }
+
+    /** Down again with a structure that has broken, and up to strains at which it yields. */
+    @Test
+    void aSweepUpAndDownIsOneAndSoIsOnePastTheLargestStress() {
+        List<ModulusPoint> sweep = new ArrayList<>(softening(PLATES, STRAINS));
+        for (double strain : STRAINS) {
+            sweep.add(SweepPoint.of(0.999 * strain, new Complex(700 / (1 + strain), 80), 1e-4)
+                    .build());
+        }
+        assertThat(corrected(conclude(sweep, AUTO))).isEqualTo(12);
+
+        List<ModulusPoint> yielding = new ArrayList<>(softening(PLATES, STRAINS));
+        for (double strain : new double[] {5, 8, 12}) {
+            yielding.add(SweepPoint.of(strain, new Complex(900 / (strain * strain), 100 / strain), 1e-4)
+                    .build());
+        }
+        assertThat(corrected(conclude(yielding, AUTO))).isEqualTo(9);
+    }
+
+    private static final RelaxationModes FOUR =
+            RelaxationModes.of(0, new double[] {0.01, 0.1, 1, 10}, new double[] {1e5, 2e4, 3e3, 200});
+
+    /** A frequency sweep of four modes at a strain of 1 %, 0.01 to 100 Hz, known to a thousandth. */
+    private static List<ModulusPoint> fourModes(Optional<GeometryKind> geometry) {
+        List<ModulusPoint> points = new ArrayList<>();
+        for (int i = 0; i <= 40; i++) {
+            double hz = Math.pow(10, -2 + i / 10.0);
+            points.add(SweepPoint.of(0.01, FOUR.modulusPa(2 * Math.PI * hz), 1e-3)
+                    .hz(hz)
+                    .between(geometry)
+                    .build());
+        }
+        return points;
+    }
+
+    /** The same material at 1 Hz, softer the larger the strain, in the same sweep. */
+    private static List<ModulusPoint> fourModesSoftening(Optional<GeometryKind> geometry, double... strains) {
+        List<ModulusPoint> points = new ArrayList<>();
+        for (double strain : strains) {
+            Complex modulus = FOUR.modulusPa(2 * Math.PI).over(new Complex(1 + strain * strain, 0));
+            points.add(SweepPoint.of(strain, modulus, 1e-3).between(geometry).build());
+        }
+        return points;
+    }
+
+    private static LotResult spectrumOf(List<ModulusPoint> points) {
+        return Conclude.conclude(
+                List.of(new Reduction(points)),
+                new ConclusionPlan(
+                        AUTO,
+                        Optional.empty(),
+                        Optional.of(new SpectrumPlan(false, OptionalInt.empty(), false)),
+                        List.of(),
+                        List.of(),
+                        Map.of()));
+    }
+
+    private static Marker marker(LotResult result, String property) {
+        return result.markers().stream()
+                .filter(marker -> property.equals(marker.property()))
+                .findFirst()
+                .orElseThrow();
+    }
+
+    /** The frequency sweep's own point at 1 Hz has the smallest strain there; between plates it is moved to the rim with it. */
+    @ParameterizedTest(name = "{0}")
+    @EnumSource(
+            value = GeometryKind.class,
+            names = {"CONE_PLATE", "PARALLEL_PLATE"})
+    void anAmplitudeSweepInTheFrequencySweepStaysOutOfTheSpectrum(GeometryKind kind) {
+        Optional<GeometryKind> geometry = Optional.of(kind);
+        LotResult alone = spectrumOf(fourModes(geometry));
+        List<ModulusPoint> both = new ArrayList<>(fourModes(geometry));
+        both.addAll(fourModesSoftening(geometry, 0.03, 0.1, 0.3, 1, 3, 10));
+
+        LotResult result = spectrumOf(both);
+
+        assertThat(result.points()).hasSize(47);
+        assertThat(result.notes())
+                .extracting(Reason::sentence)
+                .containsExactly("points of amplitude sweeps kept out of the spectrum: 6");
+        for (String property : List.of("zero_shear_viscosity", "steady_state_compliance")) {
+            Marker expected = marker(alone, property);
+            double bound = kind == GeometryKind.CONE_PLATE
+                    ? 1e-6 * expected.value()
+                    : expected.u().orElseThrow();
+            assertThat(marker(result, property).value()).isCloseTo(expected.value(), within(bound));
+        }
+    }
+
+    /** With a point of another sweep at its frequency the amplitude sweep is not needed at all. */
+    @Test
+    void ofAnAmplitudeSweepTheSmallestStrainEntersWhereNothingElseHasItsFrequency() {
+        Optional<GeometryKind> cone = Optional.of(GeometryKind.CONE_PLATE);
+        List<ModulusPoint> one = fourModesSoftening(cone, 0.01, 0.1, 1, 3);
+        List<ModulusPoint> others = fourModes(cone);
+
+        assertThat(FrequencySweeps.withoutAmplitudeSweeps(concat(others, one), List.of(one)))
+                .containsExactlyElementsOf(others);
+        // the one at 1 Hz
+        others.remove(20);
+        assertThat(FrequencySweeps.withoutAmplitudeSweeps(concat(others, one), List.of(one)))
+                .containsExactlyElementsOf(concat(others, one.subList(0, 1)));
+    }
+
+    private static List<ModulusPoint> concat(List<ModulusPoint> first, List<ModulusPoint> second) {
+        return Stream.concat(first.stream(), second.stream()).toList();
+    }
+
+    private static long corrected(LotResult result) {
+        return result.points().stream()
+                .filter(point -> point.reasons().stream().anyMatch(why -> "SWEEP_RIM_CORRECTED".equals(why.code())))
+                .count();
+    }
+
     @Test
     void twoStrainsAreTooFewAndThatIsSaid() {
         List<ModulusPoint> reduced = softening(PLATES, 0.1, 1);
-        LotResult result = conclude(reduced, AUTO);
+        assertThat(conclude(reduced, AUTO).notes()).isEmpty();
+        LotResult result = conclude(reduced, kind(SweepPlan.Kind.AMPLITUDE));
         assertThat(result.points()).containsExactlyInAnyOrderElementsOf(reduced);
         assertThat(result.notes()).extracting(Reason::code).containsExactly("RIM_TOO_FEW_STRAINS");
         assertThat(result.notes().get(0).sentence())

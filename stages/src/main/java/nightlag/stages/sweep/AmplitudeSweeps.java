@@ -1,6 +1,7 @@
 package nightlag.stages.sweep;
 
 import java.util.ArrayList;
+import java.util.Arrays;
 import java.util.Collections;
 import java.util.Comparator;
 import java.util.IdentityHashMap;
@@ -10,6 +11,7 @@ import java.util.function.ToDoubleFunction;
 import nightlag.stages.moduli.Flag;
 import nightlag.stages.moduli.ModulusPoint;
 import nightlag.stages.moduli.Quality;
+import nightlag.stages.numeric.RankCorrelation;
 
 /**
  * The amplitude sweeps of a lot: points of one specimen and sweep, at one temperature and frequency, in which the strain
@@ -23,6 +25,10 @@ public record AmplitudeSweeps(List<List<ModulusPoint>> sweeps, List<ModulusPoint
     private static final double SAME = 0.01;
     /** Strain and stress must both vary by more: in a run at constant stress the strain follows the modulus. */
     private static final double LEAST_RATIO = 1.5;
+    /** Two points rise or fall by chance, and two frequency sweeps at two strains are no amplitude sweeps. */
+    private static final int LEAST_STRAINS = 3;
+    /** Of the ranks of strain and stress: nearly every larger strain has a larger stress. */
+    private static final double LEAST_CORRELATION = 0.9;
 
     /** Copies the lists. */
     public AmplitudeSweeps {
@@ -34,8 +40,9 @@ public record AmplitudeSweeps(List<List<ModulusPoint>> sweeps, List<ModulusPoint
      * Finds them. Points without a modulus or a strain, and those unusable for more than their third harmonic, belong to none.
      *
      * @param points the lot's points
-     * @param kind what varies, as configured; {@code AUTO}: strain and stress must both vary by more than a factor of 1.5
-     *     between at least two points; {@code AMPLITUDE}: every group of two strains is a sweep; else there are none
+     * @param kind what varies, as configured; {@code AUTO}: over three strains or more, up to that of the largest stress,
+     *     strain and stress must both vary by more than a factor of 1.5 and the stress must rise with the strain; beyond it a
+     *     specimen may yield or slip; {@code AMPLITUDE}: every group of two strains is a sweep; else there are none
      */
     public static AmplitudeSweeps among(List<ModulusPoint> points, SweepPlan.Kind kind) {
         List<List<ModulusPoint>> sweeps = new ArrayList<>();
@@ -46,7 +53,7 @@ public record AmplitudeSweeps(List<List<ModulusPoint>> sweeps, List<ModulusPoint
                 for (List<ModulusPoint> isotherm : isotherms(sweep)) {
                     for (List<ModulusPoint> group : byNearness(isotherm, AmplitudeSweeps::frequency)) {
                         List<List<ModulusPoint>> strains = strains(group);
-                        if (strains.size() > 1 && (kind == SweepPlan.Kind.AMPLITUDE || varies(group))) {
+                        if (strains.size() > 1 && (kind == SweepPlan.Kind.AMPLITUDE || isDriven(strains))) {
                             sweeps.add(strains.stream().flatMap(List::stream).toList());
                         }
                     }
@@ -107,13 +114,39 @@ public record AmplitudeSweeps(List<List<ModulusPoint>> sweeps, List<ModulusPoint
         return groups;
     }
 
-    private static boolean varies(List<ModulusPoint> points) {
-        return ratio(points, AmplitudeSweeps::strain) > LEAST_RATIO
-                && ratio(points, point -> point.stressAmplitudePa().orElseThrow()) > LEAST_RATIO;
+    /**
+     * Whether the strain was made to vary. Where a specimen changes by itself on a frame that gives, or at a stress that the
+     * instrument holds, stress falls or stays as strain rises.
+     */
+    private static boolean isDriven(List<List<ModulusPoint>> strains) {
+        double[] strain = means(strains, AmplitudeSweeps::strain);
+        double[] stress = means(strains, point -> point.stressAmplitudePa().orElseThrow());
+        int largest = 0;
+        for (int k = 1; k < stress.length; k++) {
+            if (stress[k] > stress[largest]) {
+                largest = k;
+            }
+        }
+        int rising = largest + 1;
+        if (rising < LEAST_STRAINS) {
+            return false;
+        }
+        double[] strainToPeak = Arrays.copyOf(strain, rising);
+        double[] stressToPeak = Arrays.copyOf(stress, rising);
+        return ratio(strainToPeak) > LEAST_RATIO
+                && ratio(stressToPeak) > LEAST_RATIO
+                && RankCorrelation.of(strainToPeak, stressToPeak) >= LEAST_CORRELATION;
     }
 
-    private static double ratio(List<ModulusPoint> points, ToDoubleFunction<ModulusPoint> figure) {
-        return points.stream().mapToDouble(figure).max().orElseThrow()
-                / points.stream().mapToDouble(figure).min().orElseThrow();
+    private static double[] means(List<List<ModulusPoint>> strains, ToDoubleFunction<ModulusPoint> figure) {
+        return strains.stream()
+                .mapToDouble(
+                        points -> points.stream().mapToDouble(figure).average().orElseThrow())
+                .toArray();
+    }
+
+    private static double ratio(double[] figures) {
+        return Arrays.stream(figures).max().orElseThrow()
+                / Arrays.stream(figures).min().orElseThrow();
     }
 }

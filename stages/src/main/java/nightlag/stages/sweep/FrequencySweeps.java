@@ -1,7 +1,10 @@
 package nightlag.stages.sweep;
 
 import java.util.Arrays;
+import java.util.Collections;
+import java.util.Comparator;
 import java.util.HashSet;
+import java.util.IdentityHashMap;
 import java.util.List;
 import java.util.Map;
 import java.util.Set;
@@ -31,6 +34,43 @@ public final class FrequencySweeps {
                 : points.stream()
                         .filter(point -> varying.contains(SweepName.of(point)))
                         .toList();
+    }
+
+    /**
+     * The points without those of amplitude sweeps, whose larger strains are past the linear range. Where a sweep's frequency
+     * would be left without a point, the sweep's point of smallest strain stays.
+     *
+     * @param points points of an isotherm
+     * @param amplitudeSweeps the lot's, holding the same objects
+     */
+    public static List<ModulusPoint> withoutAmplitudeSweeps(
+            List<ModulusPoint> points, List<List<ModulusPoint>> amplitudeSweeps) {
+        Set<ModulusPoint> swept = sameObjects();
+        amplitudeSweeps.forEach(swept::addAll);
+        List<ModulusPoint> others =
+                points.stream().filter(point -> !swept.contains(point)).toList();
+        Set<ModulusPoint> given = sameObjects();
+        given.addAll(points);
+        Set<ModulusPoint> kept = sameObjects();
+        kept.addAll(others);
+        for (List<ModulusPoint> sweep : amplitudeSweeps) {
+            sweep.stream()
+                    .filter(given::contains)
+                    .min(Comparator.comparingDouble(AmplitudeSweeps::strain))
+                    .filter(smallest -> others.stream().noneMatch(other -> isAtFrequencyOf(smallest, other)))
+                    .ifPresent(kept::add);
+        }
+        return points.stream().filter(kept::contains).toList();
+    }
+
+    private static Set<ModulusPoint> sameObjects() {
+        return Collections.newSetFromMap(new IdentityHashMap<>());
+    }
+
+    private static boolean isAtFrequencyOf(ModulusPoint one, ModulusPoint other) {
+        double first = one.frequencyHz().orElseThrow();
+        double second = other.frequencyHz().orElseThrow();
+        return Math.max(first, second) <= Math.min(first, second) * (1 + SAME_FREQUENCY);
     }
 
     /** How many different frequencies, a hundredth apart or more, the points have. */
