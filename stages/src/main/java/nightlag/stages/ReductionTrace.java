@@ -17,25 +17,30 @@ import nightlag.stages.waveform.SignalFit;
  * @param reduction what the record gave
  * @param spec the geometry as configured, the record's own dimensions laid over it; empty for given moduli
  * @param correction the way from its signals to stress and strain; empty for given moduli, and where there is none
- * @param fit the amplitudes taken out of it; empty where none could be, and where the record holds several points
+ * @param fits the amplitudes taken out of it, one fit for each of its frequencies; empty where none could be
  */
 public record ReductionTrace(
-        Reduction reduction,
-        Optional<GeometrySpec> spec,
-        Optional<SignalCorrection> correction,
-        Optional<SignalFit> fit) {
+        Reduction reduction, Optional<GeometrySpec> spec, Optional<SignalCorrection> correction, List<SignalFit> fits) {
+    /** Copies the list. */
+    public ReductionTrace {
+        fits = List.copyOf(fits);
+    }
+
     /** Reduces one record and keeps what the stages found. */
     public static ReductionTrace of(MeasuredRecord record, ReductionPlan plan) {
         Reduction reduction = Reduce.reduce(record, plan);
         if (!(record instanceof WaveformRecord waveforms)) {
-            return new ReductionTrace(reduction, Optional.empty(), Optional.empty(), Optional.empty());
+            return new ReductionTrace(reduction, Optional.empty(), Optional.empty(), List.of());
         }
         GeometrySpec spec =
                 plan.geometry().orElseGet(GeometrySpec::none).with(record.tags().dimensions());
-        Optional<SignalFit> fit = reduction.points().size() == 1
-                ? fit(waveforms, plan).filter(found -> isOf(reduction.points().get(0), found))
-                : Optional.empty();
-        return new ReductionTrace(reduction, Optional.of(spec), correction(waveforms, spec, plan), fit);
+        return new ReductionTrace(
+                reduction, Optional.of(spec), correction(waveforms, spec, plan), fits(waveforms, plan));
+    }
+
+    /** The fit one of the points was made of; empty where there was none. */
+    public Optional<SignalFit> fit(ModulusPoint point) {
+        return fits.stream().filter(fit -> isOf(point, fit)).findFirst();
     }
 
     /** What each correction comes to in one of the points. */
@@ -58,12 +63,14 @@ public record ReductionTrace(
         return point.frequencyHz().orElse(0) == fit.frequencyHz();
     }
 
-    private static Optional<SignalFit> fit(WaveformRecord record, ReductionPlan plan) {
+    private static List<SignalFit> fits(WaveformRecord record, ReductionPlan plan) {
         try {
-            return Optional.of(HarmonicAnalysis.analyse(record.waveform(), plan.extraction()));
+            return record.kind() instanceof RecordKind.OneFrequency
+                    ? List.of(HarmonicAnalysis.analyse(record.waveform(), plan.extraction()))
+                    : SeveralFrequencies.fits(record, plan);
         } catch (ReductionFault said) {
             // the reason stands with the point
-            return Optional.empty();
+            return List.of();
         }
     }
 

@@ -46,7 +46,8 @@ final class SeveralFrequencies {
         }
     }
 
-    private static List<SignalFit> fits(WaveformRecord record, ReductionPlan plan) throws ReductionFault {
+    /** The amplitudes at each frequency, the slowest first. */
+    static List<SignalFit> fits(WaveformRecord record, ReductionPlan plan) throws ReductionFault {
         if (record.kind() instanceof RecordKind.Multisine multisine) {
             return MultisineAnalysis.analyse(record.waveform(), multisine.frequenciesHz(), plan.extraction());
         }

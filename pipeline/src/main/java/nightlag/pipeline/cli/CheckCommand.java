@@ -113,18 +113,9 @@ final class CheckCommand implements Callable<Integer> {
     }
 
     private static void print(PrintWriter out, FileDescription file) {
-        out.println("  " + file.file() + ": " + file.charset() + (file.byteOrderMark() ? " by its byte-order mark" : "")
-                + ", layout " + file.layout().word()
-                + (file.headerLine() > 0 ? ", header in line " + file.headerLine() : ", no header")
-                + ", data from line " + file.firstDataLine());
+        out.println("  " + file.file() + ": " + DecodingWords.head(file));
         for (DescribedChannel channel : file.channels()) {
-            out.println("  " + channel.name().word() + " from column " + channel.column()
-                    + channel.header().map(header -> " '" + header + "'").orElse("") + " in " + channel.unit() + " ("
-                    + channel.unitFrom() + "): "
-                    + channel.firstValues().stream()
-                            .map(value -> value.map(Figures::sevenDigits).orElse("empty"))
-                            .collect(Collectors.joining(", "))
-                    + " " + channel.si());
+            out.println("  " + channel.name().word() + " from " + DecodingWords.channel(channel));
         }
         for (DescribedTag tag : file.tags()) {
             out.println("  " + tag.name().word() + " = " + tag.text()

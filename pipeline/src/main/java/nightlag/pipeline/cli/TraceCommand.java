@@ -21,7 +21,8 @@ import picocli.CommandLine.Spec;
         name = "trace",
         description = {
             "Takes one raw file through the stages up to its flags, shows what each stage was given, did and found, and names"
-                    + " the lot its points would join. Writes nothing."
+                    + " the lot its points would join. Writes nothing.",
+            "The archive is not asked: a run sets the file aside if its lot differs only in case from one already known."
         },
         mixinStandardHelpOptions = true,
         versionProvider = Nightlag.Version.class,

@@ -11,6 +11,7 @@ import java.util.stream.Collectors;
 import nightlag.pipeline.decode.DecodeCounts;
 import nightlag.pipeline.decode.FileDescription;
 import nightlag.pipeline.night.FileTrace;
+import nightlag.stages.RecordKind;
 import nightlag.stages.ReductionTrace;
 import nightlag.stages.WaveformRecord;
 import nightlag.stages.fault.Reason;
@@ -70,24 +71,9 @@ final class TracePage {
                 "file",
                 file.file() + ", instrument "
                         + trace.file().intake().instrument().id());
-        line(
-                "decoding",
-                file.charset() + (file.byteOrderMark() ? " by its byte-order mark" : "") + ", layout "
-                        + file.layout().word()
-                        + (file.headerLine() > 0 ? ", header in line " + file.headerLine() : ", no header")
-                        + ", data from line " + file.firstDataLine());
+        line("decoding", DecodingWords.head(file));
         for (FileDescription.DescribedChannel channel : file.channels()) {
-            line(
-                    "  " + channel.name().word(),
-                    "column " + channel.column()
-                            + channel.header()
-                                    .map(header -> " '" + header + "'")
-                                    .orElse("") + " in " + channel.unit() + " (" + channel.unitFrom() + "): "
-                            + channel.firstValues().stream()
-                                    .map(value ->
-                                            value.map(Figures::sevenDigits).orElse("empty"))
-                                    .collect(Collectors.joining(", "))
-                            + " … " + channel.si());
+            line("  " + channel.name().word(), DecodingWords.channel(channel));
         }
         for (FileDescription.DescribedTag tag : file.tags()) {
             line(
@@ -99,8 +85,10 @@ final class TracePage {
     private void rows(DecodeCounts counts) {
         line(
                 "rows",
-                counts.rows() + " read, " + counts.used() + " used, " + counts.leftOut()
-                        + " left out for an empty cell; " + counts.records()
+                counts.rows() + " read, " + counts.used() + " used, " + (counts.leftOut() - counts.outsideWindows())
+                        + " left out for an empty cell"
+                        + (counts.outsideWindows() > 0 ? ", " + counts.outsideWindows() + " outside the windows" : "")
+                        + "; " + counts.records()
                         + (counts.records() == 1 ? " record" : " records"));
     }
 
@@ -155,27 +143,14 @@ final class TracePage {
     }
 
     private void signal(ReductionTrace followed, ModulusPoint point) {
-        OptionalDouble tag = trace.record()
-                .filter(WaveformRecord.class::isInstance)
-                .map(record -> ((WaveformRecord) record).waveform().nominalFrequencyHz())
-                .orElse(OptionalDouble.empty());
+        Optional<SignalFit> fit = followed.fit(point);
         point.frequencyHz()
-                .ifPresent(frequency -> line(
-                        "frequency",
-                        digits("%.9g", frequency) + " Hz"
-                                + followed.fit()
-                                        .map(fit -> ", u " + digits(SHORT, fit.frequencyUHz()) + " Hz")
-                                        .orElse("")
-                                + (tag.isPresent()
-                                        ? "; the tag says " + digits(LONG, tag.getAsDouble()) + " Hz, off by "
-                                                + digits("%.2g", frequency / tag.getAsDouble() - 1) + " of it"
-                                        : "; no tag")));
+                .ifPresent(frequency -> line("frequency", digits("%.9g", frequency) + " Hz" + said(frequency, fit)));
         if (point.cyclesUsed().isPresent()) {
             line(
                     "signal",
                     digits(LONG, point.cyclesUsed().getAsDouble()) + " cycles, " + point.samplesUsed() + " samples used"
-                            + followed.fit()
-                                    .map(SignalFit::samplesLeftOut)
+                            + fit.map(SignalFit::samplesLeftOut)
                                     .map(left -> ", " + left + " left out")
                                     .orElse("")
                             + "; signal to noise " + decibel(point.strainSnrDb()) + " deformation, "
@@ -189,6 +164,31 @@ final class TracePage {
                                 + " from cycle to cycle"));
         point.temperatureK()
                 .ifPresent(kelvin -> line("temperature", digits(LONG, kelvin - KELVIN_AT_ZERO_CELSIUS) + " °C"));
+    }
+
+    /** The frequency's u, and what the file or the instrument file says of it. */
+    private String said(double frequencyHz, Optional<SignalFit> fit) {
+        if (trace.record().isEmpty() || !(trace.record().get() instanceof WaveformRecord record)) {
+            return "";
+        }
+        if (record.kind() instanceof RecordKind.Chirp chirp) {
+            return ", one of " + digits(LONG, chirp.pointsPerDecade()) + " to the decade of the sweep";
+        }
+        String u = fit.map(found -> ", u " + digits(SHORT, found.frequencyUHz()) + " Hz")
+                .orElse("");
+        if (record.kind() instanceof RecordKind.Multisine multisine) {
+            return u
+                    + multisine.frequenciesHz().stream()
+                            .min(Comparator.comparing(given -> Math.abs(Math.log(given / frequencyHz))))
+                            .map(given -> "; [records] frequencies says " + off(frequencyHz, given))
+                            .orElse("; found, [records] frequencies is not given");
+        }
+        OptionalDouble tag = record.waveform().nominalFrequencyHz();
+        return u + (tag.isPresent() ? "; the tag says " + off(frequencyHz, tag.getAsDouble()) : "; no tag");
+    }
+
+    private static String off(double frequencyHz, double saidHz) {
+        return digits(LONG, saidHz) + " Hz, off by " + digits("%.2g", frequencyHz / saidHz - 1) + " of it";
     }
 
     private void moduli(ModulusPoint point) {
@@ -246,6 +246,7 @@ final class TracePage {
                 "lot",
                 "its points would join " + key.grade() + ", lot " + key.lot() + ": specimen " + key.specimen()
                         + ", sweep " + key.sweep() + ", point " + key.point());
+        line("", "the archive is not asked: a known lot that differs only in case would set it aside");
     }
 
     private void others() {

@@ -42,7 +42,9 @@ final class Describing {
             }
         }
         Layout layout = file.intake().instrument().records().layout();
-        addDefaults(values, facts, layout, firstDataLine);
+        if (firstDataLine > 0) {
+            addDefaults(values, facts, layout, firstDataLine);
+        }
         return new FileDescription(
                 file.tableName(),
                 table.charset().name(),
@@ -98,7 +100,7 @@ final class Describing {
 
     private static String defaultPoint(Layout layout) {
         return switch (layout) {
-            case SINGLE -> "default, the file's name";
+            case SINGLE, MULTISINE, CHIRP -> "default, the file's name";
             case ROLLING -> "default, the window";
             default -> "default, the row";
         };

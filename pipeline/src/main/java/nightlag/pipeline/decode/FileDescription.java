@@ -15,9 +15,9 @@ import nightlag.pipeline.config.TagName;
  * @param layout how records stand in it
  * @param headerLine line of the header; 0: there is none
  * @param columns header texts in order; empty without a header
- * @param firstDataLine line of the first row
+ * @param firstDataLine line of the first row; 0: there is none
  * @param channels the channels, in the order of {@link ChannelName}
- * @param tags every fact that is set or has a default, in the order of {@link TagName}
+ * @param tags every fact that is set or, where there are rows, has a default, in the order of {@link TagName}
  */
 public record FileDescription(
         String file,

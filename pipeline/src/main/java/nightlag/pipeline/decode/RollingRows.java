@@ -2,6 +2,7 @@ package nightlag.pipeline.decode;
 
 import java.util.Arrays;
 import java.util.EnumMap;
+import java.util.Locale;
 import java.util.Map;
 import java.util.OptionalDouble;
 import nightlag.pipeline.config.RecordFormat;
@@ -26,6 +27,8 @@ final class RollingRows implements RowTaker {
     private static final double LEAST_COVERED = 0.5;
     /** The last row of a full window lies this many sampling intervals before its end at most. */
     private static final double INTERVALS_TO_THE_END = 1.5;
+    /** A row behind more windows than this after the first one is a fault of the clock, not a measurement. */
+    private static final double MOST_WINDOWS = 1e9;
 
     private final FileFacts facts;
     private final RecordFormat format;
@@ -84,6 +87,7 @@ final class RollingRows implements RowTaker {
         if (!begun) {
             begin(timeS, line);
         }
+        checkReach(timeS, cells, line);
         while (samples.size() > 0 && timeS >= endS(window)) {
             handOver(samples.size(), LEAST_COVERED * windowS());
             window++;
@@ -140,8 +144,35 @@ final class RollingRows implements RowTaker {
                             Describing.toTenDigits(frequencyHz) + " Hz",
                             "a frequency above 0");
         }
+        if (Double.isInfinite(windowS()) || Double.isInfinite(advanceS())) {
+            throw facts.complaints()
+                    .at(
+                            line,
+                            "tag " + TagName.FREQUENCY.word(),
+                            frequencyHz + " Hz, too slow for a window's length to be a number",
+                            "the frequency the record was driven at");
+        }
         beginS = timeS;
         begun = true;
+    }
+
+    /** Windows can be counted up to this time, and follow one another as numbers do there. */
+    private void checkReach(double timeS, Cells cells, int line) throws DecodeException {
+        double windows = (timeS - beginS) / advanceS();
+        if (!(windows <= MOST_WINDOWS)) {
+            throw columns.clockComplaint(
+                    cells,
+                    line,
+                    String.format(Locale.ROOT, "a time so far from the first row (%.3g windows)", windows),
+                    String.format(Locale.ROOT, "a time at most %.0f windows after it", MOST_WINDOWS));
+        }
+        if (Math.ulp(timeS) >= Math.min(windowS(), advanceS())) {
+            throw columns.clockComplaint(
+                    cells,
+                    line,
+                    "a time so large that no two within a window can be told apart",
+                    "a clock that begins nearer to 0");
+        }
     }
 
     private double rate(int line) throws DecodeException {
@@ -155,8 +186,12 @@ final class RollingRows implements RowTaker {
         return format.windowCycles() / frequencyHz;
     }
 
+    private double advanceS() {
+        return format.advanceCycles() / frequencyHz;
+    }
+
     private double beginS(long number) {
-        return beginS + number * (format.advanceCycles() / frequencyHz) - AT_THE_EDGE * windowS();
+        return beginS + number * advanceS() - AT_THE_EDGE * windowS();
     }
 
     private double endS(long number) {
@@ -165,8 +200,8 @@ final class RollingRows implements RowTaker {
 
     /** To the first window that ends after a time, over a gap in the clock at once. */
     private void skipTo(double timeS) {
-        double passed = (timeS - endS(0)) * frequencyHz / format.advanceCycles();
-        window = Math.max(window, (long) Math.min(Math.floor(passed) + 1, 1e15));
+        double passed = (timeS - endS(0)) / advanceS();
+        window = Math.max(window, (long) Math.floor(passed) + 1);
     }
 
     private void add(double timeS) {

@@ -128,6 +128,15 @@ final class SignalColumns {
         return rate.getAsDouble();
     }
 
+    /** A complaint about the time of a row: its cell's, or that of the rate it was made of. */
+    DecodeException clockComplaint(Cells cells, int line, String found, String expected) {
+        if (time.isEmpty()) {
+            return facts.complaints().at(line, "tag " + TagName.SAMPLE_RATE.word(), found, expected);
+        }
+        ChannelColumn clock = time.get();
+        return clock.spot(line).complaint(Complaints.shown(cells.text(clock.index())) + ", " + found, expected);
+    }
+
     /** A frequency in a column of samples is the one the record was driven at; an empty cell says nothing. */
     private void takeFrequency(ChannelColumn column, Cells cells, int line) throws DecodeException {
         double hz = column.read(cells, line);

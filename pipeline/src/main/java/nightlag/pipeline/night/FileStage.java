@@ -23,7 +23,7 @@ import nightlag.pipeline.night.Survey.Task;
 import nightlag.pipeline.tables.NightFileRow;
 import nightlag.pipeline.tables.NightFileRow.Status;
 
-/** The first half of a night: every file of the intakes ends with a status, what is new is in the night.archive(). */
+/** The first half of a night: every file of the intakes ends with a status, what is new is in the archive. */
 final class FileStage {
     /** Files a commit holds at most: each costs a wait for the disk, and a kill loses no more than these. */
     private static final int FILES_PER_COMMIT = 64;

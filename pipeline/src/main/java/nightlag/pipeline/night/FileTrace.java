@@ -6,6 +6,7 @@ import java.nio.file.Path;
 import java.util.ArrayList;
 import java.util.List;
 import java.util.Optional;
+import java.util.function.BiFunction;
 import java.util.stream.Collectors;
 import nightlag.pipeline.config.Configuration;
 import nightlag.pipeline.config.Intake;
@@ -53,16 +54,26 @@ public record FileTrace(
     }
 
     /**
-     * Follows one file.
+     * Follows one file. The archive is not asked: whether the file's lot differs only in case from a known one stays open.
      *
      * @param name the file's name in tables, or a path to it
      * @param wanted the point to pick; empty: the first
      * @throws NightFault if the file is in no intake, or has no such point
      */
     public static FileTrace of(Configuration configuration, String name, Optional<String> wanted) throws NightFault {
+        return of(configuration, name, wanted, Reduce::reduce);
+    }
+
+    /** The same with the stages given. */
+    static FileTrace of(
+            Configuration configuration,
+            String name,
+            Optional<String> wanted,
+            BiFunction<MeasuredRecord, ReductionPlan, Reduction> stages)
+            throws NightFault {
         RawFile file = find(configuration, name);
         Optional<FileDescription> description = Optional.empty();
-        Following following = new Following(configuration, file, wanted);
+        Following following = new Following(configuration, file, wanted, stages);
         try {
             Optional<RunSheetRow> row = new RunSheets().rowOf(file);
             description = Optional.of(RawFileDecoder.describe(file, row));
@@ -77,6 +88,9 @@ public record FileTrace(
                     description, Optional.empty(), file.tableName() + ": cannot be read: " + IoSentences.of(e));
         } catch (InvalidPathException e) {
             return following.end(description, Optional.empty(), file.tableName() + ": " + IoSentences.of(e));
+        } catch (RuntimeException | StackOverflowError e) {
+            // as in a run, a bug sets the file aside
+            return following.end(description, Optional.empty(), file.tableName() + ": internal fault: " + e);
         }
     }
 
@@ -85,20 +99,26 @@ public record FileTrace(
         private final RawFile file;
         private final GradePlans plans;
         private final Optional<String> wanted;
+        private final BiFunction<MeasuredRecord, ReductionPlan, Reduction> stages;
         private final List<ModulusPoint> others = new ArrayList<>();
         private Optional<MeasuredRecord> record = Optional.empty();
         private Optional<ReductionTrace> followed = Optional.empty();
         private Optional<ModulusPoint> point = Optional.empty();
 
-        Following(Configuration configuration, RawFile file, Optional<String> wanted) {
+        Following(
+                Configuration configuration,
+                RawFile file,
+                Optional<String> wanted,
+                BiFunction<MeasuredRecord, ReductionPlan, Reduction> stages) {
             this.file = file;
             this.plans = new GradePlans(configuration, file.intake().instrument());
             this.wanted = wanted;
+            this.stages = stages;
         }
 
         void take(MeasuredRecord next) {
             ReductionPlan plan = plans.of(next.tags().key().grade());
-            Reduction reduction = Reduce.reduce(next, plan);
+            Reduction reduction = stages.apply(next, plan);
             for (ModulusPoint found : reduction.points()) {
                 if (point.isEmpty()
                         && wanted.orElse(found.key().point()).equals(found.key().point())) {

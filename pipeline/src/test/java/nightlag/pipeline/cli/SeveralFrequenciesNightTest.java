@@ -152,6 +152,42 @@ class SeveralFrequenciesNightTest {
     }
 
     @Test
+    void traceShowsEachPointWithItsOwnFit() {
+        instrument("layout = \"multisine\"\nfrequencies = [\"4.5 Hz\", \"0.5 Hz\", \"1 Hz\", \"2 Hz\"]");
+        lab.write("bench/mix.csv", multisine());
+        Lab.Ended given = lab.command("trace", "--point", "mix-02", "bench/mix.csv");
+        assertThat(given.out()).contains("  point      mix, from default, the file's name");
+        assertThat(given.out().lines())
+                .anyMatch(line -> line.startsWith("frequency    1 Hz, u ")
+                        && line.contains(" Hz; [records] frequencies says 1 Hz, off by "))
+                .anyMatch(line -> line.startsWith("signal       10 cycles, 1000 samples used, 0 left out"));
+
+        instrument("layout = \"multisine\"");
+        assertThat(lab.command("trace", "bench/mix.csv").out().lines())
+                .anyMatch(line -> line.startsWith("frequency    0.5 Hz, u ")
+                        && line.endsWith("; found, [records] frequencies is not given"));
+    }
+
+    @Test
+    void traceKeepsAMultisineOfOneToneToItsKind() {
+        instrument("layout = \"multisine\"\nfrequencies = [\"1 Hz\"]");
+        lab.write("bench/one.csv", Lab.recordText("plover", "L1", 1, 1));
+        assertThat(lab.command("trace", "bench/one.csv").out().lines())
+                .anyMatch(line ->
+                        line.startsWith("frequency    1 Hz, u ") && line.contains("[records] frequencies says 1 Hz"));
+    }
+
+    @Test
+    void traceOfAChirpShowsNoUncertaintyOfAChosenFrequency() {
+        instrument("layout = \"chirp\"\npoints_per_decade = 5");
+        lab.write("bench/sweep.csv", chirp());
+        assertThat(lab.command("trace", "bench/sweep.csv").out().lines())
+                .anyMatch(line ->
+                        line.startsWith("frequency    ") && line.endsWith(" Hz, one of 5 to the decade of the sweep"))
+                .anyMatch(line -> line.startsWith("signal       ") && line.contains(" left out; signal to noise "));
+    }
+
+    @Test
     void aRecordThatIsNotWhatItIsSaidToBeIsAnUnusablePoint() {
         instrument("layout = \"chirp\"");
         lab.write("bench/mix.csv", multisine());

@@ -219,6 +219,52 @@ class TraceTest {
     }
 
     @Test
+    void aFileWithAHeaderOnlyShowsNoRows() {
+        lab.write("bench/L1/empty.csv", "grade,plover\nlot,L1\nf,1\nt,strain,stress\n");
+        Lab.Ended trace = lab.command("trace", "bench/L1/empty.csv");
+        assertThat(trace.exitCode()).isEqualTo(1);
+        assertThat(trace.out().lines())
+                .contains(
+                        "decoding     UTF-8, layout single, header in line 4, no rows of data",
+                        "  time       column 1 't' in s ([channels])")
+                .anyMatch(line -> line.startsWith("set aside") && line.contains("no rows below the header"));
+        assertThat(trace.out()).doesNotContain("line 0").doesNotContain("…");
+
+        for (int i = 1; i <= 6; i++) {
+            lab.write("bench/L1/p" + i + ".csv", "grade,plover\nlot,L1\nf,1\nt,strain,stress\n");
+        }
+        assertThat(lab.command("check").out())
+                .contains("header in line 4, no rows of data")
+                .doesNotContain("line 0");
+    }
+
+    @Test
+    void rowsOutsideTheWindowsOfALongRecordAreToldApart() {
+        lab.write(
+                "config/instruments/bench.toml",
+                lab.read("config/instruments/bench.toml")
+                        .replace(
+                                "[channels]",
+                                "[records]\nlayout = \"rolling\"\nwindow = 2\nadvance = 3\n\n[channels]"));
+        lab.write(
+                "bench/L1/p1.csv",
+                Lab.recordText("plover", "L1", 1, 1).replaceFirst("0.015625,[^,]*,[^\n]*\n", "0.015625,,1\n"));
+
+        // 4 cycles of 64 rows: the window takes two, the other two are outside
+        Lab.Ended trace = lab.command("trace", "bench/L1/p1.csv");
+        assertThat(trace.out().lines())
+                .contains(
+                        "rows         256 read, 127 used, 1 left out for an empty cell, 128 outside the windows; 1 record");
+    }
+
+    @Test
+    void theArchiveIsNotAskedAndThatIsSaid() {
+        assertThat(lab.command("trace", "bench/L1/p1.csv").out().lines())
+                .contains(
+                        "             the archive is not asked: a known lot that differs only in case would set it aside");
+    }
+
+    @Test
     void aWrongConfigurationStopsIt() {
         lab.write("config/instruments/bench.toml", "nam = 3\n");
 
@@ -235,6 +281,8 @@ class TraceTest {
         assertThat(Nightlag.execute(new PrintWriter(out, true), new PrintWriter(err, true), "help", "trace"))
                 .isZero();
         assertThat(out.toString()).contains("nightlag trace [-hV] [--point=P] [NIGHT.toml] FILE");
+        assertThat(out.toString().replaceAll("\\s+", " "))
+                .contains("The archive is not asked: a run sets the file aside if its lot differs only in case");
         assertThat(Nightlag.execute(new PrintWriter(out, true), new PrintWriter(err, true), "trace"))
                 .isEqualTo(2);
     }

@@ -298,6 +298,46 @@ class BadFileTest {
                         "10003 cells",
                         "at most 10000"),
                 fault(
+                        "clock that leaps beyond all windows",
+                        BadFileTest::rolling,
+                        "t;phi;M|0;1;2|0,5;1;2|1;1;2|1e30;1;2|2e30;1;2|3e30;1;2",
+                        5,
+                        "column 't'",
+                        "'1e30', a time so far from the first row (3.33e+29 windows)",
+                        "at most 1000000000 windows after it"),
+                fault(
+                        "clock too coarse for its windows",
+                        BadFileTest::rolling,
+                        "t;phi;M|1e30;1;2|2e30;1;2|3e30;1;2",
+                        2,
+                        "column 't'",
+                        "'1e30', a time so large",
+                        "nearer to 0"),
+                fault(
+                        "clock from end to end of the numbers",
+                        BadFileTest::rolling,
+                        "t;phi;M|0;1;2|1,7e308;1;2",
+                        3,
+                        "column 't'",
+                        "'1,7e308', a time so far from the first row",
+                        "windows after it"),
+                fault(
+                        "rate too slow for a window",
+                        bench -> rolling(bench).without(ChannelName.TIME).preamble(TagName.SAMPLE_RATE, "rate", "Hz"),
+                        "rate: 1e-30|t;phi;M|0;1;2|1;1;2|2;1;2",
+                        4,
+                        "tag sample_rate",
+                        "a time so far from the first row (3.33e+29 windows)",
+                        "windows after it"),
+                fault(
+                        "frequency too slow for a window",
+                        bench -> rolling(bench).preamble(TagName.FREQUENCY, "f", "Hz"),
+                        "f: 1e-310|t;phi;M|0;1;2|1;1;2|2;1;2",
+                        3,
+                        "tag frequency",
+                        "too slow",
+                        "the frequency the record was driven at"),
+                fault(
                         "layout to come",
                         bench -> bench.layout(Layout.CREEP),
                         "t;phi;M|0;1;2",
@@ -396,6 +436,10 @@ class BadFileTest {
     private static Bench columnLayout(Bench bench) {
         return bench.layout(Layout.COLUMN)
                 .tag(TagName.POINT, new TagSource.DataColumn(ColumnRef.named("p"), java.util.Optional.empty()));
+    }
+
+    private static Bench rolling(Bench bench) {
+        return bench.rolling(6, 3).fixed(TagName.FREQUENCY, "1 Hz");
     }
 
     private static Bench moduli(Bench bench) {

@@ -20,6 +20,7 @@ import nightlag.pipeline.intake.RawFile;
 import nightlag.stages.WaveformRecord;
 import nightlag.stages.waveform.Waveform;
 import org.junit.jupiter.api.Test;
+import org.junit.jupiter.api.Timeout;
 import org.junit.jupiter.api.io.TempDir;
 import org.junit.jupiter.params.ParameterizedTest;
 import org.junit.jupiter.params.provider.ValueSource;
@@ -117,6 +118,30 @@ class RollingRowsTest {
         assertThat(points(decoded).subList(0, 2)).containsExactly("1", "2");
         assertThat(points(decoded).get(2)).isEqualTo(Long.toString(Math.round(Math.floor(1e7 / 3)) + 1));
         assertThat(decoded.counts().rows()).isEqualTo(96);
+    }
+
+    @Test
+    @Timeout(value = 20, threadMode = Timeout.ThreadMode.SEPARATE_THREAD)
+    void aClockThatLeapsEndsAtOnce() {
+        List<String> lines = new ArrayList<>(List.of(file(clock(0, 1000))));
+        lines.addAll(List.of("1e30;1;2", "2e30;1;2", "3e30;1;2"));
+        assertThatThrownBy(() -> Bench.decode(bench().write("ramp.csv", lines.toArray(String[]::new))))
+                .isInstanceOfSatisfying(
+                        DecodeException.class,
+                        e -> assertThat(e.problem().sentence())
+                                .contains("line 1002", "column 't'", "so far from the first row"));
+    }
+
+    @Test
+    @Timeout(value = 20, threadMode = Timeout.ThreadMode.SEPARATE_THREAD)
+    void farFromZeroWindowsFollowOneAnotherAsNumbersDo() throws Exception {
+        // 2⁵³ s: numbers stand 2 s apart, nearer than windows do
+        double far = 0x1p53;
+        double[] times = new double[60];
+        Arrays.setAll(times, i -> far + 2 * i);
+        Bench.Decoded decoded = Bench.decode(bench().write("ramp.csv", file(times)));
+        assertThat(decoded.counts().rows()).isEqualTo(60);
+        assertThat(decoded.counts().records()).isPositive();
     }
 
     @Test
