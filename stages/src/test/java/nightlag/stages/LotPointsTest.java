@@ -197,6 +197,16 @@ class LotPointsTest {
         assertThat(corrected(conclude(yielding, AUTO))).isEqualTo(9);
     }
 
+    @Test
+    void aSweepOfAYieldingPasteIsOneThoughItsStressHardlyRises() {
+        List<ModulusPoint> yielding = softening(PLATES, 2, 2.5, 3.2, 4, 5);
+        double first = yielding.get(0).stressAmplitudePa().orElseThrow();
+        double last = yielding.get(4).stressAmplitudePa().orElseThrow();
+
+        assertThat(last / first).isBetween(1.2, 1.3);
+        assertThat(corrected(conclude(yielding, AUTO))).isEqualTo(5);
+    }
+
     private static final RelaxationModes FOUR =
             RelaxationModes.of(0, new double[] {0.01, 0.1, 1, 10}, new double[] {1e5, 2e4, 3e3, 200});
 

@@ -23,8 +23,10 @@ import nightlag.stages.numeric.RankCorrelation;
 public record AmplitudeSweeps(List<List<ModulusPoint>> sweeps, List<ModulusPoint> others) {
     /** Strains and frequencies this close, relatively, are one. */
     private static final double SAME = 0.01;
-    /** Strain and stress must both vary by more: in a run at constant stress the strain follows the modulus. */
-    private static final double LEAST_RATIO = 1.5;
+    /** The strain must vary by more. */
+    private static final double LEAST_STRAIN_RATIO = 1.5;
+    /** And the stress by more: in a run at constant stress the strain follows the modulus. A paste that yields needs little. */
+    private static final double LEAST_STRESS_RATIO = 1.2;
     /** Two points rise or fall by chance, and two frequency sweeps at two strains are no amplitude sweeps. */
     private static final int LEAST_STRAINS = 3;
     /** Of the ranks of strain and stress: nearly every larger strain has a larger stress. */
@@ -41,8 +43,8 @@ public record AmplitudeSweeps(List<List<ModulusPoint>> sweeps, List<ModulusPoint
      *
      * @param points the lot's points
      * @param kind what varies, as configured; {@code AUTO}: over three strains or more, up to that of the largest stress,
-     *     strain and stress must both vary by more than a factor of 1.5 and the stress must rise with the strain; beyond it a
-     *     specimen may yield or slip; {@code AMPLITUDE}: every group of two strains is a sweep; else there are none
+     *     the strain must vary by more than a factor of 1.5, the stress by more than 1.2, and the stress must rise with the
+     *     strain; beyond it a specimen may yield or slip; {@code AMPLITUDE}: every group of two strains is a sweep; else there are none
      */
     public static AmplitudeSweeps among(List<ModulusPoint> points, SweepPlan.Kind kind) {
         List<List<ModulusPoint>> sweeps = new ArrayList<>();
@@ -133,8 +135,8 @@ public record AmplitudeSweeps(List<List<ModulusPoint>> sweeps, List<ModulusPoint
         }
         double[] strainToPeak = Arrays.copyOf(strain, rising);
         double[] stressToPeak = Arrays.copyOf(stress, rising);
-        return ratio(strainToPeak) > LEAST_RATIO
-                && ratio(stressToPeak) > LEAST_RATIO
+        return ratio(strainToPeak) > LEAST_STRAIN_RATIO
+                && ratio(stressToPeak) > LEAST_STRESS_RATIO
                 && RankCorrelation.of(strainToPeak, stressToPeak) >= LEAST_CORRELATION;
     }
 

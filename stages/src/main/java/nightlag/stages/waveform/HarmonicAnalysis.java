@@ -6,6 +6,7 @@ import java.util.Comparator;
 import java.util.List;
 import java.util.Optional;
 import java.util.OptionalDouble;
+import java.util.function.BiFunction;
 import nightlag.stages.fault.Reason;
 import nightlag.stages.fault.ReductionFault;
 import nightlag.stages.numeric.Complex;
@@ -244,8 +245,7 @@ public final class HarmonicAnalysis {
         int degree = plan.drift().degree();
         double omega = exact
                 ? start
-                : new JointFit(samples, 1, degree)
-                        .roughlyRefined(start)
+                : orAtFixed(new JointFit(samples, 1, degree), JointFit::roughlyRefined, start)
                         .orElseThrow(() -> new ReductionFault(notSeparable(start, clock)))
                         .angularFrequency();
         if (atHalfTheSampling(omega, clock)) {
@@ -259,8 +259,9 @@ public final class HarmonicAnalysis {
         }
         for (int harmonics = separable; harmonics >= 1; harmonics--) {
             JointFit fit = new JointFit(samples, harmonics, degree);
-            Optional<JointFit.Result> result =
-                    exact ? atTag(fit, samples, clock, omega) : refined(fit, samples, omega, cycles);
+            Optional<JointFit.Result> result = exact
+                    ? atTag(fit, samples, clock, omega)
+                    : orAtFixed(fit, (joint, from) -> refined(joint, samples, from, cycles), omega);
             if (result.isPresent()) {
                 if (harmonics < orders) {
                     notes.add(WaveformReason.WAVEFORM_ORDERS_NOT_SEPARABLE.with(
@@ -271,6 +272,16 @@ public final class HarmonicAnalysis {
             }
         }
         throw new ReductionFault(WaveformReason.WAVEFORM_NOT_SEPARABLE.with());
+    }
+
+    /**
+     * A refined fit; in a window of a longer record, where none is found because the amplitudes change so much, the fit at the
+     * frequency to start from: the frequency is then found with the change ({@link WindowFit}).
+     */
+    private Optional<JointFit.Result> orAtFixed(
+            JointFit fit, BiFunction<JointFit, Double, Optional<JointFit.Result>> refinement, double start) {
+        Optional<JointFit.Result> refined = refinement.apply(fit, start);
+        return refined.isPresent() || !waveform.isWindow() ? refined : fit.atFixed(start);
     }
 
     private Fitted withTrend(Fitted constant, double cycles) {

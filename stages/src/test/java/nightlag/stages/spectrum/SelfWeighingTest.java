@@ -4,17 +4,18 @@ import static org.assertj.core.api.Assertions.assertThat;
 
 import java.util.ArrayList;
 import java.util.List;
-import java.util.Locale;
 import java.util.Map;
 import java.util.Optional;
 import java.util.OptionalInt;
 import java.util.Random;
 import java.util.TreeMap;
 import java.util.stream.IntStream;
+import nightlag.stages.Study;
 import nightlag.stages.fault.ReductionFault;
 import nightlag.stages.moduli.Marker;
 import nightlag.stages.moduli.Moduli;
 import nightlag.stages.numeric.Complex;
+import org.junit.jupiter.api.Tag;
 import org.junit.jupiter.api.Test;
 import org.junit.jupiter.params.ParameterizedTest;
 import org.junit.jupiter.params.provider.MethodSource;
@@ -22,11 +23,11 @@ import org.junit.jupiter.params.provider.MethodSource;
 /**
  * Moduli without uncertainties: how their errors grow is read off their scatter, and what is derived from them is as sure as
  * it is said to be, by Monte Carlo over a fixed list of seeds: few of them in a build, and with
- * {@code mvn -pl stages test -Dtest=SelfWeighingTest -Dnightlag.study=true} 200 and the table on the console.
+ * {@code mvn test -pl stages -Dtest=SelfWeighingTest -Dnightlag.study=long} 200 and the table on the console.
  */
+@Tag("study")
 class SelfWeighingTest {
-    private static final boolean STUDY = Boolean.getBoolean("nightlag.study");
-    private static final int SEEDS = STUDY ? 200 : 25;
+    private static final int SEEDS = Study.draws(25, 200);
 
     private static final RelaxationModes LIQUID =
             RelaxationModes.of(0, new double[] {1e-3, 1e-2, 1e-1, 1, 10}, new double[] {1e5, 5e4, 2e4, 5e3, 500});
@@ -93,15 +94,7 @@ class SelfWeighingTest {
             List<Double> sizes = marker.getValue();
             int held = (int) sizes.stream().filter(z -> z < 1.96).count();
             double worst = sizes.stream().mapToDouble(z -> z).max().orElseThrow();
-            if (STUDY) {
-                System.out.println(String.format(
-                        Locale.ROOT,
-                        "%-32s %-24s within 95 %%: %5.1f %%, worst |z| %.2f",
-                        drawn,
-                        marker.getKey(),
-                        100.0 * held / sizes.size(),
-                        worst));
-            }
+            Study.row("| %s | `%s` | %.1f | %.2f |", drawn, marker.getKey(), 100.0 * held / sizes.size(), worst);
             assertThat(worst).as(marker.getKey()).isLessThan(5);
             within += held;
             all += sizes.size();

@@ -8,11 +8,13 @@ import java.util.List;
 import java.util.OptionalDouble;
 import java.util.Random;
 import java.util.function.DoubleUnaryOperator;
+import nightlag.stages.Study;
 import nightlag.stages.SweepPoint;
 import nightlag.stages.moduli.Harmonic;
 import nightlag.stages.moduli.Moduli;
 import nightlag.stages.moduli.ModulusPoint;
 import nightlag.stages.numeric.Complex;
+import org.junit.jupiter.api.Tag;
 import org.junit.jupiter.api.Test;
 import org.junit.jupiter.params.ParameterizedTest;
 import org.junit.jupiter.params.provider.CsvSource;
@@ -22,6 +24,7 @@ import org.junit.jupiter.params.provider.ValueSource;
  * The material σ = G γ/(1 + γ²) between parallel plates, for which everything is known in closed form (exact): with
  * s = √(1 + γ₀²) and ρ = ((s − 1)/γ₀)² the moduli of the odd orders n = 2k + 1 at the rim are G'ₙ = G ρᵏ(1 − ρ)/s, and the
  * plates show 4/γ₀⁴ ∫ G'ₙ γ³ dγ. A constant loss modulus stands beside it.
+ * {@code mvn test -pl stages -Dtest=PlateRimValidationTest -Dnightlag.study=long} prints what the correction costs and leaves.
  */
 class PlateRimValidationTest {
     private static final double G = 1000;
@@ -137,6 +140,58 @@ class PlateRimValidationTest {
         }
         assertThat((double) covered / (draws * strains.size())).isBetween(0.93, 0.99);
         assertThat(Math.sqrt(third)).isBetween(0.7, 1.4);
+    }
+
+    /**
+     * What the correction leaves and what it costs, over draws: rms of |ΔG*|/|G*| and the published u over the point's own,
+     * inside and at the last strain, where the slope is known from one side only.
+     */
+    @Tag("study")
+    @ParameterizedTest(name = "noise {0}, linear throughout: {1}")
+    @CsvSource({
+        "0,     false, 2e-4,   3e-3,   NaN, NaN",
+        "0.001, false, 2.5e-3, 8e-3,   2.2, 6",
+        "0.01,  false, 2e-2,   4.5e-2, 1.5, 3.5",
+        "0.001, true,  1.6e-3, 1.8e-3, 1.1, 1.2"
+    })
+    void theCorrectionCostsAndLeavesLittle(
+            double u, boolean linear, double inside, double atLast, double priceInside, double priceAtLast) {
+        DoubleUnaryOperator shown = linear ? strain -> 900 : strain -> apparent(1, strain);
+        DoubleUnaryOperator truth = linear ? strain -> 900 : strain -> rim(1, strain);
+        List<Double> strains = strains(0.01, 10, 10);
+        int last = strains.size() - 1;
+        int draws = u == 0 ? 1 : Study.draws(40, 400);
+        double[] squares = new double[2];
+        double[] price = new double[2];
+        for (int seed = 0; seed < draws; seed++) {
+            List<ModulusPoint> apparent = sweep(strains, u, 100 + seed, shown);
+            List<ModulusPoint> corrected = PlateRim.corrected(apparent);
+            for (int i = 0; i <= last; i++) {
+                Moduli before = apparent.get(i).moduli().orElseThrow();
+                Moduli after = corrected.get(i).moduli().orElseThrow();
+                Complex exact = new Complex(truth.applyAsDouble(strains.get(i)), LOSS);
+                int place = i < last ? 0 : 1;
+                int count = draws * (i < last ? last : 1);
+                squares[place] += Math.pow(after.complex().minus(exact).abs() / exact.abs(), 2) / count;
+                price[place] += after.covariance().orElseThrow().storageU()
+                        / before.covariance().orElseThrow().storageU()
+                        / count;
+            }
+        }
+        Study.row(
+                "| %.1f %%%s | %.1e / %.1e | %.2f / %.2f |",
+                100 * u,
+                linear ? ", linear throughout" : "",
+                Math.sqrt(squares[0]),
+                Math.sqrt(squares[1]),
+                price[0],
+                price[1]);
+        assertThat(Math.sqrt(squares[0])).isLessThan(inside);
+        assertThat(Math.sqrt(squares[1])).isLessThan(atLast);
+        if (u > 0) {
+            assertThat(price[0]).isBetween(0.95, priceInside);
+            assertThat(price[1]).isBetween(0.95, priceAtLast);
+        }
     }
 
     /** Nothing to correct: what noise makes of the correction stays within the noise, and so does its price. */

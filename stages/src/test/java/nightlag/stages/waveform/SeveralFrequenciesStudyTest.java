@@ -2,22 +2,20 @@ package nightlag.stages.waveform;
 
 import static org.assertj.core.api.Assertions.assertThat;
 
-import java.util.Locale;
 import java.util.Random;
+import nightlag.stages.Study;
 import nightlag.stages.numeric.Complex;
 import org.junit.jupiter.api.Tag;
 import org.junit.jupiter.api.Test;
-import org.junit.jupiter.api.condition.EnabledIfSystemProperty;
 
 /**
  * How far the responses of chirps are off on random materials of relaxation modes, without noise: what cutting a record out
- * of time and the bend of the response leave. Run with
- * {@code mvn -pl stages test -Dtest=SeveralFrequenciesStudyTest -Dnightlag.study=true}; the table goes to the console.
+ * of time and the bend of the response leave. Few materials in a build; more, and the table, with
+ * {@code mvn test -pl stages -Dtest=SeveralFrequenciesStudyTest -Dnightlag.study=long}.
  */
 @Tag("study")
-@EnabledIfSystemProperty(named = "nightlag.study", matches = "true")
 class SeveralFrequenciesStudyTest {
-    private static final int MATERIALS = 40;
+    private static final int MATERIALS = Study.draws(12, 120);
     private static final double[] FROM_CYCLES = {6, 12, 24, 48};
 
     private static Chirp random(Random random) {
@@ -58,16 +56,10 @@ class SeveralFrequenciesStudyTest {
                 counts[row]++;
             }
         }
-        System.out.println("| cycles in the record | points | rms of |ΔG*|/|G*| | largest |");
-        System.out.println("|---|---|---|---|");
         for (int row = 0; row < FROM_CYCLES.length; row++) {
-            System.out.printf(
-                    Locale.ROOT,
-                    "| from %.0f | %d | %.1e | %.1e |%n",
-                    FROM_CYCLES[row],
-                    counts[row],
-                    Math.sqrt(squares[row] / counts[row]),
-                    largest[row]);
+            Study.row(
+                    "| from %.0f | %d | %.1e | %.1e |",
+                    FROM_CYCLES[row], counts[row], Math.sqrt(squares[row] / counts[row]), largest[row]);
         }
         assertThat(largest[0]).isLessThan(1e-2);
         assertThat(largest[3]).isLessThan(2e-4);
