@@ -25,6 +25,7 @@ final class Steadiness {
     private final Basis basis;
     private final JointFit.Result fit;
     private final Noise noise;
+    private final double perSecond;
     private final Optional<Stretches> stretches;
     private final Unfitted[] unfitted;
 
@@ -33,6 +34,7 @@ final class Steadiness {
         this.basis = basis;
         this.fit = fit;
         this.noise = noise;
+        this.perSecond = 1 / samples.halfSpanS();
         this.unfitted = new Unfitted[] {unfitted(Samples.DEFORMATION), unfitted(Samples.LOAD)};
         this.stretches = cut();
     }
@@ -151,7 +153,7 @@ final class Steadiness {
     }
 
     private double term(int power, int sample) {
-        double u = samples.seconds()[sample] / samples.halfSpanS();
+        double u = samples.seconds()[sample] * perSecond;
         return power == 1 ? u : u * u - 1.0 / 3;
     }
 
