@@ -156,8 +156,7 @@ final class TracePage {
                             + "; signal to noise " + decibel(point.strainSnrDb()) + " deformation, "
                             + decibel(point.stressSnrDb()) + " load");
         }
-        followed.fit()
-                .flatMap(fit -> fit.screening().cycleScatter())
+        fit.flatMap(found -> found.screening().cycleScatter())
                 .ifPresent(scatter -> line(
                         "relative u",
                         digits(SHORT, scatter.noiseU()) + " from the noise, " + digits(SHORT, scatter.cyclesU())
