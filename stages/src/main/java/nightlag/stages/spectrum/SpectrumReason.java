@@ -5,7 +5,7 @@ import nightlag.stages.fault.ReasonCode;
 /** Why a lot has no spectrum, or not the one that was asked for. */
 public enum SpectrumReason implements ReasonCode {
     /** Frequencies found, frequencies needed. */
-    SPECTRUM_TOO_FEW_FREQUENCIES("no spectrum: {0} different frequencies, at least {1} are needed"),
+    SPECTRUM_TOO_FEW_FREQUENCIES("no spectrum: too few different frequencies, {0} (at least {1} are needed)"),
     /** Modes wanted, readings there, most modes. */
     SPECTRUM_TOO_MANY_MODES("no spectrum: {0} modes are asked for, but {1} points carry at most {2}"),
     /** Nothing. */

@@ -4,10 +4,10 @@ import static org.assertj.core.api.Assertions.assertThat;
 import static org.assertj.core.api.Assertions.within;
 
 import java.util.OptionalDouble;
+import nightlag.stages.Study;
 import nightlag.stages.numeric.Complex;
 import org.junit.jupiter.api.Tag;
 import org.junit.jupiter.api.Test;
-import org.junit.jupiter.api.condition.EnabledIfSystemProperty;
 import org.junit.jupiter.params.ParameterizedTest;
 import org.junit.jupiter.params.provider.CsvSource;
 import org.junit.jupiter.params.provider.ValueSource;
@@ -52,9 +52,8 @@ class CycleScatterTest {
         assertThat(meanSquare).isCloseTo(1, within(0.25));
     }
 
-    /** How often noise alone raises the flag: {@code mvn -pl stages test -Dtest=CycleScatterTest -Dnightlag.study=true}. */
+    /** How often noise alone raises the flag; {@code mvn -pl stages test -Dtest=CycleScatterTest -Dnightlag.study=long} takes more. */
     @Tag("study")
-    @EnabledIfSystemProperty(named = "nightlag.study", matches = "true")
     @ParameterizedTest(name = "noise with memory {0}")
     @ValueSource(doubles = {0, 0.7})
     void noiseHardlyEverRaisesTheFlag(double memory) throws Exception {
@@ -62,7 +61,7 @@ class CycleScatterTest {
         int records = 0;
         for (double cycles : new double[] {5, 6.5, 8, 12, 20, 33.3, 50}) {
             for (int perCycle : new int[] {16, 40}) {
-                for (int seed = 0; seed < 2000; seed++) {
+                for (int seed = 0; seed < Study.draws(100, 2000); seed++) {
                     CycleScatter scatter =
                             scatter(recording(cycles, perCycle, memory, seed).build());
                     alarms += scatter.ratio() > 2 && scatter.chance() < 1e-4 ? 1 : 0;
@@ -70,7 +69,7 @@ class CycleScatterTest {
                 }
             }
         }
-        assertThat(alarms).as("of %d records", records).isLessThan(records / 1000);
+        assertThat(alarms).as("of %d records", records).isLessThanOrEqualTo(records / 1000);
     }
 
     @Test
