@@ -26,6 +26,10 @@ public final class HarmonicAnalysis {
     private static final double FEW_CYCLES = 2.5;
     /** Below so many cycles no order above the first can be told from the drift. */
     private static final double CYCLES_FOR_HARMONICS = 1.1;
+    /** A tag is right or wrong by more than this part of it. */
+    private static final double NEAR_TAG = 0.1;
+    /** Twice the difference in ln likelihood from which on a frequency that is not the tagged one is believed. */
+    private static final double CLEARLY_LIKELIER = 16;
     /** An order this near half the samples a cycle (as part of them) counts as at it. */
     private static final double BELOW_HALF = 0.495;
     /** Degrees of freedom a channel must keep. */
@@ -337,11 +341,25 @@ public final class HarmonicAnalysis {
         }
         int harmonics = fit.basis().harmonics();
         int degree = plan.drift().degree();
-        return Arrays.stream(FrequencySearch.minimaNearby(samples, omega, harmonics, degree))
+        List<JointFit.Result> found = Arrays.stream(FrequencySearch.minimaNearby(samples, omega, harmonics, degree))
                 .mapToObj(start -> fit.refined(start))
                 .flatMap(Optional::stream)
                 .filter(result -> FrequencySearch.near(result.angularFrequency(), omega))
-                .min(Comparator.comparingDouble(JointFit.Result::misfit));
+                .sorted(Comparator.comparingDouble(JointFit.Result::misfit))
+                .toList();
+        // noise makes several maxima of the likelihood in so short a record; the tag decides between those that are
+        // alike
+        return found.stream()
+                .filter(result -> nearTag(result.angularFrequency()))
+                .filter(result ->
+                        samples.size() * (result.misfit() - found.get(0).misfit()) < CLEARLY_LIKELIER)
+                .findFirst()
+                .or(() -> found.stream().findFirst());
+    }
+
+    private boolean nearTag(double omega) {
+        OptionalDouble tag = waveform.nominalFrequencyHz();
+        return tag.isPresent() && Math.abs(omega / (2 * Math.PI * tag.getAsDouble()) - 1) < NEAR_TAG;
     }
 
     private Fitted withoutSpikes(Fitted start, Clock clock) throws ReductionFault {

@@ -18,10 +18,10 @@ import org.apache.commons.math3.optim.univariate.UnivariateObjectiveFunction;
  */
 final class BruteForceLikelihood {
     /**
-     * How far from the true frequency is looked, as part of a line (1/duration): as far as the program's own fit may start from
-     * it. It decides where noise makes several maxima (1.5 cycles of 16 samples at 20 dB with a curved drift).
+     * How far from the true frequency is looked, as part of it: as far as the program believes a tag. It decides where noise
+     * makes several maxima (1.5 cycles of 16 samples at 20 dB with a curved drift).
      */
-    private static final double REACH_LINES = 1.0 / 3;
+    private static final double REACH = 0.1;
 
     private static final int STEPS_TO_EITHER_SIDE = 10;
 
@@ -46,7 +46,7 @@ final class BruteForceLikelihood {
     }
 
     private Complex modulus() {
-        double step = REACH_LINES / condition.cycles() / STEPS_TO_EITHER_SIDE;
+        double step = REACH / STEPS_TO_EITHER_SIDE;
         double best = 1;
         double least = Double.POSITIVE_INFINITY;
         for (int k = -STEPS_TO_EITHER_SIDE; k <= STEPS_TO_EITHER_SIDE; k++) {
