@@ -1,12 +1,18 @@
 package nightlag.pipeline.decode;
 
 import java.io.IOException;
+import java.util.EnumMap;
+import java.util.Map;
 import java.util.Optional;
 import nightlag.pipeline.config.Layout;
+import nightlag.pipeline.config.TagName;
 import nightlag.pipeline.intake.RawFile;
 
 /** Reads a raw file as its instrument file says. */
 public final class RawFileDecoder {
+    /** The specimen of a record that names none. */
+    public static final String FIRST_SPECIMEN = RecordFacts.FIRST;
+
     private RawFileDecoder() {}
 
     /**
@@ -60,6 +66,24 @@ public final class RawFileDecoder {
             FileFacts facts = FileFacts.of(file, runSheetRow, table, complaints);
             taker(file, facts, new Tally(record -> {}, complaints));
             return Describing.describe(file, table, facts);
+        }
+    }
+
+    /**
+     * The facts that stand outside the rows, as written: preamble, path, run sheet, fixed values.
+     *
+     * @throws DecodeException if the head cannot be read as said
+     * @throws IOException if its bytes cannot be had
+     */
+    public static Map<TagName, String> tagsOfHead(RawFile file, Optional<RunSheetRow> runSheetRow)
+            throws DecodeException, IOException {
+        Complaints complaints = new Complaints(file.tableName());
+        try (RawTable table = RawTable.open(file, complaints)) {
+            Map<TagName, String> tags = new EnumMap<>(TagName.class);
+            FileFacts.of(file, runSheetRow, table, complaints)
+                    .values()
+                    .forEach((name, value) -> tags.put(name, value.text()));
+            return tags;
         }
     }
 

@@ -14,7 +14,8 @@ import nightlag.stages.moduli.PointKey;
 
 /** Puts together what is known about one record. */
 final class RecordFacts {
-    private static final String FIRST = "1";
+    /** The specimen, and the sweep, of a record that names none. */
+    static final String FIRST = "1";
 
     private final Instrument instrument;
     private final boolean runSheetRow;

@@ -7,6 +7,7 @@ import java.nio.file.attribute.BasicFileAttributes;
 import java.util.ArrayList;
 import java.util.LinkedHashSet;
 import java.util.List;
+import java.util.Map;
 import java.util.Optional;
 import java.util.Set;
 import java.util.TreeSet;
@@ -15,6 +16,8 @@ import nightlag.pipeline.archive.ArchivedFile;
 import nightlag.pipeline.archive.LotName;
 import nightlag.pipeline.config.Configuration;
 import nightlag.pipeline.config.Instrument;
+import nightlag.pipeline.config.TagName;
+import nightlag.pipeline.config.TagSource;
 import nightlag.pipeline.decode.DecodeCounts;
 import nightlag.pipeline.decode.DecodeException;
 import nightlag.pipeline.decode.RawFileDecoder;
@@ -102,13 +105,32 @@ final class FileLooker {
                 .map(ArchivedFile::sha256)
                 .filter(sha256::equals)
                 .isPresent();
+        String state = state(candidate, records.grades());
+        if (records.lots.isEmpty()) {
+            readNamesFromHead(candidate.file(), records);
+        }
         return new Look.SetAside(
-                sha256,
-                reason,
-                records.lots,
-                records.specimens,
-                state(candidate, records.grades()),
-                keepsReductions && sameContent);
+                sha256, reason, records.lots, records.specimens, state, keepsReductions && sameContent);
+    }
+
+    /** A file that fails before its first record may still say in its head whose it is; a person looks for it by that. */
+    private void readNamesFromHead(RawFile file, Records records) {
+        Map<TagName, TagSource> sources = file.intake().instrument().tags();
+        if (sources.get(TagName.LOT) instanceof TagSource.DataColumn
+                || sources.get(TagName.GRADE) instanceof TagSource.DataColumn) {
+            return;
+        }
+        try {
+            Map<TagName, String> tags = RawFileDecoder.tagsOfHead(file, runSheets.rowOf(file));
+            if (tags.containsKey(TagName.GRADE) && tags.containsKey(TagName.LOT)) {
+                records.lots.add(new LotName(tags.get(TagName.GRADE), tags.get(TagName.LOT)));
+                if (!(sources.get(TagName.SPECIMEN) instanceof TagSource.DataColumn)) {
+                    records.specimens.add(tags.getOrDefault(TagName.SPECIMEN, RawFileDecoder.FIRST_SPECIMEN));
+                }
+            }
+        } catch (DecodeException | IOException alreadySaid) {
+            // the head itself is what is wrong with the file, and the reason says so
+        }
     }
 
     /** Set aside for tonight only; what it gave before stays unless its content is known to have changed. */

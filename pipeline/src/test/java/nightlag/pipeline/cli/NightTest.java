@@ -110,7 +110,11 @@ class NightTest {
         assertThat(night.exitCode()).isEqualTo(1);
         assertThat(night.out()).contains("bench/A1/p3.csv").contains("lunch");
         Map<String, String> setAside = lab.files().get(2);
-        assertThat(setAside).containsEntry("status", "set-aside");
+        assertThat(setAside)
+                .containsEntry("status", "set-aside")
+                .containsEntry("grade", "plover")
+                .containsEntry("lot", "A1")
+                .containsEntry("specimen", "1");
         assertThat(setAside.get("reason")).contains("line 6").contains("'t'").contains("lunch");
         assertThat(lab.table("plover", "A1", "points")).hasSize(5);
 
@@ -281,6 +285,17 @@ class NightTest {
         assertThat(lab.table("plover", "A2", "points")).hasSize(6);
         lab.run();
         assertThat(lab.table("plover", "A1", "points")).hasSize(6);
+    }
+
+    @Test
+    void aBadFileOfTheLotAskedForIsNamedAndOneOfAnotherLotIsNot() {
+        lab.sweep("plover", "A1");
+        lab.write("bench/A1/bad.csv", Lab.recordText("plover", "A1", 1, 1).replaceFirst("\n0\\.015625,", "\nlunch,"));
+        lab.write("bench/A2/bad.csv", Lab.recordText("plover", "A2", 1, 1).replaceFirst("\n0\\.015625,", "\nlunch,"));
+
+        assertThat(lab.run("--lot", "A1").exitCode()).isEqualTo(1);
+
+        assertThat(lab.files()).hasSize(7).extracting(row -> row.get("lot")).containsOnly("A1");
     }
 
     @Test
