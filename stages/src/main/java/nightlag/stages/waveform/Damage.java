@@ -58,13 +58,19 @@ final class Damage {
             towering--;
         }
         towering = count - towering;
-        if (towering > MOST_SPIKES * count + 1) {
+        if (towering > mostSpikes(count)) {
             return 0;
         }
         for (int i = 0; i < count; i++) {
             leftOut[i] |= distances[i] > limit;
         }
         return towering;
+    }
+
+    /** How many outliers still are isolated spikes; where spikes come by chance a short record may get more than its share. */
+    private static double mostSpikes(int count) {
+        double share = MOST_SPIKES * count;
+        return share + 1 + 2 * Math.sqrt(share);
     }
 
     /** Whether a channel's residuals may hold spikes; one pass, so that a clean record pays nothing more. */
@@ -108,6 +114,6 @@ final class Damage {
                 found[spikes++] = i;
             }
         }
-        return spikes > MOST_SPIKES * count + 1 ? new int[0] : Arrays.copyOf(found, spikes);
+        return spikes > mostSpikes(count) ? new int[0] : Arrays.copyOf(found, spikes);
     }
 }
