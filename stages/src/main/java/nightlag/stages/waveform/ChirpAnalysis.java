@@ -24,7 +24,6 @@ public final class ChirpAnalysis {
     private static final double ABOVE_SWEEP = 1.35;
 
     private static final int FEWEST_LINES = 10;
-    private static final double HIGHEST_SNR_DB = 300;
 
     private final Waveform waveform;
     private final double pointsPerDecade;
@@ -141,13 +140,13 @@ public final class ChirpAnalysis {
                 ? lines.noise()[Samples.LOAD]
                 : Math.sqrt(response.lineVariance() / lines.samples());
         double cycles = frequency * lines.durationS();
-        double loadSnr = snrDb(load.abs(), loadNoise);
+        double loadSnr = SignalToNoise.decibels(load.abs(), loadNoise);
         ScreeningFigures figures = new ScreeningFigures(
                 (double) cutOffs.atLimit() / waveform.size(),
                 (double) spikes / waveform.size(),
                 clock.gapShare(),
                 clock.jitter(),
-                deformationNoise > 0 ? snrDb(amplitude, deformationNoise) : loadSnr,
+                deformationNoise > 0 ? SignalToNoise.decibels(amplitude, deformationNoise) : loadSnr,
                 loadSnr,
                 new Figure(0, 0),
                 Optional.empty(),
@@ -171,10 +170,6 @@ public final class ChirpAnalysis {
                 Steadiness.meanTemperature(waveform.temperatureK(), samples.indices()),
                 figures,
                 List.copyOf(notes));
-    }
-
-    private static double snrDb(double amplitude, double deviation) {
-        return Math.min(HIGHEST_SNR_DB, 20 * Math.log10(amplitude / Math.sqrt(2) / deviation));
     }
 
     /** The deformation's amplitude where the sweep passes a frequency: a fit of the sweep's own phase over two cycles. */

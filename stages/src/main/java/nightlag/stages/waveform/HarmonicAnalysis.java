@@ -36,13 +36,8 @@ public final class HarmonicAnalysis {
     private static final int SPARE_SAMPLES = 2;
     /** Where more samples than this stand at a limit, leaving them out would leave no record. */
     private static final double MOST_CLIPPED = 0.4;
-    /** A spike is larger than this part of the amplitude; smaller ones do no harm and may be the file's last digit. */
-    private static final double SMALLEST_SPIKE = 1e-6;
 
-    private static final int SPIKE_ROUNDS = 5;
     private static final int START_UP_ROUNDS = 3;
-    /** The ratio of signal to noise in dB that stands for "no noise seen in double numbers". */
-    private static final double HIGHEST_SNR_DB = 300;
 
     private final Waveform waveform;
     private final ExtractionPlan plan;
@@ -364,13 +359,13 @@ public final class HarmonicAnalysis {
 
     private Fitted withoutSpikes(Fitted start, Clock clock) throws ReductionFault {
         Fitted fitted = start;
-        for (int round = 0; round < SPIKE_ROUNDS; round++) {
+        for (int round = 0; round < Damage.SPIKE_ROUNDS; round++) {
             int found = 0;
             for (int c = 0; c < Samples.CHANNELS; c++) {
                 double[] residuals = fitted.result().residuals()[c];
                 if (Damage.suspicious(residuals)) {
                     double freedom = residuals.length - fitted.basis().columns();
-                    for (int place : Damage.spikes(residuals, freedom, SMALLEST_SPIKE * fitted.amplitude(c))) {
+                    for (int place : Damage.spikes(residuals, freedom, Damage.SMALLEST_SPIKE * fitted.amplitude(c))) {
                         int index = fitted.samples().indices()[place];
                         found += leftOut[index] ? 0 : 1;
                         leftOut[index] = true;
@@ -481,8 +476,7 @@ public final class HarmonicAnalysis {
 
     private static double snrDb(Fitted fitted, Steadiness steadiness, int channel) {
         double deviation = Math.sqrt(steadiness.steadyVariance(channel));
-        double rms = fitted.amplitude(channel) / Math.sqrt(2);
-        return Math.min(HIGHEST_SNR_DB, 20 * Math.log10(rms / deviation));
+        return SignalToNoise.decibels(fitted.amplitude(channel), deviation);
     }
 
     private static Complex[] amplitudes(Fitted fitted, int channel) {

@@ -30,9 +30,6 @@ public final class MultisineAnalysis {
     /** Samples a cycle of the fastest tone. */
     private static final double LEAST_SAMPLES_A_CYCLE = 2.02;
 
-    private static final double SMALLEST_SPIKE = 1e-6;
-    private static final int SPIKE_ROUNDS = 5;
-    private static final double HIGHEST_SNR_DB = 300;
     /** Overtones beyond this order are not looked for among the tones. */
     private static final int HIGHEST_OVERTONE = 7;
 
@@ -166,13 +163,13 @@ public final class MultisineAnalysis {
 
     private Fitted withoutSpikes(Fitted start) throws ReductionFault {
         Fitted fitted = start;
-        for (int round = 0; round < SPIKE_ROUNDS; round++) {
+        for (int round = 0; round < Damage.SPIKE_ROUNDS; round++) {
             int found = 0;
             for (int c = 0; c < Samples.CHANNELS; c++) {
                 double[] residuals = fitted.result().residuals()[c];
                 if (Damage.suspicious(residuals)) {
                     double freedom = residuals.length - fitted.basis().columns();
-                    for (int place : Damage.spikes(residuals, freedom, SMALLEST_SPIKE * largest(fitted, c))) {
+                    for (int place : Damage.spikes(residuals, freedom, Damage.SMALLEST_SPIKE * largest(fitted, c))) {
                         int index = fitted.samples().indices()[place];
                         found += leftOut[index] ? 0 : 1;
                         leftOut[index] = true;
@@ -287,7 +284,7 @@ public final class MultisineAnalysis {
 
     private static double snrDb(Fitted fitted, ToneNoise noise, int channel, int tone) {
         double deviation = Math.sqrt(noise.whole(channel).variance());
-        return Math.min(HIGHEST_SNR_DB, 20 * Math.log10(fitted.amplitude(channel, tone) / Math.sqrt(2) / deviation));
+        return SignalToNoise.decibels(fitted.amplitude(channel, tone), deviation);
     }
 
     /** The movement of the mean over that of the whole oscillation: a drift is not the fault of a small tone. */
