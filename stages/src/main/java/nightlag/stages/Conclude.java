@@ -47,6 +47,8 @@ public final class Conclude {
         return new LotResult(
                 points,
                 spectrum.markers().stream().sorted(MARKER_ORDER).toList(),
+                List.of(),
+                List.of(),
                 spectrum.rows().stream().sorted(ROW_ORDER).toList(),
                 Stream.concat(lot.notes().stream(), spectrum.notes().stream()).toList());
     }

@@ -5,21 +5,36 @@ import nightlag.stages.fault.Reason;
 import nightlag.stages.moduli.Marker;
 import nightlag.stages.moduli.ModulusPoint;
 import nightlag.stages.spectrum.SpectrumRow;
+import nightlag.stages.superposition.MasterPoint;
+import nightlag.stages.superposition.ShiftFactor;
 
 /**
  * What the points of one lot became. Lists are in the order of the tables.
  *
  * @param points points as published
  * @param markers characteristic figures
+ * @param shiftFactors how far each isotherm is moved onto the master curve
+ * @param masterCurve the points moved to the reference temperature
  * @param spectrum spectra
  * @param notes what could not be had, and why
  */
 public record LotResult(
-        List<ModulusPoint> points, List<Marker> markers, List<SpectrumRow> spectrum, List<Reason> notes) {
+        List<ModulusPoint> points,
+        List<Marker> markers,
+        List<ShiftFactor> shiftFactors,
+        List<MasterPoint> masterCurve,
+        List<SpectrumRow> spectrum,
+        List<Reason> notes) {
+    /** Nothing is known of the lot, not even a point. */
+    public static final LotResult EMPTY =
+            new LotResult(List.of(), List.of(), List.of(), List.of(), List.of(), List.of());
+
     /** Copies the lists. */
     public LotResult {
         points = List.copyOf(points);
         markers = List.copyOf(markers);
+        shiftFactors = List.copyOf(shiftFactors);
+        masterCurve = List.copyOf(masterCurve);
         spectrum = List.copyOf(spectrum);
         notes = List.copyOf(notes);
     }

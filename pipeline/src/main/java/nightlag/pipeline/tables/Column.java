@@ -5,6 +5,7 @@ import java.util.List;
 import java.util.Optional;
 import java.util.OptionalDouble;
 import java.util.function.Function;
+import java.util.function.Predicate;
 import java.util.function.ToDoubleFunction;
 import java.util.function.ToLongFunction;
 import nightlag.stages.sweep.NaturalOrder;
@@ -36,7 +37,8 @@ record Column<R>(
     enum Type {
         STRING("string"),
         NUMBER("number"),
-        INTEGER("integer");
+        INTEGER("integer"),
+        BOOLEAN("boolean");
 
         private final String word;
 
@@ -118,6 +120,20 @@ record Column<R>(
                 row -> Long.toString(getter.applyAsLong(row)),
                 Comparator.comparingLong(getter));
         return column.required().atLeast(0);
+    }
+
+    /** A column of {@code true} and {@code false}. */
+    static <R> Column<R> yesNo(String name, String meaning, Predicate<R> getter) {
+        Column<R> column = new Column<>(
+                name,
+                Type.BOOLEAN,
+                Optional.empty(),
+                meaning,
+                Rule.NONE,
+                false,
+                row -> Boolean.toString(getter.test(row)),
+                Comparator.comparing(getter::test));
+        return column.required();
     }
 
     /** The same, and rows are sorted by it. */

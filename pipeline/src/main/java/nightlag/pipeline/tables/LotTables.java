@@ -18,6 +18,16 @@ public final class LotTables {
                             .map(marker -> new MarkersTable.Row(from.grade(), from.lot(), marker))
                             .toList()),
             new LotTable<>(
+                    ShiftFactorsTable.TABLE,
+                    (result, from) -> result.shiftFactors().stream()
+                            .map(shift -> new ShiftFactorsTable.Row(from.grade(), from.lot(), shift))
+                            .toList()),
+            new LotTable<>(
+                    MasterCurveTable.TABLE,
+                    (result, from) -> result.masterCurve().stream()
+                            .map(point -> new MasterCurveTable.Row(from.grade(), from.lot(), point))
+                            .toList()),
+            new LotTable<>(
                     SpectrumTable.TABLE,
                     (result, from) -> result.spectrum().stream()
                             .map(mode -> new SpectrumTable.Row(from.grade(), from.lot(), mode))

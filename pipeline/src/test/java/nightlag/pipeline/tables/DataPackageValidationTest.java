@@ -60,7 +60,7 @@ class DataPackageValidationTest {
     @Test
     void aLotWithoutPointsAndWithAHostileNameKeepsToItToo() throws IOException, InterruptedException {
         Provenance hostile = new Provenance("=七<b>", "../ ", List.of(), List.of(), "1.2.3");
-        LotTables.write(results, new LotResult(List.of(), List.of(), List.of(), List.of()), hostile);
+        LotTables.write(results, LotResult.EMPTY, hostile);
 
         assertThat(check(hostile)).containsExactly("rows read: 0");
     }

@@ -71,7 +71,7 @@ class LotTablesTest {
                 Optional.empty(),
                 Optional.empty());
 
-        write(new LotResult(List.of(point), List.of(), List.of(), List.of()));
+        write(new LotResult(List.of(point), List.of(), List.of(), List.of(), List.of(), List.of()));
 
         // |G*| = 5000 Pa, δ = atan(4/3), u(tan δ)² = (16/9 · 9 + 16)/3000²; a 1 rad/s oscillation has |η*| = |G*|
         assertThat(table("points")).isEqualTo("""
@@ -98,7 +98,7 @@ class LotTablesTest {
 
     @Test
     void aTableWithoutRowsIsItsHeader() throws IOException {
-        write(new LotResult(List.of(), List.of(), List.of(), List.of()));
+        write(LotResult.EMPTY);
 
         assertThat(table("markers"))
                 .isEqualTo("grade,lot,specimen,sweep,property,temperature_C,frequency_Hz,value,u,unit,method\r\n");
@@ -135,7 +135,7 @@ class LotTablesTest {
                 "Pa·s",
                 "sum of g τ, 8 modes");
 
-        write(new LotResult(List.of(), List.of(peak, viscosity), List.of(), List.of()));
+        write(new LotResult(List.of(), List.of(peak, viscosity), List.of(), List.of(), List.of(), List.of()));
 
         assertThat(table("markers").lines().skip(1))
                 .containsExactly(
@@ -149,7 +149,7 @@ class LotTablesTest {
         SpectrumRow fast = mode(SpectrumRow.Kind.RELAXATION, 0.01, 1e5);
         SpectrumRow retarded = mode(SpectrumRow.Kind.RETARDATION, 3e-7, 1.25e-12);
 
-        write(new LotResult(List.of(), List.of(), List.of(retarded, slow, fast), List.of()));
+        write(new LotResult(List.of(), List.of(), List.of(), List.of(), List.of(retarded, slow, fast), List.of()));
 
         assertThat(table("spectrum").lines().skip(1))
                 .containsExactly(
@@ -160,7 +160,13 @@ class LotTablesTest {
 
     @Test
     void aPointWithoutModulusHasEmptyCells() throws IOException {
-        write(new LotResult(List.of(point("5", "b/5.csv", Optional.empty())), List.of(), List.of(), List.of()));
+        write(new LotResult(
+                List.of(point("5", "b/5.csv", Optional.empty())),
+                List.of(),
+                List.of(),
+                List.of(),
+                List.of(),
+                List.of()));
 
         assertThat(table("points").lines().skip(1))
                 .containsExactly("Heron 3,L-17,1,1,5,extension,,,,,,,,,,,,,,,,,unusable,,,0,,,b/5.csv,");
@@ -170,7 +176,12 @@ class LotTablesTest {
     void whatIsNotFiniteIsAnEmptyCell() throws IOException {
         Moduli withoutStorage = new Moduli(0, 1e300, Optional.of(new ModuliCovariance(1, 1, 0)));
         write(new LotResult(
-                List.of(point("5", "b/5.csv", Optional.of(withoutStorage))), List.of(), List.of(), List.of()));
+                List.of(point("5", "b/5.csv", Optional.of(withoutStorage))),
+                List.of(),
+                List.of(),
+                List.of(),
+                List.of(),
+                List.of()));
 
         assertThat(table("points").lines().skip(1))
                 .containsExactly("Heron 3,L-17,1,1,5,extension,,,,,,,0,1,1e300,1,1e300,90,,,,,unusable,,,0,,,b/5.csv,");
@@ -184,7 +195,7 @@ class LotTablesTest {
                 .map(parts -> point(parts[0], parts[1], Optional.empty()))
                 .toList();
 
-        write(new LotResult(reversed(points), List.of(), List.of(), List.of()));
+        write(new LotResult(reversed(points), List.of(), List.of(), List.of(), List.of(), List.of()));
 
         assertThat(table("points").lines().skip(1).map(line -> line.split(",", -1)[4] + " " + line.split(",", -1)[28]))
                 .containsExactly("9 b/9.csv", "9 b/10.csv", "9.5 b/1.csv", "10 b/2.csv", "a2 b/1.csv", "a10 b/1.csv");
@@ -197,7 +208,8 @@ class LotTablesTest {
 
         LotTables.write(
                 results,
-                new LotResult(List.of(point(key, Optional.empty())), List.of(), List.of(), List.of()),
+                new LotResult(
+                        List.of(point(key, Optional.empty())), List.of(), List.of(), List.of(), List.of(), List.of()),
                 hostile);
 
         Path folder = LotTables.folder(results, "=1+1", "../../etc");
@@ -214,6 +226,8 @@ class LotTablesTest {
         LotResult shuffled = new LotResult(
                 shuffled(result.points(), seed),
                 shuffled(result.markers(), seed),
+                shuffled(result.shiftFactors(), seed),
+                shuffled(result.masterCurve(), seed),
                 shuffled(result.spectrum(), seed),
                 List.of());
         Locale was = Locale.getDefault();
@@ -229,7 +243,14 @@ class LotTablesTest {
 
         assertThat(filesOfTheLot()).isEqualTo(first);
         assertThat(first.keySet())
-                .containsExactly("datapackage.json", "harmonics.csv", "markers.csv", "points.csv", "spectrum.csv");
+                .containsExactly(
+                        "datapackage.json",
+                        "harmonics.csv",
+                        "markers.csv",
+                        "master_curve.csv",
+                        "points.csv",
+                        "shift_factors.csv",
+                        "spectrum.csv");
         assertThat(first.values()).noneMatch(text -> text.contains("NaN") || text.contains("Infinity"));
     }
 
@@ -240,11 +261,18 @@ class LotTablesTest {
         Files.writeString(folder.resolve("a-table-of-another-version.csv" + FolderSwap.ON_ITS_WAY), "x");
         Files.writeString(folder.resolve("notes.txt"), "a colleague's own file stays");
 
-        write(new LotResult(List.of(), List.of(), List.of(), List.of()));
+        write(LotResult.EMPTY);
 
         assertThat(filesOfTheLot().keySet())
                 .containsExactly(
-                        "datapackage.json", "harmonics.csv", "markers.csv", "notes.txt", "points.csv", "spectrum.csv");
+                        "datapackage.json",
+                        "harmonics.csv",
+                        "markers.csv",
+                        "master_curve.csv",
+                        "notes.txt",
+                        "points.csv",
+                        "shift_factors.csv",
+                        "spectrum.csv");
     }
 
     @Test
@@ -252,7 +280,7 @@ class LotTablesTest {
         Path folder = LotTables.folder(results, FROM.grade(), FROM.lot());
         Files.createDirectories(folder.resolve("harmonics.csv").resolve("in the way"));
 
-        assertThatThrownBy(() -> write(new LotResult(List.of(), List.of(), List.of(), List.of())))
+        assertThatThrownBy(() -> write(LotResult.EMPTY))
                 .isInstanceOf(TableInUseException.class)
                 .hasMessageContaining("cannot replace " + folder.resolve("harmonics.csv"));
 

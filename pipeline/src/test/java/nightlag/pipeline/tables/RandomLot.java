@@ -2,14 +2,19 @@ package nightlag.pipeline.tables;
 
 import java.util.ArrayList;
 import java.util.List;
+import java.util.Optional;
 import java.util.OptionalDouble;
 import java.util.Random;
 import nightlag.pipeline.RandomPoints;
 import nightlag.stages.LotResult;
 import nightlag.stages.moduli.Marker;
+import nightlag.stages.moduli.Moduli;
 import nightlag.stages.moduli.ModulusPoint;
+import nightlag.stages.moduli.ModulusReading;
 import nightlag.stages.moduli.PointKey;
 import nightlag.stages.spectrum.SpectrumRow;
+import nightlag.stages.superposition.MasterPoint;
+import nightlag.stages.superposition.ShiftFactor;
 
 /** A lot of no material, with rows in every table; every row differs from every other in its key. */
 final class RandomLot {
@@ -22,7 +27,7 @@ final class RandomLot {
     }
 
     LotResult result(String grade, String lot) {
-        return new LotResult(points(grade, lot), markers(), spectrum(), List.of());
+        return new LotResult(points(grade, lot), markers(), shiftFactors(), masterCurve(), spectrum(), List.of());
     }
 
     private List<ModulusPoint> points(String grade, String lot) {
@@ -49,6 +54,41 @@ final class RandomLot {
                     maybe(Math.abs(points.number())),
                     random.nextBoolean() ? "°C" : "Pa·s",
                     "by trial, \"for a test\""));
+        }
+        return made;
+    }
+
+    private List<ShiftFactor> shiftFactors() {
+        List<ShiftFactor> made = new ArrayList<>();
+        for (int i = 0; i < 6; i++) {
+            boolean used = random.nextBoolean();
+            made.add(new ShiftFactor(
+                    463.15,
+                    random.nextDouble(400, 500),
+                    only(used, points.number()),
+                    only(used, Math.abs(points.number())),
+                    only(used, points.number()),
+                    maybe(Math.abs(points.number())),
+                    maybe(points.number()),
+                    only(used, Math.abs(points.number())),
+                    used));
+        }
+        return made;
+    }
+
+    private static OptionalDouble only(boolean there, double value) {
+        return there ? OptionalDouble.of(value) : OptionalDouble.empty();
+    }
+
+    private List<MasterPoint> masterCurve() {
+        List<MasterPoint> made = new ArrayList<>();
+        for (int i = 0; i < 12; i++) {
+            made.add(new MasterPoint(
+                    463.15,
+                    random.nextDouble(400, 500),
+                    new ModulusReading(
+                            Math.exp(random.nextDouble(-9, 9)),
+                            new Moduli(points.number(), points.number(), Optional.empty()))));
         }
         return made;
     }

@@ -4,6 +4,7 @@ import java.util.List;
 import java.util.Optional;
 import java.util.OptionalInt;
 import nightlag.stages.fault.ReductionFault;
+import nightlag.stages.moduli.ModulusReading;
 import nightlag.stages.sweep.FrequencySweeps;
 
 /** Readings of the complex modulus to a discrete spectrum. */

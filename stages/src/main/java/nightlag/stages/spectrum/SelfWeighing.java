@@ -4,6 +4,7 @@ import java.util.ArrayList;
 import java.util.Comparator;
 import java.util.List;
 import java.util.function.Function;
+import nightlag.stages.moduli.ModulusReading;
 import nightlag.stages.numeric.Complex;
 
 /**

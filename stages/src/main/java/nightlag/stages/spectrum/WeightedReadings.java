@@ -7,6 +7,7 @@ import java.util.function.ToDoubleFunction;
 import java.util.stream.IntStream;
 import nightlag.stages.moduli.Moduli;
 import nightlag.stages.moduli.ModuliCovariance;
+import nightlag.stages.moduli.ModulusReading;
 import nightlag.stages.numeric.Complex;
 
 /**

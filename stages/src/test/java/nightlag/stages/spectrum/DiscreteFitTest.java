@@ -16,6 +16,7 @@ import nightlag.stages.fault.ReductionFault;
 import nightlag.stages.moduli.Marker;
 import nightlag.stages.moduli.Moduli;
 import nightlag.stages.moduli.ModuliCovariance;
+import nightlag.stages.moduli.ModulusReading;
 import nightlag.stages.numeric.Complex;
 import org.junit.jupiter.api.Test;
 import org.junit.jupiter.params.ParameterizedTest;

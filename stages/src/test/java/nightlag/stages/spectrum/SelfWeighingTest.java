@@ -14,6 +14,7 @@ import nightlag.stages.Study;
 import nightlag.stages.fault.ReductionFault;
 import nightlag.stages.moduli.Marker;
 import nightlag.stages.moduli.Moduli;
+import nightlag.stages.moduli.ModulusReading;
 import nightlag.stages.numeric.Complex;
 import org.junit.jupiter.api.Tag;
 import org.junit.jupiter.api.Test;

@@ -1,6 +1,4 @@
-package nightlag.stages.spectrum;
-
-import nightlag.stages.moduli.Moduli;
+package nightlag.stages.moduli;
 
 /**
  * A complex modulus at a frequency: what a spectrum is fitted to.
