@@ -53,6 +53,8 @@ class DataPackageValidationTest {
         int rows = result.points().size()
                 + HarmonicsTable.rows(result.points()).size()
                 + result.markers().size()
+                + result.shiftFactors().size()
+                + result.masterCurve().size()
                 + result.spectrum().size();
         assertThat(check(FROM)).containsExactly("rows read: " + rows);
     }
