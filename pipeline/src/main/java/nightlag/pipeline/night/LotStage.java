@@ -138,6 +138,7 @@ final class LotStage {
         }
         night.archive().concluded(lot, conclusionState(grade));
         night.tally().concluded(lot, result);
+        night.report().lot(lot.grade(), lot.lot(), result);
     }
 
     /** Whether there is still room and leave to write; else it is no matter of one lot. */

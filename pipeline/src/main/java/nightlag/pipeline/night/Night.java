@@ -12,6 +12,8 @@ import nightlag.pipeline.archive.ArchiveException;
 import nightlag.pipeline.config.Configuration;
 import nightlag.pipeline.config.Intake;
 import nightlag.pipeline.decode.RunSheets;
+import nightlag.pipeline.report.NightHeading;
+import nightlag.pipeline.report.NightReport;
 import nightlag.pipeline.tables.NightTables;
 import org.apache.logging.log4j.LogManager;
 import org.apache.logging.log4j.Logger;
@@ -85,11 +87,16 @@ public final class Night {
         Survey survey = Survey.of(configuration, archive.files(), runSheets, options.redo(), version, clock);
         Tally tally = new Tally(folder);
         survey.unreadable().forEach(tally::unreadable);
-        NightWork night = new NightWork(configuration, options, version, workers(), archive, tally);
-        new FileStage(night, progress).work(survey, runSheets);
-        new LotStage(night).work();
-        NightOutcome outcome = tally.outcome();
-        NightTables.writeFiles(folder, outcome.files());
+        NightOutcome outcome;
+        try (NightReport report = NightReport.begin(folder)) {
+            NightWork night = new NightWork(configuration, options, version, workers(), archive, tally, report);
+            new FileStage(night, progress).work(survey, runSheets);
+            new LotStage(night).work();
+            outcome = tally.outcome();
+            NightTables.writeFiles(folder, outcome.files());
+            report.finish(new NightHeading(
+                    folder.getFileName().toString(), version, outcome.counts(), outcome.concerns(configuration)));
+        }
         LOG.info(
                 "{} files; {} lots rebuilt",
                 outcome.files().size(),

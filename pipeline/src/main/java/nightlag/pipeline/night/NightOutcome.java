@@ -1,11 +1,17 @@
 package nightlag.pipeline.night;
 
 import java.nio.file.Path;
+import java.util.ArrayList;
+import java.util.Arrays;
 import java.util.Collections;
 import java.util.List;
 import java.util.Map;
 import java.util.TreeMap;
+import java.util.stream.Collectors;
 import nightlag.pipeline.archive.LotName;
+import nightlag.pipeline.config.Configuration;
+import nightlag.pipeline.config.Problem;
+import nightlag.pipeline.report.Concern;
 import nightlag.pipeline.tables.NightFileRow;
 import nightlag.stages.moduli.Flag;
 import nightlag.stages.moduli.Quality;
@@ -60,5 +66,55 @@ public record NightOutcome(
     /** How many files ended with a status. */
     public long count(NightFileRow.Status status) {
         return files.stream().filter(file -> file.status() == status).count();
+    }
+
+    /** What was done, a line each. */
+    public List<String> counts() {
+        List<String> lines = new ArrayList<>();
+        lines.add("files   " + files.size() + " in the intake: "
+                + Arrays.stream(NightFileRow.Status.values())
+                        .map(status -> count(status) + " " + status.word())
+                        .collect(Collectors.joining(", ")));
+        if (rows > 0) {
+            lines.add("rows    " + rows + " read, " + rowsLeftOut + " left out");
+            lines.add("points  "
+                    + Arrays.stream(Quality.values())
+                            .map(each -> quality.getOrDefault(each, 0) + " " + each.word())
+                            .collect(Collectors.joining(", ")));
+        }
+        if (!flags.isEmpty()) {
+            lines.add("flags   "
+                    + flags.entrySet().stream()
+                            .map(flag -> flag.getKey().word() + " " + flag.getValue())
+                            .collect(Collectors.joining(", ")));
+        }
+        lines.add("lots    " + lotsConcluded.size() + " rebuilt");
+        return lines;
+    }
+
+    /** What a person should look at, worst first; some may have no lines. */
+    public List<Concern> concerns(Configuration configuration) {
+        List<String> notes = new ArrayList<>();
+        lotsConcluded.forEach((lot, absent) -> absent.forEach(note -> notes.add(named(lot) + ": " + note)));
+        return List.of(
+                new Concern("look at: set aside", newlySetAside),
+                new Concern("look at: points that are not sound", notSound),
+                new Concern("look at: intakes that cannot be read", unreadableIntakes),
+                new Concern(
+                        "look at: lots not concluded",
+                        lotsNotConcluded.entrySet().stream()
+                                .map(lot -> named(lot.getKey()) + ": " + lot.getValue())
+                                .toList()),
+                new Concern("still set aside from an earlier night", stillSetAside),
+                new Concern("could not be had", notes),
+                new Concern(
+                        "wrong grade files",
+                        configuration.gradeProblems().stream()
+                                .map(Problem::sentence)
+                                .toList()));
+    }
+
+    private static String named(LotName lot) {
+        return lot.grade() + " lot " + lot.lot();
     }
 }

@@ -1,0 +1,223 @@
+package nightlag.pipeline.report;
+
+import java.util.ArrayList;
+import java.util.List;
+import java.util.stream.IntStream;
+import java.util.stream.Stream;
+import nightlag.stages.LotResult;
+import nightlag.stages.moduli.Moduli;
+import nightlag.stages.moduli.ModulusPoint;
+import nightlag.stages.moduli.Quality;
+import nightlag.stages.spectrum.SpectrumRow;
+import nightlag.stages.superposition.MasterPoint;
+import nightlag.stages.superposition.ShiftFactor;
+import nightlag.stages.sweep.Isotherm;
+import nightlag.stages.sweep.Isotherms;
+
+/** The charts of one lot. */
+final class LotCharts {
+    private static final double KELVIN_AT_ZERO_CELSIUS = 273.15;
+
+    /** More temperatures than this are a ramp, and are drawn as one. */
+    private static final int MOST_ISOTHERMS = 16;
+
+    private static final String RAD_PER_S = "rad/s";
+    private static final String PASCAL = "Pa";
+
+    private final LotResult result;
+    private final List<Family> families;
+
+    /** Points of one temperature, or all of a ramp. */
+    private record Family(String name, List<ModulusPoint> points) {}
+
+    private LotCharts(LotResult result) {
+        this.result = result;
+        this.families = families(result.points().stream()
+                .filter(point ->
+                        point.quality() != Quality.UNUSABLE && point.moduli().isPresent())
+                .toList());
+    }
+
+    /** Those that have something to show. */
+    static List<Chart> of(LotResult result) {
+        LotCharts charts = new LotCharts(result);
+        return Stream.of(
+                        charts.moduliOverFrequency(),
+                        charts.masterCurve(),
+                        charts.shiftFactors(),
+                        charts.phaseOverModulus(),
+                        charts.lossOverStorage(),
+                        charts.spectrum(SpectrumRow.Kind.RELAXATION, "Relaxation modes", "modulus"),
+                        charts.spectrum(SpectrumRow.Kind.RETARDATION, "Retardation modes", "compliance"))
+                .filter(Chart::hasPoints)
+                .toList();
+    }
+
+    private static List<Family> families(List<ModulusPoint> points) {
+        List<Isotherm> isotherms = Isotherms.group(points);
+        if (isotherms.size() > MOST_ISOTHERMS) {
+            return List.of(new Family("all temperatures", points));
+        }
+        List<Family> families = new ArrayList<>();
+        isotherms.forEach(isotherm -> families.add(new Family(celsius(isotherm.temperatureK()), isotherm.points())));
+        List<ModulusPoint> without =
+                points.stream().filter(point -> point.temperatureK().isEmpty()).toList();
+        if (!without.isEmpty()) {
+            families.add(new Family("no temperature", without));
+        }
+        return families;
+    }
+
+    private static String celsius(double temperatureK) {
+        return Math.round(10 * (temperatureK - KELVIN_AT_ZERO_CELSIUS)) / 10.0 + " °C";
+    }
+
+    private Chart moduliOverFrequency() {
+        List<Series> series = new ArrayList<>();
+        for (int i = 0; i < families.size(); i++) {
+            Family family = families.get(i);
+            series.add(Series.of(
+                    "G' " + family.name(),
+                    i,
+                    true,
+                    false,
+                    family.points(),
+                    LotCharts::angularFrequency,
+                    point -> moduli(point).storagePa()));
+            series.add(Series.of(
+                    "G'' " + family.name(),
+                    i,
+                    false,
+                    false,
+                    family.points(),
+                    LotCharts::angularFrequency,
+                    point -> moduli(point).lossPa()));
+        }
+        return new Chart(
+                "Moduli over frequency",
+                "Storage modulus filled, loss modulus open; every usable point of the lot, as measured.",
+                Axis.log("angular frequency", RAD_PER_S),
+                Axis.log("modulus", PASCAL),
+                series);
+    }
+
+    private Chart masterCurve() {
+        List<MasterPoint> points = result.masterCurve();
+        List<Series> series = new ArrayList<>();
+        List<Double> temperatures = points.stream()
+                .map(MasterPoint::temperatureK)
+                .distinct()
+                .sorted()
+                .toList();
+        for (int i = 0; i < temperatures.size(); i++) {
+            double temperature = temperatures.get(i);
+            List<MasterPoint> isotherm = points.stream()
+                    .filter(point -> point.temperatureK() == temperature)
+                    .toList();
+            String name = celsius(temperature);
+            series.add(Series.of(
+                    "G' " + name,
+                    i,
+                    true,
+                    false,
+                    isotherm,
+                    point -> point.reduced().angularFrequency(),
+                    point -> point.reduced().moduli().storagePa()));
+            series.add(Series.of(
+                    "G'' " + name,
+                    i,
+                    false,
+                    false,
+                    isotherm,
+                    point -> point.reduced().angularFrequency(),
+                    point -> point.reduced().moduli().lossPa()));
+        }
+        return new Chart(
+                points.isEmpty()
+                        ? "Master curve"
+                        : "Master curve at " + celsius(points.get(0).referenceTemperatureK()),
+                "All isotherms moved to the reference temperature; where the material superposes, the colours lie on one"
+                        + " another.",
+                Axis.log("reduced angular frequency", RAD_PER_S),
+                Axis.log("reduced modulus", PASCAL),
+                series);
+    }
+
+    private Chart shiftFactors() {
+        List<ShiftFactor> used =
+                result.shiftFactors().stream().filter(ShiftFactor::used).toList();
+        return new Chart(
+                "Shift factors",
+                "How far each isotherm was moved along the frequency axis, and the fitted law.",
+                Axis.linear("temperature", "°C"),
+                Axis.linear("log a", ""),
+                List.of(
+                        Series.of(
+                                "measured",
+                                0,
+                                true,
+                                false,
+                                used,
+                                shift -> shift.temperatureK() - KELVIN_AT_ZERO_CELSIUS,
+                                shift -> shift.log10A().orElse(Double.NaN)),
+                        Series.of(
+                                "law",
+                                1,
+                                false,
+                                true,
+                                used,
+                                shift -> shift.temperatureK() - KELVIN_AT_ZERO_CELSIUS,
+                                shift -> shift.lawLog10A().orElse(Double.NaN))));
+    }
+
+    private Chart phaseOverModulus() {
+        return new Chart(
+                "Phase angle over modulus",
+                "No shift along frequency enters: where a material superposes without a vertical shift, all temperatures"
+                        + " lie on one curve.",
+                Axis.log("complex modulus |G*|", PASCAL),
+                Axis.linear("phase angle", "°"),
+                byFamily(
+                        point -> moduli(point).magnitudePa(),
+                        point -> Math.toDegrees(moduli(point).phaseRad())));
+    }
+
+    private Chart lossOverStorage() {
+        return new Chart(
+                "Loss over storage modulus",
+                "As a second look: a curve that fans out with temperature is a material whose mechanisms do not shift alike.",
+                Axis.log("storage modulus", PASCAL),
+                Axis.log("loss modulus", PASCAL),
+                byFamily(
+                        point -> moduli(point).storagePa(),
+                        point -> moduli(point).lossPa()));
+    }
+
+    private List<Series> byFamily(
+            java.util.function.ToDoubleFunction<ModulusPoint> x, java.util.function.ToDoubleFunction<ModulusPoint> y) {
+        return IntStream.range(0, families.size())
+                .mapToObj(i -> Series.of(
+                        families.get(i).name(), i, true, false, families.get(i).points(), x, y))
+                .toList();
+    }
+
+    private Chart spectrum(SpectrumRow.Kind kind, String title, String what) {
+        List<SpectrumRow> rows = result.spectrum().stream()
+                .filter(row -> row.kind() == kind && row.form() == SpectrumRow.Form.DISCRETE)
+                .toList();
+        return new Chart(
+                title,
+                "Each mode of the discrete set; the set as a whole says what the material does, a single mode little.",
+                Axis.log("time", "s"),
+                Axis.log(what, kind.unit()),
+                List.of(Series.of("modes", 0, true, false, rows, SpectrumRow::timeS, SpectrumRow::value)));
+    }
+
+    private static double angularFrequency(ModulusPoint point) {
+        return 2 * Math.PI * point.frequencyHz().orElse(Double.NaN);
+    }
+
+    private static Moduli moduli(ModulusPoint point) {
+        return point.moduli().orElseThrow();
+    }
+}
