@@ -10,6 +10,8 @@
     d3.symbolCircle, d3.symbolSquare, d3.symbolTriangle, d3.symbolDiamond, d3.symbolStar, d3.symbolWye, d3.symbolCross,
   ];
   const NEAR_PX = 40;
+  // beyond what any instrument measures, and where differences and ratios are still numbers
+  const LARGEST = 1e150;
 
   const colour = (look) => `var(--look-${look % LOOKS})`;
   // after all colours have been used, the next round pairs them with other shapes
@@ -17,9 +19,13 @@
   const figures = d3.format('.4~g');
   const withUnit = (axis) => (axis.unit ? `${axis.label} (${axis.unit})` : axis.label);
 
+  function drawable(axis, value) {
+    return Math.abs(value) < LARGEST && (axis.scale !== 'LOG' || value > 1 / LARGEST);
+  }
+
   function domain(chart, along) {
     const axis = chart[along];
-    const values = chart.series.flatMap((series) => series[along]).filter((value) => axis.scale !== 'LOG' || value > 0);
+    const values = chart.series.flatMap((series) => series[along]).filter((value) => drawable(axis, value));
     let [low, high] = d3.extent(values);
     if (axis.scale === 'LOG') {
       if (low === high) { low /= 2; high *= 2; }
@@ -76,7 +82,7 @@
     constructor(chart, figure, number) {
       this.chart = chart;
       this.spots = chart.series.flatMap((series, s) => series.x.map((x, i) => ({ x, y: series.y[i], s })))
-        .filter((spot) => this.drawable(spot));
+        .filter((spot) => drawable(chart.x, spot.x) && drawable(chart.y, spot.y));
       this.picked = -1;
       const id = `chart-${number}`;
       d3.select(figure).append('h3').text(chart.title);
@@ -115,10 +121,6 @@
     place(rect) {
       rect.attr('x', MARGIN.left).attr('y', MARGIN.top)
         .attr('width', WIDTH - MARGIN.left - MARGIN.right).attr('height', HEIGHT - MARGIN.top - MARGIN.bottom);
-    }
-
-    drawable(spot) {
-      return (this.chart.x.scale !== 'LOG' || spot.x > 0) && (this.chart.y.scale !== 'LOG' || spot.y > 0);
     }
 
     whole() {

@@ -34,6 +34,9 @@ class PipelineArchitectureTest {
     static final ArchRule tablesKnowNoOtherRoom = room("tables").mayUse();
 
     @ArchTest
+    static final ArchRule theReportKnowsNoOtherRoom = room("report").mayUse();
+
+    @ArchTest
     static final ArchRule nothingButTheCommandLineKnowsTheNight = noClasses()
             .that()
             .resideOutsideOfPackages("nightlag.pipeline.cli..", "nightlag.pipeline.night..")

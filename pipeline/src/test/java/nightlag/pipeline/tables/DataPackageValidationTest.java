@@ -1,14 +1,12 @@
 package nightlag.pipeline.tables;
 
 import static org.assertj.core.api.Assertions.assertThat;
-import static org.assertj.core.api.Assertions.fail;
-import static org.junit.jupiter.api.Assumptions.assumeTrue;
 
 import java.io.IOException;
-import java.nio.charset.StandardCharsets;
 import java.nio.file.Files;
 import java.nio.file.Path;
 import java.util.List;
+import nightlag.pipeline.NodeCheck;
 import nightlag.stages.LotResult;
 import org.junit.jupiter.api.BeforeAll;
 import org.junit.jupiter.api.Test;
@@ -19,12 +17,9 @@ import org.junit.jupiter.params.provider.ValueSource;
 
 /**
  * A lot's tables against their own {@code datapackage.json}, judged by the reference implementation of the standard for
- * Node (package {@code datapackage} 1.1.10; {@code npm ci} in {@code pipeline/src/test/node} fetches it). Without it
- * these tests are skipped, except where the environment says {@code CI=true}.
+ * Node (package {@code datapackage} 1.1.10).
  */
 class DataPackageValidationTest {
-    private static final Path CHECK = Path.of("src", "test", "node").toAbsolutePath();
-
     private static final Provenance FROM = new Provenance(
             "Heron 3",
             "L-17",
@@ -37,11 +32,7 @@ class DataPackageValidationTest {
 
     @BeforeAll
     static void needsTheReferenceImplementation() {
-        boolean fetched = Files.isDirectory(CHECK.resolve("node_modules").resolve("datapackage"));
-        if (!fetched && "true".equals(System.getenv("CI"))) {
-            fail("run `npm ci` in pipeline/src/test/node first");
-        }
-        assumeTrue(fetched, "run `npm ci` in pipeline/src/test/node to have this checked");
+        NodeCheck.needs("datapackage");
     }
 
     @ParameterizedTest(name = "seed {0}")
@@ -96,12 +87,6 @@ class DataPackageValidationTest {
 
     private List<String> check(Provenance of) throws IOException, InterruptedException {
         Path descriptor = LotTables.folder(results, of.grade(), of.lot()).resolve(DataPackage.FILE_NAME);
-        Process node = new ProcessBuilder("node", "check-package.js", descriptor.toString())
-                .directory(CHECK.toFile())
-                .redirectErrorStream(true)
-                .start();
-        String said = new String(node.getInputStream().readAllBytes(), StandardCharsets.UTF_8);
-        node.waitFor();
-        return said.lines().toList();
+        return NodeCheck.lines("check-package.js", descriptor.toString());
     }
 }

@@ -17,16 +17,16 @@ import nightlag.stages.superposition.MasterPoint;
 import nightlag.stages.superposition.ShiftFactor;
 
 /** A lot of no material, with rows in every table; every row differs from every other in its key. */
-final class RandomLot {
+public final class RandomLot {
     private final Random random;
     private final RandomPoints points;
 
-    RandomLot(long seed) {
+    public RandomLot(long seed) {
         random = new Random(seed);
         points = new RandomPoints(seed);
     }
 
-    LotResult result(String grade, String lot) {
+    public LotResult result(String grade, String lot) {
         return new LotResult(points(grade, lot), markers(), shiftFactors(), masterCurve(), spectrum(), List.of());
     }
 

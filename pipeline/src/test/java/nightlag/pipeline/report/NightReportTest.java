@@ -1,0 +1,101 @@
+package nightlag.pipeline.report;
+
+import static org.assertj.core.api.Assertions.assertThat;
+
+import com.fasterxml.jackson.databind.JsonNode;
+import com.fasterxml.jackson.databind.json.JsonMapper;
+import java.io.IOException;
+import java.nio.file.Files;
+import java.nio.file.Path;
+import java.util.List;
+import nightlag.pipeline.tables.RandomLot;
+import nightlag.stages.LotResult;
+import org.junit.jupiter.api.Test;
+import org.junit.jupiter.api.io.TempDir;
+
+class NightReportTest {
+    private static final String HOSTILE = "</script><img src=x onerror=alert(1)>&\"'";
+
+    @TempDir
+    Path folder;
+
+    @Test
+    void aNightWithNothingNewSaysSo() throws IOException {
+        String page = page(List.of());
+
+        assertThat(page)
+                .startsWith("<!DOCTYPE html>")
+                .contains("<title>Night 2026-03-01T020000</title>")
+                .contains("Nothing: all files were reduced, and every point is sound.")
+                .contains("None: nothing was new.");
+        try (var left = Files.list(folder)) {
+            assertThat(left).containsExactly(folder.resolve("report.html"));
+        }
+    }
+
+    @Test
+    void whatIsToBeLookedAtComesBeforeTheLots() throws IOException {
+        String page = page(
+                List.of(new Concern("set aside", List.of("bench/a.csv, line 7")), new Concern("none", List.of())),
+                "L-17");
+
+        assertThat(page.indexOf("bench/a.csv, line 7")).isPositive().isLessThan(page.indexOf("<h2>Heron 3"));
+        assertThat(page).doesNotContain("none <span");
+    }
+
+    @Test
+    void noTextCanEndTheElementItStandsIn() throws IOException {
+        String page = page(List.of(new Concern(HOSTILE, List.of(HOSTILE))), HOSTILE);
+
+        assertThat(page).doesNotContain("<img").contains("&lt;img");
+        assertThat(page.split("<script", -1)).hasSize(1 + 1 + 2); // the lot's charts, the library and the page's own
+    }
+
+    @Test
+    void thePageNeedsNoNetwork() throws IOException {
+        String page = page(List.of(), "L-17");
+
+        assertThat(page).contains("Content-Security-Policy\" content=\"default-src 'none'");
+        assertThat(page).doesNotContain("<link").doesNotContainPattern("<(img|script|iframe)[^>]* src=");
+    }
+
+    @Test
+    void theChartsOfALotAreDataInThePage() throws IOException {
+        LotResult result = new RandomLot(1).result("Heron 3", "L-17");
+
+        JsonNode charts = JsonMapper.builder().build().readTree(ChartJson.of(LotCharts.of(result)));
+
+        assertThat(charts.findValuesAsText("title"))
+                .contains(
+                        "Moduli over frequency",
+                        "Phase angle over modulus",
+                        "Loss over storage modulus",
+                        "Shift factors");
+        JsonNode master = find(charts, "Master curve at 190.0 °C");
+        int points = 0;
+        for (JsonNode series : master.get("series")) {
+            assertThat(series.get("x").size()).isEqualTo(series.get("y").size());
+            points += series.get("x").size();
+        }
+        assertThat(points).isEqualTo(2 * result.masterCurve().size());
+    }
+
+    private static JsonNode find(JsonNode charts, String title) {
+        for (JsonNode chart : charts) {
+            if (chart.get("title").asText().equals(title)) {
+                return chart;
+            }
+        }
+        throw new AssertionError("no chart " + title);
+    }
+
+    private String page(List<Concern> concerns, String... lots) throws IOException {
+        try (NightReport report = NightReport.begin(folder)) {
+            for (String lot : lots) {
+                report.lot("Heron 3", lot, new RandomLot(1).result("Heron 3", lot));
+            }
+            report.finish(new NightHeading("2026-03-01T020000", "1.2.3", List.of("lots 1"), concerns));
+        }
+        return Files.readString(folder.resolve(NightReport.FILE_NAME));
+    }
+}
