@@ -28,16 +28,16 @@ public final class ChirpAnalysis {
     private final Waveform waveform;
     private final double pointsPerDecade;
     private final int cutTerms;
-    private final boolean[] leftOut;
+    private final LeftOut leftOut;
+    private final CutOffs cutOffs;
     private final List<Reason> notes = new ArrayList<>();
-    private CutOffs cutOffs = new CutOffs(0, 0);
-    private int spikes;
 
     private ChirpAnalysis(Waveform waveform, double pointsPerDecade, Drift drift) {
         this.waveform = waveform;
         this.pointsPerDecade = pointsPerDecade;
         this.cutTerms = Math.max(1, drift.degree());
-        this.leftOut = new boolean[waveform.size()];
+        this.leftOut = new LeftOut(waveform);
+        this.cutOffs = CutOffs.leftAtASlope(waveform);
     }
 
     /**
@@ -51,15 +51,17 @@ public final class ChirpAnalysis {
      */
     public static List<SignalFit> analyse(Waveform waveform, double pointsPerDecade, Drift drift)
             throws ReductionFault {
+        RecordChecks.check(waveform);
         return new ChirpAnalysis(waveform, pointsPerDecade, drift).run();
     }
 
     private List<SignalFit> run() throws ReductionFault {
-        RecordChecks.check(waveform);
-        spikes = Damage.markTowering(waveform.deformation(), leftOut) + Damage.markTowering(waveform.load(), leftOut);
-        cutOffs = CutOffs.mark(waveform, leftOut);
-        cutOffs.addTo(notes);
-        Samples samples = Samples.of(waveform, 0, leftOut);
+        leftOut.leaveOutTowering();
+        int cut = leftOut.leaveOut(cutOffs);
+        if (cut > 0) {
+            notes.add(cutOffs.note(cut));
+        }
+        Samples samples = leftOut.samples(0);
         int needed = 4 * FEWEST_LINES;
         if (samples.size() < needed) {
             throw new ReductionFault(WaveformReason.WAVEFORM_TOO_FEW_SAMPLES.with(samples.size(), needed));
@@ -76,8 +78,8 @@ public final class ChirpAnalysis {
         double low = band[0] / lines.durationS();
         double high = band[1] / lines.durationS();
         notes.add(MultiFrequencyReason.CHIRP_BAND.with(low, high));
-        if (spikes > 0) {
-            notes.add(WaveformReason.WAVEFORM_SPIKES_LEFT_OUT.with(spikes));
+        if (leftOut.spikes() > 0) {
+            notes.add(WaveformReason.WAVEFORM_SPIKES_LEFT_OUT.with(leftOut.spikes()));
         }
         if (waveform.rowsLeftOut() > 0) {
             notes.add(WaveformReason.WAVEFORM_ROWS_MISSING.with(waveform.rowsLeftOut()));
@@ -143,7 +145,7 @@ public final class ChirpAnalysis {
         double loadSnr = SignalToNoise.decibels(load.abs(), loadNoise);
         ScreeningFigures figures = new ScreeningFigures(
                 (double) cutOffs.atLimit() / waveform.size(),
-                (double) spikes / waveform.size(),
+                (double) leftOut.spikes() / waveform.size(),
                 clock.gapShare(),
                 clock.jitter(),
                 deformationNoise > 0 ? SignalToNoise.decibels(amplitude, deformationNoise) : loadSnr,

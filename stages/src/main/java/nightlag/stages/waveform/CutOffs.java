@@ -1,56 +1,56 @@
 package nightlag.stages.waveform;
 
 import java.util.List;
+import java.util.function.Predicate;
 import nightlag.stages.fault.Reason;
 
 /**
- * The samples at a channel's limit in a record of several frequencies. A run at a channel's extreme counts as cut off where
- * the signal leaves it at a slope; the top of a wave in coarse steps ends by a step or two.
+ * The runs of a record that are cut off at a channel's limit, or may be. Where there are so many that no record would be
+ * left without them, none is left out and they are only counted.
  *
+ * @param runs those to leave out
  * @param atLimit how many samples stand at a limit
- * @param leftOut how many were marked to be left out, with one on either side of each run
  */
-record CutOffs(int atLimit, int leftOut) {
-    private static final double STEPS_OUT_OF_A_RUN = 3;
-    /** Where more samples than this stand at a limit, leaving them out would leave no record. */
+record CutOffs(List<LimitRun> runs, int atLimit) {
     private static final double MOST = 0.4;
 
-    /** Marks them. */
-    static CutOffs mark(Waveform waveform, boolean[] marks) {
-        List<LimitRun> runs = LimitRun.of(waveform).stream()
-                .filter(run -> leavesAtASlope(run, waveform))
-                .toList();
-        int atLimit = 0;
-        for (LimitRun run : runs) {
-            atLimit += run.length();
-        }
-        if (atLimit > MOST * waveform.size()) {
-            return new CutOffs(atLimit, 0);
-        }
-        int before = count(marks);
-        runs.forEach(run -> run.mark(marks));
-        return new CutOffs(atLimit, count(marks) - before);
+    /** Every run that may be cut off; a fit without them tells which are ({@link #confirmedBy}). */
+    static CutOffs suspected(Waveform waveform) {
+        return of(waveform, run -> true);
     }
 
-    private static boolean leavesAtASlope(LimitRun run, Waveform waveform) {
-        double[] values = run.channel() == Samples.DEFORMATION ? waveform.deformation() : waveform.load();
-        double before = run.from() > 0 ? Math.abs(values[run.from() - 1] - run.limit()) : 0;
-        double after = run.to() < values.length ? Math.abs(values[run.to()] - run.limit()) : 0;
-        return Math.max(before, after) > STEPS_OUT_OF_A_RUN * run.step();
+    /** Those that can be told without a fit. */
+    static CutOffs leftAtASlope(Waveform waveform) {
+        return of(waveform, run -> run.isLeftAtASlope(waveform));
     }
 
-    private static int count(boolean[] marks) {
-        int count = 0;
-        for (boolean mark : marks) {
-            count += mark ? 1 : 0;
-        }
-        return count;
+    private static CutOffs of(Waveform waveform, Predicate<LimitRun> counts) {
+        List<LimitRun> runs = LimitRun.of(waveform).stream().filter(counts).toList();
+        int atLimit = samples(runs);
+        return new CutOffs(atLimit > MOST * waveform.size() ? List.of() : runs, atLimit);
     }
 
-    /** Tells of them, where there are any. */
-    void addTo(List<Reason> notes) {
-        if (leftOut > 0) {
-            notes.add(WaveformReason.WAVEFORM_CLIPPED_LEFT_OUT.with(atLimit, leftOut));
+    private static int samples(List<LimitRun> runs) {
+        return runs.stream().mapToInt(LimitRun::length).sum();
+    }
+
+    /** Those that a fit without them goes beyond. */
+    CutOffs confirmedBy(Fitted fitted, Waveform waveform) {
+        if (runs.isEmpty()) {
+            return this;
         }
+        List<LimitRun> confirmed =
+                runs.stream().filter(run -> run.cutsOff(fitted, waveform)).toList();
+        return new CutOffs(confirmed, samples(confirmed));
+    }
+
+    /** Marks the runs and one sample on either side of each. */
+    void mark(boolean[] leftOut) {
+        runs.forEach(run -> run.mark(leftOut));
+    }
+
+    /** Tells of them, and how many samples are left out for them. */
+    Reason note(int leftOut) {
+        return WaveformReason.WAVEFORM_CLIPPED_LEFT_OUT.with(atLimit, leftOut);
     }
 }

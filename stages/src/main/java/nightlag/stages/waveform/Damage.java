@@ -13,11 +13,6 @@ final class Damage {
     /** More outliers than this part of the samples are no isolated spikes but something else. */
     private static final double MOST_SPIKES = 0.01;
 
-    /** A spike is larger than this part of the amplitude; smaller ones do no harm and may be the file's last digit. */
-    static final double SMALLEST_SPIKE = 1e-6;
-    /** How often residuals are searched again after spikes were left out. */
-    static final int SPIKE_ROUNDS = 5;
-
     /** A sample so many times further out than nearly all others is no part of a wave. */
     private static final double TOWERING = 3;
 

@@ -13,4 +13,10 @@ public record ExtractionPlan(double startUpCycles, int harmonics, Drift drift, F
     public static ExtractionPlan withDefaults() {
         return new ExtractionPlan(0, 7, Drift.LINEAR, FrequencySource.SIGNAL);
     }
+
+    /** Whether this record's tagged frequency is taken as it is. */
+    boolean takesTagOf(Waveform waveform) {
+        return frequencyFrom == FrequencySource.TAG
+                && waveform.nominalFrequencyHz().isPresent();
+    }
 }

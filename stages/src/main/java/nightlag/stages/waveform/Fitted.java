@@ -1,13 +1,45 @@
 package nightlag.stages.waveform;
 
+import java.util.List;
+import nightlag.stages.fault.Reason;
+
 /**
  * A fit and what it was made of.
  *
  * @param samples the samples that entered
  * @param basis the columns of the model
  * @param result the fit itself
+ * @param notes what the samples did not bear of the model asked for
  */
-record Fitted(Samples samples, Basis basis, JointFit.Result result) {
+record Fitted(Samples samples, Basis basis, JointFit.Result result, List<Reason> notes) implements FitResiduals {
+    Fitted {
+        notes = List.copyOf(notes);
+    }
+
+    Fitted(Samples samples, Basis basis, JointFit.Result result) {
+        this(samples, basis, result, List.of());
+    }
+
+    /** The same fit with these notes. */
+    Fitted noting(List<Reason> said) {
+        return new Fitted(samples, basis, result, said);
+    }
+
+    @Override
+    public double[][] residuals() {
+        return result.residuals();
+    }
+
+    @Override
+    public int columns() {
+        return basis.columns();
+    }
+
+    @Override
+    public double largestAmplitude(int channel) {
+        return amplitude(channel);
+    }
+
     /** Amplitude of a channel's fundamental. */
     double amplitude(int channel) {
         int column = basis.cosineColumn(1);

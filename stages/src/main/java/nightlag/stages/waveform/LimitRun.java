@@ -26,6 +26,8 @@ record LimitRun(int channel, int from, int to, double limit, boolean upper, doub
     private static final double BEYOND_STEPS = 2;
     /** The last digits of a file are no limit. */
     private static final double BEYOND_AMPLITUDES = 1e-7;
+    /** The top of a wave in coarse steps ends by a step or two. */
+    private static final double STEPS_OUT_OF_A_RUN = 3;
     /** Values so near the limit, as part of the range, tell the channel's step there. */
     private static final double NEAR = 0.1;
     /** Values nearer to each other than this part of the range are equal. */
@@ -89,7 +91,10 @@ record LimitRun(int channel, int from, int to, double limit, boolean upper, doub
         Arrays.fill(leftOut, Math.max(0, from - 1), Math.min(leftOut.length, to + 1), true);
     }
 
-    /** Whether a fit without the run goes beyond the limit there. */
+    /**
+     * Whether the run is cut off, told by a fit without it: it goes beyond the limit there. The surer of the two rules, for
+     * records of one frequency, where there is such a fit.
+     */
     boolean cutsOff(Fitted fitted, Waveform waveform) {
         double least = BEYOND_AMPLITUDES * fitted.amplitude(channel);
         for (int i = from; i < to; i++) {
@@ -103,6 +108,18 @@ record LimitRun(int channel, int from, int to, double limit, boolean upper, doub
             }
         }
         return false;
+    }
+
+    /**
+     * Whether the run is cut off, told by the samples beside it: the signal leaves the limit at a slope. For records of
+     * several frequencies, whose frequencies cannot be looked for before cut-offs are out. It does not mean the same as
+     * {@link #cutsOff}: a top cut off so thinly that the wave leaves the limit in small steps is seen by that rule alone.
+     */
+    boolean isLeftAtASlope(Waveform waveform) {
+        double[] values = channel == Samples.DEFORMATION ? waveform.deformation() : waveform.load();
+        double before = from > 0 ? Math.abs(values[from - 1] - limit) : 0;
+        double after = to < values.length ? Math.abs(values[to] - limit) : 0;
+        return Math.max(before, after) > STEPS_OUT_OF_A_RUN * step;
     }
 
     private static double stepNear(double[] values, double limit, double range) {

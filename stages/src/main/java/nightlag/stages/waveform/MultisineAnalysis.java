@@ -37,11 +37,10 @@ public final class MultisineAnalysis {
     private final ExtractionPlan plan;
     private final double[] givenHz;
     private final double[] given;
-    private final boolean[] leftOut;
+    private final LeftOut leftOut;
+    private final CutOffs cutOffs;
     private final List<Reason> notes = new ArrayList<>();
     private int first;
-    private CutOffs cutOffs = new CutOffs(0, 0);
-    private int spikes;
 
     private MultisineAnalysis(Waveform waveform, List<Double> frequenciesHz, ExtractionPlan plan) {
         this.waveform = waveform;
@@ -49,7 +48,8 @@ public final class MultisineAnalysis {
         this.givenHz =
                 frequenciesHz.stream().mapToDouble(Double::doubleValue).sorted().toArray();
         this.given = DoubleStream.of(givenHz).map(hz -> 2 * Math.PI * hz).toArray();
-        this.leftOut = new boolean[waveform.size()];
+        this.leftOut = new LeftOut(waveform);
+        this.cutOffs = CutOffs.leftAtASlope(waveform);
     }
 
     /**
@@ -63,10 +63,31 @@ public final class MultisineAnalysis {
      */
     public static List<SignalFit> analyse(Waveform waveform, List<Double> frequenciesHz, ExtractionPlan plan)
             throws ReductionFault {
+        RecordChecks.check(waveform);
         return new MultisineAnalysis(waveform, frequenciesHz, plan).run();
     }
 
-    private record Fitted(Samples samples, ToneBasis basis, ToneFit.Result result, ToneFit.Freedom freedom) {
+    private record Fitted(Samples samples, ToneBasis basis, ToneFit.Result result, ToneFit.Freedom freedom)
+            implements FitResiduals {
+        @Override
+        public double[][] residuals() {
+            return result.residuals();
+        }
+
+        @Override
+        public int columns() {
+            return basis.columns();
+        }
+
+        @Override
+        public double largestAmplitude(int channel) {
+            double largest = 0;
+            for (int k = 0; k < basis.tones(); k++) {
+                largest = Math.max(largest, amplitude(channel, k));
+            }
+            return largest;
+        }
+
         double amplitude(int channel, int tone) {
             double[] x = result.coefficients()[channel];
             int column = basis.cosineColumn(tone);
@@ -75,10 +96,11 @@ public final class MultisineAnalysis {
     }
 
     private List<SignalFit> run() throws ReductionFault {
-        RecordChecks.check(waveform);
-        cutOffs = CutOffs.mark(waveform, leftOut);
-        cutOffs.addTo(notes);
-        Samples samples = Samples.of(waveform, 0, leftOut);
+        int cut = leftOut.leaveOut(cutOffs);
+        if (cut > 0) {
+            notes.add(cutOffs.note(cut));
+        }
+        Samples samples = leftOut.samples(0);
         requireSamples(samples, 2);
         double[] start = given.length > 0 ? given : new ToneSearch(samples).found();
         if (given.length == 0 && start.length < 2) {
@@ -92,7 +114,7 @@ public final class MultisineAnalysis {
         }
         requireRoom(samples, start);
         requireSamples(samples, start.length);
-        Fitted fitted = withoutSpikes(fit(samples, start));
+        Fitted fitted = leftOut.withoutSpikes(fit(samples, start), first, this::refit);
         requireExplained(fitted);
         return summaries(fitted);
     }
@@ -110,7 +132,7 @@ public final class MultisineAnalysis {
         while (first < timeS.length && timeS[first] < end) {
             first++;
         }
-        Samples rest = Samples.of(waveform, first, leftOut);
+        Samples rest = leftOut.samples(first);
         if (rest.size() < 2) {
             throw new ReductionFault(WaveformReason.WAVEFORM_ALL_START_UP.with(
                     plan.startUpCycles(), slowest * all.durationS() / (2 * Math.PI)));
@@ -161,38 +183,9 @@ public final class MultisineAnalysis {
         return new Fitted(samples, fit.basis(), best, freedom);
     }
 
-    private Fitted withoutSpikes(Fitted start) throws ReductionFault {
-        Fitted fitted = start;
-        for (int round = 0; round < Damage.SPIKE_ROUNDS; round++) {
-            int found = 0;
-            for (int c = 0; c < Samples.CHANNELS; c++) {
-                double[] residuals = fitted.result().residuals()[c];
-                if (Damage.suspicious(residuals)) {
-                    double freedom = residuals.length - fitted.basis().columns();
-                    for (int place : Damage.spikes(residuals, freedom, Damage.SMALLEST_SPIKE * largest(fitted, c))) {
-                        int index = fitted.samples().indices()[place];
-                        found += leftOut[index] ? 0 : 1;
-                        leftOut[index] = true;
-                    }
-                }
-            }
-            if (found == 0) {
-                break;
-            }
-            spikes += found;
-            Samples rest = Samples.of(waveform, first, leftOut);
-            requireSamples(rest, fitted.basis().tones());
-            fitted = fit(rest, given.length > 0 ? given : fitted.result().angularFrequencies());
-        }
-        return fitted;
-    }
-
-    private static double largest(Fitted fitted, int channel) {
-        double largest = 0;
-        for (int k = 0; k < fitted.basis().tones(); k++) {
-            largest = Math.max(largest, fitted.amplitude(channel, k));
-        }
-        return largest;
+    private Fitted refit(Samples rest, Fitted before) throws ReductionFault {
+        requireSamples(rest, before.basis().tones());
+        return fit(rest, given.length > 0 ? given : before.result().angularFrequencies());
     }
 
     /** A record that holds more than its tones and a drift is something else. */
@@ -213,8 +206,8 @@ public final class MultisineAnalysis {
     private List<SignalFit> summaries(Fitted fitted) {
         ToneNoise noise = new ToneNoise(
                 fitted.samples(), fitted.basis(), fitted.result(), fitted.freedom() != ToneFit.Freedom.NONE);
-        if (spikes > 0) {
-            notes.add(WaveformReason.WAVEFORM_SPIKES_LEFT_OUT.with(spikes));
+        if (leftOut.spikes() > 0) {
+            notes.add(WaveformReason.WAVEFORM_SPIKES_LEFT_OUT.with(leftOut.spikes()));
         }
         if (waveform.rowsLeftOut() > 0) {
             notes.add(WaveformReason.WAVEFORM_ROWS_MISSING.with(waveform.rowsLeftOut()));
@@ -245,7 +238,7 @@ public final class MultisineAnalysis {
         overtone(fitted, tone).ifPresent(toneNotes::add);
         ScreeningFigures figures = new ScreeningFigures(
                 (double) cutOffs.atLimit() / waveform.size(),
-                (double) spikes / waveform.size(),
+                (double) leftOut.spikes() / waveform.size(),
                 clock.gapShare(),
                 clock.jitter(),
                 snrDb(fitted, noise, Samples.DEFORMATION, tone),
