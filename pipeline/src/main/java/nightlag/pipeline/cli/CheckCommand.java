@@ -9,8 +9,6 @@ import java.util.Optional;
 import java.util.concurrent.Callable;
 import java.util.stream.Collectors;
 import nightlag.pipeline.config.Configuration;
-import nightlag.pipeline.config.ConfigurationException;
-import nightlag.pipeline.config.ConfigurationReader;
 import nightlag.pipeline.config.Intake;
 import nightlag.pipeline.decode.FileDescription;
 import nightlag.pipeline.decode.FileDescription.DescribedChannel;
@@ -44,29 +42,26 @@ final class CheckCommand implements Callable<Integer> {
             index = "0",
             arity = "0..1",
             paramLabel = "NIGHT.toml",
-            defaultValue = "config/night.toml",
+            defaultValue = NightFile.DEFAULT,
             description = "The night file (${DEFAULT-VALUE}).")
     private Path nightFile;
 
     @Override
     public Integer call() {
-        PrintWriter out = spec.commandLine().getOut();
         PrintWriter err = spec.commandLine().getErr();
-        try {
-            Configuration configuration = ConfigurationReader.read(nightFile);
-            print(configuration, out);
-            Preview preview = Preview.of(configuration, Clock.system(ZoneId.systemDefault()));
-            print(preview, out);
-            configuration.gradeProblems().forEach(problem -> err.println(problem.sentence()));
-            boolean right = configuration.gradeProblems().isEmpty() && preview.someIntakeReadable();
-            return right ? Nightlag.ALL_WELL : Nightlag.CANNOT_BEGIN;
-        } catch (ConfigurationException e) {
-            e.problems().forEach(problem -> err.println(problem.sentence()));
-            return Nightlag.CANNOT_BEGIN;
-        } catch (NightFault e) {
-            err.println("nightlag: " + e.getMessage());
-            return e.kind() == NightFault.Kind.CANNOT_BEGIN ? Nightlag.CANNOT_BEGIN : Nightlag.STOPPED;
-        }
+        return NightFile.read(
+                nightFile,
+                err,
+                configuration -> check(configuration, spec.commandLine().getOut(), err));
+    }
+
+    private static int check(Configuration configuration, PrintWriter out, PrintWriter err) throws NightFault {
+        print(configuration, out);
+        Preview preview = Preview.of(configuration, Clock.system(ZoneId.systemDefault()));
+        print(preview, out);
+        configuration.gradeProblems().forEach(problem -> err.println(problem.sentence()));
+        boolean right = configuration.gradeProblems().isEmpty() && preview.someIntakeReadable();
+        return right ? Nightlag.ALL_WELL : Nightlag.CANNOT_BEGIN;
     }
 
     private static void print(Configuration configuration, PrintWriter out) {

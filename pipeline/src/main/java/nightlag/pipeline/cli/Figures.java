@@ -3,8 +3,9 @@ package nightlag.pipeline.cli;
 import java.math.BigDecimal;
 import java.math.MathContext;
 import java.util.Locale;
+import nightlag.pipeline.tables.Decimals;
 
-/** Numbers as a person reads them. */
+/** Numbers as a person reads them, few digits and early exponents; those of the tables must read back the same. */
 final class Figures {
     private static final MathContext SEVEN = new MathContext(7);
 
@@ -26,11 +27,6 @@ final class Figures {
     }
 
     private static String plain(BigDecimal number) {
-        BigDecimal value = number.stripTrailingZeros();
-        int exponent = value.precision() - value.scale() - 1;
-        if (value.signum() == 0 || (exponent >= SMALLEST_PLAIN && exponent <= LARGEST_PLAIN)) {
-            return value.toPlainString();
-        }
-        return value.movePointLeft(exponent).toPlainString() + "e" + exponent;
+        return Decimals.text(number, SMALLEST_PLAIN, LARGEST_PLAIN);
     }
 }

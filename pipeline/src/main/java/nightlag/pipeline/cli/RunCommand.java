@@ -9,8 +9,6 @@ import java.util.OptionalInt;
 import java.util.Set;
 import java.util.concurrent.Callable;
 import nightlag.pipeline.config.Configuration;
-import nightlag.pipeline.config.ConfigurationException;
-import nightlag.pipeline.config.ConfigurationReader;
 import nightlag.pipeline.night.Night;
 import nightlag.pipeline.night.NightFault;
 import nightlag.pipeline.night.NightOutcome;
@@ -47,7 +45,7 @@ final class RunCommand implements Callable<Integer> {
             index = "0",
             arity = "0..1",
             paramLabel = "NIGHT.toml",
-            defaultValue = "config/night.toml",
+            defaultValue = NightFile.DEFAULT,
             description = "The night file (${DEFAULT-VALUE}).")
     private Path nightFile;
 
@@ -75,30 +73,26 @@ final class RunCommand implements Callable<Integer> {
             throw new ParameterException(
                     spec.commandLine(), "--workers is " + workers + "; it must be 0 (one per processor) or more");
         }
+        return NightFile.read(nightFile, spec.commandLine().getErr(), this::run);
+    }
+
+    private int run(Configuration configuration) throws NightFault {
         PrintWriter out = spec.commandLine().getOut();
-        PrintWriter err = spec.commandLine().getErr();
-        try {
-            Configuration configuration = ConfigurationReader.read(nightFile);
-            if (!quiet) {
-                NotActedOn.print(configuration, out);
-            }
-            Night night = new Night(
-                    configuration,
-                    new RunOptions(grades, lots, redo, requestedWorkers()),
-                    quiet ? Progress.silent() : ConsoleProgress.forThisConsole(err),
-                    Clock.system(ZoneId.systemDefault()));
-            NightOutcome outcome = night.run();
-            if (!quiet) {
-                new Summary(configuration, outcome).print(out);
-            }
-            return outcome.allWell() ? Nightlag.ALL_WELL : Nightlag.SOMETHING_LEFT;
-        } catch (ConfigurationException e) {
-            e.problems().forEach(problem -> err.println(problem.sentence()));
-            return Nightlag.CANNOT_BEGIN;
-        } catch (NightFault e) {
-            err.println("nightlag: " + e.getMessage());
-            return e.kind() == NightFault.Kind.CANNOT_BEGIN ? Nightlag.CANNOT_BEGIN : Nightlag.STOPPED;
+        if (!quiet) {
+            NotActedOn.print(configuration, out);
         }
+        Night night = new Night(
+                configuration,
+                new RunOptions(grades, lots, redo, requestedWorkers()),
+                quiet
+                        ? Progress.silent()
+                        : ConsoleProgress.forThisConsole(spec.commandLine().getErr()),
+                Clock.system(ZoneId.systemDefault()));
+        NightOutcome outcome = night.run();
+        if (!quiet) {
+            new Summary(configuration, outcome).print(out);
+        }
+        return outcome.allWell() ? Nightlag.ALL_WELL : Nightlag.SOMETHING_LEFT;
     }
 
     private OptionalInt requestedWorkers() {

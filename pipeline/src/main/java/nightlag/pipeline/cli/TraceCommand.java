@@ -6,8 +6,6 @@ import java.util.List;
 import java.util.Optional;
 import java.util.concurrent.Callable;
 import nightlag.pipeline.config.Configuration;
-import nightlag.pipeline.config.ConfigurationException;
-import nightlag.pipeline.config.ConfigurationReader;
 import nightlag.pipeline.night.FileTrace;
 import nightlag.pipeline.night.NightFault;
 import picocli.CommandLine.Command;
@@ -34,8 +32,6 @@ import picocli.CommandLine.Spec;
             "2:the command line or the configuration is wrong, or the file is in none of the intakes"
         })
 final class TraceCommand implements Callable<Integer> {
-    private static final String DEFAULT_NIGHT = "config/night.toml";
-
     @Spec
     private CommandSpec spec;
 
@@ -43,9 +39,9 @@ final class TraceCommand implements Callable<Integer> {
             arity = "1..2",
             paramLabel = "[NIGHT.toml] FILE",
             hideParamSyntax = true,
-            description =
-                    "The night file (" + DEFAULT_NIGHT + ") and the raw file: a path to it, or its name in tables, such"
-                            + " as melt-bench/L17/1/180C.csv.")
+            description = "The night file (" + NightFile.DEFAULT
+                    + ") and the raw file: a path to it, or its name in tables, such"
+                    + " as melt-bench/L17/1/180C.csv.")
     private List<String> names;
 
     @Option(names = "--point", paramLabel = "P", description = "The point to follow (the first).")
@@ -53,20 +49,14 @@ final class TraceCommand implements Callable<Integer> {
 
     @Override
     public Integer call() {
+        Path nightFile = Path.of(names.size() == 2 ? names.get(0) : NightFile.DEFAULT);
+        return NightFile.read(nightFile, spec.commandLine().getErr(), this::trace);
+    }
+
+    private int trace(Configuration configuration) throws NightFault {
+        FileTrace trace = FileTrace.of(configuration, names.get(names.size() - 1), Optional.ofNullable(point));
         PrintWriter out = spec.commandLine().getOut();
-        PrintWriter err = spec.commandLine().getErr();
-        try {
-            Path nightFile = Path.of(names.size() == 2 ? names.get(0) : DEFAULT_NIGHT);
-            Configuration configuration = ConfigurationReader.read(nightFile);
-            FileTrace trace = FileTrace.of(configuration, names.get(names.size() - 1), Optional.ofNullable(point));
-            new TracePage(trace).lines().forEach(out::println);
-            return trace.problem().isEmpty() ? Nightlag.ALL_WELL : Nightlag.SOMETHING_LEFT;
-        } catch (ConfigurationException e) {
-            e.problems().forEach(problem -> err.println(problem.sentence()));
-            return Nightlag.CANNOT_BEGIN;
-        } catch (NightFault e) {
-            err.println("nightlag: " + e.getMessage());
-            return e.kind() == NightFault.Kind.CANNOT_BEGIN ? Nightlag.CANNOT_BEGIN : Nightlag.STOPPED;
-        }
+        new TracePage(trace).lines().forEach(out::println);
+        return trace.problem().isEmpty() ? Nightlag.ALL_WELL : Nightlag.SOMETHING_LEFT;
     }
 }

@@ -130,7 +130,10 @@ final class Describing {
         return new FileDescription.DescribedTag(name, value.text(), si, value.from());
     }
 
-    /** Without what the conversion of a decimal number to SI leaves in the last digits. */
+    /**
+     * A number that a file or an instrument file holds, near enough to be found there again: never with an exponent, and
+     * without what its conversion to SI leaves in the last digits.
+     */
     static String toTenDigits(double value) {
         return new BigDecimal(value)
                 .round(new MathContext(10))

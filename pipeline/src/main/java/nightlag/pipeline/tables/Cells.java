@@ -35,19 +35,11 @@ final class Cells {
         for (int digits = FEWEST_DIGITS; digits < MOST_DIGITS; digits++) {
             BigDecimal rounded = exact.round(new MathContext(digits, RoundingMode.HALF_EVEN));
             if (rounded.doubleValue() == value) {
-                return plainOrExponent(rounded);
+                return Decimals.text(rounded, LOWEST_PLAIN, HIGHEST_PLAIN);
             }
         }
-        return plainOrExponent(exact.round(new MathContext(MOST_DIGITS, RoundingMode.HALF_EVEN)));
-    }
-
-    private static String plainOrExponent(BigDecimal number) {
-        BigDecimal stripped = number.stripTrailingZeros();
-        int exponent = stripped.precision() - stripped.scale() - 1;
-        if (exponent >= LOWEST_PLAIN && exponent <= HIGHEST_PLAIN) {
-            return stripped.toPlainString();
-        }
-        return stripped.movePointLeft(exponent).toPlainString() + "e" + exponent;
+        BigDecimal rounded = exact.round(new MathContext(MOST_DIGITS, RoundingMode.HALF_EVEN));
+        return Decimals.text(rounded, LOWEST_PLAIN, HIGHEST_PLAIN);
     }
 
     /**
