@@ -270,6 +270,8 @@ class ScreeningTest {
                 Arguments.of(Flag.WEAK_SIGNAL, snr(13)),
                 Arguments.of(Flag.DRIFTING, drift(1.1)),
                 Arguments.of(Flag.UNSETTLED, trend(0.25)),
+                Arguments.of(Flag.NONLINEAR, order(3, 0.21)),
+                Arguments.of(Flag.EVEN_HARMONICS, order(4, 0.21)),
                 Arguments.of(Flag.INERTIA_HEAVY, inertia(11)),
                 Arguments.of(Flag.COMPLIANCE_HEAVY, compliance(0.95)),
                 Arguments.of(Flag.TEMPERATURE_WANDER, temperature(0.7)),
