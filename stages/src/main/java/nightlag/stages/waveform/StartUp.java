@@ -22,12 +22,17 @@ final class StartUp {
             return 0;
         }
         double[] timeS = waveform.timeS();
-        double end = beginS() + cycles * cycleS(angularFrequency) - 0.25 * all.intervalS();
+        double end = endS(angularFrequency) - 0.25 * all.intervalS();
         int index = 0;
         while (index < timeS.length && timeS[index] < end) {
             index++;
         }
         return index;
+    }
+
+    /** The time it ends, s. */
+    double endS(double angularFrequency) {
+        return beginS() + cycles * cycleS(angularFrequency);
     }
 
     /** What is said where nothing is left after it. */
