@@ -84,6 +84,11 @@ public record ModulusPoint(
                 unusableOnlyBy);
     }
 
+    /** The same point with another modulus, nothing else changed. */
+    public ModulusPoint withModuli(Moduli other) {
+        return changed(stressAmplitudePa, Optional.of(other), harmonics, quality, flags, reasons, unusableOnlyBy);
+    }
+
     /** The same point with one more flag; it is no better than doubtful. */
     public ModulusPoint flagged(Flag flag, Reason why) {
         List<Flag> more = Stream.concat(flags.stream(), Stream.of(flag))

@@ -3,7 +3,6 @@ package nightlag.stages.sweep;
 import java.util.ArrayList;
 import java.util.Arrays;
 import java.util.Collections;
-import java.util.Comparator;
 import java.util.IdentityHashMap;
 import java.util.List;
 import java.util.Set;
@@ -14,15 +13,13 @@ import nightlag.stages.moduli.Quality;
 import nightlag.stages.numeric.RankCorrelation;
 
 /**
- * The amplitude sweeps of a lot: points of one specimen and sweep, at one temperature and frequency, in which the strain
- * varies.
+ * The amplitude sweeps of a lot: points of one specimen, sweep and deformation, at one temperature and frequency, in which
+ * the strain varies.
  *
  * @param sweeps the sweeps, the points of each with strain rising
  * @param others the points of none
  */
 public record AmplitudeSweeps(List<List<ModulusPoint>> sweeps, List<ModulusPoint> others) {
-    /** Strains and frequencies this close, relatively, are one. */
-    private static final double SAME = 0.01;
     /** The strain must vary by more. */
     private static final double LEAST_STRAIN_RATIO = 1.5;
     /** And the stress by more: in a run at constant stress the strain follows the modulus. A paste that yields needs little. */
@@ -51,9 +48,9 @@ public record AmplitudeSweeps(List<List<ModulusPoint>> sweeps, List<ModulusPoint
         if (kind == SweepPlan.Kind.AUTO || kind == SweepPlan.Kind.AMPLITUDE) {
             List<ModulusPoint> candidates =
                     points.stream().filter(AmplitudeSweeps::canBelong).toList();
-            for (List<ModulusPoint> sweep : SweepName.group(candidates).values()) {
-                for (List<ModulusPoint> isotherm : isotherms(sweep)) {
-                    for (List<ModulusPoint> group : byNearness(isotherm, AmplitudeSweeps::frequency)) {
+            for (List<ModulusPoint> sweep : SweepName.groupByDeformation(candidates)) {
+                for (List<ModulusPoint> isotherm : PointGroups.byIsotherm(sweep)) {
+                    for (List<ModulusPoint> group : PointGroups.byFrequency(isotherm)) {
                         List<List<ModulusPoint>> strains = strains(group);
                         if (strains.size() > 1 && (kind == SweepPlan.Kind.AMPLITUDE || isDriven(strains))) {
                             sweeps.add(strains.stream().flatMap(List::stream).toList());
@@ -70,16 +67,12 @@ public record AmplitudeSweeps(List<List<ModulusPoint>> sweeps, List<ModulusPoint
 
     /** The points of a sweep by strain, those within a hundredth of each other together, strain rising. */
     static List<List<ModulusPoint>> strains(List<ModulusPoint> points) {
-        return byNearness(points, AmplitudeSweeps::strain);
+        return PointGroups.byStrain(points);
     }
 
     /** A point's strain amplitude. */
     static double strain(ModulusPoint point) {
         return point.strainAmplitude().orElseThrow();
-    }
-
-    private static double frequency(ModulusPoint point) {
-        return point.frequencyHz().orElseThrow();
     }
 
     private static boolean canBelong(ModulusPoint point) {
@@ -90,30 +83,6 @@ public record AmplitudeSweeps(List<List<ModulusPoint>> sweeps, List<ModulusPoint
                 && point.strainAmplitude().orElse(0) > 0
                 && point.stressAmplitudePa().orElse(0) > 0
                 && point.moduli().filter(moduli -> moduli.complex().isFinite()).isPresent();
-    }
-
-    /** By temperature; points without one are together. */
-    private static List<List<ModulusPoint>> isotherms(List<ModulusPoint> points) {
-        List<List<ModulusPoint>> groups = new ArrayList<>();
-        Isotherms.group(points).forEach(isotherm -> groups.add(isotherm.points()));
-        groups.add(
-                points.stream().filter(point -> point.temperatureK().isEmpty()).toList());
-        return groups;
-    }
-
-    private static List<List<ModulusPoint>> byNearness(
-            List<ModulusPoint> points, ToDoubleFunction<ModulusPoint> figure) {
-        List<List<ModulusPoint>> groups = new ArrayList<>();
-        double first = 0;
-        for (ModulusPoint point :
-                points.stream().sorted(Comparator.comparingDouble(figure)).toList()) {
-            if (groups.isEmpty() || figure.applyAsDouble(point) > first * (1 + SAME)) {
-                groups.add(new ArrayList<>());
-                first = figure.applyAsDouble(point);
-            }
-            groups.get(groups.size() - 1).add(point);
-        }
-        return groups;
     }
 
     /**

@@ -2,6 +2,7 @@ package nightlag.stages.sweep;
 
 import java.util.List;
 import nightlag.stages.moduli.ModulusPoint;
+import nightlag.stages.moduli.ModulusReading;
 
 /**
  * Points at one temperature.
@@ -13,5 +14,16 @@ public record Isotherm(double temperatureK, List<ModulusPoint> points) {
     /** Copies the list. */
     public Isotherm {
         points = List.copyOf(points);
+    }
+
+    /** The moduli over frequency of those points that have both, in their order. */
+    public List<ModulusReading> readings() {
+        return points.stream()
+                .filter(point ->
+                        point.frequencyHz().isPresent() && point.moduli().isPresent())
+                .map(point -> new ModulusReading(
+                        2 * Math.PI * point.frequencyHz().orElseThrow(),
+                        point.moduli().orElseThrow()))
+                .toList();
     }
 }

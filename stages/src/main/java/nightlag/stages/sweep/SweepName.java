@@ -22,4 +22,15 @@ public record SweepName(String specimen, String sweep) {
     public static Map<SweepName, List<ModulusPoint>> group(List<ModulusPoint> points) {
         return points.stream().collect(Collectors.groupingBy(SweepName::of, LinkedHashMap::new, Collectors.toList()));
     }
+
+    /** The points of each sweep and deformation, a modulus in shear being another than one in extension. */
+    static List<List<ModulusPoint>> groupByDeformation(List<ModulusPoint> points) {
+        return group(points).values().stream()
+                .flatMap(sweep -> sweep.stream()
+                        .collect(Collectors.groupingBy(
+                                ModulusPoint::deformation, LinkedHashMap::new, Collectors.toList()))
+                        .values()
+                        .stream())
+                .toList();
+    }
 }

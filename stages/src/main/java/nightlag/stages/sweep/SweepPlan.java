@@ -1,5 +1,7 @@
 package nightlag.stages.sweep;
 
+import java.util.Locale;
+
 /**
  * How points become sweeps: the section {@code [sweeps]} of a grade.
  *
@@ -14,7 +16,12 @@ public record SweepPlan(Kind kind, Repeats repeats, OnsetAxis onsetAxis) {
         AMPLITUDE,
         FREQUENCY,
         TEMPERATURE,
-        TIME
+        TIME;
+
+        /** The word in configuration and notes. */
+        public String word() {
+            return name().toLowerCase(Locale.ROOT);
+        }
     }
 
     /** What becomes of repeats. */

@@ -7,7 +7,30 @@ public enum SweepReason implements ReasonCode {
     /** {0} corrected over apparent modulus. */
     SWEEP_RIM_CORRECTED("parallel plates: the modulus at the rim is {0} of what their linear formula gives"),
     /** No parts. */
-    SWEEP_NONLINEAR_BY_DESIGN("nonlinear: in an amplitude sweep this makes the point doubtful, not unusable");
+    SWEEP_NONLINEAR_BY_DESIGN("nonlinear: in an amplitude sweep this makes the point doubtful, not unusable"),
+    /** How many points. */
+    SWEEP_REPEATS_AVERAGED("the average of {0} repeats"),
+    /** Specimen, sweep, how many unusable points, of how many. */
+    SWEEP_UNUSABLE_LEFT_OUT("specimen {0}, sweep {1}: {2} of {3} points unusable, left out of all that follows"),
+    /** Specimen, how many sweeps. */
+    SWEEP_SINGLE_POINTS(
+            "specimen {0}: sweeps of one usable point: {1}; points that belong together need one name in the tag sweep"),
+    /** Specimen, sweep, how many points, what varies or was asked for. */
+    SWEEP_POINTS_IN_NONE("specimen {0}, sweep {1}: points that are part of no {3}: {2}"),
+    /** Specimen, sweep, what varies, what they were taken for. */
+    SWEEP_AMBIGUOUS(
+            "specimen {0}, sweep {1}: {2} vary, taken as {3}; kind of the section sweeps in the grade file decides otherwise"),
+    /** Specimen, sweep. */
+    SWEEP_MIXED_DEFORMATION(
+            "specimen {0}, sweep {1}: points in shear and in extension, two different moduli, are taken as two sweeps"),
+    /** Specimen, sweep, how many points, how many they became, how much larger u became. */
+    SWEEP_REPEATS_TOGETHER(
+            "specimen {0}, sweep {1}: {2} points, repeats averaged, became {3}; their scatter made u {4} times as large"),
+    /** How many points. */
+    SWEEP_AMPLITUDE_NOT_SUPERPOSED("points of amplitude sweeps kept out of the isotherms: {0}"),
+    /** How many points. */
+    SWEEP_RAMP_NOT_SUPERPOSED(
+            "points of temperature ramps and time sweeps, which hold no isotherm, kept out of the isotherms: {0}");
 
     private final String template;
 
