@@ -10,12 +10,17 @@ import nightlag.stages.moduli.ModuliCovariance;
  * Proc. R. Soc. Edinburgh 55 (1936) 42).
  */
 final class WeightedMean {
+    /** A determinant smaller than this part of the product of the variances is rounding. */
+    private static final double SINGULAR = 1e-12;
+
     private WeightedMean() {}
 
     /** Whether a covariance is there and can be inverted. */
     static boolean canWeigh(Moduli moduli) {
         return moduli.covariance()
-                .filter(own -> own.storageVariance() > 0 && own.lossVariance() > 0 && determinant(own) > 0)
+                .filter(own -> own.storageVariance() > 0
+                        && own.lossVariance() > 0
+                        && determinant(own) > SINGULAR * own.storageVariance() * own.lossVariance())
                 .isPresent();
     }
 
