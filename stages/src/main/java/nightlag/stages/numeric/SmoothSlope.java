@@ -67,10 +67,57 @@ public final class SmoothSlope {
         if (x.length < FEWEST) {
             throw new IllegalArgumentException("fewer than three values");
         }
-        return new SmoothSlope(x, y, variance, places).mostLikely();
+        return new SmoothSlope(x, y, variance, places).mostLikely().slopes();
     }
 
-    private Slopes mostLikely() {
+    /**
+     * The curve itself.
+     *
+     * @param x where the values were observed, strictly rising
+     * @param y values
+     * @param variance u² of the values, above zero
+     * @throws IllegalArgumentException if there are fewer than three values
+     */
+    public static Curve curve(double[] x, double[] y, double[] variance) {
+        if (x.length < FEWEST) {
+            throw new IllegalArgumentException("fewer than three values");
+        }
+        return new Curve(new SmoothSlope(x, new double[][] {y}, variance, x).mostLikely());
+    }
+
+    /** A smooth curve through scattered values, between the first of them and the last. */
+    public static final class Curve {
+        private final Fit fit;
+
+        private Curve(Fit fit) {
+            this.fit = fit;
+        }
+
+        /** The curve (derivative 0) or its slope (1) at a place. */
+        public double at(double place, int derivative) {
+            return fit.at(place, derivative).values[0];
+        }
+
+        /** Standard uncertainty of the curve or its slope at a place. */
+        public double u(double place, int derivative) {
+            return Math.sqrt(fit.at(place, derivative).variance);
+        }
+
+        /** How much the curve at a place moves with each value. */
+        public double[] weights(double place) {
+            return fit.at(place, 0).weights;
+        }
+
+        /** By how much u² of the values is larger than was given, their scatter being so. */
+        public double widening() {
+            return fit.widening;
+        }
+    }
+
+    /** What is known at one place: a figure of each curve, u² of all, how much they move with each value. */
+    private record Place(double[] values, double variance, double[] weights) {}
+
+    private Fit mostLikely() {
         double precision = Arrays.stream(variance).map(v -> 1 / v).sum();
         double perStrength = process(span, span, 0, 0);
         double low = WEAKEST / (precision * perStrength);
@@ -86,7 +133,7 @@ public final class SmoothSlope {
         for (int step = -FINE_STEPS + 1; step < FINE_STEPS; step++) {
             best = best.orBetter(Math.max(low, coarse * Math.pow(FINE_STEP, step)));
         }
-        return best.slopes();
+        return best;
     }
 
     private static double squaredRange(double[] values) {
@@ -217,40 +264,52 @@ public final class SmoothSlope {
 
         Slopes slopes() {
             int count = data.places.length;
-            int n = data.x.length;
             double[][] slope = new double[data.y.length][count];
             double[] slopeVariance = new double[count];
             double[][] weights = new double[count][];
             for (int k = 0; k < count; k++) {
-                double place = data.places[k] - data.origin;
-                double[] with = new double[n];
-                for (int i = 0; i < n; i++) {
-                    with[i] = strength * data.process(place, data.x[i] - data.origin, 1, 0);
-                }
-                double[] own = data.powers(data.places[k], 1);
+                Place place = at(data.places[k], 1);
                 for (int c = 0; c < slope.length; c++) {
-                    slope[c][k] = dot(with, residuals[c]) + dot(own, coefficients[c]);
+                    slope[c][k] = place.values[c];
                 }
-                double[] solved = spread.solve(with);
-                double[] lacking = own.clone();
-                for (int p = 0; p < lacking.length; p++) {
-                    lacking[p] -= dot(spreadPolynomial[p], with);
-                }
-                double[] correction = normal.solve(lacking);
-                slopeVariance[k] = widening
-                        * Math.max(
-                                strength * data.process(place, place, 1, 1)
-                                        - dot(with, solved)
-                                        + dot(lacking, correction),
-                                0);
-                weights[k] = solved;
-                for (int p = 0; p < correction.length; p++) {
-                    for (int i = 0; i < n; i++) {
-                        weights[k][i] += correction[p] * spreadPolynomial[p][i];
-                    }
-                }
+                slopeVariance[k] = place.variance;
+                weights[k] = place.weights;
             }
             return new Slopes(slope, slopeVariance, weights);
+        }
+
+        /** The curves, or their derivatives, at a place. */
+        Place at(double where, int derivative) {
+            int n = data.x.length;
+            double place = where - data.origin;
+            double[] with = new double[n];
+            for (int i = 0; i < n; i++) {
+                with[i] = strength * data.process(place, data.x[i] - data.origin, derivative, 0);
+            }
+            double[] own = data.powers(where, derivative);
+            double[] values = new double[data.y.length];
+            for (int c = 0; c < values.length; c++) {
+                values[c] = dot(with, residuals[c]) + dot(own, coefficients[c]);
+            }
+            double[] solved = spread.solve(with);
+            double[] lacking = own.clone();
+            for (int p = 0; p < lacking.length; p++) {
+                lacking[p] -= dot(spreadPolynomial[p], with);
+            }
+            double[] correction = normal.solve(lacking);
+            double variance = widening
+                    * Math.max(
+                            strength * data.process(place, place, derivative, derivative)
+                                    - dot(with, solved)
+                                    + dot(lacking, correction),
+                            0);
+            double[] weights = solved;
+            for (int p = 0; p < correction.length; p++) {
+                for (int i = 0; i < n; i++) {
+                    weights[i] += correction[p] * spreadPolynomial[p][i];
+                }
+            }
+            return new Place(values, variance, weights);
         }
 
         private static double dot(double[] left, double[] right) {

@@ -18,6 +18,11 @@ public record Isotherm(double temperatureK, List<ModulusPoint> points) {
 
     /** The moduli over frequency of those points that have both, in their order. */
     public List<ModulusReading> readings() {
+        return readings(points);
+    }
+
+    /** The moduli over frequency of points, likewise. */
+    static List<ModulusReading> readings(List<ModulusPoint> points) {
         return points.stream()
                 .filter(point ->
                         point.frequencyHz().isPresent() && point.moduli().isPresent())

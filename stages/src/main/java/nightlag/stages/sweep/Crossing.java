@@ -1,0 +1,33 @@
+package nightlag.stages.sweep;
+
+import nightlag.stages.numeric.SmoothSlope.Curve;
+import nightlag.stages.sweep.LogModuli.Figure;
+import nightlag.stages.sweep.Zeros.Zero;
+
+/** What is read off one curve at the zero of another. */
+final class Crossing {
+    private Crossing() {}
+
+    /**
+     * The standard uncertainty of a logarithm f + k·x where ln tan δ is zero. The place errs by δx = −δt/t', and so
+     * u² = u²(f) + s² u²(x) − 2 (s/t') u(f, t), with s = f' + k.
+     *
+     * @param near the data
+     * @param lossFactor the curve of ln tan δ
+     * @param figure what f is
+     * @param curve the curve of f
+     * @param zero the zero of ln tan δ
+     * @param abscissae k, how often the place itself is in the figure
+     */
+    static double u(LogModuli near, Curve lossFactor, Figure figure, Curve curve, Zero zero, int abscissae) {
+        double place = zero.place();
+        double slope = curve.at(place, 1) + abscissae;
+        double shared = near.covariance(figure, curve, Figure.LOSS_FACTOR, lossFactor, place);
+        double own = curve.u(place, 0);
+        double moved = slope * zero.u();
+        double correlation = -2 * slope / lossFactor.at(place, 1) * shared;
+        // a correlation cannot take away more than all of it
+        return Math.sqrt(
+                Math.max(own * own + moved * moved + correlation, (own - Math.abs(moved)) * (own - Math.abs(moved))));
+    }
+}

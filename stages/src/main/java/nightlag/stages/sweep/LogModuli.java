@@ -1,0 +1,250 @@
+package nightlag.stages.sweep;
+
+import java.util.ArrayList;
+import java.util.Arrays;
+import java.util.Comparator;
+import java.util.List;
+import nightlag.stages.moduli.Moduli;
+import nightlag.stages.moduli.ModuliCovariance;
+import nightlag.stages.numeric.SmoothSlope;
+import nightlag.stages.numeric.SmoothSlope.Curve;
+
+/**
+ * Logarithms of the moduli over the logarithm of frequency or strain, ready for smooth curves through them. Moduli within a
+ * thousandth of each other in frequency or strain are one, at their weighted mean; where such repeats scatter by more than
+ * their uncertainties say, all of these are widened. Where one of the moduli has no covariance all count alike, and the
+ * scatter about the curve says how well it is known.
+ */
+final class LogModuli {
+    /** No logarithm is taken to be known better. */
+    private static final double LEAST_VARIANCE = 1e-10;
+
+    private static final double SAME = 1e-3;
+    /** Curves through more points than these are cut into stretches, each overlapping half of the next. */
+    private static final int STRETCH = 50;
+
+    private final double[] x;
+    private final Entry[] entries;
+
+    private LogModuli(double[] x, Entry[] entries) {
+        this.x = x;
+        this.entries = entries;
+    }
+
+    /** One observation: ln ω or ln γ, ln G', ln G'' and the covariance of the latter two. */
+    private record Entry(
+            double x, double storage, double loss, double storageVariance, double lossVariance, double both) {
+        double weight() {
+            return 1 / (storageVariance + lossVariance);
+        }
+
+        Entry widened(double factor) {
+            return new Entry(x, storage, loss, factor * storageVariance, factor * lossVariance, factor * both);
+        }
+
+        /** (G'/|G*|)². */
+        double storageShare() {
+            return 1 / (1 + Math.exp(2 * (loss - storage)));
+        }
+    }
+
+    /** What is drawn over x: a function of ln G' and ln G'' with its derivatives by both. */
+    enum Figure {
+        /** ln tan δ. */
+        LOSS_FACTOR {
+            @Override
+            double of(Entry entry) {
+                return entry.loss() - entry.storage();
+            }
+
+            @Override
+            double[] gradient(Entry entry) {
+                return new double[] {-1, 1};
+            }
+        },
+        /** ln |G*|. */
+        MAGNITUDE {
+            @Override
+            double of(Entry entry) {
+                double larger = Math.max(entry.storage(), entry.loss());
+                return larger
+                        + Math.log(Math.hypot(Math.exp(entry.storage() - larger), Math.exp(entry.loss() - larger)));
+            }
+
+            @Override
+            double[] gradient(Entry entry) {
+                return new double[] {entry.storageShare(), 1 - entry.storageShare()};
+            }
+        },
+        /** ln G'. */
+        STORAGE {
+            @Override
+            double of(Entry entry) {
+                return entry.storage();
+            }
+
+            @Override
+            double[] gradient(Entry entry) {
+                return new double[] {1, 0};
+            }
+        };
+
+        abstract double of(Entry entry);
+
+        abstract double[] gradient(Entry entry);
+    }
+
+    /**
+     * The moduli in order.
+     *
+     * @param abscissae frequencies or strains, above zero
+     * @param moduli as many, both parts above zero
+     */
+    static LogModuli of(double[] abscissae, List<Moduli> moduli) {
+        boolean known = moduli.stream().allMatch(one -> one.covariance().isPresent());
+        List<Entry> entries = new ArrayList<>();
+        for (int i = 0; i < abscissae.length; i++) {
+            entries.add(entry(Math.log(abscissae[i]), moduli.get(i), known));
+        }
+        entries.sort(Comparator.comparingDouble(Entry::x));
+        List<List<Entry>> groups = new ArrayList<>();
+        for (Entry entry : entries) {
+            if (groups.isEmpty()
+                    || entry.x() - groups.get(groups.size() - 1).get(0).x() > SAME) {
+                groups.add(new ArrayList<>());
+            }
+            groups.get(groups.size() - 1).add(entry);
+        }
+        double widening = known ? widening(groups) : 1;
+        Entry[] merged =
+                groups.stream().map(group -> together(group).widened(widening)).toArray(Entry[]::new);
+        return new LogModuli(Arrays.stream(merged).mapToDouble(Entry::x).toArray(), merged);
+    }
+
+    private static Entry entry(double x, Moduli moduli, boolean known) {
+        double storage = moduli.storagePa();
+        double loss = moduli.lossPa();
+        ModuliCovariance own = known ? moduli.covariance().orElseThrow() : new ModuliCovariance(0, 0, 0);
+        return new Entry(
+                x,
+                Math.log(storage),
+                Math.log(loss),
+                own.storageVariance() / (storage * storage) + LEAST_VARIANCE,
+                own.lossVariance() / (loss * loss) + LEAST_VARIANCE,
+                own.covariance() / (storage * loss));
+    }
+
+    private static Entry together(List<Entry> group) {
+        double weights = group.stream().mapToDouble(Entry::weight).sum();
+        double[] sums = new double[6];
+        for (Entry entry : group) {
+            double part = entry.weight() / weights;
+            sums[0] += part * entry.x();
+            sums[1] += part * entry.storage();
+            sums[2] += part * entry.loss();
+            sums[3] += part * part * entry.storageVariance();
+            sums[4] += part * part * entry.lossVariance();
+            sums[5] += part * part * entry.both();
+        }
+        return new Entry(sums[0], sums[1], sums[2], sums[3], sums[4], sums[5]);
+    }
+
+    private static double widening(List<List<Entry>> groups) {
+        double sum = 0;
+        int freedom = 0;
+        for (List<Entry> group : groups) {
+            Entry mean = together(group);
+            for (Entry entry : group) {
+                sum += square(entry.storage() - mean.storage()) / entry.storageVariance()
+                        + square(entry.loss() - mean.loss()) / entry.lossVariance();
+            }
+            freedom += 2 * (group.size() - 1);
+        }
+        return freedom == 0 ? 1 : Math.max(1, sum / freedom);
+    }
+
+    private static double square(double value) {
+        return value * value;
+    }
+
+    /** How many different frequencies or strains there are. */
+    int size() {
+        return x.length;
+    }
+
+    /** Logarithms of the frequencies or strains, rising. */
+    double[] places() {
+        return x.clone();
+    }
+
+    /** Stretches short enough for a curve each; all of it where it is short. */
+    List<Stretch> stretches() {
+        List<Stretch> stretches = new ArrayList<>();
+        int half = STRETCH / 2;
+        for (int from = 0; stretches.isEmpty() || from + half < x.length; from += half) {
+            int to = from + STRETCH + half > x.length ? x.length : from + STRETCH;
+            double begin = from == 0 ? Double.NEGATIVE_INFINITY : x[from + half / 2];
+            double end = to == x.length ? Double.POSITIVE_INFINITY : x[from + half + half / 2];
+            stretches.add(new Stretch(
+                    new LogModuli(Arrays.copyOfRange(x, from, to), Arrays.copyOfRange(entries, from, to)), begin, end));
+            if (to == x.length) {
+                break;
+            }
+        }
+        return stretches;
+    }
+
+    /**
+     * A part of the data with what its curves answer for.
+     *
+     * @param data the part
+     * @param begin from here on
+     * @param end up to here
+     */
+    record Stretch(LogModuli data, double begin, double end) {
+        /** Whether a place is its own and not a neighbour's. */
+        boolean owns(double place) {
+            return begin <= place && place < end;
+        }
+    }
+
+    /** The values of a figure. */
+    double[] values(Figure figure) {
+        return Arrays.stream(entries).mapToDouble(figure::of).toArray();
+    }
+
+    /** The variances of a figure. */
+    double[] variances(Figure figure) {
+        return covariances(figure, figure);
+    }
+
+    /** The smooth curve of a figure. */
+    Curve curve(Figure figure) {
+        return SmoothSlope.curve(x, values(figure), variances(figure));
+    }
+
+    /** The covariance of what noise does to the curves of two figures at a place. */
+    double covariance(Figure one, Curve oneCurve, Figure other, Curve otherCurve, double place) {
+        double[] noise = covariances(one, other);
+        double[] first = oneCurve.weights(place);
+        double[] second = otherCurve.weights(place);
+        double sum = 0;
+        for (int i = 0; i < noise.length; i++) {
+            sum += first[i] * second[i] * noise[i];
+        }
+        return sum * Math.sqrt(oneCurve.widening() * otherCurve.widening());
+    }
+
+    private double[] covariances(Figure one, Figure other) {
+        double[] covariances = new double[entries.length];
+        for (int i = 0; i < covariances.length; i++) {
+            Entry entry = entries[i];
+            double[] first = one.gradient(entry);
+            double[] second = other.gradient(entry);
+            covariances[i] = first[0] * second[0] * entry.storageVariance()
+                    + first[1] * second[1] * entry.lossVariance()
+                    + (first[0] * second[1] + first[1] * second[0]) * entry.both();
+        }
+        return covariances;
+    }
+}
