@@ -1,0 +1,318 @@
+package nightlag.stages.superposition;
+
+import java.util.Arrays;
+import java.util.List;
+import java.util.stream.IntStream;
+import nightlag.stages.numeric.Cholesky;
+import nightlag.stages.numeric.EvenSplines;
+import nightlag.stages.numeric.LevenbergMarquardt;
+import nightlag.stages.superposition.LogIsotherm.LogReading;
+
+/**
+ * All isotherms about one pair of smooth curves, shifts and curves fitted together. For given shifts the curves are linear in
+ * their coefficients and follow at once, so the search is over the shifts alone (separable least squares: Golub &amp;
+ * Pereyra, SIAM J. Numer. Anal. 10 (1973) 413; derivatives after Kaufman, BIT 15 (1975) 49), with the penalty on roughness
+ * as further residuals.
+ */
+final class JointFit implements LevenbergMarquardt.Problem {
+    /** How far a shift may go from where it starts before the splines are laid out anew, in ln ω. */
+    private static final double REACH = 1.5 * Math.log(10);
+
+    /** The same in ln G. */
+    private static final double VERTICAL_REACH = Math.log(10);
+
+    private static final int MOST_LAYOUTS = 4;
+    private static final double ENOUGH = 1e-10;
+    private static final int MOST_STEPS = 60;
+    private static final double UNKNOWN_PRECISION = 1e-4;
+    private static final double ROUNDING = 1e-12;
+
+    private final List<LogReading> readings;
+    private final int[] isotherm;
+    private final int isotherms;
+    private final int anchor;
+    private final double[] vertical;
+    private final boolean fitVertical;
+    private final Smoothness smoothness;
+    private final Weights weights;
+    private EvenSplines splines = new EvenSplines(0, 1, 1);
+
+    private JointFit(
+            List<LogIsotherm> used,
+            int anchor,
+            double[] vertical,
+            boolean fitVertical,
+            boolean useGiven,
+            Smoothness smoothness) {
+        this.readings = used.stream().flatMap(one -> one.readings().stream()).toList();
+        this.isotherms = used.size();
+        this.isotherm = new int[readings.size()];
+        int point = 0;
+        for (int i = 0; i < isotherms; i++) {
+            Arrays.fill(isotherm, point, point + used.get(i).size(), i);
+            point += used.get(i).size();
+        }
+        this.anchor = anchor;
+        this.vertical = vertical;
+        this.fitVertical = fitVertical;
+        this.smoothness = smoothness;
+        this.weights = Weights.of(readings, useGiven, smoothness);
+    }
+
+    /**
+     * Fits isotherms that overlap.
+     *
+     * @param used the isotherms
+     * @param anchor the one that stays where it is
+     * @param horizontal where the shifts start, ln a, zero for the anchor
+     * @param vertical ln b; where it is fitted, where it starts, zero for the anchor
+     * @param fitVertical whether ln b is fitted
+     * @param useGiven whether points are weighted by the uncertainties they come with, besides their scatter
+     * @param smoothness of the curves, and the scatter about them
+     */
+    static JointCurves fit(
+            List<LogIsotherm> used,
+            int anchor,
+            double[] horizontal,
+            double[] vertical,
+            boolean fitVertical,
+            boolean useGiven,
+            Smoothness smoothness) {
+        return new JointFit(used, anchor, vertical, fitVertical, useGiven, smoothness).search(horizontal);
+    }
+
+    private JointCurves search(double[] horizontal) {
+        double[] place = new double[isotherms + (fitVertical ? isotherms : 0)];
+        System.arraycopy(horizontal, 0, place, 0, isotherms);
+        if (fitVertical) {
+            System.arraycopy(vertical, 0, place, isotherms, isotherms);
+        }
+        double[] free = freeOf(place);
+        boolean inside = false;
+        for (int layout = 0; layout < MOST_LAYOUTS && !inside; layout++) {
+            layOut(allOf(free));
+            double[] lower = new double[free.length];
+            double[] upper = new double[free.length];
+            for (int k = 0; k < free.length; k++) {
+                double reach = k < isotherms - 1 ? REACH : VERTICAL_REACH;
+                lower[k] = free[k] - reach;
+                upper[k] = free[k] + reach;
+            }
+            free = free.length == 0
+                    ? free
+                    : LevenbergMarquardt.minimise(this, free, lower, upper, ENOUGH, MOST_STEPS)
+                            .parameters();
+            inside = true;
+            for (int k = 0; k < free.length; k++) {
+                inside &= free[k] > lower[k] && free[k] < upper[k];
+            }
+        }
+        return new State(free).curves(free);
+    }
+
+    private void layOut(double[] all) {
+        double from = Double.POSITIVE_INFINITY;
+        double to = Double.NEGATIVE_INFINITY;
+        for (int p = 0; p < isotherm.length; p++) {
+            double reduced = readings.get(p).x() + all[isotherm[p]];
+            from = Math.min(from, reduced);
+            to = Math.max(to, reduced);
+        }
+        splines = EvenSplines.covering(from - REACH, to + REACH, OwnCurves.SPLINE_STEP);
+    }
+
+    /** All but the anchor's. */
+    private double[] freeOf(double[] all) {
+        double[] free = new double[all.length - all.length / isotherms];
+        int k = 0;
+        for (int i = 0; i < all.length; i++) {
+            if (i % isotherms != anchor) {
+                free[k++] = all[i];
+            }
+        }
+        return free;
+    }
+
+    private double[] allOf(double[] free) {
+        double[] all = new double[fitVertical ? 2 * isotherms : isotherms];
+        int k = 0;
+        for (int i = 0; i < all.length; i++) {
+            if (i % isotherms != anchor) {
+                all[i] = free[k++];
+            }
+        }
+        return all;
+    }
+
+    private double verticalOf(double[] all, int i) {
+        return fitVertical ? all[isotherms + i] : vertical[i];
+    }
+
+    /** The curves for given shifts. */
+    private final class State {
+        private final SmoothPair pair;
+        private final double[] coefficients;
+        private final double[] differences;
+
+        State(double[] free) {
+            double[] all = allOf(free);
+            double[] places = new double[isotherm.length];
+            for (int p = 0; p < places.length; p++) {
+                places[p] = readings.get(p).x() + all[isotherm[p]];
+            }
+            pair = SmoothPair.of(new PairDesign(splines, places), weights, smoothness)
+                    .orElseThrow(() -> new IllegalStateException("no smooth curves through all isotherms"));
+            double[] observed = new double[2 * places.length];
+            for (int p = 0; p < places.length; p++) {
+                LogReading reading = readings.get(p);
+                double up = verticalOf(all, isotherm[p]);
+                weights.whiten(
+                        p,
+                        reading.has(0) ? reading.y()[0] + up : 0,
+                        reading.has(1) ? reading.y()[1] + up : 0,
+                        observed);
+            }
+            coefficients = pair.coefficients(observed);
+            differences = pair.fitted(coefficients);
+            for (int i = 0; i < differences.length; i++) {
+                differences[i] -= observed[i];
+            }
+        }
+
+        private double[] residuals() {
+            return joined(differences, pair.penalties(coefficients));
+        }
+
+        /** The derivative of the residuals by a shift, the curves following it. */
+        private double[] derivative(int parameter) {
+            double[] derivative = direct(parameter);
+            double[] follow = pair.coefficients(derivative);
+            double[] taken = pair.fitted(follow);
+            double[] rough = pair.penalties(follow);
+            for (int i = 0; i < derivative.length; i++) {
+                derivative[i] -= taken[i];
+            }
+            for (int i = 0; i < rough.length; i++) {
+                rough[i] = -rough[i];
+            }
+            return joined(derivative, rough);
+        }
+
+        /** How the coefficients follow a shift, with the sign turned. */
+        private double[] follow(int parameter) {
+            return pair.coefficients(direct(parameter));
+        }
+
+        /** The derivative of the differences by a shift while the curves stay. */
+        private double[] direct(int parameter) {
+            int own = parameter % isotherms;
+            boolean horizontal = parameter < isotherms;
+            double[] direct = new double[differences.length];
+            for (int p = 0; p < isotherm.length; p++) {
+                if (isotherm[p] == own) {
+                    weights.whiten(
+                            p,
+                            horizontal ? pair.design().slope(p, 0, coefficients) : -1,
+                            horizontal ? pair.design().slope(p, 1, coefficients) : -1,
+                            direct);
+                }
+            }
+            return direct;
+        }
+
+        private JointCurves curves(double[] free) {
+            double[][] jacobian = parameters().mapToObj(this::derivative).toArray(double[][]::new);
+            double[][] covariance = inverseOfProducts(jacobian);
+            double[][] follow = parameters().mapToObj(this::follow).toArray(double[][]::new);
+            Freedom freedom = pair.freedom(follow, covariance);
+            double squares = 0;
+            for (double difference : differences) {
+                squares += difference * difference;
+            }
+            double cost = squares;
+            for (double penalty : pair.penalties(coefficients)) {
+                cost += penalty * penalty;
+            }
+            double[] all = allOf(free);
+            double[] up = new double[isotherms];
+            for (int i = 0; i < isotherms; i++) {
+                up[i] = verticalOf(all, i);
+            }
+            double[][] departures = new double[isotherm.length][2];
+            for (int p = 0; p < isotherm.length; p++) {
+                for (int modulus = 0; modulus < 2; modulus++) {
+                    departures[p][modulus] = readings.get(p).y()[modulus]
+                            + up[isotherm[p]]
+                            - pair.design().value(p, modulus, coefficients);
+                }
+            }
+            int[] index = parameters().toArray();
+            double[][] horizontal = new double[isotherms][isotherms];
+            double[][] verticalCovariance = new double[isotherms][isotherms];
+            for (int i = 0; i < index.length; i++) {
+                for (int j = 0; j < index.length; j++) {
+                    if (index[i] < isotherms && index[j] < isotherms) {
+                        horizontal[index[i]][index[j]] = covariance[i][j];
+                    } else if (index[i] >= isotherms && index[j] >= isotherms) {
+                        verticalCovariance[index[i] - isotherms][index[j] - isotherms] = covariance[i][j];
+                    }
+                }
+            }
+            return new JointCurves(
+                    anchor,
+                    Arrays.copyOf(all, isotherms),
+                    up,
+                    horizontal,
+                    verticalCovariance,
+                    squares,
+                    cost,
+                    freedom,
+                    isotherm,
+                    departures);
+        }
+    }
+
+    private static double[] joined(double[] first, double[] second) {
+        double[] both = Arrays.copyOf(first, first.length + second.length);
+        System.arraycopy(second, 0, both, first.length, second.length);
+        return both;
+    }
+
+    @Override
+    public double[] residuals(double[] free) {
+        return new State(free).residuals();
+    }
+
+    @Override
+    public double[][] jacobian(double[] free) {
+        return jacobian(new State(free));
+    }
+
+    private double[][] jacobian(State state) {
+        return parameters().mapToObj(state::derivative).toArray(double[][]::new);
+    }
+
+    /** The numbers of the shifts that are fitted: isotherms for ln a, and isotherms from their count on for ln b. */
+    private IntStream parameters() {
+        return IntStream.range(0, fitVertical ? 2 * isotherms : isotherms).filter(k -> k % isotherms != anchor);
+    }
+
+    /** (JᵀJ)⁻¹, where nothing is known of a shift a hundred e-folds either way. */
+    private static double[][] inverseOfProducts(double[][] jacobian) {
+        int n = jacobian.length;
+        double[][] products = new double[n][n];
+        for (int i = 0; i < n; i++) {
+            for (int j = 0; j <= i; j++) {
+                double sum = 0;
+                for (int k = 0; k < jacobian[i].length; k++) {
+                    sum += jacobian[i][k] * jacobian[j][k];
+                }
+                products[i][j] = sum;
+            }
+            products[i][i] += UNKNOWN_PRECISION + ROUNDING * products[i][i];
+        }
+        return Cholesky.of(products)
+                .orElseThrow(() -> new IllegalStateException("shifts without information"))
+                .inverse();
+    }
+}

@@ -1,0 +1,36 @@
+package nightlag.stages.superposition;
+
+import nightlag.stages.fault.ReasonCode;
+
+/** Why there is no master curve, or what is not in it. */
+public enum SuperpositionReason implements ReasonCode {
+    /** No parts. */
+    SUPERPOSITION_NO_ISOTHERMS("no master curve: no point has a temperature, a frequency and moduli"),
+    /** {0} °C reference, {1} and {2} °C lowest and highest isotherm superposed. */
+    SUPERPOSITION_REFERENCE_OUTSIDE(
+            "no master curve: the reference temperature of {0} °C is outside the isotherms superposed, {1} to {2} °C"),
+    /** {0} °C of the isotherm, {1} frequencies it has, {2} frequencies it needs. */
+    ISOTHERM_TOO_FEW_FREQUENCIES(
+            "the isotherm at {0} °C is left out of the master curve: {1} frequencies with moduli above zero, at least {2} are"
+                    + " needed"),
+    /** {0} °C of the isotherm. */
+    ISOTHERM_WITHOUT_OVERLAP(
+            "the isotherm at {0} °C is left out of the master curve: its curves do not overlap with the others''"),
+    /** {0} moduli, {1} °C of the isotherm. */
+    MODULI_WITHOUT_LOGARITHM("{0} moduli of the isotherm at {1} °C are not above zero and have no part in the shifts"),
+    /** {0} °C reference, {1} and {2} °C the isotherms beside it. */
+    REFERENCE_INTERPOLATED(
+            "no isotherm at the reference temperature of {0} °C and no law: shifts are moved to it along a straight line from"
+                    + " {1} to {2} °C");
+
+    private final String template;
+
+    SuperpositionReason(String template) {
+        this.template = template;
+    }
+
+    @Override
+    public String template() {
+        return template;
+    }
+}

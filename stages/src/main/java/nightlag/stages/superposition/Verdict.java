@@ -1,0 +1,66 @@
+package nightlag.stages.superposition;
+
+import java.util.Locale;
+import java.util.OptionalDouble;
+import nightlag.stages.moduli.Marker;
+import nightlag.stages.numeric.VarianceRatio;
+
+/**
+ * Whether isotherms superpose: common curves must not leave more than each isotherm's own do, by the F test of nested models, or
+ * the misfit must be small.
+ *
+ * @param misfitDecades rms distance from the common curves, decades of modulus
+ * @param toleranceDecades what counts as small
+ * @param ratio F; empty where own curves leave nothing to compare with
+ * @param chance how often chance alone makes F larger
+ */
+record Verdict(double misfitDecades, double toleranceDecades, OptionalDouble ratio, double chance) {
+    private static final double SMALL_CHANCE = 0.01;
+    private static final double TINY_CHANCE = 1e-6;
+
+    static Verdict of(Superposed superposed, SuperpositionPlan plan) {
+        double misfit = superposed.common().misfitDecades();
+        if (!superposed.canBeCompared()) {
+            return new Verdict(misfit, plan.toleranceDecades(), OptionalDouble.empty(), 1);
+        }
+        double ratio = superposed.varianceRatio();
+        double chance = VarianceRatio.chanceOfMore(
+                ratio, superposed.addedFreedom(), superposed.ownFreedom().ofErrors());
+        return new Verdict(misfit, plan.toleranceDecades(), OptionalDouble.of(ratio), chance);
+    }
+
+    boolean superposes() {
+        return chance >= SMALL_CHANCE || misfitDecades <= toleranceDecades;
+    }
+
+    Marker marker(double referenceTemperatureK) {
+        return new Marker(
+                "",
+                "",
+                "superposition_misfit",
+                OptionalDouble.of(referenceTemperatureK),
+                OptionalDouble.empty(),
+                misfitDecades,
+                OptionalDouble.empty(),
+                "1",
+                words());
+    }
+
+    private String words() {
+        if (ratio.isEmpty()) {
+            return String.format(
+                    Locale.ROOT,
+                    "superposes as far as can be told: isotherms have too few frequencies for curves of their own; tolerance"
+                            + " %.3g decades",
+                    toleranceDecades);
+        }
+        return String.format(
+                Locale.ROOT,
+                "%s: rms distance from common curves in decades; against curves of its own for each isotherm F = %.3g, %s;"
+                        + " tolerance %.3g decades",
+                superposes() ? "superposes" : "does not superpose",
+                ratio.getAsDouble(),
+                chance < TINY_CHANCE ? "p below 1e-6" : String.format(Locale.ROOT, "p = %.2g", chance),
+                toleranceDecades);
+    }
+}
