@@ -14,12 +14,14 @@ import nightlag.stages.geometry.DeformationMode;
 import nightlag.stages.geometry.GeometryKind;
 import nightlag.stages.moduli.Flag;
 import nightlag.stages.moduli.Harmonic;
+import nightlag.stages.moduli.HarmonicLimits;
 import nightlag.stages.moduli.LoopPair;
 import nightlag.stages.moduli.Moduli;
 import nightlag.stages.moduli.ModuliCovariance;
 import nightlag.stages.moduli.ModulusPoint;
 import nightlag.stages.moduli.PointKey;
 import nightlag.stages.moduli.Quality;
+import nightlag.stages.moduli.Threshold;
 
 /** Points of no material: everything a point can hold, and doubles from the whole range a double has. */
 public final class RandomPoints {
@@ -65,7 +67,11 @@ public final class RandomPoints {
                         "FEW_CYCLES", "1.2 cycles, at least 3 are wanted; \"quoted\", ümläuts, \u2028 and \u0007")),
                 loop(quality == Quality.SOUND ? 0 : random.nextInt(257)),
                 random.nextBoolean() ? Optional.of(anyOf(GeometryKind.values())) : Optional.empty(),
-                random.nextBoolean() ? Optional.of(anyOf(Flag.values())) : Optional.empty());
+                random.nextBoolean() ? Optional.of(anyOf(Flag.values())) : Optional.empty(),
+                random.nextBoolean()
+                        ? Optional.of(new HarmonicLimits(positive(), new Threshold(positive(), maybe(positive()))))
+                        : Optional.empty(),
+                maybe(positive()));
     }
 
     /** Any finite double, the ends of the range and zeros of both signs among them. */

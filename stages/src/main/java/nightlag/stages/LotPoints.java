@@ -35,8 +35,9 @@ record LotPoints(List<ModulusPoint> points, List<List<ModulusPoint>> amplitudeSw
         AmplitudeSweeps found = AmplitudeSweeps.among(reduced, plan.kind());
         List<Reason> notes = new ArrayList<>();
         List<List<ModulusPoint>> sweeps = found.sweeps().stream()
-                .map(sweep -> amplitudeSweep(
-                        sweep.stream().map(LotPoints::nonlinearByDesign).toList(), notes))
+                .map(sweep -> amplitudeSweep(sweep, notes).stream()
+                        .map(LotPoints::nonlinearByDesign)
+                        .toList())
                 .toList();
         List<ModulusPoint> points = new ArrayList<>(found.others());
         sweeps.forEach(points::addAll);
@@ -53,7 +54,7 @@ record LotPoints(List<ModulusPoint> points, List<List<ModulusPoint>> amplitudeSw
 
     /** A third harmonic is what an amplitude sweep looks for. */
     private static ModulusPoint nonlinearByDesign(ModulusPoint point) {
-        return point.quality() == Quality.UNUSABLE
+        return point.unusableOnlyBy().filter(flag -> flag == Flag.NONLINEAR).isPresent()
                 ? point.merelyDoubtful(SweepReason.SWEEP_NONLINEAR_BY_DESIGN.with())
                 : point;
     }

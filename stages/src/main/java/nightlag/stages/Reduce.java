@@ -58,7 +58,7 @@ public final class Reduce {
     private static double middle(Waveform window) {
         double[] timeS = window.timeS();
         return timeS.length == 0
-                ? window.windowOfRecordFromS().orElseThrow()
+                ? window.window().orElseThrow().middleS()
                 : timeS[0] + (timeS[timeS.length - 1] - timeS[0]) / 2;
     }
 

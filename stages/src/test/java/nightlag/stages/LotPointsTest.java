@@ -7,15 +7,19 @@ import java.util.ArrayList;
 import java.util.List;
 import java.util.Map;
 import java.util.Optional;
+import java.util.OptionalDouble;
 import java.util.OptionalInt;
 import java.util.Random;
 import java.util.stream.Stream;
 import nightlag.stages.fault.Reason;
 import nightlag.stages.geometry.GeometryKind;
 import nightlag.stages.moduli.Flag;
+import nightlag.stages.moduli.Harmonic;
+import nightlag.stages.moduli.HarmonicLimits;
 import nightlag.stages.moduli.Marker;
 import nightlag.stages.moduli.ModulusPoint;
 import nightlag.stages.moduli.Quality;
+import nightlag.stages.moduli.Threshold;
 import nightlag.stages.numeric.Complex;
 import nightlag.stages.spectrum.RelaxationModes;
 import nightlag.stages.spectrum.SpectrumPlan;
@@ -325,7 +329,7 @@ class LotPointsTest {
         assertThat(softened.flags()).isEqualTo(nonlinear);
         assertThat(softened.reasons())
                 .extracting(Reason::code)
-                .containsExactly("SWEEP_NONLINEAR_BY_DESIGN", "SWEEP_RIM_CORRECTED");
+                .containsExactly("SWEEP_RIM_CORRECTED", "SWEEP_NONLINEAR_BY_DESIGN");
 
         sweep.set(
                 5,
@@ -336,6 +340,130 @@ class LotPointsTest {
         sweep.set(
                 5, large.unusable(nonlinear, Optional.of(Flag.NONLINEAR)).hz(2).build());
         assertThat(last(conclude(sweep, AUTO)).quality()).isEqualTo(Quality.UNUSABLE);
+    }
+
+    /**
+     * A sweep of a constant modulus whose second and third harmonic go with a power of the strain, as does what is known of
+     * them.
+     *
+     * @param intensity of both at a strain of 3
+     * @param u its uncertainty
+     * @param power 2 where the harmonic's stress goes with the cube of the strain
+     */
+    private static List<ModulusPoint> withHarmonics(double intensity, double u, double power) {
+        List<ModulusPoint> sweep = new ArrayList<>();
+        for (double strain : STRAINS) {
+            double size = Math.pow(strain / 3, power);
+            double here = intensity * size;
+            double first = 1000 * strain;
+            OptionalDouble known = OptionalDouble.of(u * size);
+            sweep.add(SweepPoint.of(strain, new Complex(1000, 0), 1e-5)
+                    .harmonics(List.of(
+                            new Harmonic(1, first, 0, 1, OptionalDouble.of(0)),
+                            new Harmonic(2, here * first, 0, here, known),
+                            new Harmonic(3, -here * first, 0, here, known)))
+                    .judgedBy(new HarmonicLimits(0.01, Threshold.of(0.01, 0.2)))
+                    .build());
+        }
+        return sweep;
+    }
+
+    /** At the rim a harmonic that goes with the cube of the strain is half as large again (exact): 0.0075 becomes 0.01125. */
+    @Test
+    void harmonicsThatPassTheirLimitsAtTheRimAreFlagged() {
+        ModulusPoint found = last(conclude(withHarmonics(0.0075, 1e-5, 2), AUTO));
+
+        assertThat(found.harmonics().get(2).relativeIntensity()).isCloseTo(0.01125, within(5e-5));
+        assertThat(found.flags()).containsExactly(Flag.NONLINEAR, Flag.EVEN_HARMONICS);
+        assertThat(found.quality()).isEqualTo(Quality.DOUBTFUL);
+        assertThat(found.unusableOnlyBy()).isEmpty();
+        assertThat(found.reasons())
+                .extracting(Reason::code)
+                .containsExactly("SCREENING_NONLINEAR", "SCREENING_EVEN_HARMONICS", "SWEEP_RIM_CORRECTED");
+        assertThat(found.reasons().get(0).sentence())
+                .startsWith("nonlinear: the third harmonic is 0.0112")
+                .endsWith("of the first, the limit is 0.01 (doubtful)");
+    }
+
+    @Test
+    void aNearMissAtTheRimIsNot() {
+        ModulusPoint found = last(conclude(withHarmonics(0.0065, 1e-5, 2), AUTO));
+        assertThat(found.harmonics().get(2).relativeIntensity()).isCloseTo(0.00975, within(5e-5));
+        assertThat(found.flags()).isEmpty();
+        assertThat(found.quality()).isEqualTo(Quality.SOUND);
+    }
+
+    /** The slope adds its own uncertainty: what stood out of the noise before does so no longer. */
+    @Test
+    void harmonicsOverTheLimitAtTheRimButWithinTheirNoiseAreNot() {
+        ModulusPoint found = last(conclude(withHarmonics(0.0075, 0.0024, 2), AUTO));
+        Harmonic third = found.harmonics().get(2);
+        assertThat(third.relativeIntensity()).isGreaterThan(0.0105);
+        assertThat(third.relativeIntensityU().orElseThrow()).isGreaterThan(third.relativeIntensity() / 3);
+        assertThat(found.flags()).isEmpty();
+        assertThat(found.quality()).isEqualTo(Quality.SOUND);
+    }
+
+    /** A harmonic's stress that goes with the root of the strain is 7/8 of what the plates show (exact): 0.0111 becomes 0.0097. */
+    @Test
+    void harmonicsBelowTheirLimitsAtTheRimLoseTheirFlagsAndTheReasons() {
+        Reason asMeasured = new Reason("SCREENING_NONLINEAR", "nonlinear: the third harmonic is 0.0111 of the first");
+        Reason clipped = new Reason("SCREENING_CLIPPED", "clipped: 0.01 of the samples");
+        List<ModulusPoint> sweep = new ArrayList<>(withHarmonics(0.0111, 1e-5, -0.5));
+        ModulusPoint flagged = sweep.get(5)
+                .flagged(Flag.NONLINEAR, asMeasured)
+                .flagged(Flag.EVEN_HARMONICS, new Reason("SCREENING_EVEN_HARMONICS", "even-harmonics: 0.0111"));
+        sweep.set(5, flagged);
+
+        ModulusPoint found = last(conclude(sweep, AUTO));
+
+        assertThat(found.harmonics().get(2).relativeIntensity()).isCloseTo(0.0097, within(5e-5));
+        assertThat(found.flags()).isEmpty();
+        assertThat(found.quality()).isEqualTo(Quality.SOUND);
+        assertThat(found.reasons()).extracting(Reason::code).containsExactly("SWEEP_RIM_CORRECTED");
+
+        sweep.set(5, flagged.flagged(Flag.CLIPPED, clipped));
+        ModulusPoint stillDoubtful = last(conclude(sweep, AUTO));
+        assertThat(stillDoubtful.flags()).containsExactly(Flag.CLIPPED);
+        assertThat(stillDoubtful.quality()).isEqualTo(Quality.DOUBTFUL);
+        assertThat(stillDoubtful.reasons())
+                .extracting(Reason::code)
+                .containsExactly("SCREENING_CLIPPED", "SWEEP_RIM_CORRECTED");
+    }
+
+    /** Of 0.15 that the plates show 0.225 are left at the rim. */
+    @Test
+    void pastItsSecondLimitAnEvenOrderMakesAPointOfASweepUnusableAndTheThirdDoesNot() {
+        ModulusPoint found = last(conclude(withHarmonics(0.15, 1e-5, 2), AUTO));
+        assertThat(found.flags()).containsExactly(Flag.NONLINEAR, Flag.EVEN_HARMONICS);
+        assertThat(found.quality()).isEqualTo(Quality.UNUSABLE);
+        assertThat(found.unusableOnlyBy()).hasValue(Flag.EVEN_HARMONICS);
+        assertThat(found.reasons())
+                .extracting(Reason::sentence)
+                .anySatisfy(
+                        sentence -> assertThat(sentence).startsWith("nonlinear").endsWith("0.01 (doubtful)"))
+                .anySatisfy(sentence ->
+                        assertThat(sentence).startsWith("even-harmonics").endsWith("0.2 (unusable)"));
+    }
+
+    /**
+     * A cure at a constant torque on a drive whose inertia takes most of it: the stress left for the specimen rises with its
+     * strain as both fall. Cut out of one long record it is a run in time; as records of their own it might be a sweep.
+     */
+    @Test
+    void windowsOfALongRecordAreNoAmplitudeSweepUnlessAskedFor() {
+        List<ModulusPoint> windows = new ArrayList<>();
+        List<ModulusPoint> records = new ArrayList<>();
+        for (double strain : STRAINS) {
+            SweepPoint point = SweepPoint.of(strain, new Complex(1000 / (1 + strain), 100), 1e-4);
+            windows.add(point.inWindow(6).build());
+            records.add(point.build());
+        }
+        assertThat(conclude(windows, AUTO).points()).containsExactlyInAnyOrderElementsOf(windows);
+        assertThat(corrected(conclude(windows, kind(SweepPlan.Kind.AMPLITUDE)))).isEqualTo(STRAINS.length);
+        assertThat(corrected(conclude(records, AUTO))).isEqualTo(STRAINS.length);
+        // beside a real sweep they stay as they are
+        assertThat(corrected(conclude(concat(windows, records), AUTO))).isEqualTo(STRAINS.length);
     }
 
     /** The point at the largest strain. */

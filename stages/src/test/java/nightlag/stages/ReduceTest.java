@@ -19,10 +19,12 @@ import nightlag.stages.geometry.GeometrySpec;
 import nightlag.stages.geometry.LoadSignal;
 import nightlag.stages.geometry.MeasuringWall;
 import nightlag.stages.moduli.Flag;
+import nightlag.stages.moduli.Harmonic;
 import nightlag.stages.moduli.ModulusPoint;
 import nightlag.stages.moduli.PointKey;
 import nightlag.stages.moduli.Quality;
 import nightlag.stages.moduli.ScreeningPlan;
+import nightlag.stages.moduli.ScreeningReason;
 import nightlag.stages.numeric.Complex;
 import nightlag.stages.sweep.SweepPlan;
 import nightlag.stages.waveform.ExtractionPlan;
@@ -136,10 +138,16 @@ class ReduceTest {
                         point -> point.strainAmplitude().orElseThrow()))
                 .toList();
         assertThat(published).hasSameSizeAs(strains);
+        assertThat(reductions.stream().filter(reduction -> only(reduction).quality() == Quality.SOUND))
+                .as("some are flagged at the rim only")
+                .hasSizeGreaterThan((int) published.stream()
+                        .filter(point -> point.quality() == Quality.SOUND)
+                        .count());
         for (int i = 0; i < strains.size(); i++) {
             double square = stiffening * strains.get(i) * strains.get(i);
             ModulusPoint point = published.get(i);
             assertThat(point.quality()).isNotEqualTo(Quality.UNUSABLE);
+            assertFlagsAgreeWithThirdHarmonic(point);
             double truth = 1000 * (1 + 0.75 * square);
             assertThat(point.moduli().orElseThrow().storagePa()).isCloseTo(truth, within(2e-2 * truth));
             if (i > 3 && i < strains.size() - 3) {
@@ -148,6 +156,24 @@ class ReduceTest {
                         .isCloseTo(square / 4 / (1 + 0.75 * square), within(2e-3 * square));
             }
         }
+    }
+
+    /** Flag, quality, reasons and the figure published say the same. */
+    private static void assertFlagsAgreeWithThirdHarmonic(ModulusPoint point) {
+        Harmonic third = point.harmonics().get(2);
+        boolean nonlinear = third.relativeIntensity()
+                > Math.max(0.01, 3 * third.relativeIntensityU().orElseThrow());
+        assertThat(point.flags()).isEqualTo(nonlinear ? List.of(Flag.NONLINEAR) : List.of());
+        assertThat(point.quality()).isEqualTo(nonlinear ? Quality.DOUBTFUL : Quality.SOUND);
+        assertThat(point.reasons())
+                .filteredOn(reason -> reason.code().equals("SCREENING_NONLINEAR"))
+                .extracting(Reason::sentence)
+                .isEqualTo(
+                        nonlinear
+                                ? List.of(ScreeningReason.SCREENING_NONLINEAR
+                                        .with(third.relativeIntensity(), 0.01, "doubtful")
+                                        .sentence())
+                                : List.of());
     }
 
     @Test

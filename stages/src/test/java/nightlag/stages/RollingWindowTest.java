@@ -9,6 +9,7 @@ import java.util.Map;
 import java.util.Optional;
 import java.util.OptionalDouble;
 import java.util.Random;
+import java.util.function.IntPredicate;
 import java.util.stream.IntStream;
 import nightlag.stages.geometry.Corrections;
 import nightlag.stages.geometry.DeformationSignal;
@@ -24,6 +25,7 @@ import nightlag.stages.waveform.Drift;
 import nightlag.stages.waveform.ExtractionPlan;
 import nightlag.stages.waveform.FrequencySource;
 import nightlag.stages.waveform.HarmonicAnalysis;
+import nightlag.stages.waveform.RecordWindow;
 import nightlag.stages.waveform.SignalFit;
 import nightlag.stages.waveform.Waveform;
 import org.junit.jupiter.api.Tag;
@@ -102,7 +104,9 @@ class RollingWindowTest {
                     temperature,
                     OptionalDouble.of(taggedHz),
                     0,
-                    window ? OptionalDouble.of(recordFromS) : OptionalDouble.empty());
+                    window
+                            ? Optional.of(new RecordWindow(recordFromS, firstS, firstS + cycles / taggedHz))
+                            : Optional.empty());
         }
     }
 
@@ -262,7 +266,7 @@ class RollingWindowTest {
                 clean.temperatureK(),
                 clean.nominalFrequencyHz(),
                 0,
-                clean.windowOfRecordFromS());
+                clean.window());
         ModulusPoint point = reduce(spiked);
         assertThat(point.samplesUsed()).isEqualTo(clean.size() - 3);
         assertThat(error(point, 377, 1)).isLessThan(5e-5);
@@ -291,19 +295,88 @@ class RollingWindowTest {
     @Test
     void missingRowsOnOneSideLeaveTimeTemperatureAndModulusInTheMiddle() {
         Waveform whole = new Window(375).build(true);
-        int[] kept =
-                IntStream.range(0, whole.size()).filter(i -> i < 100 || i > 400).toArray();
-        Waveform gappy = new Waveform(
-                pick(whole.timeS(), kept),
-                pick(whole.deformation(), kept),
-                pick(whole.load(), kept),
-                pick(whole.temperatureK(), kept),
-                whole.nominalFrequencyHz(),
-                0,
-                whole.windowOfRecordFromS());
-        ModulusPoint point = reduce(gappy);
+        ModulusPoint point = reduce(onlySamples(whole, i -> i < 100 || i > 400));
         assertThat(point.temperatureK().orElseThrow()).isCloseTo(375, within(1e-9));
         assertThat(error(point, 375, 1)).isLessThan(5e-5);
+    }
+
+    private static Waveform onlySamples(Waveform whole, IntPredicate kept) {
+        int[] places = IntStream.range(0, whole.size()).filter(kept).toArray();
+        return new Waveform(
+                pick(whole.timeS(), places),
+                pick(whole.deformation(), places),
+                pick(whole.load(), places),
+                pick(whole.temperatureK(), places),
+                whole.nominalFrequencyHz(),
+                0,
+                whole.window());
+    }
+
+    /** A window of 1200 samples of a steady specimen of which the clock, before and after, has not all. */
+    @ParameterizedTest(name = "samples {0} to {1}: {2} missing, {3} {4}")
+    @CsvSource({
+        "0, 1200, 0, SOUND,",
+        "0, 1178, 0.0183, SOUND,",
+        "0, 1172, 0.0233, DOUBTFUL, GAPS",
+        "30, 1200, 0.0242, DOUBTFUL, GAPS",
+        "20, 1180, 0.0325, DOUBTFUL, GAPS",
+        "0, 850, 0.2917, DOUBTFUL, GAPS",
+        "0, 720, 0.4, UNUSABLE, GAPS",
+        "500, 1200, 0.4158, UNUSABLE, GAPS"
+    })
+    void whatAWindowWasPlannedToHoldAndDoesNotIsAGap(int from, int to, double missing, Quality quality, Flag flag)
+            throws Exception {
+        Window made = new Window(345);
+        made.kelvinPerSecond = 0;
+        Waveform cut = onlySamples(made.build(true), i -> i >= from && i < to);
+
+        assertThat(HarmonicAnalysis.analyse(cut, ExtractionPlan.withDefaults())
+                        .screening()
+                        .gapShare())
+                .isCloseTo(missing, within(1e-3));
+        ModulusPoint point = reduce(cut);
+        assertThat(point.flags()).isEqualTo(flag == null ? List.of() : List.of(flag));
+        assertThat(point.quality()).isEqualTo(quality);
+        assertThat(error(point, 345, 1)).isLessThan(1e-9);
+    }
+
+    @Test
+    void ofTheStartUpCyclesNothingIsMissing() throws Exception {
+        ExtractionPlan plan = new ExtractionPlan(2.5, 7, Drift.LINEAR, FrequencySource.SIGNAL);
+        Window made = new Window(345);
+        made.recordFromS = 600;
+        assertThat(HarmonicAnalysis.analyse(made.build(true), plan).screening().gapShare())
+                .isZero();
+        Waveform without = onlySamples(made.build(true), i -> i != 1199 && i != 900);
+        // of 3.5 cycles, 200 samples each, one between two others and the last
+        assertThat(HarmonicAnalysis.analyse(without, plan).screening().gapShare())
+                .isCloseTo(2 / 700.0, within(1e-5));
+    }
+
+    /** That the samples beyond a jump are left out is what the flag of the clock says. */
+    @Test
+    void aJumpOfTheClockWithinAWindowIsNoGapAsWell() {
+        Window made = new Window(345);
+        made.kelvinPerSecond = 0;
+        Waveform whole = made.build(true);
+        double[] timeS = whole.timeS().clone();
+        for (int i = 800; i < timeS.length; i++) {
+            timeS[i] += 0.3;
+        }
+        Waveform jumped = onlySamples(
+                new Waveform(
+                        timeS,
+                        whole.deformation(),
+                        whole.load(),
+                        whole.temperatureK(),
+                        whole.nominalFrequencyHz(),
+                        0,
+                        whole.window()),
+                i -> timeS[i] < whole.window().orElseThrow().toS());
+        ModulusPoint point = reduce(jumped);
+        assertThat(point.flags()).containsExactly(Flag.UNEVEN_CLOCK);
+        assertThat(point.quality()).isEqualTo(Quality.DOUBTFUL);
+        assertThat(point.samplesUsed()).isEqualTo(800);
     }
 
     @Test
@@ -350,13 +423,7 @@ class RollingWindowTest {
             stepped[i] += 2;
         }
         Waveform leavesIt = new Waveform(
-                ramp.timeS(),
-                ramp.deformation(),
-                ramp.load(),
-                stepped,
-                ramp.nominalFrequencyHz(),
-                0,
-                ramp.windowOfRecordFromS());
+                ramp.timeS(), ramp.deformation(), ramp.load(), stepped, ramp.nominalFrequencyHz(), 0, ramp.window());
         assertThat(reduce(leavesIt).flags()).containsExactly(Flag.TEMPERATURE_WANDER);
     }
 

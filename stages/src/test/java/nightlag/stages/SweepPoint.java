@@ -7,6 +7,7 @@ import nightlag.stages.geometry.DeformationMode;
 import nightlag.stages.geometry.GeometryKind;
 import nightlag.stages.moduli.Flag;
 import nightlag.stages.moduli.Harmonic;
+import nightlag.stages.moduli.HarmonicLimits;
 import nightlag.stages.moduli.Moduli;
 import nightlag.stages.moduli.ModuliCovariance;
 import nightlag.stages.moduli.ModulusPoint;
@@ -24,7 +25,9 @@ public record SweepPoint(
         Quality quality,
         List<Flag> flags,
         Optional<Flag> unusableOnlyBy,
-        double frequencyHz) {
+        double frequencyHz,
+        Optional<HarmonicLimits> harmonicLimits,
+        OptionalDouble windowS) {
     public static SweepPoint of(double strain, Complex modulus, double relativeU) {
         return new SweepPoint(
                 strain,
@@ -35,27 +38,101 @@ public record SweepPoint(
                 Quality.SOUND,
                 List.of(),
                 Optional.empty(),
-                1);
+                1,
+                Optional.empty(),
+                OptionalDouble.empty());
     }
 
     public SweepPoint harmonics(List<Harmonic> orders) {
         return new SweepPoint(
-                strain, modulus, relativeU, orders, torqueGeometry, quality, flags, unusableOnlyBy, frequencyHz);
+                strain,
+                modulus,
+                relativeU,
+                orders,
+                torqueGeometry,
+                quality,
+                flags,
+                unusableOnlyBy,
+                frequencyHz,
+                harmonicLimits,
+                windowS);
     }
 
     public SweepPoint between(Optional<GeometryKind> geometry) {
         return new SweepPoint(
-                strain, modulus, relativeU, harmonics, geometry, quality, flags, unusableOnlyBy, frequencyHz);
+                strain,
+                modulus,
+                relativeU,
+                harmonics,
+                geometry,
+                quality,
+                flags,
+                unusableOnlyBy,
+                frequencyHz,
+                harmonicLimits,
+                windowS);
     }
 
     public SweepPoint unusable(List<Flag> raised, Optional<Flag> onlyBy) {
         return new SweepPoint(
-                strain, modulus, relativeU, harmonics, torqueGeometry, Quality.UNUSABLE, raised, onlyBy, frequencyHz);
+                strain,
+                modulus,
+                relativeU,
+                harmonics,
+                torqueGeometry,
+                Quality.UNUSABLE,
+                raised,
+                onlyBy,
+                frequencyHz,
+                harmonicLimits,
+                windowS);
     }
 
     public SweepPoint hz(double frequency) {
         return new SweepPoint(
-                strain, modulus, relativeU, harmonics, torqueGeometry, quality, flags, unusableOnlyBy, frequency);
+                strain,
+                modulus,
+                relativeU,
+                harmonics,
+                torqueGeometry,
+                quality,
+                flags,
+                unusableOnlyBy,
+                frequency,
+                harmonicLimits,
+                windowS);
+    }
+
+    /** With the limits its harmonics are judged by at the rim. */
+    public SweepPoint judgedBy(HarmonicLimits limits) {
+        return new SweepPoint(
+                strain,
+                modulus,
+                relativeU,
+                harmonics,
+                torqueGeometry,
+                quality,
+                flags,
+                unusableOnlyBy,
+                frequencyHz,
+                Optional.of(limits),
+                windowS);
+    }
+
+    /** One of the windows of a longer record. */
+    public SweepPoint inWindow(double lengthS) {
+        return new SweepPoint(
+                strain,
+                modulus,
+                relativeU,
+                harmonics,
+                torqueGeometry,
+                quality,
+                flags,
+                unusableOnlyBy,
+                frequencyHz,
+                harmonicLimits,
+                OptionalDouble.of(lengthS));
     }
 
     public ModulusPoint build() {
@@ -85,6 +162,8 @@ public record SweepPoint(
                 List.of(),
                 List.of(),
                 torqueGeometry,
-                unusableOnlyBy);
+                unusableOnlyBy,
+                harmonicLimits,
+                windowS);
     }
 }

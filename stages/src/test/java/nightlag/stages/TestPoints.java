@@ -97,6 +97,8 @@ public record TestPoints(
                 List.of(),
                 List.of(),
                 Optional.empty(),
-                Optional.empty());
+                Optional.empty(),
+                Optional.empty(),
+                OptionalDouble.empty());
     }
 }

@@ -4,10 +4,12 @@ import java.util.Arrays;
 import java.util.EnumMap;
 import java.util.Locale;
 import java.util.Map;
+import java.util.Optional;
 import java.util.OptionalDouble;
 import nightlag.pipeline.config.RecordFormat;
 import nightlag.pipeline.config.TagName;
 import nightlag.stages.WaveformRecord;
+import nightlag.stages.waveform.RecordWindow;
 import nightlag.stages.waveform.Waveform;
 
 /**
@@ -248,7 +250,7 @@ final class RollingRows implements RowTaker {
                 samples.temperatureBetweenReadings(timeS),
                 OptionalDouble.of(frequencyHz),
                 Math.toIntExact(leftOutBefore[held - 1] - leftOutBefore[0]),
-                OptionalDouble.of(beginS));
+                Optional.of(new RecordWindow(beginS, beginS(window), endS(window))));
         tally.handOver(
                 new WaveformRecord(
                         facts.recordFacts().tags(values, OptionalDouble.empty(), Long.toString(window + 1), firstLine),

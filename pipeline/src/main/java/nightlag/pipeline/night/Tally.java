@@ -109,11 +109,10 @@ final class Tally {
 
     private void notSound(ModulusPoint point) {
         String name = point.key().sourceFile() + ", point " + point.key().point();
-        String words = point.flags().stream().map(Flag::word).collect(Collectors.joining(", "));
-        LOG.info("{}: published as {}: {}", name, point.quality().word(), words);
+        String reasons = point.reasons().stream().map(Reason::sentence).collect(Collectors.joining("; "));
+        LOG.info("{}: published as {}: {}", name, point.quality().word(), reasons);
         List<String> lines = notSound.computeIfAbsent(point.quality(), any -> new ArrayList<>());
         if (lines.size() < MOST_NOT_SOUND) {
-            String reasons = point.reasons().stream().map(Reason::sentence).collect(Collectors.joining("; "));
             lines.add(name + ", " + point.quality().word() + ": " + reasons);
         }
     }

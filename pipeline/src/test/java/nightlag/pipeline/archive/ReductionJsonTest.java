@@ -78,6 +78,8 @@ class ReductionJsonTest {
                 List.of(),
                 List.of(),
                 Optional.empty(),
-                Optional.empty());
+                Optional.empty(),
+                Optional.empty(),
+                OptionalDouble.empty());
     }
 }

@@ -2,6 +2,7 @@ package nightlag.pipeline.decode;
 
 import static org.assertj.core.api.Assertions.assertThat;
 import static org.assertj.core.api.Assertions.assertThatThrownBy;
+import static org.assertj.core.api.Assertions.within;
 
 import java.io.BufferedWriter;
 import java.nio.file.Files;
@@ -18,6 +19,7 @@ import nightlag.pipeline.config.ChannelName;
 import nightlag.pipeline.config.TagName;
 import nightlag.pipeline.intake.RawFile;
 import nightlag.stages.WaveformRecord;
+import nightlag.stages.waveform.RecordWindow;
 import nightlag.stages.waveform.Waveform;
 import org.junit.jupiter.api.Test;
 import org.junit.jupiter.api.Timeout;
@@ -68,7 +70,10 @@ class RollingRowsTest {
         for (int window = 0; window < 4; window++) {
             Waveform waveform = decoded.waveform(window).waveform();
             assertThat(waveform.timeS()).containsExactly(clock(100 + 3 * window, 24));
-            assertThat(waveform.windowOfRecordFromS()).hasValue(100);
+            RecordWindow planned = waveform.window().orElseThrow();
+            assertThat(planned.recordFromS()).isEqualTo(100);
+            assertThat(planned.fromS()).isCloseTo(100 + 3 * window, within(1e-7));
+            assertThat(planned.toS()).isCloseTo(106 + 3 * window, within(1e-7));
             assertThat(waveform.nominalFrequencyHz()).hasValue(1);
         }
     }
@@ -221,7 +226,7 @@ class RollingRowsTest {
         int advance = 1 + random.nextInt(10);
         Bench.Decoded decoded = Bench.decode(bench().rolling(window, advance).write("ramp.csv", lines));
         Set<Double> seen = new HashSet<>();
-        double begin = decoded.waveform(0).waveform().windowOfRecordFromS().orElseThrow();
+        double begin = decoded.waveform(0).waveform().window().orElseThrow().recordFromS();
         for (int i = 0; i < decoded.records().size(); i++) {
             Waveform waveform = decoded.waveform(i).waveform();
             long number = Long.parseLong(decoded.records().get(i).tags().key().point());

@@ -69,7 +69,9 @@ class LotTablesTest {
                 List.of(),
                 List.of(),
                 Optional.empty(),
-                Optional.empty());
+                Optional.empty(),
+                Optional.empty(),
+                OptionalDouble.empty());
 
         write(new LotResult(List.of(point), List.of(), List.of(), List.of(), List.of(), List.of()));
 
@@ -341,7 +343,9 @@ class LotTablesTest {
                 List.of(),
                 List.of(),
                 Optional.empty(),
-                Optional.empty());
+                Optional.empty(),
+                Optional.empty(),
+                OptionalDouble.empty());
     }
 
     private static LotResult randomResult(long seed) {

@@ -31,9 +31,12 @@ import nightlag.stages.geometry.GeometryKind;
  * @param stressSnrDb signal to noise of the load, dB
  * @param degreesOfFreedom effective degrees of freedom behind the uncertainties
  * @param reasons the figure and the threshold behind each flag, and whatever else is worth knowing
- * @param loop at most 256 pairs of strain and stress from the last cycles, where the point is not sound
+ * @param loop at most 256 pairs of strain and stress from the last cycles, where the record alone is not sound
  * @param torqueGeometry the geometry by which a torque was made the stress; empty where the record held another load
  * @param unusableOnlyBy the flag that alone makes the point unusable; empty where none does, or more than one
+ * @param harmonicLimits the limits its harmonics are judged by again at the rim of parallel plates; empty where they are
+ *     what they are
+ * @param windowS the planned length of the window of a longer record that it comes from, s; empty for a record of its own
  */
 public record ModulusPoint(
         PointKey key,
@@ -57,7 +60,9 @@ public record ModulusPoint(
         List<Reason> reasons,
         List<LoopPair> loop,
         Optional<GeometryKind> torqueGeometry,
-        Optional<Flag> unusableOnlyBy) {
+        Optional<Flag> unusableOnlyBy,
+        Optional<HarmonicLimits> harmonicLimits,
+        OptionalDouble windowS) {
     /** Copies the lists. */
     public ModulusPoint {
         harmonics = List.copyOf(harmonics);
@@ -65,8 +70,9 @@ public record ModulusPoint(
         reasons = List.copyOf(reasons);
         loop = List.copyOf(loop);
     }
+
     /**
-     * The same point with the stress of the plates' rim.
+     * The same point with the stress of the plates' rim; the flags of its harmonics are those that they raise there.
      *
      * @param rim the modulus there
      * @param rimStressPa the stress amplitude there, Pa
@@ -74,7 +80,7 @@ public record ModulusPoint(
      * @param why what was done
      */
     public ModulusPoint atRim(Moduli rim, double rimStressPa, List<Harmonic> rimHarmonics, Reason why) {
-        return changed(
+        ModulusPoint moved = changed(
                 OptionalDouble.of(rimStressPa),
                 Optional.of(rim),
                 rimHarmonics,
@@ -82,6 +88,35 @@ public record ModulusPoint(
                 flags,
                 and(why),
                 unusableOnlyBy);
+        return harmonicLimits.map(moved::withHarmonicsJudged).orElse(moved);
+    }
+
+    private ModulusPoint withHarmonicsJudged(HarmonicLimits limits) {
+        Screening anew =
+                Screening.ofHarmonics(harmonics, new Threshold(limits.third(), OptionalDouble.empty()), limits.even());
+        List<Flag> otherFlags = flags.stream()
+                .filter(flag -> !Screening.OF_HARMONICS.contains(flag))
+                .toList();
+        boolean unusableOtherwise = quality == Quality.UNUSABLE
+                && unusableOnlyBy.filter(Screening.OF_HARMONICS::contains).isEmpty();
+        Quality otherwise =
+                unusableOtherwise ? Quality.UNUSABLE : otherFlags.isEmpty() ? Quality.SOUND : Quality.DOUBTFUL;
+        Optional<Flag> alone = !unusableOtherwise
+                ? anew.unusableOnlyBy()
+                : anew.quality() == Quality.UNUSABLE ? Optional.empty() : unusableOnlyBy;
+        return changed(
+                stressAmplitudePa,
+                moduli,
+                harmonics,
+                otherwise.compareTo(anew.quality()) > 0 ? otherwise : anew.quality(),
+                Stream.concat(otherFlags.stream(), anew.flags().stream())
+                        .sorted()
+                        .toList(),
+                Stream.concat(
+                                anew.reasons().stream(),
+                                reasons.stream().filter(reason -> !Screening.isOfHarmonics(reason)))
+                        .toList(),
+                alone);
     }
 
     /** The same point with another modulus, nothing else changed. */
@@ -138,6 +173,8 @@ public record ModulusPoint(
                 newReasons,
                 loop,
                 torqueGeometry,
-                newUnusableOnlyBy);
+                newUnusableOnlyBy,
+                harmonicLimits,
+                windowS);
     }
 }

@@ -8,7 +8,9 @@ import java.util.OptionalDouble;
 import nightlag.stages.fault.Reason;
 import nightlag.stages.fault.ReductionFault;
 import nightlag.stages.geometry.DeformationMode;
+import nightlag.stages.geometry.GeometryKind;
 import nightlag.stages.geometry.SignalCorrection;
+import nightlag.stages.waveform.RecordWindow;
 import nightlag.stages.waveform.SignalFit;
 import nightlag.stages.waveform.Waveform;
 
@@ -123,7 +125,12 @@ public final class ModulusPoints {
                         .map(samples -> Loop.of(samples, fit, correction.at(0)))
                         .orElse(List.of()),
                 correction.torqueGeometry(),
-                screening.unusableOnlyBy());
+                screening.unusableOnlyBy(),
+                correction
+                        .torqueGeometry()
+                        .filter(kind -> kind == GeometryKind.PARALLEL_PLATE && !harmonics.isEmpty())
+                        .map(kind -> new HarmonicLimits(plan.thirdHarmonic().doubtful(), plan.evenHarmonics())),
+                windowS(waveform));
     }
 
     /**
@@ -216,7 +223,15 @@ public final class ModulusPoints {
                 reasons,
                 List.of(),
                 Optional.empty(),
-                Optional.empty());
+                Optional.empty(),
+                Optional.empty(),
+                OptionalDouble.empty());
+    }
+
+    private static OptionalDouble windowS(Optional<Waveform> waveform) {
+        return waveform.flatMap(Waveform::window).stream()
+                .mapToDouble(RecordWindow::lengthS)
+                .findFirst();
     }
 
     private static List<Reason> signs(Moduli moduli) {

@@ -20,6 +20,9 @@ import nightlag.stages.waveform.SignalFit;
  * that noise alone can feign (harmonics, drift, trend, frequency) must also exceed three of their own uncertainties.
  */
 final class Screening {
+    /** The flags that harmonics raise. */
+    static final Set<Flag> OF_HARMONICS = Set.of(Flag.NONLINEAR, Flag.EVEN_HARMONICS);
+
     private static final OptionalDouble NEVER = OptionalDouble.empty();
     /** A scatter so much over the noise that the noise's u tells less than half of it. */
     private static final double CYCLES_OVER_NOISE = 2;
@@ -88,18 +91,7 @@ final class Screening {
         figures.cycleTrend()
                 .ifPresent(trend -> screening.above(ScreeningReason.SCREENING_UNSETTLED, trend, plan.cycleTrend()));
         figures.cycleScatter().ifPresent(screening::cyclesAgainstNoise);
-        for (Harmonic harmonic : stress) {
-            if (harmonic.order() == 3) {
-                screening.above(ScreeningReason.SCREENING_NONLINEAR, figure(harmonic), plan.thirdHarmonic());
-            }
-        }
-        stress.stream()
-                .filter(harmonic -> harmonic.order() % 2 == 0)
-                .map(Screening::figure)
-                .filter(Figure::significant)
-                .max(Comparator.comparingDouble(Figure::value))
-                .ifPresent(largest ->
-                        screening.above(ScreeningReason.SCREENING_EVEN_HARMONICS, largest, plan.evenHarmonics()));
+        screening.harmonics(stress, plan.thirdHarmonic(), plan.evenHarmonics());
         screening.above(ScreeningReason.SCREENING_INERTIA_HEAVY, inertiaRatio, plan.inertia());
         screening.above(ScreeningReason.SCREENING_COMPLIANCE_HEAVY, complianceRatio, plan.compliance());
         screening.outOf(deformationRange, "deformation", fit.deformation()[0].abs());
@@ -111,6 +103,33 @@ final class Screening {
                 .ifPresent(mismatch -> screening.above(
                         ScreeningReason.SCREENING_FREQUENCY_MISMATCH, mismatch, plan.frequencyMismatch()));
         return screening;
+    }
+
+    /** Screens nothing but the orders of the stress. */
+    static Screening ofHarmonics(List<Harmonic> stress, Threshold third, Threshold even) {
+        Screening screening = new Screening();
+        screening.harmonics(stress, third, even);
+        return screening;
+    }
+
+    /** Whether it is the reason of one of the flags that harmonics raise. */
+    static boolean isOfHarmonics(Reason reason) {
+        return reason.code().equals(ScreeningReason.SCREENING_NONLINEAR.name())
+                || reason.code().equals(ScreeningReason.SCREENING_EVEN_HARMONICS.name());
+    }
+
+    private void harmonics(List<Harmonic> stress, Threshold third, Threshold even) {
+        for (Harmonic harmonic : stress) {
+            if (harmonic.order() == 3) {
+                above(ScreeningReason.SCREENING_NONLINEAR, figure(harmonic), third);
+            }
+        }
+        stress.stream()
+                .filter(harmonic -> harmonic.order() % 2 == 0)
+                .map(Screening::figure)
+                .filter(Figure::significant)
+                .max(Comparator.comparingDouble(Figure::value))
+                .ifPresent(largest -> above(ScreeningReason.SCREENING_EVEN_HARMONICS, largest, even));
     }
 
     private static Figure figure(Harmonic harmonic) {

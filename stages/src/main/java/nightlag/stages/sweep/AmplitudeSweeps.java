@@ -37,6 +37,7 @@ public record AmplitudeSweeps(List<List<ModulusPoint>> sweeps, List<ModulusPoint
 
     /**
      * Finds them. Points without a modulus or a strain, and those unusable for more than their third harmonic, belong to none.
+     * Nor do windows of a longer record, unless asked for.
      *
      * @param points the lot's points
      * @param kind what varies, as configured; {@code AUTO}: over three strains or more, up to that of the largest stress,
@@ -47,7 +48,7 @@ public record AmplitudeSweeps(List<List<ModulusPoint>> sweeps, List<ModulusPoint
         List<List<ModulusPoint>> sweeps = new ArrayList<>();
         if (kind == SweepPlan.Kind.AUTO || kind == SweepPlan.Kind.AMPLITUDE) {
             List<ModulusPoint> candidates =
-                    points.stream().filter(AmplitudeSweeps::canBelong).toList();
+                    points.stream().filter(point -> canBelong(point, kind)).toList();
             for (List<ModulusPoint> sweep : SweepName.groupByDeformation(candidates)) {
                 for (List<ModulusPoint> isotherm : PointGroups.byIsotherm(sweep)) {
                     for (List<ModulusPoint> group : PointGroups.byFrequency(isotherm)) {
@@ -75,10 +76,14 @@ public record AmplitudeSweeps(List<List<ModulusPoint>> sweeps, List<ModulusPoint
         return point.strainAmplitude().orElseThrow();
     }
 
-    private static boolean canBelong(ModulusPoint point) {
+    private static boolean canBelong(ModulusPoint point, SweepPlan.Kind kind) {
+        // in one long record strain is not made to vary step by step: it follows the specimen
+        boolean mayBeDriven =
+                kind == SweepPlan.Kind.AMPLITUDE || point.windowS().isEmpty();
         boolean trusted = point.quality() != Quality.UNUSABLE
                 || point.unusableOnlyBy().filter(flag -> flag == Flag.NONLINEAR).isPresent();
         return trusted
+                && mayBeDriven
                 && point.frequencyHz().orElse(0) > 0
                 && point.strainAmplitude().orElse(0) > 0
                 && point.stressAmplitudePa().orElse(0) > 0

@@ -38,6 +38,19 @@ record Clock(double gapShare, double jitter, double intervalS, double largestDev
         return withGaps(timeS, first, spans, deviation);
     }
 
+    /**
+     * The share of a planned span that is missing: gaps between the samples, and what of the same length lies before the first
+     * and behind the last of them.
+     */
+    double gapShareOf(double fromS, double toS, double firstS, double lastS) {
+        double within = gapShare * (lastS - firstS + intervalS);
+        return (within + missing(firstS - fromS) + missing(toS - lastS)) / (toS - fromS);
+    }
+
+    private double missing(double spanS) {
+        return spanS > GAP * intervalS ? spanS - intervalS : 0;
+    }
+
     private static Clock withGaps(double[] timeS, int first, int spans, double deviation) {
         double[] sorted = new double[spans];
         for (int i = 0; i < spans; i++) {

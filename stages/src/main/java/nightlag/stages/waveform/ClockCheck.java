@@ -52,7 +52,15 @@ final class ClockCheck {
                     temperature.length == 0 ? temperature : Arrays.copyOfRange(temperature, from, to),
                     whole.nominalFrequencyHz(),
                     whole.rowsLeftOut(),
-                    whole.windowOfRecordFromS());
+                    whole.window().map(window -> plan(window, whole)));
+        }
+
+        /** What lies beyond a jump was not missed: it is left out, and that is said. */
+        private RecordWindow plan(RecordWindow window, Waveform whole) {
+            return new RecordWindow(
+                    window.recordFromS(),
+                    from == 0 ? window.fromS() : whole.timeS()[from],
+                    to == whole.size() ? window.toS() : whole.timeS()[to - 1]);
         }
     }
 

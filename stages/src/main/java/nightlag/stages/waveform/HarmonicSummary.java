@@ -67,7 +67,7 @@ final class HarmonicSummary {
         return new ScreeningFigures(
                 atLimit / recorded,
                 spikes / recorded,
-                part.clock().gapShare(),
+                part.waveform().window().map(this::gapShare).orElse(part.clock().gapShare()),
                 part.clock().jitter(),
                 snrDb(steadiness, Samples.DEFORMATION),
                 snrDb(steadiness, Samples.LOAD),
@@ -77,6 +77,19 @@ final class HarmonicSummary {
                 frequencyMismatch,
                 steadiness.cycleScatter(covariance.degreesOfFreedom()),
                 Optional.empty());
+    }
+
+    /** Of what a window was planned to hold after the start-up cycles. */
+    private double gapShare(RecordWindow window) {
+        double startUpEndS =
+                new StartUp(part.waveform(), part.plan().startUpCycles(), samples).endS(result.angularFrequency());
+        double[] timeS = part.waveform().timeS();
+        return part.clock()
+                .gapShareOf(
+                        Math.max(window.fromS(), startUpEndS),
+                        window.toS(),
+                        timeS[part.first()],
+                        timeS[timeS.length - 1]);
     }
 
     private List<Reason> withNotes(List<Reason> notesBefore) {

@@ -8,7 +8,7 @@ import java.util.OptionalDouble;
  *
  * @param clippedShare share of the samples that stand at a channel's limit
  * @param spikeShare share of the samples left out as isolated spikes
- * @param gapShare share of the record's duration that is missing
+ * @param gapShare share of the record's duration, or of what its window was planned to hold, that is missing
  * @param clockJitter standard deviation of the sampling interval over its mean
  * @param deformationSnrDb signal to noise of the deformation in dB: 20 log10(rms of the fundamental / noise)
  * @param loadSnrDb the same of the load

@@ -47,7 +47,7 @@ final class StartUp {
     }
 
     private double beginS() {
-        return waveform.windowOfRecordFromS().orElse(waveform.timeS()[0]);
+        return waveform.window().map(RecordWindow::recordFromS).orElse(waveform.timeS()[0]);
     }
 
     /** The length of a start-up cycle; those before a window are not seen here, so their length follows from the tag. */

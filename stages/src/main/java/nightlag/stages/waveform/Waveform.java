@@ -1,5 +1,6 @@
 package nightlag.stages.waveform;
 
+import java.util.Optional;
 import java.util.OptionalDouble;
 
 /**
@@ -11,8 +12,8 @@ import java.util.OptionalDouble;
  * @param temperatureK temperature in K, one value a time, or an empty array without such a channel
  * @param nominalFrequencyHz the frequency the record is tagged with, in Hz
  * @param rowsLeftOut rows of the record without a value in a needed column
- * @param windowOfRecordFromS for a window cut out of a longer record, in which the specimen may change: when that record
- *     began, s; empty where these samples are the whole record
+ * @param window for a window cut out of a longer record, in which the specimen may change: what it was planned to hold;
+ *     empty where these samples are the whole record
  */
 public record Waveform(
         double[] timeS,
@@ -21,7 +22,7 @@ public record Waveform(
         double[] temperatureK,
         OptionalDouble nominalFrequencyHz,
         int rowsLeftOut,
-        OptionalDouble windowOfRecordFromS) {
+        Optional<RecordWindow> window) {
     /** A whole record. */
     public Waveform(
             double[] timeS,
@@ -30,7 +31,7 @@ public record Waveform(
             double[] temperatureK,
             OptionalDouble nominalFrequencyHz,
             int rowsLeftOut) {
-        this(timeS, deformation, load, temperatureK, nominalFrequencyHz, rowsLeftOut, OptionalDouble.empty());
+        this(timeS, deformation, load, temperatureK, nominalFrequencyHz, rowsLeftOut, Optional.empty());
     }
 
     /** Checks the shapes. */
@@ -44,7 +45,7 @@ public record Waveform(
 
     /** Whether it is a window cut out of a longer record. */
     public boolean isWindow() {
-        return windowOfRecordFromS.isPresent();
+        return window.isPresent();
     }
 
     /** The number of samples. */
