@@ -283,6 +283,37 @@ class RollingWindowTest {
         assertThat(error(point, 375, 1)).isLessThan(5e-3);
     }
 
+    /**
+     * Two cycles do not tell a curved change from drift and harmonics; u has room for it, and without noise that is all there
+     * is. Outside these temperatures both are below 4e-6 of |E*|.
+     */
+    @Test
+    void aWindowOfTwoCyclesCountsInWhatItsCurvatureMayHide() {
+        double squares = 0;
+        double largest = 0;
+        int count = 0;
+        for (double temperature = 369; temperature <= 391; temperature += 0.5) {
+            Window made = new Window(temperature);
+            made.cycles = 2;
+            Moduli found = reduce(made.build(true)).moduli().orElseThrow();
+            Complex truth = modulus(temperature, 1);
+            double storage = (found.storagePa() - truth.re()) / storageU(found);
+            double loss = (found.lossPa() - truth.im()) / lossU(found);
+            System.out.printf(
+                    "%g %g %g err %g u %g%n",
+                    temperature,
+                    storage,
+                    loss,
+                    found.complex().minus(truth).abs() / truth.abs(),
+                    storageU(found) / truth.abs());
+            largest = Math.max(largest, Math.max(Math.abs(storage), Math.abs(loss)));
+            squares += storage * storage + loss * loss;
+            count += 2;
+        }
+        assertThat(largest).isLessThan(2);
+        assertThat(Math.sqrt(squares / count)).isBetween(0.2, 0.9);
+    }
+
     @Test
     void aPointStandsAtTheMiddleOfItsWindowInTimeAndTemperature() {
         Waveform whole = new Window(375).build(true);

@@ -257,6 +257,12 @@ final class TracePage {
                             + point.frequencyHz().stream()
                                     .mapToObj(hz -> digits(SHORT, hz) + " Hz, ")
                                     .collect(Collectors.joining())
+                            + point.temperatureK().stream()
+                                    .mapToObj(kelvin -> digits(LONG, kelvin - KELVIN_AT_ZERO_CELSIUS) + " °C, ")
+                                    .collect(Collectors.joining())
+                            + point.elapsedS().stream()
+                                    .mapToObj(elapsed -> digits(LONG, elapsed) + " s, ")
+                                    .collect(Collectors.joining())
                             + point.moduli()
                                     .map(moduli -> "storage " + digits(SHORT, moduli.storagePa()) + " Pa, loss "
                                             + digits(SHORT, moduli.lossPa()) + " Pa, ")

@@ -146,7 +146,10 @@ public record FileTrace(
 
         private static String named(List<String> points) {
             String first = points.stream().limit(MOST_NAMED).collect(Collectors.joining("', '", "'", "'"));
-            return points.size() > MOST_NAMED ? first + " and " + (points.size() - MOST_NAMED) + " more" : first;
+            int more = points.size() - MOST_NAMED;
+            return more > 0
+                    ? first + " and " + more + " more, the last '" + points.get(points.size() - 1) + "'"
+                    : first;
         }
     }
 

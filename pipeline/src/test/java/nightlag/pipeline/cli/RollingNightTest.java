@@ -6,7 +6,9 @@ import static org.assertj.core.api.Assertions.within;
 import java.nio.file.Path;
 import java.util.List;
 import java.util.Map;
+import java.util.stream.Collectors;
 import java.util.stream.IntStream;
+import java.util.stream.Stream;
 import org.junit.jupiter.api.BeforeEach;
 import org.junit.jupiter.api.Test;
 import org.junit.jupiter.api.io.TempDir;
@@ -117,6 +119,38 @@ class RollingNightTest {
     }
 
     @Test
+    void aTraceSaysWhereEachOtherWindowStands() {
+        lab.write("bench/A1/ramp.csv", ramp(90 * PER_CYCLE));
+
+        // the tag elapsed says 60 s; the middle of window 2 is 6 s later, 2 K/min from 91.85 °C on
+        assertThat(lab.command("trace", "bench/A1/ramp.csv").out().lines())
+                .anyMatch(line -> line.startsWith("other points 2: 1 Hz, 92.0497 °C, 65.99 s, storage "))
+                .anyMatch(line -> line.startsWith("             29: 1 Hz, 94.7497 °C, 146.99 s, storage "));
+        assertThat(lab.command("trace", "--point", "30", "bench/A1/ramp.csv").err())
+                .contains("has no point '30'; its points are '1', '2', ", "'20' and 9 more, the last '29'");
+    }
+
+    @Test
+    void aWindowCutShortByABreakInTheClockHasGaps() {
+        List<String> lines = ramp(20 * PER_CYCLE).lines().toList();
+        // three lines of head, then 4.5 s of the first window's 6 s; the second would hold a quarter, the third nothing
+        String broken = Stream.concat(
+                        lines.subList(0, 3 + 45 * PER_CYCLE / 10).stream(),
+                        lines.subList(3 + 12 * PER_CYCLE, lines.size()).stream())
+                .collect(Collectors.joining("\n", "", "\n"));
+        lab.write("bench/ramp.csv", broken);
+
+        lab.run();
+
+        List<Map<String, String>> points = lab.table("plover", "A1", "points");
+        assertThat(points).extracting(point -> point.get("point")).containsExactly("1", "4", "5");
+        assertThat(points.get(0)).containsEntry("flags", "gaps").containsEntry("quality", "doubtful");
+        // from 9 s to 15 s, of which the first half is missing
+        assertThat(points.get(1)).containsEntry("flags", "gaps").containsEntry("quality", "unusable");
+        assertThat(points.get(2)).containsEntry("flags", "").containsEntry("quality", "sound");
+    }
+
+    @Test
     void aRampShorterThanAWindowIsSetAside() {
         lab.write("bench/ramp.csv", ramp(PER_CYCLE * 5));
 
@@ -126,6 +160,8 @@ class RollingNightTest {
                 .singleElement()
                 .satisfies(file -> assertThat(file)
                         .containsEntry("status", "set-aside")
+                        .containsEntry("grade", "plover")
+                        .containsEntry("lot", "A1")
                         .hasEntrySatisfying(
                                 "reason", reason -> assertThat(reason).contains("6 cycles at 1 Hz are 6 s")));
     }

@@ -20,7 +20,10 @@ import nightlag.stages.waveform.SignalFit;
  * Macromol. Mater. Eng. 287 (2002) 83); n = 1 gives G'γ₀ and G''γ₀.
  */
 final class StressHarmonics {
-    /** No uncertainty is smaller than this part of its value: the limit of the arithmetic. */
+    /**
+     * No uncertainty is smaller than this part of its value, or for an order of the stress of the first order: the limit of the
+     * arithmetic.
+     */
     private static final double UNCERTAINTY_FLOOR = 1e-12;
 
     private final SignalFit fit;
@@ -105,12 +108,8 @@ final class StressHarmonics {
         double strainPhase = fundamental.strain().argument();
         Complex referred = stress.times(Complex.polar(1, -order * (strainPhase + Math.PI / 2)));
         double intensity = stress.abs() / stressAmplitudePa();
-        return new Harmonic(
-                order,
-                -referred.im(),
-                referred.re(),
-                intensity,
-                OptionalDouble.of(intensityU(order, map, stress, intensity)));
+        double u = Math.max(intensityU(order, map, stress, intensity), UNCERTAINTY_FLOOR * Math.max(1, intensity));
+        return new Harmonic(order, -referred.im(), referred.re(), intensity, OptionalDouble.of(u));
     }
 
     /** u of |σ_n|/|σ₁|: along σ_n where it stands out of its noise, else the mean of both directions. */
@@ -125,7 +124,7 @@ final class StressHarmonics {
         ComplexGradient relative = ownStress
                 .times(Complex.ONE.over(stress))
                 .minus(fundamentalStressGradient.times(Complex.ONE.over(fundamentalStress)));
-        return Math.sqrt(floored(intensity * intensity * relative.realVariance(fit), intensity));
+        return intensity * Math.sqrt(Math.max(relative.realVariance(fit), 0));
     }
 
     private static double floored(double variance, double value) {

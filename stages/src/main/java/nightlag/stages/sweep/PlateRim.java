@@ -280,6 +280,6 @@ public final class PlateRim {
                                                         * intensity
                                                         * (change.factor().re() * change.covariance() / 2
                                                                 + change.slopeVariance() / 16),
-                                        0))));
+                                        FLOOR * FLOOR))));
     }
 }

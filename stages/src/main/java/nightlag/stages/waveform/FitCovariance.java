@@ -3,7 +3,8 @@ package nightlag.stages.waveform;
 /**
  * The covariance of all amplitudes of both channels. At fixed ω that of a channel is σ²(AᵀA)⁻¹, each row and column with the
  * noise beside its own order; the shared ω adds var(δ) h hᵀ over all of them, h_c = (AᵀA)⁻¹Aᵀg_c. For white noise this is
- * the inverse Fisher matrix of the whole model.
+ * the inverse Fisher matrix of the whole model. Where the amplitudes follow no more than a line in time, what a curve may hide
+ * there is added.
  */
 final class FitCovariance {
     private final Basis basis;
@@ -54,7 +55,27 @@ final class FitCovariance {
                 matrix[column][row] = value;
             }
         }
+        if (basis.trendDegree() == 1) {
+            for (int c = 0; c < Samples.CHANNELS; c++) {
+                double bend = bend(c);
+                for (int row = 2 * orders * c; row < 2 * orders * c + 2; row++) {
+                    matrix[row][row] += bend * bend;
+                }
+            }
+        }
         return matrix;
+    }
+
+    /**
+     * What an amplitude that follows a line may owe in the middle to a curve the line could not follow. A₂ without a parabola is
+     * taken for a third of itself, and the size of an A₂ not known is that of |A₁|²/|A₀|: twice that of an exponential change.
+     */
+    private double bend(int channel) {
+        double[] x = fit.coefficients()[channel];
+        int middle = basis.cosineColumn(1);
+        int line = basis.trendColumn(1);
+        double slope = Math.hypot(x[line], x[line + 1]);
+        return slope * slope / (3 * Math.hypot(x[middle], x[middle + 1]));
     }
 
     /** Effective degrees of freedom of |load / deformation| (Welch–Satterthwaite). */
