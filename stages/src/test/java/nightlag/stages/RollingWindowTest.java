@@ -299,13 +299,6 @@ class RollingWindowTest {
             Complex truth = modulus(temperature, 1);
             double storage = (found.storagePa() - truth.re()) / storageU(found);
             double loss = (found.lossPa() - truth.im()) / lossU(found);
-            System.out.printf(
-                    "%g %g %g err %g u %g%n",
-                    temperature,
-                    storage,
-                    loss,
-                    found.complex().minus(truth).abs() / truth.abs(),
-                    storageU(found) / truth.abs());
             largest = Math.max(largest, Math.max(Math.abs(storage), Math.abs(loss)));
             squares += storage * storage + loss * loss;
             count += 2;

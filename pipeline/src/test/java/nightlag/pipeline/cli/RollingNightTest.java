@@ -133,10 +133,10 @@ class RollingNightTest {
     @Test
     void aWindowCutShortByABreakInTheClockHasGaps() {
         List<String> lines = ramp(20 * PER_CYCLE).lines().toList();
-        // three lines of head, then 4.5 s of the first window's 6 s; the second would hold a quarter, the third nothing
+        // three lines of head, then 4.5 s of the first window's 6 s; the second and the third would hold less than half
         String broken = Stream.concat(
                         lines.subList(0, 3 + 45 * PER_CYCLE / 10).stream(),
-                        lines.subList(3 + 12 * PER_CYCLE, lines.size()).stream())
+                        lines.subList(3 + 115 * PER_CYCLE / 10, lines.size()).stream())
                 .collect(Collectors.joining("\n", "", "\n"));
         lab.write("bench/ramp.csv", broken);
 
@@ -145,7 +145,7 @@ class RollingNightTest {
         List<Map<String, String>> points = lab.table("plover", "A1", "points");
         assertThat(points).extracting(point -> point.get("point")).containsExactly("1", "4", "5");
         assertThat(points.get(0)).containsEntry("flags", "gaps").containsEntry("quality", "doubtful");
-        // from 9 s to 15 s, of which the first half is missing
+        // from 9 s to 15 s, of which the first 2.5 s are missing
         assertThat(points.get(1)).containsEntry("flags", "gaps").containsEntry("quality", "unusable");
         assertThat(points.get(2)).containsEntry("flags", "").containsEntry("quality", "sound");
     }

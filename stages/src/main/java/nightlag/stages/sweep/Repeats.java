@@ -193,7 +193,9 @@ final class Repeats {
                 List.of(SweepReason.SWEEP_REPEATS_AVERAGED.with(group.size())),
                 List.of(),
                 first.torqueGeometry(),
-                Optional.empty());
+                Optional.empty(),
+                Optional.empty(),
+                first.windowS());
     }
 
     private Moduli widened(Moduli moduli) {

@@ -125,6 +125,8 @@ public record SeriesPoint(
                 List.of(),
                 List.of(),
                 Optional.empty(),
-                Optional.empty());
+                Optional.empty(),
+                Optional.empty(),
+                OptionalDouble.empty());
     }
 }
