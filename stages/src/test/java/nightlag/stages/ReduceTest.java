@@ -341,6 +341,25 @@ class ReduceTest {
     }
 
     @Test
+    void aLossModulusBelowZeroByItsNoiseIsNotWorthAWord() {
+        for (double loss : new double[] {-29, -31}) {
+            ModulusPoint point = only(Reduce.reduce(
+                    new GivenModuli(
+                            tags(Map.of()),
+                            2,
+                            3e5,
+                            loss,
+                            OptionalDouble.of(10),
+                            OptionalDouble.of(10),
+                            OptionalDouble.empty()),
+                    plan(Optional.empty(), Corrections.none())));
+            assertThat(point.reasons())
+                    .extracting(Reason::code)
+                    .isEqualTo(loss < -30 ? List.of("MODULI_LOSS_NEGATIVE") : List.of());
+        }
+    }
+
+    @Test
     void givenModuliOfNothingAreUnusable() {
         for (double[] pair : new double[][] {{0, 0}, {Double.NaN, 1}, {1, Double.POSITIVE_INFINITY}}) {
             ModulusPoint point = only(Reduce.reduce(

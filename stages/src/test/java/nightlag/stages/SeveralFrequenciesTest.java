@@ -149,12 +149,14 @@ class SeveralFrequenciesTest {
         assertThat(point.elapsedS()).hasValue(600);
     }
 
-    @Test
-    void aChirpGivesPointsOfStrainAndStress() {
-        Chirp chirp = Chirp.of(0.1, 10, 60, new double[] {1e4}, new double[] {0.1})
+    private static Chirp chirp() {
+        return Chirp.of(0.1, 10, 60, new double[] {1e4}, new double[] {0.1})
                 .rest(1, 3)
                 .noise(3e-4);
-        List<ModulusPoint> points = Reduce.reduce(
+    }
+
+    private static List<ModulusPoint> points(Chirp chirp) {
+        return Reduce.reduce(
                         new WaveformRecord(
                                 tags(OptionalDouble.empty()),
                                 DeformationSignal.STRAIN,
@@ -169,11 +171,34 @@ class SeveralFrequenciesTest {
                                 ExtractionPlan.withDefaults(),
                                 ScreeningPlan.withDefaults()))
                 .points();
-        assertThat(points).hasSize(10).allSatisfy(point -> {
-            Complex truth = chirp.modulus(point.frequencyHz().orElseThrow());
+    }
+
+    @Test
+    void aChirpGivesPointsOfStrainAndStress() {
+        assertThat(points(chirp())).hasSize(10).allSatisfy(point -> {
+            Complex truth = chirp().modulus(point.frequencyHz().orElseThrow());
             assertThat(point.quality()).isEqualTo(Quality.SOUND);
             assertThat(point.moduli().orElseThrow().complex().minus(truth).abs() / truth.abs())
                     .isLessThan(0.01);
+        });
+    }
+
+    /** The recorder starts while the sweep is under way: the points below twice the slowest are unsettled, and nothing else. */
+    @Test
+    void aChirpThatBeginsInMotionIsUnsettledAtItsSlowEnd() {
+        List<ModulusPoint> points = points(chirp().startedLate(15));
+        double slowest = points.get(0).frequencyHz().orElseThrow();
+        assertThat(points).hasSizeGreaterThan(5).allSatisfy(point -> {
+            boolean slow = point.frequencyHz().orElseThrow() < 2 * slowest;
+            assertThat(point.flags()).isEqualTo(slow ? List.of(Flag.UNSETTLED) : List.of());
+            assertThat(point.quality()).isEqualTo(slow ? Quality.DOUBTFUL : Quality.SOUND);
+        });
+        assertThat(points.get(0).reasons()).anySatisfy(reason -> {
+            assertThat(reason.code()).isEqualTo("SCREENING_SWEEP_IN_MOTION");
+            assertThat(reason.sentence())
+                    .startsWith("unsettled: the record begins in motion, ")
+                    .contains("the limit is 0.1")
+                    .endsWith("(doubtful)");
         });
     }
 
@@ -183,6 +208,8 @@ class SeveralFrequenciesTest {
         assertThat(points).hasSize(1);
         assertThat(points.get(0).key().point()).isEqualTo("p");
         assertThat(points.get(0).quality()).isEqualTo(Quality.UNUSABLE);
-        assertThat(points.get(0).reasons()).extracting(reason -> reason.code()).containsExactly("MULTISINE_NOT_TONES");
+        assertThat(points.get(0).reasons())
+                .extracting(reason -> reason.code())
+                .containsExactly("MULTISINE_OTHER_TONES");
     }
 }

@@ -4,6 +4,7 @@ import java.nio.file.Path;
 import java.util.ArrayList;
 import java.util.EnumMap;
 import java.util.HashSet;
+import java.util.LinkedHashMap;
 import java.util.List;
 import java.util.Map;
 import java.util.Set;
@@ -27,6 +28,9 @@ final class Tally {
 
     /** Of so many points that are not sound a person reads the reasons at the end; the log has them all. */
     private static final int MOST_NOT_SOUND = 100;
+
+    /** So many points that share a reason are named, the others are counted. */
+    private static final int MOST_NAMED = 3;
 
     private final Path folder;
     private final List<NightFileRow> files = new ArrayList<>();
@@ -81,13 +85,26 @@ final class Tally {
                     counts.leftOut() - counts.outsideWindows(),
                     counts.outsideWindows());
         }
+        Map<String, List<String>> pointsBySentence = new LinkedHashMap<>();
         for (Reduction reduction : reductions) {
             for (ModulusPoint point : reduction.points()) {
                 for (Reason reason : point.reasons()) {
-                    LOG.info("{}, point {}: {}", file, point.key().point(), reason.sentence());
+                    pointsBySentence
+                            .computeIfAbsent(reason.sentence(), any -> new ArrayList<>())
+                            .add(point.key().point());
                 }
             }
         }
+        pointsBySentence.forEach((sentence, points) -> LOG.info("{}, {}: {}", file, named(points), sentence));
+    }
+
+    /** One sentence about many points of a long record is one line of the log. */
+    private static String named(List<String> points) {
+        if (points.size() == 1) {
+            return "point " + points.get(0);
+        }
+        String first = String.join(", ", points.subList(0, Math.min(MOST_NAMED, points.size())));
+        return "points " + first + (points.size() > MOST_NAMED ? " and " + (points.size() - MOST_NAMED) + " more" : "");
     }
 
     /** Counts the points of a lot that come from files reduced this night, as they are published. */

@@ -174,16 +174,29 @@ final class Lab {
     /** The rows of the newest night's {@code files.csv}. */
     List<Map<String, String>> files() {
         try (Stream<Path> nights = Files.list(path("results/nights"))) {
-            // names within a second end in -2, -3 …; modified times order them
-            return rows(nights.max(java.util.Comparator.comparing(Lab::modified)
-                            .thenComparing(
-                                    night -> night.getFileName().toString().length())
-                            .thenComparing(Path::toString))
-                    .orElseThrow()
-                    .resolve("files.csv"));
+            return rows(newest(nights).resolve("files.csv"));
         } catch (IOException e) {
             throw new UncheckedIOException(e);
         }
+    }
+
+    /** The lines of the newest night's log that hold some words. */
+    List<String> logLines(String words) {
+        try (Stream<Path> nights = Files.list(path("results/nights"))) {
+            return Files.readAllLines(newest(nights).resolve("night.log")).stream()
+                    .filter(line -> line.contains(words))
+                    .toList();
+        } catch (IOException e) {
+            throw new UncheckedIOException(e);
+        }
+    }
+
+    private static Path newest(Stream<Path> nights) {
+        // names within a second end in -2, -3 …; modified times order them
+        return nights.max(java.util.Comparator.comparing(Lab::modified)
+                        .thenComparing(night -> night.getFileName().toString().length())
+                        .thenComparing(Path::toString))
+                .orElseThrow();
     }
 
     private static FileTime modified(Path path) {

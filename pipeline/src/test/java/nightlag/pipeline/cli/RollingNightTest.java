@@ -118,6 +118,22 @@ class RollingNightTest {
         }
     }
 
+    /** Every window lacks a row or two; the log says each count once and how many points share it. */
+    @Test
+    void emptyCellsOfALongRecordAreALineForAllItsWindows() {
+        String[] lines = ramp(PER_CYCLE * 120).split("\n");
+        for (int i = 60; i < lines.length; i += 190) {
+            String[] cells = lines[i].split(",");
+            lines[i] = cells[0] + "," + cells[1] + ",," + cells[3];
+        }
+        lab.write("bench/ramp.csv", String.join("\n", lines) + "\n");
+
+        assertThat(lab.run().exitCode()).isZero();
+
+        List<String> said = lab.logLines(" rows without a value in a needed column");
+        assertThat(said).hasSize(2).allMatch(line -> line.matches(".* points \\d+, \\d+, \\d+ and \\d+ more: .*"));
+    }
+
     @Test
     void aTraceSaysWhereEachOtherWindowStands() {
         lab.write("bench/A1/ramp.csv", ramp(90 * PER_CYCLE));

@@ -149,6 +149,10 @@ class SeveralFrequenciesNightTest {
             assertThat(Math.log10(ratio)).isCloseTo(0.2, within(1e-9));
         }
         assertThat(lab.table("plover", "L1", "spectrum")).isNotEmpty();
+        assertThat(lab.logLines("the sweep is trusted from"))
+                .singleElement()
+                .asString()
+                .contains("bench/sweep.csv, points sweep-01, sweep-02, sweep-03 and ");
     }
 
     @Test

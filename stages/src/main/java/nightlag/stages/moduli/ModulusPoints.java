@@ -16,6 +16,9 @@ import nightlag.stages.waveform.Waveform;
 
 /** Points, from fitted records, from moduli reduced elsewhere, and from records that give none. */
 public final class ModulusPoints {
+    /** Standard uncertainties by which a figure stands out of its noise. */
+    private static final double STANDS_OUT = 3;
+
     private ModulusPoints() {}
 
     /**
@@ -234,12 +237,15 @@ public final class ModulusPoints {
                 .findFirst();
     }
 
+    /** Moduli below zero by more than noise makes of small ones; without an uncertainty, below zero at all. */
     private static List<Reason> signs(Moduli moduli) {
+        double lossU = moduli.covariance().map(ModuliCovariance::lossU).orElse(0.0);
+        double storageU = moduli.covariance().map(ModuliCovariance::storageU).orElse(0.0);
         List<Reason> reasons = new ArrayList<>();
-        if (moduli.lossPa() < 0) {
+        if (moduli.lossPa() < -STANDS_OUT * lossU) {
             reasons.add(ModuliReason.MODULI_LOSS_NEGATIVE.with(moduli.lossPa()));
         }
-        if (moduli.storagePa() < 0) {
+        if (moduli.storagePa() < -STANDS_OUT * storageU) {
             reasons.add(ModuliReason.MODULI_STORAGE_NEGATIVE.with(moduli.storagePa()));
         }
         return reasons;

@@ -14,6 +14,7 @@ import nightlag.stages.waveform.CycleScatter;
 import nightlag.stages.waveform.ScreeningFigures;
 import nightlag.stages.waveform.ScreeningFigures.Figure;
 import nightlag.stages.waveform.SignalFit;
+import nightlag.stages.waveform.SweepStart;
 
 /**
  * The flags of a point and what they make of it. A flag is raised where its figure is strictly beyond its limit; figures
@@ -30,6 +31,8 @@ final class Screening {
     private static final double RARE = 1e-4;
     /** A relative uncertainty below it is a file's last digits. */
     private static final double SMALLEST_SCATTER = 1e-6;
+
+    private static final double MOST_OF_IT = 0.5;
 
     private final List<Flag> flags = new ArrayList<>();
     private final List<Reason> reasons = new ArrayList<>();
@@ -83,14 +86,14 @@ final class Screening {
         screening.above(ScreeningReason.SCREENING_GAPS, figures.gapShare(), plan.gaps());
         screening.above(ScreeningReason.SCREENING_UNEVEN_CLOCK, figures.clockJitter(), plan.clock());
         figures.clockJump().ifPresent(screening::clockJumped);
-        screening.below(
-                ScreeningReason.SCREENING_WEAK_SIGNAL,
-                Math.min(figures.deformationSnrDb(), figures.loadSnrDb()),
-                plan.snrDb());
+        screening.signalToNoise(fit, plan.snrDb());
         screening.above(ScreeningReason.SCREENING_DRIFTING, figures.baseline(), plan.baseline());
         figures.cycleTrend()
                 .ifPresent(trend -> screening.above(ScreeningReason.SCREENING_UNSETTLED, trend, plan.cycleTrend()));
         figures.cycleScatter().ifPresent(screening::cyclesAgainstNoise);
+        figures.sweepStart()
+                .ifPresent(start -> screening.above(
+                        ScreeningReason.SCREENING_SWEEP_IN_MOTION, start, new Threshold(SweepStart.AT_REST, NEVER)));
         screening.harmonics(stress, plan.thirdHarmonic(), plan.evenHarmonics());
         screening.above(ScreeningReason.SCREENING_INERTIA_HEAVY, inertiaRatio, plan.inertia());
         screening.above(ScreeningReason.SCREENING_COMPLIANCE_HEAVY, complianceRatio, plan.compliance());
@@ -151,11 +154,23 @@ final class Screening {
         }
     }
 
-    private void below(ScreeningReason reason, double figure, Threshold limit) {
+    /** The weaker channel's; where most of what its fit left is no noise the reason says so. */
+    private void signalToNoise(SignalFit fit, Threshold limit) {
+        ScreeningFigures figures = fit.screening();
+        double overtones = figures.overtonesLeft().orElse(0);
+        boolean shape = overtones > MOST_OF_IT;
+        below(
+                shape ? ScreeningReason.SCREENING_OVERTONES_LEFT : ScreeningReason.SCREENING_WEAK_SIGNAL,
+                Math.min(figures.deformationSnrDb(), figures.loadSnrDb()),
+                limit,
+                shape ? new Object[] {Math.rint(100 * overtones), fit.load().length} : new Object[0]);
+    }
+
+    private void below(ScreeningReason reason, double figure, Threshold limit, Object... more) {
         if (figure < limit.doubtful()) {
             boolean unusable =
                     limit.unusable().isPresent() && figure < limit.unusable().getAsDouble();
-            raise(reason, figure, limit.doubtful(), unusable ? limit.unusable() : NEVER);
+            raise(reason, figure, limit.doubtful(), unusable ? limit.unusable() : NEVER, more);
         }
     }
 

@@ -19,6 +19,11 @@ public enum ScreeningReason implements ReasonCode {
             "the clock jumped by {0} s at {3} s, the oscillation did not: its phase steps by {4} cycles, the limit is {1};"
                     + " the longest stretch is used, {5} samples are left out"),
     SCREENING_WEAK_SIGNAL(Flag.WEAK_SIGNAL, "{0} dB from signal to noise, {1} dB wanted"),
+    /** Parts: {0} dB, {1} dB wanted, {2} what the point becomes, {3} per cent, {4} orders fitted. */
+    SCREENING_OVERTONES_LEFT(
+            Flag.WEAK_SIGNAL,
+            "{0} dB from signal to noise, {1} dB wanted; {3} % of what is left lies at orders above the {4} fitted, so it is"
+                    + " the wave''s shape rather than noise"),
     SCREENING_DRIFTING(Flag.DRIFTING, "the mean moves by {0} of the amplitude, the limit is {1}"),
     SCREENING_UNSETTLED(Flag.UNSETTLED, "the modulus changes by {0} over the record, the limit is {1}"),
     /** Parts: {0} ratio, {1} limit, {2} what the point becomes, {3} relative u from the cycles, {4} relative u from the noise. */
@@ -26,6 +31,11 @@ public enum ScreeningReason implements ReasonCode {
             Flag.UNSETTLED,
             "the modulus scatters from cycle to cycle {0} times as much as its noise, the limit is {1}: relative u {3} from"
                     + " the cycles, {4} from the noise"),
+    /** Parts: {0} motion at the first sample over the amplitude, {1} limit, {2} what the point becomes. */
+    SCREENING_SWEEP_IN_MOTION(
+            Flag.UNSETTLED,
+            "the record begins in motion, {0} of the sweep''s amplitude from rest, the limit is {1}: what the specimen"
+                    + " remembers of the time before is in the slowest points; start the recorder before a tapered sweep"),
     SCREENING_NONLINEAR(Flag.NONLINEAR, "the third harmonic is {0} of the first, the limit is {1}"),
     SCREENING_EVEN_HARMONICS(Flag.EVEN_HARMONICS, "an even harmonic is {0} of the first, the limit is {1}"),
     SCREENING_INERTIA_HEAVY(

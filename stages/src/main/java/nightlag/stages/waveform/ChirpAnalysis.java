@@ -3,6 +3,7 @@ package nightlag.stages.waveform;
 import java.util.ArrayList;
 import java.util.List;
 import java.util.Optional;
+import java.util.OptionalDouble;
 import nightlag.stages.fault.Reason;
 import nightlag.stages.fault.ReductionFault;
 import nightlag.stages.numeric.Complex;
@@ -24,6 +25,8 @@ public final class ChirpAnalysis {
     private static final double ABOVE_SWEEP = 1.35;
 
     private static final int FEWEST_LINES = 10;
+    /** Points below this times the slowest are the ones a start in motion puts in doubt. */
+    private static final double SLOW_POINTS = 2;
 
     private final Waveform waveform;
     private final double pointsPerDecade;
@@ -84,14 +87,17 @@ public final class ChirpAnalysis {
         if (waveform.rowsLeftOut() > 0) {
             notes.add(WaveformReason.WAVEFORM_ROWS_MISSING.with(waveform.rowsLeftOut()));
         }
+        Figure start = SweepStart.of(samples, law, lines.noise()[Samples.DEFORMATION]);
+        boolean inMotion = start.value() > SweepStart.AT_REST && start.significant();
         List<SignalFit> fits = new ArrayList<>();
         int steps = (int) Math.floor(Math.log10(high / low) * pointsPerDecade + 1e-9);
         int lost = 0;
         for (int step = 0; step <= steps; step++) {
             double frequency = low * Math.pow(10, step / pointsPerDecade);
-            Optional<LocalResponse> response = LocalResponse.at(frequency, lines, cutTerms);
+            Optional<LocalResponse> response = response(frequency, lines, inMotion);
             if (response.isPresent()) {
-                fits.add(summary(frequency, response.get(), samples, lines, law, clock));
+                Optional<Figure> doubt = Optional.of(start).filter(any -> inMotion && frequency < SLOW_POINTS * low);
+                fits.add(summary(frequency, response.get(), samples, lines, law, clock, doubt));
             } else {
                 lost++;
             }
@@ -100,6 +106,16 @@ public final class ChirpAnalysis {
             throw new ReductionFault(MultiFrequencyReason.CHIRP_TOO_COARSE.with(lost, low, high));
         }
         return List.copyOf(fits);
+    }
+
+    /** What a record that begins in motion remembers of the time before bends more than one that begins at rest. */
+    private Optional<LocalResponse> response(double frequency, FourierLines lines, boolean inMotion) {
+        Optional<LocalResponse> response = LocalResponse.at(frequency, lines, cutTerms);
+        Optional<LocalResponse> other =
+                inMotion && response.isPresent() ? LocalResponse.at(frequency, lines, cutTerms + 1) : Optional.empty();
+        return other.isPresent()
+                ? response.map(found -> found.allowingFor(other.get().response()))
+                : response;
     }
 
     /** First and last line of the band in which the deformation's spectrum is strong. */
@@ -129,7 +145,13 @@ public final class ChirpAnalysis {
     }
 
     private SignalFit summary(
-            double frequency, LocalResponse response, Samples samples, FourierLines lines, SweepLaw law, Clock clock) {
+            double frequency,
+            LocalResponse response,
+            Samples samples,
+            FourierLines lines,
+            SweepLaw law,
+            Clock clock,
+            Optional<Figure> startInMotion) {
         double amplitude = amplitude(samples, law, frequency);
         Complex load = response.response().times(amplitude);
         double variance = amplitude * amplitude * response.variance();
@@ -154,7 +176,11 @@ public final class ChirpAnalysis {
                 Optional.empty(),
                 Steadiness.temperatureWander(
                         waveform.temperatureK(), samples.indices(), 1 / (law.slowestHz() * samples.intervalS())),
-                Optional.empty());
+                Optional.empty(),
+                Optional.empty(),
+                Optional.empty(),
+                startInMotion,
+                OptionalDouble.empty());
         return new SignalFit(
                 frequency,
                 0,

@@ -63,20 +63,24 @@ final class HarmonicSummary {
 
     private ScreeningFigures figures(TemperatureLine temperature, double cycles, Optional<Figure> frequencyMismatch) {
         Steadiness steadiness = new Steadiness(samples, fitted.basis(), result, noise);
+        double deformationSnrDb = snrDb(steadiness, Samples.DEFORMATION);
+        double loadSnrDb = snrDb(steadiness, Samples.LOAD);
         double recorded = part.waveform().size();
         return new ScreeningFigures(
                 atLimit / recorded,
                 spikes / recorded,
                 part.waveform().window().map(this::gapShare).orElse(part.clock().gapShare()),
                 part.clock().jitter(),
-                snrDb(steadiness, Samples.DEFORMATION),
-                snrDb(steadiness, Samples.LOAD),
+                deformationSnrDb,
+                loadSnrDb,
                 steadiness.baseline(),
                 steadiness.cycleTrend(),
                 Steadiness.temperatureWander(temperature.about(), samples.indices(), samples.size() / cycles),
                 frequencyMismatch,
                 steadiness.cycleScatter(covariance.degreesOfFreedom()),
-                Optional.empty());
+                Optional.empty(),
+                Optional.empty(),
+                Overtones.left(fitted, deformationSnrDb, loadSnrDb));
     }
 
     /** Of what a window was planned to hold after the start-up cycles. */

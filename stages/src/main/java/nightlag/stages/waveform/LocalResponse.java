@@ -56,8 +56,9 @@ record LocalResponse(Complex response, double variance, double freedom, double l
                 : Optional.of(found.get().allowingFor(simpler.get().response()));
     }
 
-    private LocalResponse allowingFor(Complex simpler) {
-        double bend = SHARE_OF_THE_LAST_POWER * response.minus(simpler).abs();
+    /** The same, as uncertain as half of what another model would change. */
+    LocalResponse allowingFor(Complex other) {
+        double bend = SHARE_OF_THE_LAST_POWER * response.minus(other).abs();
         return new LocalResponse(response, variance + bend * bend / 2, freedom, lineVariance);
     }
 

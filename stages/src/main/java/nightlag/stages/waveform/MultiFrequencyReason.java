@@ -13,6 +13,28 @@ public enum MultiFrequencyReason implements ReasonCode {
     MULTISINE_NOT_TONES(
             "layout multisine: {0} frequencies explain {1} % of the deformation''s power above its drift; at "
                     + "least {2} % are needed, so the record holds something else"),
+    /** {0} number of frequencies given, {1} per cent explained, {2} per cent needed, {3} lines found. */
+    MULTISINE_OTHER_TONES(
+            "layout multisine: the given frequencies ({0}) explain {1} % of the deformation''s power above its drift, and at "
+                    + "least {2} % are needed; the lines found in it: {3}. Correct \"frequencies\", or leave it out to "
+                    + "have them found"),
+    /** {0} frequency in Hz, {1} distance in Hz, {2} per cent explained, {3} per cent needed. */
+    MULTISINE_NEAR_ANOTHER(
+            "layout multisine: within {1} Hz of {0} Hz the deformation holds another frequency, too near to be found, or that "
+                    + "one changes; the frequencies found explain {2} % of its power and {3} % are needed. Give the "
+                    + "frequencies, or record for longer"),
+    /** {0}, {1} frequencies in Hz, {2} cycles of the record apart, {3} cycles wanted, {4} duration in s. */
+    MULTISINE_NEAR_TONES(
+            "layout multisine: {0} Hz and {1} Hz lie {2} cycles of the record apart and could not be told from one another; "
+                    + "{3} cycles are enough, a record of {4} s. Give the frequencies, or see whether one changes in the "
+                    + "course of the record"),
+    /** {0} shape, {1} frequency in Hz. */
+    MULTISINE_ONE_WAVE(
+            "layout multisine: the deformation is one {0} wave of {1} Hz, its lines the odd multiples with the heights and "
+                    + "phases of that shape; layout single reads such a record. If these are the driven frequencies, give them"),
+    /** {0} frequency in Hz. */
+    MULTISINE_TONE_ABSENT(
+            "the deformation does not move at {0} Hz by more than its noise: the given frequency is not in it"),
     /** {0} cycles, {1} frequency in Hz. */
     MULTISINE_TOO_SHORT(
             "layout multisine: the record holds {0} cycles of {1} Hz, its slowest frequency; one is needed"),

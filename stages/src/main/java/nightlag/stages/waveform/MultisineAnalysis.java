@@ -107,7 +107,11 @@ public final class MultisineAnalysis {
             throw new ReductionFault(
                     start.length == 0
                             ? MultiFrequencyReason.MULTISINE_NO_TONES.with()
-                            : MultiFrequencyReason.MULTISINE_ONE_TONE.with(start[0] / (2 * Math.PI)));
+                            : MultisineRefusal.oneTone(
+                                    samples, start[0], plan.drift().degree(), LEAST_EXPLAINED));
+        }
+        if (given.length == 0) {
+            requireSeveral(samples, start);
         }
         if (plan.startUpCycles() > 0) {
             samples = withoutStartUp(start[0], samples);
@@ -117,6 +121,16 @@ public final class MultisineAnalysis {
         Fitted fitted = leftOut.withoutSpikes(fit(samples, start), first, this::refit);
         requireExplained(fitted);
         return summaries(fitted);
+    }
+
+    /** Lines found may be those of one wave that is no sine. */
+    private void requireSeveral(Samples samples, double[] found) throws ReductionFault {
+        Optional<OneWave> wave =
+                OneWave.of(samples, new ToneSearch(samples), found, plan.drift().degree());
+        if (wave.isPresent()) {
+            throw new ReductionFault(MultiFrequencyReason.MULTISINE_ONE_WAVE.with(
+                    wave.get().shape(), wave.get().frequencyHz()));
+        }
     }
 
     private void requireSamples(Samples samples, int tones) throws ReductionFault {
@@ -179,7 +193,8 @@ public final class MultisineAnalysis {
                 .min(Comparator.comparingDouble(result -> DoubleStream.of(result.residualSquares())
                         .map(squares -> Math.log(Math.max(squares, Double.MIN_NORMAL)))
                         .sum()))
-                .orElseThrow(() -> new ReductionFault(WaveformReason.WAVEFORM_NOT_SEPARABLE.with()));
+                .orElseThrow(() -> new ReductionFault(MultisineRefusal.noFit(
+                        samples, start, given.length > 0, plan.drift().degree(), LEAST_EXPLAINED)));
         return new Fitted(samples, fit.basis(), best, freedom);
     }
 
@@ -189,17 +204,11 @@ public final class MultisineAnalysis {
     }
 
     /** A record that holds more than its tones and a drift is something else. */
-    private static void requireExplained(Fitted fitted) throws ReductionFault {
-        ToneFit.Result result = fitted.result();
-        double tones = 0;
-        for (int k = 0; k < fitted.basis().tones(); k++) {
-            double amplitude = fitted.amplitude(Samples.DEFORMATION, k);
-            tones += amplitude * amplitude / 2 * fitted.samples().size();
-        }
-        double share = tones / (tones + result.residualSquares()[Samples.DEFORMATION]);
+    private void requireExplained(Fitted fitted) throws ReductionFault {
+        double share = MultisineRefusal.explained(fitted.basis(), fitted.result());
         if (!(share >= LEAST_EXPLAINED)) {
-            throw new ReductionFault(MultiFrequencyReason.MULTISINE_NOT_TONES.with(
-                    fitted.basis().tones(), 100 * share, 100 * LEAST_EXPLAINED));
+            throw new ReductionFault(MultisineRefusal.unexplained(
+                    fitted.samples(), fitted.result(), given.length > 0, share, LEAST_EXPLAINED));
         }
     }
 
@@ -236,6 +245,10 @@ public final class MultisineAnalysis {
             }
         }
         overtone(fitted, tone).ifPresent(toneNotes::add);
+        double[][] covarianceOfTone = covariance.of(tone);
+        if (fitted.amplitude(Samples.DEFORMATION, tone) < 3 * Math.sqrt(covarianceOfTone[0][0])) {
+            toneNotes.add(MultiFrequencyReason.MULTISINE_TONE_ABSENT.with(frequency));
+        }
         ScreeningFigures figures = new ScreeningFigures(
                 (double) cutOffs.atLimit() / waveform.size(),
                 (double) leftOut.spikes() / waveform.size(),
@@ -256,7 +269,7 @@ public final class MultisineAnalysis {
                 samples.originS(),
                 new Complex[] {amplitude(fitted, Samples.DEFORMATION, tone)},
                 new Complex[] {amplitude(fitted, Samples.LOAD, tone)},
-                covariance.of(tone),
+                covarianceOfTone,
                 covariance.degreesOfFreedom(tone),
                 Math.sqrt(noise.whole(Samples.DEFORMATION).variance()),
                 Math.sqrt(noise.whole(Samples.LOAD).variance()),

@@ -18,6 +18,10 @@ import java.util.OptionalDouble;
  * @param frequencyMismatch |found − tagged| / tagged frequency; empty without a tag
  * @param cycleScatter the uncertainty told twice, by the noise and by the cycles; empty where the record is too short to tell
  * @param clockJump the place where the time stamps jump and the oscillation does not; empty where there is none
+ * @param sweepStart how far in motion a sweep's record begins, 0 at rest and 1 in full swing; only at the frequencies that this
+ *     puts in doubt
+ * @param overtonesLeft share of what the fit left of the weaker channel that lies at orders above those fitted; empty where
+ *     nothing was left to look at
  */
 public record ScreeningFigures(
         double clippedShare,
@@ -31,7 +35,9 @@ public record ScreeningFigures(
         OptionalDouble temperatureWanderK,
         Optional<Figure> frequencyMismatch,
         Optional<CycleScatter> cycleScatter,
-        Optional<ClockJump> clockJump) {
+        Optional<ClockJump> clockJump,
+        Optional<Figure> sweepStart,
+        OptionalDouble overtonesLeft) {
     /** Figures of a record whose cycles were not compared with each other and whose clock went on. */
     public ScreeningFigures(
             double clippedShare,
@@ -56,7 +62,9 @@ public record ScreeningFigures(
                 temperatureWanderK,
                 frequencyMismatch,
                 Optional.empty(),
-                Optional.empty());
+                Optional.empty(),
+                Optional.empty(),
+                OptionalDouble.empty());
     }
 
     /** The same of a record whose clock jumped. */
@@ -73,7 +81,9 @@ public record ScreeningFigures(
                 temperatureWanderK,
                 frequencyMismatch,
                 cycleScatter,
-                Optional.of(jump));
+                Optional.of(jump),
+                sweepStart,
+                overtonesLeft);
     }
 
     /**

@@ -27,9 +27,14 @@ final class ToneSearch {
     private final double[] power;
 
     ToneSearch(Samples samples) {
+        this(samples, samples.channels()[Samples.DEFORMATION]);
+    }
+
+    /** Searches other values than the deformation, one a sample. */
+    ToneSearch(Samples samples, double[] searched) {
         int length = RealTransform.fastLengthUpTo(samples.size());
         this.duration = (samples.seconds()[length - 1] - samples.seconds()[0]) / (length - 1) * length;
-        double[] values = FrequencySearch.detrended(samples, samples.channels()[Samples.DEFORMATION], length);
+        double[] values = FrequencySearch.detrended(samples, searched, length);
         for (int i = 0; i < length; i++) {
             double x = 2 * Math.PI * (i + 0.5) / length;
             values[i] *= 0.42 - 0.5 * Math.cos(x) + 0.08 * Math.cos(2 * x);
@@ -58,6 +63,21 @@ final class ToneSearch {
             }
         }
         return tones.stream().mapToDouble(Double::doubleValue).toArray();
+    }
+
+    /** The angular frequency of the highest line, rad/s. */
+    double strongest() {
+        int best = LINE_BINS;
+        for (int k = LINE_BINS; k < power.length; k++) {
+            best = power[k] > power[best] ? k : best;
+        }
+        return 2 * Math.PI * interpolated(best) / duration;
+    }
+
+    /** The height of the line nearest to an angular frequency, in a scale of its own. */
+    double amplitude(double omega) {
+        int nearest = (int) Math.min(power.length - 1.0, Math.rint(omega * duration / (2 * Math.PI)));
+        return Math.sqrt(power[nearest]);
     }
 
     private boolean highestWithin(int k) {

@@ -229,6 +229,7 @@ class ScreeningTest {
                         Setting.plain(recording(6, 64).jitter(0.03).build())),
                 Arguments.of(Flag.UNEVEN_CLOCK, clockJump(), withGap(1)),
                 Arguments.of(Flag.WEAK_SIGNAL, snr(38), snr(42)),
+                Arguments.of(Flag.WEAK_SIGNAL, order(9, 0.011), order(9, 0.009)),
                 Arguments.of(Flag.DRIFTING, drift(0.105), drift(0.095)),
                 Arguments.of(Flag.DRIFTING, curvedDrift(0.105), curvedDrift(0.095)),
                 Arguments.of(Flag.UNSETTLED, trend(0.022), trend(0.018)),
@@ -343,5 +344,17 @@ class ScreeningTest {
             assertThat(reason.code()).isEqualTo("SCREENING_CLOCK_JUMPED");
             assertThat(reason.sentence()).contains("the clock jumped by 0.3").contains("240 samples are left out");
         });
+    }
+
+    @Test
+    void aWeakSignalThatIsTheWavesShapeIsToldFromNoise() throws Exception {
+        assertThat(point(order(9, 0.05)).reasons()).anySatisfy(reason -> {
+            assertThat(reason.code()).isEqualTo("SCREENING_OVERTONES_LEFT");
+            assertThat(reason.sentence())
+                    .startsWith("weak-signal: 25.7")
+                    .contains("40 dB wanted; 100 % of what is left lies at orders above the 7 fitted");
+        });
+        assertThat(point(snr(26)).reasons()).noneMatch(reason -> reason.code().equals("SCREENING_OVERTONES_LEFT"));
+        assertThat(point(snr(26)).reasons()).anyMatch(reason -> reason.code().equals("SCREENING_WEAK_SIGNAL"));
     }
 }

@@ -1,5 +1,6 @@
 package nightlag.stages.waveform;
 
+import java.util.Arrays;
 import java.util.OptionalDouble;
 import java.util.Random;
 import nightlag.stages.numeric.Complex;
@@ -28,6 +29,7 @@ public final class Chirp {
     private double taper = 0.1;
     private double before;
     private double after;
+    private double cut;
     private double rateHz;
     private double noise;
     private double drift;
@@ -64,6 +66,12 @@ public final class Chirp {
     public Chirp rest(double beforeS, double afterS) {
         before = beforeS;
         after = afterS;
+        return this;
+    }
+
+    /** A recorder that is started so late, s. */
+    public Chirp startedLate(double seconds) {
+        cut = seconds;
         return this;
     }
 
@@ -157,7 +165,14 @@ public final class Chirp {
                 stress[i] += mode;
             }
         }
-        return new Waveform(time, strain, stress, new double[0], OptionalDouble.empty(), 0);
+        int first = (int) Math.round(cut * rateHz);
+        return new Waveform(
+                Arrays.copyOfRange(time, first, count),
+                Arrays.copyOfRange(strain, first, count),
+                Arrays.copyOfRange(stress, first, count),
+                new double[0],
+                OptionalDouble.empty(),
+                0);
     }
 
     private void advance(double[] modes, double from, double step) {

@@ -5,6 +5,7 @@ import static org.assertj.core.api.Assertions.assertThatThrownBy;
 import static org.assertj.core.api.Assertions.within;
 
 import java.util.List;
+import java.util.Optional;
 import java.util.OptionalDouble;
 import java.util.Random;
 import java.util.function.DoubleUnaryOperator;
@@ -76,6 +77,45 @@ class ChirpAnalysisTest {
         assertThat(worst(chirp, 0)).isLessThan(1e-2);
         assertThat(worst(chirp, 12)).isLessThan(2e-3);
         assertThat(worst(chirp, 24)).isLessThan(5e-4);
+        assertThat(ChirpAnalysis.analyse(chirp.build(), 10, Drift.LINEAR))
+                .extracting(fit -> fit.screening().sweepStart())
+                .containsOnly(Optional.empty());
+    }
+
+    static Stream<Arguments> chirpsInMotion() {
+        return Stream.of(
+                Arguments.of(Named.of("begins inside the sweep", liquid(60).startedLate(12))),
+                Arguments.of(Named.of(
+                        "begins at a turning point", liquid(60).rest(1, 3).startedLate(9.1))),
+                Arguments.of(Named.of("no taper", liquid(60).taper(1e-6).rest(0, 3))),
+                Arguments.of(Named.of(
+                        "from fast to slow",
+                        Chirp.of(10, 0.1, 60, STRENGTHS, TIMES).startedLate(12))));
+    }
+
+    /** The specimen remembers a deformation that the record does not show; the slowest points are in doubt by it, the rest is not. */
+    @ParameterizedTest
+    @MethodSource("chirpsInMotion")
+    void aRecordThatBeginsInMotionPutsItsSlowestPointsInDoubt(Chirp chirp) throws Exception {
+        List<SignalFit> fits = ChirpAnalysis.analyse(chirp.build(), 10, Drift.LINEAR);
+        double slowest = fits.get(0).frequencyHz();
+        assertThat(fits).hasSizeGreaterThan(8).allSatisfy(fit -> {
+            assertThat(fit.screening().sweepStart().isPresent()).isEqualTo(fit.frequencyHz() < 2 * slowest);
+            if (fit.screening().sweepStart().isPresent()) {
+                assertThat(fit.screening().sweepStart().get().value()).isBetween(0.7, 1.15);
+            } else {
+                assertThat(error(fit, chirp)).isLessThan(5e-3);
+            }
+        });
+    }
+
+    @ParameterizedTest(name = "seed {0}")
+    @ValueSource(longs = {21, 22, 23, 24, 25, 26, 27, 28})
+    void noiseAndDriftAreNoMotion(long seed) throws Exception {
+        Chirp chirp = liquid(60).rest(1, 3).noise(0.05).drift(0.2).seed(seed);
+        assertThat(ChirpAnalysis.analyse(chirp.build(), 10, Drift.LINEAR))
+                .extracting(fit -> fit.screening().sweepStart())
+                .containsOnly(Optional.empty());
     }
 
     @Test

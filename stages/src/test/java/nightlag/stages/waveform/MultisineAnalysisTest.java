@@ -7,6 +7,7 @@ import static org.assertj.core.api.Assertions.within;
 import java.util.List;
 import java.util.OptionalDouble;
 import java.util.Random;
+import java.util.function.DoubleUnaryOperator;
 import nightlag.stages.fault.ReductionFault;
 import nightlag.stages.numeric.Complex;
 import org.apache.commons.math3.distribution.TDistribution;
@@ -157,11 +158,120 @@ class MultisineAnalysisTest {
     void whatIsNoMultisineIsRefused() {
         refused(new Made(List.of(1.0), 10, 100, 1, 1e-3, 0).build(1), List.of(), "MULTISINE_ONE_TONE");
         refused(new Made(List.of(), 10, 100, 1, 0.1, 0).build(1), List.of(), "MULTISINE_NO_TONES");
-        refused(new Made(OCTAVES, 10, 100, 1, 1e-3, 0).build(1), List.of(1.3, 2.7), "MULTISINE_NOT_TONES");
-        refused(new Made(OCTAVES, 10, 100, 1, 1e-3, 0).build(1), List.of(0.5, 2.0), "MULTISINE_NOT_TONES");
+        refused(new Made(OCTAVES, 10, 100, 1, 1e-3, 0).build(1), List.of(1.3, 2.7), "MULTISINE_OTHER_TONES");
+        refused(new Made(OCTAVES, 10, 100, 1, 1e-3, 0).build(1), List.of(0.5, 2.0), "MULTISINE_OTHER_TONES");
         refused(new Made(OCTAVES, 1.5, 100, 1, 1e-3, 0).build(1), OCTAVES, "MULTISINE_TOO_SHORT");
         refused(new Made(OCTAVES, 10, 12, 1, 1e-3, 0).build(1), OCTAVES, "MULTISINE_TOO_COARSE");
         refused(new Made(OCTAVES, 10, 100, 1, 1e-3, 0).build(1), List.of(1.0, 1.05), "MULTISINE_TOO_NEAR");
+    }
+
+    /** Both channels follow a shape of period 1 in the phase; the load is ahead by a tenth. */
+    private static Waveform shape(double hz, DoubleUnaryOperator shape) {
+        Random random = new Random(9);
+        int count = 2000;
+        double[] time = new double[count];
+        double[] strain = new double[count];
+        double[] stress = new double[count];
+        for (int i = 0; i < count; i++) {
+            time[i] = i / 100.0;
+            strain[i] = 0.01 * shape.applyAsDouble(hz * time[i] + 0.13) + 1e-5 * random.nextGaussian();
+            stress[i] = 100 * shape.applyAsDouble(hz * time[i] + 0.23) + 0.1 * random.nextGaussian();
+        }
+        return new Waveform(time, strain, stress, new double[0], OptionalDouble.empty(), 0);
+    }
+
+    private static double square(double turns) {
+        return turns - Math.floor(turns) < 0.5 ? 1 : -1;
+    }
+
+    private static double triangle(double turns) {
+        return 1 - 4 * Math.abs(turns - Math.floor(turns) - 0.5);
+    }
+
+    /** The first odd orders of a square wave, of these heights and phases. */
+    private static double series(double turns, DoubleUnaryOperator height, DoubleUnaryOperator phase) {
+        double sum = 0;
+        for (int n = 1; n < 12; n += 2) {
+            sum += height.applyAsDouble(n) * Math.sin(2 * Math.PI * n * turns + phase.applyAsDouble(n));
+        }
+        return sum;
+    }
+
+    @ParameterizedTest(name = "{0} Hz")
+    @ValueSource(doubles = {1, 1.013, 0.3})
+    void aSquareWaveIsNoMultisine(double hz) {
+        Waveform waveform = shape(hz, MultisineAnalysisTest::square);
+        assertThatThrownBy(() -> MultisineAnalysis.analyse(waveform, List.of(), ExtractionPlan.withDefaults()))
+                .hasMessageStartingWith("layout multisine: the deformation is one square wave of ")
+                .hasMessageContaining("layout single reads such a record");
+        refused(shape(hz, turns -> series(turns, n -> 1 / n, n -> 0)), List.of(), "MULTISINE_ONE_WAVE");
+    }
+
+    @Test
+    void aTriangleIsNoMultisineEither() {
+        assertThatThrownBy(() -> MultisineAnalysis.analyse(
+                        shape(0.7, MultisineAnalysisTest::triangle), List.of(), ExtractionPlan.withDefaults()))
+                .hasMessageContaining("one triangle wave of 0.7");
+    }
+
+    @Test
+    void oddMultiplesOfOtherHeightsOrPhasesAreAMultisine() throws Exception {
+        Waveform even = shape(0.5, turns -> series(turns, n -> 1, n -> 0));
+        assertThat(MultisineAnalysis.analyse(even, List.of(), ExtractionPlan.withDefaults()))
+                .hasSize(6);
+        Waveform turned = shape(0.5, turns -> series(turns, n -> 1 / n, n -> n * n));
+        assertThat(MultisineAnalysis.analyse(turned, List.of(), ExtractionPlan.withDefaults()))
+                .hasSize(6);
+    }
+
+    @Test
+    void theFrequenciesOfASquareWaveMayBeGiven() throws Exception {
+        Waveform waveform = shape(0.5, turns -> series(turns, n -> 1 / n, n -> 0));
+        List<Double> hz = List.of(0.5, 1.5, 2.5, 3.5, 4.5, 5.5);
+        assertThat(MultisineAnalysis.analyse(waveform, hz, plan(FrequencySource.SIGNAL)))
+                .hasSize(6);
+    }
+
+    @Test
+    void givenFrequenciesThatAreNotTheRecordsAreToldFromThoseFound() {
+        Waveform waveform = new Made(OCTAVES, 20, 100, 1, 1e-3, 0).build(1);
+        for (FrequencySource source : FrequencySource.values()) {
+            assertThatThrownBy(() -> MultisineAnalysis.analyse(waveform, List.of(1.3, 2.7), plan(source)))
+                    .hasMessageStartingWith("layout multisine: the given frequencies (2) explain ")
+                    .hasMessageContaining("the lines found in it: 0.5000 Hz, 1.000 Hz, 2.000 Hz, 4.000 Hz, 8.000 Hz.");
+        }
+    }
+
+    @Test
+    void aGivenFrequencyThatIsAbsentAmongOthersIsSaid() throws Exception {
+        Waveform waveform = new Made(OCTAVES, 20, 100, 1, 1e-3, 0).build(1);
+        List<Double> hz = List.of(0.5, 1.0, 2.0, 4.0, 6.0, 8.0);
+        List<SignalFit> fits = MultisineAnalysis.analyse(waveform, hz, plan(FrequencySource.SIGNAL));
+        for (SignalFit fit : fits) {
+            assertThat(fit.notes().stream().anyMatch(note -> note.code().equals("MULTISINE_TONE_ABSENT")))
+                    .isEqualTo(Math.abs(fit.frequencyHz() - 6) < 0.1);
+        }
+    }
+
+    @Test
+    void frequenciesTooNearToBeFoundAreNamed() throws Exception {
+        // two cycles of the record apart, with a third and alone
+        List<Double> three = List.of(1.0, 1.1, 3.3);
+        Waveform waveform = new Made(three, 20, 100, 1, 1e-3, 0).build(1);
+        assertThatThrownBy(() -> MultisineAnalysis.analyse(waveform, List.of(), ExtractionPlan.withDefaults()))
+                .hasMessageStartingWith("layout multisine: within 0.3 Hz of 0.99")
+                .hasMessageEndingWith("Give the frequencies, or record for longer");
+        requireModuli(MultisineAnalysis.analyse(waveform, three, plan(FrequencySource.SIGNAL)), three, 1e-3);
+        refused(new Made(List.of(1.0, 1.1), 20, 100, 1, 1e-3, 0).build(1), List.of(), "MULTISINE_NEAR_ANOTHER");
+    }
+
+    /** A chirp shows as a ridge of lines that no fit tells apart. */
+    @Test
+    void linesThatRunIntoOneAnotherAreNamed() {
+        Waveform sweep = shape(1, turns -> Math.sin(2 * Math.PI * Math.expm1(0.1 * turns) / 0.1));
+        assertThatThrownBy(() -> MultisineAnalysis.analyse(sweep, List.of(), ExtractionPlan.withDefaults()))
+                .hasMessageNotContaining("drift")
+                .hasMessageStartingWith("layout multisine: ");
     }
 
     @ParameterizedTest(name = "seed {0}")
