@@ -224,6 +224,31 @@ class FlowCurveValidationTest {
         assertThat(without.method()).contains("u from the scatter");
     }
 
+    /**
+     * A melt is no Carreau–Yasuda fluid: the eight modes of a low-density polyethylene at 150 °C (Laun, Rheol. Acta 17 (1978) 1,
+     * from memory), whose zero-shear viscosity is Σ gτ = 51 063.7 Pa·s. Its misfit makes no viscosity at infinite rate.
+     */
+    @Test
+    void aMeltOfManyModes() {
+        double[] strengths = {1.29e5, 9.48e4, 5.86e4, 2.67e4, 9.80e3, 1.89e3, 1.80e2, 1.00};
+        List<ModulusReading> melt = Stream.iterate(1e-3, rate -> rate < 1.1e3, rate -> rate * Math.pow(10, 0.2))
+                .map(rate -> {
+                    Complex g = Complex.ZERO;
+                    for (int i = 0; i < strengths.length; i++) {
+                        Complex turn = new Complex(0, rate * Math.pow(10, i - 4));
+                        g = g.plus(turn.times(strengths[i]).over(Complex.ONE.plus(turn)));
+                    }
+                    double u = 0.01 * g.abs();
+                    return new ModulusReading(
+                            rate, new Moduli(g.re(), g.im(), Optional.of(new ModuliCovariance(u * u, u * u, 0))));
+                })
+                .toList();
+        Map<String, Marker> markers = markers(found(melt));
+        assertThat(markers).hasSize(7);
+        assertIs(markers, "carreau_yasuda_zero_rate_viscosity", 51_063.7, 0.1);
+        assertIs(markers, "cross_zero_rate_viscosity", 51_063.7, 0.2);
+    }
+
     @Test
     void noPlateauNoLaw() {
         Findings findings =
