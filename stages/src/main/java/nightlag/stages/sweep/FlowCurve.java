@@ -122,7 +122,14 @@ public final class FlowCurve {
         double[] u = fitted.u().orElseThrow();
         String method = method(fitted);
         List<Marker> markers = new ArrayList<>();
-        markers.add(logarithmic(law.property("zero_rate_viscosity"), p[0], u[0], "Pa·s", method));
+        // a law that misses the points has no say beyond them: what it adds to the highest viscosity measured is in u
+        double beyond = fitted.misses() ? Math.log(beyondMeasured(fitted)) : 0;
+        markers.add(logarithmic(
+                law.property("zero_rate_viscosity"),
+                p[FlowLaw.VISCOSITY],
+                Math.hypot(u[FlowLaw.VISCOSITY], beyond),
+                "Pa·s",
+                method));
         markers.add(logarithmic(law.property("time"), p[FlowLaw.TIME], u[FlowLaw.TIME], "s", method));
         for (int i = 0; i < law.shapes(); i++) {
             int at = FlowLaw.FIRST_SHAPE + i;
@@ -174,11 +181,12 @@ public final class FlowCurve {
     private String method(FlowFit.Fitted fitted) {
         return String.format(
                 Locale.ROOT,
-                "Cox–Merz rule, %s law fitted to |η*| at %d points, %s, rms misfit %.2g %%%s",
+                "Cox–Merz rule, %s law fitted to |η*| at %d points, %s, rms misfit %.2g %%%s%s",
                 fitted.law().title(),
                 readings.size(),
                 weighted ? "weighted by u" : "weighted alike, u from the scatter",
                 100 * fitted.rms(),
+                fitted.misses() ? ", more than chance would make, and in u" : "",
                 fitted.hasInfinite() ? "" : ", no viscosity at infinite rate");
     }
 

@@ -13,6 +13,8 @@ final class FlowFit {
     /** A further viscosity at infinite rate must be this share of the lowest measured, or the data do not show it. */
     private static final double SEEN_OF_LOWEST = 0.2;
 
+    private static final double LARGEST_CORRELATION = 0.95;
+    private static final double CLEAR = 3;
     private static final double CHANCE = 0.01;
     private static final double LARGEST_U_OF_INFINITE = 1.0 / 3;
     private static final double TIMES_BEYOND = 1e3;
@@ -50,8 +52,10 @@ final class FlowFit {
      * @param u their standard uncertainties; empty where the data do not fix them all, or one ended at its bound
      * @param chiSquared the weighted sum of squares
      * @param rms root mean square of the unweighted residuals of ln η
+     * @param misses whether the law misses the points by more than chance
      */
-    record Fitted(FlowLaw law, double[] parameters, Optional<double[]> u, double chiSquared, double rms) {
+    record Fitted(
+            FlowLaw law, double[] parameters, Optional<double[]> u, double chiSquared, double rms, boolean misses) {
         boolean hasInfinite() {
             return parameters.length > FlowLaw.FIRST_SHAPE + law.shapes();
         }
@@ -216,7 +220,10 @@ final class FlowFit {
         for (int i = 0; i < residuals.length; i++) {
             rms += Math.pow(residuals[i] * relativeU[i], 2) / residuals.length;
         }
-        double perFreedom = chiSquared / (residuals.length - p.length);
+        int free = residuals.length - p.length;
+        double alike = alike(residuals);
+        double perFreedom = chiSquared / free * alike;
+        boolean misses = weighted ? chiSquared > free + CLEAR * Math.sqrt(2.0 * free) : alike > 1;
         double scale = weighted ? Math.max(1, perFreedom) : perFreedom;
         double[][] columns = jacobian(law, p);
         double[][] information = new double[p.length][p.length];
@@ -235,7 +242,23 @@ final class FlowFit {
                             .mapToDouble(i -> Math.sqrt(scale * inverse[i][i]))
                             .toArray();
                 });
-        return new Fitted(law, p, u, chiSquared, Math.sqrt(rms));
+        return new Fitted(law, p, u, chiSquared, Math.sqrt(rms), misses);
+    }
+
+    /**
+     * How many neighbouring residuals count as one: (1 + ρ)/(1 − ρ) with ρ their correlation with the next (Bartlett, J. R.
+     * Stat. Soc. 98 (1935) 536). A law that misses the points does so over whole stretches of the curve, and they no longer
+     * average out; 1 where ρ is within twice what chance makes.
+     */
+    private static double alike(double[] residuals) {
+        double products = 0;
+        for (int i = 1; i < residuals.length; i++) {
+            products += residuals[i - 1] * residuals[i];
+        }
+        double correlation = products / square(residuals);
+        return correlation > 2 / Math.sqrt(residuals.length)
+                ? (1 + correlation) / (1 - Math.min(correlation, LARGEST_CORRELATION))
+                : 1;
     }
 
     private boolean atABound(FlowLaw law, double[] p) {

@@ -95,7 +95,9 @@ class GelPointValidationTest {
                 plain.reasons(),
                 plain.loop(),
                 plain.torqueGeometry(),
-                plain.unusableOnlyBy());
+                plain.unusableOnlyBy(),
+                plain.harmonicLimits(),
+                plain.windowS());
     }
 
     /** How a series was made. */
