@@ -22,6 +22,9 @@ public final class SmoothSlope {
     /** Variance the strongest makes over a mean interval, over the square of the range of the values. */
     private static final double STRONGEST = 100;
 
+    /** A smaller widening of the variances of a curve's values may be the curve's own turns. */
+    private static final double BELIEVED = 4;
+
     private static final double COARSE_STEP = 100;
     private static final double FINE_STEP = Math.sqrt(10);
     private static final int FINE_STEPS = 4;
@@ -35,7 +38,11 @@ public final class SmoothSlope {
     /** How often the process is integrated; the degree of the polynomial is one less. */
     private final int order;
 
-    private SmoothSlope(double[] x, double[][] y, double[] variance, double[] places) {
+    /** Whether the values scatter as their uncertainties say, whatever they look like. */
+    private final boolean believed;
+
+    private SmoothSlope(double[] x, double[][] y, double[] variance, double[] places, boolean believed) {
+        this.believed = believed;
         this.x = x;
         this.y = y;
         this.variance = variance;
@@ -67,11 +74,12 @@ public final class SmoothSlope {
         if (x.length < FEWEST) {
             throw new IllegalArgumentException("fewer than three values");
         }
-        return new SmoothSlope(x, y, variance, places).mostLikely().slopes();
+        return new SmoothSlope(x, y, variance, places, false).mostLikely().slopes();
     }
 
     /**
-     * The curve itself.
+     * The curve itself. Uncertainties that would be too small by less than a factor of two are believed: values may turn
+     * faster than a smooth curve likes.
      *
      * @param x where the values were observed, strictly rising
      * @param y values
@@ -82,8 +90,18 @@ public final class SmoothSlope {
         if (x.length < FEWEST) {
             throw new IllegalArgumentException("fewer than three values");
         }
-        return new Curve(new SmoothSlope(x, new double[][] {y}, variance, x).mostLikely());
+        double[][] values = {y};
+        Fit free = new SmoothSlope(x, values, variance, x, false).mostLikely();
+        return new Curve(free.widening < BELIEVED ? new SmoothSlope(x, values, variance, x, true).mostLikely() : free);
     }
+
+    /**
+     * A figure of a curve.
+     *
+     * @param value the figure
+     * @param u its standard uncertainty
+     */
+    public record Estimate(double value, double u) {}
 
     /** A smooth curve through scattered values, between the first of them and the last. */
     public static final class Curve {
@@ -101,6 +119,12 @@ public final class SmoothSlope {
         /** Standard uncertainty of the curve or its slope at a place. */
         public double u(double place, int derivative) {
             return Math.sqrt(fit.at(place, derivative).variance);
+        }
+
+        /** The curve (derivative 0) or its slope (1) at a place with its uncertainty. */
+        public Estimate estimate(double place, int derivative) {
+            Place there = fit.at(place, derivative);
+            return new Estimate(there.values[0], Math.sqrt(there.variance));
         }
 
         /** How much the curve at a place moves with each value. */
@@ -212,7 +236,7 @@ public final class SmoothSlope {
                 misfit += dot(rest, residuals[c]);
             }
             int freedom = curves * (data.x.length - data.order);
-            this.widening = Math.max(1, misfit / freedom);
+            this.widening = data.believed ? 1 : Math.max(1, misfit / freedom);
             this.deviance = curves * (spread.logDeterminant() + normal.logDeterminant())
                     + freedom * Math.log(widening)
                     + misfit / widening;

@@ -11,6 +11,7 @@ import nightlag.stages.moduli.Findings;
 import nightlag.stages.moduli.Marker;
 import nightlag.stages.moduli.ModulusPoint;
 import nightlag.stages.numeric.SmoothSlope.Curve;
+import nightlag.stages.numeric.SmoothSlope.Estimate;
 import nightlag.stages.sweep.LogModuli.Figure;
 import nightlag.stages.sweep.Zeros.Zero;
 
@@ -46,7 +47,7 @@ final class AmplitudeMarkers {
      */
     static Findings of(Sweep sweep) {
         List<ModulusPoint> positive = sweep.points().stream()
-                .filter(point -> FrequencyMarkers.isPositive(point.moduli().orElseThrow()))
+                .filter(point -> LogModuli.standOut(point.moduli().orElseThrow()))
                 .toList();
         LogModuli data = LogModuli.of(
                 positive.stream().mapToDouble(AmplitudeSweeps::strain).toArray(),
@@ -54,7 +55,7 @@ final class AmplitudeMarkers {
         AmplitudeMarkers markers = new AmplitudeMarkers(sweep, data);
         int lost = sweep.points().size() - positive.size();
         if (lost > 0) {
-            markers.note(MarkerReason.MARKER_NOT_POSITIVE, lost);
+            markers.note(MarkerReason.MARKER_MODULI_HIDDEN, lost);
         }
         if (data.size() < FEWEST) {
             markers.note(MarkerReason.MARKER_TOO_FEW_STRAINS, data.size(), FEWEST);
@@ -96,7 +97,7 @@ final class AmplitudeMarkers {
         List<Zero> leaving = new ArrayList<>();
         below.zeros().stream().filter(zero -> !zero.rising()).findFirst().ifPresent(leaving::add);
         above.zeros().stream().filter(Zero::rising).findFirst().ifPresent(leaving::add);
-        if (Math.abs(mean.less(0).at(logs[0])) > LEAVES) {
+        if (Math.abs(mean.less(0).at(logs[0]).value()) > LEAVES) {
             note(MarkerReason.MARKER_LIMIT_BELOW, smallest());
         } else if (!below.startsClear() || !above.startsClear()) {
             note(MarkerReason.MARKER_LIMIT_UNCLEAR);
@@ -155,29 +156,23 @@ final class AmplitudeMarkers {
 
         /** ln |G*| less ln mean less an offset. */
         Zeros.Figure less(double offset) {
-            return new Zeros.Figure() {
-                @Override
-                public double at(double strain) {
-                    return curve.at(strain, 0) - logMean - offset;
+            return strain -> {
+                Estimate own = curve.estimate(strain, 0);
+                double[] weights = curve.weights(strain);
+                double shared = 0;
+                for (int i = 0; i < weights.length; i++) {
+                    shared += weights[i] * covariance[i];
                 }
-
-                @Override
-                public double u(double strain) {
-                    double own = curve.u(strain, 0);
-                    double[] weights = curve.weights(strain);
-                    double shared = 0;
-                    for (int i = 0; i < weights.length; i++) {
-                        shared += weights[i] * covariance[i];
-                    }
-                    return Math.sqrt(Math.max(own * own + variance - 2 * shared, 0));
-                }
+                return new Estimate(
+                        own.value() - logMean - offset,
+                        Math.sqrt(Math.max(own.u() * own.u() + variance - 2 * shared, 0)));
             };
         }
     }
 
     private void crossings() {
         Curve lossFactor = data.curve(Figure.LOSS_FACTOR);
-        Zeros zeros = Zeros.of(FrequencyMarkers.figure(lossFactor, 0), data.places());
+        Zeros zeros = Zeros.of(at -> lossFactor.estimate(at, 0), data.places());
         Curve magnitude = data.curve(Figure.MAGNITUDE);
         for (Zero zero : zeros.zeros()) {
             double strain = Math.exp(zero.place());

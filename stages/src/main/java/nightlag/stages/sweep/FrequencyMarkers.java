@@ -7,7 +7,6 @@ import java.util.OptionalDouble;
 import nightlag.stages.fault.Reason;
 import nightlag.stages.moduli.Findings;
 import nightlag.stages.moduli.Marker;
-import nightlag.stages.moduli.Moduli;
 import nightlag.stages.moduli.ModulusReading;
 import nightlag.stages.numeric.SmoothSlope.Curve;
 import nightlag.stages.sweep.LogModuli.Figure;
@@ -38,18 +37,18 @@ public final class FrequencyMarkers {
      * and {@code plateau_modulus} (Pa).
      *
      * @param place whose the moduli are; its temperature is that of the markers
-     * @param readings moduli in any order, repeats allowed; those that are not above zero are left out
+     * @param readings moduli in any order, repeats allowed; those that noise hides are left out
      */
     public static Findings of(MarkerPlace place, List<ModulusReading> readings) {
-        List<ModulusReading> positive = readings.stream()
-                .filter(reading -> reading.angularFrequency() > 0 && isPositive(reading.moduli()))
+        List<ModulusReading> clear = readings.stream()
+                .filter(reading -> reading.angularFrequency() > 0 && LogModuli.standOut(reading.moduli()))
                 .toList();
         LogModuli data = LogModuli.of(
-                positive.stream().mapToDouble(ModulusReading::angularFrequency).toArray(),
-                positive.stream().map(ModulusReading::moduli).toList());
+                clear.stream().mapToDouble(ModulusReading::angularFrequency).toArray(),
+                clear.stream().map(ModulusReading::moduli).toList());
         FrequencyMarkers markers = new FrequencyMarkers(place, data);
-        if (positive.size() < readings.size()) {
-            markers.notes.add(MarkerReason.MARKER_NOT_POSITIVE.with(place.words(), readings.size() - positive.size()));
+        if (clear.size() < readings.size()) {
+            markers.notes.add(MarkerReason.MARKER_MODULI_HIDDEN.with(place.words(), readings.size() - clear.size()));
         }
         if (data.size() < FEWEST) {
             markers.notes.add(MarkerReason.MARKER_TOO_FEW_FREQUENCIES.with(place.words(), data.size(), FEWEST));
@@ -59,23 +58,21 @@ public final class FrequencyMarkers {
         return new Findings(markers.markers, markers.notes);
     }
 
-    static boolean isPositive(Moduli moduli) {
-        return moduli.storagePa() > 0 && moduli.lossPa() > 0 && moduli.complex().isFinite();
-    }
-
     private void find() {
         List<Marker> plateaus = new ArrayList<>();
         List<Zeros> crossings = new ArrayList<>();
         double lowest = Double.POSITIVE_INFINITY;
         for (LogModuli.Stretch stretch : data.stretches()) {
             Curve lossFactor = stretch.data().curve(Figure.LOSS_FACTOR);
-            Zeros zeros = Zeros.of(figure(lossFactor, 0), stretch.data().places());
+            Zeros zeros =
+                    Zeros.of(at -> lossFactor.estimate(at, 0), stretch.data().places());
             crossings.add(zeros);
             zeros.zeros().stream()
                     .filter(zero -> stretch.owns(zero.place()))
                     .forEach(zero -> crossing(stretch.data(), lossFactor, zero));
-            for (Zero zero :
-                    Zeros.of(figure(lossFactor, 1), stretch.data().places()).zeros()) {
+            for (Zero zero : Zeros.of(
+                            at -> lossFactor.estimate(at, 1), stretch.data().places())
+                    .zeros()) {
                 double depth = lossFactor.at(zero.place(), 0);
                 if (zero.rising() && stretch.owns(zero.place()) && depth < 0 && depth < lowest) {
                     lowest = depth;
@@ -93,21 +90,6 @@ public final class FrequencyMarkers {
         }
         markers.sort(Comparator.comparing(Marker::property)
                 .thenComparing(marker -> marker.frequencyHz().orElseThrow()));
-    }
-
-    /** A curve or its slope as what passes zero. */
-    static Zeros.Figure figure(Curve curve, int derivative) {
-        return new Zeros.Figure() {
-            @Override
-            public double at(double place) {
-                return curve.at(place, derivative);
-            }
-
-            @Override
-            public double u(double place) {
-                return curve.u(place, derivative);
-            }
-        };
     }
 
     private void crossing(LogModuli near, Curve lossFactor, Zero zero) {

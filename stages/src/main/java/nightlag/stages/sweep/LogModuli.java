@@ -12,13 +12,14 @@ import nightlag.stages.numeric.SmoothSlope.Curve;
 /**
  * Logarithms of the moduli over the logarithm of frequency or strain, ready for smooth curves through them. Moduli within a
  * thousandth of each other in frequency or strain are one, at their weighted mean; where such repeats scatter by more than
- * their uncertainties say, all of these are widened. Where one of the moduli has no covariance all count alike, and the
- * scatter about the curve says how well it is known.
+ * their uncertainties say, all of these are widened. Where one of the moduli has no covariance, all have
+ * the same unknown share of |G*|, which the scatter about the curve tells.
  */
 final class LogModuli {
     /** No logarithm is taken to be known better. */
     private static final double LEAST_VARIANCE = 1e-10;
 
+    private static final double STANDS_OUT = 3;
     private static final double SAME = 1e-3;
     /** Curves through more points than these are cut into stretches, each overlapping half of the next. */
     private static final int STRETCH = 50;
@@ -98,7 +99,7 @@ final class LogModuli {
      * The moduli in order.
      *
      * @param abscissae frequencies or strains, above zero
-     * @param moduli as many, both parts above zero
+     * @param moduli as many, standing out from zero
      */
     static LogModuli of(double[] abscissae, List<Moduli> moduli) {
         boolean known = moduli.stream().allMatch(one -> one.covariance().isPresent());
@@ -124,7 +125,9 @@ final class LogModuli {
     private static Entry entry(double x, Moduli moduli, boolean known) {
         double storage = moduli.storagePa();
         double loss = moduli.lossPa();
-        ModuliCovariance own = known ? moduli.covariance().orElseThrow() : new ModuliCovariance(0, 0, 0);
+        // of an error in phase and size alike
+        double alike = LEAST_VARIANCE * (storage * storage + loss * loss);
+        ModuliCovariance own = known ? moduli.covariance().orElseThrow() : new ModuliCovariance(alike, alike, 0);
         return new Entry(
                 x,
                 Math.log(storage),
@@ -165,6 +168,15 @@ final class LogModuli {
 
     private static double square(double value) {
         return value * value;
+    }
+
+    /** Whether a logarithm can be had of both moduli: where they are above zero by three standard uncertainties. */
+    static boolean standOut(Moduli moduli) {
+        double storageU = moduli.covariance().map(ModuliCovariance::storageU).orElse(0.0);
+        double lossU = moduli.covariance().map(ModuliCovariance::lossU).orElse(0.0);
+        return moduli.complex().isFinite()
+                && moduli.storagePa() > STANDS_OUT * storageU
+                && moduli.lossPa() > STANDS_OUT * lossU;
     }
 
     /** How many different frequencies or strains there are. */

@@ -5,7 +5,8 @@ import nightlag.stages.fault.ReasonCode;
 /** Why a marker of a sweep is absent. The first part says whose it would be. */
 public enum MarkerReason implements ReasonCode {
     /** How many moduli. */
-    MARKER_NOT_POSITIVE("{0}: moduli of zero or less, left out of its markers: {1}"),
+    MARKER_MODULI_HIDDEN(
+            "{0}: points with a modulus that does not stand out from zero by 3 u, left out of its markers: {1}"),
     /** How many frequencies, how many are needed. */
     MARKER_TOO_FEW_FREQUENCIES("{0}: no crossover and no plateau, for it has {1} frequencies and {2} are needed"),
     /** Which modulus is the larger, lowest and highest angular frequency. */

@@ -3,6 +3,7 @@ package nightlag.stages.sweep;
 import java.util.ArrayList;
 import java.util.List;
 import java.util.function.DoubleUnaryOperator;
+import nightlag.stages.numeric.SmoothSlope.Estimate;
 
 /**
  * Where a smooth figure passes zero. It does so only where it stands out from zero by three of its standard uncertainties on
@@ -17,20 +18,17 @@ import java.util.function.DoubleUnaryOperator;
 record Zeros(List<Zero> zeros, boolean positive, boolean negative, boolean startsClear, boolean endsClear) {
     private static final double STANDS_OUT = 3;
     private static final int STEPS = 4;
-    private static final int HALVINGS = 45;
+    private static final int HALVINGS = 36;
 
     /** Copies the list. */
     Zeros {
         zeros = List.copyOf(zeros);
     }
 
-    /** A figure over a place, and its standard uncertainty. */
+    /** A figure over a place. */
     interface Figure {
-        /** The figure. */
-        double at(double place);
-
-        /** Its standard uncertainty. */
-        double u(double place);
+        /** The figure with its standard uncertainty. */
+        Estimate at(double place);
     }
 
     /**
@@ -54,8 +52,9 @@ record Zeros(List<Zero> zeros, boolean positive, boolean negative, boolean start
         double[] values = new double[grid.length];
         int[] signs = new int[grid.length];
         for (int i = 0; i < grid.length; i++) {
-            values[i] = figure.at(grid[i]);
-            signs[i] = Math.abs(values[i]) > STANDS_OUT * figure.u(grid[i]) ? (int) Math.signum(values[i]) : 0;
+            Estimate there = figure.at(grid[i]);
+            values[i] = there.value();
+            signs[i] = Math.abs(there.value()) > STANDS_OUT * there.u() ? (int) Math.signum(there.value()) : 0;
         }
         List<Zero> zeros = new ArrayList<>();
         boolean positive = false;
@@ -95,11 +94,15 @@ record Zeros(List<Zero> zeros, boolean positive, boolean negative, boolean start
         int middle = changes.get(changes.size() / 2);
         boolean rising = values[from] < 0;
         double sign = values[middle] < 0 ? 1 : -1;
-        double place = lastNegative(at -> sign * figure.at(at), grid[middle], grid[middle + 1]);
+        double place = lastNegative(at -> sign * figure.at(at).value(), grid[middle], grid[middle + 1]);
         double side = rising ? 1 : -1;
-        double begin = lastNegative(at -> side * figure.at(at) + STANDS_OUT * figure.u(at), grid[from], grid[from + 1]);
-        double end = lastNegative(at -> side * figure.at(at) - STANDS_OUT * figure.u(at), grid[to - 1], grid[to]);
+        double begin = lastNegative(at -> bound(figure.at(at), side, STANDS_OUT), grid[from], grid[from + 1]);
+        double end = lastNegative(at -> bound(figure.at(at), side, -STANDS_OUT), grid[to - 1], grid[to]);
         return new Zero(place, (end - begin) / (2 * STANDS_OUT), rising);
+    }
+
+    private static double bound(Estimate figure, double side, double times) {
+        return side * figure.value() + times * figure.u();
     }
 
     /** Where a function that is negative at the low end passes zero. */

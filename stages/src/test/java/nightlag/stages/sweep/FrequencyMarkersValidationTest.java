@@ -70,7 +70,7 @@ class FrequencyMarkersValidationTest {
     @MethodSource("crossovers")
     void withoutNoiseACrossoverIsWithinItsBar(
             String name, DoubleFunction<Complex> model, double angularFrequency, double modulusPa) {
-        for (int perDecade : new int[] {4, 5, 7, 10, 20}) {
+        for (int perDecade : new int[] {5, 7, 10, 20}) {
             double[] places = MarkerModel.decades(angularFrequency / 137, angularFrequency * 211, perDecade);
 
             Findings found = FrequencyMarkers.of(PLACE, MarkerModel.readings(model, places, 0, new Random(1)));
@@ -139,14 +139,14 @@ class FrequencyMarkersValidationTest {
         Findings found = FrequencyMarkers.of(
                 PLACE,
                 MarkerModel.readings(
-                        MarkerModel.maxwell(2e5, 0.25), MarkerModel.decades(0.01, 1, 5), 0.01, new Random(1)));
+                        MarkerModel.maxwell(2e5, 0.25), MarkerModel.decades(0.2, 2, 8), 0.01, new Random(1)));
 
         assertThat(found.markers()).isEmpty();
         assertThat(found.notes())
                 .extracting(note -> note.sentence())
                 .containsExactly(
                         "specimen 1, sweep 2 at 150.0 °C: no crossover, the loss modulus exceeds the storage modulus"
-                                + " throughout, from 0.01 to 1 rad/s",
+                                + " throughout, from 0.2 to 2 rad/s",
                         "specimen 1, sweep 2 at 150.0 °C: no plateau modulus, for tan δ has no minimum below 1 inside the"
                                 + " data that noise could not make");
     }
