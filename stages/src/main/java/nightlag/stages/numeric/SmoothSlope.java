@@ -41,8 +41,12 @@ public final class SmoothSlope {
     /** Whether the values scatter as their uncertainties say, whatever they look like. */
     private final boolean believed;
 
-    private SmoothSlope(double[] x, double[][] y, double[] variance, double[] places, boolean believed) {
+    /** No process is taken to be weaker. */
+    private final double least;
+
+    private SmoothSlope(double[] x, double[][] y, double[] variance, double[] places, boolean believed, double least) {
         this.believed = believed;
+        this.least = least;
         this.x = x;
         this.y = y;
         this.variance = variance;
@@ -74,7 +78,7 @@ public final class SmoothSlope {
         if (x.length < FEWEST) {
             throw new IllegalArgumentException("fewer than three values");
         }
-        return new SmoothSlope(x, y, variance, places, false).mostLikely().slopes();
+        return new SmoothSlope(x, y, variance, places, false, 0).mostLikely().slopes();
     }
 
     /**
@@ -84,15 +88,18 @@ public final class SmoothSlope {
      * @param x where the values were observed, strictly rising
      * @param y values
      * @param variance u² of the values, above zero
+     * @param least how strong the process is at the least, in squares of the values over the fifth power of the places: what
+     *     the curve may do for all one knows beforehand; 0 where nothing is known
      * @throws IllegalArgumentException if there are fewer than three values
      */
-    public static Curve curve(double[] x, double[] y, double[] variance) {
+    public static Curve curve(double[] x, double[] y, double[] variance, double least) {
         if (x.length < FEWEST) {
             throw new IllegalArgumentException("fewer than three values");
         }
         double[][] values = {y};
-        Fit free = new SmoothSlope(x, values, variance, x, false).mostLikely();
-        return new Curve(free.widening < BELIEVED ? new SmoothSlope(x, values, variance, x, true).mostLikely() : free);
+        Fit free = new SmoothSlope(x, values, variance, x, false, least).mostLikely();
+        return new Curve(
+                free.widening < BELIEVED ? new SmoothSlope(x, values, variance, x, true, least).mostLikely() : free);
     }
 
     /**
@@ -149,7 +156,8 @@ public final class SmoothSlope {
                 Arrays.stream(y).mapToDouble(SmoothSlope::squaredRange).max().orElseThrow();
         double interval = span / (x.length - 1);
         double high = Math.max(low, STRONGEST * range / process(interval, interval, 0, 0));
-        Fit best = Fit.of(this, low).orElseThrow();
+        Fit weakest = Fit.of(this, low).orElseThrow();
+        Fit best = least > low ? Fit.of(this, least).orElse(weakest) : weakest;
         for (double strength = low * COARSE_STEP; strength <= high; strength *= COARSE_STEP) {
             best = best.orBetter(strength);
         }
@@ -282,7 +290,7 @@ public final class SmoothSlope {
         /** The more likely of this fit and that of another strength. */
         Fit orBetter(double otherStrength) {
             return of(data, otherStrength)
-                    .filter(other -> other.deviance < deviance)
+                    .filter(other -> other.deviance < deviance && other.strength * other.widening >= data.least)
                     .orElse(this);
         }
 

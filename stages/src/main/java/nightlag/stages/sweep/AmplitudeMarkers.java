@@ -49,7 +49,7 @@ final class AmplitudeMarkers {
         List<ModulusPoint> positive = sweep.points().stream()
                 .filter(point -> LogModuli.standOut(point.moduli().orElseThrow()))
                 .toList();
-        LogModuli data = LogModuli.of(
+        LogModuli data = LogModuli.overStrain(
                 positive.stream().mapToDouble(AmplitudeSweeps::strain).toArray(),
                 positive.stream().map(point -> point.moduli().orElseThrow()).toList());
         AmplitudeMarkers markers = new AmplitudeMarkers(sweep, data);

@@ -43,7 +43,7 @@ public final class FrequencyMarkers {
         List<ModulusReading> clear = readings.stream()
                 .filter(reading -> reading.angularFrequency() > 0 && LogModuli.standOut(reading.moduli()))
                 .toList();
-        LogModuli data = LogModuli.of(
+        LogModuli data = LogModuli.overFrequency(
                 clear.stream().mapToDouble(ModulusReading::angularFrequency).toArray(),
                 clear.stream().map(ModulusReading::moduli).toList());
         FrequencyMarkers markers = new FrequencyMarkers(place, data);

@@ -24,12 +24,20 @@ final class LogModuli {
     /** Curves through more points than these are cut into stretches, each overlapping half of the next. */
     private static final int STRETCH = 50;
 
+    /**
+     * The strength of the process that waves a logarithm by about 0.03, up and down in a decade of frequency, as modes a
+     * decade apart do.
+     */
+    private static final double WAVES_OF_MODES = 0.3;
+
     private final double[] x;
     private final Entry[] entries;
+    private final double leastStrength;
 
-    private LogModuli(double[] x, Entry[] entries) {
+    private LogModuli(double[] x, Entry[] entries, double leastStrength) {
         this.x = x;
         this.entries = entries;
+        this.leastStrength = leastStrength;
     }
 
     /** One observation: ln ω or ln γ, ln G', ln G'' and the covariance of the latter two. */
@@ -96,12 +104,26 @@ final class LogModuli {
     }
 
     /**
-     * The moduli in order.
+     * Moduli over frequency. Their curves may wave as those of single modes do, even where noise would hide it.
      *
-     * @param abscissae frequencies or strains, above zero
+     * @param angularFrequencies above zero
      * @param moduli as many, standing out from zero
      */
-    static LogModuli of(double[] abscissae, List<Moduli> moduli) {
+    static LogModuli overFrequency(double[] angularFrequencies, List<Moduli> moduli) {
+        return of(angularFrequencies, moduli, WAVES_OF_MODES);
+    }
+
+    /**
+     * Moduli over strain.
+     *
+     * @param strains above zero
+     * @param moduli as many, standing out from zero
+     */
+    static LogModuli overStrain(double[] strains, List<Moduli> moduli) {
+        return of(strains, moduli, 0);
+    }
+
+    private static LogModuli of(double[] abscissae, List<Moduli> moduli, double leastStrength) {
         boolean known = moduli.stream().allMatch(one -> one.covariance().isPresent());
         List<Entry> entries = new ArrayList<>();
         for (int i = 0; i < abscissae.length; i++) {
@@ -119,7 +141,7 @@ final class LogModuli {
         double widening = known ? widening(groups) : 1;
         Entry[] merged =
                 groups.stream().map(group -> together(group).widened(widening)).toArray(Entry[]::new);
-        return new LogModuli(Arrays.stream(merged).mapToDouble(Entry::x).toArray(), merged);
+        return new LogModuli(Arrays.stream(merged).mapToDouble(Entry::x).toArray(), merged, leastStrength);
     }
 
     private static Entry entry(double x, Moduli moduli, boolean known) {
@@ -198,7 +220,10 @@ final class LogModuli {
             double begin = from == 0 ? Double.NEGATIVE_INFINITY : x[from + half / 2];
             double end = to == x.length ? Double.POSITIVE_INFINITY : x[from + half + half / 2];
             stretches.add(new Stretch(
-                    new LogModuli(Arrays.copyOfRange(x, from, to), Arrays.copyOfRange(entries, from, to)), begin, end));
+                    new LogModuli(
+                            Arrays.copyOfRange(x, from, to), Arrays.copyOfRange(entries, from, to), leastStrength),
+                    begin,
+                    end));
             if (to == x.length) {
                 break;
             }
@@ -232,7 +257,7 @@ final class LogModuli {
 
     /** The smooth curve of a figure. */
     Curve curve(Figure figure) {
-        return SmoothSlope.curve(x, values(figure), variances(figure));
+        return SmoothSlope.curve(x, values(figure), variances(figure), leastStrength);
     }
 
     /** The covariance of what noise does to the curves of two figures at a place. */
