@@ -144,14 +144,14 @@ public final class GelPoint {
                 .distinct()
                 .sorted()
                 .toArray();
-        List<List<Slope>> runs = new ArrayList<>();
+        List<List<AngleSlope>> runs = new ArrayList<>();
         for (double place : places) {
-            Slope slope = Slope.of(
+            AngleSlope slope = AngleSlope.of(
                     place,
                     curves,
                     curves.stream().map(curve -> curve.between(place)).toList());
             if (Math.abs(slope.value()) > CLEAR * Math.sqrt(slope.variance())) {
-                List<Slope> last = runs.isEmpty() ? List.of() : runs.get(runs.size() - 1);
+                List<AngleSlope> last = runs.isEmpty() ? List.of() : runs.get(runs.size() - 1);
                 if (last.isEmpty() || last.get(0).value() * slope.value() < 0) {
                     runs.add(new ArrayList<>());
                 }
@@ -161,9 +161,9 @@ public final class GelPoint {
         runs.removeIf(run -> run.size() < LEAST_RUN);
         Optional<Bracket> melting = Optional.empty();
         for (int i = 1; i < runs.size(); i++) {
-            List<Slope> earlier = runs.get(i - 1);
-            Slope before = earlier.get(earlier.size() - 1);
-            Slope after = runs.get(i).get(0);
+            List<AngleSlope> earlier = runs.get(i - 1);
+            AngleSlope before = earlier.get(earlier.size() - 1);
+            AngleSlope after = runs.get(i).get(0);
             if (before.value() * after.value() < 0) {
                 double share = before.value() / (before.value() - after.value());
                 Bracket found = new Bracket(
@@ -175,49 +175,6 @@ public final class GelPoint {
             }
         }
         return melting;
-    }
-
-    /**
-     * The weighted straight line of the loss angles over ln ω at one place.
-     *
-     * @param place time in s or temperature in K
-     * @param value its slope b, rad
-     * @param variance u²(b)
-     * @param mean weighted mean angle, rad
-     * @param meanVariance its u²
-     * @param chiSquared χ² about the line
-     */
-    private record Slope(
-            double place, double value, double variance, double mean, double meanVariance, double chiSquared) {
-        static Slope of(double place, List<LossAngleCurve> curves, List<LossAngleCurve.Angle> angles) {
-            double weights = 0;
-            double logarithm = 0;
-            double mean = 0;
-            for (int k = 0; k < curves.size(); k++) {
-                double weight = 1 / angles.get(k).variance();
-                weights += weight;
-                logarithm += weight * curves.get(k).logAngularFrequency();
-                mean += weight * angles.get(k).value();
-            }
-            logarithm /= weights;
-            mean /= weights;
-            double squares = 0;
-            double products = 0;
-            for (int k = 0; k < curves.size(); k++) {
-                double weight = 1 / angles.get(k).variance();
-                double off = curves.get(k).logAngularFrequency() - logarithm;
-                squares += weight * off * off;
-                products += weight * off * (angles.get(k).value() - mean);
-            }
-            double slope = products / squares;
-            double chiSquared = 0;
-            for (int k = 0; k < curves.size(); k++) {
-                double off = curves.get(k).logAngularFrequency() - logarithm;
-                double misfit = angles.get(k).value() - mean - slope * off;
-                chiSquared += misfit * misfit / angles.get(k).variance();
-            }
-            return new Slope(place, slope, 1 / squares, mean, 1 / weights, chiSquared);
-        }
     }
 
     /**
@@ -293,8 +250,8 @@ public final class GelPoint {
                 .toList();
     }
 
-    private Slope slope(double place, List<LossAngleCurve.Piece> pieces) {
-        return Slope.of(
+    private AngleSlope slope(double place, List<LossAngleCurve.Piece> pieces) {
+        return AngleSlope.of(
                 place, curves, pieces.stream().map(piece -> piece.at(place)).toList());
     }
 
@@ -321,7 +278,7 @@ public final class GelPoint {
     }
 
     private Crossing crossing(double place, List<LossAngleCurve.Piece> pieces) {
-        Slope there = slope(place, pieces);
+        AngleSlope there = slope(place, pieces);
         double weights = 0;
         double logarithm = 0;
         double meanSlope = 0;
