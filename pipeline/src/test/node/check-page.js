@@ -35,6 +35,7 @@ async function look(path, executablePath) {
     const figures = [];
     for (const figure of await page.locator('.charts figure').all()) {
       await figure.locator('summary').click();
+      await figure.locator('.values table').waitFor({ state: 'attached' });
       figures.push({
         title: await figure.locator('h3').innerText(),
         shapes: await figure.locator('svg[role=img] g[clip-path] path').count(),
