@@ -1,14 +1,19 @@
 package nightlag.stages;
 
+import java.util.ArrayList;
 import java.util.Comparator;
 import java.util.List;
+import java.util.Optional;
 import java.util.stream.Stream;
+import nightlag.stages.fault.Reason;
+import nightlag.stages.fault.ReductionFault;
+import nightlag.stages.moduli.Findings;
 import nightlag.stages.moduli.Marker;
-import nightlag.stages.moduli.ModulusPoint;
-import nightlag.stages.moduli.Quality;
 import nightlag.stages.spectrum.SpectrumRow;
+import nightlag.stages.superposition.MasterCurve;
 import nightlag.stages.sweep.NaturalOrder;
 import nightlag.stages.sweep.PointOrder;
+import nightlag.stages.sweep.Sweeps;
 
 /** All reductions of one lot to what is published about it. */
 public final class Conclude {
@@ -37,19 +42,40 @@ public final class Conclude {
                         .sorted(PointOrder.BY_KEY)
                         .toList(),
                 plan.sweeps());
-        List<ModulusPoint> points = lot.points();
-        List<ModulusPoint> usable = points.stream()
-                .filter(point -> point.quality() != Quality.UNUSABLE)
-                .toList();
-        LotSpectrum spectrum = plan.spectrum()
-                .map(wanted -> LotSpectrum.of(usable, lot.amplitudeSweeps(), wanted, plan.superposition()))
+        Sweeps sweeps = Sweeps.of(lot.points(), lot.amplitudeSweeps(), plan.sweeps());
+        List<Reason> notes = new ArrayList<>(lot.notes());
+        notes.addAll(sweeps.notes());
+        Optional<LotCurve> curve = curve(sweeps, plan, notes);
+        Optional<MasterCurve> master = curve.flatMap(LotCurve::master);
+        LotSpectrum spectrum = curve.flatMap(whole -> plan.spectrum().map(wanted -> LotSpectrum.of(whole, wanted)))
                 .orElse(LotSpectrum.NONE);
+        notes.addAll(spectrum.notes());
+        Findings markers = LotMarkers.of(sweeps.sweeps(), curve);
         return new LotResult(
-                points,
-                spectrum.markers().stream().sorted(MARKER_ORDER).toList(),
-                List.of(),
-                List.of(),
+                lot.points(),
+                Stream.concat(markers.markers().stream(), spectrum.markers().stream())
+                        .sorted(MARKER_ORDER)
+                        .toList(),
+                master.map(MasterCurve::shifts).orElse(List.of()),
+                master.map(MasterCurve::points).orElse(List.of()),
                 spectrum.rows().stream().sorted(ROW_ORDER).toList(),
-                Stream.concat(lot.notes().stream(), spectrum.notes().stream()).toList());
+                notes,
+                markers.notes());
+    }
+
+    /** The curve that a master curve or a spectrum is asked of; what there is to say of it goes into the notes. */
+    private static Optional<LotCurve> curve(Sweeps sweeps, ConclusionPlan plan, List<Reason> notes) {
+        if (plan.superposition().isEmpty() && plan.spectrum().isEmpty()) {
+            return Optional.empty();
+        }
+        notes.addAll(sweeps.isotherms().notes());
+        try {
+            LotCurve curve = LotCurve.of(sweeps.isotherms(), plan.superposition());
+            notes.addAll(curve.notes());
+            return Optional.of(curve);
+        } catch (ReductionFault fault) {
+            notes.add(fault.reason());
+            return Optional.empty();
+        }
     }
 }

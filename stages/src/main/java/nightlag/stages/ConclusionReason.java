@@ -5,20 +5,16 @@ import nightlag.stages.fault.ReasonCode;
 /** What could not be concluded about a lot, and why. */
 public enum ConclusionReason implements ReasonCode {
     /** Nothing. */
-    SPECTRUM_NO_POINTS("no spectrum: the lot has no usable point with a temperature and a frequency"),
-    /** Reference temperature in °C. */
-    SPECTRUM_NO_ISOTHERM_AT_REFERENCE(
-            "no spectrum: no frequency sweep within 0.5 K of the reference temperature {0} °C"),
+    CURVE_NO_POINTS("no master curve and no spectrum: the lot has no usable point with a temperature and a frequency"),
     /** How many temperatures. */
-    SPECTRUM_SEVERAL_TEMPERATURES(
-            "no spectrum: frequency sweeps at {0} temperatures and no reference temperature to choose by"),
+    CURVE_SEVERAL_TEMPERATURES(
+            "no spectrum: frequency sweeps at {0} temperatures and no reference temperature to bring them to"),
     /** Mean temperature of the isotherm and reference temperature, °C. */
-    SPECTRUM_MEASURED_BESIDE_REFERENCE(
-            "the spectrum at the reference temperature {1} °C comes from points measured at {0} °C, not shifted"),
+    CURVE_MEASURED_BESIDE_REFERENCE(
+            "what is said to hold at the reference temperature {1} °C comes from points measured at {0} °C, not shifted"),
     /** Nothing. */
-    SPECTRUM_MIXED_DEFORMATION("no spectrum: the lot holds points in shear and in extension, two different moduli"),
-    /** How many points. */
-    SPECTRUM_WITHOUT_AMPLITUDE_SWEEPS("points of amplitude sweeps kept out of the spectrum: {0}"),
+    CURVE_MIXED_DEFORMATION(
+            "no master curve and no spectrum: the lot holds points in shear and in extension, two different moduli"),
     /** Specimen, sweep, how many strains, how many are needed. */
     RIM_TOO_FEW_STRAINS(
             "specimen {0}, sweep {1}: {2} strains between parallel plates, {3} are needed to correct to the rim; its moduli"

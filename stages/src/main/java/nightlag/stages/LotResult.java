@@ -16,7 +16,8 @@ import nightlag.stages.superposition.ShiftFactor;
  * @param shiftFactors how far each isotherm is moved onto the master curve
  * @param masterCurve the points moved to the reference temperature
  * @param spectrum spectra
- * @param notes what could not be had, and why
+ * @param notes what was asked for and could not be had, or is unusual, and why
+ * @param absent characteristic figures that the data do not support, and why; most materials lack some
  */
 public record LotResult(
         List<ModulusPoint> points,
@@ -24,10 +25,11 @@ public record LotResult(
         List<ShiftFactor> shiftFactors,
         List<MasterPoint> masterCurve,
         List<SpectrumRow> spectrum,
-        List<Reason> notes) {
+        List<Reason> notes,
+        List<Reason> absent) {
     /** Nothing is known of the lot, not even a point. */
     public static final LotResult EMPTY =
-            new LotResult(List.of(), List.of(), List.of(), List.of(), List.of(), List.of());
+            new LotResult(List.of(), List.of(), List.of(), List.of(), List.of(), List.of(), List.of());
 
     /** Copies the lists. */
     public LotResult {
@@ -37,5 +39,6 @@ public record LotResult(
         masterCurve = List.copyOf(masterCurve);
         spectrum = List.copyOf(spectrum);
         notes = List.copyOf(notes);
+        absent = List.copyOf(absent);
     }
 }

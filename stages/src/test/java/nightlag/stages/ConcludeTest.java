@@ -2,6 +2,7 @@ package nightlag.stages;
 
 import static nightlag.stages.TestPoints.point;
 import static org.assertj.core.api.Assertions.assertThat;
+import static org.assertj.core.api.Assertions.withinPercentage;
 
 import java.util.ArrayList;
 import java.util.Collections;
@@ -11,6 +12,7 @@ import java.util.Optional;
 import java.util.OptionalDouble;
 import java.util.OptionalInt;
 import java.util.Random;
+import java.util.stream.DoubleStream;
 import java.util.stream.IntStream;
 import java.util.stream.Stream;
 import nightlag.stages.fault.Reason;
@@ -76,7 +78,10 @@ class ConcludeTest {
                         SpectrumRow.Kind.RETARDATION,
                         SpectrumRow.Kind.RETARDATION);
         assertThat(result.spectrum()).allMatch(row -> row.referenceTemperatureK() == 463.15);
-        assertThat(result.markers())
+        List<Marker> ofTheLot = result.markers().stream()
+                .filter(marker -> marker.sweep().isEmpty())
+                .toList();
+        assertThat(ofTheLot)
                 .extracting(Marker::property)
                 .containsExactly(
                         "instantaneous_compliance",
@@ -84,9 +89,7 @@ class ConcludeTest {
                         "mean_relaxation_time",
                         "steady_state_compliance",
                         "zero_shear_viscosity");
-        assertThat(result.markers())
-                .allMatch(
-                        marker -> marker.specimen().isEmpty() && marker.sweep().isEmpty());
+        assertThat(ofTheLot).allMatch(marker -> marker.specimen().isEmpty());
         assertThat(result.markers()).allMatch(marker -> marker.temperatureK().equals(OptionalDouble.of(463.15)));
     }
 
@@ -96,7 +99,7 @@ class ConcludeTest {
 
         assertThat(result.points()).hasSize(31);
         assertThat(result.spectrum()).isEmpty();
-        assertThat(result.markers()).isEmpty();
+        assertThat(result.masterCurve()).isEmpty();
         assertThat(result.notes()).isEmpty();
     }
 
@@ -128,47 +131,92 @@ class ConcludeTest {
     }
 
     @Test
-    void theReferenceTemperatureChoosesTheIsotherm() {
-        LotResult result = concludedAtReference(463.2);
+    void isothermsAreBroughtToTheReferenceTemperatureAndTheSpectrumIsOfAll() {
+        double activationEnergy = 80e3;
+        double[] log10A = DoubleStream.of(443.15, 463.15, 483.15)
+                .map(temperature -> activationEnergy / (8.314462618 * Math.log(10)) * (1 / temperature - 1 / 463.15))
+                .toArray();
+        Stream<TestPoints> three = Stream.of(
+                        sweep(443.15, "1", Math.pow(10, log10A[0])),
+                        sweep(463.15, "2", 1),
+                        sweep(483.15, "3", Math.pow(10, log10A[2])))
+                .flatMap(sweep -> sweep);
+
+        LotResult result = conclude(three, atReference(463.15));
+
+        assertThat(result.notes()).isEmpty();
+        assertThat(result.shiftFactors())
+                .extracting(shift -> shift.log10A().orElseThrow())
+                .usingElementComparator((got, wanted) -> Math.abs(got - wanted) < 2e-3 ? 0 : 1)
+                .containsExactly(log10A[0], 0.0, log10A[2]);
+        assertThat(result.masterCurve()).hasSize(93).allMatch(point -> point.referenceTemperatureK() == 463.15);
+        assertThat(result.markers())
+                .filteredOn(marker -> marker.sweep().isEmpty())
+                .extracting(Marker::property)
+                .contains(
+                        "activation_energy",
+                        "crossover_angular_frequency",
+                        "crossover_modulus",
+                        "superposition_misfit",
+                        "zero_shear_viscosity");
+        assertThat(marker(result, "zero_shear_viscosity"))
+                .isCloseTo(0.01 * 1e5 + 0.1 * 2e4 + 1e3, withinPercentage(0.5));
+        assertThat(marker(result, "activation_energy")).isCloseTo(activationEnergy, withinPercentage(0.5));
+    }
+
+    private static double marker(LotResult result, String property) {
+        return result.markers().stream()
+                .filter(marker -> marker.property().equals(property))
+                .findFirst()
+                .orElseThrow()
+                .value();
+    }
+
+    @Test
+    void ofOneIsothermTheSpectrumIsAsItIs() {
+        LotResult result = conclude(sweep(463.15, "1"), atReference(463.2));
 
         assertThat(result.notes()).isEmpty();
         assertThat(result.spectrum())
                 .isNotEmpty()
                 .allMatch(row -> row.referenceTemperatureK() == 463.2)
                 .extracting(SpectrumRow::value)
-                .isEqualTo(conclude(sweep(463.15, "463"), SPECTRUM_WANTED).spectrum().stream()
+                .isEqualTo(conclude(sweep(463.15, "1"), SPECTRUM_WANTED).spectrum().stream()
                         .map(SpectrumRow::value)
                         .toList());
+        assertThat(result.markers()).extracting(Marker::property).doesNotContain("superposition_misfit");
     }
 
     @Test
     void pointsMeasuredBesideTheReferenceTemperatureAreSaid() {
-        LotResult result = concludedAtReference(463.4);
+        LotResult result = conclude(sweep(463.15, "1"), atReference(463.4));
 
-        assertThat(noteOf(result)).isEqualTo("SPECTRUM_MEASURED_BESIDE_REFERENCE");
+        assertThat(noteOf(result)).isEqualTo("CURVE_MEASURED_BESIDE_REFERENCE");
         assertThat(result.spectrum()).isNotEmpty().allMatch(row -> row.referenceTemperatureK() == 463.4);
     }
 
-    private static LotResult concludedAtReference(double referenceK) {
-        Stream<TestPoints> three = Stream.of(443.15, 463.15, 483.15)
-                .flatMap(temperature -> sweep(temperature, "" + (int) temperature.doubleValue()));
-        return conclude(three, plan(SPECTRUM_WANTED.spectrum(), Optional.of(superposition(referenceK))));
+    private static ConclusionPlan atReference(double referenceK) {
+        return plan(SPECTRUM_WANTED.spectrum(), Optional.of(superposition(referenceK)));
     }
 
     @Test
     void whatStandsInTheWayIsSaid() {
-        ConclusionPlan elsewhere = plan(SPECTRUM_WANTED.spectrum(), Optional.of(superposition(300)));
+        ConclusionPlan elsewhere = atReference(300);
         Stream<TestPoints> twoTemperatures = Stream.concat(sweep(443.15, "1"), sweep(463.15, "2"));
         Stream<TestPoints> twoModuli =
                 Stream.concat(sweep(463.15, "1"), sweep(463.15, "2").map(p -> p.in(DeformationMode.EXTENSION)));
 
-        assertThat(noteOf(conclude(sweep(463.15, "1"), elsewhere))).isEqualTo("SPECTRUM_NO_ISOTHERM_AT_REFERENCE");
-        assertThat(noteOf(conclude(twoTemperatures, SPECTRUM_WANTED))).isEqualTo("SPECTRUM_SEVERAL_TEMPERATURES");
-        assertThat(noteOf(conclude(twoModuli, SPECTRUM_WANTED))).isEqualTo("SPECTRUM_MIXED_DEFORMATION");
-        assertThat(noteOf(conclude(Stream.of(point()), SPECTRUM_WANTED))).isEqualTo("SPECTRUM_TOO_FEW_FREQUENCIES");
-        assertThat(noteOf(conclude(Stream.of(point().quality(Quality.UNUSABLE)), SPECTRUM_WANTED)))
-                .isEqualTo("SPECTRUM_NO_POINTS");
-        assertThat(noteOf(conclude(Stream.empty(), SPECTRUM_WANTED))).isEqualTo("SPECTRUM_NO_POINTS");
+        assertThat(noteOf(conclude(sweep(463.15, "1"), elsewhere))).isEqualTo("SUPERPOSITION_REFERENCE_OUTSIDE");
+        assertThat(noteOf(conclude(twoTemperatures, SPECTRUM_WANTED))).isEqualTo("CURVE_SEVERAL_TEMPERATURES");
+        assertThat(noteOf(conclude(twoModuli, SPECTRUM_WANTED))).isEqualTo("CURVE_MIXED_DEFORMATION");
+        assertThat(conclude(Stream.of(point()), SPECTRUM_WANTED).notes())
+                .extracting(Reason::code)
+                .contains("SPECTRUM_TOO_FEW_FREQUENCIES");
+        assertThat(conclude(Stream.of(point().quality(Quality.UNUSABLE)), SPECTRUM_WANTED)
+                        .notes())
+                .extracting(Reason::code)
+                .contains("CURVE_NO_POINTS");
+        assertThat(noteOf(conclude(Stream.empty(), SPECTRUM_WANTED))).isEqualTo("CURVE_NO_POINTS");
     }
 
     @Test
@@ -197,12 +245,17 @@ class ConcludeTest {
     }
 
     private static Stream<TestPoints> sweep(double temperatureK, String sweep) {
+        return sweep(temperatureK, sweep, 1);
+    }
+
+    /** A sweep of the material, all its times longer by a factor. */
+    private static Stream<TestPoints> sweep(double temperatureK, String sweep, double slower) {
         return IntStream.range(0, 31).mapToObj(i -> {
             double hz = Math.pow(10, -2 + i / 7.5);
             return point().named("1", sweep, "" + (i + 1), "f" + i + ".csv")
                     .at(temperatureK)
                     .hz(hz)
-                    .modulus(MATERIAL.modulusPa(2 * Math.PI * hz));
+                    .modulus(MATERIAL.modulusPa(slower * 2 * Math.PI * hz));
         });
     }
 

@@ -147,13 +147,6 @@ final class GradeReader {
 
     private List<String> notActedOn(Optional<SpectrumPlan> spectrum) {
         List<String> lines = new ArrayList<>();
-        if (file.has(GradeKeys.SWEEPS)) {
-            lines.add("[sweeps]: only kind is acted on yet, to find amplitude sweeps; the rest is read and checked");
-        }
-        if (file.has(GradeKeys.SUPERPOSITION)) {
-            lines.add("[superposition]: only its reference_temperature is acted on yet, to choose the isotherm whose "
-                    + "spectrum is fitted; the rest is read and checked");
-        }
         if (spectrum.isPresent() && spectrum.get().continuous()) {
             lines.add("[spectrum] continuous: not acted on yet; spectra are discrete");
         }

@@ -113,6 +113,7 @@ final class Tally {
         lotsConcluded.put(lot, notes);
         LOG.info("{} lot {}: tables rebuilt", lot.grade(), lot.lot());
         notes.forEach(note -> LOG.info("{} lot {}: {}", lot.grade(), lot.lot(), note));
+        result.absent().forEach(why -> LOG.info("{} lot {}: {}", lot.grade(), lot.lot(), why.sentence()));
         for (ModulusPoint point : result.points()) {
             if (reducedTonight.contains(point.key().sourceFile())) {
                 quality.merge(point.quality(), 1, Integer::sum);

@@ -11,6 +11,7 @@ import java.util.List;
  * @param points how many points, by quality, in words
  * @param figures its markers
  * @param notes what could not be had, and why
+ * @param absent figures the data do not support, and why
  * @param charts its charts, as data for the page's script
  */
 public record LotPage(
@@ -20,11 +21,13 @@ public record LotPage(
         String points,
         List<Figure> figures,
         List<String> notes,
+        List<String> absent,
         String charts) {
     /** Copies the lists. */
     public LotPage {
         figures = List.copyOf(figures);
         notes = List.copyOf(notes);
+        absent = List.copyOf(absent);
     }
 
     /**

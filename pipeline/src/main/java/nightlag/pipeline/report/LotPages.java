@@ -28,6 +28,7 @@ final class LotPages {
                 counts(result),
                 result.markers().stream().map(LotPages::figure).toList(),
                 result.notes().stream().map(Reason::sentence).toList(),
+                result.absent().stream().map(Reason::sentence).toList(),
                 ChartJson.of(LotCharts.of(result)));
     }
 

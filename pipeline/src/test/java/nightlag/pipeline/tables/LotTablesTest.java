@@ -73,7 +73,7 @@ class LotTablesTest {
                 Optional.empty(),
                 OptionalDouble.empty());
 
-        write(new LotResult(List.of(point), List.of(), List.of(), List.of(), List.of(), List.of()));
+        write(new LotResult(List.of(point), List.of(), List.of(), List.of(), List.of(), List.of(), List.of()));
 
         // |G*| = 5000 Pa, δ = atan(4/3), u(tan δ)² = (16/9 · 9 + 16)/3000²; a 1 rad/s oscillation has |η*| = |G*|
         assertThat(table("points")).isEqualTo("""
@@ -137,7 +137,8 @@ class LotTablesTest {
                 "Pa·s",
                 "sum of g τ, 8 modes");
 
-        write(new LotResult(List.of(), List.of(peak, viscosity), List.of(), List.of(), List.of(), List.of()));
+        write(new LotResult(
+                List.of(), List.of(peak, viscosity), List.of(), List.of(), List.of(), List.of(), List.of()));
 
         assertThat(table("markers").lines().skip(1))
                 .containsExactly(
@@ -151,7 +152,8 @@ class LotTablesTest {
         SpectrumRow fast = mode(SpectrumRow.Kind.RELAXATION, 0.01, 1e5);
         SpectrumRow retarded = mode(SpectrumRow.Kind.RETARDATION, 3e-7, 1.25e-12);
 
-        write(new LotResult(List.of(), List.of(), List.of(), List.of(), List.of(retarded, slow, fast), List.of()));
+        write(new LotResult(
+                List.of(), List.of(), List.of(), List.of(), List.of(retarded, slow, fast), List.of(), List.of()));
 
         assertThat(table("spectrum").lines().skip(1))
                 .containsExactly(
@@ -164,6 +166,7 @@ class LotTablesTest {
     void aPointWithoutModulusHasEmptyCells() throws IOException {
         write(new LotResult(
                 List.of(point("5", "b/5.csv", Optional.empty())),
+                List.of(),
                 List.of(),
                 List.of(),
                 List.of(),
@@ -183,6 +186,7 @@ class LotTablesTest {
                 List.of(),
                 List.of(),
                 List.of(),
+                List.of(),
                 List.of()));
 
         assertThat(table("points").lines().skip(1))
@@ -197,7 +201,7 @@ class LotTablesTest {
                 .map(parts -> point(parts[0], parts[1], Optional.empty()))
                 .toList();
 
-        write(new LotResult(reversed(points), List.of(), List.of(), List.of(), List.of(), List.of()));
+        write(new LotResult(reversed(points), List.of(), List.of(), List.of(), List.of(), List.of(), List.of()));
 
         assertThat(table("points").lines().skip(1).map(line -> line.split(",", -1)[4] + " " + line.split(",", -1)[28]))
                 .containsExactly("9 b/9.csv", "9 b/10.csv", "9.5 b/1.csv", "10 b/2.csv", "a2 b/1.csv", "a10 b/1.csv");
@@ -211,7 +215,13 @@ class LotTablesTest {
         LotTables.write(
                 results,
                 new LotResult(
-                        List.of(point(key, Optional.empty())), List.of(), List.of(), List.of(), List.of(), List.of()),
+                        List.of(point(key, Optional.empty())),
+                        List.of(),
+                        List.of(),
+                        List.of(),
+                        List.of(),
+                        List.of(),
+                        List.of()),
                 hostile);
 
         Path folder = LotTables.folder(results, "=1+1", "../../etc");
@@ -231,6 +241,7 @@ class LotTablesTest {
                 shuffled(result.shiftFactors(), seed),
                 shuffled(result.masterCurve(), seed),
                 shuffled(result.spectrum(), seed),
+                List.of(),
                 List.of());
         Locale was = Locale.getDefault();
 

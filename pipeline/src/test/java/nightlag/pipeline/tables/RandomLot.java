@@ -27,7 +27,8 @@ public final class RandomLot {
     }
 
     public LotResult result(String grade, String lot) {
-        return new LotResult(points(grade, lot), markers(), shiftFactors(), masterCurve(), spectrum(), List.of());
+        return new LotResult(
+                points(grade, lot), markers(), shiftFactors(), masterCurve(), spectrum(), List.of(), List.of());
     }
 
     private List<ModulusPoint> points(String grade, String lot) {

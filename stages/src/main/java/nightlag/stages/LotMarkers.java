@@ -1,0 +1,97 @@
+package nightlag.stages;
+
+import java.util.ArrayList;
+import java.util.LinkedHashMap;
+import java.util.List;
+import java.util.Map;
+import java.util.Optional;
+import nightlag.stages.geometry.DeformationMode;
+import nightlag.stages.moduli.Findings;
+import nightlag.stages.moduli.ModulusReading;
+import nightlag.stages.superposition.MasterCurve;
+import nightlag.stages.superposition.ShiftFactor;
+import nightlag.stages.sweep.FlowCurve;
+import nightlag.stages.sweep.FrequencyMarkers;
+import nightlag.stages.sweep.GelPoint;
+import nightlag.stages.sweep.Isotherm;
+import nightlag.stages.sweep.MarkerPlace;
+import nightlag.stages.sweep.Sweep;
+import nightlag.stages.sweep.SweepMarkers;
+import nightlag.stages.sweep.SweepName;
+import nightlag.stages.sweep.SweepPlan;
+
+/** The characteristic figures of a lot: of each sweep, of sweeps that belong together, and of the master curve. */
+final class LotMarkers {
+    private final List<Sweep> sweeps;
+    private final List<Findings> found = new ArrayList<>();
+
+    private LotMarkers(List<Sweep> sweeps) {
+        this.sweeps = sweeps;
+    }
+
+    /**
+     * Looks for them.
+     *
+     * @param sweeps the lot's sweeps
+     * @param curve its curve, where one was asked for and could be had
+     */
+    static Findings of(List<Sweep> sweeps, Optional<LotCurve> curve) {
+        LotMarkers markers = new LotMarkers(sweeps);
+        sweeps.forEach(sweep -> markers.found.add(SweepMarkers.of(sweep)));
+        markers.gelPoints();
+        // of one isotherm alone its own sweeps already say what the curve would
+        Optional<LotCurve> shifted = curve.filter(LotMarkers::isShifted);
+        shifted.ifPresentOrElse(markers::ofMasterCurve, markers::flowOfSweeps);
+        curve.flatMap(LotCurve::master)
+                .ifPresent(master -> markers.found.add(new Findings(master.markers(), List.of())));
+        return Findings.together(markers.found);
+    }
+
+    private static boolean isShifted(LotCurve curve) {
+        return curve.master()
+                .map(MasterCurve::shifts)
+                .filter(shifts -> shifts.stream().filter(ShiftFactor::used).count() > 1)
+                .isPresent();
+    }
+
+    private void ofMasterCurve(LotCurve curve) {
+        found.add(FrequencyMarkers.of(MarkerPlace.masterCurve(curve.temperatureK()), curve.readings()));
+        flow(new SweepName("", ""), curve.temperatureK(), curve.deformation(), curve.readings());
+    }
+
+    private void flowOfSweeps() {
+        for (Sweep sweep : sweeps) {
+            if (sweep.kind() == SweepPlan.Kind.FREQUENCY && sweep.temperatureK().isPresent()) {
+                double temperatureK = sweep.temperatureK().getAsDouble();
+                flow(
+                        sweep.name(),
+                        temperatureK,
+                        sweep.points().get(0).deformation(),
+                        new Isotherm(temperatureK, sweep.points()).readings());
+            }
+        }
+    }
+
+    /** A viscosity is of shear. */
+    private void flow(SweepName name, double temperatureK, DeformationMode deformation, List<ModulusReading> readings) {
+        if (deformation == DeformationMode.SHEAR) {
+            found.add(FlowCurve.of(name, temperatureK, readings));
+        }
+    }
+
+    /** Where one specimen was followed at several frequencies. */
+    private void gelPoints() {
+        for (SweepPlan.Kind kind : List.of(SweepPlan.Kind.TIME, SweepPlan.Kind.TEMPERATURE)) {
+            Map<SweepName, List<Sweep>> together = new LinkedHashMap<>();
+            sweeps.stream()
+                    .filter(sweep -> sweep.kind() == kind)
+                    .forEach(sweep -> together.computeIfAbsent(sweep.name(), name -> new ArrayList<>())
+                            .add(sweep));
+            together.forEach((name, members) -> {
+                if (members.size() > 1) {
+                    found.add(GelPoint.of(name, members, kind));
+                }
+            });
+        }
+    }
+}
