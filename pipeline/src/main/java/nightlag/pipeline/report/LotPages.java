@@ -2,6 +2,7 @@ package nightlag.pipeline.report;
 
 import java.math.BigDecimal;
 import java.math.MathContext;
+import java.math.RoundingMode;
 import java.util.ArrayList;
 import java.util.Arrays;
 import java.util.List;
@@ -17,6 +18,10 @@ final class LotPages {
     private static final double KELVIN_AT_ZERO_CELSIUS = 273.15;
     private static final MathContext FIGURES = new MathContext(4);
     private static final MathContext FIGURES_OF_U = new MathContext(2);
+    /** Decades within which a number is written without a power of ten. */
+    private static final int SMALLEST_PLAIN = -4;
+
+    private static final int LARGEST_PLAIN = 5;
 
     private LotPages() {}
 
@@ -54,8 +59,9 @@ final class LotPages {
         if (!marker.sweep().isEmpty()) {
             parts.add("sweep " + marker.sweep());
         }
-        marker.temperatureK().ifPresent(t -> parts.add(short4(t - KELVIN_AT_ZERO_CELSIUS) + " °C"));
-        marker.frequencyHz().ifPresent(f -> parts.add(short4(f) + " Hz"));
+        marker.temperatureK()
+                .ifPresent(t -> parts.add(plain(new BigDecimal(t - KELVIN_AT_ZERO_CELSIUS).round(FIGURES)) + " °C"));
+        marker.frequencyHz().ifPresent(f -> parts.add(plain(new BigDecimal(f).round(FIGURES)) + " Hz"));
         return String.join(", ", parts);
     }
 
@@ -63,21 +69,32 @@ final class LotPages {
         double value = marker.unit().equals("°C") ? marker.value() - KELVIN_AT_ZERO_CELSIUS : marker.value();
         String unit = marker.unit().equals("1") ? "" : " " + marker.unit();
         OptionalDouble u = marker.u();
-        if (u.isEmpty() || !(u.getAsDouble() > 0)) {
-            return short4(value) + unit;
-        }
-        return withUncertainty(value, u.getAsDouble()) + unit;
+        return u.isPresent() && u.getAsDouble() > 0
+                ? withUncertainty(value, u.getAsDouble()) + unit
+                : plain(new BigDecimal(value).round(FIGURES)) + unit;
     }
 
     /** Two digits of the uncertainty, and the value to the same place (JCGM 100:2008, 7.2.6). */
     private static String withUncertainty(double value, double u) {
         BigDecimal rounded = new BigDecimal(u).round(FIGURES_OF_U);
-        BigDecimal same = new BigDecimal(value).setScale(rounded.scale(), java.math.RoundingMode.HALF_EVEN);
-        return same + " ± " + rounded;
+        BigDecimal same = new BigDecimal(value).setScale(rounded.scale(), RoundingMode.HALF_EVEN);
+        int exponent = exponent(same.abs().max(rounded));
+        if (exponent >= SMALLEST_PLAIN && exponent <= LARGEST_PLAIN) {
+            return same.toPlainString() + " ± " + rounded.toPlainString();
+        }
+        return "(" + same.movePointLeft(exponent).toPlainString() + " ± "
+                + rounded.movePointLeft(exponent).toPlainString() + ")·10^" + exponent;
     }
 
-    private static String short4(double value) {
-        BigDecimal rounded = new BigDecimal(value).round(FIGURES).stripTrailingZeros();
-        return rounded.scale() < -2 || rounded.scale() > 6 ? rounded.toString() : rounded.toPlainString();
+    private static String plain(BigDecimal number) {
+        BigDecimal value = number.stripTrailingZeros();
+        int exponent = exponent(value);
+        return value.signum() == 0 || (exponent >= SMALLEST_PLAIN && exponent <= LARGEST_PLAIN)
+                ? value.toPlainString()
+                : value.movePointLeft(exponent).toPlainString() + "·10^" + exponent;
+    }
+
+    private static int exponent(BigDecimal value) {
+        return value.precision() - value.scale() - 1;
     }
 }

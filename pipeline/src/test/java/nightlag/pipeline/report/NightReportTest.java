@@ -8,8 +8,10 @@ import java.io.IOException;
 import java.nio.file.Files;
 import java.nio.file.Path;
 import java.util.List;
+import java.util.OptionalDouble;
 import nightlag.pipeline.tables.RandomLot;
 import nightlag.stages.LotResult;
+import nightlag.stages.moduli.Marker;
 import org.junit.jupiter.api.Test;
 import org.junit.jupiter.api.io.TempDir;
 
@@ -78,6 +80,33 @@ class NightReportTest {
             points += series.get("x").size();
         }
         assertThat(points).isEqualTo(2 * result.masterCurve().size());
+    }
+
+    @Test
+    void figuresAreWrittenToTheSecondDigitOfTheirUncertainty() {
+        assertThat(value(46975.857, 70.6, "Pa")).isEqualTo("46976 ± 71 Pa");
+        assertThat(value(1533.4, 124.68, "Pa·s")).isEqualTo("1530 ± 120 Pa·s");
+        assertThat(value(3.9389798e-6, 2.7568e-7, "1/Pa")).isEqualTo("(3.94 ± 0.28)·10^-6 1/Pa");
+        assertThat(value(253872.84, 19104.7, "Pa")).isEqualTo("254000 ± 19000 Pa");
+        assertThat(value(2538728400.0, 19104700, "Pa")).isEqualTo("(2.539 ± 0.019)·10^9 Pa");
+        assertThat(value(0.0022985, Double.NaN, "1")).isEqualTo("0.002299");
+        assertThat(value(373.15, 0.0123, "°C")).isEqualTo("100.000 ± 0.012 °C");
+    }
+
+    private static String value(double value, double u, String unit) {
+        Marker marker = new Marker(
+                "",
+                "",
+                "figure",
+                OptionalDouble.empty(),
+                OptionalDouble.empty(),
+                value,
+                Double.isNaN(u) ? OptionalDouble.empty() : OptionalDouble.of(u),
+                unit,
+                "in words");
+        LotResult result =
+                new LotResult(List.of(), List.of(marker), List.of(), List.of(), List.of(), List.of(), List.of());
+        return LotPages.of("lot-1", "Heron 3", "L-17", result).figures().get(0).value();
     }
 
     private static JsonNode find(JsonNode charts, String title) {
