@@ -2,6 +2,7 @@ package nightlag.stages.superposition;
 
 import java.util.Arrays;
 import java.util.List;
+import java.util.OptionalDouble;
 import java.util.stream.IntStream;
 import nightlag.stages.numeric.Cholesky;
 import nightlag.stages.numeric.EvenSplines;
@@ -18,9 +19,6 @@ final class JointFit implements LevenbergMarquardt.Problem {
     /** How far a shift may go from where it starts before the splines are laid out anew, in ln ω. */
     private static final double REACH = 1.5 * Math.log(10);
 
-    /** The same in ln G. */
-    private static final double VERTICAL_REACH = Math.log(10);
-
     private static final int MOST_LAYOUTS = 4;
     private static final double ENOUGH = 1e-10;
     private static final int MOST_STEPS = 60;
@@ -33,16 +31,27 @@ final class JointFit implements LevenbergMarquardt.Problem {
     private final int anchor;
     private final double[] vertical;
     private final boolean fitVertical;
+    private final double verticalLimit;
     private final Smoothness smoothness;
     private final Weights weights;
     private EvenSplines splines = new EvenSplines(0, 1, 1);
 
-    private JointFit(
+    /**
+     * Isotherms that overlap.
+     *
+     * @param used the isotherms
+     * @param anchor the one that stays where it is
+     * @param vertical ln b; where it is fitted, where it starts, zero for the anchor
+     * @param verticalLimit the most that ln b may become; empty where it is not fitted
+     * @param weights of all points, one isotherm after the other
+     * @param smoothness of the curves
+     */
+    JointFit(
             List<LogIsotherm> used,
             int anchor,
             double[] vertical,
-            boolean fitVertical,
-            boolean useGiven,
+            OptionalDouble verticalLimit,
+            Weights weights,
             Smoothness smoothness) {
         this.readings = used.stream().flatMap(one -> one.readings().stream()).toList();
         this.isotherms = used.size();
@@ -53,35 +62,19 @@ final class JointFit implements LevenbergMarquardt.Problem {
             point += used.get(i).size();
         }
         this.anchor = anchor;
-        this.vertical = vertical;
-        this.fitVertical = fitVertical;
+        this.vertical = vertical.clone();
+        this.fitVertical = verticalLimit.isPresent();
+        this.verticalLimit = verticalLimit.orElse(0);
         this.smoothness = smoothness;
-        this.weights = Weights.of(readings, useGiven, smoothness);
+        this.weights = weights;
     }
 
     /**
-     * Fits isotherms that overlap.
+     * Fits from where shifts start.
      *
-     * @param used the isotherms
-     * @param anchor the one that stays where it is
-     * @param horizontal where the shifts start, ln a, zero for the anchor
-     * @param vertical ln b; where it is fitted, where it starts, zero for the anchor
-     * @param fitVertical whether ln b is fitted
-     * @param useGiven whether points are weighted by the uncertainties they come with, besides their scatter
-     * @param smoothness of the curves, and the scatter about them
+     * @param horizontal ln a, zero for the anchor
      */
-    static JointCurves fit(
-            List<LogIsotherm> used,
-            int anchor,
-            double[] horizontal,
-            double[] vertical,
-            boolean fitVertical,
-            boolean useGiven,
-            Smoothness smoothness) {
-        return new JointFit(used, anchor, vertical, fitVertical, useGiven, smoothness).search(horizontal);
-    }
-
-    private JointCurves search(double[] horizontal) {
+    JointCurves from(double[] horizontal) {
         double[] place = new double[isotherms + (fitVertical ? isotherms : 0)];
         System.arraycopy(horizontal, 0, place, 0, isotherms);
         if (fitVertical) {
@@ -94,16 +87,16 @@ final class JointFit implements LevenbergMarquardt.Problem {
             double[] lower = new double[free.length];
             double[] upper = new double[free.length];
             for (int k = 0; k < free.length; k++) {
-                double reach = k < isotherms - 1 ? REACH : VERTICAL_REACH;
-                lower[k] = free[k] - reach;
-                upper[k] = free[k] + reach;
+                boolean ofA = k < isotherms - 1;
+                lower[k] = ofA ? free[k] - REACH : -verticalLimit;
+                upper[k] = ofA ? free[k] + REACH : verticalLimit;
             }
             free = free.length == 0
                     ? free
                     : LevenbergMarquardt.minimise(this, free, lower, upper, ENOUGH, MOST_STEPS)
                             .parameters();
             inside = true;
-            for (int k = 0; k < free.length; k++) {
+            for (int k = 0; k < isotherms - 1; k++) {
                 inside &= free[k] > lower[k] && free[k] < upper[k];
             }
         }

@@ -5,6 +5,7 @@ import java.util.Arrays;
 import java.util.Comparator;
 import java.util.List;
 import java.util.Optional;
+import java.util.OptionalDouble;
 import java.util.stream.IntStream;
 import nightlag.stages.superposition.OwnCurves.OwnCurve;
 import nightlag.stages.superposition.OwnCurves.Prepared;
@@ -14,13 +15,19 @@ import nightlag.stages.superposition.SuperpositionPlan.VerticalShift;
  * The isotherms that overlap, about common curves and about their own.
  *
  * @param used which isotherms, rising
+ * @param limited whether vertical shifts had to be limited to a factor of two, or isotherms would have come apart
  * @param common all of them about common curves
  * @param ownSquares Σ rᵀ W r of the same points, each isotherm about its own curves
  * @param ownFreedom its degrees of freedom
  */
-record Superposed(int[] used, JointCurves common, double ownSquares, Freedom ownFreedom) {
+record Superposed(int[] used, boolean limited, JointCurves common, double ownSquares, Freedom ownFreedom) {
     /** Own curves that leave fewer degrees of freedom say nothing about smoothness and scatter. */
     private static final double LEAST_FREEDOM = 4;
+
+    private static final double UNLIMITED = Double.POSITIVE_INFINITY;
+
+    /** Most of ln b where a larger one would tear isotherms apart: a factor of two. */
+    private static final double LIMITED = Math.log(2);
 
     /**
      * Superposes isotherms.
@@ -38,15 +45,23 @@ record Superposed(int[] used, JointCurves common, double ownSquares, Freedom own
         StartingShifts pairs = StartingShifts.of(isotherms, own, vertical, false);
         StartingShifts pairsByPhase = fitVertical ? StartingShifts.of(isotherms, own, vertical, true) : pairs;
         List<Integer> chain = chain(isotherms, pairs, plan);
+        boolean limited = false;
         while (true) {
-            int[] used = chain.stream().mapToInt(Integer::intValue).toArray();
-            JointCurves common = fit(isotherms, used, List.of(pairs, pairsByPhase), vertical, plan, useGiven, own);
+            List<StartingShifts> starts = List.of(pairs, pairsByPhase);
+            JointCurves common = best(isotherms, chain, starts, vertical, UNLIMITED, plan, useGiven, own);
             List<Integer> overlapping = overlapping(isotherms, chain, common, plan);
+            if (fitVertical && overlapping.size() < chain.size()) {
+                common = best(isotherms, chain, starts, vertical, LIMITED, plan, useGiven, own);
+                overlapping = overlapping(isotherms, chain, common, plan);
+                limited = true;
+            }
             if (overlapping.size() == chain.size()) {
+                int[] used = chain.stream().mapToInt(Integer::intValue).toArray();
                 List<OwnCurve> each =
                         IntStream.of(used).mapToObj(own.curves()::get).toList();
                 return new Superposed(
                         used,
+                        limited,
                         common,
                         each.stream().mapToDouble(OwnCurve::residualSquares).sum(),
                         each.stream().map(OwnCurve::freedom).reduce(Freedom.NONE, Freedom::plus));
@@ -65,32 +80,38 @@ record Superposed(int[] used, JointCurves common, double ownSquares, Freedom own
         return Math.log1p(expansion) + Math.log(reference / temperatureK);
     }
 
-    private static JointCurves fit(
+    /** Of the fits from either start the best of those that leave most isotherms together: what is apart meets nothing. */
+    private static JointCurves best(
             List<LogIsotherm> isotherms,
-            int[] used,
+            List<Integer> chain,
             List<StartingShifts> starts,
             double[] vertical,
+            double verticalLimit,
             SuperpositionPlan plan,
             boolean useGiven,
             OwnCurves own) {
-        List<LogIsotherm> chosen = IntStream.of(used).mapToObj(isotherms::get).toList();
-        double[] up = IntStream.of(used).mapToDouble(i -> vertical[i]).toArray();
-        int anchor = used.length / 2;
+        List<LogIsotherm> chosen = chain.stream().map(isotherms::get).toList();
+        double[] up = chain.stream().mapToDouble(i -> vertical[i]).toArray();
+        int anchor = chain.size() / 2;
+        JointFit joint = new JointFit(
+                chosen,
+                anchor,
+                up,
+                plan.verticalShift() == VerticalShift.FITTED
+                        ? OptionalDouble.of(verticalLimit)
+                        : OptionalDouble.empty(),
+                Weights.of(
+                        chosen.stream().flatMap(one -> one.readings().stream()).toList(), useGiven, own.smoothness()),
+                own.smoothness());
         return starts.stream()
                 .distinct()
-                .map(start -> start.shiftsFrom(used[anchor]))
-                .map(shifts -> IntStream.of(used)
-                        .mapToDouble(i -> shifts[i].orElse(0.0))
-                        .toArray())
-                .map(shifts -> JointFit.fit(
-                        chosen,
-                        anchor,
-                        shifts,
-                        up,
-                        plan.verticalShift() == VerticalShift.FITTED,
-                        useGiven,
-                        own.smoothness()))
-                .min(Comparator.comparingDouble(JointCurves::cost))
+                .map(start -> start.shiftsFrom(chain.get(anchor)))
+                .map(shifts ->
+                        chain.stream().mapToDouble(i -> shifts[i].orElse(0.0)).toArray())
+                .map(joint::from)
+                .min(Comparator.<JointCurves>comparingInt(curves ->
+                                -overlapping(isotherms, chain, curves, plan).size())
+                        .thenComparingDouble(JointCurves::cost))
                 .orElseThrow();
     }
 

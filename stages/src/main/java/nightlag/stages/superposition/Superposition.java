@@ -72,6 +72,9 @@ public final class Superposition {
         if (used.length == 1) {
             return single(used[0]);
         }
+        if (superposed.limited()) {
+            notes.add(SuperpositionReason.VERTICAL_SHIFT_LIMITED.with());
+        }
         for (int i : used) {
             if (logs.get(i).missing() > 0) {
                 notes.add(SuperpositionReason.MODULI_WITHOUT_LOGARITHM.with(

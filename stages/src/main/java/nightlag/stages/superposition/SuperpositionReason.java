@@ -18,6 +18,9 @@ public enum SuperpositionReason implements ReasonCode {
             "the isotherm at {0} °C is left out of the master curve: its curves do not overlap with the others''"),
     /** {0} moduli, {1} °C of the isotherm. */
     MODULI_WITHOUT_LOGARITHM("{0} moduli of the isotherm at {1} °C are not above zero and have no part in the shifts"),
+    /** No parts. */
+    VERTICAL_SHIFT_LIMITED(
+            "vertical shifts are limited to a factor of 2: free ones would move isotherms apart until they no longer overlap"),
     /** {0} °C reference, {1} and {2} °C the isotherms beside it. */
     REFERENCE_INTERPOLATED(
             "no isotherm at the reference temperature of {0} °C and no law: shifts are moved to it along a straight line from"
