@@ -46,6 +46,11 @@ record LogIsotherm(double temperatureK, List<LogReading> readings, int missing) 
             return modulus > 0 ? Math.log(modulus) : Double.NaN;
         }
 
+        /** The point on reduced axes. */
+        LogReading moved(double lnA, double lnB) {
+            return new LogReading(x + lnA, new double[] {y[0] + lnB, y[1] + lnB}, covariance);
+        }
+
         boolean has(int modulus) {
             return !Double.isNaN(y[modulus]);
         }

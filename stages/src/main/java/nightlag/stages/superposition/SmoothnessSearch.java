@@ -14,10 +14,18 @@ final class SmoothnessSearch {
     private static final double LEAST_SCATTER = -6;
 
     private static final double MOST_SCATTER = 0;
-    private static final double LEAST_STIFFNESS = 0;
-    private static final double MOST_STIFFNESS = 10;
+    /** A single relaxation mode, the sharpest bend there is, has third differences of a tenth at this spacing of the splines. */
+    private static final double LEAST_STIFFNESS = 1.75;
+    /** Isotherms may each be as good as parabolas, the common curve is not. */
+    private static final double MOST_STIFFNESS = 4.75;
+
     private static final double[] COARSE_SCATTER = {LEAST_SCATTER, -4, -3, -2, -1};
-    private static final double[] COARSE_STIFFNESS = {0, 2, 4, 6, 8};
+    private static final double[] COARSE_STIFFNESS = {1.75, 2.75, 3.75, 4.75};
+    /** Scatter of ln G to be expected before any is seen, and to how many decades that is known. */
+    private static final double USUAL_SCATTER = -2;
+
+    private static final double USUAL_DECADES = 0.5;
+    private static final double LEAST_GAIN = 1e-6;
     private static final double FIRST_STEP = 1;
     private static final double LAST_STEP = 0.1;
 
@@ -86,11 +94,22 @@ final class SmoothnessSearch {
             }
         }
         Optional<OwnCurves> curves = OwnCurves.of(isotherms, useGiven, smoothness);
-        if (curves.isPresent() && curves.get().deviance() < least - 1e-6) {
+        double deviance = curves.map(OwnCurves::deviance).orElse(Double.POSITIVE_INFINITY) + unusual(smoothness);
+        if (deviance < least - LEAST_GAIN) {
             best = curves;
-            least = curves.get().deviance();
+            least = deviance;
             return true;
         }
         return false;
+    }
+
+    /** What scatter far from that of common instruments costs: few points could be met exactly by curves that bend enough. */
+    private double unusual(Smoothness smoothness) {
+        double cost = 0;
+        for (int modulus = 0; modulus < 2 && !useGiven; modulus++) {
+            double decades = (smoothness.scatter()[modulus] - USUAL_SCATTER) / USUAL_DECADES;
+            cost += decades * decades;
+        }
+        return cost;
     }
 }

@@ -55,24 +55,22 @@ public final class Superposition {
         int[] enough = IntStream.range(0, logs.size())
                 .filter(i -> logs.get(i).places() >= EvenSplines.SMOOTH_COEFFICIENTS)
                 .toArray();
-        if (isotherms.size() == 1 || enough.length == 0) {
-            return single(nearest(temperatures));
-        }
-        if (enough.length == 1) {
-            tooFew(logs, enough);
-            return single(enough[0]);
+        if (enough.length < 2) {
+            int alone = enough.length == 1 ? enough[0] : nearest(temperatures);
+            tooFew(logs, new int[] {alone});
+            return single(alone);
         }
         tooFew(logs, enough);
         Superposed superposed =
-                Superposed.of(IntStream.of(enough).mapToObj(logs::get).toList(), plan);
-        int[] used = IntStream.of(superposed.used()).map(k -> enough[k]).toArray();
+                Superposing.of(IntStream.of(enough).mapToObj(logs::get).toList(), plan);
+        int[] used = superposed.used().stream().mapToInt(k -> enough[k]).toArray();
         IntStream.of(enough)
                 .filter(i -> IntStream.of(used).noneMatch(k -> k == i))
                 .forEach(i -> notes.add(SuperpositionReason.ISOTHERM_WITHOUT_OVERLAP.with(celsius(temperatures[i]))));
         if (used.length == 1) {
             return single(used[0]);
         }
-        if (superposed.limited()) {
+        if (superposed.verticalLimited()) {
             notes.add(SuperpositionReason.VERTICAL_SHIFT_LIMITED.with());
         }
         for (int i : used) {
@@ -104,7 +102,7 @@ public final class Superposition {
         if (!ReferencePlace.isAt(isotherm.temperatureK(), plan.referenceTemperatureK())) {
             throw outside(isotherm.temperatureK(), isotherm.temperatureK());
         }
-        double lnB = Superposed.lnB(isotherm.temperatureK(), plan);
+        double lnB = Superposing.knownLnB(isotherm.temperatureK(), plan);
         List<ShiftFactor> shifts = new ArrayList<>();
         for (int i = 0; i < isotherms.size(); i++) {
             shifts.add(

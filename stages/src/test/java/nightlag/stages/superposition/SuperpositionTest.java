@@ -157,6 +157,42 @@ class SuperpositionTest {
         assertThat(curve.points()).hasSize(3 * 31);
     }
 
+    /** Three frequencies an isotherm, as in a temperature scan at three frequencies: nothing to compare, shifts all the same. */
+    @ParameterizedTest(name = "seed {0}")
+    @ValueSource(longs = {0, 1, 2})
+    void threeFrequenciesAnIsothermAreEnough(long seed) throws ReductionFault {
+        List<IsothermReadings> isotherms = new ArrayList<>();
+        for (IsothermReadings isotherm : ModelMaterial.LAUN.isotherms(
+                ModelMaterial.temperatures(9, 5), 10, 0.01, 0.01, 1, t -> 0, new Random(seed))) {
+            List<ModulusReading> all = isotherm.readings();
+            isotherms.add(new IsothermReadings(isotherm.temperatureK(), List.of(all.get(9), all.get(15), all.get(21))));
+        }
+
+        MasterCurve curve = Superposition.of(isotherms, PLAIN);
+
+        assertThat(curve.shifts())
+                .allSatisfy(shift ->
+                        assertThat(log10A(shift)).isCloseTo(ModelMaterial.log10A(shift.temperatureK()), within(0.15)));
+        assertThat(misfit(curve).method()).startsWith("superposes");
+    }
+
+    /** Without noise the verdict is certain, and a tolerance of the lab's own overrules it. */
+    @Test
+    void aSecondMechanismDoesNotSuperpose() throws ReductionFault {
+        List<IsothermReadings> isotherms = ModelMaterial.TWO_MECHANISMS.isotherms(
+                ModelMaterial.temperatures(9, 10), 10, 0, 0, 0.9, t -> 0, new Random(0));
+
+        assertThat(misfit(Superposition.of(isotherms, PLAIN)).method())
+                .startsWith("does not superpose")
+                .contains("p below 1e-6");
+        assertThat(misfit(Superposition.of(
+                                isotherms,
+                                new SuperpositionPlan(
+                                        REFERENCE_K, VerticalShift.NONE, OptionalDouble.empty(), ShiftLaw.NONE, 0.05)))
+                        .method())
+                .startsWith("superposes");
+    }
+
     @Test
     void oneIsothermIsItsOwnMasterCurve() throws ReductionFault {
         MasterCurve curve = Superposition.of(
