@@ -21,15 +21,18 @@ public final class SmoothCurve {
     private static final double COARSE_STEP = 100;
     private static final double FINE_STEP = Math.sqrt(10);
     private static final int FINE_STEPS = 4;
+    private static final double PROCESS_SHARE = 0.25;
 
     private final Wandering process;
     private final double[] x;
     private final double[][] polynomial;
     private final double[][] unitCovariance;
     private final double[] variance;
+    private final boolean known;
     private final Fit fit;
 
-    private SmoothCurve(double[] x, double[][] y, double[] variance, Wandering process) {
+    private SmoothCurve(double[] x, double[][] y, double[] variance, boolean known, Wandering process) {
+        this.known = known;
         this.x = x.clone();
         this.variance = variance.clone();
         this.process = process;
@@ -58,12 +61,12 @@ public final class SmoothCurve {
      */
     public record Local(double[] derivatives, double[][] noise, double[][] full) {
         /**
-         * Covariance for figures drawn where the curve is most curved, such as the place of a maximum: midway between the
-         * noise's and the full one. The full one holds for the process's average path. A peak bends less wildly than that,
-         * and intervals from the full covariance hold the truth too often.
+         * Covariance for figures drawn where the curve bends most, such as the place of a maximum: the noise's and a quarter of what
+         * the full one adds to it. The full one holds on average over all that the process may do. A single peak bends less wildly,
+         * and intervals from the full covariance hold its place too often.
          */
-        public double midwayCovariance(int i, int j) {
-            return (noise[i][j] + full[i][j]) / 2;
+        public double peakCovariance(int i, int j) {
+            return noise[i][j] + PROCESS_SHARE * (full[i][j] - noise[i][j]);
         }
     }
 
@@ -79,12 +82,26 @@ public final class SmoothCurve {
         return through(x, new double[][] {y}, variance, order, x[0], x[x.length - 1]);
     }
 
-    /** The same for curves that are equally smooth and known equally well, one array each, within a wider range. */
-    static SmoothCurve through(double[] x, double[][] y, double[] variance, int order, double from, double to) {
+    /**
+     * The same where the variances are sure and stay as they are: few values scatter too little or too much by chance, and
+     * widening them for it makes their uncertainty too large on average.
+     */
+    public static SmoothCurve throughKnown(double[] x, double[] y, double[] variance, int order) {
+        checkCount(x, order);
+        return new SmoothCurve(
+                x, new double[][] {y}, variance, true, new Wandering(order, x[0], x[x.length - 1] - x[0]));
+    }
+
+    private static void checkCount(double[] x, int order) {
         if (x.length <= order) {
             throw new IllegalArgumentException(x.length + " values for a process of order " + order);
         }
-        return new SmoothCurve(x, y, variance, new Wandering(order, from, to - from));
+    }
+
+    /** The same for curves that are equally smooth and known equally well, one array each, within a wider range. */
+    static SmoothCurve through(double[] x, double[][] y, double[] variance, int order, double from, double to) {
+        checkCount(x, order);
+        return new SmoothCurve(x, y, variance, false, new Wandering(order, from, to - from));
     }
 
     /** The i-th derivative of a curve at a place, i below the order. */
@@ -239,7 +256,7 @@ public final class SmoothCurve {
                 misfit += dot(rest, residuals[c]);
             }
             int freedom = curves * (x.length - polynomial.length);
-            this.widening = Math.max(1, misfit / freedom);
+            this.widening = known ? 1 : Math.max(1, misfit / freedom);
             this.deviance = curves * (spread.logDeterminant() + normal.logDeterminant())
                     + freedom * Math.log(widening)
                     + misfit / widening;

@@ -107,7 +107,7 @@ final class StorageOnset {
             TemperatureCurve window = curve.around(
                             steepestK - HALF_WIDTH * width, steepestK + HALF_WIDTH * width, FEWEST_AROUND_THE_FALL)
                     .atMost(TransitionPeaks.FINE_VALUES);
-            SmoothCurve smooth = SmoothCurve.through(
+            SmoothCurve smooth = SmoothCurve.throughKnown(
                     window.temperatures(),
                     window.logarithms(),
                     window.variances(),
@@ -147,9 +147,9 @@ final class StorageOnset {
         SmoothCurve.Local local = smooth.at(atK, 1);
         double y = local.derivatives()[0];
         double slope = local.derivatives()[1];
-        double yVariance = local.midwayCovariance(0, 0);
-        double slopeVariance = local.midwayCovariance(1, 1);
-        double both = local.midwayCovariance(0, 1);
+        double yVariance = local.peakCovariance(0, 0);
+        double slopeVariance = local.peakCovariance(1, 1);
+        double both = local.peakCovariance(0, 1);
         if (axis == SweepPlan.OnsetAxis.LOG) {
             return new Tangent(atK, y, slope, yVariance, slopeVariance, both);
         }

@@ -11,7 +11,8 @@ import nightlag.stages.moduli.ModulusPoint;
 
 /**
  * The logarithm of one figure of a temperature sweep against temperature, strictly rising, with u² of each value. Where any
- * point comes without an uncertainty all count alike, and the scatter of neighbours takes the place of u.
+ * point comes without an uncertainty all count alike. Where neighbours scatter clearly more than their u says, all are widened alike; that
+ * is what gives a u where there is none.
  */
 final class TemperatureCurve {
     /** u² of a logarithm below this is rounding. */
@@ -20,6 +21,8 @@ final class TemperatureCurve {
     private static final double SAME_K = 1e-6;
 
     private static final double MEDIAN_OF_A_NORMAL_SIZE = 0.6745;
+    /** Below this chance, or a curve that bends between the points, may be all there is to it. */
+    private static final double WORTH_WIDENING = 2;
 
     private final double[] temperatures;
     private final double[] logarithms;
@@ -84,28 +87,31 @@ final class TemperatureCurve {
         double[] temperatures =
                 readings.stream().mapToDouble(Reading::temperatureK).toArray();
         double[] logarithms = readings.stream().mapToDouble(Reading::logarithm).toArray();
-        double scatter = weighted ? 0 : scatter(temperatures, logarithms);
-        double[] variances = readings.stream()
-                .mapToDouble(reading -> weighted ? reading.variance().orElseThrow() : scatter)
+        double[] given = readings.stream()
+                .mapToDouble(reading -> weighted ? reading.variance().orElseThrow() : LEAST_VARIANCE)
                 .toArray();
+        double scatter = scatter(temperatures, logarithms, given);
+        double widening = weighted && scatter < WORTH_WIDENING ? 1 : scatter;
+        double[] variances =
+                Arrays.stream(given).map(variance -> variance * widening).toArray();
         return new TemperatureCurve(temperatures, logarithms, variances, weighted).averaged(SAME_K);
     }
 
     /**
-     * u² from the scatter: of each four neighbours the combination that is blind to any parabola, its weights of square sum 1. The
-     * median of the sizes is that of a normal error as long as less than half of them see the curve bend.
+     * By how much u² is larger than given, 1 or more: of each four neighbours the combination that is blind to any parabola, over its
+     * own u. The median of the sizes is that of a normal error as long as less than half of them see the curve bend.
      */
-    private static double scatter(double[] t, double[] y) {
+    private static double scatter(double[] t, double[] y, double[] variance) {
         double[] sizes = IntStream.range(0, t.length - 3)
                 .filter(k -> t[k] < t[k + 1] && t[k + 1] < t[k + 2] && t[k + 2] < t[k + 3])
-                .mapToDouble(k -> Math.abs(beyondAParabola(t, y, k)))
+                .mapToDouble(k -> Math.abs(beyondAParabola(t, y, variance, k)))
                 .sorted()
                 .toArray();
         double median = sizes.length == 0 ? 0 : (sizes[sizes.length / 2] + sizes[(sizes.length - 1) / 2]) / 2;
-        return Math.max(Math.pow(median / MEDIAN_OF_A_NORMAL_SIZE, 2), LEAST_VARIANCE);
+        return Math.max(Math.pow(median / MEDIAN_OF_A_NORMAL_SIZE, 2), 1);
     }
 
-    private static double beyondAParabola(double[] t, double[] y, int from) {
+    private static double beyondAParabola(double[] t, double[] y, double[] variance, int from) {
         double difference = 0;
         double squares = 0;
         for (int i = from; i < from + 4; i++) {
@@ -114,7 +120,7 @@ final class TemperatureCurve {
                 product *= j == i ? 1 : (t[i] - t[j]) / (t[from + 3] - t[from]);
             }
             difference += y[i] / product;
-            squares += 1 / (product * product);
+            squares += variance[i] / (product * product);
         }
         return difference / Math.sqrt(squares);
     }

@@ -95,14 +95,14 @@ final class TransitionPeaks {
     private static Peak placed(double nearK, TemperatureCurve all) {
         TemperatureCurve window = all.atMost(FINE_VALUES);
         SmoothCurve smooth =
-                SmoothCurve.through(window.temperatures(), window.logarithms(), window.variances(), FINE_ORDER);
+                SmoothCurve.throughKnown(window.temperatures(), window.logarithms(), window.variances(), FINE_ORDER);
         Optional<Double> top = nearestTop(smooth, window, nearK);
         if (top.isEmpty()) {
             return new Peak(nearK, Double.NaN, Double.NaN, all, false);
         }
         double at = top.get();
         SmoothCurve.Local local = smooth.at(at, 2);
-        double u = Math.sqrt(Math.max(local.midwayCovariance(1, 1), 0)) / Math.abs(local.derivatives()[2]);
+        double u = Math.sqrt(Math.max(local.peakCovariance(1, 1), 0)) / Math.abs(local.derivatives()[2]);
         double[] t = all.temperatures();
         boolean inside = at > t[1] && at < t[t.length - 2];
         boolean clear = u < WIDEST_U * (window.last() - window.first());
