@@ -10,7 +10,8 @@ import java.util.Optional;
  * polynomial of degree m − 1 plus an m-fold integrated Wiener process of unknown strength, observed with noise. Values that
  * the polynomial can follow leave the process out; values known better than that let it in. The strength is that of the
  * greatest restricted likelihood (Harville, J. Am. Stat. Assoc. 72 (1977) 320). Where the values scatter by more than their
- * uncertainties say, all of these are widened alike; variances far below the scatter thus leave the scatter to decide.
+ * uncertainties say, all of these are widened alike; variances far below the scatter thus leave the scatter to decide. How far
+ * the given variances are trusted is the caller's choice: {@link #through}, {@link #throughKnown}, {@link #throughBelieved}.
  */
 public final class SmoothCurve {
     /** Variance the weakest process tried makes over the whole range, over that of the mean of all values. */
@@ -18,21 +19,30 @@ public final class SmoothCurve {
     /** Variance the strongest makes over a mean interval, over the square of the range of the values. */
     private static final double STRONGEST = 100;
 
+    /** A smaller widening of u² may be the curve's own turns. */
+    private static final double BELIEVED = 4;
+
+    private static final int FEWEST_FOR_PARABOLA = 5;
     private static final double COARSE_STEP = 100;
     private static final double FINE_STEP = Math.sqrt(10);
     private static final int FINE_STEPS = 4;
     private static final double PROCESS_SHARE = 0.25;
 
-    private final Wandering process;
+    private final WienerProcess process;
     private final double[] x;
     private final double[][] polynomial;
     private final double[][] unitCovariance;
     private final double[] variance;
     private final boolean known;
+    /** No process is taken to be weaker. */
+    private final double least;
+
     private final Fit fit;
 
-    private SmoothCurve(double[] x, double[][] y, double[] variance, boolean known, Wandering process) {
+    private SmoothCurve(
+            double[] x, double[][] y, double[] variance, boolean known, double least, WienerProcess process) {
         this.known = known;
+        this.least = least;
         this.x = x.clone();
         this.variance = variance.clone();
         this.process = process;
@@ -51,6 +61,14 @@ public final class SmoothCurve {
         }
         fit = mostLikely(y);
     }
+
+    /**
+     * A figure of a curve.
+     *
+     * @param value the figure
+     * @param u its standard uncertainty
+     */
+    public record Estimate(double value, double u) {}
 
     /**
      * What is known of a curve at one place.
@@ -89,7 +107,28 @@ public final class SmoothCurve {
     public static SmoothCurve throughKnown(double[] x, double[] y, double[] variance, int order) {
         checkCount(x, order);
         return new SmoothCurve(
-                x, new double[][] {y}, variance, true, new Wandering(order, x[0], x[x.length - 1] - x[0]));
+                x, new double[][] {y}, variance, true, 0, new WienerProcess(order, x[0], x[x.length - 1] - x[0]));
+    }
+
+    /**
+     * The same where uncertainties that would be too small by less than a factor of two are believed, for values may turn
+     * faster than a smooth curve likes. The order is the {@linkplain #order usual} one.
+     *
+     * @param least how strong the process is at the least, in squares of the values over the fifth power of the places: what
+     *     the curve may do for all one knows beforehand; 0 where nothing is known
+     */
+    public static SmoothCurve throughBelieved(double[] x, double[] y, double[] variance, double least) {
+        int order = order(x.length);
+        checkCount(x, order);
+        double[][] values = {y};
+        WienerProcess process = new WienerProcess(order, x[0], x[x.length - 1] - x[0]);
+        SmoothCurve free = new SmoothCurve(x, values, variance, false, least, process);
+        return free.widening() < BELIEVED ? new SmoothCurve(x, values, variance, true, least, process) : free;
+    }
+
+    /** The usual order: 3, a spline of fifth degree; of three or four values, which tell too little, 2, the cubic spline. */
+    static int order(int values) {
+        return values < FEWEST_FOR_PARABOLA ? 2 : 3;
     }
 
     private static void checkCount(double[] x, int order) {
@@ -101,7 +140,7 @@ public final class SmoothCurve {
     /** The same for curves that are equally smooth and known equally well, one array each, within a wider range. */
     static SmoothCurve through(double[] x, double[][] y, double[] variance, int order, double from, double to) {
         checkCount(x, order);
-        return new SmoothCurve(x, y, variance, false, new Wandering(order, from, to - from));
+        return new SmoothCurve(x, y, variance, false, 0, new WienerProcess(order, from, to - from));
     }
 
     /** The i-th derivative of a curve at a place, i below the order. */
@@ -115,13 +154,18 @@ public final class SmoothCurve {
         return derivative(0, place, i);
     }
 
+    /** The i-th derivative of the only curve at a place with its uncertainty, as {@link #fullVariance} has it. */
+    public Estimate estimate(double place, int i) {
+        return new Estimate(derivative(place, i), Math.sqrt(fullVariance(place, i)));
+    }
+
     /** By how much u² of the values is larger than was given, their scatter being so. */
-    double widening() {
+    public double widening() {
         return fit.widening;
     }
 
     /** How much the i-th derivative at a place moves with each value. */
-    double[] weights(double place, int i) {
+    public double[] weights(double place, int i) {
         return new Estimator(place, i).weights;
     }
 
@@ -158,7 +202,8 @@ public final class SmoothCurve {
                 Arrays.stream(y).mapToDouble(SmoothCurve::squaredRange).max().orElseThrow();
         double interval = process.span() / (x.length - 1);
         double high = Math.max(low, STRONGEST * range / process.varianceAfter(interval));
-        Fit best = fit(y, low).orElseThrow();
+        Fit weakest = fit(y, low).orElseThrow();
+        Fit best = least > low ? fit(y, least).orElse(weakest) : weakest;
         for (double strength = low * COARSE_STEP; strength <= high; strength *= COARSE_STEP) {
             best = better(best, y, strength);
         }
@@ -177,7 +222,9 @@ public final class SmoothCurve {
 
     /** The more likely of a fit and that of another strength. */
     private Fit better(Fit best, double[][] y, double strength) {
-        return fit(y, strength).filter(other -> other.deviance < best.deviance).orElse(best);
+        return fit(y, strength)
+                .filter(other -> other.deviance < best.deviance && other.strength * other.widening >= least)
+                .orElse(best);
     }
 
     /** Empty where the process is so strong that the arithmetic gives out. */
@@ -303,63 +350,6 @@ public final class SmoothCurve {
                     * (fit.strength * process.covariance(place, other.place, times, other.times)
                             - dot(with, other.solved)
                             + dot(lacking, fit.normal.solve(other.lacking)));
-        }
-    }
-
-    /**
-     * An integrated Wiener process that starts at a place, and the polynomial it is added to.
-     *
-     * @param order how often it is integrated
-     * @param origin where it starts
-     * @param span the unit of the polynomial
-     */
-    private record Wandering(int order, double origin, double span) {
-        double varianceAfter(double distance) {
-            return covariance(origin + distance, origin + distance, 0, 0);
-        }
-
-        /**
-         * Covariance per strength, differentiated i times by s and j times by t, both counted from the origin:
-         * ∫ (s − w)^(m−1−i) (t − w)^(m−1−j)/((m−1−i)! (m−1−j)!) dw from 0 to the smaller of s and t.
-         */
-        double covariance(double placeS, double placeT, int i, int j) {
-            double s = placeS - origin;
-            double t = placeT - origin;
-            double end = Math.min(s, t);
-            int p = order - 1 - (s <= t ? i : j);
-            int r = order - 1 - (s <= t ? j : i);
-            double distance = Math.abs(t - s);
-            // ∫ w^p (w + d)^r dw from 0 to the end
-            double sum = 0;
-            double binomial = 1;
-            double power = Math.pow(end, p + 1);
-            for (int k = 0; k <= r; k++) {
-                sum += binomial * power * Math.pow(distance, r - k) / (p + k + 1);
-                binomial = binomial * (r - k) / (k + 1);
-                power *= end;
-            }
-            return sum / (factorial(p) * factorial(r));
-        }
-
-        private static double factorial(int n) {
-            double product = 1;
-            for (int k = 2; k <= n; k++) {
-                product *= k;
-            }
-            return product;
-        }
-
-        /** The powers of the polynomial at a place, in units of the span, or their derivatives by the place. */
-        double[] powers(double place, int derivative) {
-            double[] powers = new double[order];
-            double part = (place - origin) / span;
-            for (int p = derivative; p < order; p++) {
-                powers[p] = factorial(p)
-                        / factorial(p - derivative)
-                        * Math.pow(part, p - derivative)
-                        / Math.pow(span, derivative);
-            }
-            return powers;
         }
     }
 }

@@ -10,8 +10,8 @@ import nightlag.stages.fault.ReasonCode;
 import nightlag.stages.moduli.Findings;
 import nightlag.stages.moduli.Marker;
 import nightlag.stages.moduli.ModulusPoint;
-import nightlag.stages.numeric.SmoothSlope.Curve;
-import nightlag.stages.numeric.SmoothSlope.Estimate;
+import nightlag.stages.numeric.SmoothCurve;
+import nightlag.stages.numeric.SmoothCurve.Estimate;
 import nightlag.stages.sweep.LogModuli.Figure;
 import nightlag.stages.sweep.Zeros.Zero;
 
@@ -90,7 +90,7 @@ final class AmplitudeMarkers {
             return;
         }
         int first = (int) Arrays.stream(logs).filter(log -> log <= end).count();
-        Curve curve = data.curve(Figure.MAGNITUDE);
+        SmoothCurve curve = data.curve(Figure.MAGNITUDE);
         FirstDecade mean = new FirstDecade(data, curve, first);
         Zeros below = Zeros.of(mean.less(Math.log(1 - LEAVES)), logs);
         Zeros above = Zeros.of(mean.less(Math.log(1 + LEAVES)), logs);
@@ -125,13 +125,13 @@ final class AmplitudeMarkers {
 
     /** The mean |G*| of the first decade of strain, and what its noise shares with the curve's. */
     private static final class FirstDecade {
-        private final Curve curve;
+        private final SmoothCurve curve;
         private final double logMean;
         private final double variance;
         /** Of ln mean with each value of ln |G*|. */
         private final double[] covariance;
 
-        FirstDecade(LogModuli data, Curve curve, int points) {
+        FirstDecade(LogModuli data, SmoothCurve curve, int points) {
             this.curve = curve;
             double[] logs = data.values(Figure.MAGNITUDE);
             double[] noise = data.variances(Figure.MAGNITUDE);
@@ -158,7 +158,7 @@ final class AmplitudeMarkers {
         Zeros.Figure less(double offset) {
             return strain -> {
                 Estimate own = curve.estimate(strain, 0);
-                double[] weights = curve.weights(strain);
+                double[] weights = curve.weights(strain, 0);
                 double shared = 0;
                 for (int i = 0; i < weights.length; i++) {
                     shared += weights[i] * covariance[i];
@@ -171,12 +171,12 @@ final class AmplitudeMarkers {
     }
 
     private void crossings() {
-        Curve lossFactor = data.curve(Figure.LOSS_FACTOR);
+        SmoothCurve lossFactor = data.curve(Figure.LOSS_FACTOR);
         Zeros zeros = Zeros.of(at -> lossFactor.estimate(at, 0), data.places());
-        Curve magnitude = data.curve(Figure.MAGNITUDE);
+        SmoothCurve magnitude = data.curve(Figure.MAGNITUDE);
         for (Zero zero : zeros.zeros()) {
             double strain = Math.exp(zero.place());
-            double stress = strain * Math.exp(magnitude.at(zero.place(), 0));
+            double stress = strain * Math.exp(magnitude.derivative(zero.place(), 0));
             double u = Crossing.u(data, lossFactor, Figure.MAGNITUDE, magnitude, zero, 1);
             markers.add(place.marker(
                     "crossover_strain",

@@ -1,6 +1,6 @@
 package nightlag.stages.sweep;
 
-import nightlag.stages.numeric.SmoothSlope.Curve;
+import nightlag.stages.numeric.SmoothCurve;
 import nightlag.stages.sweep.LogModuli.Figure;
 import nightlag.stages.sweep.Zeros.Zero;
 
@@ -19,13 +19,14 @@ final class Crossing {
      * @param zero the zero of ln tan δ
      * @param abscissae k, how often the place itself is in the figure
      */
-    static double u(LogModuli near, Curve lossFactor, Figure figure, Curve curve, Zero zero, int abscissae) {
+    static double u(
+            LogModuli near, SmoothCurve lossFactor, Figure figure, SmoothCurve curve, Zero zero, int abscissae) {
         double place = zero.place();
-        double slope = curve.at(place, 1) + abscissae;
+        double slope = curve.derivative(place, 1) + abscissae;
         double shared = near.covariance(figure, curve, Figure.LOSS_FACTOR, lossFactor, place);
-        double own = curve.u(place, 0);
+        double own = curve.estimate(place, 0).u();
         double moved = slope * zero.u();
-        double correlation = -2 * slope / lossFactor.at(place, 1) * shared;
+        double correlation = -2 * slope / lossFactor.derivative(place, 1) * shared;
         // a correlation cannot take away more than all of it
         return Math.sqrt(
                 Math.max(own * own + moved * moved + correlation, (own - Math.abs(moved)) * (own - Math.abs(moved))));

@@ -8,7 +8,7 @@ import nightlag.stages.fault.Reason;
 import nightlag.stages.moduli.Findings;
 import nightlag.stages.moduli.Marker;
 import nightlag.stages.moduli.ModulusReading;
-import nightlag.stages.numeric.SmoothSlope.Curve;
+import nightlag.stages.numeric.SmoothCurve;
 import nightlag.stages.sweep.LogModuli.Figure;
 import nightlag.stages.sweep.Zeros.Zero;
 
@@ -63,7 +63,7 @@ public final class FrequencyMarkers {
         List<Zeros> crossings = new ArrayList<>();
         double lowest = Double.POSITIVE_INFINITY;
         for (LogModuli.Stretch stretch : data.stretches()) {
-            Curve lossFactor = stretch.data().curve(Figure.LOSS_FACTOR);
+            SmoothCurve lossFactor = stretch.data().curve(Figure.LOSS_FACTOR);
             Zeros zeros =
                     Zeros.of(at -> lossFactor.estimate(at, 0), stretch.data().places());
             crossings.add(zeros);
@@ -73,7 +73,7 @@ public final class FrequencyMarkers {
             for (Zero zero : Zeros.of(
                             at -> lossFactor.estimate(at, 1), stretch.data().places())
                     .zeros()) {
-                double depth = lossFactor.at(zero.place(), 0);
+                double depth = lossFactor.derivative(zero.place(), 0);
                 if (zero.rising() && stretch.owns(zero.place()) && depth < 0 && depth < lowest) {
                     lowest = depth;
                     plateaus.add(plateau(stretch.data(), zero));
@@ -92,7 +92,7 @@ public final class FrequencyMarkers {
                 .thenComparing(marker -> marker.frequencyHz().orElseThrow()));
     }
 
-    private void crossing(LogModuli near, Curve lossFactor, Zero zero) {
+    private void crossing(LogModuli near, SmoothCurve lossFactor, Zero zero) {
         double angularFrequency = Math.exp(zero.place());
         markers.add(marker(
                 "crossover_angular_frequency",
@@ -101,8 +101,8 @@ public final class FrequencyMarkers {
                 angularFrequency * zero.u(),
                 "rad/s",
                 "tan δ = 1, by a smooth curve of ln tan δ over ln ω"));
-        Curve magnitude = near.curve(Figure.MAGNITUDE);
-        double modulus = Math.exp(magnitude.at(zero.place(), 0)) * Math.sqrt(0.5);
+        SmoothCurve magnitude = near.curve(Figure.MAGNITUDE);
+        double modulus = Math.exp(magnitude.derivative(zero.place(), 0)) * Math.sqrt(0.5);
         double u = Crossing.u(near, lossFactor, Figure.MAGNITUDE, magnitude, zero, 0);
         markers.add(marker(
                 "crossover_modulus",
@@ -114,9 +114,9 @@ public final class FrequencyMarkers {
     }
 
     private Marker plateau(LogModuli near, Zero zero) {
-        Curve storage = near.curve(Figure.STORAGE);
-        double modulus = Math.exp(storage.at(zero.place(), 0));
-        double u = Math.hypot(storage.u(zero.place(), 0), storage.at(zero.place(), 1) * zero.u());
+        SmoothCurve storage = near.curve(Figure.STORAGE);
+        double modulus = Math.exp(storage.derivative(zero.place(), 0));
+        double u = Math.hypot(storage.estimate(zero.place(), 0).u(), storage.derivative(zero.place(), 1) * zero.u());
         return marker(
                 "plateau_modulus",
                 Math.exp(zero.place()),

@@ -6,8 +6,7 @@ import java.util.Comparator;
 import java.util.List;
 import nightlag.stages.moduli.Moduli;
 import nightlag.stages.moduli.ModuliCovariance;
-import nightlag.stages.numeric.SmoothSlope;
-import nightlag.stages.numeric.SmoothSlope.Curve;
+import nightlag.stages.numeric.SmoothCurve;
 
 /**
  * Logarithms of the moduli over the logarithm of frequency or strain, ready for smooth curves through them. Moduli within a
@@ -256,15 +255,15 @@ final class LogModuli {
     }
 
     /** The smooth curve of a figure. */
-    Curve curve(Figure figure) {
-        return SmoothSlope.curve(x, values(figure), variances(figure), leastStrength);
+    SmoothCurve curve(Figure figure) {
+        return SmoothCurve.throughBelieved(x, values(figure), variances(figure), leastStrength);
     }
 
     /** The covariance of what noise does to the curves of two figures at a place. */
-    double covariance(Figure one, Curve oneCurve, Figure other, Curve otherCurve, double place) {
+    double covariance(Figure one, SmoothCurve oneCurve, Figure other, SmoothCurve otherCurve, double place) {
         double[] noise = covariances(one, other);
-        double[] first = oneCurve.weights(place);
-        double[] second = otherCurve.weights(place);
+        double[] first = oneCurve.weights(place, 0);
+        double[] second = otherCurve.weights(place, 0);
         double sum = 0;
         for (int i = 0; i < noise.length; i++) {
             sum += first[i] * second[i] * noise[i];

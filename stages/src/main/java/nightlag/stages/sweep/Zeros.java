@@ -3,7 +3,7 @@ package nightlag.stages.sweep;
 import java.util.ArrayList;
 import java.util.List;
 import java.util.function.DoubleUnaryOperator;
-import nightlag.stages.numeric.SmoothSlope.Estimate;
+import nightlag.stages.numeric.SmoothCurve.Estimate;
 
 /**
  * Where a smooth figure passes zero. It does so only where it stands out from zero by three of its standard uncertainties on
