@@ -50,7 +50,7 @@ public final class Conclude {
         LotSpectrum spectrum = curve.flatMap(whole -> plan.spectrum().map(wanted -> LotSpectrum.of(whole, wanted)))
                 .orElse(LotSpectrum.NONE);
         notes.addAll(spectrum.notes());
-        Findings markers = LotMarkers.of(sweeps.sweeps(), curve);
+        Findings markers = LotMarkers.of(sweeps.sweeps(), plan.sweeps(), curve);
         return new LotResult(
                 lot.points(),
                 Stream.concat(markers.markers().stream(), spectrum.markers().stream())

@@ -5,7 +5,8 @@ import nightlag.stages.fault.ReasonCode;
 /** What could not be concluded about a lot, and why. */
 public enum ConclusionReason implements ReasonCode {
     /** Nothing. */
-    CURVE_NO_POINTS("no master curve and no spectrum: the lot has no usable point with a temperature and a frequency"),
+    CURVE_NO_POINTS(
+            "no master curve and no spectrum: the lot has no usable point with a frequency at a temperature that rests"),
     /** How many temperatures. */
     CURVE_SEVERAL_TEMPERATURES(
             "no spectrum: frequency sweeps at {0} temperatures and no reference temperature to bring them to"),

@@ -5,6 +5,7 @@ import java.util.LinkedHashMap;
 import java.util.List;
 import java.util.Map;
 import java.util.Optional;
+import java.util.stream.Collectors;
 import nightlag.stages.geometry.DeformationMode;
 import nightlag.stages.moduli.Findings;
 import nightlag.stages.moduli.ModulusReading;
@@ -13,6 +14,7 @@ import nightlag.stages.superposition.ShiftFactor;
 import nightlag.stages.sweep.FlowCurve;
 import nightlag.stages.sweep.FrequencyMarkers;
 import nightlag.stages.sweep.GelPoint;
+import nightlag.stages.sweep.GlassTransition;
 import nightlag.stages.sweep.Isotherm;
 import nightlag.stages.sweep.MarkerPlace;
 import nightlag.stages.sweep.Sweep;
@@ -33,11 +35,13 @@ final class LotMarkers {
      * Looks for them.
      *
      * @param sweeps the lot's sweeps
+     * @param plan how points became sweeps
      * @param curve its curve, where one was asked for and could be had
      */
-    static Findings of(List<Sweep> sweeps, Optional<LotCurve> curve) {
+    static Findings of(List<Sweep> sweeps, SweepPlan plan, Optional<LotCurve> curve) {
         LotMarkers markers = new LotMarkers(sweeps);
         sweeps.forEach(sweep -> markers.found.add(SweepMarkers.of(sweep)));
+        markers.transitions(plan);
         markers.gelPoints();
         // of one isotherm alone its own sweeps already say what the curve would
         Optional<LotCurve> shifted = curve.filter(LotMarkers::isShifted);
@@ -79,19 +83,28 @@ final class LotMarkers {
         }
     }
 
+    /** The transitions of ramps, at each frequency and together. */
+    private void transitions(SweepPlan plan) {
+        byName(SweepPlan.Kind.TEMPERATURE)
+                .values()
+                .forEach(frequencies -> found.add(GlassTransition.of(frequencies, plan)));
+    }
+
     /** Where one specimen was followed at several frequencies. */
     private void gelPoints() {
         for (SweepPlan.Kind kind : List.of(SweepPlan.Kind.TIME, SweepPlan.Kind.TEMPERATURE)) {
-            Map<SweepName, List<Sweep>> together = new LinkedHashMap<>();
-            sweeps.stream()
-                    .filter(sweep -> sweep.kind() == kind)
-                    .forEach(sweep -> together.computeIfAbsent(sweep.name(), name -> new ArrayList<>())
-                            .add(sweep));
-            together.forEach((name, members) -> {
-                if (members.size() > 1) {
-                    found.add(GelPoint.of(name, members, kind));
+            byName(kind).forEach((name, frequencies) -> {
+                if (frequencies.size() > 1) {
+                    found.add(GelPoint.of(name, frequencies, kind));
                 }
             });
         }
+    }
+
+    /** The sweeps of one kind, those that were recorded as one together. */
+    private Map<SweepName, List<Sweep>> byName(SweepPlan.Kind kind) {
+        return sweeps.stream()
+                .filter(sweep -> sweep.kind() == kind)
+                .collect(Collectors.groupingBy(Sweep::name, LinkedHashMap::new, Collectors.toList()));
     }
 }
