@@ -10,6 +10,11 @@ public enum SpectrumReason implements ReasonCode {
     SPECTRUM_TOO_MANY_MODES("no spectrum: {0} modes are asked for, but {1} points carry at most {2}"),
     /** Nothing. */
     SPECTRUM_NO_MODULUS("no spectrum: every modulus is zero"),
+    /** Specimen, sweep, frequencies found, frequencies needed. */
+    KRAMERS_KRONIG_TOO_FEW_FREQUENCIES(
+            "specimen {0}, sweep {1}: no Kramers–Kronig check, too few different frequencies, {2} (at least {3} are needed)"),
+    /** Specimen, sweep. */
+    KRAMERS_KRONIG_NO_MODULUS("specimen {0}, sweep {1}: no Kramers–Kronig check, every modulus is zero"),
     /** Nothing. */
     EQUILIBRIUM_MODULUS_ZERO(
             "the fitted equilibrium modulus is zero: the spectrum is that of a liquid, with a viscosity in its place");

@@ -186,12 +186,45 @@ final class WeightedReadings {
         return Arrays.stream(angularFrequencies).max().orElseThrow();
     }
 
+    double decades() {
+        return Math.log10(highestFrequency() / lowestFrequency());
+    }
+
     double largestModulus() {
         return largest;
     }
 
     double[] target() {
         return target.clone();
+    }
+
+    double[] angularFrequencies() {
+        return angularFrequencies.clone();
+    }
+
+    /** The modulus behind the two rows of a reading. */
+    Complex unweighted(double[] rows, int i) {
+        double storage = rows[2 * i] / first[i];
+        return new Complex(storage, (rows[2 * i + 1] - mixed[i] * storage) / second[i]);
+    }
+
+    /** What moduli, one a reading, add to each row. */
+    double[] weighted(List<Complex> moduli) {
+        double[] column = new double[rows()];
+        for (int i = 0; i < angularFrequencies.length; i++) {
+            put(column, i, moduli.get(i).re(), moduli.get(i).im());
+        }
+        return column;
+    }
+
+    /** What a viscosity that follows at once adds to each row, scaled to 1 Pa at the highest frequency. */
+    double[] viscosity() {
+        double highest = highestFrequency();
+        double[] column = new double[rows()];
+        for (int i = 0; i < angularFrequencies.length; i++) {
+            put(column, i, 0, angularFrequencies[i] / highest);
+        }
+        return column;
     }
 
     /** What a mode of unit strength adds to each row. */
