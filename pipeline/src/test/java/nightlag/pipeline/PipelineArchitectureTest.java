@@ -68,6 +68,15 @@ class PipelineArchitectureTest {
             .dependOnClassesThat()
             .belongToAnyOf(Archive.class, IntakeScan.class, LotTables.class, NightTables.class, RawFileDecoder.class);
 
+    /** Expressions are compiled there and handed over as functions. */
+    @ArchTest
+    static final ArchRule onlyTheConfigurationKnowsTheLanguageOfExpressions = noClasses()
+            .that()
+            .resideOutsideOfPackage("nightlag.pipeline.config..")
+            .should()
+            .dependOnClassesThat()
+            .resideInAPackage("com.ezylang..");
+
     private static Room room(String name) {
         return new Room(name);
     }

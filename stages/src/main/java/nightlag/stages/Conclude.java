@@ -9,6 +9,8 @@ import nightlag.stages.fault.Reason;
 import nightlag.stages.fault.ReductionFault;
 import nightlag.stages.moduli.Findings;
 import nightlag.stages.moduli.Marker;
+import nightlag.stages.moduli.ModulusPoint;
+import nightlag.stages.moduli.Quality;
 import nightlag.stages.spectrum.SpectrumRow;
 import nightlag.stages.superposition.MasterCurve;
 import nightlag.stages.sweep.NaturalOrder;
@@ -51,16 +53,23 @@ public final class Conclude {
                 .orElse(LotSpectrum.NONE);
         notes.addAll(spectrum.notes());
         Findings markers = LotMarkers.of(sweeps.sweeps(), plan.sweeps(), curve);
+        List<ModulusPoint> usable = lot.points().stream()
+                .filter(point -> point.quality() != Quality.UNUSABLE)
+                .toList();
+        LotFigures figures = LotFigures.of(usable, lot.amplitudeSweeps(), plan.ownFigures());
+        notes.addAll(figures.findings().notes());
         return new LotResult(
                 lot.points(),
-                Stream.concat(markers.markers().stream(), spectrum.markers().stream())
+                Stream.of(markers.markers(), spectrum.markers(), figures.findings().markers())
+                        .flatMap(List::stream)
                         .sorted(MARKER_ORDER)
                         .toList(),
                 master.map(MasterCurve::shifts).orElse(List.of()),
                 master.map(MasterCurve::points).orElse(List.of()),
                 spectrum.rows().stream().sorted(ROW_ORDER).toList(),
                 notes,
-                markers.notes());
+                markers.notes(),
+                figures.rows());
     }
 
     /** The curve that a master curve or a spectrum is asked of; what there is to say of it goes into the notes. */

@@ -8,6 +8,7 @@ import nightlag.stages.geometry.Dimension;
 import nightlag.stages.response.ResponsePlan;
 import nightlag.stages.spectrum.SpectrumPlan;
 import nightlag.stages.superposition.SuperpositionPlan;
+import nightlag.stages.sweep.OwnFigures;
 import nightlag.stages.sweep.SweepPlan;
 
 /**
@@ -19,6 +20,7 @@ import nightlag.stages.sweep.SweepPlan;
  * @param responses predictions asked for, in the order of the configuration
  * @param limits limits, in the order of the configuration
  * @param dimensionUncertainty standard uncertainties of dimensions common to many records, SI
+ * @param ownFigures figures the grade defines for itself
  */
 public record ConclusionPlan(
         SweepPlan sweeps,
@@ -26,11 +28,23 @@ public record ConclusionPlan(
         Optional<SpectrumPlan> spectrum,
         List<ResponsePlan> responses,
         List<LimitPlan> limits,
-        Map<Dimension, Double> dimensionUncertainty) {
+        Map<Dimension, Double> dimensionUncertainty,
+        OwnFigures ownFigures) {
     /** Copies the collections. */
     public ConclusionPlan {
         responses = List.copyOf(responses);
         limits = List.copyOf(limits);
         dimensionUncertainty = Map.copyOf(dimensionUncertainty);
+    }
+
+    /** A plan without figures of the grade's own. */
+    public ConclusionPlan(
+            SweepPlan sweeps,
+            Optional<SuperpositionPlan> superposition,
+            Optional<SpectrumPlan> spectrum,
+            List<ResponsePlan> responses,
+            List<LimitPlan> limits,
+            Map<Dimension, Double> dimensionUncertainty) {
+        this(sweeps, superposition, spectrum, responses, limits, dimensionUncertainty, OwnFigures.NONE);
     }
 }

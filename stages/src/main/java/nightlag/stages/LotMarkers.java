@@ -9,6 +9,7 @@ import java.util.stream.Collectors;
 import nightlag.stages.geometry.DeformationMode;
 import nightlag.stages.moduli.Findings;
 import nightlag.stages.moduli.ModulusReading;
+import nightlag.stages.spectrum.KramersKronig;
 import nightlag.stages.superposition.MasterCurve;
 import nightlag.stages.superposition.ShiftFactor;
 import nightlag.stages.sweep.FlowCurve;
@@ -40,7 +41,10 @@ final class LotMarkers {
      */
     static Findings of(List<Sweep> sweeps, SweepPlan plan, Optional<LotCurve> curve) {
         LotMarkers markers = new LotMarkers(sweeps);
-        sweeps.forEach(sweep -> markers.found.add(SweepMarkers.of(sweep)));
+        sweeps.forEach(sweep -> {
+            markers.found.add(SweepMarkers.of(sweep));
+            markers.found.add(KramersKronig.of(sweep));
+        });
         markers.transitions(plan);
         markers.gelPoints();
         // of one isotherm alone its own sweeps already say what the curve would

@@ -2,6 +2,7 @@ package nightlag.stages;
 
 import java.util.List;
 import nightlag.stages.fault.Reason;
+import nightlag.stages.moduli.FigureRow;
 import nightlag.stages.moduli.Marker;
 import nightlag.stages.moduli.ModulusPoint;
 import nightlag.stages.spectrum.SpectrumRow;
@@ -18,6 +19,7 @@ import nightlag.stages.superposition.ShiftFactor;
  * @param spectrum spectra
  * @param notes what was asked for and could not be had, or is unusual, and why
  * @param absent characteristic figures that the data do not support, and why; most materials lack some
+ * @param derived the grade's own figures of each point
  */
 public record LotResult(
         List<ModulusPoint> points,
@@ -26,7 +28,8 @@ public record LotResult(
         List<MasterPoint> masterCurve,
         List<SpectrumRow> spectrum,
         List<Reason> notes,
-        List<Reason> absent) {
+        List<Reason> absent,
+        List<FigureRow> derived) {
     /** Nothing is known of the lot, not even a point. */
     public static final LotResult EMPTY =
             new LotResult(List.of(), List.of(), List.of(), List.of(), List.of(), List.of(), List.of());
@@ -40,5 +43,18 @@ public record LotResult(
         spectrum = List.copyOf(spectrum);
         notes = List.copyOf(notes);
         absent = List.copyOf(absent);
+        derived = List.copyOf(derived);
+    }
+
+    /** A result without figures of the grade's own. */
+    public LotResult(
+            List<ModulusPoint> points,
+            List<Marker> markers,
+            List<ShiftFactor> shiftFactors,
+            List<MasterPoint> masterCurve,
+            List<SpectrumRow> spectrum,
+            List<Reason> notes,
+            List<Reason> absent) {
+        this(points, markers, shiftFactors, masterCurve, spectrum, notes, absent, List.of());
     }
 }

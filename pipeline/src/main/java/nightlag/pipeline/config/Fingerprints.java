@@ -9,6 +9,7 @@ import java.util.OptionalDouble;
 import java.util.OptionalInt;
 import java.util.TreeMap;
 import java.util.regex.Pattern;
+import nightlag.stages.moduli.PointFunction;
 import org.apache.commons.codec.digest.DigestUtils;
 
 /**
@@ -78,6 +79,9 @@ public final class Fingerprints {
     private static void writeRecord(Record record, StringBuilder out) {
         out.append(record.getClass().getSimpleName()).append('(');
         for (RecordComponent component : record.getClass().getRecordComponents()) {
+            if (component.getType() == PointFunction.class) {
+                continue; // the expression it was compiled from stands beside it
+            }
             out.append(component.getName()).append('=');
             try {
                 write(component.getAccessor().invoke(record), out);

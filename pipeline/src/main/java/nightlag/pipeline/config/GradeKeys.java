@@ -11,6 +11,7 @@ import nightlag.pipeline.config.KeyType.Text;
 import nightlag.pipeline.config.KeyType.Whole;
 import nightlag.stages.geometry.Dimension;
 import nightlag.stages.superposition.SuperpositionPlan;
+import nightlag.stages.sweep.FigureMarkerPlan;
 import nightlag.stages.sweep.SweepPlan;
 import nightlag.stages.waveform.Drift;
 import nightlag.stages.waveform.FrequencySource;
@@ -175,21 +176,79 @@ final class GradeKeys {
             "A prediction; any number of them.",
             List.of(RESPONSE_NAME, RESPONSE_TEMPERATURE, STRESS, STRAIN, UNTIL));
 
+    static final Key DERIVED_NAME = Key.required(
+            "name",
+            new Text(),
+            "What it is called in `derived.csv`, in a `[[marker]]` and in a `[[limit]]`: small letters, digits and `_`.");
+    static final Key EXPRESSION = Key.required(
+            "expression",
+            new Text(),
+            "How it follows from the columns of `points`, named without their unit's suffix: see below.");
+    static final Key DERIVED_UNIT = Key.required(
+            "unit",
+            new KeyType.Word(
+                    Arrays.stream(OwnUnit.values()).map(OwnUnit::symbol).toList()),
+            "The unit its values are in. Nothing is converted: the columns' own units go in.");
+    static final Section DERIVED = new Section(
+            "[[derived]]",
+            "A figure of every point that the grade defines for itself; any number of them.",
+            List.of(DERIVED_NAME, EXPRESSION, DERIVED_UNIT));
+
+    static final Key MARKER_NAME = Key.required(
+            "name",
+            new Text(),
+            "Its `property` in `markers.csv`, and its name in a `[[limit]]`: small letters, digits and `_`.");
+    static final Key MARKER_QUANTITY = Key.required(
+            "quantity",
+            new Text(),
+            "What is followed: a column of `points` without its unit's suffix, or a `[[derived]]`.");
+    static final Key REACHES = Key.required(
+            "reaches", new Shape("quantity of `quantity`; a number where it has no unit"), "The value it reaches.");
+    static final Key ALONG = Key.required(
+            "along",
+            KeyType.wordsOf(FigureMarkerPlan.Along.class),
+            "`frequency`: over frequency within each isotherm. `temperature`: over temperature at each frequency.");
+    static final Key SCALE = Key.withDefault(
+            "scale",
+            KeyType.wordsOf(FigureMarkerPlan.Scale.class),
+            "\"log\"",
+            "What is taken as straight between two points, over log frequency or over temperature. `log`: the logarithm of "
+                    + "the quantity. `linear`: the quantity itself.");
+    static final Key MARKER_TEMPERATURE = Key.optional(
+            "temperature",
+            KeyType.quantity(QuantityKind.TEMPERATURE, Sign.ANY),
+            "Along frequency: only the isotherm within 0.5 K of it.");
+    static final Key MARKER_FREQUENCY = Key.optional(
+            "frequency",
+            KeyType.quantity(QuantityKind.FREQUENCY, Sign.POSITIVE),
+            "Along temperature: only the points within 1 % of it.");
+    static final Key REPORT = Key.optional(
+            "report",
+            new Text(),
+            "The quantity whose value there is the marker's, by its logarithm where that is above zero. Without it the "
+                    + "marker's value is the place, in Hz or °C.");
+    static final Section MARKER = new Section(
+            "[[marker]]",
+            "Where a quantity reaches a value, by interpolation between measured points and never beyond them; any number "
+                    + "of them.",
+            List.of(MARKER_NAME, MARKER_QUANTITY, REACHES, ALONG, SCALE, MARKER_TEMPERATURE, MARKER_FREQUENCY, REPORT));
+
     static final Key LIMIT_NAME = Key.optional("name", new Text(), "The column's name in the team sheet.");
     static final Key PROPERTY = Key.required(
             "property",
             new KeyType.Word(Arrays.stream(LimitProperty.values())
                     .map(LimitProperty::word)
                     .toList()),
-            "A quantity of `points.csv` without its unit suffix, or a property of `markers.csv`.");
+            "A quantity of `points.csv` without its unit suffix, or a property of `markers.csv`; or the name of a "
+                    + "`[[derived]]` or a `[[marker]]`.");
     static final Key LIMIT_TEMPERATURE = Key.optional(
             "temperature",
             KeyType.quantity(QuantityKind.TEMPERATURE, Sign.ANY),
-            "Where the limit holds; required for a quantity of `points.csv`.");
+            "Where the limit holds; required for a quantity of `points.csv` and for a `[[derived]]`.");
     static final Key LIMIT_FREQUENCY = Key.optional(
             "frequency",
             KeyType.quantity(QuantityKind.FREQUENCY, Sign.POSITIVE),
-            "Where the limit holds; required for a quantity of `points.csv`.");
+            "Where the limit holds; required for a quantity of `points.csv` and for a `[[derived]]`.");
     static final Key MIN = Key.optional(
             "min",
             new Shape("quantity of the property; a number where it has no unit"),
@@ -226,6 +285,8 @@ final class GradeKeys {
                     SUPERPOSITION,
                     SPECTRUM,
                     RESPONSE,
+                    DERIVED,
+                    MARKER,
                     LIMIT,
                     UNCERTAINTY));
 

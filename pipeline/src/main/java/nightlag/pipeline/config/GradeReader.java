@@ -52,13 +52,15 @@ final class GradeReader {
                 file.optional(GradeKeys.SUPERPOSITION).flatMap(GradeReader::superposition);
         Optional<SpectrumPlan> spectrum = file.optional(GradeKeys.SPECTRUM).flatMap(GradeReader::spectrum);
         List<ResponsePlan> responses = ResponsesReader.read(file.repeated(GradeKeys.RESPONSE));
-        List<LimitPlan> limits = LimitsReader.read(file.repeated(GradeKeys.LIMIT));
+        OwnFiguresReader figures =
+                OwnFiguresReader.read(file.repeated(GradeKeys.DERIVED), file.repeated(GradeKeys.MARKER));
+        List<LimitPlan> limits = LimitsReader.read(file.repeated(GradeKeys.LIMIT), figures.limitSubjects());
         Map<Dimension, Double> uncertainty = uncertainty();
         if (extraction.isEmpty() || screening.isEmpty() || sweeps.isEmpty()) {
             return Optional.empty();
         }
-        ConclusionPlan conclusion =
-                new ConclusionPlan(sweeps.get(), superposition, spectrum, responses, limits, uncertainty);
+        ConclusionPlan conclusion = new ConclusionPlan(
+                sweeps.get(), superposition, spectrum, responses, limits, uncertainty, figures.plan());
         return Optional.of(new Grade(
                 name,
                 fileName,

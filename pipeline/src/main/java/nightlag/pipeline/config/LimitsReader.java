@@ -14,20 +14,25 @@ import nightlag.stages.acceptance.LimitPlan;
 final class LimitsReader {
     private LimitsReader() {}
 
-    /** Those that are right, in the order of the file. */
-    static List<LimitPlan> read(List<SectionReader> sections) {
+    /**
+     * Those that are right, in the order of the file.
+     *
+     * @param own what the grade defines for itself
+     */
+    static List<LimitPlan> read(List<SectionReader> sections, List<LimitSubject> own) {
+        List<LimitSubject> subjects =
+                Stream.concat(LimitSubject.known().stream(), own.stream()).toList();
         Set<String> columns = new HashSet<>();
         List<LimitPlan> limits = new ArrayList<>();
         for (SectionReader section : sections) {
-            limit(section, columns).ifPresent(limits::add);
+            limit(section, subjects, columns).ifPresent(limits::add);
         }
         return limits;
     }
 
-    private static Optional<LimitPlan> limit(SectionReader section, Set<String> columns) {
+    private static Optional<LimitPlan> limit(SectionReader section, List<LimitSubject> subjects, Set<String> columns) {
         Optional<String> name = section.text(GradeKeys.LIMIT_NAME).map(String::strip);
-        Optional<LimitProperty> property =
-                section.choice(GradeKeys.PROPERTY, List.of(LimitProperty.values()), LimitProperty::word);
+        Optional<LimitSubject> property = section.oneOf(GradeKeys.PROPERTY, subjects, LimitSubject::word);
         OptionalDouble temperature = section.si(GradeKeys.LIMIT_TEMPERATURE);
         OptionalDouble frequency = section.si(GradeKeys.LIMIT_FREQUENCY);
         OptionalDouble coverage = section.real(GradeKeys.COVERAGE);
@@ -72,7 +77,7 @@ final class LimitsReader {
                 coverage.getAsDouble()));
     }
 
-    private static OptionalDouble bound(SectionReader section, Key key, LimitProperty property) {
+    private static OptionalDouble bound(SectionReader section, Key key, LimitSubject property) {
         if (!section.has(key)) {
             return OptionalDouble.empty();
         }

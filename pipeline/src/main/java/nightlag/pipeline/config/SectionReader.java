@@ -208,18 +208,28 @@ final class SectionReader {
     /** One of a few things that go by words; only words the key declares are taken. */
     <E> Optional<E> choice(Key key, List<E> choices, Function<? super E, String> wordOf) {
         List<String> allowed = ((KeyType.Word) key.type()).allowed();
+        return oneOf(
+                key,
+                choices.stream()
+                        .filter(choice -> allowed.contains(wordOf.apply(choice)))
+                        .toList(),
+                wordOf);
+    }
+
+    /** One of a few things that go by words, whatever the key declares. */
+    <E> Optional<E> oneOf(Key key, List<E> choices, Function<? super E, String> wordOf) {
         Optional<Node> node = node(key);
         if (node.isEmpty()) {
             return Optional.empty();
         }
         String typed = node.get() instanceof Node.Scalar scalar ? String.valueOf(scalar.value()) : "";
         Optional<E> found = choices.stream()
-                .filter(choice ->
-                        allowed.contains(typed) && wordOf.apply(choice).equals(typed))
+                .filter(choice -> wordOf.apply(choice).equals(typed))
                 .findFirst();
         if (found.isEmpty()) {
-            String clause = "found " + node.get().found() + Suggestion.clause(typed, allowed);
-            wrong(key, node.get(), clause, "one of " + key.type().words());
+            List<String> words = choices.stream().<String>map(wordOf).toList();
+            String clause = "found " + node.get().found() + Suggestion.clause(typed, words);
+            wrong(key, node.get(), clause, "one of " + new KeyType.Word(words).words());
         }
         return found;
     }

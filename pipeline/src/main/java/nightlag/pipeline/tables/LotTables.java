@@ -31,7 +31,8 @@ public final class LotTables {
                     SpectrumTable.TABLE,
                     (result, from) -> result.spectrum().stream()
                             .map(mode -> new SpectrumTable.Row(from.grade(), from.lot(), mode))
-                            .toList()));
+                            .toList()),
+            new LotTable<>(DerivedTable.TABLE, (result, from) -> result.derived()));
 
     private LotTables() {}
 

@@ -18,12 +18,14 @@ import nightlag.stages.geometry.GeometryKind;
 import nightlag.stages.geometry.GeometrySpec;
 import nightlag.stages.geometry.LoadSignal;
 import nightlag.stages.geometry.MeasuringWall;
+import nightlag.stages.moduli.PointQuantity;
 import nightlag.stages.moduli.ScreeningPlan;
 import nightlag.stages.moduli.SignalRange;
 import nightlag.stages.moduli.Threshold;
 import nightlag.stages.response.ResponsePlan;
 import nightlag.stages.spectrum.SpectrumPlan;
 import nightlag.stages.superposition.SuperpositionPlan;
+import nightlag.stages.sweep.FigureMarkerPlan;
 import nightlag.stages.sweep.SweepPlan;
 import nightlag.stages.waveform.Drift;
 import nightlag.stages.waveform.ExtractionPlan;
@@ -214,5 +216,38 @@ class AcceptedConfigurationTest {
         assertThat(limits.get(2).min()).hasValueCloseTo(2 * Math.PI, within(1e-15));
         assertThat(limits.get(3).unit()).isEqualTo("°C");
         assertThat(limits.get(3).max()).hasValueCloseTo(253.15, within(1e-12));
+    }
+
+    @Test
+    void figuresOfTheGradesOwn() {
+        var conclusion = configuration.grades().get("Heron 3").conclusion();
+        var own = conclusion.ownFigures();
+        assertThat(own.derived()).hasSize(1);
+        var rutting = own.derived().get(0);
+        assertThat(rutting.name()).isEqualTo("rutting_factor");
+        assertThat(rutting.uses()).containsExactly(PointQuantity.COMPLEX_MODULUS, PointQuantity.PHASE_ANGLE);
+        assertThat(rutting.function()
+                        .valueOf(Map.of(PointQuantity.COMPLEX_MODULUS, 5000.0, PointQuantity.PHASE_ANGLE, 30.0)))
+                .isCloseTo(10_000, within(1e-9));
+
+        var falls = own.markers().get(0);
+        assertThat(falls.figure()).isEqualTo(rutting);
+        assertThat(falls.reaches()).isEqualTo(1000);
+        assertThat(falls.along()).isEqualTo(FigureMarkerPlan.Along.TEMPERATURE);
+        assertThat(falls.scale()).isEqualTo(FigureMarkerPlan.Scale.LOG);
+        assertThat(falls.frequencyHz()).hasValueCloseTo(10 / (2 * Math.PI), within(1e-15));
+        assertThat(falls.unit()).isEqualTo("°C");
+        var crossing = own.markers().get(1);
+        assertThat(crossing.reaches()).as("in degrees, as in points").isCloseTo(45, within(1e-12));
+        assertThat(crossing.temperatureK()).hasValueCloseTo(463.15, within(1e-12));
+        assertThat(crossing.unit()).isEqualTo("Pa");
+
+        var limits = conclusion.limits();
+        assertThat(limits.get(4).property()).isEqualTo("rutting_factor");
+        assertThat(limits.get(4).min()).hasValue(1000);
+        assertThat(limits.get(4).unit()).isEqualTo("Pa");
+        assertThat(limits.get(5).min()).as("K, as every limit on a temperature").hasValueCloseTo(337.15, within(1e-12));
+        assertThat(limits.get(5).unit()).isEqualTo("°C");
+        assertThat(limits.get(6).max()).hasValue(200_000);
     }
 }

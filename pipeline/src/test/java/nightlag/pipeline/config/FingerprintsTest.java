@@ -172,7 +172,7 @@ class FingerprintsTest {
 
     @ParameterizedTest(name = "{0} is not {1}")
     @CsvSource(delimiter = '|', quoteCharacter = '^', textBlock = """
-                    "frequency"                   | "auto"
+                    kind       = "frequency"      | kind = "auto"
                     "averaged"                    | "apart"
                     "log"                         | "linear"
                     reference_temperature = "190  | reference_temperature = "191
@@ -192,6 +192,11 @@ class FingerprintsTest {
                     "10 rad/s"                    | "11 rad/s"
                     coverage    = 0               | coverage = 1
                     "glass_transition_loss_peak"  | "glass_transition_storage_onset"
+                    "crossing_stiffness"          | "stiffness_there"
+                    scale       = "linear"        | scale = "log"
+                    reaches     = "45 °"          | reaches = "44 °"
+                    frequency = "10 rad/s"        | frequency = "9 rad/s"
+                    report      = "complex_modulus" | report = "storage_modulus"
                     "10 µm"                       | "11 µm"
                     """)
     void everyValueOfTheConclusionCountsThereAndOnlyThere(String written, String otherwise) throws IOException {
@@ -220,5 +225,22 @@ class FingerprintsTest {
     @Test
     void whatHasNoFingerprintIsRefused() {
         assertThatThrownBy(() -> Fingerprints.of(new Object())).isInstanceOf(IllegalArgumentException.class);
+    }
+
+    /** The compiled function is another object at every reading; what counts is the expression. */
+    @Test
+    void ofAFigureItsExpressionCounts() throws IOException {
+        String other = heron().replace("complex_modulus / sin(phase_angle)", "complex_modulus * sin(phase_angle)");
+        String another = heron().replace("reaches   = \"1 kPa\"", "reaches   = \"2 kPa\"");
+
+        assertThat(other).isNotEqualTo(heron());
+        assertThat(grade(heron()).conclusionFingerprint())
+                .isEqualTo(grade(heron()).conclusionFingerprint());
+        assertThat(grade(other).conclusionFingerprint())
+                .isNotEqualTo(grade(heron()).conclusionFingerprint());
+        assertThat(another).isNotEqualTo(heron());
+        assertThat(grade(another).conclusionFingerprint())
+                .isNotEqualTo(grade(heron()).conclusionFingerprint());
+        assertThat(grade(other).reductionFingerprint()).isEqualTo(grade(heron()).reductionFingerprint());
     }
 }

@@ -32,7 +32,8 @@ class DataPackageTest {
         JsonNode descriptor = write(LotResult.EMPTY);
 
         assertThat(texts(descriptor.get("resources"), "name"))
-                .containsExactly("points", "harmonics", "markers", "shift_factors", "master_curve", "spectrum");
+                .containsExactly(
+                        "points", "harmonics", "markers", "shift_factors", "master_curve", "spectrum", "derived");
         for (JsonNode resource : descriptor.get("resources")) {
             JsonNode fields = resource.at("/schema/fields");
             assertThat(Files.readString(lot().resolve(resource.get("path").asText())))

@@ -46,7 +46,8 @@ class DataPackageValidationTest {
                 + result.markers().size()
                 + result.shiftFactors().size()
                 + result.masterCurve().size()
-                + result.spectrum().size();
+                + result.spectrum().size()
+                + result.derived().size();
         assertThat(check(FROM)).containsExactly("rows read: " + rows);
     }
 

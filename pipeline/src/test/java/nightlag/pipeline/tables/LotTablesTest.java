@@ -18,6 +18,7 @@ import java.util.TreeMap;
 import java.util.stream.Stream;
 import nightlag.stages.LotResult;
 import nightlag.stages.geometry.DeformationMode;
+import nightlag.stages.moduli.FigureRow;
 import nightlag.stages.moduli.Flag;
 import nightlag.stages.moduli.Harmonic;
 import nightlag.stages.moduli.Marker;
@@ -112,6 +113,34 @@ class LotTablesTest {
         assertThat(table("harmonics"))
                 .startsWith("grade,lot,specimen,sweep,point,order,")
                 .containsOnlyOnce("\r\n");
+    }
+
+    @Test
+    void theGradesOwnFiguresStandPointByPoint() throws IOException {
+        FigureRow first = derived("2", "rutting_factor", 1250, OptionalDouble.of(12.5));
+        FigureRow second = derived("10", "damage", -0.5, OptionalDouble.empty());
+        FigureRow third = derived("10", "rutting_factor", 1000, OptionalDouble.of(10));
+
+        write(new LotResult(
+                List.of(), List.of(), List.of(), List.of(), List.of(), List.of(), List.of(third, first, second)));
+
+        assertThat(table("derived")).isEqualTo("""
+                        grade,lot,specimen,sweep,point,quantity,temperature_C,frequency_Hz,value,u,unit,source_file
+                        Heron 3,L-17,1,1,2,rutting_factor,190,0.5,1250,12.5,Pa,bench/2.csv
+                        Heron 3,L-17,1,1,10,damage,190,0.5,-0.5,,Pa,bench/10.csv
+                        Heron 3,L-17,1,1,10,rutting_factor,190,0.5,1000,10,Pa,bench/10.csv
+                        """.replace("\n", "\r\n"));
+    }
+
+    private static FigureRow derived(String point, String quantity, double value, OptionalDouble u) {
+        return new FigureRow(
+                new PointKey("Heron 3", "L-17", "1", "1", point, "bench/" + point + ".csv"),
+                OptionalDouble.of(463.15),
+                OptionalDouble.of(0.5),
+                quantity,
+                value,
+                u,
+                "Pa");
     }
 
     @Test
@@ -242,7 +271,8 @@ class LotTablesTest {
                 shuffled(result.masterCurve(), seed),
                 shuffled(result.spectrum(), seed),
                 List.of(),
-                List.of());
+                List.of(),
+                shuffled(result.derived(), seed));
         Locale was = Locale.getDefault();
 
         write(result);
@@ -258,6 +288,7 @@ class LotTablesTest {
         assertThat(first.keySet())
                 .containsExactly(
                         "datapackage.json",
+                        "derived.csv",
                         "harmonics.csv",
                         "markers.csv",
                         "master_curve.csv",
@@ -279,6 +310,7 @@ class LotTablesTest {
         assertThat(filesOfTheLot().keySet())
                 .containsExactly(
                         "datapackage.json",
+                        "derived.csv",
                         "harmonics.csv",
                         "markers.csv",
                         "master_curve.csv",

@@ -7,6 +7,7 @@ import java.util.OptionalDouble;
 import java.util.Random;
 import nightlag.pipeline.RandomPoints;
 import nightlag.stages.LotResult;
+import nightlag.stages.moduli.FigureRow;
 import nightlag.stages.moduli.Marker;
 import nightlag.stages.moduli.Moduli;
 import nightlag.stages.moduli.ModulusPoint;
@@ -27,8 +28,21 @@ public final class RandomLot {
     }
 
     public LotResult result(String grade, String lot) {
-        return new LotResult(
-                points(grade, lot), markers(), shiftFactors(), masterCurve(), spectrum(), List.of(), List.of());
+        List<ModulusPoint> made = points(grade, lot);
+        return new LotResult(made, markers(), shiftFactors(), masterCurve(), spectrum(), List.of(), List.of(), derived(made));
+    }
+
+    private List<FigureRow> derived(List<ModulusPoint> of) {
+        return of.stream()
+                .map(point -> new FigureRow(
+                        point.key(),
+                        maybe(random.nextDouble(200, 500)),
+                        maybe(random.nextDouble(0.01, 100)),
+                        "figure_" + random.nextInt(3),
+                        points.number(),
+                        maybe(Math.abs(points.number())),
+                        random.nextBoolean() ? "°C" : "Pa·s"))
+                .toList();
     }
 
     private List<ModulusPoint> points(String grade, String lot) {

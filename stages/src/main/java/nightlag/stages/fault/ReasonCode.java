@@ -26,7 +26,8 @@ public interface ReasonCode {
         return new Reason(name(), new MessageFormat(template(), Locale.ROOT).format(texts));
     }
 
-    private static String shortest(double number) {
+    /** A number with up to six significant digits, without trailing zeros, free of the machine's language. */
+    static String shortest(double number) {
         String text = String.format(Locale.ROOT, "%.6g", number);
         if (!text.contains(".")) {
             return text;

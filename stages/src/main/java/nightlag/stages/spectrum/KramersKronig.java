@@ -10,6 +10,8 @@ import nightlag.stages.moduli.ModulusReading;
 import nightlag.stages.numeric.Projection;
 import nightlag.stages.numeric.VarianceRatio;
 import nightlag.stages.sweep.FrequencySweeps;
+import nightlag.stages.sweep.Sweep;
+import nightlag.stages.sweep.SweepPlan;
 
 /**
  * Whether the storage and the loss modulus of a frequency sweep can belong to one linear material that does not change while
@@ -81,6 +83,19 @@ public final class KramersKronig {
         Source(String words) {
             this.words = words;
         }
+    }
+
+    /** The check of a sweep: nothing but for one in which the frequency varies. */
+    public static Findings of(Sweep sweep) {
+        if (sweep.kind() != SweepPlan.Kind.FREQUENCY) {
+            return Findings.NONE;
+        }
+        List<ModulusReading> readings = sweep.points().stream()
+                .map(point -> new ModulusReading(
+                        2 * Math.PI * point.frequencyHz().orElseThrow(),
+                        point.moduli().orElseThrow()))
+                .toList();
+        return of(sweep.name().specimen(), sweep.name().sweep(), sweep.temperatureK(), readings);
     }
 
     /**

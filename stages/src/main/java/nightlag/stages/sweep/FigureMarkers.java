@@ -1,0 +1,226 @@
+package nightlag.stages.sweep;
+
+import java.util.ArrayList;
+import java.util.List;
+import java.util.Locale;
+import java.util.Optional;
+import java.util.OptionalDouble;
+import java.util.stream.DoubleStream;
+import nightlag.stages.fault.Reason;
+import nightlag.stages.fault.ReasonCode;
+import nightlag.stages.moduli.Figure;
+import nightlag.stages.moduli.Findings;
+import nightlag.stages.moduli.Marker;
+import nightlag.stages.moduli.ModulusPoint;
+import nightlag.stages.sweep.FigureCurve.Place;
+import nightlag.stages.sweep.FigureMarkerPlan.Along;
+import nightlag.stages.sweep.FigureMarkerPlan.Scale;
+
+/**
+ * Where a figure of the grade's own reaches a value, by interpolation between the two measured places on either side, and
+ * never beyond them. Every such step of every curve gives a marker of its own.
+ */
+public final class FigureMarkers {
+    private static final double KELVIN_AT_ZERO_CELSIUS = 273.15;
+
+    private final FigureMarkerPlan plan;
+    private final FigureCurve curve;
+    private final List<Marker> markers = new ArrayList<>();
+    private final List<Reason> notes = new ArrayList<>();
+
+    private FigureMarkers(FigureMarkerPlan plan, FigureCurve curve) {
+        this.plan = plan;
+        this.curve = curve;
+    }
+
+    /**
+     * Looks along every curve of the points.
+     *
+     * @param points usable points, without those of amplitude sweeps
+     */
+    public static Findings find(List<ModulusPoint> points, FigureMarkerPlan plan) {
+        List<FigureCurve> curves = FigureCurve.of(points, plan);
+        if (curves.isEmpty()) {
+            return Findings.absent(FigureReason.FIGURE_MARKER_NO_CURVE.with(
+                    plan.name(),
+                    plan.figure().name(),
+                    plan.along().name().toLowerCase(Locale.ROOT),
+                    where(plan.temperatureK(), plan.frequencyHz())));
+        }
+        return Findings.together(curves.stream()
+                .map(curve -> new FigureMarkers(plan, curve).find())
+                .toList());
+    }
+
+    private Findings find() {
+        List<Place> places = curve.places();
+        int found = 0;
+        for (int i = 0; i + 1 < places.size(); i++) {
+            double before = places.get(i).mean() - plan.reaches();
+            double after = places.get(i + 1).mean() - plan.reaches();
+            boolean endsThere = i + 2 == places.size() && after == 0;
+            if (before == 0 || Math.signum(before) * Math.signum(after) < 0 || endsThere) {
+                found++;
+                step(places.get(i), places.get(i + 1));
+            }
+        }
+        if (found == 0) {
+            double[] values = places.stream().mapToDouble(Place::mean).sorted().toArray();
+            notes.add(FigureReason.FIGURE_MARKER_NOT_REACHED.with(
+                    plan.name(),
+                    curve.name().specimen(),
+                    curve.name().sweep(),
+                    where(curve.temperatureK(), curve.frequencyHz()),
+                    plan.figure().name(),
+                    values[0],
+                    values[values.length - 1],
+                    plan.figure().unit(),
+                    plan.reaches()));
+        }
+        return new Findings(markers, notes);
+    }
+
+    private void step(Place from, Place to) {
+        boolean log = plan.scale() == Scale.LOG;
+        if (log && Math.min(from.mean(), to.mean()) <= 0) {
+            absent(FigureReason.FIGURE_MARKER_NO_LOGARITHM, plan.figure());
+            return;
+        }
+        double rise = scaled(to.mean(), log) - scaled(from.mean(), log);
+        double part = rise == 0 ? 0 : (scaled(plan.reaches(), log) - scaled(from.mean(), log)) / rise;
+        boolean logPlace = plan.along() == Along.FREQUENCY;
+        double run = scaled(to.at(), logPlace) - scaled(from.at(), logPlace);
+        double place = unscaled(scaled(from.at(), logPlace) + part * run, logPlace);
+        if (plan.report().isEmpty()) {
+            OptionalDouble u = uncertainty(
+                    new Weighed(from, -(1 - part) * run / rise, log, 0, false),
+                    new Weighed(to, -part * run / rise, log, 0, false));
+            add(place, place, times(u, logPlace ? place : 1), from, to);
+            return;
+        }
+        Figure report = plan.report().get();
+        OptionalDouble first = from.mean(report);
+        OptionalDouble second = to.mean(report);
+        if (first.isEmpty() || second.isEmpty()) {
+            absent(FigureReason.FIGURE_MARKER_NOT_REPORTED, report);
+            return;
+        }
+        boolean logReport = Math.min(first.getAsDouble(), second.getAsDouble()) > 0;
+        double gain = scaled(second.getAsDouble(), logReport) - scaled(first.getAsDouble(), logReport);
+        double value = unscaled(scaled(first.getAsDouble(), logReport) + part * gain, logReport);
+        OptionalDouble u = uncertainty(
+                new Weighed(from, -(1 - part) * gain / rise, log, 1 - part, logReport),
+                new Weighed(to, -part * gain / rise, log, part, logReport));
+        double offset = report.unit().equals("°C") ? KELVIN_AT_ZERO_CELSIUS : 0;
+        add(place, value + offset, times(u, logReport ? value : 1), from, to);
+    }
+
+    private void add(double place, double value, OptionalDouble u, Place from, Place to) {
+        boolean overFrequency = plan.along() == Along.FREQUENCY;
+        markers.add(new Marker(
+                curve.name().specimen(),
+                curve.name().sweep(),
+                plan.name(),
+                overFrequency ? curve.temperatureK() : OptionalDouble.of(place),
+                overFrequency ? OptionalDouble.of(place) : curve.frequencyHz(),
+                value,
+                u,
+                plan.unit(),
+                method(from, to)));
+    }
+
+    private String method(Place from, Place to) {
+        boolean overFrequency = plan.along() == Along.FREQUENCY;
+        double offset = overFrequency ? 0 : KELVIN_AT_ZERO_CELSIUS;
+        String report = plan.report()
+                .map(figure -> figure.name()
+                        + (Math.min(from.mean(figure).orElse(0), to.mean(figure).orElse(0)) > 0
+                                ? " (log)"
+                                : " (linear)")
+                        + " where ")
+                .orElse("");
+        return report
+                + plan.figure().name()
+                + (to.mean() < from.mean() ? " falls to " : " rises to ")
+                + ReasonCode.shortest(plan.reaches())
+                + (plan.figure().unit().equals("1") ? "" : " " + plan.figure().unit())
+                + (plan.scale() == Scale.LOG ? ", log over " : ", linear over ")
+                + (overFrequency ? "log frequency" : "temperature")
+                + ", between "
+                + ReasonCode.shortest(from.at() - offset)
+                + " and "
+                + ReasonCode.shortest(to.at() - offset)
+                + (overFrequency ? " Hz" : " °C");
+    }
+
+    private void absent(FigureReason why, Figure figure) {
+        notes.add(why.with(
+                plan.name(),
+                curve.name().specimen(),
+                curve.name().sweep(),
+                where(curve.temperatureK(), curve.frequencyHz()),
+                figure.name()));
+    }
+
+    private static String where(OptionalDouble temperatureK, OptionalDouble frequencyHz) {
+        return (temperatureK.isPresent()
+                        ? " at " + ReasonCode.shortest(temperatureK.getAsDouble() - KELVIN_AT_ZERO_CELSIUS) + " °C"
+                        : "")
+                + (frequencyHz.isPresent() ? " at " + ReasonCode.shortest(frequencyHz.getAsDouble()) + " Hz" : "");
+    }
+
+    private static double scaled(double value, boolean log) {
+        return log ? Math.log(value) : value;
+    }
+
+    private static double unscaled(double value, boolean log) {
+        return log ? Math.exp(value) : value;
+    }
+
+    private static OptionalDouble times(OptionalDouble value, double factor) {
+        return value.isPresent() ? OptionalDouble.of(value.getAsDouble() * Math.abs(factor)) : value;
+    }
+
+    /**
+     * A place and how much the result moves with its figure and with the one reported there, both as they are scaled.
+     */
+    private record Weighed(Place place, double byFigure, boolean log, double byReport, boolean logReport) {}
+
+    /** The points' errors are independent of one another; both figures of one point hang on the same modulus. */
+    private OptionalDouble uncertainty(Weighed... places) {
+        double variance = 0;
+        for (Weighed weighed : places) {
+            Place place = weighed.place();
+            double perValue = weighed.byFigure() / place.points().size() / (weighed.log() ? place.mean() : 1);
+            double perReport = weighed.byReport()
+                    / place.points().size()
+                    / (weighed.logReport()
+                            ? place.mean(plan.report().orElseThrow()).orElseThrow()
+                            : 1);
+            for (int i = 0; i < place.points().size(); i++) {
+                ModulusPoint point = place.points().get(i);
+                Optional<Figure.Value> reported =
+                        perReport == 0 ? Optional.empty() : plan.report().flatMap(report -> report.at(point));
+                Figure.Value moved = sum(place.values().get(i), perValue, reported, perReport);
+                boolean fixed = DoubleStream.of(moved.byStorage(), moved.byLoss(), moved.byThird())
+                        .allMatch(derivative -> derivative == 0);
+                OptionalDouble own = fixed ? OptionalDouble.of(0) : moved.variance(point);
+                if (own.isEmpty() || !Double.isFinite(own.getAsDouble())) {
+                    return OptionalDouble.empty();
+                }
+                variance += own.getAsDouble();
+            }
+        }
+        return variance > 0 ? OptionalDouble.of(Math.sqrt(variance)) : OptionalDouble.empty();
+    }
+
+    private static Figure.Value sum(
+            Figure.Value figure, double perFigure, Optional<Figure.Value> report, double perReport) {
+        Figure.Value other = report.orElse(new Figure.Value(0, 0, 0, 0));
+        return new Figure.Value(
+                0,
+                perFigure * figure.byStorage() + perReport * other.byStorage(),
+                perFigure * figure.byLoss() + perReport * other.byLoss(),
+                perFigure * figure.byThird() + perReport * other.byThird());
+    }
+}

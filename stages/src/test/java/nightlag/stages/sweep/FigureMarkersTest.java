@@ -1,0 +1,269 @@
+package nightlag.stages.sweep;
+
+import static org.assertj.core.api.Assertions.assertThat;
+import static org.assertj.core.api.Assertions.within;
+import static org.assertj.core.data.Percentage.withPercentage;
+
+import java.util.ArrayList;
+import java.util.List;
+import java.util.Optional;
+import java.util.OptionalDouble;
+import java.util.Random;
+import java.util.stream.DoubleStream;
+import java.util.stream.Stream;
+import nightlag.stages.TestPoints;
+import nightlag.stages.moduli.Figure;
+import nightlag.stages.moduli.Findings;
+import nightlag.stages.moduli.Marker;
+import nightlag.stages.moduli.ModulusPoint;
+import nightlag.stages.moduli.PointQuantity;
+import nightlag.stages.numeric.Complex;
+import nightlag.stages.sweep.FigureMarkerPlan.Along;
+import nightlag.stages.sweep.FigureMarkerPlan.Scale;
+import org.junit.jupiter.api.Test;
+
+/** Where a figure reaches a value, on materials for which that place is known in closed form. */
+class FigureMarkersTest {
+    private static final double ZERO_C = 273.15;
+    private static final Figure STIFFNESS = Figure.column(PointQuantity.COMPLEX_MODULUS);
+    private static final Figure ANGLE = Figure.column(PointQuantity.PHASE_ANGLE);
+    private static final OptionalDouble ANY = OptionalDouble.empty();
+
+    /** |G*| = 1 MPa · 10^(−T/20 °C), δ = 40° + T/2 °C: ln |G*| and δ are straight in T. */
+    private static Complex binder(double celsius) {
+        return Complex.polar(1e6 * Math.pow(10, -celsius / 20), Math.toRadians(40 + celsius / 2));
+    }
+
+    /** |G*| = 1 kPa · √(f/1 Hz), δ = 60° − 10° lg (f/1 Hz). */
+    private static Complex melt(double hertz) {
+        return Complex.polar(1e3 * Math.sqrt(hertz), Math.toRadians(60 - 10 * Math.log10(hertz)));
+    }
+
+    private static List<ModulusPoint> ramp(double... celsius) {
+        return DoubleStream.of(celsius)
+                .mapToObj(t -> TestPoints.point()
+                        .named("1", "ramp", "p" + t, "bench/" + t + ".csv")
+                        .at(t + ZERO_C)
+                        .hz(1.6)
+                        .modulus(binder(t))
+                        .build())
+                .toList();
+    }
+
+    private static List<ModulusPoint> sweep(double... hertz) {
+        return DoubleStream.of(hertz)
+                .mapToObj(f -> TestPoints.point()
+                        .named("1", "s", "p" + f, "bench/" + f + ".csv")
+                        .at(50 + ZERO_C)
+                        .hz(f)
+                        .modulus(melt(f))
+                        .build())
+                .toList();
+    }
+
+    private static FigureMarkerPlan plan(Figure figure, double reaches, Along along, Scale scale) {
+        return new FigureMarkerPlan("found", figure, reaches, along, scale, ANY, ANY, Optional.empty());
+    }
+
+    private static Marker only(Findings findings) {
+        assertThat(findings.notes()).isEmpty();
+        assertThat(findings.markers()).hasSize(1);
+        return findings.markers().get(0);
+    }
+
+    /** Exact: 10 kPa at 40 °C. */
+    @Test
+    void theTemperatureWhereAStiffnessFallsToALimit() {
+        Marker marker =
+                only(FigureMarkers.find(ramp(22, 34, 46, 58), plan(STIFFNESS, 1e4, Along.TEMPERATURE, Scale.LOG)));
+
+        assertThat(marker.property()).isEqualTo("found");
+        assertThat(marker.specimen()).isEqualTo("1");
+        assertThat(marker.sweep()).isEqualTo("ramp");
+        assertThat(marker.value()).isCloseTo(40 + ZERO_C, within(1e-9));
+        assertThat(marker.temperatureK()).hasValue(marker.value());
+        assertThat(marker.frequencyHz()).hasValue(1.6);
+        assertThat(marker.unit()).isEqualTo("°C");
+        assertThat(marker.method())
+                .isEqualTo("complex_modulus falls to 10000 Pa, log over temperature, between 34 and 46 °C");
+    }
+
+    /** Half way between two points whose |G*| is known to 1 %: u(T) = √½ · 1 % / (ln 10 / 20 K) (exact). */
+    @Test
+    void itsUncertaintyIsThatOfTheValuesOverTheSlope() {
+        List<ModulusPoint> points = Stream.of(34.0, 46.0)
+                .map(t -> TestPoints.point()
+                        .at(t + ZERO_C)
+                        .modulus(new Complex(0, binder(t).abs()))
+                        .relativeU(0.01)
+                        .build())
+                .toList();
+
+        Marker marker = only(FigureMarkers.find(points, plan(STIFFNESS, 1e4, Along.TEMPERATURE, Scale.LOG)));
+
+        assertThat(marker.u().orElseThrow())
+                .isCloseTo(0.01 * Math.sqrt(0.5) / (Math.log(10) / 20), withPercentage(1e-4));
+    }
+
+    /** Exact: 45° at 10^1.5 Hz, as the phase angle itself is straight over log f; |G*| there is 10^3.75 Pa. */
+    @Test
+    void aStiffnessAtACrossingPhase() {
+        FigureMarkerPlan plan = new FigureMarkerPlan(
+                "crossing_stiffness",
+                ANGLE,
+                45,
+                Along.FREQUENCY,
+                Scale.LINEAR,
+                OptionalDouble.of(50.2 + ZERO_C),
+                ANY,
+                Optional.of(STIFFNESS));
+
+        Marker marker = only(FigureMarkers.find(sweep(1, 10, 30, 33, 100), plan));
+
+        assertThat(marker.value()).isCloseTo(Math.pow(10, 3.75), withPercentage(1e-9));
+        assertThat(marker.frequencyHz().orElseThrow()).isCloseTo(Math.pow(10, 1.5), withPercentage(1e-9));
+        assertThat(marker.temperatureK()).hasValue(50 + ZERO_C);
+        assertThat(marker.unit()).isEqualTo("Pa");
+        assertThat(marker.method())
+                .isEqualTo(
+                        "complex_modulus (log) where phase_angle falls to 45 °, linear over log frequency, between 30 and 33 Hz");
+    }
+
+    /** |G*| taken as straight over ln f between 1 and 3 Hz has its mean at √3 Hz (exact). */
+    @Test
+    void onALinearScaleThePlaceIsThatOfTheStraightLine() {
+        double mean = (melt(1).abs() + melt(3).abs()) / 2;
+
+        Marker marker = only(FigureMarkers.find(sweep(1, 3), plan(STIFFNESS, mean, Along.FREQUENCY, Scale.LINEAR)));
+
+        assertThat(marker.value()).isCloseTo(Math.sqrt(3), withPercentage(1e-10));
+        assertThat(marker.unit()).isEqualTo("Hz");
+        assertThat(marker.method()).contains("linear over log frequency");
+    }
+
+    @Test
+    void nothingIsExtrapolated() {
+        Findings findings =
+                FigureMarkers.find(ramp(22, 34, 46, 58), plan(STIFFNESS, 1e2, Along.TEMPERATURE, Scale.LOG));
+
+        assertThat(findings.markers()).isEmpty();
+        assertThat(findings.notes()).hasSize(1);
+        assertThat(findings.notes().get(0).sentence())
+                .isEqualTo(
+                        "no found of specimen 1, sweep ramp at 1.6 Hz: complex_modulus stays between 1258.93 and 79432.8 Pa"
+                                + " and does not reach 100 Pa");
+    }
+
+    /** A value reached exactly at a measured point is reached once, at either end as well. */
+    @Test
+    void aPointThatHasTheValueIsOnePlace() {
+        for (double celsius : new double[] {20, 40, 60}) {
+            double there = ramp(celsius).get(0).moduli().orElseThrow().magnitudePa();
+
+            Marker marker =
+                    only(FigureMarkers.find(ramp(20, 40, 60), plan(STIFFNESS, there, Along.TEMPERATURE, Scale.LOG)));
+
+            assertThat(marker.value()).isCloseTo(celsius + ZERO_C, within(1e-9));
+        }
+    }
+
+    @Test
+    void everyCrossingIsARow() {
+        List<ModulusPoint> points = new ArrayList<>();
+        double[] stiffness = {1, 3, 1, 3};
+        for (int i = 0; i < stiffness.length; i++) {
+            points.add(TestPoints.point()
+                    .at(300 + 10 * i)
+                    .modulus(new Complex(stiffness[i], 0))
+                    .build());
+        }
+
+        Findings findings = FigureMarkers.find(points, plan(STIFFNESS, 2, Along.TEMPERATURE, Scale.LINEAR));
+
+        assertThat(findings.markers()).extracting(Marker::value).containsExactly(305.0, 315.0, 325.0);
+        assertThat(findings.markers())
+                .extracting(marker -> marker.method().contains("rises"))
+                .containsExactly(true, false, true);
+    }
+
+    /** Isotherms of frequency sweeps make a curve over temperature at each frequency asked for. */
+    @Test
+    void alongTemperatureThePointsOfAFrequencyAreGathered() {
+        List<ModulusPoint> points = new ArrayList<>();
+        for (double celsius : new double[] {30, 50}) {
+            for (double hertz : new double[] {0.5, 1.59, 1.6, 5}) {
+                points.add(TestPoints.point()
+                        .at(celsius + ZERO_C + 0.1 * hertz)
+                        .hz(hertz)
+                        .modulus(binder(celsius))
+                        .build());
+            }
+        }
+        FigureMarkerPlan everywhere = plan(STIFFNESS, 1e4, Along.TEMPERATURE, Scale.LOG);
+        FigureMarkerPlan one = new FigureMarkerPlan(
+                "found", STIFFNESS, 1e4, Along.TEMPERATURE, Scale.LOG, ANY, OptionalDouble.of(1.591), Optional.empty());
+
+        assertThat(FigureMarkers.find(points, everywhere).markers()).hasSize(3);
+        assertThat(only(FigureMarkers.find(points, one)).value()).isCloseTo(40 + ZERO_C + 0.1595, within(1e-9));
+    }
+
+    @Test
+    void whatHasNoLogarithmIsSaid() {
+        List<ModulusPoint> points = Stream.of(-1.0, 2.0)
+                .map(loss -> TestPoints.point()
+                        .at(300 + 10 * loss)
+                        .modulus(new Complex(10, loss))
+                        .build())
+                .toList();
+        Figure loss = Figure.column(PointQuantity.LOSS_MODULUS);
+
+        Findings findings = FigureMarkers.find(points, plan(loss, 1, Along.TEMPERATURE, Scale.LOG));
+
+        assertThat(findings.markers()).isEmpty();
+        assertThat(findings.notes().get(0).code()).isEqualTo("FIGURE_MARKER_NO_LOGARITHM");
+        assertThat(only(FigureMarkers.find(points, plan(loss, 1, Along.TEMPERATURE, Scale.LINEAR)))
+                        .value())
+                .isCloseTo(310, within(1.0));
+    }
+
+    @Test
+    void onePlaceIsNoCurve() {
+        FigureMarkerPlan elsewhere = new FigureMarkerPlan(
+                "found", STIFFNESS, 1, Along.TEMPERATURE, Scale.LOG, ANY, OptionalDouble.of(9), Optional.empty());
+
+        Findings findings = FigureMarkers.find(ramp(20, 40), elsewhere);
+
+        assertThat(findings.notes().get(0).sentence())
+                .isEqualTo("no found: no specimen has complex_modulus at two places along temperature at 9 Hz");
+    }
+
+    /** Over 2000 draws of 1 % noise, the scatter of the marker is what its u says, to 5 %. */
+    @Test
+    void theUncertaintyIsTheScatter() {
+        FigureMarkerPlan plan = new FigureMarkerPlan(
+                "found", ANGLE, 57, Along.TEMPERATURE, Scale.LOG, ANY, ANY, Optional.of(STIFFNESS));
+        Random random = new Random(42);
+        List<Double> values = new ArrayList<>();
+        double u = 0;
+        for (int draw = 0; draw < 2000; draw++) {
+            List<ModulusPoint> points = Stream.of(20.0, 44.0)
+                    .map(t -> TestPoints.point()
+                            .at(t + ZERO_C)
+                            .modulus(new Complex(
+                                    binder(t).re() * (1 + 0.01 * random.nextGaussian()),
+                                    binder(t).im() * (1 + 0.01 * random.nextGaussian())))
+                            .build())
+                    .toList();
+            Marker marker = only(FigureMarkers.find(points, plan));
+            values.add(marker.value());
+            u += marker.u().orElseThrow() / 2000;
+        }
+        double mean = values.stream().mapToDouble(v -> v).average().orElseThrow();
+        double scatter = Math.sqrt(values.stream()
+                .mapToDouble(v -> (v - mean) * (v - mean))
+                .average()
+                .orElseThrow());
+
+        assertThat(scatter / u).isCloseTo(1, within(0.05));
+    }
+}
