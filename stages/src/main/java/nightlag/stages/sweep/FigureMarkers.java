@@ -1,8 +1,10 @@
 package nightlag.stages.sweep;
 
 import java.util.ArrayList;
+import java.util.LinkedHashMap;
 import java.util.List;
 import java.util.Locale;
+import java.util.Map;
 import java.util.Optional;
 import java.util.OptionalDouble;
 import java.util.stream.DoubleStream;
@@ -27,6 +29,7 @@ public final class FigureMarkers {
     private final FigureCurve curve;
     private final List<Marker> markers = new ArrayList<>();
     private final List<Reason> notes = new ArrayList<>();
+    private boolean reached;
 
     private FigureMarkers(FigureMarkerPlan plan, FigureCurve curve) {
         this.plan = plan;
@@ -47,37 +50,69 @@ public final class FigureMarkers {
                     plan.along().name().toLowerCase(Locale.ROOT),
                     where(plan.temperatureK(), plan.frequencyHz())));
         }
-        return Findings.together(curves.stream()
-                .map(curve -> new FigureMarkers(plan, curve).find())
-                .toList());
+        Map<SweepName, List<FigureMarkers>> sweeps = new LinkedHashMap<>();
+        for (FigureCurve curve : curves) {
+            FigureMarkers looked = new FigureMarkers(plan, curve);
+            looked.look();
+            sweeps.computeIfAbsent(curve.name(), name -> new ArrayList<>()).add(looked);
+        }
+        return Findings.together(
+                sweeps.values().stream().map(FigureMarkers::ofOneSweep).toList());
     }
 
-    private Findings find() {
+    /** One line for all curves of a sweep on which the value is not reached. */
+    private static Findings ofOneSweep(List<FigureMarkers> curves) {
+        List<FigureMarkers> without =
+                curves.stream().filter(looked -> !looked.reached).toList();
+        List<Reason> notes = new ArrayList<>();
+        if (without.size() == 1) {
+            notes.add(without.get(0).notReached());
+        } else if (without.size() > 1) {
+            FigureMarkers first = without.get(0);
+            notes.add(FigureReason.FIGURE_MARKER_NOT_REACHED_ON.with(
+                    first.plan.name(),
+                    first.curve.name().specimen(),
+                    first.curve.name().sweep(),
+                    without.size(),
+                    curves.size(),
+                    first.plan.figure().name(),
+                    first.plan.reaches(),
+                    first.plan.figure().unit()));
+        }
+        List<Marker> markers = new ArrayList<>();
+        curves.forEach(looked -> {
+            markers.addAll(looked.markers);
+            notes.addAll(looked.notes);
+        });
+        return new Findings(markers, notes);
+    }
+
+    private void look() {
         List<Place> places = curve.places();
-        int found = 0;
         for (int i = 0; i + 1 < places.size(); i++) {
             double before = places.get(i).mean() - plan.reaches();
             double after = places.get(i + 1).mean() - plan.reaches();
             boolean endsThere = i + 2 == places.size() && after == 0;
             if (before == 0 || Math.signum(before) * Math.signum(after) < 0 || endsThere) {
-                found++;
+                reached = true;
                 step(places.get(i), places.get(i + 1));
             }
         }
-        if (found == 0) {
-            double[] values = places.stream().mapToDouble(Place::mean).sorted().toArray();
-            notes.add(FigureReason.FIGURE_MARKER_NOT_REACHED.with(
-                    plan.name(),
-                    curve.name().specimen(),
-                    curve.name().sweep(),
-                    where(curve.temperatureK(), curve.frequencyHz()),
-                    plan.figure().name(),
-                    values[0],
-                    values[values.length - 1],
-                    plan.figure().unit(),
-                    plan.reaches()));
-        }
-        return new Findings(markers, notes);
+    }
+
+    private Reason notReached() {
+        double[] values =
+                curve.places().stream().mapToDouble(Place::mean).sorted().toArray();
+        return FigureReason.FIGURE_MARKER_NOT_REACHED.with(
+                plan.name(),
+                curve.name().specimen(),
+                curve.name().sweep(),
+                where(curve.temperatureK(), curve.frequencyHz()),
+                plan.figure().name(),
+                values[0],
+                values[values.length - 1],
+                plan.figure().unit(),
+                plan.reaches());
     }
 
     private void step(Place from, Place to) {

@@ -11,6 +11,9 @@ public enum FigureReason implements ReasonCode {
     /** Marker, specimen, sweep, where, figure, smallest, largest value, unit, value to reach. */
     FIGURE_MARKER_NOT_REACHED(
             "no {0} of specimen {1}, sweep {2}{3}: {4} stays between {5} and {6} {7} and does not reach {8} {7}"),
+    /** Marker, specimen, sweep, curves without, curves, figure, value to reach, unit. */
+    FIGURE_MARKER_NOT_REACHED_ON(
+            "{0} of specimen {1}, sweep {2}: none on {3} of {4} curves, where {5} does not reach {6} {7}"),
     /** Marker, specimen, sweep, where, figure. */
     FIGURE_MARKER_NO_LOGARITHM(
             "no {0} of specimen {1}, sweep {2}{3}: {4} is not above zero throughout; scale = \"linear\" would do without its"

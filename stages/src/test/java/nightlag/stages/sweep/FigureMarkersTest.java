@@ -154,6 +154,30 @@ class FigureMarkersTest {
                                 + " and does not reach 100 Pa");
     }
 
+    /** Isotherms that stay away from the value share a line. */
+    @Test
+    void curvesWithoutItAreCounted() {
+        List<ModulusPoint> points = new ArrayList<>();
+        for (double celsius : new double[] {20, 30, 40, 50}) {
+            for (double hertz : new double[] {1, 10}) {
+                points.add(TestPoints.point()
+                        .at(celsius + ZERO_C)
+                        .hz(hertz)
+                        .modulus(binder(celsius).times(hertz))
+                        .build());
+            }
+        }
+
+        Findings findings = FigureMarkers.find(points, plan(STIFFNESS, 2e5, Along.FREQUENCY, Scale.LOG));
+
+        assertThat(findings.markers()).hasSize(2);
+        assertThat(findings.notes())
+                .extracting(note -> note.sentence())
+                .containsExactly(
+                        "found of specimen 1, sweep 1: none on 2 of 4 curves, where complex_modulus does not reach"
+                                + " 200000 Pa");
+    }
+
     /** A value reached exactly at a measured point is reached once, at either end as well. */
     @Test
     void aPointThatHasTheValueIsOnePlace() {
