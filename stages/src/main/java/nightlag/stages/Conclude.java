@@ -60,7 +60,10 @@ public final class Conclude {
         notes.addAll(figures.findings().notes());
         return new LotResult(
                 lot.points(),
-                Stream.of(markers.markers(), spectrum.markers(), figures.findings().markers())
+                Stream.of(
+                                markers.markers(),
+                                spectrum.markers(),
+                                figures.findings().markers())
                         .flatMap(List::stream)
                         .sorted(MARKER_ORDER)
                         .toList(),

@@ -29,7 +29,8 @@ public final class RandomLot {
 
     public LotResult result(String grade, String lot) {
         List<ModulusPoint> made = points(grade, lot);
-        return new LotResult(made, markers(), shiftFactors(), masterCurve(), spectrum(), List.of(), List.of(), derived(made));
+        return new LotResult(
+                made, markers(), shiftFactors(), masterCurve(), spectrum(), List.of(), List.of(), derived(made));
     }
 
     private List<FigureRow> derived(List<ModulusPoint> of) {
