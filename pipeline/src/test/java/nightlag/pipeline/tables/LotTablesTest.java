@@ -122,7 +122,14 @@ class LotTablesTest {
         FigureRow third = derived("10", "rutting_factor", 1000, OptionalDouble.of(10));
 
         write(new LotResult(
-                List.of(), List.of(), List.of(), List.of(), List.of(), List.of(), List.of(third, first, second)));
+                List.of(),
+                List.of(),
+                List.of(),
+                List.of(),
+                List.of(),
+                List.of(),
+                List.of(),
+                List.of(third, first, second)));
 
         assertThat(table("derived")).isEqualTo("""
                         grade,lot,specimen,sweep,point,quantity,temperature_C,frequency_Hz,value,u,unit,source_file
