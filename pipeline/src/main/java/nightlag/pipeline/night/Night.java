@@ -95,7 +95,7 @@ public final class Night {
             outcome = tally.outcome();
             NightTables.writeFiles(folder, outcome.files());
             report.finish(new NightHeading(
-                    folder.getFileName().toString(), version, outcome.counts(), outcome.concerns(configuration)));
+                    String.valueOf(folder.getFileName()), version, outcome.counts(), outcome.concerns(configuration)));
         }
         LOG.info(
                 "{} files; {} lots rebuilt",

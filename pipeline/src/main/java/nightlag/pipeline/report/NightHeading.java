@@ -14,7 +14,7 @@ public record NightHeading(String night, String version, List<String> counts, Li
     /** Copies the lists. */
     public NightHeading {
         counts = List.copyOf(counts);
-        concerns =
-                concerns.stream().filter(concern -> !concern.lines().isEmpty()).toList();
+        concerns = List.copyOf(
+                concerns.stream().filter(concern -> !concern.lines().isEmpty()).toList());
     }
 }

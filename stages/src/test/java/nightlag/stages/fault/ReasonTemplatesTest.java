@@ -25,6 +25,6 @@ class ReasonTemplatesTest {
     @MethodSource("everyReason")
     void everyApostropheIsDoubledAndEveryPartShows(ReasonCode code) {
         assertThat(code.template().replace("''", "")).doesNotContain("'");
-        assertThat(code.with(1, 2, 3, 4, 5, 6, 7, 8).sentence()).doesNotContain("{");
+        assertThat(code.with(1, 2, 3, 4, 5, 6, 7, 8, 9).sentence()).doesNotContain("{");
     }
 }
