@@ -72,7 +72,8 @@ public final class Conclude {
                 spectrum.rows().stream().sorted(ROW_ORDER).toList(),
                 notes,
                 markers.notes(),
-                figures.rows());
+                figures.rows(),
+                sweeps.sweeps());
     }
 
     /** The curve that a master curve or a spectrum is asked of; what there is to say of it goes into the notes. */

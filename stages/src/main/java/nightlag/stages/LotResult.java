@@ -8,6 +8,7 @@ import nightlag.stages.moduli.ModulusPoint;
 import nightlag.stages.spectrum.SpectrumRow;
 import nightlag.stages.superposition.MasterPoint;
 import nightlag.stages.superposition.ShiftFactor;
+import nightlag.stages.sweep.Sweep;
 
 /**
  * What the points of one lot became. Lists are in the order of the tables.
@@ -20,6 +21,7 @@ import nightlag.stages.superposition.ShiftFactor;
  * @param notes what was asked for and could not be had, or is unusual, and why
  * @param absent characteristic figures that the data do not support, and why; most materials lack some
  * @param derived the grade's own figures of each point
+ * @param sweeps the sweeps its points were assembled to
  */
 public record LotResult(
         List<ModulusPoint> points,
@@ -29,7 +31,8 @@ public record LotResult(
         List<SpectrumRow> spectrum,
         List<Reason> notes,
         List<Reason> absent,
-        List<FigureRow> derived) {
+        List<FigureRow> derived,
+        List<Sweep> sweeps) {
     /** Nothing is known of the lot, not even a point. */
     public static final LotResult EMPTY =
             new LotResult(List.of(), List.of(), List.of(), List.of(), List.of(), List.of(), List.of());
@@ -44,9 +47,10 @@ public record LotResult(
         notes = List.copyOf(notes);
         absent = List.copyOf(absent);
         derived = List.copyOf(derived);
+        sweeps = List.copyOf(sweeps);
     }
 
-    /** A result without figures of the grade's own. */
+    /** A result without sweeps, and without figures of the grade's own. */
     public LotResult(
             List<ModulusPoint> points,
             List<Marker> markers,
@@ -55,6 +59,6 @@ public record LotResult(
             List<SpectrumRow> spectrum,
             List<Reason> notes,
             List<Reason> absent) {
-        this(points, markers, shiftFactors, masterCurve, spectrum, notes, absent, List.of());
+        this(points, markers, shiftFactors, masterCurve, spectrum, notes, absent, List.of(), List.of());
     }
 }

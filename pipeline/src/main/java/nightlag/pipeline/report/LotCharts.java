@@ -2,6 +2,7 @@ package nightlag.pipeline.report;
 
 import java.util.ArrayList;
 import java.util.List;
+import java.util.function.ToDoubleFunction;
 import java.util.stream.IntStream;
 import java.util.stream.Stream;
 import nightlag.stages.LotResult;
@@ -11,13 +12,12 @@ import nightlag.stages.moduli.Quality;
 import nightlag.stages.spectrum.SpectrumRow;
 import nightlag.stages.superposition.MasterPoint;
 import nightlag.stages.superposition.ShiftFactor;
+import nightlag.stages.sweep.FrequencySweeps;
 import nightlag.stages.sweep.Isotherm;
 import nightlag.stages.sweep.Isotherms;
 
 /** The charts of one lot. */
 final class LotCharts {
-    private static final double KELVIN_AT_ZERO_CELSIUS = 273.15;
-
     /** More temperatures than this are a ramp, and are drawn as one. */
     private static final int MOST_ISOTHERMS = 16;
 
@@ -41,14 +41,16 @@ final class LotCharts {
     /** Those that have something to show. */
     static List<Chart> of(LotResult result) {
         LotCharts charts = new LotCharts(result);
-        return Stream.of(
-                        charts.moduliOverFrequency(),
-                        charts.masterCurve(),
-                        charts.shiftFactors(),
-                        charts.phaseOverModulus(),
-                        charts.lossOverStorage(),
-                        charts.spectrum(SpectrumRow.Kind.RELAXATION, "Relaxation modes", "modulus"),
-                        charts.spectrum(SpectrumRow.Kind.RETARDATION, "Retardation modes", "compliance"))
+        return Stream.concat(
+                        SweepCharts.of(result.sweeps()).stream(),
+                        Stream.of(
+                                charts.moduliOverFrequency(),
+                                charts.masterCurve(),
+                                charts.shiftFactors(),
+                                charts.phaseOverModulus(),
+                                charts.lossOverStorage(),
+                                charts.spectrum(SpectrumRow.Kind.RELAXATION, "Relaxation modes", "modulus"),
+                                charts.spectrum(SpectrumRow.Kind.RETARDATION, "Retardation modes", "compliance")))
                 .filter(Chart::hasPoints)
                 .toList();
     }
@@ -59,7 +61,8 @@ final class LotCharts {
             return List.of(new Family("all temperatures", points));
         }
         List<Family> families = new ArrayList<>();
-        isotherms.forEach(isotherm -> families.add(new Family(celsius(isotherm.temperatureK()), isotherm.points())));
+        isotherms.forEach(
+                isotherm -> families.add(new Family(Written.celsius(isotherm.temperatureK()), isotherm.points())));
         List<ModulusPoint> without =
                 points.stream().filter(point -> point.temperatureK().isEmpty()).toList();
         if (!without.isEmpty()) {
@@ -68,16 +71,16 @@ final class LotCharts {
         return families;
     }
 
-    private static String celsius(double temperatureK) {
-        return Math.round(10 * (temperatureK - KELVIN_AT_ZERO_CELSIUS)) / 10.0 + " °C";
-    }
-
     private Chart moduliOverFrequency() {
         List<Series> series = new ArrayList<>();
         for (int i = 0; i < families.size(); i++) {
             Family family = families.get(i);
+            if (!variesInFrequency(family)) {
+                continue;
+            }
+            String symbol = SweepCharts.symbol(family.points().get(0));
             series.add(Series.of(
-                    "G' " + family.name(),
+                    symbol + "' " + family.name(),
                     i,
                     true,
                     false,
@@ -85,7 +88,7 @@ final class LotCharts {
                     LotCharts::angularFrequency,
                     point -> moduli(point).storagePa()));
             series.add(Series.of(
-                    "G'' " + family.name(),
+                    symbol + "'' " + family.name(),
                     i,
                     false,
                     false,
@@ -101,6 +104,10 @@ final class LotCharts {
                 series);
     }
 
+    private static boolean variesInFrequency(Family family) {
+        return FrequencySweeps.distinctFrequencies(family.points()) > 1;
+    }
+
     private Chart masterCurve() {
         List<MasterPoint> points = result.masterCurve();
         List<Series> series = new ArrayList<>();
@@ -114,9 +121,9 @@ final class LotCharts {
             List<MasterPoint> isotherm = points.stream()
                     .filter(point -> point.temperatureK() == temperature)
                     .toList();
-            String name = celsius(temperature);
+            String name = Written.celsius(temperature);
             series.add(Series.of(
-                    "G' " + name,
+                    symbol() + "' " + name,
                     i,
                     true,
                     false,
@@ -124,7 +131,7 @@ final class LotCharts {
                     point -> point.reduced().angularFrequency(),
                     point -> point.reduced().moduli().storagePa()));
             series.add(Series.of(
-                    "G'' " + name,
+                    symbol() + "'' " + name,
                     i,
                     false,
                     false,
@@ -135,7 +142,7 @@ final class LotCharts {
         return new Chart(
                 points.isEmpty()
                         ? "Master curve"
-                        : "Master curve at " + celsius(points.get(0).referenceTemperatureK()),
+                        : "Master curve at " + Written.celsius(points.get(0).referenceTemperatureK()),
                 "All isotherms moved to the reference temperature; where the material superposes, the colours lie on one"
                         + " another.",
                 Axis.log("reduced angular frequency", RAD_PER_S),
@@ -158,7 +165,7 @@ final class LotCharts {
                                 true,
                                 false,
                                 used,
-                                shift -> shift.temperatureK() - KELVIN_AT_ZERO_CELSIUS,
+                                shift -> Written.toCelsius(shift.temperatureK()),
                                 shift -> shift.log10A().orElse(Double.NaN)),
                         Series.of(
                                 "law",
@@ -166,7 +173,7 @@ final class LotCharts {
                                 false,
                                 true,
                                 used,
-                                shift -> shift.temperatureK() - KELVIN_AT_ZERO_CELSIUS,
+                                shift -> Written.toCelsius(shift.temperatureK()),
                                 shift -> shift.lawLog10A().orElse(Double.NaN))));
     }
 
@@ -193,8 +200,7 @@ final class LotCharts {
                         point -> moduli(point).lossPa()));
     }
 
-    private List<Series> byFamily(
-            java.util.function.ToDoubleFunction<ModulusPoint> x, java.util.function.ToDoubleFunction<ModulusPoint> y) {
+    private List<Series> byFamily(ToDoubleFunction<ModulusPoint> x, ToDoubleFunction<ModulusPoint> y) {
         return IntStream.range(0, families.size())
                 .mapToObj(i -> Series.of(
                         families.get(i).name(), i, true, false, families.get(i).points(), x, y))
@@ -211,6 +217,13 @@ final class LotCharts {
                 Axis.log("time", "s"),
                 Axis.log(what, kind.unit()),
                 List.of(Series.of("modes", 0, true, false, rows, SpectrumRow::timeS, SpectrumRow::value)));
+    }
+
+    /** A master curve is of one deformation. */
+    private String symbol() {
+        return result.points().isEmpty()
+                ? "G"
+                : SweepCharts.symbol(result.points().get(0));
     }
 
     private static double angularFrequency(ModulusPoint point) {

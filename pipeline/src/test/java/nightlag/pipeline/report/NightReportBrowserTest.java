@@ -54,7 +54,9 @@ class NightReportBrowserTest {
             assertThat(figure.get("shapes").asInt()).isPositive();
             assertThat(figure.get("values").asInt()).isPositive();
         }
-        assertThat(page.get("readOff").asText()).contains(" Pa at ").endsWith(" rad/s");
+        assertThat(page.get("readOff").asText())
+                .contains(" Pa at ")
+                .endsWith(charts.get(0).x().unit());
         assertThat(page.get("overflow").asBoolean()).isFalse();
     }
 

@@ -86,9 +86,9 @@ class NightReportTest {
     void figuresAreWrittenToTheSecondDigitOfTheirUncertainty() {
         assertThat(value(46975.857, 70.6, "Pa")).isEqualTo("46976 ± 71 Pa");
         assertThat(value(1533.4, 124.68, "Pa·s")).isEqualTo("1530 ± 120 Pa·s");
-        assertThat(value(3.9389798e-6, 2.7568e-7, "1/Pa")).isEqualTo("(3.94 ± 0.28)·10^-6 1/Pa");
+        assertThat(value(3.9389798e-6, 2.7568e-7, "1/Pa")).isEqualTo("(3.94 ± 0.28)·10⁻⁶ 1/Pa");
         assertThat(value(253872.84, 19104.7, "Pa")).isEqualTo("254000 ± 19000 Pa");
-        assertThat(value(2538728400.0, 19104700, "Pa")).isEqualTo("(2.539 ± 0.019)·10^9 Pa");
+        assertThat(value(2538728400.0, 19104700, "Pa")).isEqualTo("(2.539 ± 0.019)·10⁹ Pa");
         assertThat(value(0.0022985, Double.NaN, "1")).isEqualTo("0.002299");
         assertThat(value(373.15, 0.0123, "°C")).isEqualTo("100.000 ± 0.012 °C");
     }

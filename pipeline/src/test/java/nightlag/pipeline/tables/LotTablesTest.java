@@ -129,7 +129,8 @@ class LotTablesTest {
                 List.of(),
                 List.of(),
                 List.of(),
-                List.of(third, first, second)));
+                List.of(third, first, second),
+                List.of()));
 
         assertThat(table("derived")).isEqualTo("""
                         grade,lot,specimen,sweep,point,quantity,temperature_C,frequency_Hz,value,u,unit,source_file
@@ -279,7 +280,8 @@ class LotTablesTest {
                 shuffled(result.spectrum(), seed),
                 List.of(),
                 List.of(),
-                shuffled(result.derived(), seed));
+                shuffled(result.derived(), seed),
+                List.of());
         Locale was = Locale.getDefault();
 
         write(result);

@@ -5,6 +5,7 @@ import java.util.List;
 import java.util.Optional;
 import java.util.OptionalDouble;
 import java.util.Random;
+import java.util.stream.Stream;
 import nightlag.pipeline.RandomPoints;
 import nightlag.stages.LotResult;
 import nightlag.stages.moduli.FigureRow;
@@ -13,9 +14,13 @@ import nightlag.stages.moduli.Moduli;
 import nightlag.stages.moduli.ModulusPoint;
 import nightlag.stages.moduli.ModulusReading;
 import nightlag.stages.moduli.PointKey;
+import nightlag.stages.moduli.Quality;
 import nightlag.stages.spectrum.SpectrumRow;
 import nightlag.stages.superposition.MasterPoint;
 import nightlag.stages.superposition.ShiftFactor;
+import nightlag.stages.sweep.Sweep;
+import nightlag.stages.sweep.SweepName;
+import nightlag.stages.sweep.SweepPlan;
 
 /** A lot of no material, with rows in every table; every row differs from every other in its key. */
 public final class RandomLot {
@@ -30,7 +35,34 @@ public final class RandomLot {
     public LotResult result(String grade, String lot) {
         List<ModulusPoint> made = points(grade, lot);
         return new LotResult(
-                made, markers(), shiftFactors(), masterCurve(), spectrum(), List.of(), List.of(), derived(made));
+                made,
+                markers(),
+                shiftFactors(),
+                masterCurve(),
+                spectrum(),
+                List.of(),
+                List.of(),
+                derived(made),
+                sweeps(made));
+    }
+
+    /** Sweeps of every kind, whatever varies in them. */
+    private static List<Sweep> sweeps(List<ModulusPoint> of) {
+        List<ModulusPoint> usable = of.stream()
+                .filter(point -> point.quality() != Quality.UNUSABLE
+                        && point.moduli().isPresent()
+                        && point.temperatureK().isPresent())
+                .toList();
+        return usable.isEmpty()
+                ? List.of()
+                : Stream.of(SweepPlan.Kind.AMPLITUDE, SweepPlan.Kind.TEMPERATURE, SweepPlan.Kind.TIME)
+                        .map(kind -> new Sweep(
+                                SweepName.of(usable.get(0)),
+                                kind,
+                                OptionalDouble.empty(),
+                                OptionalDouble.of(1),
+                                usable))
+                        .toList();
     }
 
     private List<FigureRow> derived(List<ModulusPoint> of) {
