@@ -4,6 +4,7 @@ import java.util.ArrayList;
 import java.util.Arrays;
 import java.util.Comparator;
 import java.util.List;
+import java.util.stream.IntStream;
 import nightlag.stages.moduli.Moduli;
 import nightlag.stages.moduli.ModuliCovariance;
 import nightlag.stages.numeric.SmoothCurve;
@@ -24,10 +25,18 @@ final class LogModuli {
     private static final int STRETCH = 50;
 
     /**
-     * The strength of the process that waves a logarithm by about 0.03, up and down in a decade of frequency, as modes a
+     * The strength of the process that waves a logarithm by about 0.06, up and down in a decade of frequency, as modes a
      * decade apart do.
      */
-    private static final double WAVES_OF_MODES = 0.3;
+    private static final double WAVES_OF_MODES = 1;
+
+    /**
+     * The strength where frequencies stand so far apart that such waves pass between them unseen, about 0.1. It makes the u of
+     * crossovers of published mode sets, two frequencies a decade and no noise, as large as their errors.
+     */
+    private static final double UNSEEN_WAVES = 3;
+    /** A wave of a decade takes more than three frequencies to be seen; ln ω. */
+    private static final double SPARSE = 0.3 * Math.log(10);
 
     private final double[] x;
     private final Entry[] entries;
@@ -103,13 +112,27 @@ final class LogModuli {
     }
 
     /**
-     * Moduli over frequency. Their curves may wave as those of single modes do, even where noise would hide it.
+     * Moduli over frequency. Their curves may wave as those of single modes do, even where noise or sparse frequencies hide it.
      *
      * @param angularFrequencies above zero
      * @param moduli as many, standing out from zero
      */
     static LogModuli overFrequency(double[] angularFrequencies, List<Moduli> moduli) {
-        return of(angularFrequencies, moduli, WAVES_OF_MODES);
+        return of(
+                angularFrequencies,
+                moduli,
+                medianInterval(angularFrequencies) > SPARSE ? UNSEEN_WAVES : WAVES_OF_MODES);
+    }
+
+    private static double medianInterval(double[] angularFrequencies) {
+        double[] logs =
+                Arrays.stream(angularFrequencies).map(Math::log).sorted().toArray();
+        double[] intervals = IntStream.range(1, logs.length)
+                .mapToDouble(i -> logs[i] - logs[i - 1])
+                .filter(interval -> interval > SAME)
+                .sorted()
+                .toArray();
+        return intervals.length == 0 ? 0 : intervals[intervals.length / 2];
     }
 
     /**

@@ -70,7 +70,7 @@ class FrequencyMarkersValidationTest {
     @MethodSource("crossovers")
     void withoutNoiseACrossoverIsWithinItsBar(
             String name, DoubleFunction<Complex> model, double angularFrequency, double modulusPa) {
-        for (int perDecade : new int[] {5, 7, 10, 20}) {
+        for (int perDecade : new int[] {4, 5, 7, 10, 20}) {
             double[] places = MarkerModel.decades(angularFrequency / 137, angularFrequency * 211, perDecade);
 
             Findings found = FrequencyMarkers.of(PLACE, MarkerModel.readings(model, places, 0, new Random(1)));
@@ -82,6 +82,30 @@ class FrequencyMarkersValidationTest {
             Marker modulus = only(found, "crossover_modulus");
             assertThat(modulus.value()).as("%d a decade", perDecade).isCloseTo(modulusPa, withPercentage(BAR));
             assertThat(modulus.unit()).isEqualTo("Pa");
+        }
+    }
+
+    /** Waves of the single modes pass between the frequencies; the bar cannot be met, and u says so. */
+    @ParameterizedTest(name = "{0}")
+    @MethodSource("crossovers")
+    void whereFrequenciesAreSparseTheUncertaintySaysSo(
+            String name, DoubleFunction<Complex> model, double angularFrequency, double modulusPa) {
+        for (int perDecade : new int[] {2, 3}) {
+            for (int start = 0; start < 4; start++) {
+                double first = angularFrequency / 137 * Math.pow(10, start / (4.0 * perDecade));
+                double[] places = MarkerModel.decades(first, first * 28907, perDecade);
+
+                Findings found = FrequencyMarkers.of(PLACE, MarkerModel.readings(model, places, 0, new Random(1)));
+
+                Marker place = only(found, "crossover_angular_frequency");
+                assertThat(place.value())
+                        .as("%d a decade from %s", perDecade, first)
+                        .isCloseTo(angularFrequency, within(2 * place.u().orElseThrow()));
+                Marker modulus = only(found, "crossover_modulus");
+                assertThat(modulus.value())
+                        .as("%d a decade from %s", perDecade, first)
+                        .isCloseTo(modulusPa, within(2 * modulus.u().orElseThrow()));
+            }
         }
     }
 

@@ -15,7 +15,10 @@ import org.junit.jupiter.api.Tag;
 import org.junit.jupiter.params.ParameterizedTest;
 import org.junit.jupiter.params.provider.ValueSource;
 
-/** How often markers are within their own 95 % interval where moduli have 1 % noise. */
+/**
+ * How often the 95 % intervals of markers hold the truth where moduli have 1 % noise.
+ * {@code mvn test -pl stages -Dtest=MarkerStudyTest -Dnightlag.study=long} prints the table.
+ */
 @Tag("study")
 class MarkerStudyTest {
     private static final MarkerPlace PLACE = new MarkerPlace(new SweepName("1", "2"), OptionalDouble.of(423.15));
@@ -45,6 +48,20 @@ class MarkerStudyTest {
                 MarkerModel.maxwell(LAUN),
                 MarkerModel.decades(0.01, 100, perDecade),
                 new double[] {1.604072, 9806.011});
+    }
+
+    /** Modes 0.8 decades apart; linear part of pom-pom parameters (Verbeeten, Peters & Baaijens 2001), from memory. */
+    @ParameterizedTest(name = "{0} a decade")
+    @ValueSource(ints = {5, 10, 20})
+    void crossoverOfSixModes(int perDecade) {
+        covered(
+                "six modes",
+                perDecade,
+                MarkerModel.maxwell(
+                        2.1662e4, 0.1, 9.9545e3, 0.63096, 3.7775e3, 3.9811, 9.6955e2, 25.119, 1.1834e2, 158.49, 4.1614,
+                        1000),
+                MarkerModel.decades(0.01, 100, perDecade),
+                new double[] {0.92289674, 7310.86});
     }
 
     @ParameterizedTest(name = "{0} a decade")
@@ -103,7 +120,7 @@ class MarkerStudyTest {
 
     private static void covered(
             String name, int perDecade, List<String> properties, double[] truth, Function<Random, Findings> measure) {
-        int draws = Study.draws(30, 150);
+        int draws = Study.draws(30, 400);
         int[] within = new int[truth.length];
         int[] found = new int[truth.length];
         int[] tooMany = new int[truth.length];
@@ -125,16 +142,17 @@ class MarkerStudyTest {
         for (int p = 0; p < truth.length; p++) {
             double share = (double) within[p] / found[p];
             Study.row(
-                    "%s, %d a decade, %s: within %.3f, rms error %.4f, found %d of %d, more than one %d",
+                    "| %s | %d | %s | %d of %d | %.1f | %.1f |",
                     name,
                     perDecade,
                     properties.get(p),
-                    share,
-                    Math.sqrt(squares[p] / found[p]),
                     found[p],
                     draws,
-                    tooMany[p]);
-            assertThat(found[p]).as(properties.get(p) + " found").isGreaterThan((int) (0.9 * draws));
+                    100 * share,
+                    100 * Math.sqrt(squares[p] / found[p]));
+            assertThat(tooMany[p]).as(properties.get(p) + " more than once").isZero();
+            // at five strains a decade one limit in a hundred is too uncertain to be given
+            assertThat(found[p]).as(properties.get(p) + " found").isGreaterThanOrEqualTo((int) (0.97 * draws));
             // the bar is 90 to 98 %, met by a share that is counted and so uncertain itself
             double slack = 2 * Math.sqrt(0.05 / draws);
             assertThat(share).as(properties.get(p)).isBetween(0.90 - slack, 0.98 + slack);
