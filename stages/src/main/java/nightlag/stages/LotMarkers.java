@@ -89,26 +89,39 @@ final class LotMarkers {
 
     /** The transitions of ramps, at each frequency and together. */
     private void transitions(SweepPlan plan) {
-        byName(SweepPlan.Kind.TEMPERATURE)
-                .values()
-                .forEach(frequencies -> found.add(GlassTransition.of(frequencies, plan)));
+        together(SweepPlan.Kind.TEMPERATURE)
+                .forEach((recorded, frequencies) -> found.add(recorded.told(GlassTransition.of(frequencies, plan))));
     }
 
     /** Where one specimen was followed at several frequencies. */
     private void gelPoints() {
         for (SweepPlan.Kind kind : List.of(SweepPlan.Kind.TIME, SweepPlan.Kind.TEMPERATURE)) {
-            byName(kind).forEach((name, frequencies) -> {
+            together(kind).forEach((recorded, frequencies) -> {
                 if (frequencies.size() > 1) {
-                    found.add(GelPoint.of(name, frequencies, kind));
+                    found.add(recorded.told(GelPoint.of(recorded.name(), frequencies, kind)));
                 }
             });
         }
     }
 
+    /** What was recorded at once at several frequencies: a sweep, or a leg of it. */
+    private record Recorded(SweepName name, Optional<Sweep.Leg> leg) {
+        /** The same figures, the leg named in their method. */
+        Findings told(Findings findings) {
+            return leg.map(own -> new Findings(
+                            findings.markers().stream()
+                                    .map(marker -> marker.withMethod(marker.method() + "; " + own.words()))
+                                    .toList(),
+                            findings.notes()))
+                    .orElse(findings);
+        }
+    }
+
     /** The sweeps of one kind, those that were recorded as one together. */
-    private Map<SweepName, List<Sweep>> byName(SweepPlan.Kind kind) {
+    private Map<Recorded, List<Sweep>> together(SweepPlan.Kind kind) {
         return sweeps.stream()
                 .filter(sweep -> sweep.kind() == kind)
-                .collect(Collectors.groupingBy(Sweep::name, LinkedHashMap::new, Collectors.toList()));
+                .collect(Collectors.groupingBy(
+                        sweep -> new Recorded(sweep.name(), sweep.leg()), LinkedHashMap::new, Collectors.toList()));
     }
 }

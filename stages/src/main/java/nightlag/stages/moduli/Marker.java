@@ -24,4 +24,9 @@ public record Marker(
         double value,
         OptionalDouble u,
         String unit,
-        String method) {}
+        String method) {
+    /** The same figure, found in other words. */
+    public Marker withMethod(String words) {
+        return new Marker(specimen, sweep, property, temperatureK, frequencyHz, value, u, unit, words);
+    }
+}

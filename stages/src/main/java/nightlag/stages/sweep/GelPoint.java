@@ -69,18 +69,12 @@ public final class GelPoint {
                 : point -> point.temperatureK().orElse(Double.NaN);
         List<Sweep> fit = sweeps.stream()
                 .filter(sweep -> sweep.kind() == kind && sweep.frequencyHz().orElse(0) > 0)
-                .map(sweep -> new Sweep(
-                        sweep.name(),
-                        kind,
-                        sweep.temperatureK(),
-                        sweep.frequencyHz(),
-                        sweep.points().stream()
-                                .filter(point -> Double.isFinite(place.applyAsDouble(point))
-                                        && point.moduli()
-                                                .filter(moduli ->
-                                                        moduli.complex().isFinite() && moduli.magnitudePa() > 0)
-                                                .isPresent())
-                                .toList()))
+                .map(sweep -> sweep.withPoints(sweep.points().stream()
+                        .filter(point -> Double.isFinite(place.applyAsDouble(point))
+                                && point.moduli()
+                                        .filter(moduli -> moduli.complex().isFinite() && moduli.magnitudePa() > 0)
+                                        .isPresent())
+                        .toList()))
                 .toList();
         List<LossAngleCurve> curves = fit.stream()
                 .filter(sweep -> !sweep.points().isEmpty())

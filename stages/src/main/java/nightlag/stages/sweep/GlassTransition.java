@@ -196,8 +196,7 @@ public final class GlassTransition {
     }
 
     private void note(TransitionReason reason, Object... parts) {
-        List<Object> all =
-                new ArrayList<>(List.of(sweep.name().specimen(), sweep.name().sweep()));
+        List<Object> all = new ArrayList<>(List.of(sweep.name().specimen(), sweep.title()));
         all.add(sweep.frequencyHz().isPresent() ? (Object) sweep.frequencyHz().getAsDouble() : "?");
         all.addAll(List.of(parts));
         notes.add(reason.with(all.toArray()));

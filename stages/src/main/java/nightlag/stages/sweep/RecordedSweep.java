@@ -2,6 +2,7 @@ package nightlag.stages.sweep;
 
 import java.util.ArrayList;
 import java.util.List;
+import java.util.Optional;
 import java.util.OptionalDouble;
 import java.util.function.ToDoubleFunction;
 import nightlag.stages.fault.Reason;
@@ -10,7 +11,7 @@ import nightlag.stages.moduli.ModulusPoint;
 /**
  * Sorts what was recorded as one sweep, less its amplitude sweeps, by what varies. Where both temperature and frequency do,
  * each isotherm is a frequency sweep; where the temperature never rests, or the isotherms hold too few frequencies, each
- * frequency is a temperature sweep.
+ * frequency is a temperature sweep, and heating and cooling are two.
  */
 final class RecordedSweep {
     /** Fewer of what varies are no sweep where nobody says so. */
@@ -177,11 +178,29 @@ final class RecordedSweep {
                     && (PointGroups.byIsotherm(known).size() >= least
                             || PointGroups.range(known, PointGroups::temperatureK) > PointGroups.HOLD_K);
             if (varies) {
-                add(
-                        SweepPlan.Kind.TEMPERATURE,
-                        OptionalDouble.empty(),
-                        mean(group, PointGroups::frequencyHz),
-                        PointGroups.rising(known, PointGroups::temperatureK));
+                ramp(known, mean(group, PointGroups::frequencyHz));
+            }
+        }
+    }
+
+    /** A specimen is another when it is cooled again, and a thermometer lags behind it from the other side. */
+    private void ramp(List<ModulusPoint> known, OptionalDouble frequencyHz) {
+        List<TemperatureLegs.Stretch> legs = TemperatureLegs.of(known);
+        for (int i = 0; i < legs.size(); i++) {
+            sweeps.add(new Sweep(
+                    name,
+                    SweepPlan.Kind.TEMPERATURE,
+                    OptionalDouble.empty(),
+                    frequencyHz,
+                    PointGroups.rising(legs.get(i).points(), PointGroups::temperatureK),
+                    legs.size() == 1
+                            ? Optional.empty()
+                            : Optional.of(new Sweep.Leg(i + 1, legs.get(i).heating()))));
+        }
+        if (legs.size() > 1) {
+            Reason note = SweepReason.SWEEP_RAMP_TURNS.with(name.specimen(), name.sweep(), legs.size());
+            if (!notes.contains(note)) {
+                notes.add(note);
             }
         }
     }

@@ -61,12 +61,7 @@ final class Repeats {
     /** The sweep with one point in place of each set of repeats. */
     Sweep averaged() {
         return areThereAny()
-                ? new Sweep(
-                        sweep.name(),
-                        sweep.kind(),
-                        sweep.temperatureK(),
-                        sweep.frequencyHz(),
-                        groups.stream().map(this::together).toList())
+                ? sweep.withPoints(groups.stream().map(this::together).toList())
                 : sweep;
     }
 

@@ -20,6 +20,9 @@ public enum SweepReason implements ReasonCode {
     /** Specimen, sweep, what varies, what they were taken for. */
     SWEEP_AMBIGUOUS(
             "specimen {0}, sweep {1}: {2} vary, taken as {3}; kind of the section sweeps in the grade file decides otherwise"),
+    /** Specimen, sweep, how many legs. */
+    SWEEP_RAMP_TURNS(
+            "specimen {0}, sweep {1}: the ramp turns; its {2} legs of heating and cooling are taken as sweeps of their own, and the method of a marker says which"),
     /** Specimen, sweep. */
     SWEEP_MIXED_DEFORMATION(
             "specimen {0}, sweep {1}: points in shear and in extension, two different moduli, are taken as two sweeps"),

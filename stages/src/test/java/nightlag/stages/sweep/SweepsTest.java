@@ -126,6 +126,81 @@ class SweepsTest {
     }
 
     @Test
+    void heatingAndCoolingAreTwoSweeps() {
+        List<SeriesPoint> points = new ArrayList<>();
+        for (int i = 0; i < 101; i++) {
+            points.add(SeriesPoint.of(1000 - i, ROOM + 50 - Math.abs(i - 50), 1).after(20 * i));
+        }
+
+        Sweeps sweeps = found(points);
+
+        assertThat(sweeps.sweeps())
+                .extracting(sweep -> sweep.leg().orElseThrow().words())
+                .containsExactly("leg 1, heating", "leg 2, cooling");
+        assertThat(sweeps.sweeps()).extracting(sweep -> sweep.points().size()).containsExactly(51, 50);
+        assertThat(sweeps.sweeps())
+                .allSatisfy(sweep -> assertThat(sweep.points())
+                        .extracting(point -> point.temperatureK().orElseThrow())
+                        .isSorted());
+        assertThat(sentence(sweeps, SweepReason.SWEEP_RAMP_TURNS))
+                .isEqualTo(
+                        "specimen 1, sweep 1: the ramp turns; its 2 legs of heating and cooling are taken as sweeps of"
+                                + " their own, and the method of a marker says which");
+    }
+
+    /** Without a time the points' own order says where it turns. */
+    @Test
+    void aRampOfSeveralFrequenciesTurnsAtEach() {
+        List<SeriesPoint> points = new ArrayList<>();
+        for (int i = 0; i < 120; i++) {
+            points.add(SeriesPoint.of(i, ROOM - Math.abs(i - 60), Math.pow(2, i % 3)));
+        }
+
+        Sweeps sweeps = of(points, Kind.TEMPERATURE);
+
+        assertThat(sweeps.sweeps())
+                .extracting(sweep -> sweep.frequencyHz().orElseThrow() + " "
+                        + sweep.leg().orElseThrow().number())
+                .containsExactly("1.0 1", "1.0 2", "2.0 1", "2.0 2", "4.0 1", "4.0 2");
+        assertThat(codes(sweeps.notes())).containsExactly("SWEEP_RAMP_TURNS");
+    }
+
+    @Test
+    void coolingAndHeatingInAFileEachOnItsOwnClockAreTwoSweeps() {
+        List<SeriesPoint> points = new ArrayList<>();
+        for (int i = 0; i < 40; i++) {
+            points.add(SeriesPoint.of(i, ROOM + i, 1)
+                    .named("1", "1", "bench/up.csv")
+                    .after(20 * i));
+            points.add(SeriesPoint.of(i, ROOM + 40 - i, 1)
+                    .named("1", "1", "bench/down.csv")
+                    .after(20 * i + 5));
+        }
+
+        assertThat(found(points).sweeps())
+                .extracting(sweep -> sweep.leg().orElseThrow().heating())
+                .containsExactly(false, true);
+    }
+
+    @Test
+    void twoRampsUpAreRepeatsAndAThermostatThatWandersTurnsNoRamp() {
+        List<SeriesPoint> points = new ArrayList<>();
+        for (int i = 0; i < 60; i++) {
+            for (String file : List.of("bench/a.csv", "bench/b.csv")) {
+                points.add(SeriesPoint.of(i, ROOM + 0.5 * i + Math.sin(0.7 * i), 1)
+                        .named("1", String.valueOf(i), file)
+                        .after(20 * i));
+            }
+        }
+
+        Sweeps sweeps = found(points);
+
+        assertThat(only(sweeps).points()).hasSize(120);
+        assertThat(only(sweeps).leg()).isEmpty();
+        assertThat(sweeps.notes()).isEmpty();
+    }
+
+    @Test
     void whatGoesOnAtOneTemperatureIsATimeSweepThoughItWanders() {
         List<SeriesPoint> points = new ArrayList<>();
         for (int i = 0; i < 100; i++) {
