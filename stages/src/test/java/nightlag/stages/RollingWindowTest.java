@@ -437,6 +437,22 @@ class RollingWindowTest {
     }
 
     @Test
+    void aSteepChangeIsFollowedAndMakesAWindowDoubtfulAtMost() {
+        Window made = new Window(376);
+        made.kelvinPerSecond = 0.15;
+        double change = 1 - modulus(376.45, 1).abs() / modulus(375.55, 1).abs();
+        assertThat(change).isGreaterThan(0.2);
+
+        ModulusPoint window = reduce(made.build(true));
+        ModulusPoint record = reduce(made.build(false));
+
+        assertThat(window.flags()).containsExactly(Flag.UNSETTLED);
+        assertThat(window.quality()).isEqualTo(Quality.DOUBTFUL);
+        assertThat(error(window, 376, 1)).isLessThan(5e-3);
+        assertThat(record.quality()).isEqualTo(Quality.UNUSABLE);
+    }
+
+    @Test
     void aRampIsNoWanderingTemperatureButWhatLeavesItIs() {
         Window made = new Window(345);
         made.kelvinPerSecond = 0.2;

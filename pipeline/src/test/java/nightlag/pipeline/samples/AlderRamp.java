@@ -9,10 +9,10 @@ import nightlag.stages.numeric.Complex;
  * the modulus at the temperature of the moment, σ = Re{G*(T(t)) γ* e^{iωt}}.
  */
 final class AlderRamp {
-    private static final double START_C = 21;
+    private static final double START_C = -8;
     private static final double KELVIN_PER_S = 2.0 / 60;
     private static final int PER_CYCLE = 16;
-    private static final int CYCLES = 246;
+    private static final int CYCLES = 756;
     private static final double STRAIN = 1e-3;
     private static final double PHASE = -0.8;
 

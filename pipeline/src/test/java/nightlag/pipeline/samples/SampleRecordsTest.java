@@ -75,7 +75,7 @@ class SampleRecordsTest {
                         entry("damper-bench", 13),
                         entry("melt-bench", 68),
                         entry("partner-table", 100),
-                        entry("ramp-bench", 81),
+                        entry("ramp-bench", 251),
                         entry("shear-bench", 16));
     }
 

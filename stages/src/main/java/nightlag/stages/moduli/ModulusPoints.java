@@ -99,7 +99,7 @@ public final class ModulusPoints {
                 stress.complianceRatio(),
                 ranges.deformation(),
                 ranges.load(),
-                plan);
+                windowS(waveform).isPresent() ? plan.ofWindow() : plan);
         Moduli moduli = stress.moduli();
         List<Reason> reasons = new ArrayList<>(screening.reasons());
         reasons.addAll(fit.notes());

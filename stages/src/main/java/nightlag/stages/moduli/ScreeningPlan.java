@@ -34,6 +34,27 @@ public record ScreeningPlan(
         Threshold compliance,
         Threshold temperatureWanderK,
         Threshold frequencyMismatch) {
+    /**
+     * The plan for a window of a longer record: a modulus that changes there is what is being measured, and the fit follows it,
+     * so that change makes a point doubtful at most.
+     */
+    ScreeningPlan ofWindow() {
+        return new ScreeningPlan(
+                minCycles,
+                clipped,
+                gaps,
+                clock,
+                snrDb,
+                baseline,
+                new Threshold(cycleTrend.doubtful(), OptionalDouble.empty()),
+                thirdHarmonic,
+                evenHarmonics,
+                inertia,
+                compliance,
+                temperatureWanderK,
+                frequencyMismatch);
+    }
+
     /** The defaults of the configuration. */
     public static ScreeningPlan withDefaults() {
         return new ScreeningPlan(
