@@ -5,9 +5,11 @@ import java.util.LinkedHashMap;
 import java.util.List;
 import java.util.Map;
 import java.util.Optional;
+import java.util.OptionalDouble;
 import java.util.stream.Collectors;
 import nightlag.stages.geometry.DeformationMode;
 import nightlag.stages.moduli.Findings;
+import nightlag.stages.moduli.Marker;
 import nightlag.stages.moduli.ModulusReading;
 import nightlag.stages.spectrum.KramersKronig;
 import nightlag.stages.superposition.MasterCurve;
@@ -63,8 +65,37 @@ final class LotMarkers {
     }
 
     private void ofMasterCurve(LotCurve curve) {
-        found.add(FrequencyMarkers.of(MarkerPlace.masterCurve(curve.temperatureK()), curve.readings()));
+        Findings onCurve = FrequencyMarkers.of(MarkerPlace.masterCurve(curve.temperatureK()), curve.readings());
+        MasterCurve master = curve.master().orElseThrow();
+        found.add(new Findings(
+                onCurve.markers().stream()
+                        .map(marker -> withShifts(marker, master))
+                        .toList(),
+                onCurve.notes()));
         flow(new SweepName("", ""), curve.temperatureK(), curve.deformation(), curve.readings());
+    }
+
+    /**
+     * With what is not known of the shifts in its u: the points of an isotherm err together by its shift, which their scatter
+     * about a smooth curve does not show.
+     */
+    private static Marker withShifts(Marker marker, MasterCurve master) {
+        if (marker.u().isEmpty()) {
+            return marker;
+        }
+        double place = 2 * Math.PI * marker.frequencyHz().orElseThrow();
+        double shift =
+                marker.property().equals("crossover_angular_frequency") ? master.lnAU(place) : master.lnBU(place);
+        return new Marker(
+                marker.specimen(),
+                marker.sweep(),
+                marker.property(),
+                marker.temperatureK(),
+                marker.frequencyHz(),
+                marker.value(),
+                OptionalDouble.of(Math.hypot(marker.u().getAsDouble(), marker.value() * shift)),
+                marker.unit(),
+                marker.method());
     }
 
     private void flowOfSweeps() {

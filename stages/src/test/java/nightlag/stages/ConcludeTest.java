@@ -119,6 +119,18 @@ class ConcludeTest {
     }
 
     @Test
+    void aRowOfZerosIsPublishedButNotUsed() {
+        TestPoints zeros = point().named("1", "1", "99", "z.csv").hz(1).modulus(new Complex(0, 0));
+
+        LotResult result = conclude(Stream.concat(sweep(463.15, "1"), Stream.of(zeros)), SPECTRUM_WANTED);
+
+        LotResult without = conclude(sweep(463.15, "1"), SPECTRUM_WANTED);
+        assertThat(result.points()).hasSize(32);
+        assertThat(result.markers()).isEqualTo(without.markers());
+        assertThat(noteOf(result)).isEqualTo("SWEEP_UNUSABLE_LEFT_OUT");
+    }
+
+    @Test
     void anAmplitudeSweepBesideItDoesNotEnter() {
         Stream<TestPoints> amplitude = IntStream.range(0, 12)
                 .mapToObj(
@@ -162,6 +174,43 @@ class ConcludeTest {
         assertThat(marker(result, "zero_shear_viscosity"))
                 .isCloseTo(0.01 * 1e5 + 0.1 * 2e4 + 1e3, withinPercentage(0.5));
         assertThat(marker(result, "activation_energy")).isCloseTo(activationEnergy, withinPercentage(0.5));
+    }
+
+    /**
+     * Shifts that are fitted both ways are not well known, and the points of an isotherm err by them together: away from the
+     * reference the crossover is no better known than the shifts there.
+     */
+    @Test
+    void whatIsNotKnownOfTheShiftsIsInTheCrossovers() {
+        SuperpositionPlan fitted = new SuperpositionPlan(
+                483.15,
+                SuperpositionPlan.VerticalShift.FITTED,
+                OptionalDouble.empty(),
+                SuperpositionPlan.ShiftLaw.NONE,
+                0.003);
+        // ω = 100 rad/s, where the material crosses, is measured at the lower temperature alone
+        List<TestPoints> two = Stream.concat(
+                        sweep(443.15, "1"), sweep(483.15, "2", 0.02).filter(p -> p.frequencyHz() < 20))
+                .toList();
+
+        LotResult result = conclude(two.stream(), plan(Optional.empty(), Optional.of(fitted)));
+
+        Marker crossover = result.markers().stream()
+                .filter(m -> m.sweep().isEmpty() && m.property().equals("crossover_angular_frequency"))
+                .reduce((first, last) -> last)
+                .orElseThrow();
+        Marker modulus = result.markers().stream()
+                .filter(m -> m.sweep().isEmpty() && m.property().equals("crossover_modulus"))
+                .reduce((first, last) -> last)
+                .orElseThrow();
+        assertThat(crossover.u().orElseThrow())
+                .isGreaterThan(Math.log(10)
+                        * crossover.value()
+                        * result.shiftFactors().get(0).log10AU().orElseThrow());
+        assertThat(modulus.u().orElseThrow())
+                .isGreaterThan(Math.log(10)
+                        * modulus.value()
+                        * result.shiftFactors().get(0).log10BU().orElseThrow());
     }
 
     private static double marker(LotResult result, String property) {

@@ -164,8 +164,9 @@ public final class KramersKronig {
 
     private static double share(BestMaxwell fit) {
         return Math.sqrt(fit.residuals().stream()
-                .mapToDouble(residual ->
-                        square(residual.difference().abs() / residual.fitted().abs()))
+                .mapToDouble(residual -> square(residual.difference().abs()
+                        / Math.max(
+                                residual.fitted().abs(), residual.difference().abs())))
                 .average()
                 .orElseThrow());
     }

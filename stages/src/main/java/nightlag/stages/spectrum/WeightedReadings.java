@@ -99,11 +99,18 @@ final class WeightedReadings {
     /**
      * Readings weighted by a model of their errors.
      *
-     * @param moduli about where the moduli are, one a reading
+     * @param moduli about where the moduli are, one a reading; where one is zero the reading itself says it
      */
     static WeightedReadings byModel(List<ModulusReading> readings, ErrorModel model, List<Complex> moduli) {
         return new WeightedReadings(
-                readings, moduli.stream().map(model::covariance).toList(), false);
+                readings,
+                IntStream.range(0, readings.size())
+                        .mapToObj(i -> moduli.get(i).abs() > 0
+                                ? moduli.get(i)
+                                : readings.get(i).moduli().complex())
+                        .map(model::covariance)
+                        .toList(),
+                false);
     }
 
     /** The readings without a contribution, given as its rows at unit strength. */

@@ -11,7 +11,8 @@ public enum SweepReason implements ReasonCode {
     /** How many points. */
     SWEEP_REPEATS_AVERAGED("the average of {0} repeats"),
     /** Specimen, sweep, how many unusable points, of how many. */
-    SWEEP_UNUSABLE_LEFT_OUT("specimen {0}, sweep {1}: {2} of {3} points unusable, left out of all that follows"),
+    SWEEP_UNUSABLE_LEFT_OUT(
+            "specimen {0}, sweep {1}: {2} of {3} points left out of all that follows, unusable or without a frequency or a modulus"),
     /** Specimen, how many sweeps. */
     SWEEP_SINGLE_POINTS(
             "specimen {0}: sweeps of one usable point: {1}; points that belong together need one name in the tag sweep"),

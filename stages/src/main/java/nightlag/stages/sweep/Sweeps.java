@@ -36,11 +36,13 @@ public record Sweeps(List<Sweep> sweeps, LotIsotherms isotherms, List<Reason> no
         return new Assembly(plan).of(published, amplitudeSweeps);
     }
 
-    /** Whether a point can be part of a sweep. */
+    /** Whether a point can be part of a sweep. A row of zeros is a cell nobody filled in, not a modulus. */
     static boolean canBelong(ModulusPoint point) {
         return point.quality() != Quality.UNUSABLE
                 && point.frequencyHz().orElse(0) > 0
-                && point.moduli().filter(moduli -> moduli.complex().isFinite()).isPresent();
+                && point.moduli()
+                        .filter(moduli -> moduli.complex().isFinite() && moduli.magnitudePa() > 0)
+                        .isPresent();
     }
 
     /** The work of putting a lot's sweeps together. */

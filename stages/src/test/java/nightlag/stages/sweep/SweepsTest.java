@@ -272,7 +272,8 @@ class SweepsTest {
 
         assertThat(only(sweeps).points()).hasSize(6);
         assertThat(sentence(sweeps, SweepReason.SWEEP_UNUSABLE_LEFT_OUT))
-                .isEqualTo("specimen 1, sweep 1: 1 of 7 points unusable, left out of all that follows");
+                .isEqualTo(
+                        "specimen 1, sweep 1: 1 of 7 points left out of all that follows, unusable or without a frequency or a modulus");
     }
 
     @Test
