@@ -131,6 +131,23 @@ class SuperpositionTest {
         assertThat(straight.markers()).extracting(Marker::property).containsExactly("superposition_misfit");
     }
 
+    /** Half a kelvin off is more than a hundredth of a decade here, ten times what a shift is known to. */
+    @Test
+    void anIsothermNearTheReferenceIsBroughtToItByTheLaw() throws ReductionFault {
+        double referenceK = REFERENCE_K + 0.4;
+
+        MasterCurve curve =
+                Superposition.of(ModelMaterial.LAUN.nine(0, 0, 0), plan(referenceK, VerticalShift.NONE, ShiftLaw.WLF));
+
+        assertThat(curve.notes()).isEmpty();
+        assertThat(ModelMaterial.log10A(referenceK)).isLessThan(-0.01);
+        assertThat(curve.shifts())
+                .allSatisfy(shift -> assertThat(log10A(shift))
+                        .isCloseTo(
+                                ModelMaterial.log10A(shift.temperatureK()) - ModelMaterial.log10A(referenceK),
+                                within(1e-4)));
+    }
+
     @Test
     void aReferenceOutsideTheIsothermsIsAnError() {
         assertThatThrownBy(() -> Superposition.of(
