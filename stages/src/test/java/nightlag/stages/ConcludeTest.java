@@ -24,7 +24,10 @@ import nightlag.stages.numeric.Complex;
 import nightlag.stages.spectrum.RelaxationModes;
 import nightlag.stages.spectrum.SpectrumPlan;
 import nightlag.stages.spectrum.SpectrumRow;
+import nightlag.stages.superposition.MasterPoint;
 import nightlag.stages.superposition.SuperpositionPlan;
+import nightlag.stages.sweep.FrequencyMarkers;
+import nightlag.stages.sweep.MarkerPlace;
 import nightlag.stages.sweep.SweepPlan;
 import org.junit.jupiter.api.Test;
 import org.junit.jupiter.params.ParameterizedTest;
@@ -195,22 +198,23 @@ class ConcludeTest {
 
         LotResult result = conclude(two.stream(), plan(Optional.empty(), Optional.of(fitted)));
 
-        Marker crossover = result.markers().stream()
-                .filter(m -> m.sweep().isEmpty() && m.property().equals("crossover_angular_frequency"))
-                .reduce((first, last) -> last)
-                .orElseThrow();
-        Marker modulus = result.markers().stream()
-                .filter(m -> m.sweep().isEmpty() && m.property().equals("crossover_modulus"))
-                .reduce((first, last) -> last)
-                .orElseThrow();
-        assertThat(crossover.u().orElseThrow())
-                .isGreaterThan(Math.log(10)
-                        * crossover.value()
-                        * result.shiftFactors().get(0).log10AU().orElseThrow());
-        assertThat(modulus.u().orElseThrow())
-                .isGreaterThan(Math.log(10)
-                        * modulus.value()
-                        * result.shiftFactors().get(0).log10BU().orElseThrow());
+        List<Marker> ofTheCurveAlone = FrequencyMarkers.of(
+                        MarkerPlace.masterCurve(483.15),
+                        result.masterCurve().stream().map(MasterPoint::reduced).toList())
+                .markers();
+        assertThat(ofTheCurveAlone)
+                .extracting(Marker::property)
+                .contains("crossover_angular_frequency", "crossover_modulus");
+        for (Marker alone : ofTheCurveAlone) {
+            double u = result.markers().stream()
+                    .filter(m -> m.sweep().isEmpty() && m.property().equals(alone.property()))
+                    .filter(m -> m.value() == alone.value())
+                    .findFirst()
+                    .orElseThrow()
+                    .u()
+                    .orElseThrow();
+            assertThat(u).isGreaterThan(1.001 * alone.u().orElseThrow());
+        }
     }
 
     private static double marker(LotResult result, String property) {
