@@ -25,7 +25,8 @@
 
   function domain(chart, along) {
     const axis = chart[along];
-    const values = chart.series.flatMap((series) => series[along]).filter((value) => drawable(axis, value));
+    const values = chart.series.flatMap((series) => [...series[along], ...(along === 'y' ? series.high : [])])
+      .filter((value) => drawable(axis, value));
     let [low, high] = d3.extent(values);
     if (axis.scale === 'LOG') {
       if (low === high) { low /= 2; high *= 2; }
@@ -81,7 +82,9 @@
   class Plot {
     constructor(chart, figure, number) {
       this.chart = chart;
-      this.spots = chart.series.flatMap((series, s) => series.x.map((x, i) => ({ x, y: series.y[i], s })))
+      this.spots = chart.series.flatMap((series, s) => series.x.map((x, i) => ({
+        x, y: series.y[i], low: series.low[i], high: series.high[i], s,
+      })))
         .filter((spot) => drawable(chart.x, spot.x) && drawable(chart.y, spot.y));
       this.picked = -1;
       const id = `chart-${number}`;
@@ -178,6 +181,12 @@
     drawSeries(series, s) {
       const group = this.marks.append('g').attr('stroke', colour(series.look)).attr('fill', series.filled ? colour(series.look) : 'var(--paper)');
       const spots = this.spots.filter((spot) => spot.s === s);
+      if (series.low.length > 0) {
+        // an end that a logarithmic axis does not have lies on its edge
+        const level = (value) => this.y(drawable(this.chart.y, value) ? value : this.y.domain()[0]);
+        group.append('path').attr('class', 'band').attr('fill', colour(series.look)).attr('stroke', 'none')
+          .attr('d', d3.area((spot) => this.x(spot.x), (spot) => level(spot.low), (spot) => level(spot.high))(spots));
+      }
       if (series.joined) {
         group.append('path').attr('fill', 'none').attr('stroke-width', 1.5)
           .attr('d', d3.line((spot) => this.x(spot.x), (spot) => this.y(spot.y))(spots));
@@ -209,12 +218,19 @@
           return;
         }
         const table = details.append('div').attr('class', 'wide').append('table');
+        const banded = this.chart.series.some((series) => series.low.length > 0);
         table.append('thead').append('tr').selectAll('th')
-          .data(['series', withUnit(this.chart.x), withUnit(this.chart.y)]).join('th').attr('scope', 'col').text(String);
+          .data(['series', withUnit(this.chart.x), withUnit(this.chart.y), ...(banded ? ['low', 'high'] : [])])
+          .join('th').attr('scope', 'col').text(String);
         const rows = table.append('tbody').selectAll('tr').data(this.spots).join('tr');
         rows.append('td').text((spot) => this.chart.series[spot.s].name);
         rows.append('td').attr('class', 'number').text((spot) => figures(spot.x));
         rows.append('td').attr('class', 'number').text((spot) => figures(spot.y));
+        if (banded) {
+          const end = (value) => (value === undefined ? '' : figures(value));
+          rows.append('td').attr('class', 'number').text((spot) => end(spot.low));
+          rows.append('td').attr('class', 'number').text((spot) => end(spot.high));
+        }
       });
     }
 
@@ -247,7 +263,8 @@
       }
       this.pick.attr('cx', this.x(spot.x)).attr('cy', this.y(spot.y));
       const unit = (axis) => (axis.unit ? ` ${axis.unit}` : '');
-      this.readOff.text(`${this.chart.series[spot.s].name}: ${figures(spot.y)}${unit(this.chart.y)} at ${figures(spot.x)}${unit(this.chart.x)}`);
+      const band = spot.low === undefined ? '' : ` (${figures(spot.low)} to ${figures(spot.high)})`;
+      this.readOff.text(`${this.chart.series[spot.s].name}: ${figures(spot.y)}${unit(this.chart.y)}${band} at ${figures(spot.x)}${unit(this.chart.x)}`);
     }
   }
 

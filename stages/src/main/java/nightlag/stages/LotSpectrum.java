@@ -1,9 +1,12 @@
 package nightlag.stages;
 
+import java.util.ArrayList;
 import java.util.List;
+import java.util.OptionalInt;
 import nightlag.stages.fault.Reason;
 import nightlag.stages.fault.ReductionFault;
 import nightlag.stages.moduli.Marker;
+import nightlag.stages.spectrum.ContinuousFit;
 import nightlag.stages.spectrum.DiscreteFit;
 import nightlag.stages.spectrum.DiscreteSpectrum;
 import nightlag.stages.spectrum.SpectrumPlan;
@@ -11,28 +14,45 @@ import nightlag.stages.spectrum.SpectrumReason;
 import nightlag.stages.spectrum.SpectrumRow;
 
 /**
- * The discrete spectrum of a lot.
+ * The discrete and, where wanted, the continuous spectra of a lot.
  *
  * @param markers what completes it, and what follows from it
- * @param rows its modes
+ * @param rows modes and nodes
  * @param notes why there is none, or what is unusual about it
  */
 record LotSpectrum(List<Marker> markers, List<SpectrumRow> rows, List<Reason> notes) {
     /** No spectrum, because none was asked for, or there is nothing to fit it to. */
     static final LotSpectrum NONE = new LotSpectrum(List.of(), List.of(), List.of());
 
-    /** Fits the spectrum to the lot's curve; it holds at the curve's temperature. */
+    /** Fits the spectra to the lot's curve; they hold at the curve's temperature. */
     static LotSpectrum of(LotCurve curve, SpectrumPlan plan) {
         try {
             DiscreteSpectrum spectrum = DiscreteFit.fit(curve.readings(), plan);
-            boolean unshownSolid =
-                    plan.fitEquilibrium() && spectrum.relaxation().isLiquid();
-            return new LotSpectrum(
-                    spectrum.markers(curve.temperatureK()),
-                    spectrum.rows(curve.temperatureK()),
-                    unshownSolid ? List.of(SpectrumReason.EQUILIBRIUM_MODULUS_ZERO.with()) : List.of());
+            List<SpectrumRow> rows = new ArrayList<>(spectrum.rows(curve.temperatureK()));
+            List<Reason> notes = new ArrayList<>();
+            if (plan.fitEquilibrium() && spectrum.relaxation().isLiquid()) {
+                notes.add(SpectrumReason.EQUILIBRIUM_MODULUS_ZERO.with());
+            }
+            if (plan.continuous()) {
+                addContinuous(curve, spectrum, plan, rows, notes);
+            }
+            return new LotSpectrum(spectrum.markers(curve.temperatureK()), rows, notes);
         } catch (ReductionFault fault) {
             return new LotSpectrum(List.of(), List.of(), List.of(fault.reason()));
+        }
+    }
+
+    private static void addContinuous(
+            LotCurve curve, DiscreteSpectrum spectrum, SpectrumPlan plan, List<SpectrumRow> rows, List<Reason> notes) {
+        try {
+            // a fixed number of modes says nothing of how the readings scatter
+            DiscreteSpectrum free = plan.modes().isEmpty()
+                    ? spectrum
+                    : DiscreteFit.fit(
+                            curve.readings(), new SpectrumPlan(plan.fitEquilibrium(), OptionalInt.empty(), true));
+            rows.addAll(ContinuousFit.of(curve.readings(), free).rows(curve.temperatureK()));
+        } catch (ReductionFault fault) {
+            notes.add(fault.reason());
         }
     }
 }

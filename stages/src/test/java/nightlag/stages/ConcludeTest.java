@@ -273,6 +273,51 @@ class ConcludeTest {
     }
 
     @Test
+    void continuousSpectraStandBesideTheModes() {
+        SpectrumPlan wanted = new SpectrumPlan(false, OptionalInt.empty(), true);
+        LotResult discrete = conclude(sweep(463.15, "1"), SPECTRUM_WANTED);
+        LotResult result = conclude(sweep(463.15, "1"), plan(Optional.of(wanted), Optional.empty()));
+
+        assertThat(result.notes()).isEmpty();
+        assertThat(result.markers()).isEqualTo(discrete.markers());
+        assertThat(result.spectrum()).containsAll(discrete.spectrum());
+        List<SpectrumRow> continuous = continuousRows(result);
+        assertThat(continuous)
+                .extracting(SpectrumRow::kind)
+                .contains(SpectrumRow.Kind.RELAXATION, SpectrumRow.Kind.RETARDATION);
+        assertThat(continuous)
+                .allMatch(row -> row.low().getAsDouble() <= row.value()
+                        && row.value() <= row.high().getAsDouble()
+                        && row.referenceTemperatureK() == 463.15);
+    }
+
+    @Test
+    void aFixedNumberOfModesLeavesTheContinuousSpectraAsTheyAre() {
+        ConclusionPlan one = plan(Optional.of(new SpectrumPlan(false, OptionalInt.of(1), true)), Optional.empty());
+        ConclusionPlan free = plan(Optional.of(new SpectrumPlan(false, OptionalInt.empty(), true)), Optional.empty());
+
+        assertThat(continuousRows(conclude(sweep(463.15, "1"), one)))
+                .isNotEmpty()
+                .isEqualTo(continuousRows(conclude(sweep(463.15, "1"), free)));
+    }
+
+    @Test
+    void aNarrowSweepHasModesOnlyAndSaysWhy() {
+        SpectrumPlan wanted = new SpectrumPlan(false, OptionalInt.empty(), true);
+        LotResult result = conclude(sweep(463.15, "1").limit(10), plan(Optional.of(wanted), Optional.empty()));
+
+        assertThat(noteOf(result)).isEqualTo("CONTINUOUS_TOO_NARROW");
+        assertThat(result.spectrum()).isNotEmpty();
+        assertThat(continuousRows(result)).isEmpty();
+    }
+
+    private static List<SpectrumRow> continuousRows(LotResult result) {
+        return result.spectrum().stream()
+                .filter(row -> row.form() == SpectrumRow.Form.CONTINUOUS)
+                .toList();
+    }
+
+    @Test
     void anEquilibriumModulusOfZeroMakesALiquidAndIsSaid() {
         ConclusionPlan solid = plan(Optional.of(new SpectrumPlan(true, OptionalInt.empty(), false)), Optional.empty());
         RelaxationModes flowing = RelaxationModes.of(0, new double[] {1}, new double[] {1e3});

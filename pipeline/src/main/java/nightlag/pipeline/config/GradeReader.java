@@ -70,7 +70,7 @@ final class GradeReader {
                 conclusion,
                 Fingerprints.of(geometry, extraction.get(), screening.get()),
                 Fingerprints.of(conclusion),
-                notActedOn(spectrum)));
+                notActedOn()));
     }
 
     private static Optional<ExtractionPlan> extraction(SectionReader section) {
@@ -147,11 +147,8 @@ final class GradeReader {
         return uncertainty;
     }
 
-    private List<String> notActedOn(Optional<SpectrumPlan> spectrum) {
+    private List<String> notActedOn() {
         List<String> lines = new ArrayList<>();
-        if (spectrum.isPresent() && spectrum.get().continuous()) {
-            lines.add("[spectrum] continuous: not acted on yet; spectra are discrete");
-        }
         for (Section section : List.of(GradeKeys.RESPONSE, GradeKeys.LIMIT, GradeKeys.UNCERTAINTY)) {
             if (file.has(section)) {
                 lines.add(section.heading() + ": read and checked, not acted on yet");

@@ -21,6 +21,9 @@ final class LotCharts {
     /** More temperatures than this are a ramp, and are drawn as one. */
     private static final int MOST_ISOTHERMS = 16;
 
+    /** A continuous spectrum is drawn down to this part of its peak. */
+    private static final double LEAST_OF_PEAK = 1e-6;
+
     private static final String RAD_PER_S = "rad/s";
     private static final String PASCAL = "Pa";
 
@@ -50,7 +53,9 @@ final class LotCharts {
                                 charts.phaseOverModulus(),
                                 charts.lossOverStorage(),
                                 charts.spectrum(SpectrumRow.Kind.RELAXATION, "Relaxation modes", "modulus"),
-                                charts.spectrum(SpectrumRow.Kind.RETARDATION, "Retardation modes", "compliance")))
+                                charts.spectrum(SpectrumRow.Kind.RETARDATION, "Retardation modes", "compliance"),
+                                charts.density(SpectrumRow.Kind.RELAXATION, "Relaxation spectrum", "H"),
+                                charts.density(SpectrumRow.Kind.RETARDATION, "Retardation spectrum", "L")))
                 .filter(Chart::hasPoints)
                 .toList();
     }
@@ -224,6 +229,29 @@ final class LotCharts {
         return result.points().isEmpty()
                 ? "G"
                 : SweepCharts.symbol(result.points().get(0));
+    }
+
+    private Chart density(SpectrumRow.Kind kind, String title, String symbol) {
+        List<SpectrumRow> all = result.spectrum().stream()
+                .filter(row -> row.kind() == kind && row.form() == SpectrumRow.Form.CONTINUOUS)
+                .toList();
+        double peak = all.stream().mapToDouble(SpectrumRow::value).max().orElse(0);
+        List<SpectrumRow> rows =
+                all.stream().filter(row -> row.value() >= LEAST_OF_PEAK * peak).toList();
+        return new Chart(
+                title,
+                "The continuous spectrum per unit of ln time and the band it lies in with 95 % probability. The band opens where"
+                        + " the data no longer fix it, and reaches down to the axis where they do not tell it from none.",
+                Axis.log("time", "s"),
+                Axis.log(symbol, kind.unit()),
+                List.of(Series.withBand(
+                        symbol,
+                        0,
+                        rows,
+                        SpectrumRow::timeS,
+                        SpectrumRow::value,
+                        row -> row.low().orElse(row.value()),
+                        row -> row.high().orElse(row.value()))));
     }
 
     private static double angularFrequency(ModulusPoint point) {

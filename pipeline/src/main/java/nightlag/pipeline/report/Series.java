@@ -13,8 +13,18 @@ import java.util.function.ToDoubleFunction;
  * @param joined whether a line joins them in the order given
  * @param x along the horizontal axis
  * @param y along the vertical axis
+ * @param low lower end of the band about each point; empty where there is no band
+ * @param high upper end of it
  */
-record Series(String name, int look, boolean filled, boolean joined, List<Double> x, List<Double> y) {
+record Series(
+        String name,
+        int look,
+        boolean filled,
+        boolean joined,
+        List<Double> x,
+        List<Double> y,
+        List<Double> low,
+        List<Double> high) {
     /** More points than this are more than a chart shows. */
     static final int MOST_POINTS = 1000;
 
@@ -22,6 +32,8 @@ record Series(String name, int look, boolean filled, boolean joined, List<Double
     Series {
         x = List.copyOf(x);
         y = List.copyOf(y);
+        low = List.copyOf(low);
+        high = List.copyOf(high);
     }
 
     /**
@@ -46,6 +58,30 @@ record Series(String name, int look, boolean filled, boolean joined, List<Double
                 y.add(up);
             }
         }
-        return new Series(name, look, filled, joined, x, y);
+        return new Series(name, look, filled, joined, x, y, List.of(), List.of());
+    }
+
+    /** A line with the band its values lie in; all finite and few enough to be shown. */
+    static <T> Series withBand(
+            String name,
+            int look,
+            List<T> items,
+            ToDoubleFunction<T> horizontal,
+            ToDoubleFunction<T> vertical,
+            ToDoubleFunction<T> low,
+            ToDoubleFunction<T> high) {
+        return new Series(
+                name,
+                look,
+                false,
+                true,
+                each(items, horizontal),
+                each(items, vertical),
+                each(items, low),
+                each(items, high));
+    }
+
+    private static <T> List<Double> each(List<T> items, ToDoubleFunction<T> figure) {
+        return items.stream().mapToDouble(figure).boxed().toList();
     }
 }

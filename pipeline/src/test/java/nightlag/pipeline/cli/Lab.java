@@ -61,7 +61,7 @@ final class Lab {
     void grade(String name, String more) {
         write(
                 "config/grades/" + name + ".toml",
-                "grade = \"" + name + "\"\n[spectrum]\nequilibrium = \"none\"\n" + more);
+                "grade = \"" + name + "\"\n[spectrum]\nequilibrium = \"none\"\ncontinuous = false\n" + more);
     }
 
     /** Leaves a whole frequency sweep of a two-mode liquid in the intake, a file a frequency. */

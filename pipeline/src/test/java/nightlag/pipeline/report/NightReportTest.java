@@ -9,9 +9,11 @@ import java.nio.file.Files;
 import java.nio.file.Path;
 import java.util.List;
 import java.util.OptionalDouble;
+import java.util.stream.IntStream;
 import nightlag.pipeline.tables.RandomLot;
 import nightlag.stages.LotResult;
 import nightlag.stages.moduli.Marker;
+import nightlag.stages.spectrum.SpectrumRow;
 import org.junit.jupiter.api.Test;
 import org.junit.jupiter.api.io.TempDir;
 
@@ -80,6 +82,31 @@ class NightReportTest {
             points += series.get("x").size();
         }
         assertThat(points).isEqualTo(2 * result.masterCurve().size());
+    }
+
+    @Test
+    void aContinuousSpectrumIsALineInItsBand() throws IOException {
+        List<SpectrumRow> rows = IntStream.range(0, 4)
+                .mapToObj(i -> new SpectrumRow(
+                        463.15,
+                        SpectrumRow.Kind.RETARDATION,
+                        SpectrumRow.Form.CONTINUOUS,
+                        Math.pow(10, i),
+                        i == 3 ? 1e-30 : 2,
+                        OptionalDouble.of(i == 0 ? 0 : 1),
+                        OptionalDouble.of(3 + i)))
+                .toList();
+        LotResult result = new LotResult(List.of(), List.of(), List.of(), List.of(), rows, List.of(), List.of());
+
+        JsonNode charts = JsonMapper.builder().build().readTree(ChartJson.of(LotCharts.of(result)));
+
+        JsonNode line = find(charts, "Retardation spectrum").get("series").get(0);
+        assertThat(line.get("joined").asBoolean()).isTrue();
+        // the node that is nothing beside the peak would draw out the axis by thirty decades
+        assertThat(line.get("x")).hasSize(3);
+        assertThat(line.get("low").get(0).asDouble()).isZero();
+        assertThat(line.get("high").get(2).asDouble()).isEqualTo(5);
+        assertThat(charts.findValuesAsText("title")).doesNotContain("Relaxation spectrum");
     }
 
     @Test

@@ -55,6 +55,30 @@ public final class Cholesky {
         return Optional.of(new Cholesky(lower, scale));
     }
 
+    /**
+     * Factors AᵀA by reflections of A, without forming it: to twice the digits {@link #of} has.
+     *
+     * @param columns n columns of A, which hang on each other nowhere, of at least n numbers each
+     */
+    public static Cholesky ofGram(double[][] columns) {
+        int n = columns.length;
+        double[][] triangle = new double[n][];
+        for (int j = 0; j < n; j++) {
+            triangle[j] = columns[j].clone();
+        }
+        HouseholderTriangle.reduce(triangle);
+        double[][] lower = new double[n][];
+        double[] scale = new double[n];
+        for (int i = 0; i < n; i++) {
+            scale[i] = 1;
+            lower[i] = new double[i + 1];
+            for (int j = 0; j <= i; j++) {
+                lower[i][j] = Math.copySign(1, triangle[j][j]) * triangle[i][j];
+            }
+        }
+        return new Cholesky(lower, scale);
+    }
+
     /** The size n. */
     public int size() {
         return scale.length;

@@ -51,22 +51,8 @@ public final class NonNegativeLeastSquares {
             work[j] = Arrays.stream(columns[j]).map(a -> a * scale).toArray();
         }
         work[columns.length] = target.clone();
-        if (rows > columns.length + 1) {
-            work = compressed(work);
-        }
+        work = FewerRows.of(work);
         return new NonNegativeLeastSquares(Arrays.copyOf(work, columns.length), work[columns.length], norms).run();
-    }
-
-    /** The same problem in n + 1 rows: lengths and angles of the columns are what they were. */
-    private static double[][] compressed(double[][] work) {
-        HouseholderTriangle.reduce(work);
-        int kept = work.length;
-        double[][] square = new double[kept][];
-        for (int j = 0; j < kept; j++) {
-            square[j] = Arrays.copyOf(work[j], kept);
-            Arrays.fill(square[j], j + 1, kept, 0);
-        }
-        return square;
     }
 
     private double[] run() {

@@ -47,6 +47,16 @@ public final class DiscreteSpectrum {
         return window;
     }
 
+    /** How the errors were taken to grow, where the readings had none of their own. */
+    Optional<ErrorModel> errorModel() {
+        return model;
+    }
+
+    /** Standard deviation of the weighted residuals that counts; empty where there is none to be had. */
+    OptionalDouble scatter() {
+        return uncertainty.scatter();
+    }
+
     /** Both sets as rows, relaxation first, times rising. */
     public List<SpectrumRow> rows(double temperatureK) {
         List<SpectrumRow> rows = new ArrayList<>();

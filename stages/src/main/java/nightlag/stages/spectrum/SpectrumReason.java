@@ -15,6 +15,12 @@ public enum SpectrumReason implements ReasonCode {
             "specimen {0}, sweep {1}: no Kramers–Kronig check, too few different frequencies, {2} (at least {3} are needed)"),
     /** Specimen, sweep. */
     KRAMERS_KRONIG_NO_MODULUS("specimen {0}, sweep {1}: no Kramers–Kronig check, every modulus is zero"),
+    /** Decades of frequency found, decades needed. */
+    CONTINUOUS_TOO_NARROW(
+            "no continuous spectrum: {0} decades of frequency fix it at no time at all (more than {1} are needed)"),
+    /** Nothing. */
+    CONTINUOUS_NO_SCATTER(
+            "no continuous spectrum: the moduli came without u, and there are too few of them to take one from their scatter"),
     /** Nothing. */
     EQUILIBRIUM_MODULUS_ZERO(
             "the fitted equilibrium modulus is zero: the spectrum is that of a liquid, with a viscosity in its place");

@@ -265,6 +265,15 @@ final class WeightedReadings {
         return column;
     }
 
+    /** What a viscosity of 1 Pa·s that nothing relaxes adds to each row. */
+    double[] viscous() {
+        double[] column = new double[rows()];
+        for (int i = 0; i < angularFrequencies.length; i++) {
+            put(column, i, 0, angularFrequencies[i]);
+        }
+        return column;
+    }
+
     private void put(double[] rows, int i, double storage, double loss) {
         rows[2 * i] = first[i] * storage;
         rows[2 * i + 1] = mixed[i] * storage + second[i] * loss;

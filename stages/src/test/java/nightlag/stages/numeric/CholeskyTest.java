@@ -68,4 +68,15 @@ class CholeskyTest {
         assertThat(Cholesky.of(new double[][] {{0}})).isEmpty();
         assertThat(Cholesky.of(new double[][] {{Double.NaN}})).isEmpty();
     }
+
+    @Test
+    void reflectionsFactorWhatSquaresCannot() {
+        // columns that differ in their ninth digit: their squares differ in the eighteenth, which a double does not
+        // have
+        double[][] columns = {{1, 1, 1}, {1 + 1e-9, 1, 1}};
+        double[][] product = {{3, 3 + 1e-9}, {3 + 1e-9, 3 + 2e-9}};
+
+        assertThat(Cholesky.of(product)).isEmpty();
+        assertThat(Cholesky.ofGram(columns).logDeterminant()).isCloseTo(Math.log(2e-18), within(1e-6));
+    }
 }
