@@ -201,7 +201,9 @@
       if (this.chart.series.length < 2) {
         return;
       }
-      const items = d3.select(figure).append('ul').attr('class', 'legend').selectAll('li').data(this.chart.series).join('li');
+      const first = (series, s) => this.chart.series.findIndex((other) => other.name === series.name) === s;
+      const items = d3.select(figure).append('ul').attr('class', 'legend').selectAll('li')
+        .data(this.chart.series.filter(first)).join('li');
       const key = items.append('svg').attr('viewBox', '-7 -7 14 14').attr('aria-hidden', 'true').append('path')
         .attr('stroke', (series) => colour(series.look))
         .attr('fill', (series) => (series.filled ? colour(series.look) : 'none'));

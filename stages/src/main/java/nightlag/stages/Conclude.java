@@ -58,6 +58,8 @@ public final class Conclude {
                 .toList();
         LotFigures figures = LotFigures.of(usable, lot.amplitudeSweeps(), plan.ownFigures());
         notes.addAll(figures.findings().notes());
+        LotResponses responses = LotResponses.of(plan.responses(), curve, spectrum);
+        notes.addAll(responses.notes());
         return new LotResult(
                 lot.points(),
                 Stream.of(
@@ -73,7 +75,9 @@ public final class Conclude {
                 notes,
                 markers.notes(),
                 figures.rows(),
-                sweeps.sweeps());
+                sweeps.sweeps(),
+                responses.rows(),
+                responses.prony());
     }
 
     /** The curve that a master curve or a spectrum is asked of; what there is to say of it goes into the notes. */

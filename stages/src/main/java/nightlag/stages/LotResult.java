@@ -5,6 +5,8 @@ import nightlag.stages.fault.Reason;
 import nightlag.stages.moduli.FigureRow;
 import nightlag.stages.moduli.Marker;
 import nightlag.stages.moduli.ModulusPoint;
+import nightlag.stages.response.ResponseRow;
+import nightlag.stages.spectrum.RelativeMode;
 import nightlag.stages.spectrum.SpectrumRow;
 import nightlag.stages.superposition.MasterPoint;
 import nightlag.stages.superposition.ShiftFactor;
@@ -22,6 +24,8 @@ import nightlag.stages.sweep.Sweep;
  * @param absent characteristic figures that the data do not support, and why; most materials lack some
  * @param derived the grade's own figures of each point
  * @param sweeps the sweeps its points were assembled to
+ * @param responses predictions, in the order of the configuration
+ * @param prony the relaxation modes as parts of the instantaneous modulus
  */
 public record LotResult(
         List<ModulusPoint> points,
@@ -32,7 +36,9 @@ public record LotResult(
         List<Reason> notes,
         List<Reason> absent,
         List<FigureRow> derived,
-        List<Sweep> sweeps) {
+        List<Sweep> sweeps,
+        List<ResponseRow> responses,
+        List<RelativeMode> prony) {
     /** Nothing is known of the lot, not even a point. */
     public static final LotResult EMPTY =
             new LotResult(List.of(), List.of(), List.of(), List.of(), List.of(), List.of(), List.of());
@@ -48,9 +54,11 @@ public record LotResult(
         absent = List.copyOf(absent);
         derived = List.copyOf(derived);
         sweeps = List.copyOf(sweeps);
+        responses = List.copyOf(responses);
+        prony = List.copyOf(prony);
     }
 
-    /** A result without sweeps, and without figures of the grade's own. */
+    /** A result without sweeps, figures of the grade's own and predictions. */
     public LotResult(
             List<ModulusPoint> points,
             List<Marker> markers,
@@ -59,6 +67,17 @@ public record LotResult(
             List<SpectrumRow> spectrum,
             List<Reason> notes,
             List<Reason> absent) {
-        this(points, markers, shiftFactors, masterCurve, spectrum, notes, absent, List.of(), List.of());
+        this(
+                points,
+                markers,
+                shiftFactors,
+                masterCurve,
+                spectrum,
+                notes,
+                absent,
+                List.of(),
+                List.of(),
+                List.of(),
+                List.of());
     }
 }

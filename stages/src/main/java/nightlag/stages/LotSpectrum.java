@@ -2,6 +2,7 @@ package nightlag.stages;
 
 import java.util.ArrayList;
 import java.util.List;
+import java.util.Optional;
 import java.util.OptionalInt;
 import nightlag.stages.fault.Reason;
 import nightlag.stages.fault.ReductionFault;
@@ -16,13 +17,15 @@ import nightlag.stages.spectrum.SpectrumRow;
 /**
  * The discrete and, where wanted, the continuous spectra of a lot.
  *
+ * @param discrete the discrete spectrum itself; empty where there is none
  * @param markers what completes it, and what follows from it
  * @param rows modes and nodes
  * @param notes why there is none, or what is unusual about it
  */
-record LotSpectrum(List<Marker> markers, List<SpectrumRow> rows, List<Reason> notes) {
+record LotSpectrum(
+        Optional<DiscreteSpectrum> discrete, List<Marker> markers, List<SpectrumRow> rows, List<Reason> notes) {
     /** No spectrum, because none was asked for, or there is nothing to fit it to. */
-    static final LotSpectrum NONE = new LotSpectrum(List.of(), List.of(), List.of());
+    static final LotSpectrum NONE = new LotSpectrum(Optional.empty(), List.of(), List.of(), List.of());
 
     /** Fits the spectra to the lot's curve; they hold at the curve's temperature. */
     static LotSpectrum of(LotCurve curve, SpectrumPlan plan) {
@@ -36,9 +39,9 @@ record LotSpectrum(List<Marker> markers, List<SpectrumRow> rows, List<Reason> no
             if (plan.continuous()) {
                 addContinuous(curve, spectrum, plan, rows, notes);
             }
-            return new LotSpectrum(spectrum.markers(curve.temperatureK()), rows, notes);
+            return new LotSpectrum(Optional.of(spectrum), spectrum.markers(curve.temperatureK()), rows, notes);
         } catch (ReductionFault fault) {
-            return new LotSpectrum(List.of(), List.of(), List.of(fault.reason()));
+            return new LotSpectrum(Optional.empty(), List.of(), List.of(), List.of(fault.reason()));
         }
     }
 

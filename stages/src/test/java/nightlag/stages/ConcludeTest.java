@@ -21,6 +21,9 @@ import nightlag.stages.moduli.Marker;
 import nightlag.stages.moduli.ModulusPoint;
 import nightlag.stages.moduli.Quality;
 import nightlag.stages.numeric.Complex;
+import nightlag.stages.response.ResponsePlan;
+import nightlag.stages.response.ResponseRow;
+import nightlag.stages.spectrum.RelativeMode;
 import nightlag.stages.spectrum.RelaxationModes;
 import nightlag.stages.spectrum.SpectrumPlan;
 import nightlag.stages.spectrum.SpectrumRow;
@@ -94,6 +97,42 @@ class ConcludeTest {
                         "zero_shear_viscosity");
         assertThat(ofTheLot).allMatch(marker -> marker.specimen().isEmpty());
         assertThat(result.markers()).allMatch(marker -> marker.temperatureK().equals(OptionalDouble.of(463.15)));
+    }
+
+    @Test
+    void predictionsStandInTheOrderTheyAreAskedFor() {
+        ResponsePlan shelf = new ResponsePlan(
+                "shelf", List.of(), ResponsePlan.Controlled.STRESS, List.of(new ResponsePlan.Step(0, 10)), 1);
+        ResponsePlan die = new ResponsePlan(
+                "die", List.of(), ResponsePlan.Controlled.STRAIN, List.of(new ResponsePlan.Step(0, 0.05)), 1);
+        ResponsePlan warmer = new ResponsePlan(
+                "warmer", List.of(new ResponsePlan.Step(0, 473.15)), ResponsePlan.Controlled.STRAIN, die.steps(), 1);
+
+        LotResult result = conclude(sweep(463.15, "1"), predicting(SPECTRUM_WANTED, shelf, warmer, die));
+
+        assertThat(result.responses().stream().map(ResponseRow::response).distinct())
+                .containsExactly("shelf", "die");
+        assertThat(result.notes())
+                .extracting(Reason::sentence)
+                .containsExactly("no response \"warmer\": 200 °C is asked for, but the spectrum is of 190 °C and no"
+                        + " isotherms say how times move");
+        ResponseRow last = result.responses().get(result.responses().size() - 1);
+        assertThat(last.stressPa()).isCloseTo(0.05 * MATERIAL.relaxationPa(1), withinPercentage(0.1));
+        assertThat(result.prony()).extracting(RelativeMode::mode).containsExactly(1, 2, 3);
+        assertThat(result.prony().get(0).relativeModulus()).isCloseTo(1e5 / 1.21e5, withinPercentage(0.1));
+    }
+
+    @Test
+    void withoutASpectrumNothingIsPredictedAndTheReasonSaysSo() {
+        ResponsePlan die = new ResponsePlan(
+                "die", List.of(), ResponsePlan.Controlled.STRAIN, List.of(new ResponsePlan.Step(0, 0.05)), 1);
+
+        LotResult result = conclude(sweep(463.15, "1"), predicting(NOTHING_WANTED, die));
+
+        assertThat(result.responses()).isEmpty();
+        assertThat(result.notes())
+                .extracting(Reason::sentence)
+                .containsExactly("no response \"die\": there is no spectrum to predict it from");
     }
 
     @Test
@@ -376,5 +415,10 @@ class ConcludeTest {
 
     private static ConclusionPlan plan(Optional<SpectrumPlan> spectrum, Optional<SuperpositionPlan> superposition) {
         return new ConclusionPlan(SweepPlan.withDefaults(), superposition, spectrum, List.of(), List.of(), Map.of());
+    }
+
+    private static ConclusionPlan predicting(ConclusionPlan plan, ResponsePlan... responses) {
+        return new ConclusionPlan(
+                plan.sweeps(), plan.superposition(), plan.spectrum(), List.of(responses), List.of(), Map.of());
     }
 }

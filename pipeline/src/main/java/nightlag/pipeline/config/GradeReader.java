@@ -149,7 +149,7 @@ final class GradeReader {
 
     private List<String> notActedOn() {
         List<String> lines = new ArrayList<>();
-        for (Section section : List.of(GradeKeys.RESPONSE, GradeKeys.LIMIT, GradeKeys.UNCERTAINTY)) {
+        for (Section section : List.of(GradeKeys.LIMIT, GradeKeys.UNCERTAINTY)) {
             if (file.has(section)) {
                 lines.add(section.heading() + ": read and checked, not acted on yet");
             }

@@ -44,7 +44,7 @@ final class LotCharts {
     /** Those that have something to show. */
     static List<Chart> of(LotResult result) {
         LotCharts charts = new LotCharts(result);
-        return Stream.concat(
+        return Stream.of(
                         SweepCharts.of(result.sweeps()).stream(),
                         Stream.of(
                                 charts.moduliOverFrequency(),
@@ -55,7 +55,9 @@ final class LotCharts {
                                 charts.spectrum(SpectrumRow.Kind.RELAXATION, "Relaxation modes", "modulus"),
                                 charts.spectrum(SpectrumRow.Kind.RETARDATION, "Retardation modes", "compliance"),
                                 charts.density(SpectrumRow.Kind.RELAXATION, "Relaxation spectrum", "H"),
-                                charts.density(SpectrumRow.Kind.RETARDATION, "Retardation spectrum", "L")))
+                                charts.density(SpectrumRow.Kind.RETARDATION, "Retardation spectrum", "L")),
+                        ResponseCharts.of(result.responses()).stream())
+                .flatMap(charted -> charted)
                 .filter(Chart::hasPoints)
                 .toList();
     }

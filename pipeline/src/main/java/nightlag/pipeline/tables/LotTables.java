@@ -32,6 +32,16 @@ public final class LotTables {
                     (result, from) -> result.spectrum().stream()
                             .map(mode -> new SpectrumTable.Row(from.grade(), from.lot(), mode))
                             .toList()),
+            new LotTable<>(
+                    PronyTable.TABLE,
+                    (result, from) -> result.prony().stream()
+                            .map(mode -> new PronyTable.Row(from.grade(), from.lot(), mode))
+                            .toList()),
+            new LotTable<>(
+                    ResponseTable.TABLE,
+                    (result, from) -> result.responses().stream()
+                            .map(at -> new ResponseTable.Row(from.grade(), from.lot(), at))
+                            .toList()),
             new LotTable<>(DerivedTable.TABLE, (result, from) -> result.derived()));
 
     private LotTables() {}

@@ -33,7 +33,15 @@ class DataPackageTest {
 
         assertThat(texts(descriptor.get("resources"), "name"))
                 .containsExactly(
-                        "points", "harmonics", "markers", "shift_factors", "master_curve", "spectrum", "derived");
+                        "points",
+                        "harmonics",
+                        "markers",
+                        "shift_factors",
+                        "master_curve",
+                        "spectrum",
+                        "prony",
+                        "response",
+                        "derived");
         for (JsonNode resource : descriptor.get("resources")) {
             JsonNode fields = resource.at("/schema/fields");
             assertThat(Files.readString(lot().resolve(resource.get("path").asText())))

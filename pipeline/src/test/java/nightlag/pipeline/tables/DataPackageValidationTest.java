@@ -47,7 +47,9 @@ class DataPackageValidationTest {
                 + result.shiftFactors().size()
                 + result.masterCurve().size()
                 + result.spectrum().size()
-                + result.derived().size();
+                + result.derived().size()
+                + result.responses().size()
+                + result.prony().size();
         assertThat(check(FROM)).containsExactly("rows read: " + rows);
     }
 

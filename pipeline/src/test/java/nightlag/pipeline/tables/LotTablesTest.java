@@ -130,6 +130,8 @@ class LotTablesTest {
                 List.of(),
                 List.of(),
                 List.of(third, first, second),
+                List.of(),
+                List.of(),
                 List.of()));
 
         assertThat(table("derived")).isEqualTo("""
@@ -281,7 +283,9 @@ class LotTablesTest {
                 List.of(),
                 List.of(),
                 shuffled(result.derived(), seed),
-                List.of());
+                List.of(),
+                result.responses(),
+                shuffled(result.prony(), seed));
         Locale was = Locale.getDefault();
 
         write(result);
@@ -302,6 +306,8 @@ class LotTablesTest {
                         "markers.csv",
                         "master_curve.csv",
                         "points.csv",
+                        "prony.csv",
+                        "response.csv",
                         "shift_factors.csv",
                         "spectrum.csv");
         assertThat(first.values()).noneMatch(text -> text.contains("NaN") || text.contains("Infinity"));
@@ -325,6 +331,8 @@ class LotTablesTest {
                         "master_curve.csv",
                         "notes.txt",
                         "points.csv",
+                        "prony.csv",
+                        "response.csv",
                         "shift_factors.csv",
                         "spectrum.csv");
     }

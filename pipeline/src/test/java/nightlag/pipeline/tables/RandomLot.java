@@ -5,6 +5,7 @@ import java.util.List;
 import java.util.Optional;
 import java.util.OptionalDouble;
 import java.util.Random;
+import java.util.stream.IntStream;
 import java.util.stream.Stream;
 import nightlag.pipeline.RandomPoints;
 import nightlag.stages.LotResult;
@@ -15,6 +16,11 @@ import nightlag.stages.moduli.ModulusPoint;
 import nightlag.stages.moduli.ModulusReading;
 import nightlag.stages.moduli.PointKey;
 import nightlag.stages.moduli.Quality;
+import nightlag.stages.response.ResponsePlan;
+import nightlag.stages.response.ResponseRow;
+import nightlag.stages.response.ResponseRow.Band;
+import nightlag.stages.response.ResponseRow.StrainParts;
+import nightlag.stages.spectrum.RelativeMode;
 import nightlag.stages.spectrum.SpectrumRow;
 import nightlag.stages.superposition.MasterPoint;
 import nightlag.stages.superposition.ShiftFactor;
@@ -43,7 +49,9 @@ public final class RandomLot {
                 List.of(),
                 List.of(),
                 derived(made),
-                sweeps(made));
+                sweeps(made),
+                responses(),
+                prony());
     }
 
     /** Sweeps of every kind, whatever varies in them. */
@@ -63,6 +71,35 @@ public final class RandomLot {
                                 OptionalDouble.of(1),
                                 usable))
                         .toList();
+    }
+
+    private List<ResponseRow> responses() {
+        List<ResponseRow> made = new ArrayList<>();
+        for (ResponsePlan.Controlled controlled : ResponsePlan.Controlled.values()) {
+            for (int i = 0; i < 10; i++) {
+                made.add(new ResponseRow(
+                        "=a \"day\", " + controlled,
+                        controlled,
+                        random.nextDouble(200, 500),
+                        Math.pow(10, i - 4),
+                        points.number(),
+                        points.number(),
+                        random.nextBoolean(),
+                        random.nextBoolean()
+                                ? Optional.of(new Band(points.number(), points.number()))
+                                : Optional.empty(),
+                        controlled == ResponsePlan.Controlled.STRESS
+                                ? Optional.of(new StrainParts(points.number(), points.number(), points.number()))
+                                : Optional.empty()));
+            }
+        }
+        return made;
+    }
+
+    private List<RelativeMode> prony() {
+        return IntStream.rangeClosed(1, 12)
+                .mapToObj(mode -> new RelativeMode(463.15, mode, random.nextDouble(), Math.pow(10, mode - 6)))
+                .toList();
     }
 
     private List<FigureRow> derived(List<ModulusPoint> of) {

@@ -5,7 +5,9 @@ import java.util.List;
 import java.util.Locale;
 import java.util.Optional;
 import java.util.OptionalDouble;
+import java.util.function.Function;
 import java.util.function.ToDoubleFunction;
+import java.util.stream.IntStream;
 import nightlag.stages.moduli.Marker;
 
 /** The relaxation modes fitted to readings, the retardation modes that are their exact inverse, and what follows from both. */
@@ -55,6 +57,24 @@ public final class DiscreteSpectrum {
     /** Standard deviation of the weighted residuals that counts; empty where there is none to be had. */
     OptionalDouble scatter() {
         return uncertainty.scatter();
+    }
+
+    /**
+     * Standard uncertainty of each of several figures drawn from the modes, by the fit's covariance and by modes that the data do
+     * not show; empty where the readings came without u and leave no scatter to take one from.
+     */
+    public Optional<double[]> uncertainties(Function<RelaxationModes, double[]> figures) {
+        return uncertainty.ofEach(figures);
+    }
+
+    /** The relaxation modes as parts of the instantaneous modulus Ge + Σ g, times rising. */
+    public List<RelativeMode> relativeModes(double temperatureK) {
+        double whole = relaxation.instantaneousModulusPa();
+        double[] strengths = relaxation.strengthsPa();
+        return IntStream.range(0, relaxation.count())
+                .mapToObj(i -> new RelativeMode(
+                        temperatureK, i + 1, strengths[i] / whole, relaxation.timesS()[i]))
+                .toList();
     }
 
     /** Both sets as rows, relaxation first, times rising. */

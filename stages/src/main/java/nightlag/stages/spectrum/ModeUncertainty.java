@@ -3,7 +3,9 @@ package nightlag.stages.spectrum;
 import java.util.ArrayList;
 import java.util.Arrays;
 import java.util.List;
+import java.util.Optional;
 import java.util.OptionalDouble;
+import java.util.function.Function;
 import java.util.function.ToDoubleFunction;
 import nightlag.stages.numeric.LinearisedUncertainty;
 
@@ -63,21 +65,35 @@ final class ModeUncertainty {
 
     /** Standard uncertainty of a figure; empty where the readings have none and leave no scatter to take one from. */
     OptionalDouble of(ToDoubleFunction<RelaxationModes> figure) {
+        Optional<double[]> u = ofEach(modes -> new double[] {figure.applyAsDouble(modes)});
+        return u.isPresent() ? OptionalDouble.of(u.get()[0]) : OptionalDouble.empty();
+    }
+
+    /** Standard uncertainty of each of several figures; empty likewise. */
+    Optional<double[]> ofEach(Function<RelaxationModes, double[]> figures) {
         if (scatter.isEmpty()) {
-            return scatter;
+            return Optional.empty();
         }
-        double[] derivatives = new double[modes.parameters()];
-        for (int i = 0; i < derivatives.length; i++) {
-            derivatives[i] =
-                    (figure.applyAsDouble(moved(i, STEP)) - figure.applyAsDouble(moved(i, -STEP))) / (2 * STEP);
+        double[] values = figures.apply(moved(0, 0));
+        double[][] derivatives = new double[values.length][modes.parameters()];
+        for (int i = 0; i < modes.parameters(); i++) {
+            double[] above = figures.apply(moved(i, STEP));
+            double[] below = figures.apply(moved(i, -STEP));
+            for (int k = 0; k < values.length; k++) {
+                derivatives[k][i] = (above[k] - below[k]) / (2 * STEP);
+            }
         }
-        double square = Math.pow(scatter.getAsDouble() * linearised.of(derivatives), 2);
-        double value = figure.applyAsDouble(moved(0, 0));
-        square += Math.pow(commonError * value, 2);
-        for (RelaxationModes alternative : alternatives) {
-            square += Math.pow(figure.applyAsDouble(alternative) - value, 2);
+        List<double[]> others = alternatives.stream().map(figures).toList();
+        double[] u = new double[values.length];
+        for (int k = 0; k < values.length; k++) {
+            double square = Math.pow(scatter.getAsDouble() * linearised.of(derivatives[k]), 2);
+            square += Math.pow(commonError * values[k], 2);
+            for (double[] other : others) {
+                square += Math.pow(other[k] - values[k], 2);
+            }
+            u[k] = Math.sqrt(square);
         }
-        return OptionalDouble.of(Math.sqrt(square));
+        return Optional.of(u);
     }
 
     /** The material with one fitted number moved by a step of its logarithm. */

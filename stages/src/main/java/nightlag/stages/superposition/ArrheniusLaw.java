@@ -21,8 +21,16 @@ public record ArrheniusLaw(
     }
 
     @Override
-    public double log10AU(double temperatureK) {
-        return activationEnergyU * Math.abs(decadesPerEnergy(temperatureK, referenceTemperatureK));
+    public boolean reaches(double temperatureK) {
+        return temperatureK > 0;
+    }
+
+    @Override
+    public double log10ACovariance(double firstK, double secondK) {
+        return activationEnergyU
+                * decadesPerEnergy(firstK, referenceTemperatureK)
+                * activationEnergyU
+                * decadesPerEnergy(secondK, referenceTemperatureK);
     }
 
     @Override

@@ -19,8 +19,16 @@ public sealed interface FittedLaw permits WlfLaw, ArrheniusLaw {
     /** log10 a_T at a temperature in K. */
     double log10A(double temperatureK);
 
+    /** Whether the law says anything at a temperature in K: a WLF law ends at its pole. */
+    boolean reaches(double temperatureK);
+
     /** Its standard uncertainty from the fit; zero at the reference temperature. */
-    double log10AU(double temperatureK);
+    default double log10AU(double temperatureK) {
+        return Math.sqrt(Math.max(0, log10ACovariance(temperatureK, temperatureK)));
+    }
+
+    /** Covariance of log10 a_T at two temperatures in K, from the fit. */
+    double log10ACovariance(double firstK, double secondK);
 
     /** The same law with another reference temperature, K. */
     FittedLaw at(double referenceTemperatureK);

@@ -2,6 +2,7 @@ package nightlag.stages.superposition;
 
 import java.util.DoubleSummaryStatistics;
 import java.util.List;
+import java.util.Optional;
 import java.util.OptionalDouble;
 import java.util.function.Function;
 import nightlag.stages.fault.Reason;
@@ -13,10 +14,15 @@ import nightlag.stages.moduli.Marker;
  * @param shifts one an isotherm, temperature rising, those left out included
  * @param points points of the isotherms used, reduced frequency rising
  * @param markers the law's constants, the activation energy, and the misfit with its verdict
+ * @param law the law of the shifts, at the reference temperature; empty where none was asked for or could be had
  * @param notes isotherms left out, and whatever else is worth knowing
  */
 public record MasterCurve(
-        List<ShiftFactor> shifts, List<MasterPoint> points, List<Marker> markers, List<Reason> notes) {
+        List<ShiftFactor> shifts,
+        List<MasterPoint> points,
+        List<Marker> markers,
+        Optional<FittedLaw> law,
+        List<Reason> notes) {
     private static final double LN_10 = Math.log(10);
 
     /** Copies the lists. */

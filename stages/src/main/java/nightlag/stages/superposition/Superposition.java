@@ -121,7 +121,7 @@ public final class Superposition {
                                     true)
                             : leftOut(i));
         }
-        return new MasterCurve(shifts, sorted(moved(isotherm, 0, lnB)), List.of(), notes);
+        return new MasterCurve(shifts, sorted(moved(isotherm, 0, lnB)), List.of(), Optional.empty(), notes);
     }
 
     private MasterCurve superposed(int[] used, Superposed superposed) throws ReductionFault {
@@ -181,7 +181,7 @@ public final class Superposition {
         }
         List<Marker> markers = new ArrayList<>(law.law().map(FittedLaw::markers).orElse(List.of()));
         markers.add(Verdict.of(superposed, plan).marker(reference));
-        return new MasterCurve(shifts, sorted(points), markers, notes);
+        return new MasterCurve(shifts, sorted(points), markers, law.law(), notes);
     }
 
     /**

@@ -26,8 +26,14 @@ public record WlfLaw(double referenceTemperatureK, double c1, double c2K, WlfCov
     public record WlfCovariance(double c1Variance, double c2VarianceK2, double covarianceK) {
         /** Standard uncertainty of a figure with these derivatives by C1 and C2. */
         double u(double byC1, double byC2) {
-            double variance = byC1 * byC1 * c1Variance + 2 * byC1 * byC2 * covarianceK + byC2 * byC2 * c2VarianceK2;
-            return Math.sqrt(Math.max(variance, 0));
+            return Math.sqrt(Math.max(of(byC1, byC2, byC1, byC2), 0));
+        }
+
+        /** Covariance of two figures with these derivatives by C1 and C2. */
+        double of(double firstByC1, double firstByC2, double secondByC1, double secondByC2) {
+            return firstByC1 * secondByC1 * c1Variance
+                    + (firstByC1 * secondByC2 + firstByC2 * secondByC1) * covarianceK
+                    + firstByC2 * secondByC2 * c2VarianceK2;
         }
     }
 
@@ -49,10 +55,22 @@ public record WlfLaw(double referenceTemperatureK, double c1, double c2K, WlfCov
     }
 
     @Override
-    public double log10AU(double temperatureK) {
+    public boolean reaches(double temperatureK) {
+        return (c2K + temperatureK - referenceTemperatureK) * c2K > 0;
+    }
+
+    @Override
+    public double log10ACovariance(double firstK, double secondK) {
+        return covariance.of(byC1(firstK), byC2(firstK), byC1(secondK), byC2(secondK));
+    }
+
+    private double byC1(double temperatureK) {
         double above = temperatureK - referenceTemperatureK;
-        double byC1 = -above / (c2K + above);
-        return covariance.u(byC1, -byC1 * c1 / (c2K + above));
+        return -above / (c2K + above);
+    }
+
+    private double byC2(double temperatureK) {
+        return -byC1(temperatureK) * c1 / (c2K + temperatureK - referenceTemperatureK);
     }
 
     /**
