@@ -7,6 +7,7 @@ import java.util.Optional;
 import java.util.stream.Stream;
 import nightlag.stages.fault.Reason;
 import nightlag.stages.fault.ReductionFault;
+import nightlag.stages.moduli.CreepCurve;
 import nightlag.stages.moduli.Findings;
 import nightlag.stages.moduli.Marker;
 import nightlag.stages.moduli.ModulusPoint;
@@ -60,6 +61,7 @@ public final class Conclude {
         notes.addAll(figures.findings().notes());
         LotResponses responses = LotResponses.of(plan.responses(), curve, spectrum);
         notes.addAll(responses.notes());
+        List<CreepCurve> curves = LotCreep.inOrder(reductions);
         return new LotResult(
                 lot.points(),
                 Stream.of(
@@ -77,7 +79,8 @@ public final class Conclude {
                 figures.rows(),
                 sweeps.sweeps(),
                 responses.rows(),
-                responses.prony());
+                responses.prony(),
+                curves);
     }
 
     /** The curve that a master curve or a spectrum is asked of; what there is to say of it goes into the notes. */

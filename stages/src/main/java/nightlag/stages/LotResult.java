@@ -2,6 +2,7 @@ package nightlag.stages;
 
 import java.util.List;
 import nightlag.stages.fault.Reason;
+import nightlag.stages.moduli.CreepCurve;
 import nightlag.stages.moduli.FigureRow;
 import nightlag.stages.moduli.Marker;
 import nightlag.stages.moduli.ModulusPoint;
@@ -26,6 +27,7 @@ import nightlag.stages.sweep.Sweep;
  * @param sweeps the sweeps its points were assembled to
  * @param responses predictions, in the order of the configuration
  * @param prony the relaxation modes as parts of the instantaneous modulus
+ * @param creep creep curves
  */
 public record LotResult(
         List<ModulusPoint> points,
@@ -38,7 +40,8 @@ public record LotResult(
         List<FigureRow> derived,
         List<Sweep> sweeps,
         List<ResponseRow> responses,
-        List<RelativeMode> prony) {
+        List<RelativeMode> prony,
+        List<CreepCurve> creep) {
     /** Nothing is known of the lot, not even a point. */
     public static final LotResult EMPTY =
             new LotResult(List.of(), List.of(), List.of(), List.of(), List.of(), List.of(), List.of());
@@ -56,9 +59,10 @@ public record LotResult(
         sweeps = List.copyOf(sweeps);
         responses = List.copyOf(responses);
         prony = List.copyOf(prony);
+        creep = List.copyOf(creep);
     }
 
-    /** A result without sweeps, figures of the grade's own and predictions. */
+    /** A result without sweeps, figures of the grade's own, predictions and creep curves. */
     public LotResult(
             List<ModulusPoint> points,
             List<Marker> markers,
@@ -75,6 +79,7 @@ public record LotResult(
                 spectrum,
                 notes,
                 absent,
+                List.of(),
                 List.of(),
                 List.of(),
                 List.of(),

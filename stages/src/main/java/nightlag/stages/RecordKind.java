@@ -25,4 +25,7 @@ public sealed interface RecordKind {
      * @param pointsPerDecade how many
      */
     record Chirp(double pointsPerDecade) implements RecordKind {}
+
+    /** Steps of stress and their recovery: a creep curve. */
+    record Creep() implements RecordKind {}
 }

@@ -8,6 +8,8 @@ import nightlag.stages.geometry.DeformationMode;
 import nightlag.stages.geometry.GeometryKind;
 import nightlag.stages.geometry.GeometrySpec;
 import nightlag.stages.geometry.SignalCorrection;
+import nightlag.stages.moduli.CreepAnalysis;
+import nightlag.stages.moduli.CreepCurve;
 import nightlag.stages.moduli.Moduli;
 import nightlag.stages.moduli.ModuliCovariance;
 import nightlag.stages.moduli.ModulusPoint;
@@ -18,7 +20,7 @@ import nightlag.stages.waveform.HarmonicAnalysis;
 import nightlag.stages.waveform.SignalFit;
 import nightlag.stages.waveform.Waveform;
 
-/** One record to its points: samples to amplitudes, corrections and geometry, moduli, screening. */
+/** One record to its points, or to its creep curve: samples to amplitudes, corrections and geometry, moduli, screening. */
 public final class Reduce {
     private Reduce() {}
 
@@ -28,12 +30,32 @@ public final class Reduce {
      */
     public static Reduction reduce(MeasuredRecord record, ReductionPlan plan) {
         if (record instanceof WaveformRecord waveforms) {
+            if (waveforms.kind() instanceof RecordKind.Creep) {
+                return creep(waveforms, plan);
+            }
             return new Reduction(
                     waveforms.kind() instanceof RecordKind.OneFrequency
                             ? List.of(fromWaveform(waveforms, plan))
                             : SeveralFrequencies.points(waveforms, plan));
         }
         return new Reduction(List.of(fromModuli((GivenModuli) record, plan)));
+    }
+
+    private static Reduction creep(WaveformRecord record, ReductionPlan plan) {
+        GeometrySpec spec =
+                plan.geometry().orElseGet(GeometrySpec::none).with(record.tags().dimensions());
+        try {
+            SignalCorrection correction =
+                    SignalCorrection.of(spec, plan.corrections(), record.deformationSignal(), record.loadSignal());
+            Ranges ranges = Ranges.of(
+                    plan.deformationRange(), record.deformationSignal(), plan.loadRange(), record.loadSignal());
+            CreepCurve curve =
+                    CreepAnalysis.of(origin(record.tags()), record.waveform(), correction, ranges, plan.screening());
+            return new Reduction(List.of(), Optional.of(curve));
+        } catch (ReductionFault fault) {
+            return new Reduction(List.of(
+                    ModulusPoints.unusable(origin(record.tags()), mode(plan), OptionalDouble.empty(), fault.reason())));
+        }
     }
 
     private static ModulusPoint fromWaveform(WaveformRecord record, ReductionPlan plan) {

@@ -64,6 +64,9 @@ public record ReductionTrace(
     }
 
     private static List<SignalFit> fits(WaveformRecord record, ReductionPlan plan) {
+        if (record.kind() instanceof RecordKind.Creep) {
+            return List.of();
+        }
         try {
             return record.kind() instanceof RecordKind.OneFrequency
                     ? List.of(HarmonicAnalysis.analyse(record.waveform(), plan.extraction()))

@@ -113,7 +113,7 @@ final class Commit implements AutoCloseable {
     }
 
     private void putRecord(long file, int number, Reduction reduction) throws SQLException {
-        PointKey key = reduction.points().get(0).key();
+        PointKey key = reduction.keys().findFirst().orElseThrow();
         int column = 0;
         putRecord.setLong(++column, file);
         putRecord.setInt(++column, number);
@@ -122,7 +122,7 @@ final class Commit implements AutoCloseable {
         putRecord.setString(++column, key.specimen());
         putRecord.setString(++column, key.sweep());
         putRecord.setString(++column, key.point());
-        putRecord.setInt(++column, reduction.points().size());
+        putRecord.setInt(++column, reduction.count());
         putRecord.setString(++column, ReductionJson.write(reduction));
         putRecord.executeUpdate();
         lotDue.setString(1, key.grade());

@@ -25,10 +25,7 @@ public record FileOutcome(ArchivedFile file, List<Reduction> reductions, Optiona
     }
 
     private static void requireOneLot(Reduction reduction) {
-        long lots = reduction.points().stream()
-                .map(point -> lotOf(point.key()))
-                .distinct()
-                .count();
+        long lots = reduction.keys().map(FileOutcome::lotOf).distinct().count();
         if (lots != 1) {
             throw new IllegalArgumentException("a reduction has points of " + lots + " lots; a record is of one");
         }

@@ -9,12 +9,14 @@ import com.fasterxml.jackson.databind.ObjectWriter;
 import com.fasterxml.jackson.databind.json.JsonMapper;
 import com.fasterxml.jackson.datatype.jdk8.Jdk8Module;
 import nightlag.stages.Reduction;
+import nightlag.stages.moduli.CreepReading;
+import nightlag.stages.moduli.CreepStep;
 import nightlag.stages.moduli.Harmonic;
 import nightlag.stages.moduli.LoopPair;
 
 /**
  * A reduction as one line of JSON and back, equal to the last bit: doubles are written so that they read back the same,
- * what is not there is left out, harmonics and loops are plain arrays in the order of their components.
+ * what is not there is left out, harmonics, loops and creep readings are plain arrays in the order of their components.
  */
 final class ReductionJson {
     private static final JsonMapper MAPPER = JsonMapper.builder()
@@ -24,6 +26,8 @@ final class ReductionJson {
             .enable(DeserializationFeature.FAIL_ON_NULL_FOR_PRIMITIVES)
             .addMixIn(Harmonic.class, AsArray.class)
             .addMixIn(LoopPair.class, AsArray.class)
+            .addMixIn(CreepReading.class, AsArray.class)
+            .addMixIn(CreepStep.class, AsArray.class)
             .build();
     private static final ObjectWriter WRITER = MAPPER.writerFor(Reduction.class);
     private static final ObjectReader READER = MAPPER.readerFor(Reduction.class);

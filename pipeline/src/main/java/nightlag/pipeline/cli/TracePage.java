@@ -17,6 +17,7 @@ import nightlag.stages.WaveformRecord;
 import nightlag.stages.fault.Reason;
 import nightlag.stages.geometry.CorrectionSize;
 import nightlag.stages.geometry.GeometrySpec;
+import nightlag.stages.moduli.CreepCurve;
 import nightlag.stages.moduli.Harmonic;
 import nightlag.stages.moduli.Moduli;
 import nightlag.stages.moduli.ModuliCovariance;
@@ -49,7 +50,7 @@ final class TracePage {
         trace.counts().ifPresent(this::rows);
         trace.followed()
                 .ifPresent(followed -> trace.point().ifPresent(point -> {
-                    record(point);
+                    record(point.key());
                     geometry(followed);
                     corrections(followed, point);
                     signal(followed, point);
@@ -57,8 +58,17 @@ final class TracePage {
                     harmonics(point.harmonics());
                     flags(point);
                 }));
+        trace.followed()
+                .ifPresent(followed -> trace.creep().ifPresent(curve -> {
+                    record(curve.key());
+                    geometry(followed);
+                    new CreepTrace(curve, followed).lines(this::line);
+                }));
         if (trace.problem().isEmpty()) {
-            trace.point().map(ModulusPoint::key).ifPresent(this::lot);
+            trace.point()
+                    .map(ModulusPoint::key)
+                    .or(() -> trace.creep().map(CreepCurve::key))
+                    .ifPresent(this::lot);
         } else {
             line("set aside", trace.problem());
         }
@@ -92,20 +102,20 @@ final class TracePage {
                         + (counts.records() == 1 ? " record" : " records"));
     }
 
-    private void record(ModulusPoint point) {
+    private void record(PointKey key) {
         trace.record().ifPresent(record -> {
             if (record instanceof WaveformRecord waveforms) {
                 double[] time = waveforms.waveform().timeS();
                 line(
                         "record",
-                        "point " + point.key().point() + ": " + time.length + " samples of "
+                        "point " + key.point() + ": " + time.length + " samples of "
                                 + waveforms.deformationSignal().name().toLowerCase(Locale.ROOT) + " and "
                                 + waveforms.loadSignal().name().toLowerCase(Locale.ROOT)
                                 + (time.length > 0
                                         ? " over " + digits(LONG, time[time.length - 1] - time[0]) + " s"
                                         : ""));
             } else {
-                line("record", "point " + point.key().point() + ": moduli reduced elsewhere");
+                line("record", "point " + key.point() + ": moduli reduced elsewhere");
             }
         });
     }
@@ -277,7 +287,8 @@ final class TracePage {
 
     /** What a point is called where that differs from the point followed. */
     private String named(PointKey key) {
-        Optional<PointKey> followed = trace.point().map(ModulusPoint::key);
+        Optional<PointKey> followed =
+                trace.point().map(ModulusPoint::key).or(() -> trace.creep().map(CreepCurve::key));
         return differing("grade", PointKey::grade, key, followed)
                 + differing("lot", PointKey::lot, key, followed)
                 + differing("specimen", PointKey::specimen, key, followed)

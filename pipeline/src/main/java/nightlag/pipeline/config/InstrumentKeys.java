@@ -72,9 +72,10 @@ final class InstrumentKeys {
                     + "rows of one stand together. `rolling`: one long record at one frequency, cut into windows; needs "
                     + "the tag `frequency`. `moduli`: no waveforms, each row is a point already reduced. `multisine`: a "
                     + "file is one record of several frequencies at once, a point each. `chirp`: a file is one "
-                    + "exponential sweep of frequency. `creep`: steps of "
-                    + "stress and their recovery. Files of the layout `creep` are "
-                    + "not reduced yet.");
+                    + "exponential sweep of frequency. `creep`: a file is one "
+                    + "record of steps of stress and their recovery, at no frequency; the steps are found from the "
+                    + "stress. It should begin before the first load. Of `[corrections]` only `compliance` acts on "
+                    + "it.");
     static final Key WINDOW = Key.withDefault(
             "window",
             new Whole(1, 100_000),

@@ -12,14 +12,9 @@ public enum Layout {
     CHIRP,
     CREEP;
 
-    /** Whether this version reduces it. */
-    public boolean supported() {
-        return this != CREEP;
-    }
-
     /** Whether a file is one record, its point named after the file where no tag names it. */
     public boolean oneRecordAFile() {
-        return this == SINGLE || this == MULTISINE || this == CHIRP;
+        return this == SINGLE || this == MULTISINE || this == CHIRP || this == CREEP;
     }
 
     /** The word in configuration. */

@@ -82,6 +82,9 @@ public final class Plans {
                         "the dimension in [geometry] or as a tag of instrument " + instrument.id());
             }
         }
+        if (instrument.records().layout() == Layout.CREEP) {
+            return Optional.empty();
+        }
         boolean tagged = instrument.tags().containsKey(TagName.FREQUENCY) || channels.contains(ChannelName.FREQUENCY);
         if (grade.extraction().frequencyFrom() == nightlag.stages.waveform.FrequencySource.TAG && !tagged) {
             return problem(

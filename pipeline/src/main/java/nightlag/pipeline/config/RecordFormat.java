@@ -24,6 +24,7 @@ public record RecordFormat(
         return switch (layout) {
             case MULTISINE -> new RecordKind.Multisine(frequenciesHz);
             case CHIRP -> new RecordKind.Chirp(pointsPerDecade);
+            case CREEP -> new RecordKind.Creep();
             default -> new RecordKind.OneFrequency();
         };
     }

@@ -4,7 +4,6 @@ import java.io.IOException;
 import java.util.EnumMap;
 import java.util.Map;
 import java.util.Optional;
-import nightlag.pipeline.config.Layout;
 import nightlag.pipeline.config.TagName;
 import nightlag.pipeline.intake.RawFile;
 
@@ -29,7 +28,6 @@ public final class RawFileDecoder {
     public static DecodeCounts decode(RawFile file, Optional<RunSheetRow> runSheetRow, RecordSink sink)
             throws DecodeException, IOException {
         Complaints complaints = new Complaints(file.tableName());
-        refuseLayoutsToCome(file, complaints);
         try (RawTable table = RawTable.open(file, complaints)) {
             Tally tally = new Tally(sink, complaints);
             RowTaker taker = taker(file, FileFacts.of(file, runSheetRow, table, complaints), tally);
@@ -61,7 +59,6 @@ public final class RawFileDecoder {
     public static FileDescription describe(RawFile file, Optional<RunSheetRow> runSheetRow)
             throws DecodeException, IOException {
         Complaints complaints = new Complaints(file.tableName());
-        refuseLayoutsToCome(file, complaints);
         try (RawTable table = RawTable.open(file, complaints)) {
             FileFacts facts = FileFacts.of(file, runSheetRow, table, complaints);
             taker(file, facts, new Tally(record -> {}, complaints));
@@ -87,24 +84,12 @@ public final class RawFileDecoder {
         }
     }
 
-    private static void refuseLayoutsToCome(RawFile file, Complaints complaints) throws DecodeException {
-        Layout layout = file.intake().instrument().records().layout();
-        if (!layout.supported()) {
-            throw complaints.at(
-                    0,
-                    "[records] layout",
-                    "layout " + layout.word() + " is not acted on yet",
-                    "single, column, rolling, moduli, multisine or chirp");
-        }
-    }
-
     private static RowTaker taker(RawFile file, FileFacts facts, Tally tally) throws DecodeException {
         return switch (file.intake().instrument().records().layout()) {
             case MODULI -> new ModuliRows(facts, tally);
             case COLUMN -> new WaveformRows(facts, true, tally);
-            case SINGLE, MULTISINE, CHIRP -> new WaveformRows(facts, false, tally);
+            case SINGLE, MULTISINE, CHIRP, CREEP -> new WaveformRows(facts, false, tally);
             case ROLLING -> new RollingRows(facts, file.intake().instrument().records(), tally);
-            case CREEP -> throw new IllegalStateException("refused before");
         };
     }
 }

@@ -12,7 +12,7 @@ import nightlag.stages.WaveformRecord;
 import nightlag.stages.waveform.Waveform;
 
 /**
- * Records of samples: the layouts {@code single}, {@code multisine} and {@code chirp}, where the file is one, and
+ * Records of samples: the layouts {@code single}, {@code multisine}, {@code chirp} and {@code creep}, where the file is one, and
  * {@code column}, where the tag {@code point} tells them apart.
  *
  * <p>A row without a time, a deformation or a load is left out, and so is one of the layout {@code column} without a point.

@@ -21,9 +21,7 @@ final class FileStates {
 
     /** A file whose records were reduced. */
     static ArchivedFile reduced(Candidate candidate, Look.Reduced look) {
-        int points = look.reductions().stream()
-                .mapToInt(reduction -> reduction.points().size())
-                .sum();
+        int points = look.reductions().stream().mapToInt(Reduction::count).sum();
         return new ArchivedFile(
                 candidate.identity(),
                 candidate.file().tableName(),
@@ -126,9 +124,7 @@ final class FileStates {
     }
 
     private static Stream<PointKey> keys(List<Reduction> reductions) {
-        return reductions.stream()
-                .flatMap(reduction -> reduction.points().stream())
-                .map(point -> point.key());
+        return reductions.stream().flatMap(Reduction::keys);
     }
 
     /** The one value all agree on, or empty text. */

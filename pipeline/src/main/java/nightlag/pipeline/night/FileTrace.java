@@ -23,6 +23,7 @@ import nightlag.stages.Reduce;
 import nightlag.stages.Reduction;
 import nightlag.stages.ReductionPlan;
 import nightlag.stages.ReductionTrace;
+import nightlag.stages.moduli.CreepCurve;
 import nightlag.stages.moduli.ModulusPoint;
 
 /**
@@ -34,6 +35,7 @@ import nightlag.stages.moduli.ModulusPoint;
  * @param record the record followed
  * @param followed its way; empty where no record came to the stages
  * @param point the point picked among those of the record
+ * @param creep the creep curve of the record
  * @param others all other points of the file, in order
  * @param problem why the file would be set aside; empty text where it would not
  */
@@ -44,6 +46,7 @@ public record FileTrace(
         Optional<MeasuredRecord> record,
         Optional<ReductionTrace> followed,
         Optional<ModulusPoint> point,
+        Optional<CreepCurve> creep,
         List<ModulusPoint> others,
         String problem) {
     private static final int MOST_NAMED = 20;
@@ -104,6 +107,7 @@ public record FileTrace(
         private Optional<MeasuredRecord> record = Optional.empty();
         private Optional<ReductionTrace> followed = Optional.empty();
         private Optional<ModulusPoint> point = Optional.empty();
+        private Optional<CreepCurve> creep = Optional.empty();
 
         Following(
                 Configuration configuration,
@@ -119,6 +123,15 @@ public record FileTrace(
         void take(MeasuredRecord next) {
             ReductionPlan plan = plans.of(next.tags().key().grade());
             Reduction reduction = stages.apply(next, plan);
+            reduction
+                    .creep()
+                    .filter(curve -> wanted.orElse(curve.key().point())
+                            .equals(curve.key().point()))
+                    .ifPresent(curve -> {
+                        creep = Optional.of(curve);
+                        record = Optional.of(next);
+                        followed = Optional.of(ReductionTrace.of(next, plan));
+                    });
             for (ModulusPoint found : reduction.points()) {
                 if (point.isEmpty()
                         && wanted.orElse(found.key().point()).equals(found.key().point())) {
@@ -133,7 +146,7 @@ public record FileTrace(
 
         FileTrace end(Optional<FileDescription> description, Optional<DecodeCounts> counts, String problem)
                 throws NightFault {
-            if (wanted.isPresent() && point.isEmpty() && problem.isEmpty()) {
+            if (wanted.isPresent() && point.isEmpty() && creep.isEmpty() && problem.isEmpty()) {
                 throw new NightFault(
                         NightFault.Kind.CANNOT_BEGIN,
                         file.tableName() + " has no point '" + wanted.get() + "'; its points are "
@@ -141,7 +154,7 @@ public record FileTrace(
                                         .map(other -> other.key().point())
                                         .toList()));
             }
-            return new FileTrace(file, description, counts, record, followed, point, others, problem);
+            return new FileTrace(file, description, counts, record, followed, point, creep, others, problem);
         }
 
         private static String named(List<String> points) {

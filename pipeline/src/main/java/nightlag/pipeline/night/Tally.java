@@ -16,8 +16,10 @@ import nightlag.pipeline.tables.NightFileRow;
 import nightlag.stages.LotResult;
 import nightlag.stages.Reduction;
 import nightlag.stages.fault.Reason;
+import nightlag.stages.moduli.CreepCurve;
 import nightlag.stages.moduli.Flag;
 import nightlag.stages.moduli.ModulusPoint;
+import nightlag.stages.moduli.PointKey;
 import nightlag.stages.moduli.Quality;
 import org.apache.logging.log4j.LogManager;
 import org.apache.logging.log4j.Logger;
@@ -95,6 +97,14 @@ final class Tally {
                 }
             }
         }
+        for (Reduction reduction : reductions) {
+            reduction
+                    .creep()
+                    .ifPresent(curve -> curve.reasons()
+                            .forEach(reason -> pointsBySentence
+                                    .computeIfAbsent(reason.sentence(), any -> new ArrayList<>())
+                                    .add(curve.key().point())));
+        }
         pointsBySentence.forEach((sentence, points) -> LOG.info("{}, {}: {}", file, named(points), sentence));
     }
 
@@ -119,19 +129,28 @@ final class Tally {
                 quality.merge(point.quality(), 1, Integer::sum);
                 point.flags().forEach(flag -> flags.merge(flag, 1, Integer::sum));
                 if (point.quality() != Quality.SOUND) {
-                    notSound(point);
+                    notSound(point.key(), point.quality(), point.reasons());
+                }
+            }
+        }
+        for (CreepCurve curve : result.creep()) {
+            if (reducedTonight.contains(curve.key().sourceFile())) {
+                quality.merge(curve.quality(), 1, Integer::sum);
+                curve.flags().forEach(flag -> flags.merge(flag, 1, Integer::sum));
+                if (curve.quality() != Quality.SOUND) {
+                    notSound(curve.key(), curve.quality(), curve.reasons());
                 }
             }
         }
     }
 
-    private void notSound(ModulusPoint point) {
-        String name = point.key().sourceFile() + ", point " + point.key().point();
-        String reasons = point.reasons().stream().map(Reason::sentence).collect(Collectors.joining("; "));
-        LOG.info("{}: published as {}: {}", name, point.quality().word(), reasons);
-        List<String> lines = notSound.computeIfAbsent(point.quality(), any -> new ArrayList<>());
+    private void notSound(PointKey key, Quality found, List<Reason> why) {
+        String name = key.sourceFile() + ", point " + key.point();
+        String reasons = why.stream().map(Reason::sentence).collect(Collectors.joining("; "));
+        LOG.info("{}: published as {}: {}", name, found.word(), reasons);
+        List<String> lines = notSound.computeIfAbsent(found, any -> new ArrayList<>());
         if (lines.size() < MOST_NOT_SOUND) {
-            lines.add(name + ", " + point.quality().word() + ": " + reasons);
+            lines.add(name + ", " + found.word() + ": " + reasons);
         }
     }
 

@@ -42,7 +42,8 @@ public final class LotTables {
                     (result, from) -> result.responses().stream()
                             .map(at -> new ResponseTable.Row(from.grade(), from.lot(), at))
                             .toList()),
-            new LotTable<>(DerivedTable.TABLE, (result, from) -> result.derived()));
+            new LotTable<>(DerivedTable.TABLE, (result, from) -> result.derived()),
+            new LotTable<>(CreepTable.TABLE, (result, from) -> CreepTable.rows(result.creep())));
 
     private LotTables() {}
 

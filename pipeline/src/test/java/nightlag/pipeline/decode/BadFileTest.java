@@ -338,14 +338,6 @@ class BadFileTest {
                         "too slow",
                         "the frequency the record was driven at"),
                 fault(
-                        "layout to come",
-                        bench -> bench.layout(Layout.CREEP),
-                        "t;phi;M|0;1;2",
-                        0,
-                        "[records] layout",
-                        "layout creep is not acted on yet",
-                        "single, column, rolling, moduli, multisine or chirp"),
-                fault(
                         "moduli without a frequency",
                         bench -> moduli(bench).preamble(TagName.FREQUENCY, "f", "Hz"),
                         "t;phi;M|20;1;2",

@@ -285,7 +285,8 @@ class LotTablesTest {
                 shuffled(result.derived(), seed),
                 List.of(),
                 result.responses(),
-                shuffled(result.prony(), seed));
+                shuffled(result.prony(), seed),
+                List.of());
         Locale was = Locale.getDefault();
 
         write(result);

@@ -51,7 +51,8 @@ public final class RandomLot {
                 derived(made),
                 sweeps(made),
                 responses(),
-                prony());
+                prony(),
+                List.of());
     }
 
     /** Sweeps of every kind, whatever varies in them. */

@@ -108,6 +108,27 @@ final class Screening {
         return screening;
     }
 
+    /** Screens a creep record by those flags that mean something for it. */
+    static Screening ofCreep(
+            CreepFigures figures,
+            Optional<SignalRange> deformationRange,
+            Optional<SignalRange> loadRange,
+            ScreeningPlan plan) {
+        Screening screening = new Screening();
+        screening.above(ScreeningReason.SCREENING_CLIPPED, figures.clippedShare(), plan.clipped());
+        screening.above(ScreeningReason.SCREENING_DECADES_MISSING, figures.gapShare(), plan.gaps());
+        screening.below(ScreeningReason.SCREENING_WEAK_SIGNAL, figures.snrDb(), plan.snrDb());
+        screening.above(ScreeningReason.SCREENING_REST_DRIFTING, figures.baseline(), plan.baseline());
+        screening.above(ScreeningReason.SCREENING_STRESS_NOT_HELD, figures.stressChange(), plan.cycleTrend());
+        screening.above(ScreeningReason.SCREENING_COMPLIANCE_HEAVY, figures.complianceRatio(), plan.compliance());
+        screening.outOf(deformationRange, "deformation", figures.deformation());
+        screening.outOf(loadRange, "load", figures.load());
+        figures.temperatureWanderK()
+                .ifPresent(wander -> screening.above(
+                        ScreeningReason.SCREENING_TEMPERATURE_WANDER, wander, plan.temperatureWanderK()));
+        return screening;
+    }
+
     /** Screens nothing but the orders of the stress. */
     static Screening ofHarmonics(List<Harmonic> stress, Threshold third, Threshold even) {
         Screening screening = new Screening();

@@ -9,6 +9,8 @@ public enum ScreeningReason implements ReasonCode {
     SCREENING_FEW_CYCLES(Flag.FEW_CYCLES, "{0} cycles used, {1} wanted"),
     SCREENING_CLIPPED(Flag.CLIPPED, "{0} of the samples stand at a channel''s limit or are spikes, the limit is {1}"),
     SCREENING_GAPS(Flag.GAPS, "{0} of the record is missing, the limit is {1}"),
+    /** Of a creep record. */
+    SCREENING_DECADES_MISSING(Flag.GAPS, "{0} of the decades of time after the steps is missing, the limit is {1}"),
     SCREENING_UNEVEN_CLOCK(Flag.UNEVEN_CLOCK, "the sampling interval scatters by {0} of its mean, the limit is {1}"),
     /**
      * Parts: {0} jump in s, {1} smallest step in cycles, {2} what the point becomes, {3} time in s, {4} step in cycles,
@@ -25,6 +27,14 @@ public enum ScreeningReason implements ReasonCode {
             "{0} dB from signal to noise, {1} dB wanted; {3} % of what is left lies at orders above the {4} fitted, so it is"
                     + " the wave''s shape rather than noise"),
     SCREENING_DRIFTING(Flag.DRIFTING, "the mean moves by {0} of the amplitude, the limit is {1}"),
+    /** Of a creep record. */
+    SCREENING_REST_DRIFTING(
+            Flag.DRIFTING,
+            "the strain drifts before the load: going on so, it would come to {0} of the largest strain by the end of the"
+                    + " record, the limit is {1}"),
+    /** Of a creep record. */
+    SCREENING_STRESS_NOT_HELD(
+            Flag.UNSETTLED, "the stress changes by {0} of its step while it should be held, the limit is {1}"),
     SCREENING_UNSETTLED(Flag.UNSETTLED, "the modulus changes by {0} over the record, the limit is {1}"),
     /** Parts: {0} ratio, {1} limit, {2} what the point becomes, {3} relative u from the cycles, {4} relative u from the noise. */
     SCREENING_CYCLES_DISAGREE(

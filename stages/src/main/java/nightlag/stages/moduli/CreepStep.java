@@ -1,0 +1,23 @@
+package nightlag.stages.moduli;
+
+/**
+ * One step of the stress.
+ *
+ * @param part load or recovery
+ * @param atS its instant, the centre of the rise, in s after that of the first step
+ * @param atUS standard uncertainty of the instant, s: it lies somewhere between two samples
+ * @param riseS from the last sample before it to the first at the new stress, s
+ * @param changePa change of the stress, Pa
+ * @param changeUPa standard uncertainty of the change, Pa
+ * @param strainBefore strain at its instant
+ * @param strainBeforeU standard uncertainty of that
+ */
+public record CreepStep(
+        CreepPart part,
+        double atS,
+        double atUS,
+        double riseS,
+        double changePa,
+        double changeUPa,
+        double strainBefore,
+        double strainBeforeU) {}
