@@ -10,6 +10,11 @@ import java.util.OptionalDouble;
 import nightlag.pipeline.RandomPoints;
 import nightlag.stages.Reduction;
 import nightlag.stages.geometry.DeformationMode;
+import nightlag.stages.moduli.CreepCurve;
+import nightlag.stages.moduli.CreepPart;
+import nightlag.stages.moduli.CreepReading;
+import nightlag.stages.moduli.CreepStep;
+import nightlag.stages.moduli.Flag;
 import nightlag.stages.moduli.Harmonic;
 import nightlag.stages.moduli.Moduli;
 import nightlag.stages.moduli.ModulusPoint;
@@ -47,6 +52,35 @@ class ReductionJsonTest {
                         + "\"sweep\":\"1\",\"point\":\"a\",\"sourceFile\":\"bench/a.csv\"},\"deformation\":\"SHEAR\","
                         + "\"moduli\":{\"storagePa\":2.0,\"lossPa\":3.0},\"harmonics\":[[1,2.5,0.25,1.0,null]],"
                         + "\"quality\":\"SOUND\",\"flags\":[],\"samplesUsed\":512,\"reasons\":[],\"loop\":[]}]}");
+    }
+
+    @Test
+    void aCreepCurveIsReadAsItWasWritten() throws JsonProcessingException {
+        Reduction reduction = new Reduction(
+                List.of(),
+                Optional.of(new CreepCurve(
+                        new PointKey("Heron 3", "L-17", "1", "1", "run", "bench/run.csv"),
+                        Optional.of("2026-02-17"),
+                        DeformationMode.EXTENSION,
+                        OptionalDouble.of(298.15),
+                        OptionalDouble.empty(),
+                        true,
+                        List.of(new CreepStep(CreepPart.LOAD, 0, 0.01, 0.1, 1e4, 3, 1e-5, 1e-7)),
+                        List.of(new CreepReading(1, 1.0 / 3, 0.3, 1e4, 2e-3, 1e-7, 2e-7, Double.NaN)),
+                        Quality.DOUBTFUL,
+                        List.of(Flag.UNSETTLED),
+                        77,
+                        List.of())));
+
+        String text = ReductionJson.write(reduction);
+
+        assertThat(ReductionJson.read(text)).isEqualTo(reduction);
+        assertThat(text).contains("\"readings\":[[1,0.3333333333333333,0.3,10000.0,0.002,1.0E-7,2.0E-7,\"NaN\"]]");
+    }
+
+    @Test
+    void aReductionWithoutACreepCurveReadsAsBefore() throws JsonProcessingException {
+        assertThat(ReductionJson.read("{\"points\":[]}")).isEqualTo(new Reduction(List.of()));
     }
 
     @ParameterizedTest

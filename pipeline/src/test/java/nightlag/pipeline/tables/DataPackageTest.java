@@ -41,7 +41,8 @@ class DataPackageTest {
                         "spectrum",
                         "prony",
                         "response",
-                        "derived");
+                        "derived",
+                        "creep");
         for (JsonNode resource : descriptor.get("resources")) {
             JsonNode fields = resource.at("/schema/fields");
             assertThat(Files.readString(lot().resolve(resource.get("path").asText())))

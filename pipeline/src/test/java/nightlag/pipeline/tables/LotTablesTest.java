@@ -18,6 +18,10 @@ import java.util.TreeMap;
 import java.util.stream.Stream;
 import nightlag.stages.LotResult;
 import nightlag.stages.geometry.DeformationMode;
+import nightlag.stages.moduli.CreepCurve;
+import nightlag.stages.moduli.CreepPart;
+import nightlag.stages.moduli.CreepReading;
+import nightlag.stages.moduli.CreepStep;
 import nightlag.stages.moduli.FigureRow;
 import nightlag.stages.moduli.Flag;
 import nightlag.stages.moduli.Harmonic;
@@ -132,6 +136,7 @@ class LotTablesTest {
                 List.of(third, first, second),
                 List.of(),
                 List.of(),
+                List.of(),
                 List.of()));
 
         assertThat(table("derived")).isEqualTo("""
@@ -139,6 +144,47 @@ class LotTablesTest {
                         Heron 3,L-17,1,1,2,rutting_factor,190,0.5,1250,12.5,Pa,bench/2.csv
                         Heron 3,L-17,1,1,10,damage,190,0.5,-0.5,,Pa,bench/10.csv
                         Heron 3,L-17,1,1,10,rutting_factor,190,0.5,1000,10,Pa,bench/10.csv
+                        """.replace("\n", "\r\n"));
+    }
+
+    @Test
+    void creepReadingsStandInTheOrderOfTime() throws IOException {
+        CreepCurve curve = new CreepCurve(
+                new PointKey("Heron 3", "L-17", "1", "1", "run", "bench/run.csv"),
+                Optional.empty(),
+                DeformationMode.SHEAR,
+                OptionalDouble.of(463.15),
+                OptionalDouble.empty(),
+                true,
+                List.of(
+                        new CreepStep(CreepPart.LOAD, 0, 0, 0.5, 100, 0, 0, 0),
+                        new CreepStep(CreepPart.RECOVERY, 10, 0, 0.5, -100, 0, 2e-3, 0)),
+                List.of(
+                        new CreepReading(2, 11, 1, 0, 1e-3, 1e-6, 1e-5, 1e-8),
+                        new CreepReading(1, 2.5, 2.5, 100, 2e-3, 1e-6, 2e-5, 1e-8)),
+                Quality.DOUBTFUL,
+                List.of(Flag.DRIFTING, Flag.UNSETTLED),
+                200,
+                List.of());
+
+        write(new LotResult(
+                List.of(),
+                List.of(),
+                List.of(),
+                List.of(),
+                List.of(),
+                List.of(),
+                List.of(),
+                List.of(),
+                List.of(curve)));
+
+        assertThat(table("creep")).isEqualTo("""
+                        grade,lot,specimen,sweep,temperature_C,time_s,stress_Pa,strain,compliance_1_Pa,compliance_u_1_Pa,part,\
+                        point,step,step_time_s,deformation,quality,flags,source_file
+                        Heron 3,L-17,1,1,190,2.5,100,0.002,0.00002,1e-8,load,\
+                        run,1,2.5,shear,doubtful,drifting;unsettled,bench/run.csv
+                        Heron 3,L-17,1,1,190,11,0,0.001,0.00001,1e-8,recovery,\
+                        run,2,1,shear,doubtful,drifting;unsettled,bench/run.csv
                         """.replace("\n", "\r\n"));
     }
 
@@ -301,6 +347,7 @@ class LotTablesTest {
         assertThat(filesOfTheLot()).isEqualTo(first);
         assertThat(first.keySet())
                 .containsExactly(
+                        "creep.csv",
                         "datapackage.json",
                         "derived.csv",
                         "harmonics.csv",
@@ -325,6 +372,7 @@ class LotTablesTest {
 
         assertThat(filesOfTheLot().keySet())
                 .containsExactly(
+                        "creep.csv",
                         "datapackage.json",
                         "derived.csv",
                         "harmonics.csv",
