@@ -48,10 +48,15 @@ public final class Conclude {
         Sweeps sweeps = Sweeps.of(lot.points(), lot.amplitudeSweeps(), plan.sweeps());
         List<Reason> notes = new ArrayList<>(lot.notes());
         notes.addAll(sweeps.notes());
-        Optional<LotCurve> curve = curve(sweeps, plan, notes);
+        List<CreepCurve> creep = LotCreep.inOrder(reductions);
+        boolean creepAlone = !creep.isEmpty() && sweeps.isotherms().isotherms().isEmpty();
+        Optional<LotCurve> curve = creepAlone ? Optional.empty() : curve(sweeps, plan, notes);
         Optional<MasterCurve> master = curve.flatMap(LotCurve::master);
-        LotSpectrum spectrum = curve.flatMap(whole -> plan.spectrum().map(wanted -> LotSpectrum.of(whole, wanted)))
+        LotSpectrum ofModuli = curve.flatMap(whole -> plan.spectrum().map(wanted -> LotSpectrum.of(whole, wanted)))
                 .orElse(LotSpectrum.NONE);
+        LotSpectrum spectrum = plan.spectrum()
+                .map(wanted -> LotCreep.spectrum(creep, curve, wanted, ofModuli))
+                .orElse(ofModuli);
         notes.addAll(spectrum.notes());
         Findings markers = LotMarkers.of(sweeps.sweeps(), plan.sweeps(), curve);
         List<ModulusPoint> usable = lot.points().stream()
@@ -61,7 +66,6 @@ public final class Conclude {
         notes.addAll(figures.findings().notes());
         LotResponses responses = LotResponses.of(plan.responses(), curve, spectrum);
         notes.addAll(responses.notes());
-        List<CreepCurve> curves = LotCreep.inOrder(reductions);
         return new LotResult(
                 lot.points(),
                 Stream.of(
@@ -80,7 +84,7 @@ public final class Conclude {
                 sweeps.sweeps(),
                 responses.rows(),
                 responses.prony(),
-                curves);
+                creep);
     }
 
     /** The curve that a master curve or a spectrum is asked of; what there is to say of it goes into the notes. */

@@ -115,6 +115,18 @@ class CreepNightTest {
         assertThat(ended.exitCode()).as(ended.out() + ended.err()).isZero();
         requireCurve(lab.table("plover", "L1", "creep"));
         assertThat(lab.table("plover", "L1", "points")).isEmpty();
+        List<Map<String, String>> modes = lab.table("plover", "L1", "spectrum").stream()
+                .filter(row -> row.get("kind").equals("retardation"))
+                .toList();
+        assertThat(modes).singleElement().satisfies(mode -> {
+            assertThat(Double.parseDouble(mode.get("time_s"))).isCloseTo(2, within(0.02));
+            assertThat(Double.parseDouble(mode.get("value"))).isCloseTo(5e-7, within(5e-9));
+        });
+        assertThat(lab.table("plover", "L1", "markers"))
+                .filteredOn(row -> row.get("property").equals("zero_shear_viscosity"))
+                .singleElement()
+                .satisfies(
+                        row -> assertThat(Double.parseDouble(row.get("value"))).isCloseTo(1e8, within(1e6)));
         assertThat(lab.files()).extracting(row -> row.get("points")).containsExactly("1");
         assertThat(lab.files()).extracting(row -> row.get("lot")).containsExactly("L1");
         assertThat(lab.logLines("left out after each step while the stress settles"))

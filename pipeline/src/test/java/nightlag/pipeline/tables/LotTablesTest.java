@@ -176,6 +176,7 @@ class LotTablesTest {
                 List.of(),
                 List.of(),
                 List.of(),
+                List.of(),
                 List.of(curve)));
 
         assertThat(table("creep")).isEqualTo("""

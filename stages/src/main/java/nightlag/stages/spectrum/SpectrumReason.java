@@ -21,6 +21,14 @@ public enum SpectrumReason implements ReasonCode {
     /** Nothing. */
     CONTINUOUS_NO_SCATTER(
             "no continuous spectrum: the moduli came without u, and there are too few of them to take one from their scatter"),
+    /** Readings there, readings needed. */
+    CREEP_TOO_FEW_READINGS("no spectrum of the creep curves: {0} readings (at least {1} are needed)"),
+    /** Nothing. */
+    CREEP_NO_INSTANTANEOUS("no spectrum of the creep curves: neither an instantaneous compliance nor modes are seen"),
+    /** Slowest mode, longest time, s. */
+    CREEP_END_NOT_REACHED(
+            "creep: the slowest mode, {0} s, is not over within the {1} s measured: no viscosity, no steady-state compliance and"
+                    + " no equilibrium modulus"),
     /** Nothing. */
     EQUILIBRIUM_MODULUS_ZERO(
             "the fitted equilibrium modulus is zero: the spectrum is that of a liquid, with a viscosity in its place");

@@ -1,0 +1,163 @@
+package nightlag.stages.spectrum;
+
+import java.util.ArrayList;
+import java.util.List;
+import nightlag.stages.moduli.CreepCurve;
+import nightlag.stages.moduli.CreepReading;
+import nightlag.stages.moduli.CreepStep;
+import nightlag.stages.moduli.ModuliCovariance;
+import nightlag.stages.moduli.ModulusReading;
+import nightlag.stages.numeric.Complex;
+
+/**
+ * Readings that are linear in J0, 1/η0 and the strengths of retardation modes, each row over its uncertainty: strains of
+ * creep curves, by the superposition of all steps before them (Boltzmann), and complex compliances 1/G*.
+ */
+final class ComplianceReadings {
+    /** What averaging over a twentieth of a decade may leave in a reading. */
+    private static final double LEAST_RELATIVE_U = 2e-4;
+
+    private final List<CreepRow> creep = new ArrayList<>();
+    private final List<Waves> waves = new ArrayList<>();
+    private double shortestS = Double.POSITIVE_INFINITY;
+    private double longestS;
+
+    /** A strain after some steps: their stresses in Pa, the times since each in s. */
+    private record CreepRow(double[] changesPa, double[] sinceS, double strain, double u) {}
+
+    /** A complex compliance; {@code first}, {@code mixed} and {@code second} make rows of unit variance of it. */
+    private record Waves(double omega, Complex compliance, double first, double mixed, double second) {}
+
+    /** A function of the time since a step. */
+    private interface Kernel {
+        double at(double sinceS);
+    }
+
+    /** Readings of curves that begin at rest and of moduli with a covariance. */
+    static ComplianceReadings of(List<CreepCurve> curves, List<ModulusReading> moduli) {
+        ComplianceReadings readings = new ComplianceReadings();
+        curves.forEach(readings::add);
+        moduli.forEach(readings::add);
+        return readings;
+    }
+
+    private void add(CreepCurve curve) {
+        double zero = curve.steps().get(0).strainBefore();
+        for (CreepReading reading : curve.readings()) {
+            int steps = reading.step();
+            double[] changes = new double[steps];
+            double[] since = new double[steps];
+            for (int k = 0; k < steps; k++) {
+                CreepStep step = curve.steps().get(k);
+                changes[k] = step.changePa();
+                since[k] = reading.timeS() - step.atS();
+            }
+            double strain = reading.strain() - zero;
+            double own = reading.complianceUPerPa() * Math.abs(changes[steps - 1]);
+            creep.add(new CreepRow(changes, since, strain, Math.max(own, LEAST_RELATIVE_U * Math.abs(strain))));
+            shortestS = Math.min(shortestS, reading.sinceStepS());
+            longestS = Math.max(longestS, reading.timeS());
+        }
+    }
+
+    /** With J = 1/G, dJ = −dG/G²: the covariance of G turned and scaled. */
+    private void add(ModulusReading reading) {
+        Complex modulus = reading.moduli().complex();
+        Complex compliance = new Complex(1, 0).over(modulus);
+        Complex turn = compliance.times(compliance).times(-1);
+        ModuliCovariance covariance = reading.moduli().covariance().orElseThrow();
+        double a = covariance.storageVariance();
+        double b = covariance.covariance();
+        double c = covariance.lossVariance();
+        double re = turn.re();
+        double im = turn.im();
+        double least = LEAST_RELATIVE_U * compliance.abs();
+        double varianceRe = re * re * a - 2 * re * im * b + im * im * c + least * least;
+        double varianceIm = im * im * a + 2 * re * im * b + re * re * c + least * least;
+        double both = re * im * a + (re * re - im * im) * b - re * im * c;
+        double root = Math.sqrt(varianceRe);
+        double left = Math.sqrt(Math.max(1e-12 * varianceIm, varianceIm - both * both / varianceRe));
+        waves.add(new Waves(reading.angularFrequency(), compliance, 1 / root, -both / (varianceRe * left), 1 / left));
+        shortestS = Math.min(shortestS, 1 / reading.angularFrequency());
+        longestS = Math.max(longestS, 1 / reading.angularFrequency());
+    }
+
+    int rows() {
+        return creep.size() + 2 * waves.size();
+    }
+
+    /** Shortest time since a step, or 1/ω of the highest frequency, s. */
+    double shortestS() {
+        return shortestS;
+    }
+
+    /** Longest time since the first step, or 1/ω of the lowest frequency, s. */
+    double longestS() {
+        return longestS;
+    }
+
+    /** What was read. */
+    double[] target() {
+        double[] target = new double[rows()];
+        for (int i = 0; i < creep.size(); i++) {
+            target[i] = creep.get(i).strain() / creep.get(i).u();
+        }
+        for (int i = 0; i < waves.size(); i++) {
+            put(target, i, waves.get(i).compliance());
+        }
+        return target;
+    }
+
+    /** One mode of unit strength. */
+    double[] mode(double lambda) {
+        return column(
+                since -> -Math.expm1(-since / lambda),
+                (omega) -> new Complex(1, 0).over(new Complex(1, omega * lambda)));
+    }
+
+    /** Its derivative by ln λ. */
+    double[] modeByLogTime(double lambda) {
+        return column(since -> -since / lambda * Math.exp(-since / lambda), omega -> {
+            Complex one = new Complex(1, omega * lambda);
+            return new Complex(0, -omega * lambda).over(one.times(one));
+        });
+    }
+
+    /** J0 of 1/Pa. */
+    double[] instantaneous() {
+        return column(since -> 1, omega -> new Complex(1, 0));
+    }
+
+    /** 1/η0 of 1/(Pa·s). */
+    double[] flow() {
+        return column(since -> since, omega -> new Complex(0, -1 / omega));
+    }
+
+    /** A function of angular frequency. */
+    private interface Response {
+        Complex at(double omega);
+    }
+
+    private double[] column(Kernel kernel, Response response) {
+        double[] column = new double[rows()];
+        for (int i = 0; i < creep.size(); i++) {
+            CreepRow row = creep.get(i);
+            double sum = 0;
+            for (int k = 0; k < row.sinceS().length; k++) {
+                sum += row.changesPa()[k] * kernel.at(row.sinceS()[k]);
+            }
+            column[i] = sum / row.u();
+        }
+        for (int i = 0; i < waves.size(); i++) {
+            put(column, i, response.at(waves.get(i).omega()));
+        }
+        return column;
+    }
+
+    private void put(double[] column, int i, Complex value) {
+        Waves row = waves.get(i);
+        int at = creep.size() + 2 * i;
+        column[at] = row.first() * value.re();
+        column[at + 1] = row.mixed() * value.re() + row.second() * value.im();
+    }
+}

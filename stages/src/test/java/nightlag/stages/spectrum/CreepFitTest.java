@@ -1,0 +1,177 @@
+package nightlag.stages.spectrum;
+
+import static org.assertj.core.api.Assertions.assertThat;
+import static org.assertj.core.api.Assertions.within;
+
+import java.util.ArrayList;
+import java.util.List;
+import java.util.Optional;
+import java.util.OptionalDouble;
+import java.util.OptionalInt;
+import java.util.Random;
+import nightlag.stages.fault.ReductionFault;
+import nightlag.stages.geometry.DeformationMode;
+import nightlag.stages.moduli.CreepCurve;
+import nightlag.stages.moduli.CreepPart;
+import nightlag.stages.moduli.CreepReading;
+import nightlag.stages.moduli.CreepStep;
+import nightlag.stages.moduli.Marker;
+import nightlag.stages.moduli.Moduli;
+import nightlag.stages.moduli.ModuliCovariance;
+import nightlag.stages.moduli.ModulusReading;
+import nightlag.stages.moduli.PointKey;
+import nightlag.stages.moduli.Quality;
+import nightlag.stages.numeric.Complex;
+import org.junit.jupiter.api.Test;
+import org.junit.jupiter.params.ParameterizedTest;
+import org.junit.jupiter.params.provider.ValueSource;
+
+/** Spectra out of creep: what goes in as modes comes out, alone, with recovery, and with moduli of the same material. */
+class CreepFitTest {
+    private static final SpectrumPlan LIQUID = new SpectrumPlan(false, OptionalInt.empty(), false);
+    private static final SpectrumPlan SOLID = new SpectrumPlan(true, OptionalInt.empty(), false);
+
+    /** Burgers (exact): J = 1 + t/10 + 0.5 (1 − e^{−t/2}), here in 1e-6/Pa. */
+    private static final RetardationModes BURGERS =
+            RetardationModes.of(1e-6, 1e-7, new double[] {2}, new double[] {0.5e-6});
+    /** A standard linear solid (exact): Ge = 1, G1 = 9, τ = 1 gives J0 = 0.1, J1 = 0.9, λ = 10; here in 1e-6/Pa. */
+    private static final RetardationModes STANDARD_SOLID =
+            RetardationModes.of(0.1e-6, 0, new double[] {10}, new double[] {0.9e-6});
+
+    /** Creep under 1 kPa and, where the record goes on, recovery; errors of {@code noise} of the reading. */
+    static CreepCurve curve(
+            RetardationModes material, double first, double loadedS, double untilS, double noise, long seed) {
+        Random random = new Random(seed);
+        List<CreepStep> steps = new ArrayList<>();
+        List<CreepReading> readings = new ArrayList<>();
+        steps.add(new CreepStep(CreepPart.LOAD, 0, 0, 0, 1000, 0, 0, 0));
+        for (double t = first; t <= loadedS; t *= Math.pow(10, 0.05)) {
+            readings.add(reading(1, t, t, 1000, 1000 * material.creepPerPa(t), 0, noise, random));
+        }
+        if (untilS > loadedS) {
+            double before = 1000 * material.creepPerPa(loadedS);
+            steps.add(new CreepStep(CreepPart.RECOVERY, loadedS, 0, 0, -1000, 0, before, 0));
+            for (double t = first; t <= untilS - loadedS; t *= Math.pow(10, 0.05)) {
+                double strain = 1000 * (material.creepPerPa(loadedS + t) - material.creepPerPa(t));
+                readings.add(reading(2, loadedS + t, t, -1000, strain, before, noise, random));
+            }
+        }
+        return new CreepCurve(
+                new PointKey("plover", "L1", "1", "1", "run", "bench/run.csv"),
+                Optional.empty(),
+                DeformationMode.SHEAR,
+                OptionalDouble.of(298.15),
+                OptionalDouble.empty(),
+                true,
+                steps,
+                readings,
+                Quality.SOUND,
+                List.of(),
+                1000,
+                List.of());
+    }
+
+    private static CreepReading reading(
+            int step,
+            double t,
+            double since,
+            double change,
+            double strain,
+            double before,
+            double noise,
+            Random random) {
+        double u = Math.max(noise, 1e-6) * Math.abs(strain);
+        double read = strain + noise * strain * random.nextGaussian();
+        return new CreepReading(
+                step, t, since, Math.max(0, change), read, u, (read - before) / change, u / Math.abs(change));
+    }
+
+    static List<ModulusReading> moduli(RetardationModes material, double lowest, double highest, double noise) {
+        Random random = new Random(7);
+        List<ModulusReading> readings = new ArrayList<>();
+        for (double omega = lowest; omega <= highest * 1.0001; omega *= Math.pow(10, 0.2)) {
+            Complex modulus = new Complex(1, 0).over(material.compliancePerPa(omega));
+            double u = noise * modulus.abs();
+            readings.add(new ModulusReading(
+                    omega,
+                    new Moduli(
+                            modulus.re() + u * random.nextGaussian(),
+                            modulus.im() + u * random.nextGaussian(),
+                            Optional.of(new ModuliCovariance(u * u, u * u, 0)))));
+        }
+        return readings;
+    }
+
+    private static void requireModes(RetardationModes found, RetardationModes truth, double error) {
+        assertThat(found.count()).isEqualTo(truth.count());
+        assertThat(found.instantaneousPerPa())
+                .isCloseTo(truth.instantaneousPerPa(), within(error * truth.instantaneousPerPa()));
+        assertThat(found.fluidityPerPaS()).isCloseTo(truth.fluidityPerPaS(), within(error * truth.fluidityPerPaS()));
+        for (int i = 0; i < truth.count(); i++) {
+            assertThat(found.timesS()[i]).isCloseTo(truth.timesS()[i], within(error * truth.timesS()[i]));
+            assertThat(found.strengthsPerPa()[i])
+                    .isCloseTo(truth.strengthsPerPa()[i], within(error * truth.strengthsPerPa()[i]));
+        }
+    }
+
+    @Test
+    void aBurgersBodyComesBackFromItsCreep() throws ReductionFault {
+        CreepSpectrum spectrum = CreepFit.fit(List.of(curve(BURGERS, 0.01, 100, 100, 0, 1)), List.of(), LIQUID);
+        requireModes(spectrum.retardation(), BURGERS, 1e-3);
+        // its exact inverse, published with it
+        RelaxationModes relaxation = spectrum.retardation().relaxation();
+        assertThat(relaxation.timesS()[1]).isCloseTo(15.7284161474, within(0.02));
+        assertThat(relaxation.timesS()[0]).isCloseTo(1.2715838526, within(0.002));
+    }
+
+    @Test
+    void aStandardLinearSolidComesBackFromCreepAndRecovery() throws ReductionFault {
+        CreepSpectrum spectrum = CreepFit.fit(List.of(curve(STANDARD_SOLID, 0.1, 200, 500, 0, 1)), List.of(), SOLID);
+        requireModes(spectrum.retardation(), STANDARD_SOLID, 1e-3);
+        assertThat(spectrum.markers(298.15))
+                .filteredOn(marker -> marker.property().equals("equilibrium_modulus"))
+                .singleElement()
+                .satisfies(marker -> assertThat(marker.value()).isCloseTo(1e6, within(1e3)));
+    }
+
+    @ParameterizedTest(name = "seed {0}")
+    @ValueSource(longs = {1, 2, 3, 4, 5, 6, 7, 8})
+    void uncertaintiesCoverTheTruth(long seed) throws ReductionFault {
+        CreepSpectrum spectrum = CreepFit.fit(List.of(curve(BURGERS, 0.01, 100, 200, 0.01, seed)), List.of(), LIQUID);
+        Marker viscosity = spectrum.markers(298.15).stream()
+                .filter(marker -> marker.property().equals("zero_shear_viscosity"))
+                .findFirst()
+                .orElseThrow();
+        assertThat(viscosity.value()).isCloseTo(1e7, within(3.5 * viscosity.u().getAsDouble()));
+        // 0.3 % of it; several times that where the noise calls for a mode beside the flow
+        assertThat(viscosity.u().getAsDouble()).isBetween(1e3, 5e5);
+        for (double t = 0.01; t <= 100; t *= 3) {
+            double truth = BURGERS.creepPerPa(t);
+            assertThat(spectrum.retardation().creepPerPa(t)).isCloseTo(truth, within(0.02 * truth));
+        }
+    }
+
+    @Test
+    void creepAndModuliTogetherReachFurtherThanEither() throws ReductionFault {
+        // modes over eight decades: moduli see the fast ones, creep the slow ones
+        RetardationModes material = RetardationModes.of(
+                1e-9, 1e-12, new double[] {1e-3, 1e-1, 10, 1000}, new double[] {1e-9, 3e-9, 1e-8, 3e-8});
+        CreepCurve creep = curve(material, 1, 1e5, 1e5, 0.003, 3);
+        List<ModulusReading> moduli = moduli(material, 0.1, 1e4, 0.003);
+        CreepSpectrum both = CreepFit.fit(List.of(creep), moduli, LIQUID);
+        requireModes(both.retardation(), material, 0.05);
+        // neither alone has both ends
+        CreepSpectrum alone = CreepFit.fit(List.of(creep), List.of(), LIQUID);
+        assertThat(alone.retardation().instantaneousPerPa()).isGreaterThan(2e-9);
+    }
+
+    @Test
+    void aRecordThatEndsTooSoonHasNoViscosityAndSaysWhy() throws ReductionFault {
+        RetardationModes slow = RetardationModes.of(1e-6, 0, new double[] {1, 300}, new double[] {1e-6, 5e-6});
+        CreepSpectrum spectrum = CreepFit.fit(List.of(curve(slow, 0.01, 200, 200, 1e-4, 1)), List.of(), SOLID);
+        assertThat(spectrum.notes()).extracting(note -> note.code()).containsExactly("CREEP_END_NOT_REACHED");
+        assertThat(spectrum.markers(298.15))
+                .extracting(Marker::property)
+                .containsExactly("instantaneous_compliance", "instantaneous_modulus");
+    }
+}
