@@ -77,7 +77,8 @@ class CreepNightTest {
             Locale decimals) {
         StringBuilder text = new StringBuilder(header);
         for (int i = 0; i < 6000; i++) {
-            double time = -10 + 0.05 * i;
+            // the step lies in the middle between two samples, which is where its instant is taken to be
+            double time = -10.025 + 0.05 * i;
             text.append(String.format(
                     decimals, pattern, time / unitS, deformation.applyAsDouble(time), load.applyAsDouble(time)));
         }

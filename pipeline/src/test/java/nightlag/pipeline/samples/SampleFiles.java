@@ -19,6 +19,7 @@ final class SampleFiles {
         Bracken.addTo(files);
         Alder.addTo(files);
         AlderRamp.addTo(files);
+        Sedge.addTo(files);
         return Collections.unmodifiableSortedMap(files);
     }
 }

@@ -24,7 +24,9 @@ import nightlag.pipeline.intake.IntakeScan;
 import nightlag.pipeline.intake.RawFile;
 import nightlag.stages.MeasuredRecord;
 import nightlag.stages.Reduce;
+import nightlag.stages.Reduction;
 import nightlag.stages.geometry.DeformationMode;
+import nightlag.stages.moduli.CreepCurve;
 import nightlag.stages.moduli.Flag;
 import nightlag.stages.moduli.Moduli;
 import nightlag.stages.moduli.ModuliCovariance;
@@ -40,6 +42,7 @@ class SampleRecordsTest {
 
     private static final Map<String, Integer> RECORDS = new TreeMap<>();
     private static final List<ModulusPoint> POINTS = new ArrayList<>();
+    private static final List<CreepCurve> CURVES = new ArrayList<>();
     private static final List<Problem> SET_ASIDE = new ArrayList<>();
 
     @BeforeAll
@@ -61,8 +64,9 @@ class SampleRecordsTest {
                 for (MeasuredRecord record : records) {
                     var grade = configuration.grades().get(record.tags().key().grade());
                     assertThat(Plans.mismatch(intake.instrument(), grade)).isEmpty();
-                    POINTS.addAll(Reduce.reduce(record, Plans.reduction(intake.instrument(), grade))
-                            .points());
+                    Reduction reduction = Reduce.reduce(record, Plans.reduction(intake.instrument(), grade));
+                    POINTS.addAll(reduction.points());
+                    reduction.creep().ifPresent(CURVES::add);
                 }
             }
         }
@@ -72,6 +76,7 @@ class SampleRecordsTest {
     void everyFileButTheBadOneIsReadInFull() {
         assertThat(RECORDS)
                 .containsExactly(
+                        entry("creep-bench", 1),
                         entry("damper-bench", 13),
                         entry("melt-bench", 68),
                         entry("partner-table", 100),
@@ -114,6 +119,22 @@ class SampleRecordsTest {
 
             assertThat(Math.abs(moduli.storagePa() - model.re())).isLessThan(6 * covariance.storageU() + rounding);
             assertThat(Math.abs(moduli.lossPa() - model.im())).isLessThan(6 * covariance.lossU() + rounding);
+        });
+    }
+
+    @Test
+    void theCreepIsThatOfItsModelWithinItsUncertainty() {
+        assertThat(CURVES).singleElement().satisfies(curve -> {
+            assertThat(curve.quality()).as("%s", curve.reasons()).isEqualTo(Quality.SOUND);
+            assertThat(curve.steps()).hasSize(2);
+            assertThat(curve.readings()).hasSizeGreaterThan(100).allSatisfy(reading -> {
+                double since = reading.sinceStepS();
+                double model = reading.step() == 1
+                        ? Sedge.compliance(since)
+                        : Sedge.compliance(600) + Sedge.compliance(since) - Sedge.compliance(600 + since);
+                assertThat(Math.abs(reading.compliancePerPa() - model))
+                        .isLessThan(6 * reading.complianceUPerPa() + 1e-3 * model);
+            });
         });
     }
 

@@ -177,6 +177,8 @@ class LotTablesTest {
                 List.of(),
                 List.of(),
                 List.of(),
+                List.of(),
+                List.of(),
                 List.of(curve)));
 
         assertThat(table("creep")).isEqualTo("""
