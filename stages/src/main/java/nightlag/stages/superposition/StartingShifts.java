@@ -1,6 +1,7 @@
 package nightlag.stages.superposition;
 
 import java.util.ArrayList;
+import java.util.Arrays;
 import java.util.List;
 import java.util.Optional;
 import nightlag.stages.superposition.OwnCurves.OwnCurve;
@@ -161,45 +162,80 @@ final class StartingShifts {
         return (squares - (verticalToo ? sum * sum / total : 0)) / (2 * count);
     }
 
-    /** The isotherms that can be reached from one over neighbours, itself included, rising. */
-    List<Integer> reachedFrom(int start) {
-        Optional<Double>[] shifts = shiftsFrom(start);
-        List<Integer> reached = new ArrayList<>();
-        for (int i = 0; i < shifts.length; i++) {
-            if (shifts[i].isPresent()) {
-                reached.add(i);
+    /**
+     * The isotherms in groups that hang together over neighbours, each rising; that of the lowest isotherm first.
+     */
+    List<List<Integer>> chains() {
+        List<List<Integer>> chains = new ArrayList<>();
+        boolean[] grouped = new boolean[matches.length];
+        for (int start = 0; start < matches.length; start++) {
+            if (grouped[start]) {
+                continue;
             }
+            Optional<Double>[] shifts = shiftsFrom(start);
+            List<Integer> chain = new ArrayList<>();
+            for (int i = 0; i < shifts.length; i++) {
+                if (shifts[i].isPresent()) {
+                    chain.add(i);
+                    grouped[i] = true;
+                }
+            }
+            chains.add(chain);
         }
-        return reached;
+        return chains;
     }
 
-    /** How far each isotherm moves in ln ω to lie on one of them; empty where it cannot be reached. */
+    /**
+     * How far each isotherm moves in ln ω to lie on one of them; empty where it cannot be reached. The tree of best overlaps
+     * grows by one isotherm a time (Prim, Bell System Technical Journal 36 (1957) 1389), in steps as many as isotherms reached
+     * times isotherms.
+     */
     @SuppressWarnings({"unchecked", "rawtypes"}) // Java has no arrays of a generic type
     Optional<Double>[] shiftsFrom(int start) {
         int n = matches.length;
         Optional<Double>[] shifts = new Optional[n];
-        java.util.Arrays.fill(shifts, Optional.empty());
-        shifts[start] = Optional.of(0.0);
-        while (true) {
-            double best = 0;
-            int next = -1;
-            double shift = 0;
-            for (int i = 0; i < n; i++) {
-                for (int j = 0; j < n; j++) {
-                    if (shifts[i].isPresent() && shifts[j].isEmpty() && matches[i][j].isPresent()) {
-                        Match match = matches[i][j].get();
-                        if (match.worth() > best) {
-                            best = match.worth();
-                            next = j;
-                            shift = shifts[i].get() + match.shift();
-                        }
-                    }
-                }
-            }
-            if (next < 0) {
-                return shifts;
-            }
+        Arrays.fill(shifts, Optional.empty());
+        double[] worth = new double[n];
+        int[] over = new int[n];
+        double shift = 0;
+        int next = start;
+        while (next >= 0) {
             shifts[next] = Optional.of(shift);
+            offer(next, shifts, worth, over);
+            next = best(shifts, worth, over);
+            if (next >= 0) {
+                shift = shifts[over[next]].orElseThrow()
+                        + matches[over[next]][next].orElseThrow().shift();
+            }
         }
+        return shifts;
+    }
+
+    /** Of equal worth the neighbour of the lowest index counts. */
+    private void offer(int reached, Optional<Double>[] shifts, double[] worth, int[] over) {
+        for (int j = 0; j < shifts.length; j++) {
+            if (shifts[j].isPresent() || matches[reached][j].isEmpty()) {
+                continue;
+            }
+            double offered = matches[reached][j].get().worth();
+            if (offered > worth[j] || (offered == worth[j] && reached < over[j])) {
+                worth[j] = offered;
+                over[j] = reached;
+            }
+        }
+    }
+
+    /** The isotherm not reached yet that has most in common with one reached; negative where none has anything. */
+    private static int best(Optional<Double>[] shifts, double[] worth, int[] over) {
+        int best = -1;
+        for (int j = 0; j < shifts.length; j++) {
+            if (shifts[j].isPresent() || !(worth[j] > 0)) {
+                continue;
+            }
+            if (best < 0 || worth[j] > worth[best] || (worth[j] == worth[best] && over[j] < over[best])) {
+                best = j;
+            }
+        }
+        return best;
     }
 }

@@ -68,9 +68,7 @@ final class Superposing {
     }
 
     private Superposed superposed() {
-        List<Integer> chain = main(IntStream.range(0, isotherms.size())
-                .mapToObj(starts.get(0)::reachedFrom)
-                .toList());
+        List<Integer> chain = main(starts.get(0).chains());
         double limit = UNLIMITED;
         while (true) {
             JointCurves common = best(chain, limit, own.smoothness());
