@@ -23,6 +23,7 @@ import nightlag.stages.superposition.SuperpositionPlan.ShiftLaw;
  * WLF misses the shifts, the fall is first divided by its χ²/ν.
  */
 public final class LawFit {
+    private static final String APPARENT = "apparent, by an Arrhenius line through the shifts, as no law is asked for";
     private static final int LEAST_FOR_WLF = 3;
     private static final double WORTH_A_CONSTANT = 3.841458820694124;
     /** No shift is known better than this, decades: far below what a temperature is known to. */
@@ -46,7 +47,7 @@ public final class LawFit {
      * @param covariance their covariance; row and column of the anchor are zero and not read
      * @param anchor index of the anchor
      * @param referenceTemperatureK reference temperature of the law, within the isotherms, K
-     * @param law which law
+     * @param law which law; for none only the apparent activation energy, by an Arrhenius line, is told
      */
     public static LawOutcome fit(
             double[] temperaturesK,
@@ -55,9 +56,6 @@ public final class LawFit {
             int anchor,
             double referenceTemperatureK,
             ShiftLaw law) {
-        if (law == ShiftLaw.NONE) {
-            return new LawOutcome(Optional.empty(), List.of());
-        }
         int isotherms = temperaturesK.length;
         if (isotherms < 2) {
             return without(ShiftLawReason.SHIFT_LAW_TOO_FEW_ISOTHERMS.with(isotherms));
@@ -83,11 +81,14 @@ public final class LawFit {
     }
 
     private static LawOutcome without(Reason why) {
-        return new LawOutcome(Optional.empty(), List.of(why));
+        return new LawOutcome(Optional.empty(), List.of(), List.of(why));
     }
 
     private LawOutcome fit(ShiftLaw law) {
         ArrheniusLaw arrhenius = shifts.arrhenius().at(referenceK);
+        if (law == ShiftLaw.NONE) {
+            return new LawOutcome(Optional.empty(), List.of(arrhenius.energyMarker(APPARENT)), List.of());
+        }
         if (law == ShiftLaw.ARRHENIUS) {
             return found(arrhenius);
         }
@@ -136,10 +137,10 @@ public final class LawFit {
     }
 
     private static LawOutcome found(FittedLaw law) {
-        return new LawOutcome(Optional.of(law), List.of());
+        return new LawOutcome(Optional.of(law), law.markers(), List.of());
     }
 
     private static LawOutcome instead(FittedLaw law, Reason why) {
-        return new LawOutcome(Optional.of(law), List.of(why));
+        return new LawOutcome(Optional.of(law), law.markers(), List.of(why));
     }
 }

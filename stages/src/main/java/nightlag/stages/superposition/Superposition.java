@@ -90,10 +90,13 @@ public final class Superposition {
     }
 
     private void tooFew(List<LogIsotherm> logs, int[] enough) {
-        IntStream.range(0, logs.size())
+        List<LogIsotherm> left = IntStream.range(0, logs.size())
                 .filter(i -> IntStream.of(enough).noneMatch(k -> k == i))
-                .forEach(i -> notes.add(SuperpositionReason.ISOTHERM_TOO_FEW_FREQUENCIES.with(
-                        celsius(logs.get(i).temperatureK()), logs.get(i).places(), EvenSplines.SMOOTH_COEFFICIENTS)));
+                .mapToObj(logs::get)
+                .toList();
+        if (!left.isEmpty()) {
+            notes.add(TooFewFrequencies.of(left));
+        }
     }
 
     /** One isotherm alone is the master curve: no shift, no law, no misfit. */
@@ -179,7 +182,7 @@ public final class Superposition {
                     true));
             points.addAll(moved(isotherms.get(i), lnA, lnB));
         }
-        List<Marker> markers = new ArrayList<>(law.law().map(FittedLaw::markers).orElse(List.of()));
+        List<Marker> markers = new ArrayList<>(law.markers());
         markers.add(Verdict.of(superposed, plan).marker(reference));
         return new MasterCurve(shifts, sorted(points), markers, law.law(), notes);
     }

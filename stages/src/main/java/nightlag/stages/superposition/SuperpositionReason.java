@@ -9,10 +9,9 @@ public enum SuperpositionReason implements ReasonCode {
     /** {0} °C reference, {1} and {2} °C lowest and highest isotherm superposed. */
     SUPERPOSITION_REFERENCE_OUTSIDE(
             "no master curve: the reference temperature of {0} °C is outside the isotherms superposed, {1} to {2} °C"),
-    /** {0} °C of the isotherm, {1} frequencies it has, {2} frequencies it needs. */
+    /** {0} the isotherms with their verb, {1} frequencies each has, {2} frequencies it needs. */
     ISOTHERM_TOO_FEW_FREQUENCIES(
-            "the isotherm at {0} °C is left out of the master curve: {1} frequencies with moduli above zero, at least {2} are"
-                    + " needed"),
+            "{0} left out of the master curve: {1} with moduli above zero, at least {2} are needed"),
     /** {0} °C of the isotherm. */
     ISOTHERM_WITHOUT_OVERLAP(
             "the isotherm at {0} °C is left out of the master curve: its curves do not overlap with the others''"),

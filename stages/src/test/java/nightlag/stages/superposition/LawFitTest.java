@@ -64,6 +64,19 @@ class LawFitTest {
         assertThat(outcome.notes()).isEmpty();
     }
 
+    /** What a line through the shifts says is told, law or none. */
+    @Test
+    void noneStillTellsTheApparentActivationEnergy() {
+        LawOutcome none = fit(LawFitTest::arrhenius, 0.005, ShiftLaw.NONE, TEMPERATURES_K);
+        LawOutcome line = fit(LawFitTest::arrhenius, 0.005, ShiftLaw.ARRHENIUS, TEMPERATURES_K);
+        assertThat(none.markers()).singleElement().satisfies(energy -> {
+            assertThat(energy.property()).isEqualTo("activation_energy");
+            assertThat(energy.value()).isEqualTo(line.markers().get(0).value());
+            assertThat(energy.u()).isEqualTo(line.markers().get(0).u());
+            assertThat(energy.method()).startsWith("apparent, by an Arrhenius line");
+        });
+    }
+
     @ParameterizedTest
     @EnumSource(value = ShiftLaw.class, mode = EnumSource.Mode.EXCLUDE, names = "NONE")
     void oneIsothermHasNoLaw(ShiftLaw asked) {

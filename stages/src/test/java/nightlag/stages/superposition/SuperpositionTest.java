@@ -20,6 +20,7 @@ import nightlag.stages.superposition.SuperpositionPlan.ShiftLaw;
 import nightlag.stages.superposition.SuperpositionPlan.VerticalShift;
 import org.junit.jupiter.api.Test;
 import org.junit.jupiter.params.ParameterizedTest;
+import org.junit.jupiter.params.provider.CsvSource;
 import org.junit.jupiter.params.provider.MethodSource;
 import org.junit.jupiter.params.provider.ValueSource;
 
@@ -128,7 +129,47 @@ class SuperpositionTest {
             assertThat(log10A(straight.shifts().get(i))).isCloseTo(atIsotherm - between, within(1e-4));
         }
         assertThat(codes(straight)).containsExactly("REFERENCE_INTERPOLATED");
-        assertThat(straight.markers()).extracting(Marker::property).containsExactly("superposition_misfit");
+        assertThat(straight.markers())
+                .extracting(Marker::property)
+                .containsExactly("activation_energy", "superposition_misfit");
+        assertThat(straight.shifts())
+                .allSatisfy(shift -> assertThat(shift.lawLog10A()).isEmpty());
+    }
+
+    /** One line for all, so that a ramp taken for isotherms does not fill the log. */
+    @ParameterizedTest(name = "{0} isotherms of {1} frequencies")
+    @CsvSource(delimiter = '|', textBlock = """
+                1  | 1 | the isotherm at 200 °C is left out of the master curve: 1 frequency with
+                2  | 0 | the isotherms at 200 and 201 °C are left out of the master curve: 1 to 2 frequencies with
+                3  | 2 | the isotherms at 200, 201 and 202 °C are left out of the master curve: 2 frequencies with
+                40 | 1 | 40 isotherms between 200 and 239 °C are left out of the master curve: 1 frequency with
+                """)
+    void isothermsOfTooFewFrequenciesAreToldTogether(int left, int frequencies, String told) throws ReductionFault {
+        List<IsothermReadings> isotherms = new ArrayList<>(ModelMaterial.LAUN.nine(0, 0, 0));
+        List<ModulusReading> some = isotherms.get(0).readings();
+        for (int i = 0; i < left; i++) {
+            isotherms.add(new IsothermReadings(473.15 + i, some.subList(0, frequencies > 0 ? frequencies : i + 1)));
+        }
+
+        MasterCurve curve = Superposition.of(isotherms, PLAIN);
+
+        assertThat(curve.notes()).singleElement().satisfies(note -> {
+            assertThat(note.code()).isEqualTo("ISOTHERM_TOO_FEW_FREQUENCIES");
+            assertThat(note.sentence()).startsWith(told).contains("at least");
+        });
+    }
+
+    /** Isotherms by the hundred are superposed like a few. */
+    @Test
+    void manyIsothermsAreSuperposedAsAFewAre() throws ReductionFault {
+        List<IsothermReadings> isotherms =
+                ModelMaterial.LAUN.isotherms(ModelMaterial.temperatures(60, 1), 3, 0, 0, 1, t -> 0, new Random(0));
+
+        MasterCurve curve = Superposition.of(isotherms, PLAIN);
+
+        assertThat(curve.shifts())
+                .allSatisfy(shift ->
+                        assertThat(log10A(shift)).isCloseTo(ModelMaterial.log10A(shift.temperatureK()), within(2e-3)));
     }
 
     /** Half a kelvin off is more than a hundredth of a decade here, ten times what a shift is known to. */
