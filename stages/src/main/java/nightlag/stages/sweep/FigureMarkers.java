@@ -20,15 +20,20 @@ import nightlag.stages.sweep.FigureMarkerPlan.Scale;
 
 /**
  * Where a figure of the grade's own reaches a value, by interpolation between the two measured places on either side, and
- * never beyond them. Every such step of every curve gives a marker of its own.
+ * never beyond them. Every such step of every curve gives a marker of its own, but for neighbouring ones between which the
+ * figure stays as near the value as its noise may take it: these are one.
  */
 public final class FigureMarkers {
     private static final double KELVIN_AT_ZERO_CELSIUS = 273.15;
+
+    /** Farther from the value than so many u a figure is not by noise. */
+    private static final double NOISE = 3;
 
     private final FigureMarkerPlan plan;
     private final FigureCurve curve;
     private final List<Marker> markers = new ArrayList<>();
     private final List<Reason> notes = new ArrayList<>();
+    private final List<Marker> together = new ArrayList<>();
     private boolean reached;
 
     private FigureMarkers(FigureMarkerPlan plan, FigureCurve curve) {
@@ -97,7 +102,33 @@ public final class FigureMarkers {
                 reached = true;
                 step(places.get(i), places.get(i + 1));
             }
+            if (leaves(places.get(i + 1))) {
+                close();
+            }
         }
+        close();
+    }
+
+    /** Crossings so far are apart from those that follow. */
+    private void close() {
+        if (together.stream().allMatch(marker -> marker.u().isPresent()) && !together.isEmpty()) {
+            markers.add(NoisyCrossings.merged(together, plan));
+        } else {
+            markers.addAll(together);
+        }
+        together.clear();
+    }
+
+    /** Whether the figure is away from the value by more than noise; without a u, whether it is away at all. */
+    private boolean leaves(Place place) {
+        double perPoint = 1.0 / place.points().size();
+        double variance = 0;
+        for (int i = 0; i < place.points().size(); i++) {
+            variance += sum(place.values().get(i), perPoint, Optional.empty(), 0)
+                    .variance(place.points().get(i))
+                    .orElse(0);
+        }
+        return Math.abs(place.mean() - plan.reaches()) > NOISE * Math.sqrt(variance);
     }
 
     private Reason notReached() {
@@ -152,7 +183,7 @@ public final class FigureMarkers {
 
     private void add(double place, double value, OptionalDouble u, Place from, Place to) {
         boolean overFrequency = plan.along() == Along.FREQUENCY;
-        markers.add(new Marker(
+        together.add(new Marker(
                 curve.name().specimen(),
                 curve.name().sweep(),
                 plan.name(),

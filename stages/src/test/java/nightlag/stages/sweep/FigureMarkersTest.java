@@ -5,11 +5,13 @@ import static org.assertj.core.api.Assertions.within;
 import static org.assertj.core.data.Percentage.withPercentage;
 
 import java.util.ArrayList;
+import java.util.Comparator;
 import java.util.List;
 import java.util.Optional;
 import java.util.OptionalDouble;
 import java.util.Random;
 import java.util.stream.DoubleStream;
+import java.util.stream.IntStream;
 import java.util.stream.Stream;
 import nightlag.stages.TestPoints;
 import nightlag.stages.moduli.Figure;
@@ -21,6 +23,8 @@ import nightlag.stages.numeric.Complex;
 import nightlag.stages.sweep.FigureMarkerPlan.Along;
 import nightlag.stages.sweep.FigureMarkerPlan.Scale;
 import org.junit.jupiter.api.Test;
+import org.junit.jupiter.params.ParameterizedTest;
+import org.junit.jupiter.params.provider.ValueSource;
 
 /** Where a figure reaches a value, on materials for which that place is known in closed form. */
 class FigureMarkersTest {
@@ -289,5 +293,68 @@ class FigureMarkersTest {
                 .orElseThrow());
 
         assertThat(scatter / u).isCloseTo(1, within(0.05));
+    }
+
+    /** δ falls by 4° over 200 points, each known to a third of a degree: it passes 45° at 10 Hz, its noise many times about it. */
+    @ParameterizedTest(name = "seed {0}")
+    @ValueSource(longs = {1, 2, 3, 4, 5, 6, 7, 8})
+    void crossingsThatNoiseAloneCanMakeAreOne(long seed) {
+        List<ModulusPoint> points = noisy(200, 4, seed);
+        Findings found = FigureMarkers.find(
+                points, plan(Figure.column(PointQuantity.TAN_DELTA), 1, Along.FREQUENCY, Scale.LINEAR));
+
+        long crossings = IntStream.range(1, points.size())
+                .filter(i -> aboveOne(points.get(i)) != aboveOne(points.get(i - 1)))
+                .count();
+        assertThat(crossings).isGreaterThan(10);
+        // beside the middle a point in some hundreds is more than 3 u away by chance, and parts them
+        assertThat((long) found.markers().size()).isLessThanOrEqualTo(crossings / 4);
+        Marker widest = found.markers().stream()
+                .filter(marker -> marker.method().contains("crossings that noise alone can make"))
+                .max(Comparator.comparingDouble(marker -> marker.u().orElseThrow()))
+                .orElseThrow();
+        assertThat(widest.value()).isCloseTo(10, within(2 * widest.u().orElseThrow()));
+    }
+
+    private static boolean aboveOne(ModulusPoint point) {
+        return PointQuantity.TAN_DELTA.of(point).orElseThrow() > 1;
+    }
+
+    /** Far apart for their u, both ways through the value are told. */
+    @Test
+    void crossingsThatNoiseCannotMakeStayApart() {
+        List<ModulusPoint> points = IntStream.range(0, 8)
+                .mapToObj(i -> TestPoints.point()
+                        .named("1", "s", "p" + i, "bench/" + i + ".csv")
+                        .hz(1 + i)
+                        .modulus(Complex.polar(1e3, Math.toRadians(i % 2 == 0 ? 43 : 47)))
+                        .relativeU(0.008)
+                        .build())
+                .toList();
+
+        assertThat(FigureMarkers.find(
+                                points, plan(Figure.column(PointQuantity.TAN_DELTA), 1, Along.FREQUENCY, Scale.LINEAR))
+                        .markers())
+                .hasSize(7);
+    }
+
+    /** From 1 to 100 Hz. */
+    private static List<ModulusPoint> noisy(int count, double fallDegrees, long seed) {
+        Random random = new Random(seed);
+        double relativeU = 0.008;
+        return IntStream.range(0, count)
+                .mapToObj(i -> {
+                    double part = i / (count - 1.0);
+                    Complex exact = Complex.polar(1e3, Math.toRadians(45 + fallDegrees * (0.5 - part)));
+                    return TestPoints.point()
+                            .named("1", "s", "p" + i, "bench/" + i + ".csv")
+                            .hz(Math.pow(100, part))
+                            .modulus(new Complex(
+                                    exact.re() * (1 + relativeU * random.nextGaussian()),
+                                    exact.im() * (1 + relativeU * random.nextGaussian())))
+                            .relativeU(relativeU)
+                            .build();
+                })
+                .toList();
     }
 }
