@@ -51,8 +51,8 @@ class NightReportBrowserTest {
         for (int i = 0; i < charts.size(); i++) {
             JsonNode figure = page.get("figures").get(i);
             assertThat(figure.get("title").asText()).isEqualTo(charts.get(i).title());
-            assertThat(figure.get("shapes").asInt()).isPositive();
-            assertThat(figure.get("values").asInt()).isPositive();
+            assertThat(figure.get("shapes").asInt()).as(figure.toString()).isPositive();
+            assertThat(figure.get("values").asInt()).as(figure.toString()).isPositive();
         }
         assertThat(page.get("readOff").asText())
                 .contains(" Pa at ")

@@ -185,7 +185,13 @@ public final class RandomLot {
             for (SpectrumRow.Form form : SpectrumRow.Form.values()) {
                 for (int i = 0; i < 8; i++) {
                     made.add(new SpectrumRow(
-                            463.15, kind, form, Math.pow(10, i - 4), Math.abs(points.number()), maybe(0), maybe(1e9)));
+                            463.15,
+                            kind,
+                            form,
+                            Math.pow(10, i - 4),
+                            Math.pow(10, random.nextDouble(-9, 9)),
+                            maybe(0),
+                            maybe(1e9)));
                 }
             }
         }
