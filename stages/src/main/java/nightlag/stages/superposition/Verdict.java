@@ -17,6 +17,8 @@ import nightlag.stages.numeric.VarianceRatio;
 record Verdict(double misfitDecades, double toleranceDecades, OptionalDouble ratio, double chance) {
     private static final double SMALL_CHANCE = 0.01;
     private static final double TINY_CHANCE = 1e-6;
+    /** Points that scatter by so many times the tolerance, as specimens that differ do, hide what a test could see. */
+    private static final double HIDDEN = 5;
 
     static Verdict of(Superposed superposed, SuperpositionPlan plan) {
         double misfit = superposed.common().misfitDecades();
@@ -46,6 +48,15 @@ record Verdict(double misfitDecades, double toleranceDecades, OptionalDouble rat
                 words());
     }
 
+    private String verdict() {
+        if (!superposes()) {
+            return "does not superpose";
+        }
+        return misfitDecades > HIDDEN * toleranceDecades
+                ? "superposes as far as the scatter of the points can tell"
+                : "superposes";
+    }
+
     private String words() {
         if (ratio.isEmpty()) {
             return String.format(
@@ -58,7 +69,7 @@ record Verdict(double misfitDecades, double toleranceDecades, OptionalDouble rat
                 Locale.ROOT,
                 "%s: rms distance from common curves in decades; against curves of its own for each isotherm F = %.3g, %s;"
                         + " tolerance %.3g decades",
-                superposes() ? "superposes" : "does not superpose",
+                verdict(),
                 ratio.getAsDouble(),
                 chance < TINY_CHANCE ? "p below 1e-6" : String.format(Locale.ROOT, "p = %.2g", chance),
                 toleranceDecades);

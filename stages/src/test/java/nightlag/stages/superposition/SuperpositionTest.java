@@ -252,6 +252,16 @@ class SuperpositionTest {
     }
 
     @Test
+    void pointsThatScatterWidelyLeaveTheVerdictOpenAndItSaysSo() throws ReductionFault {
+        assertThat(misfit(Superposition.of(ModelMaterial.LAUN.nine(0.1, 0, 1), PLAIN))
+                        .method())
+                .startsWith("superposes as far as the scatter of the points can tell: ");
+        assertThat(misfit(Superposition.of(ModelMaterial.LAUN.nine(0.01, 0.01, 1), PLAIN))
+                        .method())
+                .startsWith("superposes: ");
+    }
+
+    @Test
     void oneIsothermIsItsOwnMasterCurve() throws ReductionFault {
         MasterCurve curve = Superposition.of(
                 ModelMaterial.LAUN.isotherms(new double[] {REFERENCE_K}, 10, 0, 0.01, 1, t -> 0, new Random(0)), PLAIN);
