@@ -76,19 +76,7 @@ public final class CreepFit {
                 .mapToDouble(i -> shortest * Math.pow(longest / shortest, (double) i / steps))
                 .toArray();
         FittedCompliance fine = strengthsAt(grid);
-        List<Double> times = new ArrayList<>();
-        for (int i = 0; i < grid.length; i++) {
-            double weight = 0;
-            double logTime = 0;
-            while (i < grid.length && fine.strengths()[i] > 0) {
-                weight += fine.strengths()[i];
-                logTime += fine.strengths()[i] * Math.log(grid[i]);
-                i++;
-            }
-            if (weight > 0) {
-                times.add(Math.exp(logTime / weight));
-            }
-        }
+        List<Double> times = MergedGrid.times(grid, fine.strengths());
         return fitted(times.stream().mapToDouble(Double::doubleValue).toArray());
     }
 

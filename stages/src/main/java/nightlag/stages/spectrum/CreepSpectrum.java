@@ -60,25 +60,7 @@ public final class CreepSpectrum {
 
     /** Both sets as rows. */
     public List<SpectrumRow> rows(double temperatureK) {
-        RelaxationModes relaxation = retardation.relaxation();
-        List<SpectrumRow> rows = new ArrayList<>();
-        add(rows, temperatureK, SpectrumRow.Kind.RELAXATION, relaxation.timesS(), relaxation.strengthsPa());
-        add(rows, temperatureK, SpectrumRow.Kind.RETARDATION, retardation.timesS(), retardation.strengthsPerPa());
-        return rows;
-    }
-
-    private static void add(
-            List<SpectrumRow> rows, double temperatureK, SpectrumRow.Kind kind, double[] times, double[] strengths) {
-        for (int i = 0; i < times.length; i++) {
-            rows.add(new SpectrumRow(
-                    temperatureK,
-                    kind,
-                    SpectrumRow.Form.DISCRETE,
-                    times[i],
-                    strengths[i],
-                    OptionalDouble.empty(),
-                    OptionalDouble.empty()));
-        }
+        return SpectrumRow.discrete(temperatureK, retardation.relaxation(), retardation);
     }
 
     /** The figures that complete the sets: J0 and G(0); of a liquid η0, Je0 and the mean time; of a solid Ge. */

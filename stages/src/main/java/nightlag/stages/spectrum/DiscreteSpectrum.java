@@ -79,24 +79,7 @@ public final class DiscreteSpectrum {
 
     /** Both sets as rows, relaxation first, times rising. */
     public List<SpectrumRow> rows(double temperatureK) {
-        List<SpectrumRow> rows = new ArrayList<>();
-        add(rows, temperatureK, SpectrumRow.Kind.RELAXATION, relaxation.timesS(), relaxation.strengthsPa());
-        add(rows, temperatureK, SpectrumRow.Kind.RETARDATION, retardation.timesS(), retardation.strengthsPerPa());
-        return rows;
-    }
-
-    private static void add(
-            List<SpectrumRow> rows, double temperatureK, SpectrumRow.Kind kind, double[] times, double[] strengths) {
-        for (int i = 0; i < times.length; i++) {
-            rows.add(new SpectrumRow(
-                    temperatureK,
-                    kind,
-                    SpectrumRow.Form.DISCRETE,
-                    times[i],
-                    strengths[i],
-                    OptionalDouble.empty(),
-                    OptionalDouble.empty()));
-        }
+        return SpectrumRow.discrete(temperatureK, relaxation, retardation);
     }
 
     /**

@@ -1,6 +1,5 @@
 package nightlag.stages.spectrum;
 
-import java.util.ArrayList;
 import java.util.Comparator;
 import java.util.List;
 import java.util.OptionalInt;
@@ -46,19 +45,7 @@ final class ModeSearch {
     private FittedModes mergedGrid() {
         double[] grid = refinement.grid(GRID_PER_DECADE);
         FittedModes fine = refinement.strengthsAt(grid);
-        List<Double> times = new ArrayList<>();
-        for (int i = 0; i < grid.length; i++) {
-            double weight = 0;
-            double logTime = 0;
-            while (i < grid.length && fine.strengths()[i] > 0) {
-                weight += fine.strengths()[i];
-                logTime += fine.strengths()[i] * Math.log(grid[i]);
-                i++;
-            }
-            if (weight > 0) {
-                times.add(Math.exp(logTime / weight));
-            }
-        }
+        List<Double> times = MergedGrid.times(grid, fine.strengths());
         if (times.isEmpty()) {
             times.add(Math.sqrt(grid[0] * grid[grid.length - 1]));
         }

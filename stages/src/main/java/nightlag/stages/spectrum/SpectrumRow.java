@@ -1,7 +1,10 @@
 package nightlag.stages.spectrum;
 
+import java.util.List;
 import java.util.Locale;
 import java.util.OptionalDouble;
+import java.util.stream.IntStream;
+import java.util.stream.Stream;
 
 /**
  * One mode of a discrete spectrum, or one node of a continuous one.
@@ -53,5 +56,29 @@ public record SpectrumRow(
         public String word() {
             return name().toLowerCase(Locale.ROOT);
         }
+    }
+
+    /**
+     * Two discrete sets that are each other's inverse, relaxation first, times rising.
+     *
+     * @param temperatureK temperature they hold at, K
+     */
+    static List<SpectrumRow> discrete(double temperatureK, RelaxationModes relaxation, RetardationModes retardation) {
+        return Stream.concat(
+                        discrete(temperatureK, Kind.RELAXATION, relaxation.timesS(), relaxation.strengthsPa()),
+                        discrete(temperatureK, Kind.RETARDATION, retardation.timesS(), retardation.strengthsPerPa()))
+                .toList();
+    }
+
+    private static Stream<SpectrumRow> discrete(double temperatureK, Kind kind, double[] ofModes, double[] strengths) {
+        return IntStream.range(0, ofModes.length)
+                .mapToObj(i -> new SpectrumRow(
+                        temperatureK,
+                        kind,
+                        Form.DISCRETE,
+                        ofModes[i],
+                        strengths[i],
+                        OptionalDouble.empty(),
+                        OptionalDouble.empty()));
     }
 }
