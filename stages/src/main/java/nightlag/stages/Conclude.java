@@ -66,25 +66,26 @@ public final class Conclude {
         notes.addAll(figures.findings().notes());
         LotResponses responses = LotResponses.of(plan.responses(), curve, spectrum);
         notes.addAll(responses.notes());
-        return new LotResult(
-                lot.points(),
-                Stream.of(
+        return LotResult.builder()
+                .points(lot.points())
+                .markers(Stream.of(
                                 markers.markers(),
                                 spectrum.markers(),
                                 figures.findings().markers())
                         .flatMap(List::stream)
                         .sorted(MARKER_ORDER)
-                        .toList(),
-                master.map(MasterCurve::shifts).orElse(List.of()),
-                master.map(MasterCurve::points).orElse(List.of()),
-                spectrum.rows().stream().sorted(ROW_ORDER).toList(),
-                notes,
-                markers.notes(),
-                figures.rows(),
-                sweeps.sweeps(),
-                responses.rows(),
-                responses.prony(),
-                creep);
+                        .toList())
+                .shiftFactors(master.map(MasterCurve::shifts).orElse(List.of()))
+                .masterCurve(master.map(MasterCurve::points).orElse(List.of()))
+                .spectrum(spectrum.rows().stream().sorted(ROW_ORDER).toList())
+                .notes(notes)
+                .absent(markers.notes())
+                .derived(figures.rows())
+                .sweeps(sweeps.sweeps())
+                .responses(responses.rows())
+                .prony(responses.prony())
+                .creep(creep)
+                .build();
     }
 
     /** The curve that a master curve or a spectrum is asked of; what there is to say of it goes into the notes. */

@@ -43,8 +43,7 @@ public record LotResult(
         List<RelativeMode> prony,
         List<CreepCurve> creep) {
     /** Nothing is known of the lot, not even a point. */
-    public static final LotResult EMPTY =
-            new LotResult(List.of(), List.of(), List.of(), List.of(), List.of(), List.of(), List.of());
+    public static final LotResult EMPTY = builder().build();
 
     /** Copies the lists. */
     public LotResult {
@@ -62,27 +61,102 @@ public record LotResult(
         creep = List.copyOf(creep);
     }
 
-    /** A result without sweeps, figures of the grade's own, predictions and creep curves. */
-    public LotResult(
-            List<ModulusPoint> points,
-            List<Marker> markers,
-            List<ShiftFactor> shiftFactors,
-            List<MasterPoint> masterCurve,
-            List<SpectrumRow> spectrum,
-            List<Reason> notes,
-            List<Reason> absent) {
-        this(
-                points,
-                markers,
-                shiftFactors,
-                masterCurve,
-                spectrum,
-                notes,
-                absent,
-                List.of(),
-                List.of(),
-                List.of(),
-                List.of(),
-                List.of());
+    /** A result that has what is set on it, and empty lists for all else. */
+    public static Builder builder() {
+        return new Builder();
+    }
+
+    /** Sets one list after the other; the meaning of each is that of the component of its name. */
+    public static final class Builder {
+        private List<ModulusPoint> points = List.of();
+        private List<Marker> markers = List.of();
+        private List<ShiftFactor> shiftFactors = List.of();
+        private List<MasterPoint> masterCurve = List.of();
+        private List<SpectrumRow> spectrum = List.of();
+        private List<Reason> notes = List.of();
+        private List<Reason> absent = List.of();
+        private List<FigureRow> derived = List.of();
+        private List<Sweep> sweeps = List.of();
+        private List<ResponseRow> responses = List.of();
+        private List<RelativeMode> prony = List.of();
+        private List<CreepCurve> creep = List.of();
+
+        private Builder() {}
+
+        public Builder points(List<ModulusPoint> given) {
+            this.points = given;
+            return this;
+        }
+
+        public Builder markers(List<Marker> given) {
+            this.markers = given;
+            return this;
+        }
+
+        public Builder shiftFactors(List<ShiftFactor> given) {
+            this.shiftFactors = given;
+            return this;
+        }
+
+        public Builder masterCurve(List<MasterPoint> given) {
+            this.masterCurve = given;
+            return this;
+        }
+
+        public Builder spectrum(List<SpectrumRow> given) {
+            this.spectrum = given;
+            return this;
+        }
+
+        public Builder notes(List<Reason> given) {
+            this.notes = given;
+            return this;
+        }
+
+        public Builder absent(List<Reason> given) {
+            this.absent = given;
+            return this;
+        }
+
+        public Builder derived(List<FigureRow> given) {
+            this.derived = given;
+            return this;
+        }
+
+        public Builder sweeps(List<Sweep> given) {
+            this.sweeps = given;
+            return this;
+        }
+
+        public Builder responses(List<ResponseRow> given) {
+            this.responses = given;
+            return this;
+        }
+
+        public Builder prony(List<RelativeMode> given) {
+            this.prony = given;
+            return this;
+        }
+
+        public Builder creep(List<CreepCurve> given) {
+            this.creep = given;
+            return this;
+        }
+
+        public LotResult build() {
+            return new LotResult(
+                    points,
+                    markers,
+                    shiftFactors,
+                    masterCurve,
+                    spectrum,
+                    notes,
+                    absent,
+                    derived,
+                    sweeps,
+                    responses,
+                    prony,
+                    creep);
+        }
     }
 }

@@ -96,7 +96,7 @@ class NightReportTest {
                         OptionalDouble.of(i == 0 ? 0 : 1),
                         OptionalDouble.of(3 + i)))
                 .toList();
-        LotResult result = new LotResult(List.of(), List.of(), List.of(), List.of(), rows, List.of(), List.of());
+        LotResult result = LotResult.builder().spectrum(rows).build();
 
         JsonNode charts = JsonMapper.builder().build().readTree(ChartJson.of(LotCharts.of(result)));
 
@@ -131,8 +131,7 @@ class NightReportTest {
                 Double.isNaN(u) ? OptionalDouble.empty() : OptionalDouble.of(u),
                 unit,
                 "in words");
-        LotResult result =
-                new LotResult(List.of(), List.of(marker), List.of(), List.of(), List.of(), List.of(), List.of());
+        LotResult result = LotResult.builder().markers(List.of(marker)).build();
         return LotPages.of("lot-1", "Heron 3", "L-17", result).figures().get(0).value();
     }
 

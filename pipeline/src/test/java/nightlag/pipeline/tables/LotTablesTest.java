@@ -78,7 +78,7 @@ class LotTablesTest {
                 Optional.empty(),
                 OptionalDouble.empty());
 
-        write(new LotResult(List.of(point), List.of(), List.of(), List.of(), List.of(), List.of(), List.of()));
+        write(LotResult.builder().points(List.of(point)).build());
 
         // |G*| = 5000 Pa, δ = atan(4/3), u(tan δ)² = (16/9 · 9 + 16)/3000²; a 1 rad/s oscillation has |η*| = |G*|
         assertThat(table("points")).isEqualTo("""
@@ -125,19 +125,7 @@ class LotTablesTest {
         FigureRow second = derived("10", "damage", -0.5, OptionalDouble.empty());
         FigureRow third = derived("10", "rutting_factor", 1000, OptionalDouble.of(10));
 
-        write(new LotResult(
-                List.of(),
-                List.of(),
-                List.of(),
-                List.of(),
-                List.of(),
-                List.of(),
-                List.of(),
-                List.of(third, first, second),
-                List.of(),
-                List.of(),
-                List.of(),
-                List.of()));
+        write(LotResult.builder().derived(List.of(third, first, second)).build());
 
         assertThat(table("derived")).isEqualTo("""
                         grade,lot,specimen,sweep,point,quantity,temperature_C,frequency_Hz,value,u,unit,source_file
@@ -167,19 +155,7 @@ class LotTablesTest {
                 200,
                 List.of());
 
-        write(new LotResult(
-                List.of(),
-                List.of(),
-                List.of(),
-                List.of(),
-                List.of(),
-                List.of(),
-                List.of(),
-                List.of(),
-                List.of(),
-                List.of(),
-                List.of(),
-                List.of(curve)));
+        write(LotResult.builder().creep(List.of(curve)).build());
 
         assertThat(table("creep")).isEqualTo("""
                         grade,lot,specimen,sweep,temperature_C,time_s,stress_Pa,strain,compliance_1_Pa,compliance_u_1_Pa,part,\
@@ -225,8 +201,7 @@ class LotTablesTest {
                 "Pa·s",
                 "sum of g τ, 8 modes");
 
-        write(new LotResult(
-                List.of(), List.of(peak, viscosity), List.of(), List.of(), List.of(), List.of(), List.of()));
+        write(LotResult.builder().markers(List.of(peak, viscosity)).build());
 
         assertThat(table("markers").lines().skip(1))
                 .containsExactly(
@@ -240,8 +215,7 @@ class LotTablesTest {
         SpectrumRow fast = mode(SpectrumRow.Kind.RELAXATION, 0.01, 1e5);
         SpectrumRow retarded = mode(SpectrumRow.Kind.RETARDATION, 3e-7, 1.25e-12);
 
-        write(new LotResult(
-                List.of(), List.of(), List.of(), List.of(), List.of(retarded, slow, fast), List.of(), List.of()));
+        write(LotResult.builder().spectrum(List.of(retarded, slow, fast)).build());
 
         assertThat(table("spectrum").lines().skip(1))
                 .containsExactly(
@@ -252,14 +226,9 @@ class LotTablesTest {
 
     @Test
     void aPointWithoutModulusHasEmptyCells() throws IOException {
-        write(new LotResult(
-                List.of(point("5", "b/5.csv", Optional.empty())),
-                List.of(),
-                List.of(),
-                List.of(),
-                List.of(),
-                List.of(),
-                List.of()));
+        write(LotResult.builder()
+                .points(List.of(point("5", "b/5.csv", Optional.empty())))
+                .build());
 
         assertThat(table("points").lines().skip(1))
                 .containsExactly("Heron 3,L-17,1,1,5,extension,,,,,,,,,,,,,,,,,unusable,,,0,,,b/5.csv,");
@@ -268,14 +237,9 @@ class LotTablesTest {
     @Test
     void whatIsNotFiniteIsAnEmptyCell() throws IOException {
         Moduli withoutStorage = new Moduli(0, 1e300, Optional.of(new ModuliCovariance(1, 1, 0)));
-        write(new LotResult(
-                List.of(point("5", "b/5.csv", Optional.of(withoutStorage))),
-                List.of(),
-                List.of(),
-                List.of(),
-                List.of(),
-                List.of(),
-                List.of()));
+        write(LotResult.builder()
+                .points(List.of(point("5", "b/5.csv", Optional.of(withoutStorage))))
+                .build());
 
         assertThat(table("points").lines().skip(1))
                 .containsExactly("Heron 3,L-17,1,1,5,extension,,,,,,,0,1,1e300,1,1e300,90,,,,,unusable,,,0,,,b/5.csv,");
@@ -289,7 +253,7 @@ class LotTablesTest {
                 .map(parts -> point(parts[0], parts[1], Optional.empty()))
                 .toList();
 
-        write(new LotResult(reversed(points), List.of(), List.of(), List.of(), List.of(), List.of(), List.of()));
+        write(LotResult.builder().points(reversed(points)).build());
 
         assertThat(table("points").lines().skip(1).map(line -> line.split(",", -1)[4] + " " + line.split(",", -1)[28]))
                 .containsExactly("9 b/9.csv", "9 b/10.csv", "9.5 b/1.csv", "10 b/2.csv", "a2 b/1.csv", "a10 b/1.csv");
@@ -302,14 +266,9 @@ class LotTablesTest {
 
         LotTables.write(
                 results,
-                new LotResult(
-                        List.of(point(key, Optional.empty())),
-                        List.of(),
-                        List.of(),
-                        List.of(),
-                        List.of(),
-                        List.of(),
-                        List.of()),
+                LotResult.builder()
+                        .points(List.of(point(key, Optional.empty())))
+                        .build(),
                 hostile);
 
         Path folder = LotTables.folder(results, "=1+1", "../../etc");
@@ -323,19 +282,16 @@ class LotTablesTest {
     @ValueSource(longs = {1, 2, 3, 4, 5})
     void theSameLotIsTheSameBytesInAnyOrderAndAnyLanguage(long seed) throws IOException {
         LotResult result = randomResult(seed);
-        LotResult shuffled = new LotResult(
-                shuffled(result.points(), seed),
-                shuffled(result.markers(), seed),
-                shuffled(result.shiftFactors(), seed),
-                shuffled(result.masterCurve(), seed),
-                shuffled(result.spectrum(), seed),
-                List.of(),
-                List.of(),
-                shuffled(result.derived(), seed),
-                List.of(),
-                result.responses(),
-                shuffled(result.prony(), seed),
-                List.of());
+        LotResult shuffled = LotResult.builder()
+                .points(shuffled(result.points(), seed))
+                .markers(shuffled(result.markers(), seed))
+                .shiftFactors(shuffled(result.shiftFactors(), seed))
+                .masterCurve(shuffled(result.masterCurve(), seed))
+                .spectrum(shuffled(result.spectrum(), seed))
+                .derived(shuffled(result.derived(), seed))
+                .responses(result.responses())
+                .prony(shuffled(result.prony(), seed))
+                .build();
         Locale was = Locale.getDefault();
 
         write(result);

@@ -40,19 +40,17 @@ public final class RandomLot {
 
     public LotResult result(String grade, String lot) {
         List<ModulusPoint> made = points(grade, lot);
-        return new LotResult(
-                made,
-                markers(),
-                shiftFactors(),
-                masterCurve(),
-                spectrum(),
-                List.of(),
-                List.of(),
-                derived(made),
-                sweeps(made),
-                responses(),
-                prony(),
-                List.of());
+        return LotResult.builder()
+                .points(made)
+                .markers(markers())
+                .shiftFactors(shiftFactors())
+                .masterCurve(masterCurve())
+                .spectrum(spectrum())
+                .derived(derived(made))
+                .sweeps(sweeps(made))
+                .responses(responses())
+                .prony(prony())
+                .build();
     }
 
     /** Sweeps of every kind, whatever varies in them. */
