@@ -2,18 +2,23 @@ package nightlag.pipeline.night;
 
 import java.io.IOException;
 import java.nio.file.Files;
+import java.nio.file.InvalidPathException;
 import java.nio.file.Path;
 import java.time.Clock;
 import java.util.Comparator;
 import java.util.List;
+import java.util.Optional;
 import java.util.stream.Collectors;
 import nightlag.pipeline.archive.Archive;
 import nightlag.pipeline.archive.ArchiveException;
+import nightlag.pipeline.archive.LotState;
 import nightlag.pipeline.config.Configuration;
 import nightlag.pipeline.config.Intake;
 import nightlag.pipeline.decode.RunSheets;
 import nightlag.pipeline.report.NightHeading;
 import nightlag.pipeline.report.NightReport;
+import nightlag.pipeline.report.ResultsIndex;
+import nightlag.pipeline.tables.LotTables;
 import nightlag.pipeline.tables.NightTables;
 import org.apache.logging.log4j.LogManager;
 import org.apache.logging.log4j.Logger;
@@ -97,11 +102,41 @@ public final class Night {
             report.finish(new NightHeading(
                     String.valueOf(folder.getFileName()), version, outcome.counts(), outcome.concerns(configuration)));
         }
+        if (!outcome.nothingNew() || !Files.exists(configuration.results().resolve(ResultsIndex.FILE_NAME))) {
+            writeIndex(archive);
+        }
         LOG.info(
                 "{} files; {} lots rebuilt",
                 outcome.files().size(),
                 outcome.lotsConcluded().size());
         return outcome;
+    }
+
+    /** The tables stand without it: one that is held open elsewhere is written the next night. */
+    private void writeIndex(Archive archive) throws ArchiveException {
+        Path results = configuration.results();
+        List<ResultsIndex.Entry> lots = archive.lots().stream()
+                .filter(lot -> lot.points() > 0)
+                .flatMap(lot -> entry(results, lot).stream())
+                .toList();
+        try {
+            ResultsIndex.write(results, NightFolder.all(results), lots);
+        } catch (IOException e) {
+            LOG.warn("{} cannot be written: {}", ResultsIndex.FILE_NAME, IoSentences.of(e));
+        }
+    }
+
+    private static Optional<ResultsIndex.Entry> entry(Path results, LotState lot) {
+        try {
+            Path folder =
+                    LotTables.folder(results, lot.name().grade(), lot.name().lot());
+            return Files.isDirectory(folder)
+                    ? Optional.of(new ResultsIndex.Entry(
+                            lot.name().grade(), lot.name().lot(), lot.points(), folder, LotTables.fileNames()))
+                    : Optional.empty();
+        } catch (InvalidPathException cannotBeNamedHere) {
+            return Optional.empty();
+        }
     }
 
     private int workers() {

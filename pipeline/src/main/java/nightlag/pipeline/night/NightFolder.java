@@ -17,7 +17,7 @@ final class NightFolder {
 
     /** Makes {@code nights/2026-03-01T020000}, in the PC's local time; a taken name gets {@code -2}, {@code -3} … */
     static Path make(Path results, Clock clock) throws IOException {
-        Path nights = Files.createDirectories(results.resolve("nights"));
+        Path nights = Files.createDirectories(all(results));
         String name = NAME.format(LocalDateTime.now(clock));
         Path folder = nights.resolve(name);
         for (int next = 2; !made(folder); next++) {
@@ -25,6 +25,11 @@ final class NightFolder {
             folder = nights.resolve(name + "-" + next);
         }
         return folder;
+    }
+
+    /** The folder that has a folder for each night. */
+    static Path all(Path results) {
+        return results.resolve("nights");
     }
 
     private static boolean made(Path folder) throws IOException {

@@ -63,6 +63,11 @@ public record NightOutcome(
         return newlySetAside.isEmpty() && unreadableIntakes.isEmpty() && lotsNotConcluded.isEmpty();
     }
 
+    /** Whether there was nothing to do: all outside the night's own folder is as it was. */
+    public boolean nothingNew() {
+        return allWell() && lotsConcluded.isEmpty() && count(NightFileRow.Status.REDUCED) == 0;
+    }
+
     /** How many files ended with a status. */
     public long count(NightFileRow.Status status) {
         return files.stream().filter(file -> file.status() == status).count();

@@ -1,10 +1,7 @@
 package nightlag.pipeline.report;
 
 import gg.jte.Content;
-import gg.jte.ContentType;
-import gg.jte.TemplateEngine;
 import gg.jte.TemplateOutput;
-import gg.jte.output.WriterOutput;
 import java.io.IOException;
 import java.io.Reader;
 import java.io.UncheckedIOException;
@@ -19,15 +16,12 @@ import java.util.Map;
 import nightlag.stages.LotResult;
 
 /**
- * Writes {@code report.html} of one night. Lots are written as they are rebuilt, into a file beside, so that no more than one
+ * Writes {@code report.html} of one night, and {@code night.json} for the index. Lots are written as they are rebuilt, into a file beside, so that no more than one
  * is held; the page is put together and swapped in at the end.
  */
 public final class NightReport implements AutoCloseable {
     /** The page's file name in the night's folder. */
     public static final String FILE_NAME = "report.html";
-
-    private static final TemplateEngine TEMPLATES =
-            TemplateEngine.createPrecompiled(null, ContentType.Html, null, "nightlag.pipeline.report.generated");
 
     private final Path folder;
     private final Path lotsFile;
@@ -49,16 +43,16 @@ public final class NightReport implements AutoCloseable {
     public void lot(String grade, String lot, LotResult result) throws IOException {
         String anchor = "lot-" + (links.size() + 1);
         links.add(new LotLink(anchor, grade, lot));
-        render("lot.jte", Map.of("lot", LotPages.of(anchor, grade, lot, result)), lots);
+        PageParts.render("lot.jte", Map.of("lot", LotPages.of(anchor, grade, lot, result)), lots);
     }
 
-    /** Puts the page together; nothing is added after. */
+    /** Puts the page together, and notes beside it what the index says of the night; nothing is added after. */
     public void finish(NightHeading heading) throws IOException {
         lots.close();
         Path beside = folder.resolve(FILE_NAME + ".new");
         try (Writer out = Files.newBufferedWriter(beside, StandardCharsets.UTF_8)) {
             Content sections = this::copyLots;
-            render(
+            PageParts.render(
                     "report.jte",
                     Map.of(
                             "heading",
@@ -76,6 +70,7 @@ public final class NightReport implements AutoCloseable {
                     out);
         }
         Files.move(beside, folder.resolve(FILE_NAME), StandardCopyOption.ATOMIC_MOVE);
+        NightSummary.of(heading, links).write(folder);
     }
 
     private void copyLots(TemplateOutput page) {
@@ -86,14 +81,6 @@ public final class NightReport implements AutoCloseable {
             }
         } catch (IOException e) {
             throw new UncheckedIOException(e);
-        }
-    }
-
-    private static void render(String template, Map<String, Object> values, Writer out) throws IOException {
-        try {
-            TEMPLATES.render(template, values, new WriterOutput(out));
-        } catch (UncheckedIOException e) {
-            throw e.getCause();
         }
     }
 

@@ -1,12 +1,20 @@
 package nightlag.pipeline.report;
 
+import gg.jte.ContentType;
+import gg.jte.TemplateEngine;
+import gg.jte.output.WriterOutput;
 import java.io.IOException;
 import java.io.InputStream;
 import java.io.UncheckedIOException;
+import java.io.Writer;
 import java.nio.charset.StandardCharsets;
+import java.util.Map;
 
-/** The files of the program that go into a page as they are. */
+/** What pages are made of: their templates, and the files of the program that go into them as they are. */
 final class PageParts {
+    private static final TemplateEngine TEMPLATES =
+            TemplateEngine.createPrecompiled(null, ContentType.Html, null, "nightlag.pipeline.report.generated");
+
     private PageParts() {}
 
     static String style() {
@@ -15,6 +23,19 @@ final class PageParts {
 
     static String script() {
         return resource("/nightlag/report/page.js");
+    }
+
+    static String indexScript() {
+        return resource("/nightlag/report/index.js");
+    }
+
+    /** Writes a page or a part of one; all text in the values is made harmless where it stands. */
+    static void render(String template, Map<String, Object> values, Writer out) throws IOException {
+        try {
+            TEMPLATES.render(template, values, new WriterOutput(out));
+        } catch (UncheckedIOException e) {
+            throw e.getCause();
+        }
     }
 
     /** The plotting library, D3 (ISC licence, named in its first line). */

@@ -68,6 +68,11 @@ public final class LotTables {
         }
     }
 
+    /** The file names of the tables, in the order they are listed everywhere. */
+    public static List<String> fileNames() {
+        return TABLES.stream().map(table -> table.table().fileName()).toList();
+    }
+
     /** The folder of a lot below the results folder; never outside it, whatever the names hold. */
     public static Path folder(Path results, String grade, String lot) {
         return results.resolve(SafeName.of(grade)).resolve(SafeName.of(lot));
