@@ -341,6 +341,28 @@ class ReduceTest {
     }
 
     @Test
+    void aSpecimenThatPullsWhereItIsPushedIsAnInvertedChannel() {
+        ModulusPoint point = only(Reduce.reduce(
+                new GivenModuli(
+                        tags(Map.of()),
+                        2,
+                        -2e4,
+                        -2.5e4,
+                        OptionalDouble.of(10),
+                        OptionalDouble.of(10),
+                        OptionalDouble.empty()),
+                plan(Optional.empty(), Corrections.none())));
+        assertThat(point.quality()).isEqualTo(Quality.UNUSABLE);
+        assertThat(point.moduli()).isPresent();
+        assertThat(point.flags()).containsExactly(Flag.SIGN_OR_DELAY);
+        assertThat(point.reasons())
+                .extracting(Reason::sentence)
+                .containsExactly(
+                        "sign-or-delay: both moduli are below zero, -20000 Pa and -25000 Pa: the polarity of one of the"
+                                + " channels is wrong (unusable)");
+    }
+
+    @Test
     void aLossModulusBelowZeroByItsNoiseIsNotWorthAWord() {
         for (double loss : new double[] {-29, -31}) {
             ModulusPoint point = only(Reduce.reduce(

@@ -134,6 +134,19 @@ public record ModulusPoint(
         return changed(stressAmplitudePa, moduli, harmonics, worse, more, and(why), unusableOnlyBy);
     }
 
+    /** The same point with one more flag, which makes it unusable whatever else it is. */
+    ModulusPoint unusable(Flag flag, Reason why) {
+        ModulusPoint flagged = flagged(flag, why);
+        return changed(
+                stressAmplitudePa,
+                moduli,
+                harmonics,
+                Quality.UNUSABLE,
+                flagged.flags(),
+                flagged.reasons(),
+                Optional.empty());
+    }
+
     /** The same point, its unusable verdict softened to doubtful. */
     public ModulusPoint merelyDoubtful(Reason why) {
         return changed(stressAmplitudePa, moduli, harmonics, Quality.DOUBTFUL, flags, and(why), Optional.empty());

@@ -104,7 +104,8 @@ public final class ModulusPoints {
         List<Reason> reasons = new ArrayList<>(screening.reasons());
         reasons.addAll(fit.notes());
         reasons.addAll(signs(moduli));
-        return new ModulusPoint(
+        boolean inverted = isInverted(moduli);
+        ModulusPoint screened = new ModulusPoint(
                 origin.key(),
                 origin.made(),
                 correction.deformationMode(),
@@ -124,7 +125,7 @@ public final class ModulusPoints {
                 OptionalDouble.of(fit.screening().loadSnrDb()),
                 OptionalDouble.of(fit.degreesOfFreedom()),
                 reasons,
-                waveform.filter(samples -> screening.quality() != Quality.SOUND)
+                waveform.filter(samples -> inverted || screening.quality() != Quality.SOUND)
                         .map(samples -> Loop.of(samples, fit, correction.at(0)))
                         .orElse(List.of()),
                 correction.torqueGeometry(),
@@ -134,6 +135,7 @@ public final class ModulusPoints {
                         .filter(kind -> kind == GeometryKind.PARALLEL_PLATE && !harmonics.isEmpty())
                         .map(kind -> new HarmonicLimits(plan.thirdHarmonic().doubtful(), plan.evenHarmonics())),
                 windowS(waveform));
+        return inverted ? inverted(screened, moduli) : screened;
     }
 
     /**
@@ -170,7 +172,7 @@ public final class ModulusPoints {
         OptionalDouble stress = strainAmplitude.isPresent()
                 ? OptionalDouble.of(strainAmplitude.getAsDouble() * moduli.magnitudePa())
                 : OptionalDouble.empty();
-        return point(
+        ModulusPoint sound = point(
                 origin,
                 deformation,
                 frequency,
@@ -179,6 +181,7 @@ public final class ModulusPoints {
                 Optional.of(moduli),
                 Quality.SOUND,
                 signs(moduli));
+        return isInverted(moduli) ? inverted(sound, moduli) : sound;
     }
 
     /** A record that can be read but gives no modulus. */
@@ -237,17 +240,42 @@ public final class ModulusPoints {
                 .findFirst();
     }
 
-    /** Moduli below zero by more than noise makes of small ones; without an uncertainty, below zero at all. */
+    /**
+     * Whether both moduli are below zero. Inertia that is badly known can turn the one and a wrong delay the other, but a phase
+     * beyond 180° is a specimen that pulls where it is pushed: no modulus of anything.
+     */
+    private static boolean isInverted(Moduli moduli) {
+        return lossNegative(moduli) && storageNegative(moduli);
+    }
+
+    private static ModulusPoint inverted(ModulusPoint point, Moduli moduli) {
+        return point.unusable(
+                Flag.SIGN_OR_DELAY,
+                ScreeningReason.SCREENING_INVERTED.with(moduli.storagePa(), moduli.lossPa(), Quality.UNUSABLE.word()));
+    }
+
+    /** One modulus below zero; of both together there is more to say. */
     private static List<Reason> signs(Moduli moduli) {
-        double lossU = moduli.covariance().map(ModuliCovariance::lossU).orElse(0.0);
-        double storageU = moduli.covariance().map(ModuliCovariance::storageU).orElse(0.0);
-        List<Reason> reasons = new ArrayList<>();
-        if (moduli.lossPa() < -STANDS_OUT * lossU) {
-            reasons.add(ModuliReason.MODULI_LOSS_NEGATIVE.with(moduli.lossPa()));
+        if (isInverted(moduli)) {
+            return List.of();
         }
-        if (moduli.storagePa() < -STANDS_OUT * storageU) {
-            reasons.add(ModuliReason.MODULI_STORAGE_NEGATIVE.with(moduli.storagePa()));
+        if (lossNegative(moduli)) {
+            return List.of(ModuliReason.MODULI_LOSS_NEGATIVE.with(moduli.lossPa()));
         }
-        return reasons;
+        return storageNegative(moduli)
+                ? List.of(ModuliReason.MODULI_STORAGE_NEGATIVE.with(moduli.storagePa()))
+                : List.of();
+    }
+
+    /** Below zero by more than noise makes of a small one; without an uncertainty, below zero at all. */
+    private static boolean lossNegative(Moduli moduli) {
+        return moduli.lossPa()
+                < -STANDS_OUT * moduli.covariance().map(ModuliCovariance::lossU).orElse(0.0);
+    }
+
+    private static boolean storageNegative(Moduli moduli) {
+        return moduli.storagePa()
+                < -STANDS_OUT
+                        * moduli.covariance().map(ModuliCovariance::storageU).orElse(0.0);
     }
 }

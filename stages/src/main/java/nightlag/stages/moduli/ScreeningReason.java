@@ -61,7 +61,11 @@ public enum ScreeningReason implements ReasonCode {
     SCREENING_SIGN_OR_DELAY(
             Flag.SIGN_OR_DELAY,
             "the loss modulus is below zero in {0} of the sweep''s points, the limit is {1}: the polarity of a channel or"
-                    + " a delay is wrong");
+                    + " a delay is wrong"),
+    /** Parts: {0} storage modulus in Pa, {1} loss modulus in Pa, {2} what the point becomes. */
+    SCREENING_INVERTED(
+            Flag.SIGN_OR_DELAY,
+            "both moduli are below zero, {0} Pa and {1} Pa: the polarity of one of the channels is wrong");
 
     private final Flag flag;
     private final String template;

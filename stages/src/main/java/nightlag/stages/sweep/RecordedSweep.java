@@ -70,6 +70,9 @@ final class RecordedSweep {
     }
 
     private String lacking(SweepPlan.Kind kind) {
+        if (kind == SweepPlan.Kind.TIME && !elapsedKnown(points)) {
+            return "time sweep, because the tag elapsed is missing";
+        }
         if (kind == SweepPlan.Kind.AUTO) {
             return sweeps.isEmpty() ? "sweep, for nothing varies among them or too much" : "sweep";
         }
@@ -100,6 +103,9 @@ final class RecordedSweep {
                     ambiguousIf(true, "frequency and time", "a time sweep at each frequency");
                 } else {
                     frequencySweep(isotherm, least);
+                    if (repeats(isotherm) && !elapsedKnown(isotherm)) {
+                        notes.add(SweepReason.SWEEP_REPEATS_WITHOUT_TIME.with(name.specimen(), name.sweep()));
+                    }
                 }
             }
             ambiguousIf(
@@ -139,15 +145,25 @@ final class RecordedSweep {
     /** Whether each frequency comes more often than there are frequencies, and all of them through most of the time. */
     private static boolean recurs(List<ModulusPoint> isotherm) {
         List<List<ModulusPoint>> groups = PointGroups.byFrequency(isotherm);
-        if (groups.size() < 2 || isotherm.size() <= groups.size() * groups.size() || !timePasses(isotherm, LEAST)) {
+        if (!repeats(isotherm) || !timePasses(isotherm, LEAST)) {
             return false;
         }
         double whole = PointGroups.range(isotherm, RecordedSweep::elapsed);
         return groups.stream().allMatch(group -> 2 * PointGroups.range(group, RecordedSweep::elapsed) >= whole);
     }
 
+    /** Whether there are several frequencies, and each comes more often than there are frequencies. */
+    private static boolean repeats(List<ModulusPoint> isotherm) {
+        int groups = PointGroups.byFrequency(isotherm).size();
+        return groups > 1 && isotherm.size() > groups * groups;
+    }
+
+    private static boolean elapsedKnown(List<ModulusPoint> points) {
+        return points.stream().allMatch(point -> point.elapsedS().isPresent());
+    }
+
     private static boolean timePasses(List<ModulusPoint> points, int least) {
-        return points.stream().allMatch(point -> point.elapsedS().isPresent())
+        return elapsedKnown(points)
                 && points.stream()
                                 .mapToDouble(RecordedSweep::elapsed)
                                 .distinct()

@@ -21,6 +21,9 @@ public enum SweepReason implements ReasonCode {
     /** Specimen, sweep, what varies, what they were taken for. */
     SWEEP_AMBIGUOUS(
             "specimen {0}, sweep {1}: {2} vary, taken as {3}; kind of the section sweeps in the grade file decides otherwise"),
+    /** Specimen, sweep. */
+    SWEEP_REPEATS_WITHOUT_TIME(
+            "specimen {0}, sweep {1}: frequencies come again and again, taken as repeats of a frequency sweep; a time sweep needs the tag elapsed"),
     /** Specimen, sweep, how many legs. */
     SWEEP_RAMP_TURNS(
             "specimen {0}, sweep {1}: the ramp turns; its {2} legs of heating and cooling are taken as sweeps of their own, and the method of a marker says which"),

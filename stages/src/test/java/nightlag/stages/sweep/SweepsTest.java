@@ -231,6 +231,19 @@ class SweepsTest {
     }
 
     @Test
+    void withoutTheirTimesTheyAreRepeatsWhichIsSaid() {
+        List<SeriesPoint> points = new ArrayList<>();
+        for (int i = 0; i < 120; i++) {
+            points.add(SeriesPoint.of(i, ROOM, Math.pow(2, i % 4)));
+        }
+
+        Sweeps sweeps = found(points);
+
+        assertThat(only(sweeps).kind()).isEqualTo(Kind.FREQUENCY);
+        assertThat(codes(sweeps.notes())).containsExactly("SWEEP_REPEATS_WITHOUT_TIME");
+    }
+
+    @Test
     void aFrequencySweepMadeThreeTimesIsOneWithRepeats() {
         List<SeriesPoint> points = new ArrayList<>();
         for (int i = 0; i < 60; i++) {
