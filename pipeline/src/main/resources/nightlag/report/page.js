@@ -46,7 +46,7 @@
   function ticks(axis, scale) {
     if (axis.scale !== 'LOG') {
       const major = scale.ticks(6);
-      return { major, minor: scale.ticks(24), label: scale.tickFormat(6) };
+      return { major, minor: scale.ticks(24), label: scale.tickFormat(6, 'f') };
     }
     const [low, high] = scale.domain();
     const from = Math.ceil(Math.log10(low) - 1e-9);
@@ -65,7 +65,13 @@
     }
     const major = [1, 2, 3, 5].flatMap((digit) => d3.range(from - 1, to + 1).map((decade) => digit * 10 ** decade))
       .filter((value) => value >= low && value <= high);
-    return { major: major.length > 1 ? major : scale.ticks(4), minor, label: short };
+    if (major.length > 1) {
+      return { major, minor, label: short(3) };
+    }
+    // less than a decade: as many digits as tell the lines apart
+    const fine = scale.ticks(4);
+    const digits = d3.range(3, 9).find((some) => new Set(fine.map(short(some))).size === fine.length);
+    return { major: fine, minor, label: short(digits ?? 9) };
   }
 
   const RAISED = { '-': '⁻', 0: '⁰', 1: '¹', 2: '²', 3: '³', 4: '⁴', 5: '⁵', 6: '⁶', 7: '⁷', 8: '⁸', 9: '⁹' };
@@ -74,9 +80,10 @@
     : `10${[...String(decade)].map((sign) => RAISED[sign]).join('')}`);
 
   /** Like 2·10⁷ beyond what is easily read. */
-  const short = (value) => {
+  const short = (digits) => (value) => {
     const decade = Math.floor(Math.log10(value) + 1e-9);
-    return decade >= -2 && decade <= 3 ? d3.format('~g')(value) : `${d3.format('.3~g')(value / 10 ** decade)}·${power(decade)}`;
+    const written = d3.format(`.${digits}~g`);
+    return decade >= -2 && decade <= 3 ? written(value) : `${written(value / 10 ** decade)}·${power(decade)}`;
   };
 
   class Plot {
@@ -198,9 +205,6 @@
     }
 
     legend(figure) {
-      if (this.chart.series.length < 2) {
-        return;
-      }
       const first = (series, s) => this.chart.series.findIndex((other) => other.name === series.name) === s;
       const items = d3.select(figure).append('ul').attr('class', 'legend').selectAll('li')
         .data(this.chart.series.filter(first)).join('li');

@@ -2,7 +2,12 @@ package nightlag.pipeline.report;
 
 import java.util.ArrayList;
 import java.util.List;
+import java.util.Map;
+import java.util.Set;
+import java.util.TreeMap;
+import java.util.function.Predicate;
 import java.util.function.ToDoubleFunction;
+import java.util.stream.Collectors;
 import java.util.stream.IntStream;
 import java.util.stream.Stream;
 import nightlag.stages.LotResult;
@@ -15,6 +20,9 @@ import nightlag.stages.superposition.ShiftFactor;
 import nightlag.stages.sweep.FrequencySweeps;
 import nightlag.stages.sweep.Isotherm;
 import nightlag.stages.sweep.Isotherms;
+import nightlag.stages.sweep.Sweep;
+import nightlag.stages.sweep.SweepName;
+import nightlag.stages.sweep.SweepPlan;
 
 /** The charts of one lot. */
 final class LotCharts {
@@ -38,7 +46,21 @@ final class LotCharts {
         this.families = families(result.points().stream()
                 .filter(point ->
                         point.quality() != Quality.UNUSABLE && point.moduli().isPresent())
+                .filter(whichGoOverFrequency(result))
                 .toList());
+    }
+
+    /** What was followed over temperature, time or strain has charts of its own; it stands here as well where it is superposed. */
+    private static Predicate<ModulusPoint> whichGoOverFrequency(LotResult result) {
+        Set<SweepName> others = result.sweeps().stream()
+                .filter(sweep -> sweep.kind() != SweepPlan.Kind.FREQUENCY)
+                .map(Sweep::name)
+                .collect(Collectors.toSet());
+        result.sweeps().stream()
+                .filter(sweep -> sweep.kind() == SweepPlan.Kind.FREQUENCY)
+                .map(Sweep::name)
+                .forEach(others::remove);
+        return point -> !result.masterCurve().isEmpty() || !others.contains(SweepName.of(point));
     }
 
     /** Those that have something to show. */
@@ -56,7 +78,8 @@ final class LotCharts {
                                 charts.spectrum(SpectrumRow.Kind.RETARDATION, "Retardation modes", "compliance"),
                                 charts.density(SpectrumRow.Kind.RELAXATION, "Relaxation spectrum", "H"),
                                 charts.density(SpectrumRow.Kind.RETARDATION, "Retardation spectrum", "L")),
-                        ResponseCharts.of(result.responses()).stream())
+                        ResponseCharts.of(result.responses()).stream(),
+                        WorstPointCharts.of(result.points()).stream())
                 .flatMap(charted -> charted)
                 .filter(Chart::hasPoints)
                 .toList();
@@ -189,7 +212,7 @@ final class LotCharts {
                 "Phase angle over modulus",
                 "No shift along frequency enters: where a material superposes without a vertical shift, all temperatures"
                         + " lie on one curve.",
-                Axis.log("complex modulus |G*|", PASCAL),
+                Axis.log("complex modulus |" + symbol() + "*|", PASCAL),
                 Axis.linear("phase angle", "°"),
                 byFamily(
                         point -> moduli(point).magnitudePa(),
@@ -209,21 +232,37 @@ final class LotCharts {
 
     private List<Series> byFamily(ToDoubleFunction<ModulusPoint> x, ToDoubleFunction<ModulusPoint> y) {
         return IntStream.range(0, families.size())
+                .filter(i -> variesInFrequency(families.get(i)))
                 .mapToObj(i -> Series.of(
                         families.get(i).name(), i, true, false, families.get(i).points(), x, y))
                 .toList();
     }
 
     private Chart spectrum(SpectrumRow.Kind kind, String title, String what) {
-        List<SpectrumRow> rows = result.spectrum().stream()
-                .filter(row -> row.kind() == kind && row.form() == SpectrumRow.Form.DISCRETE)
-                .toList();
         return new Chart(
                 title,
                 "Each mode of the discrete set; the set as a whole says what the material does, a single mode little.",
                 Axis.log("time", "s"),
                 Axis.log(what, kind.unit()),
-                List.of(Series.of("modes", 0, true, false, rows, SpectrumRow::timeS, SpectrumRow::value)));
+                byTemperature(
+                        kind,
+                        SpectrumRow.Form.DISCRETE,
+                        (name, look, rows) -> Series.of(
+                                "modes" + name, look, true, false, rows, SpectrumRow::timeS, SpectrumRow::value)));
+    }
+
+    /** A series of the rows of one temperature. */
+    private interface SpectrumSeries {
+        Series of(String name, int look, List<SpectrumRow> rows);
+    }
+
+    private List<Series> byTemperature(SpectrumRow.Kind kind, SpectrumRow.Form form, SpectrumSeries series) {
+        Map<Double, List<SpectrumRow>> rows = result.spectrum().stream()
+                .filter(row -> row.kind() == kind && row.form() == form)
+                .collect(Collectors.groupingBy(SpectrumRow::referenceTemperatureK, TreeMap::new, Collectors.toList()));
+        List<Series> found = new ArrayList<>();
+        rows.forEach((kelvin, of) -> found.add(series.of(" at " + Written.celsius(kelvin), found.size(), of)));
+        return found;
     }
 
     /** A master curve is of one deformation. */
@@ -234,26 +273,28 @@ final class LotCharts {
     }
 
     private Chart density(SpectrumRow.Kind kind, String title, String symbol) {
-        List<SpectrumRow> all = result.spectrum().stream()
-                .filter(row -> row.kind() == kind && row.form() == SpectrumRow.Form.CONTINUOUS)
-                .toList();
-        double peak = all.stream().mapToDouble(SpectrumRow::value).max().orElse(0);
-        List<SpectrumRow> rows =
-                all.stream().filter(row -> row.value() >= LEAST_OF_PEAK * peak).toList();
         return new Chart(
                 title,
                 "The continuous spectrum per unit of ln time and the band it lies in with 95 % probability. The band opens where"
                         + " the data no longer fix it, and reaches down to the axis where they do not tell it from none.",
                 Axis.log("time", "s"),
                 Axis.log(symbol, kind.unit()),
-                List.of(Series.withBand(
-                        symbol,
-                        0,
-                        rows,
-                        SpectrumRow::timeS,
-                        SpectrumRow::value,
-                        row -> row.low().orElse(row.value()),
-                        row -> row.high().orElse(row.value()))));
+                byTemperature(
+                        kind,
+                        SpectrumRow.Form.CONTINUOUS,
+                        (name, look, rows) -> Series.withBand(
+                                symbol + name,
+                                look,
+                                worthAnAxis(rows),
+                                SpectrumRow::timeS,
+                                SpectrumRow::value,
+                                row -> row.low().orElse(row.value()),
+                                row -> row.high().orElse(row.value()))));
+    }
+
+    private static List<SpectrumRow> worthAnAxis(List<SpectrumRow> rows) {
+        double peak = rows.stream().mapToDouble(SpectrumRow::value).max().orElse(0);
+        return rows.stream().filter(row -> row.value() >= LEAST_OF_PEAK * peak).toList();
     }
 
     private static double angularFrequency(ModulusPoint point) {

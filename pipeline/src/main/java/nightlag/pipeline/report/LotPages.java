@@ -2,12 +2,15 @@ package nightlag.pipeline.report;
 
 import java.util.ArrayList;
 import java.util.Arrays;
+import java.util.Collections;
 import java.util.List;
 import java.util.OptionalDouble;
 import java.util.stream.Collectors;
 import nightlag.stages.LotResult;
 import nightlag.stages.fault.Reason;
+import nightlag.stages.moduli.CreepCurve;
 import nightlag.stages.moduli.Marker;
+import nightlag.stages.moduli.ModulusPoint;
 import nightlag.stages.moduli.Quality;
 
 /** A lot's result in the words of the page. */
@@ -28,12 +31,24 @@ final class LotPages {
     }
 
     private static String counts(LotResult result) {
-        return result.points().size() + " points: "
+        List<String> parts = new ArrayList<>();
+        if (!result.points().isEmpty() || result.creep().isEmpty()) {
+            parts.add(counts(
+                    "points",
+                    result.points().stream().map(ModulusPoint::quality).toList()));
+        }
+        if (!result.creep().isEmpty()) {
+            parts.add(counts(
+                    "creep curves",
+                    result.creep().stream().map(CreepCurve::quality).toList()));
+        }
+        return String.join("; ", parts);
+    }
+
+    private static String counts(String what, List<Quality> found) {
+        return found.size() + " " + what + ": "
                 + Arrays.stream(Quality.values())
-                        .map(quality -> result.points().stream()
-                                        .filter(point -> point.quality() == quality)
-                                        .count()
-                                + " " + quality.word())
+                        .map(quality -> Collections.frequency(found, quality) + " " + quality.word())
                         .collect(Collectors.joining(", "));
     }
 

@@ -23,6 +23,9 @@ public final class NightReport implements AutoCloseable {
     /** The page's file name in the night's folder. */
     public static final String FILE_NAME = "report.html";
 
+    /** A longer list is opened by who wants it, so that the way to the lots is not a screen away. */
+    public static final int MOST_OPEN = 20;
+
     private final Path folder;
     private final Path lotsFile;
     private final Writer lots;

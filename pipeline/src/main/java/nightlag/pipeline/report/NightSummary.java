@@ -42,7 +42,7 @@ record NightSummary(String night, String version, List<String> counts, List<Coun
                 heading.counts(),
                 heading.concerns().stream()
                         .map(concern ->
-                                new Count(concern.heading(), concern.lines().size()))
+                                new Count(concern.underACall(), concern.lines().size()))
                         .toList(),
                 lots);
     }

@@ -11,13 +11,16 @@ import nightlag.stages.response.ResponseRow;
 import nightlag.stages.response.ResponseRow.Band;
 
 /**
- * A chart of each prediction, with its band: over log time where nothing steps after the start, else over time. What no data
+ * A chart of each prediction, with its band: over time where its stretches are alike long, else over log time. What no data
  * stand behind is grey.
  */
 final class ResponseCharts {
     private static final String CAUTION =
             " A linear viscoelastic estimate from small samples; not a design value. Ageing, moisture, damage and yield are not in it,"
                     + " nor are thermal strain and the vertical shift.";
+
+    /** A first stretch shorter than this share of the whole would be lost on an axis that is not logarithmic. */
+    private static final double LEAST_SHARE = 0.02;
 
     /** The look that is grey. */
     private static final int GREY = 6;
@@ -36,9 +39,10 @@ final class ResponseCharts {
     private static Chart chart(String name, List<ResponseRow> rows) {
         boolean strain = rows.get(0).controlled() == Controlled.STRESS;
         ToDoubleFunction<ResponseRow> predicted = strain ? ResponseRow::strain : ResponseRow::stressPa;
-        boolean once = steps(rows) == 1;
+        boolean wide =
+                firstStepS(rows) < LEAST_SHARE * rows.get(rows.size() - 1).timeS();
         List<Series> series = new ArrayList<>();
-        for (List<ResponseRow> run : runs(once ? afterTheStart(rows) : rows)) {
+        for (List<ResponseRow> run : runs(wide ? afterTheStart(rows) : rows)) {
             boolean inside = run.stream().allMatch(ResponseRow::insideData);
             series.add(Series.withBand(
                     inside ? "inside the data" : "beyond the data",
@@ -54,15 +58,19 @@ final class ResponseCharts {
                 "Predicted " + (strain ? "strain" : "stress")
                         + " and the band it lies in with 95 % probability; grey where no data" + " stand behind it."
                         + CAUTION,
-                once ? Axis.log("time", "s") : Axis.linear("time", "s"),
+                wide ? Axis.log("time", "s") : Axis.linear("time", "s"),
                 Axis.linear(strain ? "strain" : "stress", strain ? "" : "Pa"),
                 series);
     }
 
-    private static long steps(List<ResponseRow> rows) {
+    /** When something steps for the first time after the start; 0 where nothing does. */
+    private static double firstStepS(List<ResponseRow> rows) {
         return IntStream.range(1, rows.size())
                 .filter(i -> rows.get(i).timeS() == rows.get(i - 1).timeS())
-                .count();
+                .mapToDouble(i -> rows.get(i).timeS())
+                .filter(timeS -> timeS > 0)
+                .findFirst()
+                .orElse(0);
     }
 
     private static List<ResponseRow> afterTheStart(List<ResponseRow> rows) {

@@ -35,7 +35,7 @@ final class SweepCharts {
                 charts.moduli(
                         SweepPlan.Kind.AMPLITUDE,
                         "Moduli over strain",
-                        "Level on the left while the material is linear; where the storage modulus leaves that level by 5 % its"
+                        "Level on the left while the material is linear; where the complex modulus leaves that level by 5 % its"
                                 + " linear range ends.",
                         Axis.log("strain amplitude", ""),
                         point -> point.strainAmplitude().orElse(Double.NaN)),

@@ -85,6 +85,28 @@ class NightReportTest {
     }
 
     @Test
+    void theWorstPointsAreShownWithTheirLoopsAndHarmonics() throws IOException {
+        LotResult result = new RandomLot(1).result("Heron 3", "L-17");
+
+        JsonNode charts = JsonMapper.builder().build().readTree(ChartJson.of(LotCharts.of(result)));
+
+        JsonNode loops = find(charts, "Loops of the worst points").get("series");
+        assertThat(loops).hasSizeBetween(1, 4);
+        for (JsonNode loop : loops) {
+            assertThat(loop.get("joined").asBoolean()).isTrue();
+            assertThat(loop.get("y"))
+                    .isNotEmpty()
+                    .allSatisfy(
+                            stress -> assertThat(Math.abs(stress.asDouble())).isLessThanOrEqualTo(1 + 1e-9));
+        }
+        for (JsonNode point : find(charts, "Harmonics of the worst points").get("series")) {
+            assertThat(point.get("x"))
+                    .isNotEmpty()
+                    .allSatisfy(order -> assertThat(order.asInt()).isGreaterThan(1));
+        }
+    }
+
+    @Test
     void aContinuousSpectrumIsALineInItsBand() throws IOException {
         List<SpectrumRow> rows = IntStream.range(0, 4)
                 .mapToObj(i -> new SpectrumRow(
