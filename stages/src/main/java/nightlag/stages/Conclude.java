@@ -4,6 +4,7 @@ import java.util.ArrayList;
 import java.util.Comparator;
 import java.util.List;
 import java.util.Optional;
+import java.util.OptionalDouble;
 import java.util.stream.Stream;
 import nightlag.stages.fault.Reason;
 import nightlag.stages.fault.ReductionFault;
@@ -52,11 +53,9 @@ public final class Conclude {
         boolean creepAlone = !creep.isEmpty() && sweeps.isotherms().isotherms().isEmpty();
         Optional<LotCurve> curve = creepAlone ? Optional.empty() : curve(sweeps, plan, notes);
         Optional<MasterCurve> master = curve.flatMap(LotCurve::master);
-        LotSpectrum ofModuli = curve.flatMap(whole -> plan.spectrum().map(wanted -> LotSpectrum.of(whole, wanted)))
-                .orElse(LotSpectrum.NONE);
         LotSpectrum spectrum = plan.spectrum()
-                .map(wanted -> LotCreep.spectrum(creep, curve, wanted, ofModuli))
-                .orElse(ofModuli);
+                .map(wanted -> LotSpectrum.of(curve, creep, wanted, referenceK(plan)))
+                .orElse(LotSpectrum.NONE);
         notes.addAll(spectrum.notes());
         Findings markers = LotMarkers.of(sweeps.sweeps(), plan.sweeps(), curve);
         List<ModulusPoint> usable = lot.points().stream()
@@ -64,7 +63,7 @@ public final class Conclude {
                 .toList();
         LotFigures figures = LotFigures.of(usable, lot.amplitudeSweeps(), plan.ownFigures());
         notes.addAll(figures.findings().notes());
-        LotResponses responses = LotResponses.of(plan.responses(), curve, spectrum);
+        LotResponses responses = LotResponses.of(plan.responses(), spectrum);
         notes.addAll(responses.notes());
         return LotResult.builder()
                 .points(lot.points())
@@ -86,6 +85,12 @@ public final class Conclude {
                 .prony(responses.prony())
                 .creep(creep)
                 .build();
+    }
+
+    private static OptionalDouble referenceK(ConclusionPlan plan) {
+        return plan.superposition().isPresent()
+                ? OptionalDouble.of(plan.superposition().get().referenceTemperatureK())
+                : OptionalDouble.empty();
     }
 
     /** The curve that a master curve or a spectrum is asked of; what there is to say of it goes into the notes. */

@@ -16,6 +16,20 @@ public enum ConclusionReason implements ReasonCode {
     /** Nothing. */
     CURVE_MIXED_DEFORMATION(
             "no master curve and no spectrum: the lot holds points in shear and in extension, two different moduli"),
+    /** How many curves. */
+    CREEP_WITHOUT_TEMPERATURE("{0} creep curves have no temperature and are left out of the spectrum"),
+    /** Nothing. */
+    CREEP_MIXED_DEFORMATION(
+            "no spectrum of the creep curves: some are in shear and some in extension, two different compliances"),
+    /** Words for the deformation of the creep, and of the moduli. */
+    CREEP_OTHER_DEFORMATION(
+            "no spectrum of the creep curves: they are in {0}, the moduli in {1}, and the two are different figures"),
+    /** Temperature of the creep, lowest and highest isotherm, °C. */
+    CREEP_OUTSIDE_ISOTHERMS(
+            "creep at {0} °C has a spectrum of its own: it lies outside the isotherms that are superposed, {1} to {2} °C"),
+    /** Temperature of the creep, and of the moduli, °C. */
+    CREEP_WITHOUT_SHIFT(
+            "creep at {0} °C has a spectrum of its own: the moduli are of {1} °C, and no isotherms say how times move"),
     /** Specimen, sweep, how many strains, how many are needed. */
     RIM_TOO_FEW_STRAINS(
             "specimen {0}, sweep {1}: {2} strains between parallel plates, {3} are needed to correct to the rim; its moduli"

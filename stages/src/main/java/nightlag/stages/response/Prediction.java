@@ -15,9 +15,8 @@ import nightlag.stages.response.ResponsePlan.Controlled;
 import nightlag.stages.response.ResponsePlan.Step;
 import nightlag.stages.response.ResponseRow.Band;
 import nightlag.stages.response.ResponseRow.StrainParts;
-import nightlag.stages.spectrum.DiscreteSpectrum;
+import nightlag.stages.spectrum.FittedSpectrum;
 import nightlag.stages.spectrum.RelaxationModes;
-import nightlag.stages.spectrum.SupportedWindow;
 
 /** What a material with a fitted spectrum does under one programme. */
 public final class Prediction {
@@ -31,16 +30,17 @@ public final class Prediction {
     private static final double FIRST_PART = 0.1;
 
     private final ResponsePlan plan;
-    private final DiscreteSpectrum spectrum;
+    private final FittedSpectrum spectrum;
     private final TemperatureShift shift;
     private final Programme programme;
 
-    private Prediction(ResponsePlan plan, DiscreteSpectrum spectrum, TemperatureShift shift) {
+    private Prediction(ResponsePlan plan, FittedSpectrum spectrum, TemperatureShift shift) {
         this.plan = plan;
         this.spectrum = spectrum;
         this.shift = shift;
-        double fastest =
-                Math.min(spectrum.relaxation().timesS()[0], spectrum.window().shortestS());
+        double fastest = Arrays.stream(spectrum.relaxation().timesS())
+                .limit(1)
+                .reduce(spectrum.window().shortestS(), Math::min);
         double smallestShift = temperatures(plan, shift)
                 .map(temperature -> Math.pow(10, shift.log10A(temperature)))
                 .min()
@@ -56,17 +56,27 @@ public final class Prediction {
      * @return in the order of time
      * @throws ReductionFault if a temperature has no shift
      */
-    public static List<ResponseRow> of(ResponsePlan plan, DiscreteSpectrum spectrum, TemperatureShift shift)
+    public static List<ResponseRow> of(ResponsePlan plan, FittedSpectrum spectrum, TemperatureShift shift)
             throws ReductionFault {
-        Optional<Reason> refusal = temperatures(plan, shift)
-                .boxed()
-                .map(temperature -> shift.refusal(plan.name(), temperature))
-                .flatMap(Optional::stream)
-                .findFirst();
+        Optional<Reason> refusal = refusal(plan, shift);
         if (refusal.isPresent()) {
             throw new ReductionFault(refusal.get());
         }
         return new Prediction(plan, spectrum, shift).rows();
+    }
+
+    /** Why a shift does not lead to all temperatures of a programme; empty where it does. */
+    public static Optional<Reason> refusal(ResponsePlan plan, TemperatureShift shift) {
+        return temperatures(plan, shift)
+                .boxed()
+                .map(temperature -> shift.refusal(plan.name(), temperature))
+                .flatMap(Optional::stream)
+                .findFirst();
+    }
+
+    /** Whether all temperatures of a programme are among those a shift was measured at. */
+    public static boolean isWithin(ResponsePlan plan, TemperatureShift shift) {
+        return temperatures(plan, shift).allMatch(shift::isWithin);
     }
 
     private static DoubleStream temperatures(ResponsePlan plan, TemperatureShift shift) {
@@ -105,9 +115,7 @@ public final class Prediction {
     }
 
     private boolean isInside(Instant instant, BoltzmannSum sum) {
-        SupportedWindow window = spectrum.window();
-        return Arrays.stream(sum.sinceSteps(instant))
-                        .allMatch(since -> since >= window.shortestS() && since <= window.longestS())
+        return Arrays.stream(sum.sinceSteps(instant)).allMatch(spectrum::supports)
                 && IntStream.rangeClosed(0, Math.max(0, instant.segment()))
                         .allMatch(
                                 s -> shift.isWithin(programme.segments().get(s).temperatureK()));

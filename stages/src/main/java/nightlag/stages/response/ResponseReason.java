@@ -6,6 +6,9 @@ import nightlag.stages.fault.ReasonCode;
 public enum ResponseReason implements ReasonCode {
     /** Name of the response. */
     RESPONSE_NO_SPECTRUM("no response \"{0}\": there is no spectrum to predict it from"),
+    /** Name, temperatures of the spectra, °C. */
+    RESPONSE_SEVERAL_SPECTRA(
+            "no response \"{0}\": it has no temperature of its own, and there are spectra at {1} °C but no reference temperature"),
     /** Name, temperature asked for, lowest and highest isotherm, °C. */
     RESPONSE_TEMPERATURE_OUTSIDE(
             "no response \"{0}\": {1} °C is outside the isotherms, {2} to {3} °C, and no law of the shift factors leads there"),

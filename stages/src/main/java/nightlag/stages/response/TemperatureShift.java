@@ -3,6 +3,8 @@ package nightlag.stages.response;
 import java.util.Comparator;
 import java.util.List;
 import java.util.Optional;
+import java.util.OptionalDouble;
+import java.util.function.Function;
 import nightlag.stages.fault.Reason;
 import nightlag.stages.superposition.FittedLaw;
 import nightlag.stages.superposition.MasterCurve;
@@ -46,7 +48,7 @@ public final class TemperatureShift {
     }
 
     /** Temperature of the spectrum, K. */
-    double referenceK() {
+    public double referenceK() {
         return referenceK;
     }
 
@@ -73,22 +75,29 @@ public final class TemperatureShift {
     }
 
     /** Whether a temperature in K is among the isotherms. */
-    boolean isWithin(double temperatureK) {
+    public boolean isWithin(double temperatureK) {
         return temperatureK >= lowestK() - SAME_K && temperatureK <= highestK() + SAME_K;
     }
 
-    private double lowestK() {
+    /** The lowest isotherm, K. */
+    public double lowestK() {
         return isotherms.isEmpty() ? referenceK : isotherms.get(0).temperatureK();
     }
 
-    private double highestK() {
+    /** The highest isotherm, K. */
+    public double highestK() {
         return isotherms.isEmpty()
                 ? referenceK
                 : isotherms.get(isotherms.size() - 1).temperatureK();
     }
 
+    /** Whether there are several isotherms, so that times are known to move between them. */
+    public boolean hasIsotherms() {
+        return isotherms.size() > 1;
+    }
+
     /** log10 a_T at a temperature in K that is not refused. */
-    double log10A(double temperatureK) {
+    public double log10A(double temperatureK) {
         if (law.isPresent()) {
             return law.get().log10A(temperatureK);
         }
@@ -104,12 +113,33 @@ public final class TemperatureShift {
      * Covariance of log10 a_T at two temperatures in K. Off straight lines, shifts on one side of the reference are taken to err
      * together, as they hang on one another, and those on two sides apart.
      */
-    double covariance(double firstK, double secondK) {
+    public double covariance(double firstK, double secondK) {
         if (law.isPresent()) {
             return law.get().log10ACovariance(firstK, secondK);
         }
         boolean oneSide = (firstK - referenceK) * (secondK - referenceK) > 0;
         return oneSide && isotherms.size() > 1 ? u(firstK) * u(secondK) : 0;
+    }
+
+    /** log10 b_T at a temperature in K, on straight lines between the isotherms: a reduced modulus is b times the modulus. */
+    public double log10B(double temperatureK) {
+        return between(temperatureK, ShiftFactor::log10B);
+    }
+
+    /** Covariance of log10 b_T at two temperatures in K, by the rule of {@link #covariance}; 0 where it is not fitted. */
+    public double verticalCovariance(double firstK, double secondK) {
+        boolean oneSide = (firstK - referenceK) * (secondK - referenceK) > 0;
+        return oneSide ? between(firstK, ShiftFactor::log10BU) * between(secondK, ShiftFactor::log10BU) : 0;
+    }
+
+    private double between(double temperatureK, Function<ShiftFactor, OptionalDouble> figure) {
+        if (isotherms.isEmpty()) {
+            return 0;
+        }
+        Place place = place(temperatureK);
+        return place.between(
+                figure.apply(place.lower()).orElse(0),
+                figure.apply(place.upper()).orElse(0));
     }
 
     private double u(double temperatureK) {

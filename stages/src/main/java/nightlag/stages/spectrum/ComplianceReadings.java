@@ -1,6 +1,7 @@
 package nightlag.stages.spectrum;
 
 import java.util.ArrayList;
+import java.util.DoubleSummaryStatistics;
 import java.util.List;
 import nightlag.stages.moduli.CreepCurve;
 import nightlag.stages.moduli.CreepReading;
@@ -21,6 +22,8 @@ final class ComplianceReadings {
     private final List<Waves> waves = new ArrayList<>();
     private double shortestS = Double.POSITIVE_INFINITY;
     private double longestS;
+    private final List<Integer> ends = new ArrayList<>();
+    private final List<SupportedWindow> windows = new ArrayList<>();
 
     /** A strain after some steps: their stresses in Pa, the times since each in s. */
     private record CreepRow(double[] changesPa, double[] sinceS, double strain, double u) {}
@@ -33,31 +36,42 @@ final class ComplianceReadings {
         double at(double sinceS);
     }
 
-    /** Readings of curves that begin at rest and of moduli with a covariance. */
-    static ComplianceReadings of(List<CreepCurve> curves, List<ModulusReading> moduli) {
+    /** Readings of curves that begin at rest, brought to the temperature of the spectrum, and of moduli with a covariance. */
+    static ComplianceReadings of(List<ShiftedCreep> creep, List<ModulusReading> moduli) {
         ComplianceReadings readings = new ComplianceReadings();
-        curves.forEach(readings::add);
+        for (ShiftedCreep oneTemperature : creep) {
+            double a = Math.exp(oneTemperature.lnA());
+            double b = Math.exp(oneTemperature.lnB());
+            oneTemperature.curves().forEach(curve -> readings.add(curve, a, b));
+            readings.ends.add(readings.creep.size());
+        }
         moduli.forEach(readings::add);
         return readings;
     }
 
-    private void add(CreepCurve curve) {
+    private void add(CreepCurve curve, double a, double b) {
         double zero = curve.steps().get(0).strainBefore();
+        double shortest = Double.POSITIVE_INFINITY;
+        double longest = 0;
         for (CreepReading reading : curve.readings()) {
             int steps = reading.step();
             double[] changes = new double[steps];
             double[] since = new double[steps];
             for (int k = 0; k < steps; k++) {
                 CreepStep step = curve.steps().get(k);
-                changes[k] = step.changePa();
-                since[k] = reading.timeS() - step.atS();
+                changes[k] = b * step.changePa();
+                since[k] = (reading.timeS() - step.atS()) / a;
             }
             double strain = reading.strain() - zero;
-            double own = reading.complianceUPerPa() * Math.abs(changes[steps - 1]);
+            double own = reading.complianceUPerPa()
+                    * Math.abs(curve.steps().get(steps - 1).changePa());
             creep.add(new CreepRow(changes, since, strain, Math.max(own, LEAST_RELATIVE_U * Math.abs(strain))));
-            shortestS = Math.min(shortestS, reading.sinceStepS());
-            longestS = Math.max(longestS, reading.timeS());
+            shortest = Math.min(shortest, reading.sinceStepS() / a);
+            longest = Math.max(longest, reading.timeS() / a);
         }
+        windows.add(new SupportedWindow(shortest, longest));
+        shortestS = Math.min(shortestS, shortest);
+        longestS = Math.max(longestS, longest);
     }
 
     /** With J = 1/G, dJ = −dG/G²: the covariance of G turned and scaled. */
@@ -84,6 +98,35 @@ final class ComplianceReadings {
 
     int rows() {
         return creep.size() + 2 * waves.size();
+    }
+
+    /** Which temperature of the creep a row belongs to; −1 for a modulus. */
+    int temperature(int row) {
+        for (int k = 0; k < ends.size(); k++) {
+            if (row < ends.get(k)) {
+                return k;
+            }
+        }
+        return -1;
+    }
+
+    /**
+     * The times that the readings support, in s. A creep curve gives the compliance itself, from its first reading to its last;
+     * moduli as in {@link SupportedWindow}, and all between their ends where creep goes on where they end.
+     */
+    List<SupportedWindow> windows() {
+        List<SupportedWindow> all = new ArrayList<>(windows);
+        if (!waves.isEmpty()) {
+            DoubleSummaryStatistics omega =
+                    waves.stream().mapToDouble(Waves::omega).summaryStatistics();
+            SupportedWindow alone = SupportedWindow.of(omega.getMin(), omega.getMax());
+            double fastest = 1 / omega.getMax();
+            double slowest = 1 / omega.getMin();
+            all.add(new SupportedWindow(
+                    windows.stream().anyMatch(window -> window.holds(fastest)) ? fastest : alone.shortestS(),
+                    windows.stream().anyMatch(window -> window.holds(slowest)) ? slowest : alone.longestS()));
+        }
+        return all;
     }
 
     /** Shortest time since a step, or 1/ω of the highest frequency, s. */

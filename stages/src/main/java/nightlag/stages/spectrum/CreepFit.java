@@ -1,6 +1,5 @@
 package nightlag.stages.spectrum;
 
-import java.util.ArrayList;
 import java.util.Arrays;
 import java.util.Comparator;
 import java.util.List;
@@ -9,16 +8,15 @@ import java.util.stream.IntStream;
 import java.util.stream.Stream;
 import nightlag.stages.fault.ReductionFault;
 import nightlag.stages.moduli.CreepCurve;
-import nightlag.stages.moduli.ModulusReading;
 import nightlag.stages.numeric.LevenbergMarquardt;
-import nightlag.stages.numeric.NonNegativeLeastSquares;
 
 /**
  * Creep curves, and complex moduli of the same material, to one discrete retardation spectrum. Strains after any steps of
  * stress and compliances 1/G* are both linear in J0, 1/η0 and the strengths, so both stand in one non-negative least-squares
  * problem (Lawson &amp; Hanson 1974) on a fine grid of times; neighbours are merged, strengths and times refined together, and
  * modes taken away one at a time, each time the one that is missed least, down to the set with the smallest
- * χ²/s² + p ln m (Schwarz, Ann. Stat. 6 (1978) 461).
+ * χ²/s² + p ln m (Schwarz, Ann. Stat. 6 (1978) 461). Where curves were shifted here from other temperatures, the errors of
+ * the shifts are refined with it, within their own uncertainty.
  */
 public final class CreepFit {
     private static final int LEAST_READINGS = 8;
@@ -32,42 +30,52 @@ public final class CreepFit {
     private static final int STEPS_WHILE_SEARCHING = 30;
     private static final int STEPS_AT_LAST = 200;
     private static final double SMALLEST_STRENGTH = 1e-12;
+    /** How stiffly neighbours are kept in a smooth row where more modes are asked for than the readings tell apart. */
+    private static final double SPRING = 0.3;
 
+    private final CreepRows rows;
     private final ComplianceReadings readings;
-    private final boolean liquid;
     private final double shortest;
     private final double longest;
-    private final double[] target;
 
-    private CreepFit(ComplianceReadings readings, boolean liquid) {
-        this.readings = readings;
-        this.liquid = liquid;
+    private CreepFit(CreepRows rows, CreepData data) {
+        this.rows = rows;
+        this.readings = rows.at(new double[data.moves()]);
         this.shortest = FASTEST * readings.shortestS();
         this.longest = SLOWEST * readings.longestS();
-        this.target = readings.target();
+    }
+
+    /** Fits one spectrum to creep curves of one temperature. */
+    public static CreepSpectrum fit(List<CreepCurve> curves, SpectrumPlan plan) throws ReductionFault {
+        return fit(CreepData.of(ShiftedCreep.unmoved(curves)), plan);
     }
 
     /**
      * Fits one spectrum to all.
      *
-     * @param curves usable curves that begin at rest, of one temperature and one kind of deformation
-     * @param moduli moduli at that temperature, each with a covariance; may be empty
-     * @param plan what is wanted; a fixed number of modes is an upper bound here
+     * @param plan what is wanted; a fixed number of modes is that of the relaxation modes
      * @throws ReductionFault if there are too few readings
      */
-    public static CreepSpectrum fit(List<CreepCurve> curves, List<ModulusReading> moduli, SpectrumPlan plan)
-            throws ReductionFault {
-        ComplianceReadings readings = ComplianceReadings.of(curves, moduli);
-        if (readings.rows() < LEAST_READINGS) {
-            throw new ReductionFault(SpectrumReason.CREEP_TOO_FEW_READINGS.with(readings.rows(), LEAST_READINGS));
+    public static CreepSpectrum fit(CreepData data, SpectrumPlan plan) throws ReductionFault {
+        CreepRows rows = new CreepRows(data, !plan.fitEquilibrium());
+        if (rows.readings() < LEAST_READINGS) {
+            throw new ReductionFault(SpectrumReason.CREEP_TOO_FEW_READINGS.with(rows.readings(), LEAST_READINGS));
         }
-        CreepFit fit = new CreepFit(readings, !plan.fitEquilibrium());
-        FittedCompliance best = fit.best(fit.mergedGrid(), plan.modes());
-        FittedCompliance last = fit.refined(best, STEPS_AT_LAST);
+        int mostModes = rows.readings() / 2;
+        if (plan.modes().isPresent() && plan.modes().getAsInt() > mostModes) {
+            throw new ReductionFault(
+                    SpectrumReason.CREEP_TOO_MANY_MODES.with(plan.modes().getAsInt(), rows.readings(), mostModes));
+        }
+        FittedCompliance last = new CreepFit(rows, data).find(plan.modes());
         if (!(last.instantaneous() > 0) && last.count() < 2) {
             throw new ReductionFault(SpectrumReason.CREEP_NO_INSTANTANEOUS.with());
         }
-        return new CreepSpectrum(readings, fit.jacobian(last), last, !moduli.isEmpty());
+        return new CreepSpectrum(data, rows, last, plan.modes());
+    }
+
+    private FittedCompliance find(OptionalInt wanted) {
+        FittedCompliance richest = mergedGrid();
+        return wanted.isPresent() ? withExactly(wanted.getAsInt(), richest) : refined(best(richest), 0, STEPS_AT_LAST);
     }
 
     private FittedCompliance mergedGrid() {
@@ -75,18 +83,16 @@ public final class CreepFit {
         double[] grid = IntStream.rangeClosed(0, steps)
                 .mapToDouble(i -> shortest * Math.pow(longest / shortest, (double) i / steps))
                 .toArray();
-        FittedCompliance fine = strengthsAt(grid);
+        double[] moves = rows.aligned(grid);
+        FittedCompliance fine = rows.strengthsAt(grid, moves);
         List<Double> times = MergedGrid.times(grid, fine.strengths());
-        return fitted(times.stream().mapToDouble(Double::doubleValue).toArray());
+        return refinedInUse(
+                rows.strengthsAt(times.stream().mapToDouble(Double::doubleValue).toArray(), moves));
     }
 
-    private FittedCompliance best(FittedCompliance richest, OptionalInt most) {
-        double free = Math.max(1, readings.rows() - richest.parameters());
-        double variance = Math.max(1, richest.chiSquared() / free);
+    private FittedCompliance best(FittedCompliance richest) {
+        double variance = variance(richest);
         FittedCompliance current = richest;
-        while (most.isPresent() && current.count() > Math.max(1, most.getAsInt())) {
-            current = withOneLess(current);
-        }
         FittedCompliance best = current;
         while (current.count() > 0) {
             current = withOneLess(current);
@@ -97,15 +103,61 @@ public final class CreepFit {
         return best;
     }
 
+    /** Of the residuals; not below that of the readings' own uncertainty. */
+    private double variance(FittedCompliance modes) {
+        return Math.max(1, modes.chiSquared() / Math.max(1, rows.count() - modes.parameters()));
+    }
+
     private double cost(FittedCompliance modes, double variance) {
-        return modes.chiSquared() / variance + modes.parameters() * Math.log(readings.rows());
+        return modes.chiSquared() / variance + modes.parameters() * Math.log(rows.count());
+    }
+
+    /** Down the ladder to the number wanted; where it begins below that, more than the readings ask for. */
+    private FittedCompliance withExactly(int wanted, FittedCompliance richest) {
+        FittedCompliance current = richest;
+        while (current.relaxationModes() > wanted && current.count() > 0) {
+            current = withOneLess(current);
+        }
+        return current.relaxationModes() == wanted ? refined(current, 0, STEPS_AT_LAST) : spread(wanted, best(richest));
+    }
+
+    /**
+     * More modes than the readings ask for: evenly spread in ln λ over the times of a set that fits, strengths read from that
+     * set's loss compliance, then refined with weak springs that keep neighbours in ln j and ln λ in a smooth row, for the
+     * readings no longer tell them apart.
+     */
+    private FittedCompliance spread(int wanted, FittedCompliance fitting) {
+        RetardationModes material = CreepSpectrum.modes(fitting);
+        double[] ofFitting = material.timesS();
+        int count = wanted - (material.isLiquid() ? 1 : 0);
+        double fastest = ofFitting.length > 1 ? ofFitting[0] : readings.shortestS();
+        double slowest = ofFitting.length > 1 ? ofFitting[ofFitting.length - 1] : readings.longestS();
+        double step = count > 1 ? Math.log(slowest / fastest) / (count - 1) : 1;
+        double[] times = IntStream.range(0, count)
+                .mapToDouble(i -> count > 1 ? fastest * Math.exp(i * step) : Math.sqrt(fastest * slowest))
+                .toArray();
+        double[] strengths = Arrays.stream(times)
+                .map(time -> -material.compliancePerPa(1 / time).im() - material.fluidityPerPaS() * time)
+                .map(loss -> Math.max(loss, SMALLEST_STRENGTH * material.recoverablePerPa())
+                        * 2
+                        / Math.PI
+                        * Math.min(step, 1))
+                .toArray();
+        FittedCompliance start = new FittedCompliance(
+                times,
+                strengths,
+                material.instantaneousPerPa(),
+                material.fluidityPerPaS(),
+                fitting.moves(),
+                Double.NaN);
+        return refined(start, SPRING * Math.sqrt(variance(fitting)), STEPS_AT_LAST);
     }
 
     private FittedCompliance withOneLess(FittedCompliance current) {
         Stream<double[]> merged = IntStream.range(0, current.count() - 1).mapToObj(current::timesMerged);
         Stream<double[]> dropped = IntStream.range(0, current.count()).mapToObj(current::timesWithout);
         return Stream.concat(merged, dropped)
-                .map(this::strengthsAt)
+                .map(times -> rows.strengthsAt(times, current.moves()))
                 .sorted(Comparator.comparingDouble(FittedCompliance::chiSquared))
                 .limit(CANDIDATES)
                 .map(this::refinedInUse)
@@ -113,36 +165,16 @@ public final class CreepFit {
                 .orElseThrow();
     }
 
-    private FittedCompliance fitted(double[] times) {
-        return refinedInUse(strengthsAt(times));
-    }
-
     private FittedCompliance refinedInUse(FittedCompliance linear) {
         double[] inUse = linear.timesInUse();
-        return refined(inUse.length == linear.count() ? linear : strengthsAt(inUse), STEPS_WHILE_SEARCHING);
+        return refined(
+                inUse.length == linear.count() ? linear : rows.strengthsAt(inUse, linear.moves()),
+                0,
+                STEPS_WHILE_SEARCHING);
     }
 
-    private FittedCompliance strengthsAt(double[] times) {
-        List<double[]> columns = new ArrayList<>();
-        for (double time : times) {
-            columns.add(readings.mode(time));
-        }
-        columns.add(readings.instantaneous());
-        if (liquid) {
-            columns.add(readings.flow());
-        }
-        double[] solution = NonNegativeLeastSquares.solve(columns.toArray(new double[0][]), target);
-        FittedCompliance modes = new FittedCompliance(
-                times.clone(),
-                Arrays.copyOf(solution, times.length),
-                solution[times.length],
-                liquid ? solution[times.length + 1] : 0,
-                Double.NaN);
-        return modes.sorted(square(residuals(modes)));
-    }
-
-    private FittedCompliance refined(FittedCompliance start, int steps) {
-        double[] place = start.logarithms();
+    private FittedCompliance refined(FittedCompliance start, double spring, int steps) {
+        double[] place = start.place();
         if (place.length == 0 || Arrays.stream(start.strengths()).anyMatch(strength -> !(strength > 0))) {
             return start;
         }
@@ -158,66 +190,55 @@ public final class CreepFit {
             place[start.count() + i] =
                     Math.min(Math.log(longest), Math.max(Math.log(shortest), place[start.count() + i]));
         }
-        LevenbergMarquardt.Fit fit = LevenbergMarquardt.minimise(
-                new LevenbergMarquardt.Problem() {
-                    @Override
-                    public double[] residuals(double[] p) {
-                        return CreepFit.this.residuals(start.at(p));
-                    }
-
-                    @Override
-                    public double[][] jacobian(double[] p) {
-                        return CreepFit.this.jacobian(start.at(p));
-                    }
-                },
-                place,
-                lower,
-                upper,
-                ENOUGH,
-                steps);
+        LevenbergMarquardt.Fit fit =
+                LevenbergMarquardt.minimise(new Model(start, spring), place, lower, upper, ENOUGH, steps);
         FittedCompliance found = start.at(fit.parameters());
-        return found.sorted(square(residuals(found)));
+        return found.sorted(CreepRows.square(rows.residuals(found)));
     }
 
-    private double[] residuals(FittedCompliance modes) {
-        double[] residuals = Arrays.stream(target).map(value -> -value).toArray();
-        for (int i = 0; i < modes.count(); i++) {
-            add(residuals, readings.mode(modes.times()[i]), modes.strengths()[i]);
-        }
-        add(residuals, readings.instantaneous(), modes.instantaneous());
-        add(residuals, readings.flow(), modes.fluidity());
-        return residuals;
-    }
+    /** Residuals of the readings, followed by those of the springs where there are any. */
+    private final class Model implements LevenbergMarquardt.Problem {
+        private final FittedCompliance start;
+        private final double spring;
+        private final int springs;
 
-    private static void add(double[] sum, double[] column, double factor) {
-        for (int row = 0; row < sum.length; row++) {
-            sum[row] += factor * column[row];
+        Model(FittedCompliance start, double spring) {
+            this.start = start;
+            this.spring = spring;
+            this.springs = spring > 0 ? Math.max(0, start.count() - 2) : 0;
         }
-    }
 
-    /** Derivatives of the rows by the logarithms of what is fitted. */
-    private double[][] jacobian(FittedCompliance modes) {
-        int count = modes.count();
-        double[][] jacobian = new double[modes.parameters()][];
-        for (int i = 0; i < count; i++) {
-            jacobian[i] = scaled(readings.mode(modes.times()[i]), modes.strengths()[i]);
-            jacobian[count + i] = scaled(readings.modeByLogTime(modes.times()[i]), modes.strengths()[i]);
+        @Override
+        public double[] residuals(double[] p) {
+            int count = start.count();
+            double[] residuals = Arrays.copyOf(rows.residuals(start.at(p)), rows.count() + 2 * springs);
+            for (int k = 0; k < springs; k++) {
+                residuals[rows.count() + k] = spring * (p[k] - 2 * p[k + 1] + p[k + 2]);
+                residuals[rows.count() + springs + k] =
+                        spring * (p[count + k] - 2 * p[count + k + 1] + p[count + k + 2]);
+            }
+            return residuals;
         }
-        int next = 2 * count;
-        if (modes.instantaneous() > 0) {
-            jacobian[next++] = scaled(readings.instantaneous(), modes.instantaneous());
-        }
-        if (modes.fluidity() > 0) {
-            jacobian[next] = scaled(readings.flow(), modes.fluidity());
-        }
-        return jacobian;
-    }
 
-    private static double[] scaled(double[] column, double factor) {
-        return Arrays.stream(column).map(value -> factor * value).toArray();
-    }
-
-    private static double square(double[] residuals) {
-        return Arrays.stream(residuals).map(r -> r * r).sum();
+        @Override
+        public double[][] jacobian(double[] p) {
+            double[][] jacobian = rows.jacobian(start.at(p));
+            if (springs == 0) {
+                return jacobian;
+            }
+            for (int j = 0; j < jacobian.length; j++) {
+                jacobian[j] = Arrays.copyOf(jacobian[j], rows.count() + 2 * springs);
+            }
+            for (int part = 0; part < 2; part++) {
+                for (int k = 0; k < springs; k++) {
+                    int row = rows.count() + part * springs + k;
+                    int first = part * start.count() + k;
+                    jacobian[first][row] = spring;
+                    jacobian[first + 1][row] = -2 * spring;
+                    jacobian[first + 2][row] = spring;
+                }
+            }
+            return jacobian;
+        }
     }
 }

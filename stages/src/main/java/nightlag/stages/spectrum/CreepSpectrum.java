@@ -4,7 +4,10 @@ import java.util.ArrayList;
 import java.util.Arrays;
 import java.util.List;
 import java.util.Locale;
+import java.util.Optional;
 import java.util.OptionalDouble;
+import java.util.OptionalInt;
+import java.util.function.Function;
 import java.util.function.ToDoubleFunction;
 import nightlag.stages.fault.Reason;
 import nightlag.stages.moduli.Marker;
@@ -14,7 +17,7 @@ import nightlag.stages.numeric.LinearisedUncertainty;
  * The retardation modes fitted to creep curves, or to these and moduli together, the relaxation modes that are their exact
  * inverse, and what follows.
  */
-public final class CreepSpectrum {
+public final class CreepSpectrum implements FittedSpectrum {
     /** What a logarithm is known to before the data. */
     private static final double PRIOR_U_OF_LOGARITHM = 10;
 
@@ -22,27 +25,47 @@ public final class CreepSpectrum {
     /** A slowest mode beyond this share of the longest time cannot be told from flow, or from what comes later. */
     private static final double LATEST = 0.5;
 
+    /** How far beyond the last time an unseen mode sits. */
+    private static final double REACH = Math.pow(10, 1.5);
+    /** A shift this many of its uncertainties off is said. */
+    private static final double SHIFT_OFF = 3;
+
+    private final CreepData data;
+    private final ComplianceReadings readings;
     private final FittedCompliance fitted;
     private final RetardationModes retardation;
+    private final RelaxationModes relaxation;
     private final LinearisedUncertainty linearised;
     private final double scatter;
-    private final boolean withModuli;
-    private final double longestS;
+    private final List<RelaxationModes> alternatives;
+    private final OptionalInt wanted;
 
-    CreepSpectrum(ComplianceReadings readings, double[][] jacobian, FittedCompliance fitted, boolean withModuli) {
+    /**
+     * What a fit gave.
+     *
+     * @param wanted the number of relaxation modes asked for
+     */
+    CreepSpectrum(CreepData data, CreepRows rows, FittedCompliance fitted, OptionalInt wanted) {
+        this.data = data;
+        this.readings = rows.at(fitted.moves());
         this.fitted = fitted;
-        this.retardation = modes(fitted);
+        this.wanted = wanted;
+        retardation = modes(fitted);
+        relaxation = retardation.relaxation();
         double[] priors = new double[fitted.parameters()];
         Arrays.fill(priors, PRIOR_U_OF_LOGARITHM);
-        this.linearised = new LinearisedUncertainty(jacobian, priors);
-        int free = readings.rows() - fitted.parameters();
-        this.scatter = free > 0 ? Math.max(1, Math.sqrt(fitted.chiSquared() / free)) : 1;
-        this.withModuli = withModuli;
-        this.longestS = readings.longestS();
+        linearised = new LinearisedUncertainty(rows.jacobian(fitted), priors);
+        int free = rows.count() - fitted.parameters();
+        scatter = free > 0 ? Math.max(1, Math.sqrt(fitted.chiSquared() / free)) : 1;
+        alternatives = endsInside()
+                ? List.of()
+                : List.of(modes(rows.withUnseen(
+                                fitted, REACH * readings.longestS(), fitted.chiSquared() + scatter * scatter))
+                        .relaxation());
     }
 
     /** Where no J0 is seen the fastest mode takes its place: nothing read tells the two apart. */
-    private static RetardationModes modes(FittedCompliance fitted) {
+    static RetardationModes modes(FittedCompliance fitted) {
         if (fitted.instantaneous() > 0) {
             return RetardationModes.of(fitted.instantaneous(), fitted.fluidity(), fitted.times(), fitted.strengths());
         }
@@ -54,28 +77,70 @@ public final class CreepSpectrum {
     }
 
     /** The fitted modes. */
+    @Override
     public RetardationModes retardation() {
         return retardation;
     }
 
-    /** Both sets as rows. */
-    public List<SpectrumRow> rows(double temperatureK) {
-        return SpectrumRow.discrete(temperatureK, retardation.relaxation(), retardation);
+    /** Their exact inverse. */
+    @Override
+    public RelaxationModes relaxation() {
+        return relaxation;
+    }
+
+    @Override
+    public SupportedWindow window() {
+        return new SupportedWindow(
+                readings.windows().stream()
+                        .mapToDouble(SupportedWindow::shortestS)
+                        .min()
+                        .orElseThrow(),
+                readings.windows().stream()
+                        .mapToDouble(SupportedWindow::longestS)
+                        .max()
+                        .orElseThrow());
+    }
+
+    @Override
+    public boolean supports(double timeS) {
+        return readings.windows().stream().anyMatch(window -> window.holds(timeS));
+    }
+
+    /** The readings it was fitted to, brought to its temperature as the fit found best. */
+    ComplianceReadings readings() {
+        return readings;
+    }
+
+    @Override
+    public Optional<double[]> uncertainties(Function<RelaxationModes, double[]> figures) {
+        double[] values = figures.apply(relaxation);
+        double[][] derivatives = derivatives(values.length, modes -> figures.apply(modes.relaxation()));
+        List<double[]> others = alternatives.stream().map(figures).toList();
+        double[] u = new double[values.length];
+        for (int k = 0; k < u.length; k++) {
+            double square = Math.pow(scatter * linearised.of(derivatives[k]), 2);
+            for (double[] other : others) {
+                square += Math.pow(other[k] - values[k], 2);
+            }
+            u[k] = Math.sqrt(square);
+        }
+        return Optional.of(u);
     }
 
     /** The figures that complete the sets: J0 and G(0); of a liquid η0, Je0 and the mean time; of a solid Ge. */
+    @Override
     public List<Marker> markers(double temperatureK) {
         List<Marker> markers = new ArrayList<>();
         markers.add(marker(
                 "instantaneous_compliance",
                 "1/Pa",
-                "fitted together with the modes",
+                "fitted together with the modes" + fastEnd(),
                 temperatureK,
                 RetardationModes::instantaneousPerPa));
         markers.add(marker(
                 "instantaneous_modulus",
                 "Pa",
-                "one over the instantaneous compliance",
+                "one over the instantaneous compliance" + fastEnd(),
                 temperatureK,
                 modes -> 1 / modes.instantaneousPerPa()));
         if (!endsInside()) {
@@ -111,16 +176,25 @@ public final class CreepSpectrum {
         return markers;
     }
 
-    /** What the record is too short for. */
+    /** What the record is too short for, and what does not go with what was expected. */
     public List<Reason> notes() {
-        return endsInside()
-                ? List.of()
-                : List.of(SpectrumReason.CREEP_END_NOT_REACHED.with(
-                        retardation.timesS()[retardation.count() - 1], longestS));
+        List<Reason> notes = new ArrayList<>();
+        if (!endsInside()) {
+            notes.add(SpectrumReason.CREEP_END_NOT_REACHED.with(
+                    retardation.timesS()[retardation.count() - 1], readings.longestS()));
+        }
+        if (wanted.isPresent() && wanted.getAsInt() != relaxation.count()) {
+            notes.add(SpectrumReason.CREEP_OTHER_NUMBER_OF_MODES.with(wanted.getAsInt(), relaxation.count()));
+        }
+        data.furthestOff(fitted.moves())
+                .filter(off -> Math.abs(off.decades()) > SHIFT_OFF * off.u())
+                .ifPresent(off -> notes.add(SpectrumReason.CREEP_SHIFT_OFF.with(off.decades(), off.u())));
+        return notes;
     }
 
     private boolean endsInside() {
-        return retardation.count() == 0 || retardation.timesS()[retardation.count() - 1] <= LATEST * longestS;
+        return retardation.count() == 0
+                || retardation.timesS()[retardation.count() - 1] <= LATEST * readings.longestS();
     }
 
     private Marker marker(
@@ -144,22 +218,32 @@ public final class CreepSpectrum {
                         method,
                         retardation.count(),
                         retardation.count() == 1 ? "" : "s",
-                        withModuli ? "creep and oscillation together" : "creep"));
+                        data.words()));
+    }
+
+    private String fastEnd() {
+        return String.format(Locale.ROOT, ", what yields before %.3g s counted in", readings.shortestS());
     }
 
     private double u(ToDoubleFunction<RetardationModes> figure) {
-        double[] place = fitted.logarithms();
-        double[] derivatives = new double[place.length];
-        for (int i = 0; i < place.length; i++) {
-            derivatives[i] =
-                    (figure.applyAsDouble(moved(place, i, STEP)) - figure.applyAsDouble(moved(place, i, -STEP)))
-                            / (2 * STEP);
-        }
-        return scatter * linearised.of(derivatives);
+        return scatter * linearised.of(derivatives(1, modes -> new double[] {figure.applyAsDouble(modes)})[0]);
     }
 
-    private RetardationModes moved(double[] place, int parameter, double step) {
-        double[] there = place.clone();
+    /** Of figures by all that was fitted; a shift is in none of them. */
+    private double[][] derivatives(int count, Function<RetardationModes, double[]> figures) {
+        double[][] derivatives = new double[count][fitted.parameters()];
+        for (int i = 0; i < fitted.ofSpectrum(); i++) {
+            double[] above = figures.apply(moved(i, STEP));
+            double[] below = figures.apply(moved(i, -STEP));
+            for (int k = 0; k < count; k++) {
+                derivatives[k][i] = (above[k] - below[k]) / (2 * STEP);
+            }
+        }
+        return derivatives;
+    }
+
+    private RetardationModes moved(int parameter, double step) {
+        double[] there = fitted.place();
         there[parameter] += step;
         return modes(fitted.at(there));
     }

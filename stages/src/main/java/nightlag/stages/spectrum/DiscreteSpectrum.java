@@ -7,11 +7,10 @@ import java.util.Optional;
 import java.util.OptionalDouble;
 import java.util.function.Function;
 import java.util.function.ToDoubleFunction;
-import java.util.stream.IntStream;
 import nightlag.stages.moduli.Marker;
 
 /** The relaxation modes fitted to readings, the retardation modes that are their exact inverse, and what follows from both. */
-public final class DiscreteSpectrum {
+public final class DiscreteSpectrum implements FittedSpectrum {
     private final RelaxationModes relaxation;
     private final RetardationModes retardation;
     private final SupportedWindow window;
@@ -35,18 +34,26 @@ public final class DiscreteSpectrum {
     }
 
     /** The fitted modes. */
+    @Override
     public RelaxationModes relaxation() {
         return relaxation;
     }
 
     /** Their exact inverse. */
+    @Override
     public RetardationModes retardation() {
         return retardation;
     }
 
     /** The times the data support. */
+    @Override
     public SupportedWindow window() {
         return window;
+    }
+
+    @Override
+    public boolean supports(double timeS) {
+        return window.holds(timeS);
     }
 
     /** How the errors were taken to grow, where the readings had none of their own. */
@@ -63,29 +70,16 @@ public final class DiscreteSpectrum {
      * Standard uncertainty of each of several figures drawn from the modes, by the fit's covariance and by modes that the data do
      * not show; empty where the readings came without u and leave no scatter to take one from.
      */
+    @Override
     public Optional<double[]> uncertainties(Function<RelaxationModes, double[]> figures) {
         return uncertainty.ofEach(figures);
-    }
-
-    /** The relaxation modes as parts of the instantaneous modulus Ge + Σ g, times rising. */
-    public List<RelativeMode> relativeModes(double temperatureK) {
-        double whole = relaxation.instantaneousModulusPa();
-        double[] strengths = relaxation.strengthsPa();
-        return IntStream.range(0, relaxation.count())
-                .mapToObj(i -> new RelativeMode(
-                        temperatureK, i + 1, strengths[i] / whole, relaxation.timesS()[i]))
-                .toList();
-    }
-
-    /** Both sets as rows, relaxation first, times rising. */
-    public List<SpectrumRow> rows(double temperatureK) {
-        return SpectrumRow.discrete(temperatureK, relaxation, retardation);
     }
 
     /**
      * The figures that complete the two sets, and those that follow: Ge, G(0), J(0) and, for a liquid, η0 = Σ gτ, Je0 =
      * Σ gτ²/η0² and the mean time Σ gτ²/Σ gτ. With the rows they make s·Ĝ(s) and s·Ĵ(s) exact inverses.
      */
+    @Override
     public List<Marker> markers(double temperatureK) {
         List<Marker> markers = new ArrayList<>();
         if (relaxation.isLiquid()) {

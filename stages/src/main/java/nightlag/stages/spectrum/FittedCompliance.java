@@ -10,16 +10,28 @@ import java.util.stream.IntStream;
  * @param strengths j in 1/Pa, not negative
  * @param instantaneous J0 in 1/Pa, 0 for none
  * @param fluidity 1/η0 in 1/(Pa·s), 0 for none
+ * @param moves how far the shifts of the creep curves are off, see {@link CreepData}
  * @param chiSquared sum of squared weighted residuals
  */
-record FittedCompliance(double[] times, double[] strengths, double instantaneous, double fluidity, double chiSquared) {
+record FittedCompliance(
+        double[] times, double[] strengths, double instantaneous, double fluidity, double[] moves, double chiSquared) {
     int count() {
         return times.length;
     }
 
+    /** How many numbers of the spectrum were fitted. */
+    int ofSpectrum() {
+        return 2 * count() + (instantaneous > 0 ? 1 : 0) + (fluidity > 0 ? 1 : 0);
+    }
+
     /** How many numbers were fitted. */
     int parameters() {
-        return 2 * count() + (instantaneous > 0 ? 1 : 0) + (fluidity > 0 ? 1 : 0);
+        return ofSpectrum() + moves.length;
+    }
+
+    /** How many relaxation modes this makes: where there is no J0 the fastest mode takes its place. */
+    int relaxationModes() {
+        return count() - (instantaneous > 0 ? 0 : 1) + (fluidity > 0 ? 1 : 0);
     }
 
     /** The times of the modes that have a strength. */
@@ -46,8 +58,8 @@ record FittedCompliance(double[] times, double[] strengths, double instantaneous
         return result;
     }
 
-    /** ln j, ln λ, then ln J0 and ln 1/η0 where they are there. */
-    double[] logarithms() {
+    /** ln j, ln λ, then ln J0 and ln 1/η0 where they are there, then the moves. */
+    double[] place() {
         double[] all = new double[parameters()];
         for (int i = 0; i < count(); i++) {
             all[i] = Math.log(strengths[i]);
@@ -60,18 +72,25 @@ record FittedCompliance(double[] times, double[] strengths, double instantaneous
         if (fluidity > 0) {
             all[next] = Math.log(fluidity);
         }
+        System.arraycopy(moves, 0, all, ofSpectrum(), moves.length);
         return all;
     }
 
-    /** The set of as many modes that has these logarithms. */
-    FittedCompliance at(double[] logarithms) {
+    /** The set of as many modes that has its place there. */
+    FittedCompliance at(double[] place) {
         int n = count();
         int next = 2 * n;
-        double[] values = Arrays.stream(logarithms).map(Math::exp).toArray();
+        double[] values =
+                Arrays.stream(place).limit(ofSpectrum()).map(Math::exp).toArray();
         double j0 = instantaneous > 0 ? values[next++] : 0;
         double phi = fluidity > 0 ? values[next] : 0;
         return new FittedCompliance(
-                Arrays.copyOfRange(values, n, 2 * n), Arrays.copyOf(values, n), j0, phi, Double.NaN);
+                Arrays.copyOfRange(values, n, 2 * n),
+                Arrays.copyOf(values, n),
+                j0,
+                phi,
+                Arrays.copyOfRange(place, ofSpectrum(), place.length),
+                Double.NaN);
     }
 
     /** The same with its modes in the order of their times. */
@@ -86,6 +105,7 @@ record FittedCompliance(double[] times, double[] strengths, double instantaneous
                 IntStream.of(order).mapToDouble(i -> strengths[i]).toArray(),
                 instantaneous,
                 fluidity,
+                moves,
                 ofChiSquared);
     }
 }

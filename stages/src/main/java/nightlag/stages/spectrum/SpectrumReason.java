@@ -25,6 +25,20 @@ public enum SpectrumReason implements ReasonCode {
     CREEP_TOO_FEW_READINGS("no spectrum of the creep curves: {0} readings (at least {1} are needed)"),
     /** Nothing. */
     CREEP_NO_INSTANTANEOUS("no spectrum of the creep curves: neither an instantaneous compliance nor modes are seen"),
+    /** Modes wanted, readings there, most modes. */
+    CREEP_TOO_MANY_MODES(
+            "no spectrum of the creep curves: {0} modes are asked for, but {1} readings carry at most {2}"),
+    /** Modes wanted, modes found. */
+    CREEP_OTHER_NUMBER_OF_MODES(
+            "creep: {0} modes are asked for, but the readings carry {1} whose strength is not zero"),
+    /** Nothing. */
+    CREEP_MODULI_WITHOUT_U(
+            "creep and moduli are not fitted together: moduli came without u, and there are too few of them to take one from their"
+                    + " scatter; the modes are those of the creep curves"),
+    /** How far off, its u, decades. */
+    CREEP_SHIFT_OFF(
+            "creep shifted from another temperature lies {0} decades beside where the shift factors put it, their u is {1}: the"
+                    + " creep does not go with the oscillation"),
     /** Slowest mode, longest time, s. */
     CREEP_END_NOT_REACHED(
             "creep: the slowest mode, {0} s, is not over within the {1} s measured: no viscosity, no steady-state compliance and"

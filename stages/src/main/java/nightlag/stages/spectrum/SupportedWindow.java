@@ -14,4 +14,9 @@ public record SupportedWindow(double shortestS, double longestS) {
         double edge = Math.exp(Math.PI / 2);
         return new SupportedWindow(edge / highest, 1 / (edge * lowest));
     }
+
+    /** Whether a time in s is one of them. */
+    boolean holds(double timeS) {
+        return timeS >= shortestS && timeS <= longestS;
+    }
 }

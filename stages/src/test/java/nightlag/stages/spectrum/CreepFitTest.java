@@ -116,7 +116,7 @@ class CreepFitTest {
 
     @Test
     void aBurgersBodyComesBackFromItsCreep() throws ReductionFault {
-        CreepSpectrum spectrum = CreepFit.fit(List.of(curve(BURGERS, 0.01, 100, 100, 0, 1)), List.of(), LIQUID);
+        CreepSpectrum spectrum = CreepFit.fit(List.of(curve(BURGERS, 0.01, 100, 100, 0, 1)), LIQUID);
         requireModes(spectrum.retardation(), BURGERS, 1e-3);
         // its exact inverse, published with it
         RelaxationModes relaxation = spectrum.retardation().relaxation();
@@ -126,7 +126,7 @@ class CreepFitTest {
 
     @Test
     void aStandardLinearSolidComesBackFromCreepAndRecovery() throws ReductionFault {
-        CreepSpectrum spectrum = CreepFit.fit(List.of(curve(STANDARD_SOLID, 0.1, 200, 500, 0, 1)), List.of(), SOLID);
+        CreepSpectrum spectrum = CreepFit.fit(List.of(curve(STANDARD_SOLID, 0.1, 200, 500, 0, 1)), SOLID);
         requireModes(spectrum.retardation(), STANDARD_SOLID, 1e-3);
         assertThat(spectrum.markers(298.15))
                 .filteredOn(marker -> marker.property().equals("equilibrium_modulus"))
@@ -137,7 +137,7 @@ class CreepFitTest {
     @ParameterizedTest(name = "seed {0}")
     @ValueSource(longs = {1, 2, 3, 4, 5, 6, 7, 8})
     void uncertaintiesCoverTheTruth(long seed) throws ReductionFault {
-        CreepSpectrum spectrum = CreepFit.fit(List.of(curve(BURGERS, 0.01, 100, 200, 0.01, seed)), List.of(), LIQUID);
+        CreepSpectrum spectrum = CreepFit.fit(List.of(curve(BURGERS, 0.01, 100, 200, 0.01, seed)), LIQUID);
         Marker viscosity = spectrum.markers(298.15).stream()
                 .filter(marker -> marker.property().equals("zero_shear_viscosity"))
                 .findFirst()
@@ -158,17 +158,18 @@ class CreepFitTest {
                 1e-9, 1e-12, new double[] {1e-3, 1e-1, 10, 1000}, new double[] {1e-9, 3e-9, 1e-8, 3e-8});
         CreepCurve creep = curve(material, 1, 1e5, 1e5, 0.003, 3);
         List<ModulusReading> moduli = moduli(material, 0.1, 1e4, 0.003);
-        CreepSpectrum both = CreepFit.fit(List.of(creep), moduli, LIQUID);
+        CreepSpectrum both =
+                CreepFit.fit(CreepData.of(ShiftedCreep.unmoved(List.of(creep))).with(moduli, Optional.empty()), LIQUID);
         requireModes(both.retardation(), material, 0.05);
         // neither alone has both ends
-        CreepSpectrum alone = CreepFit.fit(List.of(creep), List.of(), LIQUID);
+        CreepSpectrum alone = CreepFit.fit(List.of(creep), LIQUID);
         assertThat(alone.retardation().instantaneousPerPa()).isGreaterThan(2e-9);
     }
 
     @Test
     void aRecordThatEndsTooSoonHasNoViscosityAndSaysWhy() throws ReductionFault {
         RetardationModes slow = RetardationModes.of(1e-6, 0, new double[] {1, 300}, new double[] {1e-6, 5e-6});
-        CreepSpectrum spectrum = CreepFit.fit(List.of(curve(slow, 0.01, 200, 200, 1e-4, 1)), List.of(), SOLID);
+        CreepSpectrum spectrum = CreepFit.fit(List.of(curve(slow, 0.01, 200, 200, 1e-4, 1)), SOLID);
         assertThat(spectrum.notes()).extracting(note -> note.code()).containsExactly("CREEP_END_NOT_REACHED");
         assertThat(spectrum.markers(298.15))
                 .extracting(Marker::property)
