@@ -16,20 +16,51 @@ import nightlag.stages.numeric.Complex;
  */
 final class ComplianceReadings {
     /** What averaging over a twentieth of a decade may leave in a reading. */
-    private static final double LEAST_RELATIVE_U = 2e-4;
+    private static final double LEAST_RELATIVE_U = 5e-5;
+
+    /** Where a bound is drawn from a reading, so many u of it are given away. */
+    private static final double COVERAGE = 2;
+
+    /** A stress below this share of the steps is rest: what is taken off is seldom to the last digit what was put on. */
+    private static final double AT_REST = 0.05;
 
     private final List<CreepRow> creep = new ArrayList<>();
     private final List<Waves> waves = new ArrayList<>();
     private double shortestS = Double.POSITIVE_INFINITY;
     private double longestS;
+    private double largestPerPa;
     private final List<Integer> ends = new ArrayList<>();
     private final List<SupportedWindow> windows = new ArrayList<>();
 
     /** A strain after some steps: their stresses in Pa, the times since each in s. */
-    private record CreepRow(double[] changesPa, double[] sinceS, double strain, double u) {}
+    private record CreepRow(double[] changesPa, double[] sinceS, double strain, double u) {
+        /** What a compliance makes of the steps. */
+        double sum(Kernel kernel) {
+            double sum = 0;
+            for (int k = 0; k < sinceS.length; k++) {
+                sum += changesPa[k] * kernel.at(sinceS[k]);
+            }
+            return sum;
+        }
+
+        /** 1 where the stress was never below rest, −1 where never above it, 0 where both: then parts of a strain may cancel. */
+        double sign() {
+            double stress = 0;
+            double low = 0;
+            double high = 0;
+            for (double change : changesPa) {
+                stress += change;
+                low = Math.min(low, stress);
+                high = Math.max(high, stress);
+            }
+            double trace = AT_REST * (high - low);
+            return low >= -trace ? 1 : high <= trace ? -1 : 0;
+        }
+    }
 
     /** A complex compliance; {@code first}, {@code mixed} and {@code second} make rows of unit variance of it. */
-    private record Waves(double omega, Complex compliance, double first, double mixed, double second) {}
+    private record Waves(
+            double omega, Complex compliance, double first, double mixed, double second, double lossU) {}
 
     /** A function of the time since a step. */
     private interface Kernel {
@@ -66,6 +97,7 @@ final class ComplianceReadings {
             double own = reading.complianceUPerPa()
                     * Math.abs(curve.steps().get(steps - 1).changePa());
             creep.add(new CreepRow(changes, since, strain, Math.max(own, LEAST_RELATIVE_U * Math.abs(strain))));
+            largestPerPa = Math.max(largestPerPa, Math.abs(reading.compliancePerPa()) / b);
             shortest = Math.min(shortest, reading.sinceStepS() / a);
             longest = Math.max(longest, reading.timeS() / a);
         }
@@ -91,7 +123,14 @@ final class ComplianceReadings {
         double both = re * im * a + (re * re - im * im) * b - re * im * c;
         double root = Math.sqrt(varianceRe);
         double left = Math.sqrt(Math.max(1e-12 * varianceIm, varianceIm - both * both / varianceRe));
-        waves.add(new Waves(reading.angularFrequency(), compliance, 1 / root, -both / (varianceRe * left), 1 / left));
+        waves.add(new Waves(
+                reading.angularFrequency(),
+                compliance,
+                1 / root,
+                -both / (varianceRe * left),
+                1 / left,
+                Math.sqrt(varianceIm)));
+        largestPerPa = Math.max(largestPerPa, compliance.abs());
         shortestS = Math.min(shortestS, 1 / reading.angularFrequency());
         longestS = Math.max(longestS, 1 / reading.angularFrequency());
     }
@@ -129,6 +168,24 @@ final class ComplianceReadings {
         return all;
     }
 
+    /** The times that fix a density: the last of a creep curve tell less of it than of the compliance itself. */
+    SupportedWindow windowOfDensity() {
+        List<SupportedWindow> all = new ArrayList<>(
+                windows.stream().map(SupportedWindow::ofDensity).toList());
+        if (!waves.isEmpty()) {
+            DoubleSummaryStatistics omega =
+                    waves.stream().mapToDouble(Waves::omega).summaryStatistics();
+            SupportedWindow alone = SupportedWindow.of(omega.getMin(), omega.getMax());
+            all.addAll(alone.shortestS() < alone.longestS() ? List.of(alone) : List.of());
+        }
+        return all.stream().reduce(SupportedWindow::with).orElseThrow();
+    }
+
+    /** Largest compliance read, 1/Pa. */
+    double largestPerPa() {
+        return largestPerPa;
+    }
+
     /** Shortest time since a step, or 1/ω of the highest frequency, s. */
     double shortestS() {
         return shortestS;
@@ -153,9 +210,15 @@ final class ComplianceReadings {
 
     /** One mode of unit strength. */
     double[] mode(double lambda) {
-        return column(
-                since -> -Math.expm1(-since / lambda),
-                (omega) -> new Complex(1, 0).over(new Complex(1, omega * lambda)));
+        return column(ofMode(lambda), waveOfMode(lambda));
+    }
+
+    private static Kernel ofMode(double lambda) {
+        return since -> -Math.expm1(-since / lambda);
+    }
+
+    private static Response waveOfMode(double lambda) {
+        return omega -> new Complex(1, 0).over(new Complex(1, omega * lambda));
     }
 
     /** Its derivative by ln λ. */
@@ -181,15 +244,64 @@ final class ComplianceReadings {
         Complex at(double omega);
     }
 
+    /** The most a mode can be: all else that makes a strain or a compliance up has the same sign; 1/Pa. */
+    double mostOfMode(double lambda) {
+        return most(ofMode(lambda), waveOfMode(lambda));
+    }
+
+    /** The most J0 can be, 1/Pa. */
+    double mostInstantaneous() {
+        return most(since -> 1, omega -> new Complex(1, 0));
+    }
+
+    /** The most 1/η0 can be, 1/(Pa·s). */
+    double mostFlow() {
+        return most(since -> since, omega -> new Complex(0, -1 / omega));
+    }
+
+    private double most(Kernel kernel, Response response) {
+        double most = Double.POSITIVE_INFINITY;
+        for (CreepRow row : creep) {
+            if (row.sign() != 0) {
+                most = least(most, row.sign() * row.strain() + COVERAGE * row.u(), row.sign() * row.sum(kernel));
+            }
+        }
+        for (Waves row : waves) {
+            Complex part = response.at(row.omega());
+            most = least(most, row.compliance().re() + COVERAGE / row.first(), part.re());
+            most = least(most, -row.compliance().im() + COVERAGE * row.lossU(), -part.im());
+        }
+        return most;
+    }
+
+    private static double least(double most, double room, double part) {
+        return part > 0 && room > 0 ? Math.min(most, room / part) : most;
+    }
+
+    /** The most a relaxation mode can be, as G(t) is at most 1/J(t) and all parts of a modulus are positive; Pa. */
+    double mostOfRelaxation(double tau) {
+        double most = Double.POSITIVE_INFINITY;
+        for (CreepRow row : creep) {
+            double least = row.sign() * row.strain() - COVERAGE * row.u();
+            if (row.sinceS().length == 1 && least > 0) {
+                most = Math.min(most, Math.abs(row.changesPa()[0]) / least * Math.exp(row.sinceS()[0] / tau));
+            }
+        }
+        for (Waves row : waves) {
+            Complex modulus = new Complex(1, 0).over(row.compliance());
+            double u = COVERAGE * modulus.abs() * row.lossU() / row.compliance().abs();
+            Complex part = new Complex(1, 0).over(new Complex(1, -1 / (row.omega() * tau)));
+            most = least(most, modulus.re() + u, part.re());
+            most = least(most, modulus.im() + u, part.im());
+        }
+        return most;
+    }
+
     private double[] column(Kernel kernel, Response response) {
         double[] column = new double[rows()];
         for (int i = 0; i < creep.size(); i++) {
             CreepRow row = creep.get(i);
-            double sum = 0;
-            for (int k = 0; k < row.sinceS().length; k++) {
-                sum += row.changesPa()[k] * kernel.at(row.sinceS()[k]);
-            }
-            column[i] = sum / row.u();
+            column[i] = row.sum(kernel) / row.u();
         }
         for (int i = 0; i < waves.size(); i++) {
             put(column, i, response.at(waves.get(i).omega()));

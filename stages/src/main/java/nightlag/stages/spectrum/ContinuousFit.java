@@ -47,7 +47,8 @@ public final class ContinuousFit {
         DensityFit fit = fitted(moduli, discrete);
         LogTimes times = fit.times();
         DensityFit.Band relaxation = fit.band(PositivityBound.of(moduli, times));
-        DensityFit.Band retardation = fit.conjugateBand(reversed(PositivityBound.of(compliances, times.inverted())));
+        DensityFit.Band retardation =
+                fit.conjugateBand(DensityFit.reversed(PositivityBound.of(compliances, times.inverted())));
         return spectrum(
                 times,
                 relaxation,
@@ -77,8 +78,8 @@ public final class ContinuousFit {
         LogTimes times = inverse.inverted();
         DensityFit.Band retardation =
                 fit.band(PositivityBound.of(compliances, inverse)).reversed();
-        DensityFit.Band relaxation =
-                fit.conjugateBand(reversed(PositivityBound.of(moduli, times))).reversed();
+        DensityFit.Band relaxation = fit.conjugateBand(DensityFit.reversed(PositivityBound.of(moduli, times)))
+                .reversed();
         double equilibriumPa = discrete.relaxation().isLiquid() ? 0 : 1 / fit.sum();
         return spectrum(times, relaxation, retardation, equilibriumPa, lowest(moduli), highest(moduli));
     }
@@ -121,19 +122,11 @@ public final class ContinuousFit {
             double lowest,
             double highest) {
         return new ContinuousSpectrum(
-                density(times, relaxation), density(times, retardation), equilibriumPa, lowest, highest);
-    }
-
-    private static SpectralDensity density(LogTimes times, DensityFit.Band band) {
-        return new SpectralDensity(times.times(), band.values(), band.low(), band.high());
-    }
-
-    private static double[] reversed(double[] array) {
-        double[] result = new double[array.length];
-        for (int i = 0; i < array.length; i++) {
-            result[i] = array[array.length - 1 - i];
-        }
-        return result;
+                relaxation.over(times),
+                retardation.over(times),
+                equilibriumPa,
+                SupportedWindow.of(lowest, highest),
+                new SupportedWindow(1 / highest, 1 / lowest));
     }
 
     private static double lowest(List<ModulusReading> readings) {

@@ -9,40 +9,38 @@ import java.util.stream.IntStream;
  * Both continuous spectra of a material: H(τ) in G(t) = Ge + ∫ H e^{−t/τ} d ln τ and L(λ) in
  * J(t) = J0 + ∫ L (1 − e^{−t/λ}) d ln λ + t/η0.
  *
- * <p>The nodes reach two decades beyond the inverse of the data's frequencies, which the fit needs. What is published ends at
- * these: between them and {@link #window()} the band opens, further out no data speak.
+ * <p>The nodes reach two decades beyond the data's times, which of moduli are the inverse of their frequencies; the fit needs
+ * that. What is published ends at these: between them and {@link #window()} the band opens, further out no data speak.
  */
 public final class ContinuousSpectrum {
     private final SpectralDensity relaxation;
     private final SpectralDensity retardation;
     private final double equilibriumPa;
     private final SupportedWindow window;
-    private final double lowest;
-    private final double highest;
+    private final SupportedWindow published;
 
     /**
      * What a fit gave.
      *
-     * @param lowest lowest angular frequency of the data, rad/s
-     * @param highest highest, rad/s
+     * @param window the times the data support
+     * @param published from the shortest to the longest time of the data themselves
      */
     ContinuousSpectrum(
             SpectralDensity relaxation,
             SpectralDensity retardation,
             double equilibriumPa,
-            double lowest,
-            double highest) {
+            SupportedWindow window,
+            SupportedWindow published) {
         this.relaxation = relaxation;
         this.retardation = retardation;
         this.equilibriumPa = equilibriumPa;
-        this.window = SupportedWindow.of(lowest, highest);
-        this.lowest = lowest;
-        this.highest = highest;
+        this.window = window;
+        this.published = published;
     }
 
     /** The same with another retardation spectrum. */
     ContinuousSpectrum withRetardation(SpectralDensity other) {
-        return new ContinuousSpectrum(relaxation, other, equilibriumPa, lowest, highest);
+        return new ContinuousSpectrum(relaxation, other, equilibriumPa, window, published);
     }
 
     /** H(τ) in Pa per unit of ln τ, over all nodes. */
@@ -79,7 +77,7 @@ public final class ContinuousSpectrum {
         double[] low = density.low();
         double[] high = density.high();
         IntStream.range(0, times.length)
-                .filter(i -> times[i] * highest >= 1 && times[i] * lowest <= 1)
+                .filter(i -> published.holds(times[i]))
                 .forEach(i -> rows.add(new SpectrumRow(
                         temperatureK,
                         kind,

@@ -183,6 +183,10 @@ public final class CreepFit {
         double[] upper = new double[place.length];
         Arrays.fill(lower, Double.NEGATIVE_INFINITY);
         Arrays.fill(upper, Double.POSITIVE_INFINITY);
+        for (int i = 2 * start.count(); i < start.ofSpectrum(); i++) {
+            // a J0 or a flow that the data do not want goes on falling until no double holds it
+            lower[i] = place[i] + Math.log(SMALLEST_STRENGTH);
+        }
         for (int i = 0; i < start.count(); i++) {
             lower[i] = Math.min(place[i], Math.log(SMALLEST_STRENGTH * most));
             lower[start.count() + i] = Math.log(shortest);

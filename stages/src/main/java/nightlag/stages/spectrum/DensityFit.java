@@ -2,6 +2,7 @@ package nightlag.stages.spectrum;
 
 import java.util.Arrays;
 import java.util.List;
+import java.util.function.DoubleFunction;
 import java.util.stream.IntStream;
 import nightlag.stages.moduli.ModulusReading;
 import nightlag.stages.numeric.PivotedCholesky;
@@ -54,30 +55,61 @@ final class DensityFit {
     }
 
     /**
-     * Fits a density.
+     * A figure beside the density.
+     *
+     * @param which which it is
+     * @param column what it adds to each row where it is 1
+     * @param most about the most it can be
+     */
+    record Figure(Beside which, double[] column, double most) {}
+
+    /**
+     * Fits a density to values of Q.
      *
      * @param weighed values with covariances
      * @param beside what is fitted beside it
      */
     static DensityFit of(List<ModulusReading> weighed, List<Beside> beside) {
         WeightedReadings rows = WeightedReadings.byCovariances(weighed);
-        LogTimes times = LogTimes.around(rows.lowestFrequency(), rows.highestFrequency());
+        return of(
+                LogTimes.around(rows.lowestFrequency(), rows.highestFrequency()),
+                rows.target(),
+                rows::mode,
+                rows.largestModulus(),
+                beside.stream()
+                        .map(which -> new Figure(
+                                which,
+                                which == Beside.CONSTANT ? rows.equilibrium() : rows.viscous(),
+                                most(weighed, which)))
+                        .toList());
+    }
+
+    /**
+     * Fits a density to whatever is linear in it.
+     *
+     * @param times where it is sought
+     * @param target what was read, a row each, over its uncertainty
+     * @param mode what a mode of unit strength at a time adds to each row
+     * @param largest about the largest sum of all its strengths
+     * @param figures what is fitted beside it
+     */
+    static DensityFit of(
+            LogTimes times, double[] target, DoubleFunction<double[]> mode, double largest, List<Figure> figures) {
         int nodes = times.count();
-        double[][] columns = new double[nodes + beside.size()][];
+        double[][] columns = new double[nodes + figures.size()][];
         for (int j = 0; j < nodes; j++) {
-            columns[j] = Arrays.stream(rows.mode(times.time(j)))
+            columns[j] = Arrays.stream(mode.apply(times.time(j)))
                     .map(v -> LogTimes.STEP * v)
                     .toArray();
         }
         double[] expected = new double[columns.length];
-        Arrays.fill(expected, 0, nodes, Math.log(rows.largestModulus()) - LOG_BELOW_LARGEST);
-        for (int k = 0; k < beside.size(); k++) {
-            boolean constant = beside.get(k) == Beside.CONSTANT;
-            columns[nodes + k] = constant ? rows.equilibrium() : rows.viscous();
-            expected[nodes + k] = Math.log(most(weighed, beside.get(k))) - LOG_BELOW_MOST;
+        Arrays.fill(expected, 0, nodes, Math.log(largest) - LOG_BELOW_LARGEST);
+        for (int k = 0; k < figures.size(); k++) {
+            columns[nodes + k] = figures.get(k).column();
+            expected[nodes + k] = Math.log(figures.get(k).most()) - LOG_BELOW_MOST;
         }
-        LogPosterior posterior = LogPosterior.of(InverseProblem.of(rows.target(), columns, nodes, expected));
-        return new DensityFit(times, beside, posterior);
+        LogPosterior posterior = LogPosterior.of(InverseProblem.of(target, columns, nodes, expected));
+        return new DensityFit(times, figures.stream().map(Figure::which).toList(), posterior);
     }
 
     /** The most a figure can be beside a positive spectrum, roughly. */
@@ -228,13 +260,19 @@ final class DensityFit {
 
         /** The nodes in the opposite order. */
         Band reversed() {
-            return new Band(reversed(values), reversed(low), reversed(high));
+            return new Band(DensityFit.reversed(values), DensityFit.reversed(low), DensityFit.reversed(high));
         }
 
-        private static double[] reversed(double[] array) {
-            return IntStream.range(0, array.length)
-                    .mapToDouble(i -> array[array.length - 1 - i])
-                    .toArray();
+        /** The same with the times it stands at. */
+        SpectralDensity over(LogTimes times) {
+            return new SpectralDensity(times.times(), values, low, high);
         }
+    }
+
+    /** Numbers in the opposite order: a node at τ stands where one at 1/τ did. */
+    static double[] reversed(double[] array) {
+        return IntStream.range(0, array.length)
+                .mapToDouble(i -> array[array.length - 1 - i])
+                .toArray();
     }
 }

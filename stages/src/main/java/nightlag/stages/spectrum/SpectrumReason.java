@@ -39,6 +39,10 @@ public enum SpectrumReason implements ReasonCode {
     CREEP_SHIFT_OFF(
             "creep shifted from another temperature lies {0} decades beside where the shift factors put it, their u is {1}: the"
                     + " creep does not go with the oscillation"),
+    /** Shortest, longest time, s. */
+    CONTINUOUS_CREEP_TOO_SHORT(
+            "creep: no continuous spectrum: readings from {0} s to {1} s fix it at no time at all (a factor of more than 4.8"
+                    + " is needed)"),
     /** Slowest mode, longest time, s. */
     CREEP_END_NOT_REACHED(
             "creep: the slowest mode, {0} s, is not over within the {1} s measured: no viscosity, no steady-state compliance and"

@@ -243,7 +243,7 @@ class ContinuousFitTest {
     }
 
     /** The worst error inside the window over the peak. */
-    private static double worst(ContinuousSpectrum spectrum, SpectralDensity density, DoubleUnaryOperator truth) {
+    static double worst(ContinuousSpectrum spectrum, SpectralDensity density, DoubleUnaryOperator truth) {
         return Arrays.stream(inside(spectrum))
                         .mapToDouble(
                                 node -> Math.abs(density.values()[node] - truth.applyAsDouble(density.timesS()[node])))

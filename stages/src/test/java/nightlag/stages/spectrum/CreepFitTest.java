@@ -71,6 +71,43 @@ class CreepFitTest {
                 List.of());
     }
 
+    /** The same with the stress the other way. */
+    static CreepCurve upsideDown(CreepCurve curve) {
+        return new CreepCurve(
+                curve.key(),
+                curve.made(),
+                curve.deformation(),
+                curve.temperatureK(),
+                curve.taggedTemperatureK(),
+                curve.fromRest(),
+                curve.steps().stream()
+                        .map(step -> new CreepStep(
+                                step.part(),
+                                step.atS(),
+                                step.atUS(),
+                                step.riseS(),
+                                -step.changePa(),
+                                step.changeUPa(),
+                                -step.strainBefore(),
+                                step.strainBeforeU()))
+                        .toList(),
+                curve.readings().stream()
+                        .map(reading -> new CreepReading(
+                                reading.step(),
+                                reading.timeS(),
+                                reading.sinceStepS(),
+                                -reading.stressPa(),
+                                -reading.strain(),
+                                reading.strainU(),
+                                reading.compliancePerPa(),
+                                reading.complianceUPerPa()))
+                        .toList(),
+                curve.quality(),
+                curve.flags(),
+                curve.samplesUsed(),
+                curve.reasons());
+    }
+
     private static CreepReading reading(
             int step,
             double t,

@@ -1,5 +1,6 @@
 package nightlag.stages.spectrum;
 
+import java.util.Arrays;
 import java.util.List;
 import java.util.Optional;
 import java.util.Random;
@@ -39,6 +40,19 @@ final class KnownSpectra {
                 .toArray();
         RelaxationModes modes = RelaxationModes.of(0, times, strengths);
         return modes::modulusPa;
+    }
+
+    /** J0, 1/η0 and a smooth L as modes, by the trapezoidal rule in ln λ, far wider than any record. */
+    static RetardationModes retardationOf(
+            double instantaneousPerPa, double fluidityPerPaS, DoubleUnaryOperator spectrum) {
+        double step = 0.1;
+        double[] times = IntStream.rangeClosed(-1000, 1000)
+                .mapToDouble(i -> Math.exp(i * step))
+                .toArray();
+        double[] strengths = Arrays.stream(times)
+                .map(time -> step * spectrum.applyAsDouble(time))
+                .toArray();
+        return RetardationModes.of(instantaneousPerPa, fluidityPerPaS, times, strengths);
     }
 
     /**
