@@ -10,12 +10,14 @@ import nightlag.stages.geometry.DeformationMode;
 import nightlag.stages.moduli.CreepCurve;
 import nightlag.stages.moduli.Quality;
 import nightlag.stages.response.TemperatureShift;
+import nightlag.stages.spectrum.CreepContinuousFit;
 import nightlag.stages.spectrum.CreepData;
 import nightlag.stages.spectrum.CreepFit;
 import nightlag.stages.spectrum.CreepSpectrum;
 import nightlag.stages.spectrum.DiscreteSpectrum;
 import nightlag.stages.spectrum.ShiftedCreep;
 import nightlag.stages.spectrum.SpectrumPlan;
+import nightlag.stages.spectrum.SpectrumRow;
 import nightlag.stages.sweep.NaturalOrder;
 
 /** The creep curves of a lot, and the spectra fitted to them. */
@@ -34,6 +36,7 @@ final class LotCreep {
     private final Optional<TemperatureShift> shift;
     private final SpectrumPlan plan;
     private final List<PublishedSpectrum> spectra = new ArrayList<>();
+    private final List<SpectrumRow> continuous = new ArrayList<>();
     private final List<Reason> notes = new ArrayList<>();
     private boolean replacesModuli;
 
@@ -81,6 +84,11 @@ final class LotCreep {
     /** Whether the first of them takes the place of the discrete spectrum of the moduli. */
     boolean replacesModuli() {
         return replacesModuli;
+    }
+
+    /** Nodes of the continuous spectra that go with them, where these were asked for. */
+    List<SpectrumRow> continuous() {
+        return List.copyOf(continuous);
     }
 
     /** What could not be had, or is unusual. */
@@ -132,8 +140,8 @@ final class LotCreep {
             return false;
         }
         Optional<DeformationMode> ofModuli = moduli.map(LotCurve::deformation).filter(mode -> mode != all.get(0));
-        ofModuli.ifPresent(mode -> notes.add(ConclusionReason.CREEP_OTHER_DEFORMATION.with(
-                all.get(0).word(), mode.word())));
+        ofModuli.ifPresent(mode -> notes.add(
+                ConclusionReason.CREEP_OTHER_DEFORMATION.with(all.get(0).word(), mode.word())));
         return ofModuli.isEmpty();
     }
 
@@ -176,10 +184,21 @@ final class LotCreep {
             CreepSpectrum spectrum = CreepFit.fit(data, plan);
             spectra.add(new PublishedSpectrum(spectrum, at));
             notes.addAll(spectrum.notes());
+            if (plan.continuous()) {
+                addContinuous(spectrum, at);
+            }
             return Optional.of(spectrum);
         } catch (ReductionFault fault) {
             notes.add(fault.reason());
             return Optional.empty();
+        }
+    }
+
+    private void addContinuous(CreepSpectrum discrete, TemperatureShift at) {
+        try {
+            continuous.addAll(CreepContinuousFit.of(discrete).rows(at.referenceK()));
+        } catch (ReductionFault fault) {
+            notes.add(fault.reason());
         }
     }
 

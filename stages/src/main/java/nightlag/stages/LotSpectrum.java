@@ -1,6 +1,7 @@
 package nightlag.stages;
 
 import java.util.ArrayList;
+import java.util.Arrays;
 import java.util.List;
 import java.util.Optional;
 import java.util.OptionalDouble;
@@ -68,8 +69,22 @@ record LotSpectrum(
         return new LotSpectrum(
                 discrete,
                 curve.isPresent() ? OptionalDouble.of(curve.get().temperatureK()) : referenceK,
-                moduli.continuous(),
+                continuous(moduli.continuous(), ofCreep.continuous()),
                 notes);
+    }
+
+    /** At a temperature of both, what was fitted to both takes the place of what was fitted to the moduli. */
+    private static List<SpectrumRow> continuous(List<SpectrumRow> ofModuli, List<SpectrumRow> ofCreep) {
+        double[] temperatures = ofCreep.stream()
+                .mapToDouble(SpectrumRow::referenceTemperatureK)
+                .distinct()
+                .toArray();
+        return Stream.concat(
+                        ofModuli.stream()
+                                .filter(row -> Arrays.stream(temperatures)
+                                        .noneMatch(temperature -> temperature == row.referenceTemperatureK())),
+                        ofCreep.stream())
+                .toList();
     }
 
     /** What completes the discrete spectra, and what follows from them. */

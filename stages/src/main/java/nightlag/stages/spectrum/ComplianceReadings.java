@@ -59,8 +59,7 @@ final class ComplianceReadings {
     }
 
     /** A complex compliance; {@code first}, {@code mixed} and {@code second} make rows of unit variance of it. */
-    private record Waves(
-            double omega, Complex compliance, double first, double mixed, double second, double lossU) {}
+    private record Waves(double omega, Complex compliance, double first, double mixed, double second, double lossU) {}
 
     /** A function of the time since a step. */
     private interface Kernel {
@@ -170,8 +169,8 @@ final class ComplianceReadings {
 
     /** The times that fix a density: the last of a creep curve tell less of it than of the compliance itself. */
     SupportedWindow windowOfDensity() {
-        List<SupportedWindow> all = new ArrayList<>(
-                windows.stream().map(SupportedWindow::ofDensity).toList());
+        List<SupportedWindow> all =
+                new ArrayList<>(windows.stream().map(SupportedWindow::ofDensity).toList());
         if (!waves.isEmpty()) {
             DoubleSummaryStatistics omega =
                     waves.stream().mapToDouble(Waves::omega).summaryStatistics();

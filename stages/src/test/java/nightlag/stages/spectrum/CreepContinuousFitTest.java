@@ -65,8 +65,7 @@ class CreepContinuousFitTest {
         KnownSpectra.FractionalSolid solid = new KnownSpectra.FractionalSolid(0.1, 1, 0.5);
         List<CreepCurve> curves = List.of(creep(solid, 1e-2, 1e3, 2e3, 0.005, 3));
         CreepSpectrum discrete = CreepFit.fit(curves, SOLID);
-        ContinuousSpectrum spectrum =
-                CreepContinuousFit.of(discrete);
+        ContinuousSpectrum spectrum = CreepContinuousFit.of(discrete);
 
         RelaxationModes relaxation = RelaxationModes.of(
                 spectrum.equilibriumPa(),
@@ -85,8 +84,8 @@ class CreepContinuousFitTest {
         KnownSpectra.FractionalSolid solid = new KnownSpectra.FractionalSolid(0.1, 1, 0.5);
         List<CreepCurve> curves = List.of(creep(solid, 1, 1e4, 1e4, 0.005, 3));
         List<ModulusReading> moduli = KnownSpectra.readings(solid::modulusPa, -1, 4, 0.005, 4);
-        ContinuousSpectrum both = CreepContinuousFit.of(
-                ComplianceReadings.of(List.of(ShiftedCreep.unmoved(curves)), moduli), false);
+        ContinuousSpectrum both =
+                CreepContinuousFit.of(ComplianceReadings.of(List.of(ShiftedCreep.unmoved(curves)), moduli), false);
         ContinuousSpectrum alone = ofCreep(curves.get(0), false);
 
         assertThat(both.window().shortestS()).isCloseTo(Math.exp(Math.PI / 2) / 1e4, within(1e-12));

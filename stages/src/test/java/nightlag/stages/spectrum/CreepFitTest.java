@@ -212,4 +212,13 @@ class CreepFitTest {
                 .extracting(Marker::property)
                 .containsExactly("instantaneous_compliance", "instantaneous_modulus");
     }
+
+    /** Seed 1008: on the way down to fewer modes the flow falls below the smallest double. */
+    @Test
+    void aFlowThatTheFitDrivesToNothingOnTheWayIsStillANumberOfIt() throws ReductionFault {
+        RetardationModes melt = KnownSpectra.retardationOf(0.2, 1e-4, KnownSpectra::doubleLogNormal);
+        CreepSpectrum spectrum = CreepFit.fit(List.of(curve(melt, 1e-3, 1e4, 1e4, 0.04, 1008)), LIQUID);
+
+        assertThat(spectrum.retardation().fluidityPerPaS()).isCloseTo(1e-4, within(2e-5));
+    }
 }
