@@ -16,7 +16,6 @@ import nightlag.stages.spectrum.ContinuousFit;
 import nightlag.stages.spectrum.DiscreteFit;
 import nightlag.stages.spectrum.DiscreteSpectrum;
 import nightlag.stages.spectrum.SpectrumPlan;
-import nightlag.stages.spectrum.SpectrumReason;
 import nightlag.stages.spectrum.SpectrumRow;
 
 /**
@@ -122,16 +121,12 @@ record LotSpectrum(
                         ? spectrum
                         : DiscreteFit.fit(
                                 curve.readings(), new SpectrumPlan(plan.fitEquilibrium(), OptionalInt.empty(), true));
-                List<Reason> discreteNotes = new ArrayList<>();
-                if (plan.fitEquilibrium() && spectrum.relaxation().isLiquid()) {
-                    discreteNotes.add(SpectrumReason.EQUILIBRIUM_MODULUS_ZERO.with());
-                }
                 List<SpectrumRow> rows = new ArrayList<>();
                 List<Reason> notes = new ArrayList<>();
                 if (plan.continuous()) {
                     addContinuous(curve, free, rows, notes);
                 }
-                return new OfModuli(Optional.of(spectrum), Optional.of(free), discreteNotes, rows, notes);
+                return new OfModuli(Optional.of(spectrum), Optional.of(free), spectrum.notes(), rows, notes);
             } catch (ReductionFault fault) {
                 return new OfModuli(Optional.empty(), Optional.empty(), List.of(fault.reason()), List.of(), List.of());
             }

@@ -93,6 +93,7 @@ class ConcludeTest {
                         "instantaneous_compliance",
                         "instantaneous_modulus",
                         "mean_relaxation_time",
+                        "mean_retardation_time",
                         "steady_state_compliance",
                         "zero_shear_viscosity");
         assertThat(ofTheLot).allMatch(marker -> marker.specimen().isEmpty());

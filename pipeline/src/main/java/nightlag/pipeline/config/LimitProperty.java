@@ -25,6 +25,8 @@ enum LimitProperty {
     INSTANTANEOUS_MODULUS(QuantityKind.STRESS, false),
     INSTANTANEOUS_COMPLIANCE(QuantityKind.COMPLIANCE_OF_MATERIAL, false),
     MEAN_RELAXATION_TIME(QuantityKind.TIME, false),
+    MEAN_RETARDATION_TIME(QuantityKind.TIME, false),
+    EQUILIBRIUM_COMPLIANCE(QuantityKind.COMPLIANCE_OF_MATERIAL, false),
     WLF_C1(QuantityKind.RATIO, false),
     WLF_C2(QuantityKind.TEMPERATURE_DIFFERENCE, false),
     ACTIVATION_ENERGY(QuantityKind.ENERGY_PER_MOLE, false),

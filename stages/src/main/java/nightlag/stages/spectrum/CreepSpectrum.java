@@ -10,6 +10,7 @@ import java.util.OptionalInt;
 import java.util.function.Function;
 import java.util.function.ToDoubleFunction;
 import nightlag.stages.fault.Reason;
+import nightlag.stages.moduli.Findings;
 import nightlag.stages.moduli.Marker;
 import nightlag.stages.numeric.LinearisedUncertainty;
 
@@ -173,15 +174,24 @@ public final class CreepSpectrum implements FittedSpectrum {
                     temperatureK,
                     modes -> 1 / modes.recoverablePerPa()));
         }
+        markers.addAll(ofRetardation(temperatureK).markers());
         return markers;
     }
 
+    private Findings ofRetardation(double temperatureK) {
+        return RetardationMarkers.of(this, temperatureK, fittedTo());
+    }
+
     /** What the record is too short for, and what does not go with what was expected. */
+    @Override
     public List<Reason> notes() {
         List<Reason> notes = new ArrayList<>();
         if (!endsInside()) {
             notes.add(SpectrumReason.CREEP_END_NOT_REACHED.with(
                     retardation.timesS()[retardation.count() - 1], readings.longestS()));
+        } else {
+            // why a figure is left out is the same at any temperature
+            notes.addAll(ofRetardation(0).notes());
         }
         if (wanted.isPresent() && wanted.getAsInt() != relaxation.count()) {
             notes.add(SpectrumReason.CREEP_OTHER_NUMBER_OF_MODES.with(wanted.getAsInt(), relaxation.count()));
@@ -212,13 +222,16 @@ public final class CreepSpectrum implements FittedSpectrum {
                 figure.applyAsDouble(retardation),
                 OptionalDouble.of(u(figure)),
                 unit,
-                String.format(
-                        Locale.ROOT,
-                        "%s, %d retardation mode%s fitted to %s, u from the fit",
-                        method,
-                        retardation.count(),
-                        retardation.count() == 1 ? "" : "s",
-                        data.words()));
+                method + fittedTo());
+    }
+
+    private String fittedTo() {
+        return String.format(
+                Locale.ROOT,
+                ", %d retardation mode%s fitted to %s, u from the fit",
+                retardation.count(),
+                retardation.count() == 1 ? "" : "s",
+                data.words());
     }
 
     private String fastEnd() {

@@ -7,6 +7,7 @@ import java.util.Optional;
 import java.util.OptionalDouble;
 import java.util.function.Function;
 import java.util.function.ToDoubleFunction;
+import nightlag.stages.fault.Reason;
 import nightlag.stages.moduli.Marker;
 
 /** The relaxation modes fitted to readings, the retardation modes that are their exact inverse, and what follows from both. */
@@ -121,7 +122,19 @@ public final class DiscreteSpectrum implements FittedSpectrum {
                 "one over the instantaneous modulus" + counted() + fastEnd(),
                 temperatureK,
                 modes -> 1 / modes.instantaneousModulusPa()));
+        markers.addAll(RetardationMarkers.of(this, temperatureK, counted()).markers());
         return markers;
+    }
+
+    @Override
+    public List<Reason> notes() {
+        List<Reason> notes = new ArrayList<>();
+        if (unshownSolid) {
+            notes.add(SpectrumReason.EQUILIBRIUM_MODULUS_ZERO.with());
+        }
+        // why a figure is left out is the same at any temperature
+        notes.addAll(RetardationMarkers.of(this, 0, "").notes());
+        return notes;
     }
 
     private Marker marker(

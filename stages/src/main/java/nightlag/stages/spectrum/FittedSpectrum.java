@@ -4,6 +4,7 @@ import java.util.List;
 import java.util.Optional;
 import java.util.function.Function;
 import java.util.stream.IntStream;
+import nightlag.stages.fault.Reason;
 import nightlag.stages.moduli.Marker;
 
 /**
@@ -35,6 +36,9 @@ public sealed interface FittedSpectrum permits DiscreteSpectrum, CreepSpectrum {
      * @param temperatureK temperature they hold at, K
      */
     List<Marker> markers(double temperatureK);
+
+    /** Which of these figures the data do not carry, and what else is unusual. */
+    List<Reason> notes();
 
     /** The relaxation modes as parts of the instantaneous modulus Ge + Σ g, times rising. */
     default List<RelativeMode> relativeModes(double temperatureK) {

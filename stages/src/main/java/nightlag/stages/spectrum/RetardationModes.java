@@ -81,6 +81,11 @@ public final class RetardationModes {
         return instantaneous.plus(modes.strengthSum()).value();
     }
 
+    /** Σ j_k λ_k²/Σ j_k λ_k in s, 0 without a mode. */
+    public double meanTimeS() {
+        return count() == 0 ? 0 : modes.secondMoment() / modes.firstMoment().value();
+    }
+
     /** J*(ω) = J' − iJ'' in 1/Pa, ω in rad/s. */
     public Complex compliancePerPa(double angularFrequency) {
         double real = instantaneousPerPa();

@@ -45,8 +45,12 @@ public enum SpectrumReason implements ReasonCode {
                     + " is needed)"),
     /** Slowest mode, longest time, s. */
     CREEP_END_NOT_REACHED(
-            "creep: the slowest mode, {0} s, is not over within the {1} s measured: no viscosity, no steady-state compliance and"
-                    + " no equilibrium modulus"),
+            "creep: the slowest mode, {0} s, is not over within the {1} s measured: no viscosity, no steady-state or"
+                    + " equilibrium figures and no mean times"),
+    /** Property, the part of it that modes beyond the data make up, longest time they support, s. */
+    MARKER_BEYOND_DATA(
+            "{0} is left out: {1} of it rests on retardation modes slower than the {2} s that the data support, more than its"
+                    + " own u"),
     /** Nothing. */
     EQUILIBRIUM_MODULUS_ZERO(
             "the fitted equilibrium modulus is zero: the spectrum is that of a liquid, with a viscosity in its place");

@@ -237,10 +237,11 @@ class DiscreteFitTest {
                 "zero_shear_viscosity", truth.viscosityPaS(),
                 "steady_state_compliance", truth.steadyStateCompliancePerPa(),
                 "mean_relaxation_time", truth.meanTimeS(),
+                "mean_retardation_time", truth.retardation().meanTimeS(),
                 "instantaneous_modulus", truth.instantaneousModulusPa(),
                 "instantaneous_compliance", 1 / truth.instantaneousModulusPa());
         assertThat(spectrum.markers(463.15))
-                .hasSize(5)
+                .hasSize(6)
                 .allSatisfy(marker -> assertThat(marker.value())
                         .as(marker.property())
                         .isCloseTo(

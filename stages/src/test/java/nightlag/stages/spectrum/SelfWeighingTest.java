@@ -142,6 +142,8 @@ class SelfWeighingTest {
             case "zero_shear_viscosity" -> material.viscosityPaS();
             case "steady_state_compliance" -> material.steadyStateCompliancePerPa();
             case "mean_relaxation_time" -> material.meanTimeS();
+            case "mean_retardation_time" -> material.retardation().meanTimeS();
+            case "equilibrium_compliance" -> 1 / material.equilibriumPa();
             case "equilibrium_modulus" -> material.equilibriumPa();
             case "instantaneous_modulus" -> material.instantaneousModulusPa();
             case "instantaneous_compliance" -> 1 / material.instantaneousModulusPa();
