@@ -13,7 +13,6 @@ import nightlag.stages.response.Programme.Instant;
 import nightlag.stages.response.Programme.Segment;
 import nightlag.stages.response.ResponsePlan.Controlled;
 import nightlag.stages.response.ResponsePlan.Step;
-import nightlag.stages.response.ResponseRow.Band;
 import nightlag.stages.response.ResponseRow.StrainParts;
 import nightlag.stages.spectrum.FittedSpectrum;
 import nightlag.stages.spectrum.RelaxationModes;
@@ -93,7 +92,8 @@ public final class Prediction {
         double[] predicted = parts.map(
                         all -> all.stream().mapToDouble(StrainParts::sum).toArray())
                 .orElseGet(() -> sum.stresses(spectrum.relaxation()));
-        Optional<double[]> u = uncertainty();
+        BandScale scale = BandScale.of(programme, plan.controlled(), predicted);
+        Optional<double[]> u = uncertainty(scale);
         List<ResponseRow> rows = new ArrayList<>();
         for (int i = 0; i < predicted.length; i++) {
             Instant instant = programme.instants().get(i);
@@ -108,7 +108,7 @@ public final class Prediction {
                     strainPredicted ? held : predicted[i],
                     strainPredicted ? predicted[i] : held,
                     isInside(instant, sum),
-                    u.map(all -> new Band(predicted[row] - COVERAGE * all[row], predicted[row] + COVERAGE * all[row])),
+                    u.map(all -> scale.band(predicted[row], COVERAGE * all[row])),
                     parts.map(all -> all.get(row))));
         }
         return rows;
@@ -121,17 +121,18 @@ public final class Prediction {
                                 s -> shift.isWithin(programme.segments().get(s).temperatureK()));
     }
 
-    /** Standard uncertainty of what is predicted at each instant. */
-    private Optional<double[]> uncertainty() {
+    /** Standard uncertainty of what is predicted at each instant, on the scale of its band. */
+    private Optional<double[]> uncertainty(BandScale scale) {
         BoltzmannSum sum = sum(0, 0);
-        Function<RelaxationModes, double[]> figures = modes -> predicted(sum, modes);
+        Function<RelaxationModes, double[]> figures = modes -> scale.of(predicted(sum, modes));
         return spectrum.uncertainties(figures).map(ofSpectrum -> {
             double[] temperatures = programme.segments().stream()
                     .mapToDouble(Segment::temperatureK)
                     .distinct()
                     .toArray();
-            double[][] slopes =
-                    Arrays.stream(temperatures).mapToObj(this::byLogShift).toArray(double[][]::new);
+            double[][] slopes = Arrays.stream(temperatures)
+                    .mapToObj(temperature -> byLogShift(temperature, scale))
+                    .toArray(double[][]::new);
             double[] u = new double[ofSpectrum.length];
             for (int i = 0; i < u.length; i++) {
                 double variance = ofSpectrum[i] * ofSpectrum[i];
@@ -154,10 +155,10 @@ public final class Prediction {
                 : sum.stresses(modes);
     }
 
-    /** Derivative of what is predicted by log10 a at one temperature in K. */
-    private double[] byLogShift(double temperatureK) {
-        double[] above = predicted(sum(temperatureK, STEP), spectrum.relaxation());
-        double[] below = predicted(sum(temperatureK, -STEP), spectrum.relaxation());
+    /** Derivative of what is predicted, on the scale of its band, by log10 a at one temperature in K. */
+    private double[] byLogShift(double temperatureK, BandScale scale) {
+        double[] above = scale.of(predicted(sum(temperatureK, STEP), spectrum.relaxation()));
+        double[] below = scale.of(predicted(sum(temperatureK, -STEP), spectrum.relaxation()));
         return IntStream.range(0, above.length)
                 .mapToDouble(i -> (above[i] - below[i]) / (2 * STEP))
                 .toArray();

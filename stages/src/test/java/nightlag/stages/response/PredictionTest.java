@@ -149,7 +149,8 @@ class PredictionTest {
                 predict(plan, shift(Optional.of(new ArrheniusLaw(REFERENCE, 1e5 + energyU / 100, 0, GOOD))));
 
         for (int i = 2; i < known.size(); i++) {
-            double byEnergy = 100 * (high.get(i).stressPa() - known.get(i).stressPa());
+            double byEnergy =
+                    100 * Math.log(high.get(i).stressPa() / known.get(i).stressPa());
             double expected = Math.hypot(width(known.get(i)), 1.959963984540054 * byEnergy);
             assertThat(width(guessed.get(i))).isCloseTo(expected, within(0.01 * expected));
         }
@@ -164,8 +165,40 @@ class PredictionTest {
                         && row.stressPa() < row.band().orElseThrow().high());
     }
 
+    /** Moduli of three decades only: later than they reach, the band is as wide as it has to be and stays above zero. */
+    @Test
+    void aStrainUnderLoadIsNeverBelowZeroHoweverLittleIsKnown() throws ReductionFault {
+        DiscreteSpectrum narrow = DiscreteFit.fit(
+                SOLID.readings(1, 1e3, 0.05, 0.05, 7), new SpectrumPlan(true, OptionalInt.empty(), false));
+        TemperatureShift still = TemperatureShift.of(REFERENCE, Optional.empty());
+        ResponsePlan loaded = stress(1e6, step(0, 1e6), step(1e5, 0));
+        List<ResponseRow> pulled = Prediction.of(loaded, narrow, still);
+        List<ResponseRow> pushed = Prediction.of(stress(1e6, step(0, -1e6), step(1e5, 0)), narrow, still);
+
+        assertThat(pulled)
+                .anyMatch(row -> row.strain() > 0 && row.band().orElseThrow().high() > 3 * row.strain());
+        assertThat(pulled)
+                .allMatch(row -> 0 <= row.band().orElseThrow().low()
+                        && row.band().orElseThrow().low() <= row.strain()
+                        && row.strain() <= row.band().orElseThrow().high());
+        for (int i = 1; i < pulled.size(); i++) {
+            Band above = pulled.get(i).band().orElseThrow();
+            assertThat(pushed.get(i).band()).contains(new Band(-above.high(), -above.low()));
+        }
+    }
+
+    /** Pulled and pushed: what is left of either may outweigh the other, and the band lies evenly about the value. */
+    @Test
+    void aStrainThatMayHaveEitherSignHasAnEvenBand() throws ReductionFault {
+        List<ResponseRow> rows = predict(stress(100, step(0, 1e6), step(10, -1e6)), shift(Optional.empty()));
+
+        assertThat(rows)
+                .allSatisfy(row -> assertThat(row.band().orElseThrow().high() - row.strain())
+                        .isCloseTo(row.strain() - row.band().orElseThrow().low(), within(1e-15)));
+    }
+
     private static double width(ResponseRow row) {
-        return row.band().orElseThrow().high() - row.stressPa();
+        return Math.log(row.band().orElseThrow().high() / row.stressPa());
     }
 
     private static List<ResponseRow> predict(ResponsePlan plan, TemperatureShift shift) throws ReductionFault {
