@@ -49,6 +49,10 @@ public final class Conclude {
         Sweeps sweeps = Sweeps.of(lot.points(), lot.amplitudeSweeps(), plan.sweeps());
         List<Reason> notes = new ArrayList<>(lot.notes());
         notes.addAll(sweeps.notes());
+        List<Reason> absent = new ArrayList<>(sweeps.apart());
+        if (isCurveAsked(plan)) {
+            absent.addAll(sweeps.isotherms().notes());
+        }
         List<CreepCurve> creep = LotCreep.inOrder(reductions);
         boolean creepAlone = !creep.isEmpty() && sweeps.isotherms().isotherms().isEmpty();
         Optional<LotCurve> curve = creepAlone ? Optional.empty() : curve(sweeps, plan, notes);
@@ -61,6 +65,7 @@ public final class Conclude {
         List<ModulusPoint> usable = lot.points().stream()
                 .filter(point -> point.quality() != Quality.UNUSABLE)
                 .toList();
+        absent.addAll(markers.notes());
         LotFigures figures = LotFigures.of(usable, lot.amplitudeSweeps(), plan.ownFigures());
         notes.addAll(figures.findings().notes());
         LotResponses responses = LotResponses.of(plan.responses(), spectrum);
@@ -78,7 +83,7 @@ public final class Conclude {
                 .masterCurve(master.map(MasterCurve::points).orElse(List.of()))
                 .spectrum(spectrum.rows().stream().sorted(ROW_ORDER).toList())
                 .notes(notes)
-                .absent(markers.notes())
+                .absent(absent)
                 .derived(figures.rows())
                 .sweeps(sweeps.sweeps())
                 .responses(responses.rows())
@@ -93,12 +98,15 @@ public final class Conclude {
                 : OptionalDouble.empty();
     }
 
+    private static boolean isCurveAsked(ConclusionPlan plan) {
+        return plan.superposition().isPresent() || plan.spectrum().isPresent();
+    }
+
     /** The curve that a master curve or a spectrum is asked of; what there is to say of it goes into the notes. */
     private static Optional<LotCurve> curve(Sweeps sweeps, ConclusionPlan plan, List<Reason> notes) {
-        if (plan.superposition().isEmpty() && plan.spectrum().isEmpty()) {
+        if (!isCurveAsked(plan)) {
             return Optional.empty();
         }
-        notes.addAll(sweeps.isotherms().notes());
         try {
             LotCurve curve = LotCurve.of(sweeps.isotherms(), plan.superposition());
             notes.addAll(curve.notes());

@@ -26,7 +26,12 @@ public final class SmoothCurve {
     private static final double COARSE_STEP = 100;
     private static final double FINE_STEP = Math.sqrt(10);
     private static final int FINE_STEPS = 4;
+    private static final double ROUGHER_STEP = Math.sqrt(FINE_STEP);
     private static final double PROCESS_SHARE = 0.25;
+    /** Strengths whose deviances, minus twice the log-likelihood, differ by no more are about equally likely. */
+    private static final double EQUALLY_LIKELY = 1;
+
+    private static final int ROUGHER_STEPS = 16;
 
     private final WienerProcess process;
     private final double[] x;
@@ -34,15 +39,24 @@ public final class SmoothCurve {
     private final double[][] unitCovariance;
     private final double[] variance;
     private final boolean known;
-    /** No process is taken to be weaker. */
-    private final double least;
+    private final Choice choice;
 
     private final Fit fit;
 
+    /**
+     * Which strength of the process is taken.
+     *
+     * @param least none is weaker
+     * @param roughest the strongest that is about as likely as the likeliest, and not that one
+     */
+    private record Choice(double least, boolean roughest) {
+        static final Choice LIKELIEST = new Choice(0, false);
+    }
+
     private SmoothCurve(
-            double[] x, double[][] y, double[] variance, boolean known, double least, WienerProcess process) {
+            double[] x, double[][] y, double[] variance, boolean known, Choice choice, WienerProcess process) {
         this.known = known;
-        this.least = least;
+        this.choice = choice;
         this.x = x.clone();
         this.variance = variance.clone();
         this.process = process;
@@ -79,8 +93,8 @@ public final class SmoothCurve {
      */
     public record Local(double[] derivatives, double[][] noise, double[][] full) {
         /**
-         * Covariance for figures drawn where the curve bends most, such as the place of a maximum: the noise's and a quarter of what
-         * the full one adds to it. The full one holds on average over all that the process may do. A single peak bends less wildly,
+         * Covariance for a figure at one place, such as that of a maximum or a zero: the noise's and a quarter of what the full one
+         * adds to it. The full one holds on average over all that the process may do. A single peak or step bends less wildly,
          * and intervals from the full covariance hold its place too often.
          */
         public double peakCovariance(int i, int j) {
@@ -107,12 +121,19 @@ public final class SmoothCurve {
     public static SmoothCurve throughKnown(double[] x, double[] y, double[] variance, int order) {
         checkCount(x, order);
         return new SmoothCurve(
-                x, new double[][] {y}, variance, true, 0, new WienerProcess(order, x[0], x[x.length - 1] - x[0]));
+                x,
+                new double[][] {y},
+                variance,
+                true,
+                Choice.LIKELIEST,
+                new WienerProcess(order, x[0], x[x.length - 1] - x[0]));
     }
 
     /**
      * The same where uncertainties that would be too small by less than a factor of two are believed, for values may turn
-     * faster than a smooth curve likes. The order is the {@linkplain #order usual} one.
+     * faster than a smooth curve likes. The order is the {@linkplain #order usual} one. Where nothing is known beforehand of the
+     * process, the strongest is taken that is about as likely as the likeliest one: few values say little of its strength,
+     * and too weak a one smooths away more than u says, while too strong a one only makes u larger.
      *
      * @param least how strong the process is at the least, in squares of the values over the fifth power of the places: what
      *     the curve may do for all one knows beforehand; 0 where nothing is known
@@ -122,8 +143,10 @@ public final class SmoothCurve {
         checkCount(x, order);
         double[][] values = {y};
         WienerProcess process = new WienerProcess(order, x[0], x[x.length - 1] - x[0]);
-        SmoothCurve free = new SmoothCurve(x, values, variance, false, least, process);
-        return free.widening() < BELIEVED ? new SmoothCurve(x, values, variance, true, least, process) : free;
+        SmoothCurve free = new SmoothCurve(x, values, variance, false, new Choice(least, false), process);
+        return free.widening() < BELIEVED
+                ? new SmoothCurve(x, values, variance, true, new Choice(least, least == 0), process)
+                : free;
     }
 
     /** The usual order: 3, a spline of fifth degree; of three or four values, which tell too little, 2, the cubic spline. */
@@ -140,7 +163,7 @@ public final class SmoothCurve {
     /** The same for curves that are equally smooth and known equally well, one array each, within a wider range. */
     static SmoothCurve through(double[] x, double[][] y, double[] variance, int order, double from, double to) {
         checkCount(x, order);
-        return new SmoothCurve(x, y, variance, false, 0, new WienerProcess(order, from, to - from));
+        return new SmoothCurve(x, y, variance, false, Choice.LIKELIEST, new WienerProcess(order, from, to - from));
     }
 
     /** The i-th derivative of a curve at a place, i below the order. */
@@ -154,9 +177,16 @@ public final class SmoothCurve {
         return derivative(0, place, i);
     }
 
-    /** The i-th derivative of the only curve at a place with its uncertainty, as {@link #fullVariance} has it. */
+    /**
+     * The i-th derivative of the only curve at a place. Its u² is the noise's and a quarter of what the curve may do besides,
+     * as {@link Local#peakCovariance} has it, and no less than all the curve may do: between values that stand far apart, or
+     * have hardly any noise, this is what the error is made of.
+     */
     public Estimate estimate(double place, int i) {
-        return new Estimate(derivative(place, i), Math.sqrt(fullVariance(place, i)));
+        Estimator estimator = new Estimator(place, i);
+        double noise = estimator.noiseCovariance(estimator);
+        double besides = Math.max(estimator.fullCovariance(estimator) - noise, 0);
+        return new Estimate(derivative(place, i), Math.sqrt(Math.max(noise + PROCESS_SHARE * besides, besides)));
     }
 
     /** By how much u² of the values is larger than was given, their scatter being so. */
@@ -203,7 +233,7 @@ public final class SmoothCurve {
         double interval = process.span() / (x.length - 1);
         double high = Math.max(low, STRONGEST * range / process.varianceAfter(interval));
         Fit weakest = fit(y, low).orElseThrow();
-        Fit best = least > low ? fit(y, least).orElse(weakest) : weakest;
+        Fit best = choice.least() > low ? fit(y, choice.least()).orElse(weakest) : weakest;
         for (double strength = low * COARSE_STEP; strength <= high; strength *= COARSE_STEP) {
             best = better(best, y, strength);
         }
@@ -211,7 +241,20 @@ public final class SmoothCurve {
         for (int step = -FINE_STEPS + 1; step < FINE_STEPS; step++) {
             best = better(best, y, Math.max(low, coarse * Math.pow(FINE_STEP, step)));
         }
-        return best;
+        return choice.roughest() ? roughest(best, y) : best;
+    }
+
+    /** The strongest process about as likely as the likeliest one. */
+    private Fit roughest(Fit best, double[][] y) {
+        Fit roughest = best;
+        for (int step = 1; step <= ROUGHER_STEPS; step++) {
+            Optional<Fit> next = fit(y, best.strength * Math.pow(ROUGHER_STEP, step));
+            if (next.isEmpty() || next.get().deviance > best.deviance + EQUALLY_LIKELY) {
+                break;
+            }
+            roughest = next.get();
+        }
+        return roughest;
     }
 
     private static double squaredRange(double[] values) {
@@ -223,7 +266,7 @@ public final class SmoothCurve {
     /** The more likely of a fit and that of another strength. */
     private Fit better(Fit best, double[][] y, double strength) {
         return fit(y, strength)
-                .filter(other -> other.deviance < best.deviance && other.strength * other.widening >= least)
+                .filter(other -> other.deviance < best.deviance && other.strength * other.widening >= choice.least())
                 .orElse(best);
     }
 

@@ -76,7 +76,7 @@ public final class FrequencyMarkers {
                 double depth = lossFactor.derivative(zero.place(), 0);
                 if (zero.rising() && stretch.owns(zero.place()) && depth < 0 && depth < lowest) {
                     lowest = depth;
-                    plateaus.add(plateau(stretch.data(), lossFactor, zero));
+                    plateaus.add(plateau(stretch.data(), zero));
                 }
             }
         }
@@ -113,13 +113,10 @@ public final class FrequencyMarkers {
                 "|G*|/√2 at tan δ = 1, by smooth curves of ln |G*| and ln tan δ over ln ω"));
     }
 
-    private Marker plateau(LogModuli near, SmoothCurve lossFactor, Zero zero) {
-        SmoothCurve.Local minimum = lossFactor.at(zero.place(), 1);
+    private Marker plateau(LogModuli near, Zero zero) {
         SmoothCurve.Local storage = near.curve(Figure.STORAGE).at(zero.place(), 1);
         double modulus = Math.exp(storage.derivatives()[0]);
-        // the stretch of a zero is as wide as the curve's full freedom makes it; at an extreme a part of that is enough
-        double placeU = zero.u() * Math.sqrt(minimum.peakCovariance(1, 1) / minimum.full()[1][1]);
-        double u = Math.hypot(Math.sqrt(storage.peakCovariance(0, 0)), storage.derivatives()[1] * placeU);
+        double u = Math.hypot(Math.sqrt(storage.peakCovariance(0, 0)), storage.derivatives()[1] * zero.u());
         return marker(
                 "plateau_modulus",
                 Math.exp(zero.place()),

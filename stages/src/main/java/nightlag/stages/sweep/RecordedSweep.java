@@ -39,9 +39,10 @@ final class RecordedSweep {
      * What it became.
      *
      * @param sweeps each with one thing that varies
-     * @param notes what else might have been meant, and what is part of no sweep
+     * @param notes what else might have been meant
+     * @param left how many points are part of no sweep, where there are any
      */
-    record Sorted(List<Sweep> sweeps, List<Reason> notes) {}
+    record Sorted(List<Sweep> sweeps, List<Reason> notes, Optional<Reason> left) {}
 
     /**
      * Sorts the points.
@@ -62,11 +63,11 @@ final class RecordedSweep {
                 - recorded.sweeps.stream()
                         .mapToInt(sweep -> sweep.points().size())
                         .sum();
-        if (left > 0) {
-            recorded.notes.add(SweepReason.SWEEP_POINTS_IN_NONE.with(
-                    recorded.name.specimen(), recorded.name.sweep(), left, recorded.lacking(kind)));
-        }
-        return new Sorted(List.copyOf(recorded.sweeps), List.copyOf(recorded.notes));
+        Optional<Reason> said = left == 0
+                ? Optional.empty()
+                : Optional.of(SweepReason.SWEEP_POINTS_IN_NONE.with(
+                        recorded.name.specimen(), recorded.name.sweep(), left, recorded.lacking(kind)));
+        return new Sorted(List.copyOf(recorded.sweeps), List.copyOf(recorded.notes), said);
     }
 
     private String lacking(SweepPlan.Kind kind) {

@@ -13,9 +13,9 @@ public enum SweepReason implements ReasonCode {
     /** Specimen, sweep, how many unusable points, of how many. */
     SWEEP_UNUSABLE_LEFT_OUT(
             "specimen {0}, sweep {1}: {2} of {3} points left out of all that follows, unusable or without a frequency or a modulus"),
-    /** Specimen, how many sweeps. */
+    /** How many. */
     SWEEP_SINGLE_POINTS(
-            "specimen {0}: sweeps of one usable point: {1}; points that belong together need one name in the tag sweep"),
+            "points with a sweep of their own: {0}; they have their place in points, limits and isotherms, and no markers of a sweep, for which the tag sweep must give them one name"),
     /** Specimen, sweep, how many points, what varies or was asked for. */
     SWEEP_POINTS_IN_NONE("specimen {0}, sweep {1}: points that are part of no {3}: {2}"),
     /** Specimen, sweep, what varies, what they were taken for. */

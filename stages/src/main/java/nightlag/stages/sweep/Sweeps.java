@@ -2,10 +2,9 @@ package nightlag.stages.sweep;
 
 import java.util.ArrayList;
 import java.util.Collections;
+import java.util.DoubleSummaryStatistics;
 import java.util.IdentityHashMap;
-import java.util.LinkedHashMap;
 import java.util.List;
-import java.util.Map;
 import java.util.Set;
 import nightlag.stages.fault.Reason;
 import nightlag.stages.moduli.ModulusPoint;
@@ -17,12 +16,14 @@ import nightlag.stages.moduli.Quality;
  * @param sweeps in the order of their points; each of one deformation and with one thing that varies
  * @param isotherms what can be superposed, pooled over specimens and sweeps
  * @param notes points left out, sweeps that could be taken for others, repeats averaged
+ * @param apart points that are part of no sweep, where that is how they were measured and loses nothing
  */
-public record Sweeps(List<Sweep> sweeps, LotIsotherms isotherms, List<Reason> notes) {
+public record Sweeps(List<Sweep> sweeps, LotIsotherms isotherms, List<Reason> notes, List<Reason> apart) {
     /** Copies the lists. */
     public Sweeps {
         sweeps = List.copyOf(sweeps);
         notes = List.copyOf(notes);
+        apart = List.copyOf(apart);
     }
 
     /**
@@ -47,11 +48,18 @@ public record Sweeps(List<Sweep> sweeps, LotIsotherms isotherms, List<Reason> no
 
     /** The work of putting a lot's sweeps together. */
     private static final class Assembly {
+        /** Strains of repeats differ by less. */
+        private static final double SAME_STRAIN = 1.2;
+
         private final SweepPlan plan;
         private final List<Sweep> sweeps = new ArrayList<>();
         private final List<ModulusPoint> inNone = new ArrayList<>();
         private final List<Reason> notes = new ArrayList<>();
-        private final Map<String, Integer> singles = new LinkedHashMap<>();
+        private final List<Left> left = new ArrayList<>();
+        private int singles;
+
+        /** Points of one recorded sweep in none, and the words for it. */
+        private record Left(List<ModulusPoint> points, Reason reason) {}
 
         Assembly(SweepPlan plan) {
             this.plan = plan;
@@ -59,8 +67,37 @@ public record Sweeps(List<Sweep> sweeps, LotIsotherms isotherms, List<Reason> no
 
         Sweeps of(List<ModulusPoint> published, List<List<ModulusPoint>> amplitudeSweeps) {
             SweepName.group(published).forEach((name, points) -> recorded(name, points, amplitudeSweeps));
-            singles.forEach((specimen, count) -> notes.add(SweepReason.SWEEP_SINGLE_POINTS.with(specimen, count)));
-            return new Sweeps(sweeps, LotIsotherms.of(sweeps, inNone), notes);
+            LotIsotherms isotherms = LotIsotherms.of(sweeps, inNone);
+            List<Reason> apart = new ArrayList<>();
+            if (singles > 0) {
+                apart.add(SweepReason.SWEEP_SINGLE_POINTS.with(singles));
+            }
+            Set<ModulusPoint> superposed = ofSeveralFrequencies(isotherms);
+            for (Left some : left) {
+                boolean usual = plan.kind() == SweepPlan.Kind.AUTO
+                        && (superposed.containsAll(some.points()) || areRepeats(some.points()));
+                (usual ? apart : notes).add(some.reason());
+            }
+            return new Sweeps(sweeps, isotherms, notes, apart);
+        }
+
+        private static Set<ModulusPoint> ofSeveralFrequencies(LotIsotherms isotherms) {
+            Set<ModulusPoint> points = Collections.newSetFromMap(new IdentityHashMap<>());
+            isotherms.isotherms().stream()
+                    .filter(isotherm -> FrequencySweeps.distinctFrequencies(isotherm.points()) > 1)
+                    .forEach(isotherm -> points.addAll(isotherm.points()));
+            return points;
+        }
+
+        /** Whether the same was measured again and again, which was to be no sweep. */
+        private static boolean areRepeats(List<ModulusPoint> points) {
+            DoubleSummaryStatistics strains = points.stream()
+                    .flatMapToDouble(point -> point.strainAmplitude().stream())
+                    .summaryStatistics();
+            return FrequencySweeps.distinctFrequencies(points) == 1
+                    && points.stream().allMatch(point -> point.temperatureK().isPresent())
+                    && PointGroups.byIsotherm(points).size() == 1
+                    && strains.getMax() <= SAME_STRAIN * strains.getMin();
         }
 
         private void recorded(SweepName name, List<ModulusPoint> points, List<List<ModulusPoint>> amplitudeSweeps) {
@@ -94,7 +131,7 @@ public record Sweeps(List<Sweep> sweeps, LotIsotherms isotherms, List<Reason> no
             }
             List<ModulusPoint> rest = points.stream().filter(free::contains).toList();
             if (points.size() == 1) {
-                singles.merge(points.get(0).key().specimen(), 1, Integer::sum);
+                singles++;
                 inNone.addAll(points);
             } else if (!rest.isEmpty()) {
                 RecordedSweep.Sorted sorted = RecordedSweep.sorted(rest, plan.kind());
@@ -103,7 +140,9 @@ public record Sweeps(List<Sweep> sweeps, LotIsotherms isotherms, List<Reason> no
                     add(sweep);
                 });
                 notes.addAll(sorted.notes());
-                rest.stream().filter(free::contains).forEach(inNone::add);
+                List<ModulusPoint> none = rest.stream().filter(free::contains).toList();
+                inNone.addAll(none);
+                sorted.left().ifPresent(reason -> left.add(new Left(none, reason)));
             }
         }
 

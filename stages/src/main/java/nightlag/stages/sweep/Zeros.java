@@ -17,6 +17,9 @@ import nightlag.stages.numeric.SmoothCurve.Estimate;
  */
 record Zeros(List<Zero> zeros, boolean positive, boolean negative, boolean startsClear, boolean endsClear) {
     private static final double STANDS_OUT = 3;
+    /** What is within one u of zero may be zero. */
+    private static final double MAY_BE_ZERO = 1;
+
     private static final int STEPS = 4;
     private static final int HALVINGS = 36;
 
@@ -35,8 +38,9 @@ record Zeros(List<Zero> zeros, boolean positive, boolean negative, boolean start
      * One zero.
      *
      * @param place where it is; the middle one where the figure wavers
-     * @param u standard uncertainty of the place: a sixth of the stretch in which the figure does not stand out from zero
-     *     (as the limits of Fieller, Q. J. Pharm. Pharmacol. 17 (1944) 117)
+     * @param u standard uncertainty of the place: half of the stretch in which the figure may be zero by one of its own (as the
+     *     limits of Fieller, Q. J. Pharm. Pharmacol. 17 (1944) 117). A longer stretch would reach to where the figure runs
+     *     flatter, as it does beyond a step, and the place does not err that far
      * @param rising whether the figure rises there
      */
     record Zero(double place, double u, boolean rising) {}
@@ -96,9 +100,17 @@ record Zeros(List<Zero> zeros, boolean positive, boolean negative, boolean start
         double sign = values[middle] < 0 ? 1 : -1;
         double place = lastNegative(at -> sign * figure.at(at).value(), grid[middle], grid[middle + 1]);
         double side = rising ? 1 : -1;
-        double begin = lastNegative(at -> bound(figure.at(at), side, STANDS_OUT), grid[from], grid[from + 1]);
-        double end = lastNegative(at -> bound(figure.at(at), side, -STANDS_OUT), grid[to - 1], grid[to]);
-        return new Zero(place, (end - begin) / (2 * STANDS_OUT), rising);
+        int first = from + 1;
+        while (bound(figure.at(grid[first]), side, MAY_BE_ZERO) < 0) {
+            first++;
+        }
+        int last = to - 1;
+        while (bound(figure.at(grid[last]), side, -MAY_BE_ZERO) > 0) {
+            last--;
+        }
+        double begin = lastNegative(at -> bound(figure.at(at), side, MAY_BE_ZERO), grid[first - 1], grid[first]);
+        double end = lastNegative(at -> bound(figure.at(at), side, -MAY_BE_ZERO), grid[last], grid[last + 1]);
+        return new Zero(place, (end - begin) / (2 * MAY_BE_ZERO), rising);
     }
 
     private static double bound(Estimate figure, double side, double times) {

@@ -5,6 +5,7 @@ import static org.assertj.core.api.Assertions.within;
 
 import java.util.ArrayList;
 import java.util.List;
+import java.util.stream.Stream;
 import nightlag.stages.fault.Reason;
 import nightlag.stages.geometry.DeformationMode;
 import nightlag.stages.moduli.ModulusPoint;
@@ -309,17 +310,45 @@ class SweepsTest {
         Sweeps sweeps = found(points);
 
         assertThat(sweeps.sweeps()).isEmpty();
-        assertThat(codes(sweeps.notes())).containsExactly("SWEEP_SINGLE_POINTS");
+        assertThat(sweeps.notes()).isEmpty();
+        assertThat(codes(sweeps.apart())).containsExactly("SWEEP_SINGLE_POINTS");
         assertThat(sweeps.isotherms().isotherms().get(0).readings()).hasSize(6);
     }
 
     @Test
-    void whatNothingVariesInIsNoSweep() {
+    void repeatsAreNoSweepAndNoLoss() {
         Sweeps sweeps = found(List.of(SeriesPoint.of(1, ROOM, 1), SeriesPoint.of(2, ROOM, 1.001)));
 
         assertThat(sweeps.sweeps()).isEmpty();
-        assertThat(codes(sweeps.notes())).containsExactly("SWEEP_POINTS_IN_NONE");
+        assertThat(sweeps.notes()).isEmpty();
+        assertThat(codes(sweeps.apart())).containsExactly("SWEEP_POINTS_IN_NONE");
         assertThat(sweeps.isotherms().isotherms().get(0).points()).hasSize(2);
+    }
+
+    /** Two frequencies at a temperature are no sweep by themselves, and superpose with all others. */
+    @Test
+    void pointsInNoSweepThatStandInAnIsothermAreNoLoss() {
+        List<SeriesPoint> points = new ArrayList<>(isotherm(ROOM, 0, 6));
+        points.add(SeriesPoint.of(20, ROOM + 20, 1));
+        points.add(SeriesPoint.of(21, ROOM + 20, 2));
+
+        Sweeps sweeps = found(points);
+
+        assertThat(sweeps.sweeps()).hasSize(1);
+        assertThat(sweeps.notes()).isEmpty();
+        assertThat(codes(sweeps.apart())).containsExactly("SWEEP_POINTS_IN_NONE");
+        assertThat(codes(of(points, Kind.TEMPERATURE).notes())).containsExactly("SWEEP_POINTS_IN_NONE");
+    }
+
+    /** A frequency and a temperature of its own for each: no sweep, no isotherm, and somebody should know. */
+    @Test
+    void pointsThatFitNowhereAreSaid() {
+        Sweeps sweeps = found(
+                List.of(SeriesPoint.of(1, ROOM, 1), SeriesPoint.of(2, ROOM + 10, 2), SeriesPoint.of(3, ROOM + 20, 4)));
+
+        assertThat(sweeps.sweeps()).isEmpty();
+        assertThat(codes(sweeps.notes())).containsExactly("SWEEP_POINTS_IN_NONE");
+        assertThat(sweeps.apart()).isEmpty();
     }
 
     @Test
@@ -337,7 +366,9 @@ class SweepsTest {
                     .toList();
             assertThat(used).as(kind.word()).doesNotHaveDuplicates();
             if (used.size() < points.size()) {
-                assertThat(codes(sweeps.notes())).contains("SWEEP_POINTS_IN_NONE");
+                assertThat(Stream.concat(sweeps.notes().stream(), sweeps.apart().stream()))
+                        .extracting(Reason::code)
+                        .contains("SWEEP_POINTS_IN_NONE");
             }
         }
     }
