@@ -8,6 +8,7 @@ import nightlag.stages.fault.ReductionFault;
 import nightlag.stages.geometry.DeformationMode;
 import nightlag.stages.moduli.ModulusPoint;
 import nightlag.stages.moduli.ModulusReading;
+import nightlag.stages.moduli.SharedErrors;
 import nightlag.stages.spectrum.DiscreteFit;
 import nightlag.stages.superposition.IsothermReadings;
 import nightlag.stages.superposition.MasterCurve;
@@ -23,6 +24,7 @@ import nightlag.stages.sweep.LotIsotherms;
  * @param temperatureK the temperature it is said to hold at, K
  * @param deformation the deformation they were measured in
  * @param readings the readings
+ * @param sharedErrors what several of them are off by together
  * @param master the master curve they come from; empty where none was asked for
  * @param notes what is unusual about it
  */
@@ -30,6 +32,7 @@ record LotCurve(
         double temperatureK,
         DeformationMode deformation,
         List<ModulusReading> readings,
+        SharedErrors sharedErrors,
         Optional<MasterCurve> master,
         List<Reason> notes) {
     private static final double KELVIN_AT_ZERO_CELSIUS = 273.15;
@@ -55,7 +58,12 @@ record LotCurve(
         }
         Isotherm only = only(lot.isotherms());
         return new LotCurve(
-                only.temperatureK(), deformation(List.of(only)), only.readings(), Optional.empty(), List.of());
+                only.temperatureK(),
+                deformation(List.of(only)),
+                only.readings(),
+                SharedErrors.none(),
+                Optional.empty(),
+                List.of());
     }
 
     /** Shear and extension are two different moduli. */
@@ -92,6 +100,7 @@ record LotCurve(
                 reference,
                 deformation,
                 master.points().stream().map(point -> point.reduced()).toList(),
+                master.sharedErrors(),
                 Optional.of(master),
                 notes);
     }

@@ -11,6 +11,7 @@ import nightlag.stages.geometry.DeformationMode;
 import nightlag.stages.moduli.Findings;
 import nightlag.stages.moduli.Marker;
 import nightlag.stages.moduli.ModulusReading;
+import nightlag.stages.moduli.SharedErrors;
 import nightlag.stages.spectrum.KramersKronig;
 import nightlag.stages.superposition.MasterCurve;
 import nightlag.stages.superposition.ShiftFactor;
@@ -72,7 +73,12 @@ final class LotMarkers {
                         .map(marker -> withShifts(marker, master))
                         .toList(),
                 onCurve.notes()));
-        flow(new SweepName("", ""), curve.temperatureK(), curve.deformation(), curve.readings());
+        flow(
+                new SweepName("", ""),
+                curve.temperatureK(),
+                curve.deformation(),
+                curve.readings(),
+                curve.sharedErrors());
     }
 
     /**
@@ -106,15 +112,21 @@ final class LotMarkers {
                         sweep.name(),
                         temperatureK,
                         sweep.points().get(0).deformation(),
-                        new Isotherm(temperatureK, sweep.points()).readings());
+                        new Isotherm(temperatureK, sweep.points()).readings(),
+                        SharedErrors.none());
             }
         }
     }
 
     /** A viscosity is of shear. */
-    private void flow(SweepName name, double temperatureK, DeformationMode deformation, List<ModulusReading> readings) {
+    private void flow(
+            SweepName name,
+            double temperatureK,
+            DeformationMode deformation,
+            List<ModulusReading> readings,
+            SharedErrors sharedErrors) {
         if (deformation == DeformationMode.SHEAR) {
-            found.add(FlowCurve.of(name, temperatureK, readings));
+            found.add(FlowCurve.of(name, temperatureK, readings, sharedErrors));
         }
     }
 

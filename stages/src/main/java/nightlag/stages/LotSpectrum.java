@@ -115,12 +115,12 @@ record LotSpectrum(
             List<Reason> continuousNotes) {
         static OfModuli of(LotCurve curve, SpectrumPlan plan) {
             try {
-                DiscreteSpectrum spectrum = DiscreteFit.fit(curve.readings(), plan);
+                DiscreteSpectrum spectrum = DiscreteFit.fit(curve.readings(), curve.sharedErrors(), plan);
                 // a fixed number of modes says nothing of how the readings scatter
                 DiscreteSpectrum free = plan.modes().isEmpty()
                         ? spectrum
                         : DiscreteFit.fit(
-                                curve.readings(), new SpectrumPlan(plan.fitEquilibrium(), OptionalInt.empty(), true));
+                                curve.readings(), curve.sharedErrors(), new SpectrumPlan(plan.fitEquilibrium(), OptionalInt.empty(), true));
                 List<SpectrumRow> rows = new ArrayList<>();
                 List<Reason> notes = new ArrayList<>();
                 if (plan.continuous()) {

@@ -35,10 +35,23 @@ public final class LinearisedUncertainty {
 
     /** Standard uncertainty of a figure with these derivatives by the parameters. */
     public double of(double[] derivatives) {
+        return HouseholderTriangle.norm(whitened(derivatives), 0);
+    }
+
+    /** (JᵀJ + P)⁻¹v: how each parameter's part of a residual moves a figure with these derivatives by the parameters. */
+    public double[] influence(double[] derivatives) {
+        double[] solved = HouseholderTriangle.solve(triangle, scales.length, whitened(derivatives));
+        for (int j = 0; j < solved.length; j++) {
+            solved[j] /= scales[j];
+        }
+        return solved;
+    }
+
+    private double[] whitened(double[] derivatives) {
         double[] scaled = new double[scales.length];
         for (int j = 0; j < scaled.length; j++) {
             scaled[j] = derivatives[j] / scales[j];
         }
-        return HouseholderTriangle.norm(HouseholderTriangle.solveTransposed(triangle, scaled.length, scaled), 0);
+        return HouseholderTriangle.solveTransposed(triangle, scaled.length, scaled);
     }
 }

@@ -5,6 +5,7 @@ import java.util.Optional;
 import java.util.OptionalInt;
 import nightlag.stages.fault.ReductionFault;
 import nightlag.stages.moduli.ModulusReading;
+import nightlag.stages.moduli.SharedErrors;
 import nightlag.stages.sweep.FrequencySweeps;
 
 /** Readings of the complex modulus to a discrete spectrum. */
@@ -24,6 +25,16 @@ public final class DiscreteFit {
      * @throws ReductionFault where there are too few frequencies, or too few readings for the modes wanted
      */
     public static DiscreteSpectrum fit(List<ModulusReading> readings, SpectrumPlan plan) throws ReductionFault {
+        return fit(readings, SharedErrors.none(), plan);
+    }
+
+    /**
+     * Fits readings several of which are off together: the modes are the same, the uncertainties hold the shared errors too.
+     *
+     * @throws ReductionFault likewise
+     */
+    public static DiscreteSpectrum fit(List<ModulusReading> readings, SharedErrors shared, SpectrumPlan plan)
+            throws ReductionFault {
         int frequencies = FrequencySweeps.distinct(
                 readings.stream().mapToDouble(ModulusReading::angularFrequency).toArray());
         if (frequencies < LEAST_FREQUENCIES) {
@@ -40,11 +51,12 @@ public final class DiscreteFit {
         }
         if (WeightedReadings.haveCovariances(readings)) {
             WeightedReadings weighted = WeightedReadings.byCovariances(readings);
-            return new DiscreteSpectrum(weighted, plan.fitEquilibrium(), search(weighted, plan), Optional.empty());
+            return new DiscreteSpectrum(
+                    weighted, shared, plan.fitEquilibrium(), search(weighted, plan), Optional.empty());
         }
         SelfWeighing.Weighed weighed = new SelfWeighing(readings, weighted -> search(weighted, plan)).fit();
         return new DiscreteSpectrum(
-                weighed.readings(), plan.fitEquilibrium(), weighed.modes(), Optional.of(weighed.model()));
+                weighed.readings(), shared, plan.fitEquilibrium(), weighed.modes(), Optional.of(weighed.model()));
     }
 
     private static FittedModes search(WeightedReadings weighted, SpectrumPlan plan) {

@@ -9,6 +9,7 @@ import java.util.function.Function;
 import java.util.function.ToDoubleFunction;
 import nightlag.stages.fault.Reason;
 import nightlag.stages.moduli.Marker;
+import nightlag.stages.moduli.SharedErrors;
 
 /** The relaxation modes fitted to readings, the retardation modes that are their exact inverse, and what follows from both. */
 public final class DiscreteSpectrum implements FittedSpectrum {
@@ -22,14 +23,20 @@ public final class DiscreteSpectrum implements FittedSpectrum {
     /**
      * What a fit gave.
      *
+     * @param shared what several of the readings are off by together
      * @param solid whether an equilibrium modulus was looked for
      * @param model how the errors were taken to grow, where the readings had none of their own
      */
-    DiscreteSpectrum(WeightedReadings readings, boolean solid, FittedModes modes, Optional<ErrorModel> model) {
+    DiscreteSpectrum(
+            WeightedReadings readings,
+            SharedErrors shared,
+            boolean solid,
+            FittedModes modes,
+            Optional<ErrorModel> model) {
         relaxation = RelaxationModes.of(modes.equilibrium(), modes.times(), modes.strengths());
         retardation = relaxation.retardation();
         window = SupportedWindow.of(readings.lowestFrequency(), readings.highestFrequency());
-        uncertainty = new ModeUncertainty(readings, solid, modes);
+        uncertainty = new ModeUncertainty(readings, shared, solid, modes);
         unshownSolid = solid && relaxation.isLiquid();
         this.model = model;
     }

@@ -7,6 +7,7 @@ import java.util.Optional;
 import java.util.OptionalDouble;
 import java.util.function.Function;
 import java.util.function.ToDoubleFunction;
+import nightlag.stages.moduli.SharedErrors;
 import nightlag.stages.numeric.LinearisedUncertainty;
 
 /**
@@ -15,6 +16,7 @@ import nightlag.stages.numeric.LinearisedUncertainty;
  *
  * <p>Where the slowest mode lies beyond the window the data support, more could lie there unseen: what the strongest
  * {@link UnseenMode} would change is added in quadrature. The same at the fast end.
+ * What several readings are off by together moves the modes as the linearised fit says.
  * Where rounded readings come back, the scatter of one is added too, for all of a plateau err alike.
  */
 final class ModeUncertainty {
@@ -29,8 +31,12 @@ final class ModeUncertainty {
     private final OptionalDouble scatter;
     private final List<RelaxationModes> alternatives;
     private final double commonError;
+    private final SharedErrors shared;
+    private final double[][] jacobian;
+    private final double[] byLnFrequency;
+    private final double[] byLnModulus;
 
-    ModeUncertainty(WeightedReadings readings, boolean solid, FittedModes modes) {
+    ModeUncertainty(WeightedReadings readings, SharedErrors shared, boolean solid, FittedModes modes) {
         ModeRefinement refinement = new ModeRefinement(readings, solid);
         this.modes = modes;
         int free = readings.rows() - modes.parameters();
@@ -42,7 +48,15 @@ final class ModeUncertainty {
         }
         double[] priors = new double[modes.parameters()];
         Arrays.fill(priors, PRIOR_U_OF_LOGARITHM);
-        linearised = new LinearisedUncertainty(refinement.jacobian(modes), priors);
+        jacobian = refinement.jacobian(modes);
+        linearised = new LinearisedUncertainty(jacobian, priors);
+        this.shared = shared;
+        // frequency and time stand in a mode as their product
+        byLnFrequency = sum(modes.count(), 2 * modes.count(), readings.rows());
+        double[] strengths = sum(0, modes.count(), readings.rows());
+        double[] whole = sum(2 * modes.count(), jacobian.length, readings.rows());
+        byLnModulus = new double[whole.length];
+        Arrays.setAll(byLnModulus, row -> -strengths[row] - whole[row]);
         commonError = !readings.scatterKnown() && readings.repeating() ? scatter.orElse(0) : 0;
         alternatives = new ArrayList<>();
         if (scatter.isPresent()) {
@@ -88,12 +102,43 @@ final class ModeUncertainty {
         for (int k = 0; k < values.length; k++) {
             double square = Math.pow(scatter.getAsDouble() * linearised.of(derivatives[k]), 2);
             square += Math.pow(commonError * values[k], 2);
+            square += sharedVariance(derivatives[k]);
             for (double[] other : others) {
                 square += Math.pow(other[k] - values[k], 2);
             }
             u[k] = Math.sqrt(square);
         }
         return Optional.of(u);
+    }
+
+    /** The sum of some columns of the Jacobian. */
+    private double[] sum(int from, int to, int rows) {
+        double[] sum = new double[rows];
+        for (int j = from; j < to; j++) {
+            for (int row = 0; row < sum.length; row++) {
+                sum[row] += jacobian[j][row];
+            }
+        }
+        return sum;
+    }
+
+    /** Of a figure with these derivatives: each reading moves its two residuals, the modes follow. */
+    private double sharedVariance(double[] derivatives) {
+        if (shared.isNone()) {
+            return 0;
+        }
+        double[] influence = linearised.influence(derivatives);
+        double[] figureByLnFrequency = new double[byLnFrequency.length / 2];
+        double[] figureByLnModulus = new double[byLnFrequency.length / 2];
+        for (int row = 0; row < byLnFrequency.length; row++) {
+            double byResidual = 0;
+            for (int j = 0; j < influence.length; j++) {
+                byResidual -= influence[j] * jacobian[j][row];
+            }
+            figureByLnFrequency[row / 2] += byResidual * byLnFrequency[row];
+            figureByLnModulus[row / 2] += byResidual * byLnModulus[row];
+        }
+        return shared.variance(figureByLnFrequency, figureByLnModulus);
     }
 
     /** The material with one fitted number moved by a step of its logarithm. */

@@ -6,8 +6,7 @@ package nightlag.stages.superposition;
  * @param anchor the one that stays
  * @param horizontal ln a
  * @param vertical ln b
- * @param horizontalCovariance covariance of ln a; rows of zeros where it is not fitted
- * @param verticalCovariance covariance of ln b; likewise
+ * @param covariance covariance of ln a and, following them, ln b; rows of zeros where one is not fitted
  * @param squares Σ rᵀ W r of all points
  * @param cost the same and the penalty on roughness
  * @param freedom degrees of freedom of the squares
@@ -18,8 +17,7 @@ record JointCurves(
         int anchor,
         double[] horizontal,
         double[] vertical,
-        double[][] horizontalCovariance,
-        double[][] verticalCovariance,
+        double[][] covariance,
         double squares,
         double cost,
         Freedom freedom,

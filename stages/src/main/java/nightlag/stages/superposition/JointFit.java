@@ -240,23 +240,17 @@ final class JointFit implements LevenbergMarquardt.Problem {
                 }
             }
             int[] index = parameters().toArray();
-            double[][] horizontal = new double[isotherms][isotherms];
-            double[][] verticalCovariance = new double[isotherms][isotherms];
+            double[][] ofAll = new double[2 * isotherms][2 * isotherms];
             for (int i = 0; i < index.length; i++) {
                 for (int j = 0; j < index.length; j++) {
-                    if (index[i] < isotherms && index[j] < isotherms) {
-                        horizontal[index[i]][index[j]] = covariance[i][j];
-                    } else if (index[i] >= isotherms && index[j] >= isotherms) {
-                        verticalCovariance[index[i] - isotherms][index[j] - isotherms] = covariance[i][j];
-                    }
+                    ofAll[index[i]][index[j]] = covariance[i][j];
                 }
             }
             return new JointCurves(
                     anchor,
                     Arrays.copyOf(all, isotherms),
                     up,
-                    horizontal,
-                    verticalCovariance,
+                    ofAll,
                     squares,
                     cost,
                     freedom,

@@ -1,18 +1,18 @@
 package nightlag.stages.superposition;
 
-import java.util.DoubleSummaryStatistics;
+import java.util.Arrays;
 import java.util.List;
 import java.util.Optional;
-import java.util.OptionalDouble;
-import java.util.function.Function;
 import nightlag.stages.fault.Reason;
 import nightlag.stages.moduli.Marker;
+import nightlag.stages.moduli.SharedErrors;
 
 /**
  * All isotherms of a lot as one curve at the reference temperature.
  *
  * @param shifts one an isotherm, temperature rising, those left out included
  * @param points points of the isotherms used, reduced frequency rising
+ * @param sharedErrors what the points of an isotherm are off by together, because of its shifts
  * @param markers the law's constants, the activation energy, and the misfit with its verdict
  * @param law the law of the shifts, at the reference temperature; empty where none was asked for or could be had
  * @param notes isotherms left out, and whatever else is worth knowing
@@ -20,10 +20,11 @@ import nightlag.stages.moduli.Marker;
 public record MasterCurve(
         List<ShiftFactor> shifts,
         List<MasterPoint> points,
+        SharedErrors sharedErrors,
         List<Marker> markers,
         Optional<FittedLaw> law,
         List<Reason> notes) {
-    private static final double LN_10 = Math.log(10);
+    private static final double NEAR_DECADES = 0.25;
 
     /** Copies the lists. */
     public MasterCurve {
@@ -33,30 +34,24 @@ public record MasterCurve(
         notes = List.copyOf(notes);
     }
 
-    /** u of ln a of the isotherms that carry the curve at a reduced angular frequency, rad/s; their rms where there are several. */
+    /** u of ln a of the curve at a reduced angular frequency, rad/s, from the isotherms whose points lie there. */
     public double lnAU(double reducedFrequency) {
-        return LN_10 * rms(reducedFrequency, ShiftFactor::log10AU);
+        return Math.sqrt(sharedErrors.variance(shares(reducedFrequency), new double[points.size()]));
     }
 
     /** u of ln b there, likewise; zero where it is not fitted. */
     public double lnBU(double reducedFrequency) {
-        return LN_10 * rms(reducedFrequency, ShiftFactor::log10BU);
+        return Math.sqrt(sharedErrors.variance(new double[points.size()], shares(reducedFrequency)));
     }
 
-    private double rms(double reducedFrequency, Function<ShiftFactor, OptionalDouble> u) {
-        return Math.sqrt(shifts.stream()
-                .filter(shift -> shift.used() && carries(shift.temperatureK(), reducedFrequency))
-                .mapToDouble(shift -> u.apply(shift).orElse(0))
-                .map(one -> one * one)
-                .average()
-                .orElse(0));
-    }
-
-    private boolean carries(double temperatureK, double reducedFrequency) {
-        DoubleSummaryStatistics range = points.stream()
-                .filter(point -> point.temperatureK() == temperatureK)
-                .mapToDouble(point -> point.reduced().angularFrequency())
-                .summaryStatistics();
-        return range.getMin() <= reducedFrequency && reducedFrequency <= range.getMax();
+    /** The part each point has in the curve at a frequency: all within a quarter of a decade alike, else the nearest alone. */
+    private double[] shares(double reducedFrequency) {
+        double[] distances = points.stream()
+                .mapToDouble(point ->
+                        Math.abs(Math.log10(point.reduced().angularFrequency() / reducedFrequency)))
+                .toArray();
+        double reach = Math.max(NEAR_DECADES, Arrays.stream(distances).min().orElse(0));
+        double near = Arrays.stream(distances).filter(distance -> distance <= reach).count();
+        return Arrays.stream(distances).map(distance -> distance <= reach ? 1 / near : 0).toArray();
     }
 }

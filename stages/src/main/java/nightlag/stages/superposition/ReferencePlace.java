@@ -63,14 +63,36 @@ record ReferencePlace(double[] weights, double lowerK, double upperK) {
         return sum;
     }
 
-    /** Variance of a value less the weighted mean. */
-    double varianceOfDifference(int index, double[][] covariance) {
-        double sum = 0;
-        for (int i = 0; i < weights.length; i++) {
-            for (int j = 0; j < weights.length; j++) {
-                sum += ((i == index ? 1 : 0) - weights[i]) * ((j == index ? 1 : 0) - weights[j]) * covariance[i][j];
+    /**
+     * Covariance of values less their weighted mean.
+     *
+     * @param covariance of several kinds of values, each kind one value an isotherm, one kind after the other
+     */
+    double[][] ofDifferences(double[][] covariance) {
+        return transposed(lessMeanRows(transposed(lessMeanRows(covariance))));
+    }
+
+    private double[][] lessMeanRows(double[][] rows) {
+        double[][] less = new double[rows.length][];
+        for (int i = 0; i < rows.length; i++) {
+            less[i] = rows[i].clone();
+            int first = i - i % weights.length;
+            for (int k = 0; k < weights.length; k++) {
+                for (int j = 0; weights[k] != 0 && j < rows.length; j++) {
+                    less[i][j] -= weights[k] * rows[first + k][j];
+                }
             }
         }
-        return Math.max(0, sum);
+        return less;
+    }
+
+    private static double[][] transposed(double[][] square) {
+        double[][] transposed = new double[square.length][square.length];
+        for (int i = 0; i < square.length; i++) {
+            for (int j = 0; j < square.length; j++) {
+                transposed[j][i] = square[i][j];
+            }
+        }
+        return transposed;
     }
 }

@@ -13,6 +13,7 @@ import nightlag.stages.moduli.Marker;
 import nightlag.stages.moduli.Moduli;
 import nightlag.stages.moduli.ModuliCovariance;
 import nightlag.stages.moduli.ModulusReading;
+import nightlag.stages.moduli.SharedErrors;
 import nightlag.stages.numeric.EvenSplines;
 import nightlag.stages.superposition.SuperpositionPlan.VerticalShift;
 
@@ -124,7 +125,8 @@ public final class Superposition {
                                     true)
                             : leftOut(i));
         }
-        return new MasterCurve(shifts, sorted(moved(isotherm, 0, lnB)), List.of(), Optional.empty(), notes);
+        return new MasterCurve(
+                shifts, sorted(moved(isotherm, 0, lnB)), SharedErrors.none(), List.of(), Optional.empty(), notes);
     }
 
     private MasterCurve superposed(int[] used, Superposed superposed) throws ReductionFault {
@@ -138,7 +140,7 @@ public final class Superposition {
         LawOutcome law = LawFit.fit(
                 temperatures,
                 scaled(common.horizontal(), 1 / LN_10),
-                scaled(common.horizontalCovariance(), common.widening() / (LN_10 * LN_10)),
+                scaled(common.covariance(), common.widening() / (LN_10 * LN_10)),
                 common.anchor(),
                 reference,
                 plan.law());
@@ -151,6 +153,7 @@ public final class Superposition {
         // a density shift is zero at the reference by its formula
         boolean fitted = plan.verticalShift() == VerticalShift.FITTED;
         double zeroB = fitted ? place.mean(common.vertical()) : 0;
+        double[][] covariance = scaled(place.ofDifferences(common.covariance()), common.widening());
 
         List<ShiftFactor> shifts = new ArrayList<>();
         List<MasterPoint> points = new ArrayList<>();
@@ -170,10 +173,10 @@ public final class Superposition {
                     reference,
                     temperatures[k],
                     OptionalDouble.of(lnA / LN_10),
-                    OptionalDouble.of(u(place.varianceOfDifference(k, common.horizontalCovariance()), common)),
+                    OptionalDouble.of(u(covariance[k][k])),
                     OptionalDouble.of(lnB / LN_10),
                     fitted
-                            ? OptionalDouble.of(u(place.varianceOfDifference(k, common.verticalCovariance()), common))
+                            ? OptionalDouble.of(u(covariance[used.length + k][used.length + k]))
                             : OptionalDouble.empty(),
                     law.law()
                             .map(found -> OptionalDouble.of(found.log10A(temperatures[k])))
@@ -184,7 +187,12 @@ public final class Superposition {
         }
         List<Marker> markers = new ArrayList<>(law.markers());
         markers.add(Verdict.of(superposed, plan).marker(reference));
-        return new MasterCurve(shifts, sorted(points), markers, law.law(), notes);
+        List<MasterPoint> rising = sorted(points);
+        int[] isothermOf = rising.stream()
+                .mapToInt(point -> Arrays.binarySearch(temperatures, point.temperatureK()))
+                .toArray();
+        return new MasterCurve(
+                shifts, rising, SharedErrors.of(isothermOf, covariance), markers, law.law(), notes);
     }
 
     /**
@@ -200,8 +208,8 @@ public final class Superposition {
                                 .toArray());
     }
 
-    private static double u(double variance, JointCurves common) {
-        return Math.sqrt(variance * common.widening()) / LN_10;
+    private static double u(double variance) {
+        return Math.sqrt(Math.max(0, variance)) / LN_10;
     }
 
     private static double[] scaled(double[] values, double factor) {

@@ -6,12 +6,14 @@ import java.util.List;
 import java.util.Locale;
 import java.util.Optional;
 import java.util.OptionalDouble;
+import java.util.stream.IntStream;
 import nightlag.stages.fault.Reason;
 import nightlag.stages.moduli.Findings;
 import nightlag.stages.moduli.Marker;
 import nightlag.stages.moduli.Moduli;
 import nightlag.stages.moduli.ModuliCovariance;
 import nightlag.stages.moduli.ModulusReading;
+import nightlag.stages.moduli.SharedErrors;
 
 /**
  * The flow curve of a liquid from its moduli, by the rule of Cox and Merz (J. Polym. Sci. 28 (1958) 619): the viscosity at a
@@ -32,9 +34,12 @@ public final class FlowCurve {
     private final SweepName name;
     private final double temperatureK;
     private final List<ModulusReading> readings;
+    private final SharedErrors sharedErrors;
     private final boolean weighted;
 
-    private FlowCurve(SweepName name, double temperatureK, List<ModulusReading> readings) {
+    private FlowCurve(
+            SweepName name, double temperatureK, List<ModulusReading> readings, SharedErrors sharedErrors) {
+        this.sharedErrors = sharedErrors;
         this.name = name;
         this.temperatureK = temperatureK;
         this.readings = readings;
@@ -49,15 +54,28 @@ public final class FlowCurve {
      * @param temperatureK their temperature, K
      * @param readings moduli in shear of a frequency sweep or a master curve, in any order; where any comes without its
      *     covariance all are weighted alike
+     * @param sharedErrors what several of them are off by together
      */
-    public static Findings of(SweepName name, double temperatureK, List<ModulusReading> readings) {
-        List<ModulusReading> rising = readings.stream()
-                .filter(reading -> reading.angularFrequency() > 0
-                        && reading.moduli().complex().isFinite()
-                        && reading.moduli().magnitudePa() > 0)
-                .sorted(Comparator.comparingDouble(ModulusReading::angularFrequency))
-                .toList();
-        return new FlowCurve(name, temperatureK, rising).find();
+    public static Findings of(
+            SweepName name, double temperatureK, List<ModulusReading> readings, SharedErrors sharedErrors) {
+        int[] rising = IntStream.range(0, readings.size())
+                .filter(i -> isUsable(readings.get(i)))
+                .boxed()
+                .sorted(Comparator.comparingDouble(i -> readings.get(i).angularFrequency()))
+                .mapToInt(Integer::intValue)
+                .toArray();
+        return new FlowCurve(
+                        name,
+                        temperatureK,
+                        IntStream.of(rising).mapToObj(readings::get).toList(),
+                        sharedErrors.ofReadings(rising))
+                .find();
+    }
+
+    private static boolean isUsable(ModulusReading reading) {
+        return reading.angularFrequency() > 0
+                && reading.moduli().complex().isFinite()
+                && reading.moduli().magnitudePa() > 0;
     }
 
     private Findings find() {
@@ -81,7 +99,8 @@ public final class FlowCurve {
                 readings.stream()
                         .mapToDouble(reading -> weighted ? relativeU(reading.moduli()) : 1)
                         .toArray(),
-                weighted);
+                weighted,
+                sharedErrors);
         return Findings.together(fit.fitAll().stream()
                 .map(fitted -> frequencies < needed(fitted.law()) ? tooFew(fitted.law()) : findings(fitted))
                 .toList());

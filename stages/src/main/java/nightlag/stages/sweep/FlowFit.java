@@ -4,6 +4,7 @@ import java.util.Arrays;
 import java.util.List;
 import java.util.Optional;
 import java.util.stream.IntStream;
+import nightlag.stages.moduli.SharedErrors;
 import nightlag.stages.numeric.Cholesky;
 import nightlag.stages.numeric.LevenbergMarquardt;
 import nightlag.stages.numeric.VarianceRatio;
@@ -28,6 +29,7 @@ final class FlowFit {
     private final double[] logViscosities;
     private final double[] relativeU;
     private final boolean weighted;
+    private final SharedErrors sharedErrors;
 
     /**
      * What is fitted.
@@ -36,8 +38,15 @@ final class FlowFit {
      * @param logViscosities ln η
      * @param relativeU relative uncertainties of η, or all alike and {@code weighted} false
      * @param weighted whether they are known
+     * @param sharedErrors what several points are off by together
      */
-    FlowFit(double[] logRates, double[] logViscosities, double[] relativeU, boolean weighted) {
+    FlowFit(
+            double[] logRates,
+            double[] logViscosities,
+            double[] relativeU,
+            boolean weighted,
+            SharedErrors sharedErrors) {
+        this.sharedErrors = sharedErrors;
         this.logRates = logRates;
         this.logViscosities = logViscosities;
         this.relativeU = relativeU;
@@ -239,10 +248,32 @@ final class FlowFit {
                 : Cholesky.of(information).map(factored -> {
                     double[][] inverse = factored.inverse();
                     return IntStream.range(0, p.length)
-                            .mapToDouble(i -> Math.sqrt(scale * inverse[i][i]))
+                            .mapToDouble(i -> Math.sqrt(scale * inverse[i][i] + shared(columns, inverse[i])))
                             .toArray();
                 });
         return new Fitted(law, p, u, chiSquared, Math.sqrt(rms), misses);
+    }
+
+    /**
+     * What the shared errors add to the variance of a parameter: a point off by δ in ln ω and by β in ln |G*| is off by β − δ in
+     * ln η, and the law is asked for at another rate; the parameters follow by the linearised fit.
+     *
+     * @param columns derivatives of the residuals by the parameters
+     * @param row of the inverse of their products
+     */
+    private double shared(double[][] columns, double[] row) {
+        double[] byLnFrequency = new double[logRates.length];
+        double[] byLnModulus = new double[logRates.length];
+        for (int i = 0; i < logRates.length; i++) {
+            double byResidual = 0;
+            for (int j = 0; j < row.length; j++) {
+                byResidual -= row[j] * columns[j][i];
+            }
+            // rate and time stand in the law as their product
+            byLnFrequency[i] = byResidual * (columns[FlowLaw.TIME][i] + 1 / relativeU[i]);
+            byLnModulus[i] = -byResidual / relativeU[i];
+        }
+        return sharedErrors.variance(byLnFrequency, byLnModulus);
     }
 
     /**

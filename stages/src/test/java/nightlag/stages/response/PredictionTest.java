@@ -13,6 +13,7 @@ import java.util.Optional;
 import java.util.OptionalDouble;
 import java.util.OptionalInt;
 import nightlag.stages.fault.ReductionFault;
+import nightlag.stages.moduli.SharedErrors;
 import nightlag.stages.response.ResponseRow.Band;
 import nightlag.stages.spectrum.DiscreteFit;
 import nightlag.stages.spectrum.DiscreteSpectrum;
@@ -209,7 +210,7 @@ class PredictionTest {
     private static TemperatureShift shift(Optional<FittedLaw> law) {
         List<ShiftFactor> shifts = List.of(isotherm(290, 1), isotherm(300, 0), isotherm(320, -2));
         return TemperatureShift.of(
-                REFERENCE, Optional.of(new MasterCurve(shifts, List.of(), List.of(), law, List.of())));
+                REFERENCE, Optional.of(new MasterCurve(shifts, List.of(), SharedErrors.none(), List.of(), law, List.of())));
     }
 
     private static ShiftFactor isotherm(double temperatureK, double log10A) {

@@ -15,16 +15,16 @@ import nightlag.stages.numeric.Complex;
  *
  * @param modulus G*(ω a₁, ω a₂), with a₂ the shift of a second mechanism if there is one
  */
-record ModelMaterial(String name, Curve modulus) {
+public record ModelMaterial(String name, Curve modulus) {
     /** G* as it depends on frequency. */
-    interface Curve {
+    public interface Curve {
         Complex at(double reduced, double reducedOfSecond);
     }
 
-    static final double REFERENCE_K = 443.15;
+    public static final double REFERENCE_K = 443.15;
 
     /** Laun's eight modes (Rheol. Acta 17 (1978) 1; from memory). */
-    static final ModelMaterial LAUN = new ModelMaterial(
+    public static final ModelMaterial LAUN = new ModelMaterial(
             "eight modes of a melt",
             (w, second) -> maxwell(w, new double[] {1e-4, 1e-3, 1e-2, 1e-1, 1, 10, 100, 1000}, new double[] {
                 1.29e5, 9.48e4, 5.86e4, 2.67e4, 9.80e3, 1.89e3, 1.80e2, 1.00
@@ -42,7 +42,7 @@ record ModelMaterial(String name, Curve modulus) {
             (w, second) -> maxwell(w, new double[] {1e-3, 1e-2, 1e-1, 1}, new double[] {1e5, 5e4, 3e4, 1e4})
                     .plus(maxwell(second, new double[] {0.1, 1, 10, 100}, new double[] {2e4, 1e4, 5e3, 2e3})));
 
-    private static Complex maxwell(double frequency, double[] times, double[] strengths) {
+    public static Complex maxwell(double frequency, double[] times, double[] strengths) {
         double storage = 0;
         double loss = 0;
         for (int i = 0; i < times.length; i++) {
@@ -59,12 +59,12 @@ record ModelMaterial(String name, Curve modulus) {
     }
 
     /** log10 a_T of every material here: WLF with C1 = 8.86, C2 = 101.6 K about the reference (Williams, Landel &amp; Ferry 1955). */
-    static double log10A(double temperatureK) {
+    public static double log10A(double temperatureK) {
         return -8.86 * (temperatureK - REFERENCE_K) / (101.6 + temperatureK - REFERENCE_K);
     }
 
     /** Temperatures about the reference. */
-    static double[] temperatures(int count, double stepK) {
+    public static double[] temperatures(int count, double stepK) {
         double[] temperatures = new double[count];
         for (int i = 0; i < count; i++) {
             temperatures[i] = REFERENCE_K + stepK * (i - count / 2);
@@ -80,7 +80,7 @@ record ModelMaterial(String name, Curve modulus) {
      * @param secondShare log shift of a second mechanism over that of the first
      * @param lnB what ln G is lowered by, over temperature in K
      */
-    List<IsothermReadings> isotherms(
+    public List<IsothermReadings> isotherms(
             double[] temperatures,
             int perDecade,
             double noise,

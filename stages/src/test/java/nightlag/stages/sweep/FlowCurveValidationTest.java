@@ -18,6 +18,7 @@ import nightlag.stages.moduli.Marker;
 import nightlag.stages.moduli.Moduli;
 import nightlag.stages.moduli.ModuliCovariance;
 import nightlag.stages.moduli.ModulusReading;
+import nightlag.stages.moduli.SharedErrors;
 import nightlag.stages.numeric.Complex;
 import org.junit.jupiter.api.Tag;
 import org.junit.jupiter.api.Test;
@@ -86,7 +87,7 @@ class FlowCurveValidationTest {
     }
 
     private static Findings found(List<ModulusReading> readings) {
-        return FlowCurve.of(new SweepName("", ""), 298.15, readings);
+        return FlowCurve.of(new SweepName("", ""), 298.15, readings, SharedErrors.none());
     }
 
     private static void assertIs(Map<String, Marker> markers, String property, double expected, double relative) {
