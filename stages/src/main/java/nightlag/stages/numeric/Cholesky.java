@@ -135,6 +135,18 @@ public final class Cholesky {
         return sum;
     }
 
+    /** The columns of the upper triangle R with RᵀR = M, each of n values. */
+    public double[][] columns() {
+        int n = scale.length;
+        double[][] columns = new double[n][n];
+        for (int j = 0; j < n; j++) {
+            for (int i = 0; i <= j; i++) {
+                columns[j][i] = lower[j][i] / scale[j];
+            }
+        }
+        return columns;
+    }
+
     /** M⁻¹. */
     public double[][] inverse() {
         int n = scale.length;

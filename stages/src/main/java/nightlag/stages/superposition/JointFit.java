@@ -2,11 +2,13 @@ package nightlag.stages.superposition;
 
 import java.util.Arrays;
 import java.util.List;
+import java.util.Optional;
 import java.util.OptionalDouble;
 import java.util.stream.IntStream;
 import nightlag.stages.numeric.Cholesky;
 import nightlag.stages.numeric.EvenSplines;
 import nightlag.stages.numeric.LevenbergMarquardt;
+import nightlag.stages.superposition.FollowedCurves.Push;
 import nightlag.stages.superposition.LogIsotherm.LogReading;
 
 /**
@@ -27,6 +29,7 @@ final class JointFit implements LevenbergMarquardt.Problem {
 
     private final List<LogReading> readings;
     private final int[] isotherm;
+    private final int[] firstPoint;
     private final int isotherms;
     private final int anchor;
     private final double[] vertical;
@@ -35,6 +38,7 @@ final class JointFit implements LevenbergMarquardt.Problem {
     private final Smoothness smoothness;
     private final Weights weights;
     private EvenSplines splines = new EvenSplines(0, 1, 1);
+    private Optional<Condensed> last = Optional.empty();
 
     /**
      * Isotherms that overlap.
@@ -56,10 +60,10 @@ final class JointFit implements LevenbergMarquardt.Problem {
         this.readings = used.stream().flatMap(one -> one.readings().stream()).toList();
         this.isotherms = used.size();
         this.isotherm = new int[readings.size()];
-        int point = 0;
+        this.firstPoint = new int[isotherms + 1];
         for (int i = 0; i < isotherms; i++) {
-            Arrays.fill(isotherm, point, point + used.get(i).size(), i);
-            point += used.get(i).size();
+            firstPoint[i + 1] = firstPoint[i] + used.get(i).size();
+            Arrays.fill(isotherm, firstPoint[i], firstPoint[i + 1], i);
         }
         this.anchor = anchor;
         this.vertical = vertical.clone();
@@ -111,6 +115,7 @@ final class JointFit implements LevenbergMarquardt.Problem {
             from = Math.min(from, reduced);
             to = Math.max(to, reduced);
         }
+        last = Optional.empty();
         splines = EvenSplines.covering(from - REACH, to + REACH, OwnCurves.SPLINE_STEP);
     }
 
@@ -172,60 +177,42 @@ final class JointFit implements LevenbergMarquardt.Problem {
             }
         }
 
-        private double[] residuals() {
-            return joined(differences, pair.penalties(coefficients));
-        }
-
-        /** The derivative of the residuals by a shift, the curves following it. */
-        private double[] derivative(int parameter) {
-            double[] derivative = direct(parameter);
-            double[] follow = pair.coefficients(derivative);
-            double[] taken = pair.fitted(follow);
-            double[] rough = pair.penalties(follow);
-            for (int i = 0; i < derivative.length; i++) {
-                derivative[i] -= taken[i];
-            }
-            for (int i = 0; i < rough.length; i++) {
-                rough[i] = -rough[i];
-            }
-            return joined(derivative, rough);
-        }
-
-        /** How the coefficients follow a shift, with the sign turned. */
-        private double[] follow(int parameter) {
-            return pair.coefficients(direct(parameter));
-        }
-
-        /** The derivative of the differences by a shift while the curves stay. */
-        private double[] direct(int parameter) {
+        /** What each shift does to its own points while the curves stay. */
+        private Push push(int parameter) {
             int own = parameter % isotherms;
             boolean horizontal = parameter < isotherms;
-            double[] direct = new double[differences.length];
-            for (int p = 0; p < isotherm.length; p++) {
-                if (isotherm[p] == own) {
-                    weights.whiten(
-                            p,
-                            horizontal ? pair.design().slope(p, 0, coefficients) : -1,
-                            horizontal ? pair.design().slope(p, 1, coefficients) : -1,
-                            direct);
-                }
+            int from = firstPoint[own];
+            double[] values = new double[2 * (firstPoint[own + 1] - from)];
+            for (int p = from; p < firstPoint[own + 1]; p++) {
+                weights.whiten(
+                        p,
+                        p - from,
+                        horizontal ? pair.design().slope(p, 0, coefficients) : -1,
+                        horizontal ? pair.design().slope(p, 1, coefficients) : -1,
+                        values);
             }
-            return direct;
+            return new Push(from, values);
+        }
+
+        private FollowedCurves followed() {
+            return FollowedCurves.of(pair, parameters().mapToObj(this::push).toList(), differences);
+        }
+
+        private double squares() {
+            return Arrays.stream(differences).map(one -> one * one).sum();
+        }
+
+        private double cost() {
+            return squares()
+                    + Arrays.stream(pair.penalties(coefficients))
+                            .map(one -> one * one)
+                            .sum();
         }
 
         private JointCurves curves(double[] free) {
-            double[][] jacobian = parameters().mapToObj(this::derivative).toArray(double[][]::new);
-            double[][] covariance = inverseOfProducts(jacobian);
-            double[][] follow = parameters().mapToObj(this::follow).toArray(double[][]::new);
-            Freedom freedom = pair.freedom(follow, covariance);
-            double squares = 0;
-            for (double difference : differences) {
-                squares += difference * difference;
-            }
-            double cost = squares;
-            for (double penalty : pair.penalties(coefficients)) {
-                cost += penalty * penalty;
-            }
+            FollowedCurves followed = followed();
+            double[][] covariance = factored(followed.information()).inverse();
+            Freedom freedom = pair.freedom(followed.follow(), covariance);
             double[] all = allOf(free);
             double[] up = new double[isotherms];
             for (int i = 0; i < isotherms; i++) {
@@ -251,32 +238,53 @@ final class JointFit implements LevenbergMarquardt.Problem {
                     Arrays.copyOf(all, isotherms),
                     up,
                     ofAll,
-                    squares,
-                    cost,
+                    squares(),
+                    cost(),
                     freedom,
                     isotherm,
                     departures);
         }
     }
 
-    private static double[] joined(double[] first, double[] second) {
-        double[] both = Arrays.copyOf(first, first.length + second.length);
-        System.arraycopy(second, 0, both, first.length, second.length);
-        return both;
+    /**
+     * The search's own, smaller problem at a place: as many residuals as there are shifts and one more, with the same sum of
+     * squares, the same gradient and the same JᵀJ as all of them have.
+     */
+    private final class Condensed {
+        private final double[] place;
+        private final double[] residuals;
+        private final double[][] jacobian;
+
+        Condensed(double[] free) {
+            place = free.clone();
+            State state = new State(free);
+            FollowedCurves followed = state.followed();
+            Cholesky factored = factored(followed.information());
+            double[] along = factored.whiten(followed.gradient());
+            double rest = state.cost() - Arrays.stream(along).map(one -> one * one).sum();
+            residuals = Arrays.copyOf(along, along.length + 1);
+            residuals[along.length] = Math.sqrt(Math.max(0, rest));
+            jacobian = Arrays.stream(factored.columns())
+                    .map(column -> Arrays.copyOf(column, column.length + 1))
+                    .toArray(double[][]::new);
+        }
+    }
+
+    private Condensed at(double[] free) {
+        if (last.isEmpty() || !Arrays.equals(last.get().place, free)) {
+            last = Optional.of(new Condensed(free));
+        }
+        return last.get();
     }
 
     @Override
     public double[] residuals(double[] free) {
-        return new State(free).residuals();
+        return at(free).residuals;
     }
 
     @Override
     public double[][] jacobian(double[] free) {
-        return jacobian(new State(free));
-    }
-
-    private double[][] jacobian(State state) {
-        return parameters().mapToObj(state::derivative).toArray(double[][]::new);
+        return at(free).jacobian;
     }
 
     /** The numbers of the shifts that are fitted: isotherms for ln a, and isotherms from their count on for ln b. */
@@ -284,22 +292,13 @@ final class JointFit implements LevenbergMarquardt.Problem {
         return IntStream.range(0, fitVertical ? 2 * isotherms : isotherms).filter(k -> k % isotherms != anchor);
     }
 
-    /** (JᵀJ)⁻¹, where nothing is known of a shift a hundred e-folds either way. */
-    private static double[][] inverseOfProducts(double[][] jacobian) {
-        int n = jacobian.length;
-        double[][] products = new double[n][n];
-        for (int i = 0; i < n; i++) {
-            for (int j = 0; j <= i; j++) {
-                double sum = 0;
-                for (int k = 0; k < jacobian[i].length; k++) {
-                    sum += jacobian[i][k] * jacobian[j][k];
-                }
-                products[i][j] = sum;
-            }
-            products[i][i] += UNKNOWN_PRECISION + ROUNDING * products[i][i];
+    /** JᵀJ, where nothing is known of a shift a hundred e-folds either way. */
+    private static Cholesky factored(double[][] information) {
+        double[][] known = new double[information.length][];
+        for (int i = 0; i < known.length; i++) {
+            known[i] = information[i].clone();
+            known[i][i] += UNKNOWN_PRECISION + ROUNDING * known[i][i];
         }
-        return Cholesky.of(products)
-                .orElseThrow(() -> new IllegalStateException("shifts without information"))
-                .inverse();
+        return Cholesky.of(known).orElseThrow(() -> new IllegalStateException("shifts without information"));
     }
 }

@@ -41,10 +41,25 @@ final class SmoothPair {
      * @param whitened values over their uncertainties, two a point
      */
     double[] coefficients(double[] whitened) {
+        return normal.solve(transposed(0, whitened));
+    }
+
+    /**
+     * The transposed splines times whitened values of some points.
+     *
+     * @param from the first of the points
+     * @param whitened two values each
+     */
+    double[] transposed(int from, double[] whitened) {
         double[] right = new double[design.coefficients()];
-        for (int p = 0; p < design.points(); p++) {
-            design.addTransposed(p, weights, whitened[2 * p], whitened[2 * p + 1], right);
+        for (int i = 0; i < whitened.length / 2; i++) {
+            design.addTransposed(from + i, weights, whitened[2 * i], whitened[2 * i + 1], right);
         }
+        return right;
+    }
+
+    /** The coefficients that a right-hand side of the normal equations asks for. */
+    double[] solve(double[] right) {
         return normal.solve(right);
     }
 
@@ -102,8 +117,8 @@ final class SmoothPair {
             double[] penalty = penaltyColumn(j);
             shares[j] = normal.solve(penalty);
             double[] projected = new double[follow.length];
-            for (int k = 0; k < follow.length; k++) {
-                for (int i = 0; i < n; i++) {
+            for (int i = 0; i < n; i++) {
+                for (int k = 0; penalty[i] != 0 && k < follow.length; k++) {
                     projected[k] += follow[k][i] * penalty[i];
                 }
             }

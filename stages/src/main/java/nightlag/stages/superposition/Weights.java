@@ -59,7 +59,12 @@ record Weights(double[] storage, double[] mixed, double[] loss, double logDeterm
 
     /** Lᵀ (first, second) of a point, into a vector that holds two values a point. */
     void whiten(int point, double first, double second, double[] into) {
-        into[2 * point] = storage[point] * first + mixed[point] * second;
-        into[2 * point + 1] = loss[point] * second;
+        whiten(point, point, first, second, into);
+    }
+
+    /** The same, into a vector that holds the point at another place. */
+    void whiten(int point, int at, double first, double second, double[] into) {
+        into[2 * at] = storage[point] * first + mixed[point] * second;
+        into[2 * at + 1] = loss[point] * second;
     }
 }
