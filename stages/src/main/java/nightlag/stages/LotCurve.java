@@ -3,6 +3,7 @@ package nightlag.stages;
 import java.util.ArrayList;
 import java.util.List;
 import java.util.Optional;
+import java.util.function.Function;
 import nightlag.stages.fault.Reason;
 import nightlag.stages.fault.ReductionFault;
 import nightlag.stages.geometry.DeformationMode;
@@ -17,6 +18,7 @@ import nightlag.stages.superposition.SuperpositionPlan;
 import nightlag.stages.sweep.FrequencySweeps;
 import nightlag.stages.sweep.Isotherm;
 import nightlag.stages.sweep.LotIsotherms;
+import nightlag.stages.sweep.SweepName;
 
 /**
  * The modulus of a lot over frequency at one temperature: its master curve, or its only isotherm.
@@ -81,9 +83,13 @@ record LotCurve(
 
     private static LotCurve superposed(List<Isotherm> isotherms, SuperpositionPlan plan) throws ReductionFault {
         DeformationMode deformation = deformation(isotherms);
+        Function<SweepName, String> specimen = specimens(isotherms);
         MasterCurve master = Superposition.of(
                 isotherms.stream()
-                        .map(isotherm -> new IsothermReadings(isotherm.temperatureK(), isotherm.readings()))
+                        .map(isotherm -> new IsothermReadings(
+                                isotherm.temperatureK(),
+                                isotherm.readings(),
+                                isotherm.names().stream().map(specimen).toList()))
                         .toList(),
                 plan);
         List<Reason> notes = new ArrayList<>(master.notes());
@@ -103,6 +109,17 @@ record LotCurve(
                 master.sharedErrors(),
                 Optional.of(master),
                 notes);
+    }
+
+    /** What readings of one specimen have in common; where each isotherm is of one specimen, repeats are told by their sweep. */
+    private static Function<SweepName, String> specimens(List<Isotherm> isotherms) {
+        boolean several = isotherms.stream()
+                .anyMatch(isotherm -> isotherm.names().stream()
+                                .map(SweepName::specimen)
+                                .distinct()
+                                .count()
+                        > 1);
+        return several ? SweepName::specimen : SweepName::sweep;
     }
 
     /** The only isotherm with enough frequencies for a spectrum; where none has enough, the lowest. */

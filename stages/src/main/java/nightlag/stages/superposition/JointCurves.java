@@ -6,6 +6,7 @@ package nightlag.stages.superposition;
  * @param anchor the one that stays
  * @param horizontal ln a
  * @param vertical ln b
+ * @param levels what else was added to ln G, as the specimens of an isotherm differ from all others
  * @param covariance covariance of ln a and, following them, ln b; rows of zeros where one is not fitted
  * @param squares Σ rᵀ W r of all points
  * @param cost the same and the penalty on roughness
@@ -17,6 +18,7 @@ record JointCurves(
         int anchor,
         double[] horizontal,
         double[] vertical,
+        double[] levels,
         double[][] covariance,
         double squares,
         double cost,

@@ -35,6 +35,8 @@ final class JointFit implements LevenbergMarquardt.Problem {
     private final double[] vertical;
     private final boolean fitVertical;
     private final double verticalLimit;
+    private final SpecimenOffsets specimens;
+    private final boolean fitLevels;
     private final Smoothness smoothness;
     private final Weights weights;
     private EvenSplines splines = new EvenSplines(0, 1, 1);
@@ -47,6 +49,7 @@ final class JointFit implements LevenbergMarquardt.Problem {
      * @param anchor the one that stays where it is
      * @param vertical ln b; where it is fitted, where it starts, zero for the anchor
      * @param verticalLimit the most that ln b may become; empty where it is not fitted
+     * @param specimens what was taken off the points of these isotherms before
      * @param weights of all points, one isotherm after the other
      * @param smoothness of the curves
      */
@@ -55,6 +58,7 @@ final class JointFit implements LevenbergMarquardt.Problem {
             int anchor,
             double[] vertical,
             OptionalDouble verticalLimit,
+            SpecimenOffsets specimens,
             Weights weights,
             Smoothness smoothness) {
         this.readings = used.stream().flatMap(one -> one.readings().stream()).toList();
@@ -68,7 +72,9 @@ final class JointFit implements LevenbergMarquardt.Problem {
         this.anchor = anchor;
         this.vertical = vertical.clone();
         this.fitVertical = verticalLimit.isPresent();
-        this.verticalLimit = verticalLimit.orElse(0);
+        this.verticalLimit = verticalLimit.orElse(Double.POSITIVE_INFINITY);
+        this.specimens = specimens;
+        this.fitLevels = !fitVertical && Arrays.stream(specimens.levelVariances()).anyMatch(one -> one > 0);
         this.smoothness = smoothness;
         this.weights = weights;
     }
@@ -79,7 +85,7 @@ final class JointFit implements LevenbergMarquardt.Problem {
      * @param horizontal ln a, zero for the anchor
      */
     JointCurves from(double[] horizontal) {
-        double[] place = new double[isotherms + (fitVertical ? isotherms : 0)];
+        double[] place = new double[isotherms + (fitVertical || fitLevels ? isotherms : 0)];
         System.arraycopy(horizontal, 0, place, 0, isotherms);
         if (fitVertical) {
             System.arraycopy(vertical, 0, place, isotherms, isotherms);
@@ -104,7 +110,7 @@ final class JointFit implements LevenbergMarquardt.Problem {
                 inside &= free[k] > lower[k] && free[k] < upper[k];
             }
         }
-        return new State(free).curves(free);
+        return new State(free).curves();
     }
 
     private void layOut(double[] all) {
@@ -119,25 +125,15 @@ final class JointFit implements LevenbergMarquardt.Problem {
         splines = EvenSplines.covering(from - REACH, to + REACH, OwnCurves.SPLINE_STEP);
     }
 
-    /** All but the anchor's. */
     private double[] freeOf(double[] all) {
-        double[] free = new double[all.length - all.length / isotherms];
-        int k = 0;
-        for (int i = 0; i < all.length; i++) {
-            if (i % isotherms != anchor) {
-                free[k++] = all[i];
-            }
-        }
-        return free;
+        return parameters().mapToDouble(k -> all[k]).toArray();
     }
 
     private double[] allOf(double[] free) {
-        double[] all = new double[fitVertical ? 2 * isotherms : isotherms];
-        int k = 0;
-        for (int i = 0; i < all.length; i++) {
-            if (i % isotherms != anchor) {
-                all[i] = free[k++];
-            }
+        double[] all = new double[2 * isotherms];
+        int[] parameters = parameters().toArray();
+        for (int k = 0; k < parameters.length; k++) {
+            all[parameters[k]] = free[k];
         }
         return all;
     }
@@ -146,14 +142,19 @@ final class JointFit implements LevenbergMarquardt.Problem {
         return fitVertical ? all[isotherms + i] : vertical[i];
     }
 
+    private double levelOf(double[] all, int i) {
+        return fitLevels ? all[isotherms + i] : 0;
+    }
+
     /** The curves for given shifts. */
     private final class State {
         private final SmoothPair pair;
         private final double[] coefficients;
         private final double[] differences;
+        private final double[] all;
 
         State(double[] free) {
-            double[] all = allOf(free);
+            all = allOf(free);
             double[] places = new double[isotherm.length];
             for (int p = 0; p < places.length; p++) {
                 places[p] = readings.get(p).x() + all[isotherm[p]];
@@ -163,7 +164,7 @@ final class JointFit implements LevenbergMarquardt.Problem {
             double[] observed = new double[2 * places.length];
             for (int p = 0; p < places.length; p++) {
                 LogReading reading = readings.get(p);
-                double up = verticalOf(all, isotherm[p]);
+                double up = verticalOf(all, isotherm[p]) + levelOf(all, isotherm[p]);
                 weights.whiten(
                         p,
                         reading.has(0) ? reading.y()[0] + up : 0,
@@ -194,12 +195,27 @@ final class JointFit implements LevenbergMarquardt.Problem {
             return new Push(from, values);
         }
 
+        /** With what is known of levels, which counts as one more residual each. */
         private FollowedCurves followed() {
-            return FollowedCurves.of(pair, parameters().mapToObj(this::push).toList(), differences);
+            FollowedCurves followed =
+                    FollowedCurves.of(pair, parameters().mapToObj(this::push).toList(), differences);
+            int[] parameters = parameters().toArray();
+            for (int k = 0; fitLevels && k < parameters.length; k++) {
+                if (parameters[k] >= isotherms) {
+                    double variance = specimens.levelVariances()[parameters[k] - isotherms];
+                    followed.information()[k][k] += 1 / variance;
+                    followed.gradient()[k] += all[parameters[k]] / variance;
+                }
+            }
+            return followed;
         }
 
         private double squares() {
-            return Arrays.stream(differences).map(one -> one * one).sum();
+            double squares = Arrays.stream(differences).map(one -> one * one).sum();
+            for (int i = 0; fitLevels && i < isotherms; i++) {
+                squares += levelOf(all, i) * levelOf(all, i) / specimens.levelVariances()[i];
+            }
+            return squares;
         }
 
         private double cost() {
@@ -209,20 +225,23 @@ final class JointFit implements LevenbergMarquardt.Problem {
                             .sum();
         }
 
-        private JointCurves curves(double[] free) {
+        private JointCurves curves() {
             FollowedCurves followed = followed();
             double[][] covariance = factored(followed.information()).inverse();
-            Freedom freedom = pair.freedom(followed.follow(), covariance);
-            double[] all = allOf(free);
+            int further = (fitLevels ? isotherms : 0) - Arrays.stream(specimens.fitted()).sum();
+            Freedom freedom = pair.freedom(followed.follow(), covariance).plus(new Freedom(further, further));
             double[] up = new double[isotherms];
+            double[] levels = new double[isotherms];
             for (int i = 0; i < isotherms; i++) {
                 up[i] = verticalOf(all, i);
+                levels[i] = levelOf(all, i);
             }
             double[][] departures = new double[isotherm.length][2];
             for (int p = 0; p < isotherm.length; p++) {
                 for (int modulus = 0; modulus < 2; modulus++) {
                     departures[p][modulus] = readings.get(p).y()[modulus]
                             + up[isotherm[p]]
+                            + levels[isotherm[p]]
                             - pair.design().value(p, modulus, coefficients);
                 }
             }
@@ -230,13 +249,20 @@ final class JointFit implements LevenbergMarquardt.Problem {
             double[][] ofAll = new double[2 * isotherms][2 * isotherms];
             for (int i = 0; i < index.length; i++) {
                 for (int j = 0; j < index.length; j++) {
-                    ofAll[index[i]][index[j]] = covariance[i][j];
+                    // a level is none of the shifts
+                    if (!fitLevels || Math.max(index[i], index[j]) < isotherms) {
+                        ofAll[index[i]][index[j]] = covariance[i][j];
+                    }
                 }
+            }
+            for (int i = 0; fitVertical && i < isotherms; i++) {
+                ofAll[isotherms + i][isotherms + i] += specimens.levelVariances()[i];
             }
             return new JointCurves(
                     anchor,
                     Arrays.copyOf(all, isotherms),
                     up,
+                    levels,
                     ofAll,
                     squares(),
                     cost(),
@@ -287,9 +313,13 @@ final class JointFit implements LevenbergMarquardt.Problem {
         return at(free).jacobian;
     }
 
-    /** The numbers of the shifts that are fitted: isotherms for ln a, and isotherms from their count on for ln b. */
+    /**
+     * The numbers of what is fitted: isotherms for ln a, and isotherms from their count on for ln b or for their levels. The
+     * anchor has no shift, but a level like the others.
+     */
     private IntStream parameters() {
-        return IntStream.range(0, fitVertical ? 2 * isotherms : isotherms).filter(k -> k % isotherms != anchor);
+        return IntStream.range(0, fitVertical || fitLevels ? 2 * isotherms : isotherms)
+                .filter(k -> k % isotherms != anchor || (fitLevels && k >= isotherms));
     }
 
     /** JᵀJ, where nothing is known of a shift a hundred e-folds either way. */

@@ -3,6 +3,7 @@ package nightlag.stages.superposition;
 import java.util.Comparator;
 import java.util.List;
 import java.util.Optional;
+import java.util.stream.IntStream;
 import nightlag.stages.moduli.Moduli;
 import nightlag.stages.moduli.ModuliCovariance;
 import nightlag.stages.moduli.ModulusReading;
@@ -25,16 +26,18 @@ record LogIsotherm(double temperatureK, List<LogReading> readings, int missing) 
      *
      * @param x ln ω
      * @param y ln G' and ln G''; NaN where the modulus is missing
+     * @param specimen whose it is
      * @param covariance u²(ln G'), u²(ln G'') and their covariance; empty where none is known
      */
-    record LogReading(double x, double[] y, Optional<ModuliCovariance> covariance) {
-        private static LogReading of(ModulusReading reading) {
+    record LogReading(double x, double[] y, String specimen, Optional<ModuliCovariance> covariance) {
+        private static LogReading of(ModulusReading reading, String specimen) {
             Moduli moduli = reading.moduli();
             double storage = moduli.storagePa();
             double loss = moduli.lossPa();
             return new LogReading(
                     Math.log(reading.angularFrequency()),
                     new double[] {log(storage), log(loss)},
+                    specimen,
                     moduli.covariance()
                             .map(known -> new ModuliCovariance(
                                     known.storageVariance() / (storage * storage),
@@ -48,7 +51,7 @@ record LogIsotherm(double temperatureK, List<LogReading> readings, int missing) 
 
         /** The point on reduced axes. */
         LogReading moved(double lnA, double lnB) {
-            return new LogReading(x + lnA, new double[] {y[0] + lnB, y[1] + lnB}, covariance);
+            return new LogReading(x + lnA, new double[] {y[0] + lnB, y[1] + lnB}, specimen, covariance);
         }
 
         boolean has(int modulus) {
@@ -57,8 +60,9 @@ record LogIsotherm(double temperatureK, List<LogReading> readings, int missing) 
     }
 
     static LogIsotherm of(IsothermReadings isotherm) {
-        List<LogReading> all = isotherm.readings().stream()
-                .map(LogReading::of)
+        List<LogReading> all = IntStream.range(0, isotherm.readings().size())
+                .mapToObj(i -> LogReading.of(
+                        isotherm.readings().get(i), isotherm.specimens().get(i)))
                 .sorted(Comparator.comparingDouble(LogReading::x))
                 .toList();
         int missing = all.stream()

@@ -1,6 +1,7 @@
 package nightlag.stages.superposition;
 
 import java.util.ArrayList;
+import java.util.Arrays;
 import java.util.List;
 import java.util.Optional;
 import nightlag.stages.numeric.EvenSplines;
@@ -49,15 +50,27 @@ record OwnCurves(List<OwnCurve> curves, Smoothness smoothness) {
             return new Prepared(isotherm.readings(), new PairDesign(splines, places));
         }
 
+        private double[] whitened(Weights weights) {
+            double[] observed = new double[2 * readings.size()];
+            for (int p = 0; p < readings.size(); p++) {
+                LogReading reading = readings.get(p);
+                weights.whiten(p, reading.has(0) ? reading.y()[0] : 0, reading.has(1) ? reading.y()[1] : 0, observed);
+            }
+            return observed;
+        }
+
+        /** The curve less the points, whitened by the weights it was fitted with. */
+        double[] differences(OwnCurve curve, Weights weights) {
+            double[] differences = curve.pair().fitted(curve.coefficients());
+            double[] observed = whitened(weights);
+            Arrays.setAll(differences, i -> differences[i] - observed[i]);
+            return differences;
+        }
+
         Optional<OwnCurve> fit(boolean useGiven, Smoothness smoothness) {
             Weights weights = Weights.of(readings, useGiven, smoothness);
             return SmoothPair.of(design, weights, smoothness).map(pair -> {
-                double[] observed = new double[2 * readings.size()];
-                for (int p = 0; p < readings.size(); p++) {
-                    LogReading reading = readings.get(p);
-                    weights.whiten(
-                            p, reading.has(0) ? reading.y()[0] : 0, reading.has(1) ? reading.y()[1] : 0, observed);
-                }
+                double[] observed = whitened(weights);
                 double[] coefficients = pair.coefficients(observed);
                 double[] fitted = pair.fitted(coefficients);
                 double squares = 0;

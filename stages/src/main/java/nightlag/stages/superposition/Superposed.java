@@ -11,9 +11,15 @@ import nightlag.stages.superposition.OwnCurves.OwnCurve;
  * @param common all of them about common curves
  * @param ownSquares Σ rᵀ W r of the same points, each isotherm about its own curves
  * @param ownFreedom its degrees of freedom
+ * @param specimensDiffer rms of ln |G*| by which the specimens of an isotherm differed before that was taken off
  */
 record Superposed(
-        List<Integer> used, boolean verticalLimited, JointCurves common, double ownSquares, Freedom ownFreedom) {
+        List<Integer> used,
+        boolean verticalLimited,
+        JointCurves common,
+        double ownSquares,
+        Freedom ownFreedom,
+        double specimensDiffer) {
     /** Own curves that leave fewer degrees of freedom say nothing about scatter. */
     private static final double LEAST_FREEDOM = 4;
 
@@ -21,14 +27,21 @@ record Superposed(
         used = List.copyOf(used);
     }
 
-    static Superposed of(List<Integer> used, boolean verticalLimited, JointCurves common, OwnCurves own) {
+    static Superposed of(
+            List<Integer> used,
+            boolean verticalLimited,
+            JointCurves common,
+            OwnCurves own,
+            SpecimenOffsets specimens) {
+        int constants = used.stream().mapToInt(i -> specimens.fitted()[i]).sum();
         List<OwnCurve> each = used.stream().map(own.curves()::get).toList();
         return new Superposed(
                 used,
                 verticalLimited,
                 common,
                 each.stream().mapToDouble(OwnCurve::residualSquares).sum(),
-                each.stream().map(OwnCurve::freedom).reduce(Freedom.NONE, Freedom::plus));
+                each.stream().map(OwnCurve::freedom).reduce(new Freedom(-constants, -constants), Freedom::plus),
+                specimens.rms());
     }
 
     /** Degrees of freedom of what common curves add to the squares of own ones. */

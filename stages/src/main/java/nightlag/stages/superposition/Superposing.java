@@ -24,6 +24,7 @@ final class Superposing {
     private static final int ROUNDS = 3;
 
     private final List<LogIsotherm> isotherms;
+    private final SpecimenOffsets specimens;
     private final SuperpositionPlan plan;
     private final boolean useGiven;
     private final boolean fitVertical;
@@ -32,8 +33,9 @@ final class Superposing {
     private final OwnCurves own;
     private final List<StartingShifts> starts;
 
-    private Superposing(List<LogIsotherm> isotherms, SuperpositionPlan plan) {
-        this.isotherms = isotherms;
+    private Superposing(SpecimenOffsets specimens, SuperpositionPlan plan) {
+        this.isotherms = specimens.isotherms();
+        this.specimens = specimens;
         this.plan = plan;
         this.useGiven = isotherms.stream().allMatch(LogIsotherm::hasCovariances);
         this.fitVertical = plan.verticalShift() == VerticalShift.FITTED;
@@ -54,7 +56,7 @@ final class Superposing {
      * @param isotherms two or more, temperature rising, each with enough places for curves of its own
      */
     static Superposed of(List<LogIsotherm> isotherms, SuperpositionPlan plan) {
-        return new Superposing(isotherms, plan).superposed();
+        return new Superposing(SpecimenOffsets.of(isotherms), plan).superposed();
     }
 
     /** ln b that is known beforehand: ρ0 T0/(ρ T) with ρ0/ρ = 1 + α (T − T0). */
@@ -75,7 +77,7 @@ final class Superposing {
             List<Integer> overlapping = overlapping(chain, common);
             if (overlapping.size() == chain.size()) {
                 return tellsSmoothness()
-                        ? Superposed.of(chain, limit == LIMITED, common, own)
+                        ? Superposed.of(chain, limit == LIMITED, common, own, specimens)
                         : resmoothed(chain, limit, common);
             }
             if (fitVertical && limit == UNLIMITED) {
@@ -99,7 +101,7 @@ final class Superposing {
             List<LogReading> moved = new ArrayList<>();
             for (int k = 0; k < chain.size(); k++) {
                 double a = common.horizontal()[k];
-                double b = common.vertical()[k];
+                double b = common.vertical()[k] + common.levels()[k];
                 isotherms.get(chain.get(k)).readings().forEach(reading -> moved.add(reading.moved(a, b)));
             }
             moved.sort(Comparator.comparingDouble(LogReading::x));
@@ -108,7 +110,7 @@ final class Superposing {
             common = joint(chain, limit, smoothness).from(common.horizontal());
         }
         OwnCurves equallySmooth = OwnCurves.of(prepared, useGiven, smoothness).orElse(own);
-        return Superposed.of(chain, limit == LIMITED, common, equallySmooth);
+        return Superposed.of(chain, limit == LIMITED, common, equallySmooth, specimens);
     }
 
     /** Of the fits from all starts the best of those that leave most isotherms together: what is apart meets nothing. */
@@ -134,6 +136,7 @@ final class Superposing {
                 anchor(chain),
                 chain.stream().mapToDouble(i -> vertical[i]).toArray(),
                 fitVertical ? OptionalDouble.of(limit) : OptionalDouble.empty(),
+                specimens.ofIsotherms(chain),
                 Weights.of(readings, useGiven, smoothness),
                 smoothness);
     }

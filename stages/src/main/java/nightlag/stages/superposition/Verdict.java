@@ -13,8 +13,10 @@ import nightlag.stages.numeric.VarianceRatio;
  * @param toleranceDecades what counts as small
  * @param ratio F; empty where own curves leave nothing to compare with
  * @param chance how often chance alone makes F larger
+ * @param specimensDiffer rms of ln |G*| by which specimens of an isotherm differed, taken off before; zero for single ones
  */
-record Verdict(double misfitDecades, double toleranceDecades, OptionalDouble ratio, double chance) {
+record Verdict(
+        double misfitDecades, double toleranceDecades, OptionalDouble ratio, double chance, double specimensDiffer) {
     private static final double SMALL_CHANCE = 0.01;
     private static final double TINY_CHANCE = 1e-6;
     /** Points that scatter by so many times the tolerance, as specimens that differ do, hide what a test could see. */
@@ -23,12 +25,14 @@ record Verdict(double misfitDecades, double toleranceDecades, OptionalDouble rat
     static Verdict of(Superposed superposed, SuperpositionPlan plan) {
         double misfit = superposed.common().misfitDecades();
         if (!superposed.canBeCompared()) {
-            return new Verdict(misfit, plan.toleranceDecades(), OptionalDouble.empty(), 1);
+            return new Verdict(
+                    misfit, plan.toleranceDecades(), OptionalDouble.empty(), 1, superposed.specimensDiffer());
         }
         double ratio = superposed.varianceRatio();
         double chance = VarianceRatio.chanceOfMore(
                 ratio, superposed.addedFreedom(), superposed.ownFreedom().ofErrors());
-        return new Verdict(misfit, plan.toleranceDecades(), OptionalDouble.of(ratio), chance);
+        return new Verdict(
+                misfit, plan.toleranceDecades(), OptionalDouble.of(ratio), chance, superposed.specimensDiffer());
     }
 
     boolean superposes() {
@@ -62,16 +66,27 @@ record Verdict(double misfitDecades, double toleranceDecades, OptionalDouble rat
             return String.format(
                     Locale.ROOT,
                     "superposes as far as can be told: isotherms have too few frequencies for curves of their own; tolerance"
-                            + " %.3g decades",
-                    toleranceDecades);
+                            + " %.3g decades%s",
+                    toleranceDecades,
+                    specimens());
         }
         return String.format(
                 Locale.ROOT,
                 "%s: rms distance from common curves in decades; against curves of its own for each isotherm F = %.3g, %s;"
-                        + " tolerance %.3g decades",
+                        + " tolerance %.3g decades%s",
                 verdict(),
                 ratio.getAsDouble(),
                 chance < TINY_CHANCE ? "p below 1e-6" : String.format(Locale.ROOT, "p = %.2g", chance),
-                toleranceDecades);
+                toleranceDecades,
+                specimens());
+    }
+
+    private String specimens() {
+        return specimensDiffer > 0
+                ? String.format(
+                        Locale.ROOT,
+                        "; specimens of an isotherm differ by factors of |G*| (rms %.2g decades), which are taken off first",
+                        specimensDiffer / Math.log(10))
+                : "";
     }
 }

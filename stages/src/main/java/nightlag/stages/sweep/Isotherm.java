@@ -21,11 +21,19 @@ public record Isotherm(double temperatureK, List<ModulusPoint> points) {
         return readings(points);
     }
 
+    /** Names of the points with both, in their order: specimen and sweep of each reading. */
+    public List<SweepName> names() {
+        return points.stream().filter(Isotherm::isReading).map(SweepName::of).toList();
+    }
+
+    private static boolean isReading(ModulusPoint point) {
+        return point.frequencyHz().isPresent() && point.moduli().isPresent();
+    }
+
     /** The moduli over frequency of points, likewise. */
     static List<ModulusReading> readings(List<ModulusPoint> points) {
         return points.stream()
-                .filter(point ->
-                        point.frequencyHz().isPresent() && point.moduli().isPresent())
+                .filter(Isotherm::isReading)
                 .map(point -> new ModulusReading(
                         2 * Math.PI * point.frequencyHz().orElseThrow(),
                         point.moduli().orElseThrow()))
