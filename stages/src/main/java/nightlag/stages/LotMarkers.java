@@ -73,12 +73,7 @@ final class LotMarkers {
                         .map(marker -> withShifts(marker, master))
                         .toList(),
                 onCurve.notes()));
-        flow(
-                new SweepName("", ""),
-                curve.temperatureK(),
-                curve.deformation(),
-                curve.readings(),
-                curve.sharedErrors());
+        flow(new SweepName("", ""), curve.temperatureK(), curve.deformation(), curve.readings(), curve.sharedErrors());
     }
 
     /**

@@ -120,7 +120,9 @@ record LotSpectrum(
                 DiscreteSpectrum free = plan.modes().isEmpty()
                         ? spectrum
                         : DiscreteFit.fit(
-                                curve.readings(), curve.sharedErrors(), new SpectrumPlan(plan.fitEquilibrium(), OptionalInt.empty(), true));
+                                curve.readings(),
+                                curve.sharedErrors(),
+                                new SpectrumPlan(plan.fitEquilibrium(), OptionalInt.empty(), true));
                 List<SpectrumRow> rows = new ArrayList<>();
                 List<Reason> notes = new ArrayList<>();
                 if (plan.continuous()) {

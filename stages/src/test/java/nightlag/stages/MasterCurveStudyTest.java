@@ -45,8 +45,8 @@ class MasterCurveStudyTest {
     /** Two groups of modes with a plateau between them, invented. */
     private static final ModelMaterial PLATEAU = new ModelMaterial(
             "melt with a plateau",
-            (w, second) -> ModelMaterial.maxwell(
-                    w, new double[] {1e-5, 1e-4, 10, 30}, new double[] {1e7, 3e6, 2e5, 1e5}));
+            (w, second) ->
+                    ModelMaterial.maxwell(w, new double[] {1e-5, 1e-4, 10, 30}, new double[] {1e7, 3e6, 2e5, 1e5}));
 
     /** |η*| = η0/(1 + (λω)^m), to which the law of Carreau and Yasuda is equal with a = m and n = 1 − m; invented. */
     private static final double VISCOSITY = 1e5;
@@ -77,7 +77,7 @@ class MasterCurveStudyTest {
             double a = Math.pow(10, ModelMaterial.log10A(referenceK));
             double b = Math.exp(lnB(referenceK));
             Map<String, Double> truth = new LinkedHashMap<>();
-            if (material == CROSS) {
+            if (material.equals(CROSS)) {
                 truth.put("cross_zero_rate_viscosity", VISCOSITY * a / b);
                 truth.put("cross_time", TIME * a);
                 truth.put("cross_exponent", EXPONENT);
@@ -87,7 +87,7 @@ class MasterCurveStudyTest {
                 truth.put("carreau_yasuda_exponent", 1 - EXPONENT);
                 return truth;
             }
-            if (material == PLATEAU) {
+            if (material.equals(PLATEAU)) {
                 truth.put("plateau_modulus", at(lowestLossFactor()).re() / b);
                 return truth;
             }
@@ -147,8 +147,8 @@ class MasterCurveStudyTest {
     @MethodSource("conditions")
     void intervalsHoldTheTruth(Condition condition) throws ReductionFault {
         double referenceK = TEMPERATURES_K[0];
-        SuperpositionPlan plan = new SuperpositionPlan(
-                referenceK, condition.vertical(), OptionalDouble.empty(), ShiftLaw.AUTO, 0.003);
+        SuperpositionPlan plan =
+                new SuperpositionPlan(referenceK, condition.vertical(), OptionalDouble.empty(), ShiftLaw.AUTO, 0.003);
         Map<String, Double> truth = condition.truth(referenceK);
         Map<String, Tally> tallies = new LinkedHashMap<>();
         truth.keySet().forEach(property -> tallies.put(property, new Tally()));
@@ -182,10 +182,16 @@ class MasterCurveStudyTest {
     private static List<Marker> figures(Condition condition, LotCurve curve) {
         List<Marker> onCurve = LotMarkers.of(List.of(), SweepPlan.withDefaults(), Optional.of(curve))
                 .markers();
-        return condition.material() == ModelMaterial.LAUN
+        return condition.material().equals(ModelMaterial.LAUN)
                 ? Stream.concat(
                                 onCurve.stream(),
-                                LotSpectrum.of(curve, new SpectrumPlan(false, OptionalInt.empty(), false)).markers().stream())
+                                LotSpectrum.of(
+                                        Optional.of(curve),
+                                        List.of(),
+                                        new SpectrumPlan(false, OptionalInt.empty(), false),
+                                        OptionalDouble.empty())
+                                        .markers()
+                                        .stream())
                         .toList()
                 : onCurve;
     }
@@ -194,8 +200,7 @@ class MasterCurveStudyTest {
     private static void add(Map<String, Tally> tallies, Map<String, Double> truth, List<Marker> markers) {
         truth.forEach((property, exact) -> markers.stream()
                 .filter(marker -> marker.property().equals(property))
-                .min((left, right) ->
-                        Double.compare(Math.abs(left.value() - exact), Math.abs(right.value() - exact)))
+                .min((left, right) -> Double.compare(Math.abs(left.value() - exact), Math.abs(right.value() - exact)))
                 .ifPresent(marker -> tallies.get(property)
                         .add(marker.value() / exact - 1, marker.u().orElseThrow() / marker.value())));
     }

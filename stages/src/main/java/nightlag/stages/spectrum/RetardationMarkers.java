@@ -5,7 +5,6 @@ import java.util.List;
 import java.util.Locale;
 import java.util.Optional;
 import java.util.OptionalDouble;
-import java.util.function.ToDoubleFunction;
 import java.util.stream.IntStream;
 import nightlag.stages.fault.Reason;
 import nightlag.stages.moduli.Findings;
@@ -19,17 +18,19 @@ import nightlag.stages.moduli.Marker;
 final class RetardationMarkers {
     /** A figure, and how it is told. */
     private enum Figure {
-        MEAN_RETARDATION_TIME("s", "sum of j λ² over the sum of j λ", RetardationModes::meanTimeS),
-        EQUILIBRIUM_COMPLIANCE("1/Pa", "instantaneous compliance and sum of j", RetardationModes::recoverablePerPa);
+        MEAN_RETARDATION_TIME("s", "sum of j λ² over the sum of j λ"),
+        EQUILIBRIUM_COMPLIANCE("1/Pa", "instantaneous compliance and sum of j");
 
         private final String unit;
         private final String method;
-        private final ToDoubleFunction<RetardationModes> value;
 
-        Figure(String unit, String method, ToDoubleFunction<RetardationModes> value) {
+        Figure(String unit, String method) {
             this.unit = unit;
             this.method = method;
-            this.value = value;
+        }
+
+        double of(RetardationModes modes) {
+            return this == MEAN_RETARDATION_TIME ? modes.meanTimeS() : modes.recoverablePerPa();
         }
 
         String property() {
@@ -54,12 +55,11 @@ final class RetardationMarkers {
             if (!exists) {
                 continue;
             }
-            double value = figure.value.applyAsDouble(modes);
-            double beyond = value
-                    - figure.value.applyAsDouble(
-                            withoutSlow(modes, spectrum.window().longestS()));
-            Optional<double[]> u = spectrum.uncertainties(
-                    relaxation -> new double[] {figure.value.applyAsDouble(relaxation.retardation())});
+            double value = figure.of(modes);
+            double beyond =
+                    value - figure.of(withoutSlow(modes, spectrum.window().longestS()));
+            Optional<double[]> u =
+                    spectrum.uncertainties(relaxation -> new double[] {figure.of(relaxation.retardation())});
             double known = u.map(one -> one[0]).orElse(0.0);
             if (beyond > known) {
                 notes.add(SpectrumReason.MARKER_BEYOND_DATA.with(

@@ -74,7 +74,8 @@ final class JointFit implements LevenbergMarquardt.Problem {
         this.fitVertical = verticalLimit.isPresent();
         this.verticalLimit = verticalLimit.orElse(Double.POSITIVE_INFINITY);
         this.specimens = specimens;
-        this.fitLevels = !fitVertical && Arrays.stream(specimens.levelVariances()).anyMatch(one -> one > 0);
+        this.fitLevels =
+                !fitVertical && Arrays.stream(specimens.levelVariances()).anyMatch(one -> one > 0);
         this.smoothness = smoothness;
         this.weights = weights;
     }
@@ -228,7 +229,8 @@ final class JointFit implements LevenbergMarquardt.Problem {
         private JointCurves curves() {
             FollowedCurves followed = followed();
             double[][] covariance = factored(followed.information()).inverse();
-            int further = (fitLevels ? isotherms : 0) - Arrays.stream(specimens.fitted()).sum();
+            int further = (fitLevels ? isotherms : 0)
+                    - Arrays.stream(specimens.fitted()).sum();
             Freedom freedom = pair.freedom(followed.follow(), covariance).plus(new Freedom(further, further));
             double[] up = new double[isotherms];
             double[] levels = new double[isotherms];
@@ -287,7 +289,8 @@ final class JointFit implements LevenbergMarquardt.Problem {
             FollowedCurves followed = state.followed();
             Cholesky factored = factored(followed.information());
             double[] along = factored.whiten(followed.gradient());
-            double rest = state.cost() - Arrays.stream(along).map(one -> one * one).sum();
+            double rest =
+                    state.cost() - Arrays.stream(along).map(one -> one * one).sum();
             residuals = Arrays.copyOf(along, along.length + 1);
             residuals[along.length] = Math.sqrt(Math.max(0, rest));
             jacobian = Arrays.stream(factored.columns())

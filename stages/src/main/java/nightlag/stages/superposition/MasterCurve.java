@@ -47,11 +47,13 @@ public record MasterCurve(
     /** The part each point has in the curve at a frequency: all within a quarter of a decade alike, else the nearest alone. */
     private double[] shares(double reducedFrequency) {
         double[] distances = points.stream()
-                .mapToDouble(point ->
-                        Math.abs(Math.log10(point.reduced().angularFrequency() / reducedFrequency)))
+                .mapToDouble(point -> Math.abs(Math.log10(point.reduced().angularFrequency() / reducedFrequency)))
                 .toArray();
         double reach = Math.max(NEAR_DECADES, Arrays.stream(distances).min().orElse(0));
-        double near = Arrays.stream(distances).filter(distance -> distance <= reach).count();
-        return Arrays.stream(distances).map(distance -> distance <= reach ? 1 / near : 0).toArray();
+        double near =
+                Arrays.stream(distances).filter(distance -> distance <= reach).count();
+        return Arrays.stream(distances)
+                .map(distance -> distance <= reach ? 1 / near : 0)
+                .toArray();
     }
 }

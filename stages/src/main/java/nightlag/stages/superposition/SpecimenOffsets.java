@@ -51,7 +51,11 @@ record SpecimenOffsets(List<LogIsotherm> isotherms, int[] fitted, double[] level
         double[] levels = new double[count];
         for (int i = 0; i < count; i++) {
             Map<String, Double> own = constants.get(i);
-            levels[i] = mean(own) - own.keySet().stream().mapToDouble(everywhere::get).average().orElse(0);
+            levels[i] = mean(own)
+                    - own.keySet().stream()
+                            .mapToDouble(everywhere::get)
+                            .average()
+                            .orElse(0);
             for (Map.Entry<String, Double> one : own.entrySet()) {
                 squares += Math.pow(one.getValue() - levels[i] - everywhere.get(one.getKey()), 2);
                 apart += Math.pow(one.getValue() - mean(own), 2);
@@ -78,7 +82,10 @@ record SpecimenOffsets(List<LogIsotherm> isotherms, int[] fitted, double[] level
     }
 
     private static double mean(Map<String, Double> values) {
-        return values.values().stream().mapToDouble(Double::doubleValue).average().orElse(0);
+        return values.values().stream()
+                .mapToDouble(Double::doubleValue)
+                .average()
+                .orElse(0);
     }
 
     private static LogIsotherm without(LogIsotherm isotherm, Map<String, Double> constants, double level) {
@@ -133,7 +140,8 @@ record SpecimenOffsets(List<LogIsotherm> isotherms, int[] fitted, double[] level
                 .computeIfAbsent(reading.specimen(), key -> new ArrayList<>())
                 .add(reading));
         List<String> mostFirst = bySpecimen.entrySet().stream()
-                .sorted((left, right) -> right.getValue().size() - left.getValue().size())
+                .sorted((left, right) ->
+                        right.getValue().size() - left.getValue().size())
                 .map(Map.Entry::getKey)
                 .toList();
         List<String> sharing = mostFirst.size() == 1

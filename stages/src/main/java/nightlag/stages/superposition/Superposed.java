@@ -28,11 +28,7 @@ record Superposed(
     }
 
     static Superposed of(
-            List<Integer> used,
-            boolean verticalLimited,
-            JointCurves common,
-            OwnCurves own,
-            SpecimenOffsets specimens) {
+            List<Integer> used, boolean verticalLimited, JointCurves common, OwnCurves own, SpecimenOffsets specimens) {
         int constants = used.stream().mapToInt(i -> specimens.fitted()[i]).sum();
         List<OwnCurve> each = used.stream().map(own.curves()::get).toList();
         return new Superposed(

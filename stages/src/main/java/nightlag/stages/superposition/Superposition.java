@@ -191,8 +191,7 @@ public final class Superposition {
         int[] isothermOf = rising.stream()
                 .mapToInt(point -> Arrays.binarySearch(temperatures, point.temperatureK()))
                 .toArray();
-        return new MasterCurve(
-                shifts, rising, SharedErrors.of(isothermOf, covariance), markers, law.law(), notes);
+        return new MasterCurve(shifts, rising, SharedErrors.of(isothermOf, covariance), markers, law.law(), notes);
     }
 
     /**

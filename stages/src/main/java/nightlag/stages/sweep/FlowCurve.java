@@ -37,8 +37,7 @@ public final class FlowCurve {
     private final SharedErrors sharedErrors;
     private final boolean weighted;
 
-    private FlowCurve(
-            SweepName name, double temperatureK, List<ModulusReading> readings, SharedErrors sharedErrors) {
+    private FlowCurve(SweepName name, double temperatureK, List<ModulusReading> readings, SharedErrors sharedErrors) {
         this.sharedErrors = sharedErrors;
         this.name = name;
         this.temperatureK = temperatureK;

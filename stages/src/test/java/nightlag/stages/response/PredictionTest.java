@@ -210,7 +210,8 @@ class PredictionTest {
     private static TemperatureShift shift(Optional<FittedLaw> law) {
         List<ShiftFactor> shifts = List.of(isotherm(290, 1), isotherm(300, 0), isotherm(320, -2));
         return TemperatureShift.of(
-                REFERENCE, Optional.of(new MasterCurve(shifts, List.of(), SharedErrors.none(), List.of(), law, List.of())));
+                REFERENCE,
+                Optional.of(new MasterCurve(shifts, List.of(), SharedErrors.none(), List.of(), law, List.of())));
     }
 
     private static ShiftFactor isotherm(double temperatureK, double log10A) {
