@@ -3,6 +3,7 @@ package nightlag.stages.sweep;
 import java.util.ArrayList;
 import java.util.Comparator;
 import java.util.List;
+import java.util.Optional;
 import java.util.OptionalDouble;
 import java.util.function.ToDoubleFunction;
 import nightlag.stages.moduli.Figure;
@@ -15,9 +16,15 @@ import nightlag.stages.sweep.FigureMarkerPlan.Along;
  * @param name specimen and sweep
  * @param temperatureK the temperature of a curve over frequency, K
  * @param frequencyHz the frequency of a curve over temperature, Hz
+ * @param leg which part of a ramp that turns; empty for all others
  * @param places where the figure is known, rising
  */
-record FigureCurve(SweepName name, OptionalDouble temperatureK, OptionalDouble frequencyHz, List<Place> places) {
+record FigureCurve(
+        SweepName name,
+        OptionalDouble temperatureK,
+        OptionalDouble frequencyHz,
+        Optional<Sweep.Leg> leg,
+        List<Place> places) {
     private static final double SAME_FREQUENCY = 0.01;
 
     /**
@@ -85,6 +92,7 @@ record FigureCurve(SweepName name, OptionalDouble temperatureK, OptionalDouble f
                         name,
                         OptionalDouble.of(kelvin),
                         OptionalDouble.empty(),
+                        Optional.empty(),
                         places(byFrequency(isotherm.points()), FigureCurve::frequency, plan.figure())));
             }
         }
@@ -95,25 +103,36 @@ record FigureCurve(SweepName name, OptionalDouble temperatureK, OptionalDouble f
                     name,
                     OptionalDouble.empty(),
                     OptionalDouble.empty(),
+                    Optional.empty(),
                     places(byFrequency(nowhere), FigureCurve::frequency, plan.figure())));
         }
         return curves;
     }
 
-    /** One for each frequency; points within 0.5 K, such as those of one isotherm, are one place at their mean. */
+    /**
+     * One for each frequency, and where the ramp turns for each of its legs; points within 0.5 K, such as those of one isotherm,
+     * are one place at their mean.
+     */
     private static List<FigureCurve> overTemperature(SweepName name, List<ModulusPoint> points, FigureMarkerPlan plan) {
         List<FigureCurve> curves = new ArrayList<>();
         for (List<ModulusPoint> alike : byFrequency(points)) {
             double hertz = mean(alike, FigureCurve::frequency);
             double wanted = plan.frequencyHz().orElse(hertz);
             if (Math.abs(hertz - wanted) <= SAME_FREQUENCY * wanted) {
-                List<List<ModulusPoint>> near =
-                        grouped(alike, FigureCurve::temperature, first -> first + Isotherms.TOLERANCE_K);
-                curves.add(new FigureCurve(
-                        name,
-                        OptionalDouble.empty(),
-                        OptionalDouble.of(hertz),
-                        places(near, FigureCurve::temperature, plan.figure())));
+                List<TemperatureLegs.Stretch> legs = TemperatureLegs.of(alike);
+                for (int i = 0; i < legs.size(); i++) {
+                    List<List<ModulusPoint>> near = grouped(
+                            legs.get(i).points(), FigureCurve::temperature, first -> first + Isotherms.TOLERANCE_K);
+                    curves.add(new FigureCurve(
+                            name,
+                            OptionalDouble.empty(),
+                            OptionalDouble.of(hertz),
+                            legs.size() == 1
+                                    ? Optional.empty()
+                                    : Optional.of(
+                                            new Sweep.Leg(i + 1, legs.get(i).heating())),
+                            places(near, FigureCurve::temperature, plan.figure())));
+                }
             }
         }
         return curves;

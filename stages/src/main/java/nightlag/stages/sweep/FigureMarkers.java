@@ -21,7 +21,9 @@ import nightlag.stages.sweep.FigureMarkerPlan.Scale;
 /**
  * Where a figure of the grade's own reaches a value, by interpolation between the two measured places on either side, and
  * never beyond them. Every such step of every curve gives a marker of its own, but for neighbouring ones between which the
- * figure stays as near the value as its noise may take it: these are one.
+ * figure stays as near the value as its noise may take it: these are one. u is that of the points on either side; where they
+ * bring none, the scatter of the neighbouring ones about local parabolas takes its place, and of too few there is none. What
+ * of it holds the method says.
  */
 public final class FigureMarkers {
     private static final double KELVIN_AT_ZERO_CELSIUS = 273.15;
@@ -121,14 +123,12 @@ public final class FigureMarkers {
 
     /** Whether the figure is away from the value by more than noise; without a u, whether it is away at all. */
     private boolean leaves(Place place) {
-        double perPoint = 1.0 / place.points().size();
-        double variance = 0;
-        for (int i = 0; i < place.points().size(); i++) {
-            variance += sum(place.values().get(i), perPoint, Optional.empty(), 0)
-                    .variance(place.points().get(i))
-                    .orElse(0);
-        }
-        return Math.abs(place.mean() - plan.reaches()) > NOISE * Math.sqrt(variance);
+        Weighed mean = new Weighed(place, 1, false, 0, false);
+        OptionalDouble variance = ownVariance(mean);
+        double u = variance.isPresent()
+                ? Math.sqrt(variance.getAsDouble())
+                : scatter(mean).orElse(0);
+        return Math.abs(place.mean() - plan.reaches()) > NOISE * u;
     }
 
     private Reason notReached() {
@@ -138,7 +138,7 @@ public final class FigureMarkers {
                 plan.name(),
                 curve.name().specimen(),
                 curve.name().sweep(),
-                where(curve.temperatureK(), curve.frequencyHz()),
+                where(curve),
                 plan.figure().name(),
                 values[0],
                 values[values.length - 1],
@@ -158,10 +158,10 @@ public final class FigureMarkers {
         double run = scaled(to.at(), logPlace) - scaled(from.at(), logPlace);
         double place = unscaled(scaled(from.at(), logPlace) + part * run, logPlace);
         if (plan.report().isEmpty()) {
-            OptionalDouble u = uncertainty(
+            Uncertainty u = uncertainty(
                     new Weighed(from, -(1 - part) * run / rise, log, 0, false),
                     new Weighed(to, -part * run / rise, log, 0, false));
-            add(place, place, times(u, logPlace ? place : 1), from, to);
+            add(place, place, u.times(logPlace ? place : 1), from, to);
             return;
         }
         Figure report = plan.report().get();
@@ -174,14 +174,14 @@ public final class FigureMarkers {
         boolean logReport = Math.min(first.getAsDouble(), second.getAsDouble()) > 0;
         double gain = scaled(second.getAsDouble(), logReport) - scaled(first.getAsDouble(), logReport);
         double value = unscaled(scaled(first.getAsDouble(), logReport) + part * gain, logReport);
-        OptionalDouble u = uncertainty(
+        Uncertainty u = uncertainty(
                 new Weighed(from, -(1 - part) * gain / rise, log, 1 - part, logReport),
                 new Weighed(to, -part * gain / rise, log, part, logReport));
         double offset = report.unit().equals("°C") ? KELVIN_AT_ZERO_CELSIUS : 0;
-        add(place, value + offset, times(u, logReport ? value : 1), from, to);
+        add(place, value + offset, u.times(logReport ? value : 1), from, to);
     }
 
-    private void add(double place, double value, OptionalDouble u, Place from, Place to) {
+    private void add(double place, double value, Uncertainty u, Place from, Place to) {
         boolean overFrequency = plan.along() == Along.FREQUENCY;
         together.add(new Marker(
                 curve.name().specimen(),
@@ -190,9 +190,9 @@ public final class FigureMarkers {
                 overFrequency ? curve.temperatureK() : OptionalDouble.of(place),
                 overFrequency ? OptionalDouble.of(place) : curve.frequencyHz(),
                 value,
-                u,
+                u.value(),
                 plan.unit(),
-                method(from, to)));
+                method(from, to) + curve.leg().map(leg -> "; " + leg.words()).orElse("") + u.source()));
     }
 
     private String method(Place from, Place to) {
@@ -220,12 +220,12 @@ public final class FigureMarkers {
     }
 
     private void absent(FigureReason why, Figure figure) {
-        notes.add(why.with(
-                plan.name(),
-                curve.name().specimen(),
-                curve.name().sweep(),
-                where(curve.temperatureK(), curve.frequencyHz()),
-                figure.name()));
+        notes.add(why.with(plan.name(), curve.name().specimen(), curve.name().sweep(), where(curve), figure.name()));
+    }
+
+    private static String where(FigureCurve curve) {
+        return where(curve.temperatureK(), curve.frequencyHz())
+                + curve.leg().map(leg -> " (" + leg.words() + ")").orElse("");
     }
 
     private static String where(OptionalDouble temperatureK, OptionalDouble frequencyHz) {
@@ -243,8 +243,18 @@ public final class FigureMarkers {
         return log ? Math.exp(value) : value;
     }
 
-    private static OptionalDouble times(OptionalDouble value, double factor) {
-        return value.isPresent() ? OptionalDouble.of(value.getAsDouble() * Math.abs(factor)) : value;
+    /**
+     * A standard uncertainty.
+     *
+     * @param value itself, where there is one
+     * @param source what the method says of it: nothing where it is the points' own
+     */
+    private record Uncertainty(OptionalDouble value, String source) {
+        Uncertainty times(double factor) {
+            return value.isPresent()
+                    ? new Uncertainty(OptionalDouble.of(value.getAsDouble() * Math.abs(factor)), source)
+                    : this;
+        }
     }
 
     /**
@@ -252,32 +262,70 @@ public final class FigureMarkers {
      */
     private record Weighed(Place place, double byFigure, boolean log, double byReport, boolean logReport) {}
 
-    /** The points' errors are independent of one another; both figures of one point hang on the same modulus. */
-    private OptionalDouble uncertainty(Weighed... places) {
+    /** The errors at two places are independent of one another. */
+    private Uncertainty uncertainty(Weighed from, Weighed to) {
+        OptionalDouble first = ownVariance(from);
+        OptionalDouble second = ownVariance(to);
+        if (first.isPresent() && second.isPresent()) {
+            double variance = first.getAsDouble() + second.getAsDouble();
+            return new Uncertainty(variance > 0 ? OptionalDouble.of(Math.sqrt(variance)) : OptionalDouble.empty(), "");
+        }
+        OptionalDouble before = scatter(from);
+        OptionalDouble after = scatter(to);
+        return before.isPresent() && after.isPresent()
+                ? new Uncertainty(
+                        OptionalDouble.of(Math.hypot(before.getAsDouble(), after.getAsDouble())),
+                        "; u from the scatter about neighbouring points")
+                : new Uncertainty(
+                        OptionalDouble.empty(),
+                        "; no u, for the points bring none and are too few to tell their scatter");
+    }
+
+    /**
+     * From the u of a place's points. Their errors are independent of one another; both figures of one point hang on the same
+     * modulus. Empty where a point brings none.
+     */
+    private OptionalDouble ownVariance(Weighed weighed) {
+        Place place = weighed.place();
         double variance = 0;
-        for (Weighed weighed : places) {
-            Place place = weighed.place();
-            double perValue = weighed.byFigure() / place.points().size() / (weighed.log() ? place.mean() : 1);
-            double perReport = weighed.byReport()
-                    / place.points().size()
-                    / (weighed.logReport()
-                            ? place.mean(plan.report().orElseThrow()).orElseThrow()
-                            : 1);
-            for (int i = 0; i < place.points().size(); i++) {
-                ModulusPoint point = place.points().get(i);
-                Optional<Figure.Value> reported =
-                        perReport == 0 ? Optional.empty() : plan.report().flatMap(report -> report.at(point));
-                Figure.Value moved = sum(place.values().get(i), perValue, reported, perReport);
-                boolean fixed = DoubleStream.of(moved.byStorage(), moved.byLoss(), moved.byThird())
-                        .allMatch(derivative -> derivative == 0);
-                OptionalDouble own = fixed ? OptionalDouble.of(0) : moved.variance(point);
-                if (own.isEmpty() || !Double.isFinite(own.getAsDouble())) {
-                    return OptionalDouble.empty();
-                }
-                variance += own.getAsDouble();
+        double perValue = weighed.byFigure() / place.points().size() / (weighed.log() ? place.mean() : 1);
+        double perReport = weighed.byReport()
+                / place.points().size()
+                / (weighed.logReport() ? place.mean(plan.report().orElseThrow()).orElseThrow() : 1);
+        for (int i = 0; i < place.points().size(); i++) {
+            ModulusPoint point = place.points().get(i);
+            Optional<Figure.Value> reported =
+                    perReport == 0 ? Optional.empty() : plan.report().flatMap(report -> report.at(point));
+            Figure.Value moved = sum(place.values().get(i), perValue, reported, perReport);
+            boolean fixed = DoubleStream.of(moved.byStorage(), moved.byLoss(), moved.byThird())
+                    .allMatch(derivative -> derivative == 0);
+            OptionalDouble own = fixed ? OptionalDouble.of(0) : moved.variance(point);
+            if (own.isEmpty() || !Double.isFinite(own.getAsDouble())) {
+                return OptionalDouble.empty();
+            }
+            variance += own.getAsDouble();
+        }
+        return OptionalDouble.of(variance);
+    }
+
+    /** By how much the result moves with the scatter of a place's figures about those of its neighbours. */
+    private OptionalDouble scatter(Weighed weighed) {
+        boolean logPlace = plan.along() == Along.FREQUENCY;
+        List<double[]> known = new ArrayList<>();
+        for (Place place : curve.places()) {
+            double moved = weighed.byFigure() * scaled(place.mean(), weighed.log());
+            if (weighed.byReport() != 0) {
+                OptionalDouble reported = place.mean(plan.report().orElseThrow());
+                moved += weighed.byReport() * scaled(reported.orElse(Double.NaN), weighed.logReport());
+            }
+            if (Double.isFinite(moved)) {
+                known.add(new double[] {scaled(place.at(), logPlace), moved});
             }
         }
-        return variance > 0 ? OptionalDouble.of(Math.sqrt(variance)) : OptionalDouble.empty();
+        return NeighbourScatter.at(
+                known.stream().mapToDouble(one -> one[0]).toArray(),
+                known.stream().mapToDouble(one -> one[1]).toArray(),
+                scaled(weighed.place().at(), logPlace));
     }
 
     private static Figure.Value sum(

@@ -21,6 +21,14 @@ final class TransitionPeaks {
     static final int COARSE_ORDER = 3;
     static final int FINE_VALUES = 100;
     static final int FINE_ORDER = 4;
+    /**
+     * Of the curve through a top where there are values enough for it. With one less, noise of 1 % leaves a cubic, which places
+     * the top of a broad and lopsided peak half a u too low without its likelihood showing it.
+     */
+    private static final int TOP_ORDER = 5;
+    /** Three values for each coefficient. */
+    private static final int ENOUGH_FOR_TOP_ORDER = 3 * TOP_ORDER;
+
     private static final double DROP = 1.2;
     /** Values at either end among which no peak is looked for. */
     static final int FROM_THE_END = 2;
@@ -94,15 +102,18 @@ final class TransitionPeaks {
 
     private static Peak placed(double nearK, TemperatureCurve all) {
         TemperatureCurve window = all.atMost(FINE_VALUES);
-        SmoothCurve smooth =
-                SmoothCurve.throughKnown(window.temperatures(), window.logarithms(), window.variances(), FINE_ORDER);
+        boolean enough = window.size() >= ENOUGH_FOR_TOP_ORDER;
+        SmoothCurve smooth = SmoothCurve.throughKnown(
+                window.temperatures(), window.logarithms(), window.variances(), enough ? TOP_ORDER : FINE_ORDER);
         Optional<Double> top = nearestTop(smooth, window, nearK);
         if (top.isEmpty()) {
             return new Peak(nearK, Double.NaN, Double.NaN, all, false);
         }
         double at = top.get();
         SmoothCurve.Local local = smooth.at(at, 2);
-        double u = Math.sqrt(Math.max(local.peakCovariance(1, 1), 0)) / Math.abs(local.derivatives()[2]);
+        // the process of the lower order bends more wildly than a peak does, as peakCovariance has it
+        double variance = enough ? local.full()[1][1] : local.peakCovariance(1, 1);
+        double u = Math.sqrt(Math.max(variance, 0)) / Math.abs(local.derivatives()[2]);
         double[] t = all.temperatures();
         boolean inside = at > t[1] && at < t[t.length - 2];
         boolean clear = u < WIDEST_U * (window.last() - window.first());

@@ -17,6 +17,7 @@ import nightlag.stages.TestPoints;
 import nightlag.stages.moduli.Figure;
 import nightlag.stages.moduli.Findings;
 import nightlag.stages.moduli.Marker;
+import nightlag.stages.moduli.Moduli;
 import nightlag.stages.moduli.ModulusPoint;
 import nightlag.stages.moduli.PointQuantity;
 import nightlag.stages.numeric.Complex;
@@ -336,6 +337,104 @@ class FigureMarkersTest {
                                 points, plan(Figure.column(PointQuantity.TAN_DELTA), 1, Along.FREQUENCY, Scale.LINEAR))
                         .markers())
                 .hasSize(7);
+    }
+
+    /** The thermometer lags by 4 K: heating reaches 10 kPa at a reading of 42 °C, cooling at one of 38 °C (exact). */
+    @Test
+    void heatingAndCoolingOfOneRampAreTwoCurves() {
+        List<ModulusPoint> turned = new ArrayList<>();
+        for (int i = 0; i < 11; i++) {
+            turned.add(lagging(i, 20 + 4 * i, 2));
+        }
+        for (int i = 0; i < 10; i++) {
+            turned.add(lagging(11 + i, 58 - 4 * i, -2));
+        }
+
+        Findings found = FigureMarkers.find(turned, plan(STIFFNESS, 1e4, Along.TEMPERATURE, Scale.LOG));
+
+        assertThat(found.notes()).isEmpty();
+        assertThat(found.markers()).hasSize(2);
+        assertThat(found.markers().get(0).value()).isCloseTo(42 + ZERO_C, within(1e-9));
+        assertThat(found.markers().get(0).method()).endsWith("; leg 1, heating");
+        assertThat(found.markers().get(1).value()).isCloseTo(38 + ZERO_C, within(1e-9));
+        assertThat(found.markers().get(1).method()).endsWith("; leg 2, cooling");
+    }
+
+    private static ModulusPoint lagging(int number, double celsius, double lagK) {
+        return SeriesPoint.of(number, celsius + ZERO_C, 1.6)
+                .after(60 * number)
+                .modulus(binder(celsius - lagK), 0.01)
+                .build();
+    }
+
+    /** Cooling stops before the stiffness is back, which is said. */
+    @Test
+    void aLegThatDoesNotReachTheValueIsNamed() {
+        List<ModulusPoint> turned = new ArrayList<>();
+        for (int i = 0; i < 11; i++) {
+            turned.add(lagging(i, 30 + 2 * i, 0));
+        }
+        for (int i = 0; i < 4; i++) {
+            turned.add(lagging(11 + i, 48 - 2 * i, 0));
+        }
+
+        Findings found = FigureMarkers.find(turned, plan(STIFFNESS, 1e4, Along.TEMPERATURE, Scale.LOG));
+
+        assertThat(found.markers()).hasSize(1);
+        assertThat(found.notes()).hasSize(1);
+        assertThat(found.notes().get(0).sentence())
+                .startsWith(
+                        "no found of specimen 1, sweep 1 at 1.6 Hz (leg 2, cooling): complex_modulus stays between");
+    }
+
+    /** 300 draws: without u the scatter about the neighbours takes its place, and holds as often as it says. */
+    @Test
+    void whereThePointsBringNoUncertaintyTheScatterTakesItsPlace() {
+        int held = 0;
+        int found = 0;
+        double sum = 0;
+        for (long seed = 1; seed <= 300; seed++) {
+            List<ModulusPoint> bare = noisy(30, 40, seed).stream()
+                    .map(FigureMarkersTest::withoutU)
+                    .toList();
+            Findings findings = FigureMarkers.find(bare, plan(ANGLE, 45, Along.FREQUENCY, Scale.LINEAR));
+            for (Marker marker : findings.markers()) {
+                assertThat(marker.method()).endsWith("; u from the scatter about neighbouring points");
+                double u = marker.u().orElseThrow();
+                found++;
+                held += Math.abs(marker.value() - 10) <= 1.96 * u ? 1 : 0;
+                sum += u;
+            }
+        }
+        assertThat(found).isEqualTo(300);
+        // u(δ) = √½ · 0.8 % rad at 45°, √(½ … 1) of it between two points, 20° a decade
+        double widest = 10 * Math.log(10) * Math.toDegrees(0.008 * Math.sqrt(0.5)) / 20;
+        assertThat(sum / found).isBetween(0.7 * widest, 1.05 * widest);
+        assertThat(held / (double) found).isBetween(0.90, 0.98);
+    }
+
+    @Test
+    void ofAFewPointsWithoutUncertaintyThereIsNoneAndTheMethodSaysSo() {
+        List<ModulusPoint> bare = sweep(1, 10, 30, 33, 100).stream()
+                .map(FigureMarkersTest::withoutU)
+                .toList();
+
+        Marker marker = only(FigureMarkers.find(bare, plan(ANGLE, 45, Along.FREQUENCY, Scale.LINEAR)));
+
+        assertThat(marker.value()).isCloseTo(Math.pow(10, 1.5), withPercentage(1e-9));
+        assertThat(marker.u()).isEmpty();
+        assertThat(marker.method()).endsWith("; no u, for the points bring none and are too few to tell their scatter");
+    }
+
+    private static ModulusPoint withoutU(ModulusPoint point) {
+        Moduli moduli = point.moduli().orElseThrow();
+        return TestPoints.point()
+                .named("1", "s", point.key().point(), point.key().sourceFile())
+                .at(point.temperatureK().orElseThrow())
+                .hz(point.frequencyHz().orElseThrow())
+                .modulus(moduli.complex())
+                .relativeU(0)
+                .build();
     }
 
     /** From 1 to 100 Hz. */

@@ -1,0 +1,64 @@
+package nightlag.stages.sweep;
+
+import java.util.Arrays;
+import java.util.OptionalDouble;
+import java.util.stream.IntStream;
+
+/**
+ * How much values scatter that nobody gave an uncertainty. Of each four neighbours the combination that is blind to any parabola (their third divided
+ * difference), over what independent errors of size one would make of it; rms over those nearest to a place. A curve that bends
+ * faster than a parabola follows adds to it, so it is too large there and never too small.
+ */
+final class NeighbourScatter {
+    /** Fewer values tell too little. */
+    static final int FEWEST = 8;
+
+    private static final int TOGETHER = 4;
+    private static final int NEAREST = 20;
+
+    private NeighbourScatter() {}
+
+    /**
+     * The standard deviation of values about their neighbours.
+     *
+     * @param x where they are, strictly rising
+     * @param y the values
+     * @param place near which; of many values only those count that are near
+     * @return in the unit of the values; empty where there are fewer than {@link #FEWEST}
+     */
+    static OptionalDouble at(double[] x, double[] y, double place) {
+        if (x.length < FEWEST) {
+            return OptionalDouble.empty();
+        }
+        int[] nearest = IntStream.rangeClosed(0, x.length - TOGETHER)
+                .boxed()
+                .sorted((i, j) -> Double.compare(distance(x, i, place), distance(x, j, place)))
+                .limit(NEAREST)
+                .mapToInt(Integer::intValue)
+                .toArray();
+        double meanSquare = Arrays.stream(nearest)
+                .mapToDouble(from -> Math.pow(beyondAParabola(x, y, from), 2))
+                .average()
+                .orElseThrow();
+        return OptionalDouble.of(Math.sqrt(meanSquare));
+    }
+
+    private static double distance(double[] x, int from, double place) {
+        return Math.abs((x[from + 1] + x[from + 2]) / 2 - place);
+    }
+
+    private static double beyondAParabola(double[] x, double[] y, int from) {
+        double span = x[from + TOGETHER - 1] - x[from];
+        double difference = 0;
+        double squares = 0;
+        for (int i = from; i < from + TOGETHER; i++) {
+            double product = 1;
+            for (int j = from; j < from + TOGETHER; j++) {
+                product *= j == i ? 1 : (x[i] - x[j]) / span;
+            }
+            difference += y[i] / product;
+            squares += 1 / (product * product);
+        }
+        return difference / Math.sqrt(squares);
+    }
+}
