@@ -74,6 +74,7 @@ final class LotCharts {
                                 charts.shiftFactors(),
                                 charts.phaseOverModulus(),
                                 charts.lossOverStorage(),
+                                LocalRelationChart.of(result),
                                 charts.spectrum(SpectrumRow.Kind.RELAXATION, "Relaxation modes", "modulus"),
                                 charts.spectrum(SpectrumRow.Kind.RETARDATION, "Retardation modes", "compliance"),
                                 charts.density(SpectrumRow.Kind.RELAXATION, "Relaxation spectrum", "H"),

@@ -110,7 +110,8 @@ final class SweepCharts {
         return point.deformation() == DeformationMode.SHEAR ? "G" : "E";
     }
 
-    private static String name(Sweep sweep) {
+    /** Specimen, sweep and what does not vary in it. */
+    static String name(Sweep sweep) {
         StringBuilder name = new StringBuilder("specimen " + sweep.name().specimen());
         if (!sweep.name().sweep().equals("1")) {
             name.append(" sweep ").append(sweep.name().sweep());

@@ -1,6 +1,7 @@
 package nightlag.pipeline.report;
 
 import static org.assertj.core.api.Assertions.assertThat;
+import static org.assertj.core.api.Assertions.within;
 
 import com.fasterxml.jackson.databind.JsonNode;
 import com.fasterxml.jackson.databind.json.JsonMapper;
@@ -8,12 +9,16 @@ import java.io.IOException;
 import java.nio.file.Files;
 import java.nio.file.Path;
 import java.util.List;
+import java.util.Optional;
 import java.util.OptionalDouble;
 import java.util.stream.IntStream;
 import nightlag.pipeline.tables.RandomLot;
 import nightlag.stages.LotResult;
 import nightlag.stages.moduli.Marker;
+import nightlag.stages.moduli.Moduli;
+import nightlag.stages.moduli.ModulusReading;
 import nightlag.stages.spectrum.SpectrumRow;
+import nightlag.stages.superposition.MasterPoint;
 import org.junit.jupiter.api.Test;
 import org.junit.jupiter.api.io.TempDir;
 
@@ -129,6 +134,36 @@ class NightReportTest {
         assertThat(line.get("low").get(0).asDouble()).isZero();
         assertThat(line.get("high").get(2).asDouble()).isEqualTo(5);
         assertThat(charts.findValuesAsText("title")).doesNotContain("Relaxation spectrum");
+    }
+
+    /** Exact: of √(iω) kPa, G' = G'' = √(ω/2) and the line is π/4 of it. */
+    @Test
+    void theLossModulusStandsBesideTheSlopeOfTheStorageModulus() throws IOException {
+        List<MasterPoint> points = IntStream.range(0, 21)
+                .mapToObj(i -> {
+                    double part = 1000 * Math.sqrt(Math.pow(10, i / 5.0) / 2);
+                    return new MasterPoint(
+                            463.15,
+                            463.15,
+                            new ModulusReading(Math.pow(10, i / 5.0), new Moduli(part, part, Optional.empty())));
+                })
+                .toList();
+        LotResult result = LotResult.builder().masterCurve(points).build();
+
+        JsonNode charts = JsonMapper.builder().build().readTree(ChartJson.of(LotCharts.of(result)));
+
+        JsonNode series =
+                find(charts, "Loss modulus and slope of the storage modulus").get("series");
+        assertThat(series).hasSize(2);
+        assertThat(series.get(0).get("joined").asBoolean()).isFalse();
+        assertThat(series.get(0).get("y")).hasSize(21);
+        JsonNode line = series.get(1);
+        assertThat(line.get("joined").asBoolean()).isTrue();
+        assertThat(line.get("y")).hasSize(41);
+        for (int i = 0; i < 41; i++) {
+            double loss = 1000 * Math.sqrt(line.get("x").get(i).asDouble() / 2);
+            assertThat(line.get("y").get(i).asDouble() / loss).isCloseTo(Math.PI / 4, within(1e-3));
+        }
     }
 
     @Test
