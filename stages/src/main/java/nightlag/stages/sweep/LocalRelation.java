@@ -8,8 +8,9 @@ import nightlag.stages.sweep.LogModuli.Figure;
 
 /**
  * What the storage modulus by itself says of the loss modulus: G'' ≈ (π/2) dG'/d ln ω, the local form of the relation of Kramers
- * and Kronig (Booij &amp; Thoone, Rheol. Acta 21 (1982) 15). A picture, not a test: it comes near where a spectrum is broad, within a quarter for modes a decade apart. It is low by πωτ for a single relaxation far from its place, as in the terminal zone of a liquid, and high by π/2 at
- * the place itself, with the exact factor π ωτ/(1 + ω²τ²).
+ * and Kronig (Booij &amp; Thoone, Rheol. Acta 21 (1982) 15). A picture, not a test: it comes near where a spectrum is broad,
+ * within some 27 % for modes a decade apart. For a single relaxation it is π x/(1 + x²) of G'', x = ωτ: high by π/2 at its
+ * place, and low far from it, as in the terminal zone of a liquid.
  */
 public final class LocalRelation {
     /** Fewer frequencies do not carry a slope. */
