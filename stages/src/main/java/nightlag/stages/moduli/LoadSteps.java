@@ -9,6 +9,10 @@ import nightlag.stages.fault.ReductionFault;
  * The steps of a stress over time, found from the stress alone: it stays within a narrow band, leaves it for good, and
  * settles in another for at least five times as long as it took. The band is a twentieth of the whole extent, or six times
  * the noise; smaller steps are not told from a stress that is not held.
+ *
+ * <p>A step's instant is the centre of its rise. Where the stress jumps from one sample to the next that is the middle of the two,
+ * and the step may lie anywhere between them; no strain tells where, as {@code J(t + δ)} is a compliance like any other. Only the clock
+ * may: one that runs through zero there counts from the load.
  */
 final class LoadSteps {
     private static final double BAND = 0.05;
@@ -24,6 +28,9 @@ final class LoadSteps {
     private static final double MEDIAN_TO_DEVIATION = 1.4826;
 
     private static final double COARSEST = 0.01;
+
+    /** What is left of a zero after sums of sampling intervals. */
+    private static final double TRACE = 1e-6;
 
     private final double[] timeS;
     private final double[] stress;
@@ -205,6 +212,13 @@ final class LoadSteps {
             weighted += part * (timeS[i] + lasts / 2);
             squares += part * part * lasts * lasts / 12;
         }
-        return new Step(foot, settled, weighted / sum, Math.sqrt(squares) / Math.abs(sum));
+        return new Step(
+                foot, settled, countsFromLoad(foot, settled) ? 0 : weighted / sum, Math.sqrt(squares) / Math.abs(sum));
+    }
+
+    /** Whether the clock runs through zero in a jump, or at the first sample after it. One before it may be anywhere. */
+    private boolean countsFromLoad(int foot, int settled) {
+        double little = TRACE * (timeS[settled] - timeS[foot]);
+        return settled == foot + 1 && timeS[foot] < -little && timeS[settled] > -little;
     }
 }

@@ -31,9 +31,13 @@ final class ComplianceReadings {
     private double largestPerPa;
     private final List<Integer> ends = new ArrayList<>();
     private final List<SupportedWindow> windows = new ArrayList<>();
+    private final List<StepInstants.Shared> instants = new ArrayList<>();
 
-    /** A strain after some steps: their stresses in Pa, the times since each in s. */
-    private record CreepRow(double[] changesPa, double[] sinceS, double strain, double u) {
+    /**
+     * A strain after some steps: their stresses in Pa, the times since each in s, its u without what it shares with the other
+     * readings after its step, and with it.
+     */
+    private record CreepRow(double[] changesPa, double[] sinceS, double strain, double u, double wholeU) {
         /** What a compliance makes of the steps. */
         double sum(Kernel kernel) {
             double sum = 0;
@@ -83,7 +87,9 @@ final class ComplianceReadings {
         double zero = curve.steps().get(0).strainBefore();
         double shortest = Double.POSITIVE_INFINITY;
         double longest = 0;
-        for (CreepReading reading : curve.readings()) {
+        StepInstants shared = StepInstants.of(curve);
+        for (int i = 0; i < curve.readings().size(); i++) {
+            CreepReading reading = curve.readings().get(i);
             int steps = reading.step();
             double[] changes = new double[steps];
             double[] since = new double[steps];
@@ -93,13 +99,17 @@ final class ComplianceReadings {
                 since[k] = (reading.timeS() - step.atS()) / a;
             }
             double strain = reading.strain() - zero;
-            double own = reading.complianceUPerPa()
+            double whole = reading.complianceUPerPa()
                     * Math.abs(curve.steps().get(steps - 1).changePa());
-            creep.add(new CreepRow(changes, since, strain, Math.max(own, LEAST_RELATIVE_U * Math.abs(strain))));
+            double least = LEAST_RELATIVE_U * Math.abs(strain);
+            double own = Math.sqrt(Math.max(0, whole * whole - shared.at(i) * shared.at(i)));
+            creep.add(new CreepRow(changes, since, strain, Math.max(own, least), Math.max(whole, least)));
             largestPerPa = Math.max(largestPerPa, Math.abs(reading.compliancePerPa()) / b);
             shortest = Math.min(shortest, reading.sinceStepS() / a);
             longest = Math.max(longest, reading.timeS() / a);
         }
+        instants.add(shared.over(
+                creep.size() - curve.readings().size(), row -> creep.get(row).u()));
         windows.add(new SupportedWindow(shortest, longest));
         shortestS = Math.min(shortestS, shortest);
         longestS = Math.max(longestS, longest);
@@ -201,6 +211,7 @@ final class ComplianceReadings {
         for (int i = 0; i < creep.size(); i++) {
             target[i] = creep.get(i).strain() / creep.get(i).u();
         }
+        instants.forEach(one -> one.whiten(target));
         for (int i = 0; i < waves.size(); i++) {
             put(target, i, waves.get(i).compliance());
         }
@@ -262,7 +273,7 @@ final class ComplianceReadings {
         double most = Double.POSITIVE_INFINITY;
         for (CreepRow row : creep) {
             if (row.sign() != 0) {
-                most = least(most, row.sign() * row.strain() + COVERAGE * row.u(), row.sign() * row.sum(kernel));
+                most = least(most, row.sign() * row.strain() + COVERAGE * row.wholeU(), row.sign() * row.sum(kernel));
             }
         }
         for (Waves row : waves) {
@@ -281,7 +292,7 @@ final class ComplianceReadings {
     double mostOfRelaxation(double tau) {
         double most = Double.POSITIVE_INFINITY;
         for (CreepRow row : creep) {
-            double least = row.sign() * row.strain() - COVERAGE * row.u();
+            double least = row.sign() * row.strain() - COVERAGE * row.wholeU();
             if (row.sinceS().length == 1 && least > 0) {
                 most = Math.min(most, Math.abs(row.changesPa()[0]) / least * Math.exp(row.sinceS()[0] / tau));
             }
@@ -302,6 +313,7 @@ final class ComplianceReadings {
             CreepRow row = creep.get(i);
             column[i] = row.sum(kernel) / row.u();
         }
+        instants.forEach(one -> one.whiten(column));
         for (int i = 0; i < waves.size(); i++) {
             put(column, i, response.at(waves.get(i).omega()));
         }

@@ -17,7 +17,7 @@ import nightlag.stages.moduli.ModulusPoints.Ranges;
 import nightlag.stages.waveform.Waveform;
 
 /** A creep record made of a compliance by the superposition of steps of stress (Boltzmann), with noise of a seed. */
-final class CreepRecording {
+public final class CreepRecording {
     private final DoubleUnaryOperator compliance;
     private final double[] timeS;
     private double[] stepS = {0};
@@ -34,18 +34,19 @@ final class CreepRecording {
     }
 
     /** J(t) in 1/Pa read at some times; a step to 1 kPa at 0 s. */
-    static CreepRecording of(DoubleUnaryOperator compliance, double[] timeS) {
+    public static CreepRecording of(DoubleUnaryOperator compliance, double[] timeS) {
         return new CreepRecording(compliance, timeS);
     }
 
     /** Stresses from some instants on. */
-    CreepRecording steps(double[] atS, double... toPa) {
+    public CreepRecording steps(double[] atS, double... toPa) {
         this.stepS = atS;
         this.levelPa = toPa;
         return this;
     }
 
-    CreepRecording noise(double ofStrain, double ofStressPa, long ofSeed) {
+    /** Noise of both channels. */
+    public CreepRecording noise(double ofStrain, double ofStressPa, long ofSeed) {
         this.strainNoise = ofStrain;
         this.stressNoise = ofStressPa;
         this.seed = ofSeed;
@@ -59,13 +60,13 @@ final class CreepRecording {
     }
 
     /** Straight rises of such a length, each begun at its instant. */
-    CreepRecording rise(double seconds) {
+    public CreepRecording rise(double seconds) {
         this.riseS = seconds;
         return this;
     }
 
     /** Even samples from {@code from} to {@code to}. */
-    static double[] even(double from, double to, double interval) {
+    public static double[] even(double from, double to, double interval) {
         int count = (int) Math.round((to - from) / interval) + 1;
         return DoubleStream.iterate(from, t -> t + interval).limit(count).toArray();
     }
@@ -116,7 +117,8 @@ final class CreepRecording {
         return sum / pieces * done / riseS;
     }
 
-    CreepCurve curve() throws ReductionFault {
+    /** What the analysis makes of it. */
+    public CreepCurve curve() throws ReductionFault {
         return curve(waveform());
     }
 
