@@ -68,6 +68,7 @@ final class LotCharts {
         LotCharts charts = new LotCharts(result);
         return Stream.of(
                         SweepCharts.of(result.sweeps()).stream(),
+                        CreepCharts.of(result).stream(),
                         Stream.of(
                                 charts.moduliOverFrequency(),
                                 charts.masterCurve(),
