@@ -31,11 +31,11 @@ final class ComplianceReadings {
     private double largestPerPa;
     private final List<Integer> ends = new ArrayList<>();
     private final List<SupportedWindow> windows = new ArrayList<>();
-    private final List<StepInstants.Shared> instants = new ArrayList<>();
+    private final List<SharedErrors.Shared> sharedErrors = new ArrayList<>();
 
     /**
-     * A strain after some steps: their stresses in Pa, the times since each in s, its u without what it shares with the other
-     * readings after its step, and with it.
+     * A strain after some steps: their stresses in Pa, the times since each in s, its u without what it shares with other
+     * readings, and with it.
      */
     private record CreepRow(double[] changesPa, double[] sinceS, double strain, double u, double wholeU) {
         /** What a compliance makes of the steps. */
@@ -87,7 +87,7 @@ final class ComplianceReadings {
         double zero = curve.steps().get(0).strainBefore();
         double shortest = Double.POSITIVE_INFINITY;
         double longest = 0;
-        StepInstants shared = StepInstants.of(curve);
+        SharedErrors shared = SharedErrors.of(curve);
         for (int i = 0; i < curve.readings().size(); i++) {
             CreepReading reading = curve.readings().get(i);
             int steps = reading.step();
@@ -102,13 +102,13 @@ final class ComplianceReadings {
             double whole = reading.complianceUPerPa()
                     * Math.abs(curve.steps().get(steps - 1).changePa());
             double least = LEAST_RELATIVE_U * Math.abs(strain);
-            double own = Math.sqrt(Math.max(0, whole * whole - shared.at(i) * shared.at(i)));
+            double own = Math.sqrt(Math.max(0, whole * whole - shared.variance(i)));
             creep.add(new CreepRow(changes, since, strain, Math.max(own, least), Math.max(whole, least)));
             largestPerPa = Math.max(largestPerPa, Math.abs(reading.compliancePerPa()) / b);
             shortest = Math.min(shortest, reading.sinceStepS() / a);
             longest = Math.max(longest, reading.timeS() / a);
         }
-        instants.add(shared.over(
+        sharedErrors.add(shared.over(
                 creep.size() - curve.readings().size(), row -> creep.get(row).u()));
         windows.add(new SupportedWindow(shortest, longest));
         shortestS = Math.min(shortestS, shortest);
@@ -211,7 +211,7 @@ final class ComplianceReadings {
         for (int i = 0; i < creep.size(); i++) {
             target[i] = creep.get(i).strain() / creep.get(i).u();
         }
-        instants.forEach(one -> one.whiten(target));
+        sharedErrors.forEach(one -> one.whiten(target));
         for (int i = 0; i < waves.size(); i++) {
             put(target, i, waves.get(i).compliance());
         }
@@ -313,7 +313,7 @@ final class ComplianceReadings {
             CreepRow row = creep.get(i);
             column[i] = row.sum(kernel) / row.u();
         }
-        instants.forEach(one -> one.whiten(column));
+        sharedErrors.forEach(one -> one.whiten(column));
         for (int i = 0; i < waves.size(); i++) {
             put(column, i, response.at(waves.get(i).omega()));
         }

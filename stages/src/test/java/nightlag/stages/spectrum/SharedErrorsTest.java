@@ -14,7 +14,7 @@ import org.junit.jupiter.params.provider.CsvSource;
 import org.junit.jupiter.params.provider.ValueSource;
 
 /** Where a step lies between two samples, and what that means for J0 and the fastest mode. Exact: a Burgers body, J0 = 1e-6/Pa. */
-class StepInstantsTest {
+class SharedErrorsTest {
     private static final SpectrumPlan LIQUID = new SpectrumPlan(false, OptionalInt.empty(), false);
     private static final double MODE_S = 2;
     private static final double MODE_PER_PA = 0.5e-6;

@@ -9,24 +9,30 @@ import nightlag.stages.moduli.CreepReading;
 import nightlag.stages.moduli.CreepStep;
 
 /**
- * What the readings after a step of stress have in common: its instant, which lies somewhere between two samples. All of them come
- * too high together or too low together, by the rate of the strain times what the instant is off. From the readings no other
- * instant can be told from another J0 and other strengths: J(t + δ) is a sum of the same modes. So it is an error they share, and
- * counting it as one of each for itself would make J0 and the fastest modes seem several times better known than they are.
+ * What the readings of a creep curve have in common.
+ *
+ * <p>The strain before the first load, which is taken off all of them: it is a mean of the samples there are before it.
+ *
+ * <p>The instant of a step, which lies somewhere between two samples: all readings after it come too high together or too low
+ * together, by the rate of the strain times what the instant is off. From the readings no other instant can be told from another J0
+ * and other strengths: J(t + δ) is a sum of the same modes.
+ *
+ * <p>Counted as errors of each reading for itself, these would make the flow, J0 and the fastest modes seem several times better known
+ * than they are.
  */
-final class StepInstants {
+final class SharedErrors {
     private final List<CreepReading> readings;
     private final List<CreepStep> steps;
     private final double[] rates;
 
-    private StepInstants(CreepCurve curve, double[] rates) {
+    private SharedErrors(CreepCurve curve, double[] rates) {
         this.readings = curve.readings();
         this.steps = curve.steps();
         this.rates = rates;
     }
 
     /** Those of a curve. */
-    static StepInstants of(CreepCurve curve) {
+    static SharedErrors of(CreepCurve curve) {
         List<CreepReading> readings = curve.readings();
         double[] rates = new double[readings.size()];
         for (int i = 0; i < rates.length; i++) {
@@ -35,15 +41,25 @@ final class StepInstants {
             double lasts = later.timeS() - earlier.timeS();
             rates[i] = lasts > 0 ? (later.strain() - earlier.strain()) / lasts : 0;
         }
-        return new StepInstants(curve, rates);
+        return new SharedErrors(curve, rates);
     }
 
     private static int sameStep(List<CreepReading> readings, int here, int other) {
         return readings.get(other).step() == readings.get(here).step() ? other : here;
     }
 
+    /**
+     * What of the variance of a reading's strain, as its compliance has it, is shared; the strain before a later step is in the
+     * recovered compliance and not in the strain itself.
+     */
+    double variance(int reading) {
+        CreepStep step = steps.get(readings.get(reading).step() - 1);
+        double byInstant = byInstant(reading);
+        return byInstant * byInstant + step.strainBeforeU() * step.strainBeforeU();
+    }
+
     /** What one u of the instant of its step changes in the strain of a reading. */
-    double at(int reading) {
+    private double byInstant(int reading) {
         return rates[reading] * uOf(readings.get(reading).step());
     }
 
@@ -60,10 +76,11 @@ final class StepInstants {
      */
     Shared over(int from, IntToDoubleFunction u) {
         List<Direction> directions = new ArrayList<>();
-        for (int k = 1; k <= steps.size(); k++) {
+        for (int k = 0; k <= steps.size(); k++) {
             double[] along = new double[rates.length];
             for (int i = 0; i < rates.length; i++) {
-                along[i] = (k == 1 ? at(i) : alone(k, i)) / u.applyAsDouble(from + i);
+                double strain = k == 0 ? steps.get(0).strainBeforeU() : k == 1 ? byInstant(i) : alone(k, i);
+                along[i] = strain / u.applyAsDouble(from + i);
             }
             directions.forEach(earlier -> earlier.whiten(along, 0));
             double square = Arrays.stream(along).map(v -> v * v).sum();
