@@ -18,7 +18,7 @@ import java.util.Optional;
  * @param grades right grades by name
  * @param wrongGrades problems of wrong grade files, by the grade's name
  * @param gradeProblems every problem of every grade file, those whose grade is not even known included, in file order
- * @param notActedOn sections of night and instrument files read and checked but not acted on yet, such as {@code [team_sheet]}
+ * @param notActedOn what of night and instrument files is read and checked but not acted on, such as {@code [team_sheet]}
  */
 public record Configuration(
         Path nightFile,

@@ -150,7 +150,7 @@ final class GradeKeys {
             "modes",
             new Shape("\"auto\", or whole number, 1 to " + MOST_MODES),
             "\"auto\"",
-            "As few as the data carry, or a fixed number.");
+            "As few as the data carry, or a fixed number of relaxation modes.");
     static final Key CONTINUOUS =
             Key.withDefault("continuous", new Switch(), "true", "Whether continuous spectra are wanted too.");
     static final Section SPECTRUM = new Section(

@@ -16,6 +16,8 @@ import java.util.OptionalDouble;
 import java.util.OptionalInt;
 import java.util.Set;
 import java.util.stream.Stream;
+import nightlag.stages.geometry.Corrections;
+import nightlag.stages.geometry.MeasuringWall;
 
 /** Reads the night file itself; the instrument files its intakes name are read by the way. */
 final class NightReader {
@@ -90,8 +92,36 @@ final class NightReader {
                     .filter(found -> !found.uncertainty().isEmpty())
                     .ifPresent(found -> lines.add(
                             "[uncertainty] of instrument " + found.id() + ": read and checked, not acted on yet"));
+            instrument.flatMap(NightReader::idleOnCreep).ifPresent(lines::add);
         }
         return lines;
+    }
+
+    /** Corrections that do nothing to steps of stress, as of all of them only the frame's compliance acts there. */
+    private static Optional<String> idleOnCreep(Instrument instrument) {
+        if (instrument.records().layout() != Layout.CREEP) {
+            return Optional.empty();
+        }
+        Corrections given = instrument.corrections();
+        List<String> idle = new ArrayList<>();
+        if (given.loadDelayS() != 0 || given.deformationDelayS() != 0) {
+            idle.add("delays");
+        }
+        addIf(given.inertiaKgM2() != 0, InstrumentKeys.INERTIA, idle);
+        addIf(given.frictionNMS() != 0, InstrumentKeys.FRICTION, idle);
+        addIf(given.movingMassKg() != 0, InstrumentKeys.MOVING_MASS, idle);
+        addIf(given.dampingNSPerM() != 0, InstrumentKeys.DAMPING, idle);
+        addIf(given.wall() == MeasuringWall.MOVING, InstrumentKeys.TORQUE_AT, idle);
+        return idle.isEmpty()
+                ? Optional.empty()
+                : Optional.of("[corrections] of instrument " + instrument.id() + ": " + String.join(", ", idle)
+                        + " read and checked, not acted on with layout creep; only compliance is");
+    }
+
+    private static void addIf(boolean there, Key key, List<String> idle) {
+        if (there) {
+            idle.add(key.name());
+        }
     }
 
     private Optional<Path> path(SectionReader section, Key key) {

@@ -261,4 +261,25 @@ class CreepNightTest {
         assertThat(ended.exitCode()).isZero();
         assertThat(ended.out()).contains("bench/run.csv: UTF-8, layout creep, header in line 1, data from line 2");
     }
+
+    @Test
+    void checkSaysWhichCorrectionsDoNothingToCreep() {
+        instrument("header = \"t,\"", """
+                time = { column = "t", unit = "s" }
+                strain = { column = "strain", unit = "%" }
+                stress = { column = "stress", unit = "kPa", delay = "12 µs" }
+                """, """
+                [corrections]
+                compliance = "0.003 rad/(N·m)"
+                inertia = "1.2e-5 kg·m²"
+                damping = "0.05 N·s/m"
+                """);
+
+        assertThat(lab.command("check").out())
+                .contains(
+                        "[corrections] of instrument bench: delays, inertia, damping read and checked, not acted on with"
+                                + " layout creep; only compliance is");
+        plainInstrument();
+        assertThat(lab.command("check").out()).doesNotContain("[corrections]");
+    }
 }

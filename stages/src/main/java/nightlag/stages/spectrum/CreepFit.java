@@ -32,6 +32,10 @@ public final class CreepFit {
     private static final double SMALLEST_STRENGTH = 1e-12;
     /** How stiffly neighbours are kept in a smooth row where more modes are asked for than the readings tell apart. */
     private static final double SPRING = 0.3;
+    /** Of the way to its neighbour such a mode may go a little less than half, so that it never becomes one with it. */
+    private static final double OWN_PLACE = 0.49;
+    /** What ln J0 and ln 1/η0 may change by then. */
+    private static final double KEPT = Math.log(2);
 
     private final CreepRows rows;
     private final ComplianceReadings readings;
@@ -74,8 +78,8 @@ public final class CreepFit {
     }
 
     private FittedCompliance find(OptionalInt wanted) {
-        FittedCompliance richest = mergedGrid();
-        return wanted.isPresent() ? withExactly(wanted.getAsInt(), richest) : refined(best(richest), 0, STEPS_AT_LAST);
+        FittedCompliance best = best(mergedGrid());
+        return wanted.isPresent() ? withExactly(wanted.getAsInt(), best) : refined(best, STEPS_AT_LAST);
     }
 
     private FittedCompliance mergedGrid() {
@@ -112,13 +116,13 @@ public final class CreepFit {
         return modes.chiSquared() / variance + modes.parameters() * Math.log(rows.count());
     }
 
-    /** Down the ladder to the number wanted; where it begins below that, more than the readings ask for. */
-    private FittedCompliance withExactly(int wanted, FittedCompliance richest) {
-        FittedCompliance current = richest;
+    /** Down from the best set to the number wanted; where that has fewer, more than the readings ask for. */
+    private FittedCompliance withExactly(int wanted, FittedCompliance best) {
+        FittedCompliance current = best;
         while (current.relaxationModes() > wanted && current.count() > 0) {
             current = withOneLess(current);
         }
-        return current.relaxationModes() == wanted ? refined(current, 0, STEPS_AT_LAST) : spread(wanted, best(richest));
+        return current.relaxationModes() == wanted ? refined(current, STEPS_AT_LAST) : spread(wanted, best);
     }
 
     /**
@@ -150,7 +154,7 @@ public final class CreepFit {
                 material.fluidityPerPaS(),
                 fitting.moves(),
                 Double.NaN);
-        return refined(start, SPRING * Math.sqrt(variance(fitting)), STEPS_AT_LAST);
+        return refined(start, SPRING * Math.sqrt(variance(fitting)), OWN_PLACE * step, STEPS_AT_LAST);
     }
 
     private FittedCompliance withOneLess(FittedCompliance current) {
@@ -166,14 +170,24 @@ public final class CreepFit {
     }
 
     private FittedCompliance refinedInUse(FittedCompliance linear) {
-        double[] inUse = linear.timesInUse();
-        return refined(
-                inUse.length == linear.count() ? linear : rows.strengthsAt(inUse, linear.moves()),
-                0,
-                STEPS_WHILE_SEARCHING);
+        FittedCompliance modes = linear;
+        while (modes.timesInUse().length < modes.count()) {
+            modes = rows.strengthsAt(modes.timesInUse(), modes.moves());
+        }
+        return refined(modes, STEPS_WHILE_SEARCHING);
     }
 
-    private FittedCompliance refined(FittedCompliance start, double spring, int steps) {
+    private FittedCompliance refined(FittedCompliance start, int steps) {
+        return refined(start, 0, Double.POSITIVE_INFINITY, steps);
+    }
+
+    /**
+     * Strengths, times, J0, flow and moves refined together.
+     *
+     * @param spring stiffness of the springs between neighbours, 0 for none
+     * @param reach how far a time may go in ln λ
+     */
+    private FittedCompliance refined(FittedCompliance start, double spring, double reach, int steps) {
         double[] place = start.place();
         if (place.length == 0 || Arrays.stream(start.strengths()).anyMatch(strength -> !(strength > 0))) {
             return start;
@@ -183,20 +197,35 @@ public final class CreepFit {
         double[] upper = new double[place.length];
         Arrays.fill(lower, Double.NEGATIVE_INFINITY);
         Arrays.fill(upper, Double.POSITIVE_INFINITY);
-        for (int i = 2 * start.count(); i < start.ofSpectrum(); i++) {
-            // a J0 or a flow that the data do not want goes on falling until no double holds it
-            lower[i] = place[i] + Math.log(SMALLEST_STRENGTH);
-        }
         for (int i = 0; i < start.count(); i++) {
+            int time = start.count() + i;
             lower[i] = Math.min(place[i], Math.log(SMALLEST_STRENGTH * most));
-            lower[start.count() + i] = Math.log(shortest);
-            upper[start.count() + i] = Math.log(longest);
-            place[start.count() + i] =
-                    Math.min(Math.log(longest), Math.max(Math.log(shortest), place[start.count() + i]));
+            lower[time] = Math.log(shortest);
+            upper[time] = Math.log(longest);
+            place[time] = Math.min(upper[time], Math.max(lower[time], place[time]));
+            lower[time] = Math.max(lower[time], place[time] - reach);
+            upper[time] = Math.min(upper[time], place[time] + reach);
+        }
+        double leastInstantaneous = SMALLEST_STRENGTH * most;
+        double leastFluidity = leastInstantaneous / longest;
+        int next = 2 * start.count();
+        if (start.instantaneous() > 0) {
+            lower[next] = Math.min(place[next], Math.log(leastInstantaneous));
+            next++;
+        }
+        if (start.fluidity() > 0) {
+            lower[next] = Math.min(place[next], Math.log(leastFluidity));
+            next++;
+        }
+        if (spring > 0) {
+            for (int i = 2 * start.count(); i < next; i++) {
+                lower[i] = place[i] - KEPT;
+                upper[i] = place[i] + KEPT;
+            }
         }
         LevenbergMarquardt.Fit fit =
                 LevenbergMarquardt.minimise(new Model(start, spring), place, lower, upper, ENOUGH, steps);
-        FittedCompliance found = start.at(fit.parameters());
+        FittedCompliance found = start.at(fit.parameters()).without(2 * leastInstantaneous, 2 * leastFluidity);
         return found.sorted(CreepRows.square(rows.residuals(found)));
     }
 

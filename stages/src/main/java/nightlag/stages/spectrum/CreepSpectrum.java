@@ -70,11 +70,15 @@ public final class CreepSpectrum implements FittedSpectrum {
         if (fitted.instantaneous() > 0) {
             return RetardationModes.of(fitted.instantaneous(), fitted.fluidity(), fitted.times(), fitted.strengths());
         }
+        int fastest = 0;
+        while (!(fitted.strengths()[fastest] > 0)) {
+            fastest++;
+        }
         return RetardationModes.of(
-                fitted.strengths()[0],
+                fitted.strengths()[fastest],
                 fitted.fluidity(),
-                Arrays.copyOfRange(fitted.times(), 1, fitted.count()),
-                Arrays.copyOfRange(fitted.strengths(), 1, fitted.count()));
+                Arrays.copyOfRange(fitted.times(), fastest + 1, fitted.count()),
+                Arrays.copyOfRange(fitted.strengths(), fastest + 1, fitted.count()));
     }
 
     /** The fitted modes. */

@@ -93,6 +93,17 @@ record FittedCompliance(
                 Double.NaN);
     }
 
+    /** The same, J0 and flow taken for none where they are no more than this. */
+    FittedCompliance without(double leastInstantaneous, double leastFluidity) {
+        return new FittedCompliance(
+                times,
+                strengths,
+                instantaneous > leastInstantaneous ? instantaneous : 0,
+                fluidity > leastFluidity ? fluidity : 0,
+                moves,
+                chiSquared);
+    }
+
     /** The same with its modes in the order of their times. */
     FittedCompliance sorted(double ofChiSquared) {
         int[] order = IntStream.range(0, count())

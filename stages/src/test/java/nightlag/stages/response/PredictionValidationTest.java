@@ -12,9 +12,13 @@ import static org.assertj.core.api.Assertions.within;
 import java.util.List;
 import java.util.Optional;
 import java.util.OptionalInt;
+import nightlag.stages.TestCreep;
 import nightlag.stages.fault.ReductionFault;
+import nightlag.stages.moduli.CreepCurve;
 import nightlag.stages.response.Programme.Instant;
 import nightlag.stages.response.ResponseRow.StrainParts;
+import nightlag.stages.spectrum.CreepFit;
+import nightlag.stages.spectrum.CreepSpectrum;
 import nightlag.stages.spectrum.DiscreteFit;
 import nightlag.stages.spectrum.DiscreteSpectrum;
 import nightlag.stages.spectrum.SpectrumPlan;
@@ -85,6 +89,28 @@ class PredictionValidationTest {
             double expected = 0.01 * solid.relaxationPa(row.timeS());
             assertThat(row.stressPa()).isCloseTo(expected, within(0.01 * expected));
         });
+    }
+
+    @ParameterizedTest(name = "α = {0}")
+    @ValueSource(doubles = {0.3, 0.5, 0.7})
+    void aFitToACreepRecordPredictsCreepAndRelaxationToAPerCentWithinIt(double alpha) throws ReductionFault {
+        FractionalSolid solid = new FractionalSolid(1e8, 1e9, 1, alpha);
+        CreepCurve record = TestCreep.creep(solid::creepPerPa, 1e-3, 1e3, 1.5e3).build();
+        CreepSpectrum spectrum = CreepFit.fit(List.of(record), SOLID);
+
+        List<ResponseRow> creep = Prediction.of(stress(1e5, step(0, 1e6)), spectrum, ONE_TEMPERATURE);
+        List<ResponseRow> relaxation = Prediction.of(strain(1e5, step(0, 0.01)), spectrum, ONE_TEMPERATURE);
+
+        assertThat(creep.stream().filter(ResponseRow::insideData)).hasSizeGreaterThan(110);
+        assertThat(creep).filteredOn(PredictionValidationTest::isToBeMet).allSatisfy(row -> {
+            double expected = 1e6 * solid.creepPerPa(row.timeS());
+            assertThat(row.strain()).isCloseTo(expected, within(0.01 * expected));
+        });
+        assertThat(relaxation).filteredOn(PredictionValidationTest::isToBeMet).allSatisfy(row -> {
+            double expected = 0.01 * solid.relaxationPa(row.timeS());
+            assertThat(row.stressPa()).isCloseTo(expected, within(0.01 * expected));
+        });
+        assertThat(creep).allMatch(row -> row.band().isPresent());
     }
 
     /** Before the first step there is nothing to predict. */

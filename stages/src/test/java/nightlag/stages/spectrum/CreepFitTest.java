@@ -1,26 +1,23 @@
 package nightlag.stages.spectrum;
 
 import static org.assertj.core.api.Assertions.assertThat;
+import static org.assertj.core.api.Assertions.assertThatThrownBy;
 import static org.assertj.core.api.Assertions.within;
 
 import java.util.ArrayList;
 import java.util.List;
 import java.util.Optional;
-import java.util.OptionalDouble;
 import java.util.OptionalInt;
 import java.util.Random;
+import nightlag.stages.TestCreep;
 import nightlag.stages.fault.ReductionFault;
-import nightlag.stages.geometry.DeformationMode;
 import nightlag.stages.moduli.CreepCurve;
-import nightlag.stages.moduli.CreepPart;
 import nightlag.stages.moduli.CreepReading;
 import nightlag.stages.moduli.CreepStep;
 import nightlag.stages.moduli.Marker;
 import nightlag.stages.moduli.Moduli;
 import nightlag.stages.moduli.ModuliCovariance;
 import nightlag.stages.moduli.ModulusReading;
-import nightlag.stages.moduli.PointKey;
-import nightlag.stages.moduli.Quality;
 import nightlag.stages.numeric.Complex;
 import org.junit.jupiter.api.Test;
 import org.junit.jupiter.params.ParameterizedTest;
@@ -41,34 +38,9 @@ class CreepFitTest {
     /** Creep under 1 kPa and, where the record goes on, recovery; errors of {@code noise} of the reading. */
     static CreepCurve curve(
             RetardationModes material, double first, double loadedS, double untilS, double noise, long seed) {
-        Random random = new Random(seed);
-        List<CreepStep> steps = new ArrayList<>();
-        List<CreepReading> readings = new ArrayList<>();
-        steps.add(new CreepStep(CreepPart.LOAD, 0, 0, 0, 1000, 0, 0, 0));
-        for (double t = first; t <= loadedS; t *= Math.pow(10, 0.05)) {
-            readings.add(reading(1, t, t, 1000, 1000 * material.creepPerPa(t), 0, noise, random));
-        }
-        if (untilS > loadedS) {
-            double before = 1000 * material.creepPerPa(loadedS);
-            steps.add(new CreepStep(CreepPart.RECOVERY, loadedS, 0, 0, -1000, 0, before, 0));
-            for (double t = first; t <= untilS - loadedS; t *= Math.pow(10, 0.05)) {
-                double strain = 1000 * (material.creepPerPa(loadedS + t) - material.creepPerPa(t));
-                readings.add(reading(2, loadedS + t, t, -1000, strain, before, noise, random));
-            }
-        }
-        return new CreepCurve(
-                new PointKey("plover", "L1", "1", "1", "run", "bench/run.csv"),
-                Optional.empty(),
-                DeformationMode.SHEAR,
-                OptionalDouble.of(298.15),
-                OptionalDouble.empty(),
-                true,
-                steps,
-                readings,
-                Quality.SOUND,
-                List.of(),
-                1000,
-                List.of());
+        return TestCreep.creep(material::creepPerPa, first, loadedS, untilS)
+                .noisy(noise, seed)
+                .build();
     }
 
     /** The same with the stress the other way. */
@@ -106,21 +78,6 @@ class CreepFitTest {
                 curve.flags(),
                 curve.samplesUsed(),
                 curve.reasons());
-    }
-
-    private static CreepReading reading(
-            int step,
-            double t,
-            double since,
-            double change,
-            double strain,
-            double before,
-            double noise,
-            Random random) {
-        double u = Math.max(noise, 1e-6) * Math.abs(strain);
-        double read = strain + noise * strain * random.nextGaussian();
-        return new CreepReading(
-                step, t, since, Math.max(0, change), read, u, (read - before) / change, u / Math.abs(change));
     }
 
     static List<ModulusReading> moduli(RetardationModes material, double lowest, double highest, double noise) {
@@ -220,5 +177,146 @@ class CreepFitTest {
         CreepSpectrum spectrum = CreepFit.fit(List.of(curve(melt, 1e-3, 1e4, 1e4, 0.04, 1008)), LIQUID);
 
         assertThat(spectrum.retardation().fluidityPerPaS()).isCloseTo(1e-4, within(2e-5));
+    }
+
+    /** Modes over eight decades, of which moduli see the fast ones and creep the slow ones. */
+    private static final RetardationModes WIDE = RetardationModes.of(
+            1e-9, 1e-12, new double[] {1e-3, 1e-1, 10, 1000}, new double[] {1e-9, 3e-9, 1e-8, 3e-8});
+
+    @Test
+    void creepAtOtherTemperaturesIsShiftedToThatOfTheModuli() throws ReductionFault {
+        // warm creep of ten minutes stands for a day and more, cold creep for what is fast
+        CreepData data = CreepData.of(
+                        List.of(
+                                new ShiftedCreep(List.of(shifted(0.01, 1.1, 1, 600)), Math.log(0.01), Math.log(1.1)),
+                                new ShiftedCreep(List.of(shifted(10, 0.95, 1, 600)), Math.log(10), Math.log(0.95))),
+                        new double[4][4])
+                .with(moduli(WIDE, 0.1, 1e4, 0.003), Optional.empty());
+
+        CreepSpectrum spectrum = CreepFit.fit(data, LIQUID);
+
+        requireModes(spectrum.retardation(), WIDE, 0.05);
+        assertThat(spectrum.window().longestS()).isCloseTo(6e4, within(6e3));
+        assertThat(spectrum.markers(298.15))
+                .extracting(Marker::method)
+                .allMatch(method -> method.contains("creep at 2 temperatures and oscillation together"));
+        assertThat(spectrum.notes()).isEmpty();
+    }
+
+    @ParameterizedTest(name = "{0} u beside")
+    @ValueSource(doubles = {-2, 1, 2})
+    void whatAShiftIsOffIsFittedWithinItsU(double off) throws ReductionFault {
+        double u = 0.1;
+        CreepCurve warm = shifted(0.01, 1, 0.1, 2000);
+        double[][] covariance = {{u * u, 0}, {0, 0}};
+        List<ModulusReading> moduli = moduli(WIDE, 1e-3, 1e4, 0.003);
+        CreepData said = CreepData.of(List.of(new ShiftedCreep(List.of(warm), Math.log(0.01) + off * u, 0)), covariance)
+                .with(moduli, Optional.empty());
+        CreepData taken = CreepData.of(
+                        List.of(new ShiftedCreep(List.of(warm), Math.log(0.01) + off * u, 0)), new double[2][2])
+                .with(moduli, Optional.empty());
+
+        CreepSpectrum spectrum = CreepFit.fit(said, LIQUID);
+
+        requireModes(spectrum.retardation(), WIDE, 0.05);
+        double viscosity = 1 / WIDE.fluidityPerPaS();
+        assertThat(value(spectrum, "zero_shear_viscosity")).isCloseTo(viscosity, within(0.02 * viscosity));
+        // a shift taken for exact carries its error into all times
+        assertThat(Math.abs(value(CreepFit.fit(taken, LIQUID), "zero_shear_viscosity") / viscosity - 1))
+                .isGreaterThan(0.05);
+    }
+
+    @Test
+    void creepThatDoesNotGoWithTheShiftsIsSaid() throws ReductionFault {
+        double u = 0.02;
+        CreepData data = CreepData.of(
+                        List.of(new ShiftedCreep(List.of(shifted(0.01, 1, 0.1, 2000)), Math.log(0.013), 0)),
+                        new double[][] {{u * u, 0}, {0, 0}})
+                .with(moduli(WIDE, 1e-3, 1e4, 0.003), Optional.empty());
+
+        assertThat(CreepFit.fit(data, LIQUID).notes())
+                .extracting(note -> note.code())
+                .containsExactly("CREEP_SHIFT_OFF");
+    }
+
+    private static CreepCurve shifted(double a, double b, double first, double loadedS) {
+        return TestCreep.creep(WIDE::creepPerPa, first, loadedS, loadedS)
+                .shifted(350, a, b)
+                .noisy(0.003, 3)
+                .build();
+    }
+
+    private static double value(CreepSpectrum spectrum, String property) {
+        return spectrum.markers(298.15).stream()
+                .filter(marker -> marker.property().equals(property))
+                .findFirst()
+                .orElseThrow()
+                .value();
+    }
+
+    @ParameterizedTest(name = "{0} modes")
+    @ValueSource(ints = {1, 2, 3, 5, 8, 12})
+    void aFixedNumberIsThatOfTheRelaxationModes(int modes) throws ReductionFault {
+        SpectrumPlan plan = new SpectrumPlan(false, OptionalInt.of(modes), false);
+
+        CreepSpectrum ofLiquid = CreepFit.fit(List.of(curve(WIDE, 0.01, 1e4, 2e4, 0.01, 1)), plan);
+
+        assertThat(ofLiquid.relaxation().count()).isEqualTo(modes);
+        assertThat(ofLiquid.notes()).extracting(note -> note.code()).doesNotContain("CREEP_OTHER_NUMBER_OF_MODES");
+        if (modes >= 5) {
+            for (double t = 0.01; t <= 1e4; t *= 3) {
+                double truth = WIDE.creepPerPa(t);
+                assertThat(ofLiquid.retardation().creepPerPa(t)).isCloseTo(truth, within(0.02 * truth));
+            }
+        }
+        CreepSpectrum ofSolid = CreepFit.fit(
+                List.of(curve(STANDARD_SOLID, 0.1, 200, 500, 0.01, 1)),
+                new SpectrumPlan(true, OptionalInt.of(modes), false));
+        assertThat(ofSolid.relaxation().count()).isEqualTo(modes);
+    }
+
+    @Test
+    void moreModesThanReadingsCarryAreRefused() {
+        SpectrumPlan plan = new SpectrumPlan(false, OptionalInt.of(60), false);
+
+        assertThatThrownBy(() -> CreepFit.fit(List.of(curve(BURGERS, 0.01, 100, 100, 0, 1)), plan))
+                .hasMessageContaining("60 modes are asked for");
+    }
+
+    @Test
+    void moduliWithoutUTakeTheirScatter() throws ReductionFault {
+        List<ModulusReading> moduli = moduli(WIDE, 0.1, 1e4, 0.003).stream()
+                .map(reading -> new ModulusReading(
+                        reading.angularFrequency(),
+                        new Moduli(
+                                reading.moduli().storagePa(), reading.moduli().lossPa(), Optional.empty())))
+                .toList();
+        CreepData creep = CreepData.of(ShiftedCreep.unmoved(List.of(curve(WIDE, 1, 1e5, 1e5, 0.003, 3))));
+
+        CreepSpectrum both = CreepFit.fit(creep.with(moduli, Optional.of(DiscreteFit.fit(moduli, LIQUID))), LIQUID);
+
+        requireModes(both.retardation(), WIDE, 0.1);
+        assertThat(both.markers(298.15))
+                .extracting(Marker::method)
+                .allMatch(method -> method.contains("the moduli's u from their scatter"));
+        assertThatThrownBy(() -> creep.with(moduli, Optional.empty())).hasMessageContaining("came without u");
+    }
+
+    @Test
+    void betweenCreepAndModuliThatDoNotMeetNothingIsSupported() throws ReductionFault {
+        CreepData apart = CreepData.of(ShiftedCreep.unmoved(List.of(curve(WIDE, 10, 1e5, 1e5, 0.003, 3))))
+                .with(moduli(WIDE, 10, 1e4, 0.003), Optional.empty());
+        CreepData meeting = CreepData.of(ShiftedCreep.unmoved(List.of(curve(WIDE, 0.1, 1e5, 1e5, 0.003, 3))))
+                .with(moduli(WIDE, 5, 1e4, 0.003), Optional.empty());
+
+        CreepSpectrum gap = CreepFit.fit(apart, LIQUID);
+        CreepSpectrum whole = CreepFit.fit(meeting, LIQUID);
+
+        assertThat(gap.supports(0.001)).isTrue();
+        assertThat(gap.supports(1)).isFalse();
+        assertThat(gap.supports(1000)).isTrue();
+        assertThat(whole.supports(0.15)).isTrue();
+        assertThat(whole.supports(0.05)).isTrue();
+        assertThat(whole.supports(2e5)).isFalse();
     }
 }
