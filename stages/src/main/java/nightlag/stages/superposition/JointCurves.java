@@ -22,14 +22,14 @@ record JointCurves(
         double[][] covariance,
         double squares,
         double cost,
-        Freedom freedom,
+        double freedom,
         int[] isotherm,
         double[][] departures) {
     private static final double LN_10 = Math.log(10);
 
     /** What u² of the shifts is multiplied by: points scatter about common curves by more where these do not hold. */
     double widening() {
-        return freedom.ofErrors() > 0 ? Math.max(1, squares / freedom.ofErrors()) : 1;
+        return freedom > 0 ? Math.max(1, squares / freedom) : 1;
     }
 
     /** Rms distance of all moduli from the curves, decades. */

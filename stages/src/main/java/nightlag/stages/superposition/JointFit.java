@@ -231,7 +231,7 @@ final class JointFit implements LevenbergMarquardt.Problem {
             double[][] covariance = factored(followed.information()).inverse();
             int further = (fitLevels ? isotherms : 0)
                     - Arrays.stream(specimens.fitted()).sum();
-            Freedom freedom = pair.freedom(followed.follow(), covariance).plus(new Freedom(further, further));
+            double freedom = pair.freedom(followed.follow(), covariance) + further;
             double[] up = new double[isotherms];
             double[] levels = new double[isotherms];
             for (int i = 0; i < isotherms; i++) {

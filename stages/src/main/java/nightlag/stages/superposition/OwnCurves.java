@@ -27,7 +27,7 @@ record OwnCurves(List<OwnCurve> curves, Smoothness smoothness) {
      */
     record OwnCurve(SmoothPair pair, double[] coefficients, double residualSquares, double deviance) {
         /** Degrees of freedom of the squares. */
-        Freedom freedom() {
+        double freedom() {
             return pair.freedom(new double[0][], new double[0][]);
         }
     }

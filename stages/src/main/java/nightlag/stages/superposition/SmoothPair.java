@@ -105,12 +105,13 @@ final class SmoothPair {
     }
 
     /**
-     * What points scatter less for being fitted.
+     * Degrees of freedom of the sum of squares the curves leave: n − tr(2H − H²) times the errors' variance is what is left of them,
+     * H being the matrix that turns values into fitted ones (Hastie &amp; Tibshirani, Generalized Additive Models (1990), 3.5).
      *
      * @param follow how the coefficients follow each further parameter that is fitted along, one array a parameter
      * @param covariance covariance of these
      */
-    Freedom freedom(double[][] follow, double[][] covariance) {
+    double freedom(double[][] follow, double[][] covariance) {
         int n = design.coefficients();
         double[][] shares = new double[n][];
         for (int j = 0; j < n; j++) {
@@ -132,16 +133,13 @@ final class SmoothPair {
                 }
             }
         }
-        double trace = 0;
         double square = 0;
         for (int i = 0; i < n; i++) {
-            trace += shares[i][i];
             for (int j = 0; j < n; j++) {
                 square += shares[i][j] * shares[j][i];
             }
         }
-        int parameters = n + follow.length;
-        return new Freedom(weights.values() - parameters + square, weights.values() - parameters + trace);
+        return weights.values() - n - follow.length + square;
     }
 
     private double[] penaltyColumn(int coefficient) {

@@ -5,6 +5,7 @@ import java.util.Arrays;
 import java.util.LinkedHashMap;
 import java.util.List;
 import java.util.Map;
+import java.util.Optional;
 import nightlag.stages.numeric.Cholesky;
 import nightlag.stages.numeric.EvenSplines;
 import nightlag.stages.superposition.FollowedCurves.Push;
@@ -36,8 +37,9 @@ record SpecimenOffsets(List<LogIsotherm> isotherms, int[] fitted, double[] level
 
     /** Takes them out. */
     static SpecimenOffsets of(List<LogIsotherm> isotherms) {
+        List<Constants> found = isotherms.stream().map(SpecimenOffsets::within).toList();
         List<Map<String, Double>> constants =
-                isotherms.stream().map(SpecimenOffsets::within).toList();
+                found.stream().map(Constants::bySpecimen).toList();
         int count = isotherms.size();
         int[] fitted = constants.stream()
                 .mapToInt(each -> Math.max(0, each.size() - 1))
@@ -63,10 +65,16 @@ record SpecimenOffsets(List<LogIsotherm> isotherms, int[] fitted, double[] level
         }
         int pooled = Arrays.stream(fitted).sum();
         int free = pooled - (everywhere.size() - groups(constants));
+        double noise = found.stream()
+                .filter(one -> one.bySpecimen().size() > 1)
+                .mapToDouble(Constants::noise)
+                .average()
+                .orElse(0);
+        double ofLoading = free > 0 ? Math.max(0, squares / free - noise) : 0;
         double[] variances = new double[count];
         List<LogIsotherm> without = new ArrayList<>();
         for (int i = 0; i < count; i++) {
-            variances[i] = free > 0 ? squares / free / (fitted[i] + 1) : 0;
+            variances[i] = ofLoading / (fitted[i] + 1);
             without.add(without(isotherms.get(i), constants.get(i), levels[i]));
         }
         return new SpecimenOffsets(without, fitted, variances, Math.sqrt(apart / pooled));
@@ -98,39 +106,67 @@ record SpecimenOffsets(List<LogIsotherm> isotherms, int[] fitted, double[] level
     }
 
     /**
-     * The constants of an isotherm's specimens, against one of them. A specimen that shares no stretch of frequencies with the
-     * others has no part in it.
+     * The constants of an isotherm's specimens, against one of them.
+     *
+     * @param bySpecimen the constants, in ln |G*|
+     * @param noise variance that the scatter of the points gives a specimen's constant
      */
-    private static Map<String, Double> within(LogIsotherm isotherm) {
-        Map<String, Double> constants = new LinkedHashMap<>();
-        List<LogReading> readings = isotherm.readings();
-        List<String> compared = compared(readings);
-        compared.forEach(specimen -> constants.put(specimen, 0.0));
-        if (compared.size() < 2) {
-            return constants;
-        }
-        List<Push> pushes = new ArrayList<>();
-        Weights weights = Weights.of(readings, false, FREE);
-        for (String specimen : compared.subList(1, compared.size())) {
-            double[] values = new double[2 * readings.size()];
-            for (int p = 0; p < readings.size(); p++) {
-                if (readings.get(p).specimen().equals(specimen)) {
-                    weights.whiten(p, 1, 1, values);
-                }
-            }
-            pushes.add(new Push(0, values));
-        }
+    private record Constants(Map<String, Double> bySpecimen, double noise) {}
+
+    /** Fits them. A specimen that shares no stretch of frequencies with the others has no part in it. */
+    private static Constants within(LogIsotherm isotherm) {
+        List<String> compared = compared(isotherm.readings());
+        return compared.size() < 2
+                ? new Constants(zeros(compared), 0)
+                : fitted(isotherm, compared).orElseGet(() -> new Constants(zeros(compared.subList(0, 1)), 0));
+    }
+
+    private static Map<String, Double> zeros(List<String> specimens) {
+        Map<String, Double> zeros = new LinkedHashMap<>();
+        specimens.forEach(specimen -> zeros.put(specimen, 0.0));
+        return zeros;
+    }
+
+    /** Empty where the points do not tell specimens and curves apart. */
+    private static Optional<Constants> fitted(LogIsotherm isotherm, List<String> compared) {
+        Weights weights = Weights.of(isotherm.readings(), false, FREE);
+        List<Push> pushes = compared.stream()
+                .skip(1)
+                .map(specimen -> push(isotherm.readings(), specimen, weights))
+                .toList();
         OwnCurves.Prepared prepared = OwnCurves.Prepared.of(isotherm);
-        prepared.fit(false, FREE).ifPresent(curve -> {
+        return prepared.fit(false, FREE).flatMap(curve -> {
             FollowedCurves followed = FollowedCurves.of(curve.pair(), pushes, prepared.differences(curve, weights));
-            Cholesky.of(followed.information()).ifPresent(factored -> {
-                double[] found = factored.solve(followed.gradient());
-                for (int k = 0; k < found.length; k++) {
-                    constants.put(compared.get(k + 1), -found[k]);
-                }
-            });
+            return Cholesky.of(followed.information())
+                    .map(factored -> constants(compared, curve, followed.gradient(), factored));
         });
-        return constants;
+    }
+
+    private static Push push(List<LogReading> readings, String specimen, Weights weights) {
+        double[] values = new double[2 * readings.size()];
+        for (int p = 0; p < readings.size(); p++) {
+            if (readings.get(p).specimen().equals(specimen)) {
+                weights.whiten(p, 1, 1, values);
+            }
+        }
+        return new Push(0, values);
+    }
+
+    private static Constants constants(
+            List<String> compared, OwnCurves.OwnCurve curve, double[] gradient, Cholesky factored) {
+        Map<String, Double> constants = zeros(compared);
+        double[] less = factored.solve(gradient);
+        double squares = curve.residualSquares();
+        double ofDifference = 0;
+        double[][] inverse = factored.inverse();
+        for (int k = 0; k < less.length; k++) {
+            constants.put(compared.get(k + 1), -less[k]);
+            squares -= less[k] * gradient[k];
+            ofDifference += inverse[k][k] / less.length;
+        }
+        double free = curve.freedom() - less.length;
+        // the difference of two specimens has the variance of both
+        return new Constants(constants, free > 0 ? ofDifference / 2 * squares / free : 0);
     }
 
     /** The specimen of most points, and those with some places among the others'. */

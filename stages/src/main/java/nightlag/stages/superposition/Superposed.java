@@ -18,7 +18,7 @@ record Superposed(
         boolean verticalLimited,
         JointCurves common,
         double ownSquares,
-        Freedom ownFreedom,
+        double ownFreedom,
         double specimensDiffer) {
     /** Own curves that leave fewer degrees of freedom say nothing about scatter. */
     private static final double LEAST_FREEDOM = 4;
@@ -36,23 +36,23 @@ record Superposed(
                 verticalLimited,
                 common,
                 each.stream().mapToDouble(OwnCurve::residualSquares).sum(),
-                each.stream().map(OwnCurve::freedom).reduce(new Freedom(-constants, -constants), Freedom::plus),
+                each.stream().mapToDouble(OwnCurve::freedom).sum() - constants,
                 specimens.rms());
     }
 
     /** Degrees of freedom of what common curves add to the squares of own ones. */
     double addedFreedom() {
-        return common.freedom().ofAll() - ownFreedom.ofAll();
+        return common.freedom() - ownFreedom;
     }
 
     /** Whether the two scatters can be compared. */
     boolean canBeCompared() {
-        return ownFreedom.ofErrors() >= LEAST_FREEDOM && addedFreedom() > 0;
+        return ownFreedom >= LEAST_FREEDOM && addedFreedom() > 0;
     }
 
     /** What common curves add to the squares per degree of freedom, over the scatter about own ones. */
     double varianceRatio() {
         double added = Math.max(0, common.squares() - ownSquares);
-        return added / addedFreedom() / (ownSquares / ownFreedom.ofErrors());
+        return added / addedFreedom() / (ownSquares / ownFreedom);
     }
 }

@@ -1,6 +1,7 @@
 package nightlag.stages.superposition;
 
 import java.util.ArrayList;
+import java.util.Arrays;
 import java.util.Comparator;
 import java.util.List;
 import java.util.Optional;
@@ -19,6 +20,9 @@ final class Superposing {
 
     /** Isotherms of fewer frequencies on average leave smoothness to the common curves. */
     private static final int TELLING_PLACES = 20;
+
+    /** Variance of ln |G*| of whole isotherms from which on pairs may be moved vertically to find where they start: 2 %. */
+    private static final double TELLING_LEVEL = 0.02 * 0.02;
 
     /** How often smoothness is read off common curves where own ones do not tell it. */
     private static final int ROUNDS = 3;
@@ -45,7 +49,8 @@ final class Superposing {
         this.prepared = isotherms.stream().map(Prepared::of).toList();
         this.own = SmoothnessSearch.likeliest(prepared, useGiven);
         StartingShifts horizontal = StartingShifts.of(isotherms, own, vertical, false);
-        this.starts = fitVertical
+        boolean levelsDiffer = Arrays.stream(specimens.levelVariances()).anyMatch(variance -> variance > TELLING_LEVEL);
+        this.starts = fitVertical || levelsDiffer
                 ? List.of(horizontal, StartingShifts.of(isotherms, own, vertical, true))
                 : List.of(horizontal);
     }

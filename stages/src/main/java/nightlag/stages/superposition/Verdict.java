@@ -29,8 +29,7 @@ record Verdict(
                     misfit, plan.toleranceDecades(), OptionalDouble.empty(), 1, superposed.specimensDiffer());
         }
         double ratio = superposed.varianceRatio();
-        double chance = VarianceRatio.chanceOfMore(
-                ratio, superposed.addedFreedom(), superposed.ownFreedom().ofErrors());
+        double chance = VarianceRatio.chanceOfMore(ratio, superposed.addedFreedom(), superposed.ownFreedom());
         return new Verdict(
                 misfit, plan.toleranceDecades(), OptionalDouble.of(ratio), chance, superposed.specimensDiffer());
     }

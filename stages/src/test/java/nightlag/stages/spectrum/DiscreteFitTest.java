@@ -17,6 +17,7 @@ import nightlag.stages.moduli.Marker;
 import nightlag.stages.moduli.Moduli;
 import nightlag.stages.moduli.ModuliCovariance;
 import nightlag.stages.moduli.ModulusReading;
+import nightlag.stages.moduli.SharedErrors;
 import nightlag.stages.numeric.Complex;
 import org.junit.jupiter.api.Test;
 import org.junit.jupiter.params.ParameterizedTest;
@@ -28,6 +29,32 @@ class DiscreteFitTest {
     private static final RelaxationModes PMMA = PublishedSpectraValidationTest.PMMA;
     private static final SpectrumPlan LIQUID = new SpectrumPlan(false, OptionalInt.empty(), false);
     private static final SpectrumPlan SOLID = new SpectrumPlan(true, OptionalInt.empty(), false);
+
+    /** Exact: with all readings moved alike, η0 goes as b/a, Je0 as 1/b and the mean time as 1/a. */
+    @Test
+    void whatReadingsShareMovesTheFiguresAsShiftsDo() throws ReductionFault {
+        List<ModulusReading> readings = readings(LAUN, 1e-4, 1e5, 0, 1e-4, 0);
+        SharedErrors shared =
+                SharedErrors.of(new int[readings.size()], new double[][] {{0.01, 0.004}, {0.004, 0.0025}});
+
+        DiscreteSpectrum alone = DiscreteFit.fit(readings, LIQUID);
+        DiscreteSpectrum together = DiscreteFit.fit(readings, shared, LIQUID);
+
+        assertThat(together.relaxation().timesS()).isEqualTo(alone.relaxation().timesS());
+        assertThat(added(together, alone, "zero_shear_viscosity")).isCloseTo(0.01 + 0.0025 - 2 * 0.004, within(1e-6));
+        assertThat(added(together, alone, "steady_state_compliance")).isCloseTo(0.0025, within(1e-6));
+        assertThat(added(together, alone, "mean_relaxation_time")).isCloseTo(0.01, within(1e-6));
+        assertThat(added(together, alone, "instantaneous_modulus")).isCloseTo(0.0025, within(1e-6));
+    }
+
+    /** Relative variance beyond that of the scatter. */
+    private static double added(DiscreteSpectrum with, DiscreteSpectrum without, String property) {
+        double u = marker(with, property).u().orElseThrow()
+                / marker(with, property).value();
+        double own = marker(without, property).u().orElseThrow()
+                / marker(without, property).value();
+        return u * u - own * own;
+    }
 
     @Test
     void exactModuliGiveTheModesThatMadeThem() throws ReductionFault {

@@ -1,6 +1,7 @@
 package nightlag.stages.superposition;
 
 import java.util.ArrayList;
+import java.util.Collections;
 import java.util.List;
 import java.util.Optional;
 import java.util.Random;
@@ -109,6 +110,58 @@ public record ModelMaterial(String name, Curve modulus) {
             isotherms.add(new IsothermReadings(temperature, readings));
         }
         return isotherms;
+    }
+
+    /**
+     * Sweeps of several specimens, whose moduli are wrong by factors.
+     *
+     * @param perSpecimen standard deviation of what a specimen adds to ln |G*| at all temperatures
+     * @param perLoading standard deviation of what each of its sweeps adds besides
+     * @param repeatedFrom the isotherm from which on there are three specimens, those below are of the first alone
+     */
+    record Pooling(double perSpecimen, double perLoading, int repeatedFrom) {}
+
+    /** Sweeps of three specimens pooled, 10 points a decade and 1 % noise. */
+    List<IsothermReadings> pooled(
+            double[] temperatures, double givenU, double secondShare, Pooling pooling, Random random) {
+        List<List<IsothermReadings>> specimens = new ArrayList<>();
+        for (int specimen = 0; specimen < 3; specimen++) {
+            double everywhere = pooling.perSpecimen() * random.nextGaussian();
+            List<IsothermReadings> own = new ArrayList<>();
+            for (IsothermReadings isotherm : isotherms(temperatures, 10, 0.01, givenU, secondShare, t -> 0, random)) {
+                double factor = Math.exp(everywhere + pooling.perLoading() * random.nextGaussian());
+                own.add(new IsothermReadings(
+                        isotherm.temperatureK(),
+                        isotherm.readings().stream()
+                                .map(reading ->
+                                        new ModulusReading(reading.angularFrequency(), times(reading.moduli(), factor)))
+                                .toList()));
+            }
+            specimens.add(own);
+        }
+        List<IsothermReadings> pooled = new ArrayList<>();
+        for (int i = 0; i < temperatures.length; i++) {
+            List<ModulusReading> readings = new ArrayList<>();
+            List<String> names = new ArrayList<>();
+            for (int specimen = 0; specimen < (i < pooling.repeatedFrom() ? 1 : 3); specimen++) {
+                List<ModulusReading> own = specimens.get(specimen).get(i).readings();
+                readings.addAll(own);
+                names.addAll(Collections.nCopies(own.size(), Integer.toString(specimen)));
+            }
+            pooled.add(new IsothermReadings(temperatures[i], readings, names));
+        }
+        return pooled;
+    }
+
+    static Moduli times(Moduli moduli, double factor) {
+        return new Moduli(
+                factor * moduli.storagePa(),
+                factor * moduli.lossPa(),
+                moduli.covariance()
+                        .map(known -> new ModuliCovariance(
+                                factor * factor * known.storageVariance(),
+                                factor * factor * known.lossVariance(),
+                                factor * factor * known.covariance())));
     }
 
     /** Nine sweeps of 31 points each, 10 K apart. */

@@ -8,6 +8,7 @@ import java.util.function.LongFunction;
 import nightlag.stages.Study;
 import nightlag.stages.fault.ReductionFault;
 import nightlag.stages.moduli.Marker;
+import nightlag.stages.superposition.ModelMaterial.Pooling;
 import nightlag.stages.superposition.SuperpositionPlan.ShiftLaw;
 import nightlag.stages.superposition.SuperpositionPlan.VerticalShift;
 import org.junit.jupiter.api.Tag;
@@ -84,8 +85,37 @@ class SuperpositionStudyTest {
                 worstRms);
     }
 
+    static List<Condition> pooledSpecimens() {
+        return List.of(
+                pooled("three specimens, alike", 10, new Pooling(0, 0, 0), 0.01, VerticalShift.NONE, 0.004),
+                pooled("three specimens, 10 % apart", 10, new Pooling(0.1, 0, 0), 0.01, VerticalShift.NONE, 0.004),
+                pooled("three specimens, 30 % apart", 10, new Pooling(0.3, 0, 0), 0.01, VerticalShift.NONE, 0.004),
+                pooled("three, 30 % apart, without u", 10, new Pooling(0.3, 0, 0), 0, VerticalShift.NONE, 0.004),
+                pooled("one, hot three, 30 % apart", 10, new Pooling(0.3, 0, 3), 0.01, VerticalShift.NONE, 0.004),
+                pooled("three, each loading 10 % off", 5, new Pooling(0.1, 0.1, 0), 0.01, VerticalShift.NONE, 0.05),
+                pooled("three, each loading 30 % off", 5, new Pooling(0, 0.3, 0), 0.01, VerticalShift.NONE, 0.05),
+                pooled(
+                        "one, hot three, loadings 10 % off",
+                        5, new Pooling(0.3, 0.1, 3), 0.01, VerticalShift.NONE, 0.05),
+                pooled("three, 30 % apart, b fitted", 10, new Pooling(0.3, 0, 0), 0.01, VerticalShift.FITTED, 0.05));
+    }
+
+    private static Condition pooled(
+            String words, double stepK, Pooling pooling, double givenU, VerticalShift vertical, double worstRms) {
+        return new Condition(
+                words,
+                seed -> ModelMaterial.LAUN.pooled(
+                        ModelMaterial.temperatures(9, stepK), givenU, 1, pooling, new Random(seed)),
+                vertical,
+                worstRms);
+    }
+
     static List<Condition> complexMaterials() {
         return List.of(
+                pooledComplex("second mechanism, three 30 % apart", 10, new Pooling(0.3, 0, 0), 0.01),
+                pooledComplex("second mechanism, three 30 % apart, without u", 10, new Pooling(0.3, 0, 0), 0),
+                pooledComplex("second mechanism, one, hot three, 30 % apart", 10, new Pooling(0.3, 0, 3), 0.01),
+                pooledComplex("second mechanism, each loading 30 % off", 5, new Pooling(0, 0.3, 0), 0.01),
                 complex("second mechanism, 5 K apart", 5, 0.01, VerticalShift.NONE),
                 complex("second mechanism, 10 K apart", 10, 0.01, VerticalShift.NONE),
                 complex("second mechanism, without u", 5, 0, VerticalShift.NONE),
@@ -101,9 +131,18 @@ class SuperpositionStudyTest {
                 Double.POSITIVE_INFINITY);
     }
 
+    private static Condition pooledComplex(String words, double stepK, Pooling pooling, double givenU) {
+        return new Condition(
+                words,
+                seed -> ModelMaterial.TWO_MECHANISMS.pooled(
+                        ModelMaterial.temperatures(9, stepK), givenU, 0.9, pooling, new Random(seed)),
+                VerticalShift.NONE,
+                Double.POSITIVE_INFINITY);
+    }
+
     /** Bounds: rms 0.004 and 0.05 decades, 90 to 98 % of intervals hold the truth, 3 of 100 are called out. */
     @ParameterizedTest(name = "{0}")
-    @MethodSource("simpleMaterials")
+    @MethodSource({"simpleMaterials", "pooledSpecimens"})
     void simpleMaterialsSuperpose(Condition condition) throws ReductionFault {
         Outcome outcome = run(condition);
 

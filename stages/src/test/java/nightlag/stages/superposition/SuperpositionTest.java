@@ -14,8 +14,8 @@ import nightlag.stages.fault.Reason;
 import nightlag.stages.fault.ReductionFault;
 import nightlag.stages.moduli.Marker;
 import nightlag.stages.moduli.Moduli;
-import nightlag.stages.moduli.ModuliCovariance;
 import nightlag.stages.moduli.ModulusReading;
+import nightlag.stages.superposition.ModelMaterial.Pooling;
 import nightlag.stages.superposition.SuperpositionPlan.ShiftLaw;
 import nightlag.stages.superposition.SuperpositionPlan.VerticalShift;
 import org.junit.jupiter.api.Test;
@@ -261,6 +261,78 @@ class SuperpositionTest {
                 .startsWith("superposes: ");
     }
 
+    /** Factors of |G*| are a specimen's dimensions; a phase angle is the material's. */
+    @Test
+    void specimensThatDifferByAFactorChangeNothing() throws ReductionFault {
+        double[] temperatures = ModelMaterial.temperatures(9, 10);
+        MasterCurve alike = Superposition.of(
+                ModelMaterial.LAUN.pooled(temperatures, 0.01, 1, new Pooling(0, 0, 3), new Random(5)), PLAIN);
+        MasterCurve apart = Superposition.of(
+                ModelMaterial.LAUN.pooled(temperatures, 0.01, 1, new Pooling(0.3, 0, 3), new Random(5)), PLAIN);
+
+        for (int i = 0; i < 9; i++) {
+            assertThat(log10A(apart.shifts().get(i)))
+                    .isCloseTo(log10A(alike.shifts().get(i)), within(1e-6));
+            assertThat(apart.shifts().get(i).misfitDecades().orElseThrow())
+                    .isCloseTo(alike.shifts().get(i).misfitDecades().orElseThrow(), within(1e-6));
+        }
+        assertThat(misfit(apart).method()).startsWith("superposes: ").contains("specimens of an isotherm differ");
+        assertThat(misfit(alike).method()).contains("rms 0.00");
+        assertThat(misfit(Superposition.of(ModelMaterial.LAUN.nine(0.01, 0.01, 5), PLAIN))
+                        .method())
+                .doesNotContain("specimens");
+    }
+
+    @Test
+    void specimensThatDifferDoNotHideASecondMechanism() throws ReductionFault {
+        List<IsothermReadings> pooled = ModelMaterial.TWO_MECHANISMS.pooled(
+                ModelMaterial.temperatures(9, 10), 0, 0.9, new Pooling(0.3, 0, 4), new Random(3));
+        List<IsothermReadings> nameless = pooled.stream()
+                .map(isotherm -> new IsothermReadings(isotherm.temperatureK(), isotherm.readings()))
+                .toList();
+
+        assertThat(misfit(Superposition.of(pooled, PLAIN)).method()).startsWith("does not superpose");
+        assertThat(misfit(Superposition.of(nameless, PLAIN)).method())
+                .startsWith("superposes as far as the scatter of the points can tell");
+    }
+
+    /** A specimen beside the others' frequencies, or of too few of them, cannot be compared, and nothing breaks. */
+    @ParameterizedTest(name = "the second specimen has frequencies {0} to {1}")
+    @CsvSource({"20, 31", "0, 2", "13, 17"})
+    void aSpecimenOfSomeFrequenciesAloneIsTakenAlong(int from, int to) throws ReductionFault {
+        List<IsothermReadings> isotherms = new ArrayList<>();
+        for (IsothermReadings isotherm : ModelMaterial.LAUN.nine(0.01, 0.01, 2)) {
+            List<String> names = new ArrayList<>(Collections.nCopies(31, "first"));
+            Collections.fill(names.subList(from, to), "second");
+            isotherms.add(new IsothermReadings(isotherm.temperatureK(), isotherm.readings(), names));
+        }
+
+        MasterCurve curve = Superposition.of(isotherms, PLAIN);
+
+        assertThat(curve.shifts())
+                .allSatisfy(shift ->
+                        assertThat(log10A(shift)).isCloseTo(ModelMaterial.log10A(shift.temperatureK()), within(0.02)));
+        assertThat(misfit(curve).method()).startsWith("superposes: ");
+    }
+
+    /** All of an isotherm move by its shift: its covariance and that of the figures drawn from it are one. */
+    @Test
+    void whatTheShiftsShareIsTold() throws ReductionFault {
+        MasterCurve curve = Superposition.of(ModelMaterial.LAUN.nine(0.01, 0.01, 1), FITTED);
+
+        ShiftFactor hottest = curve.shifts().get(8);
+        double[] ofHottest = curve.points().stream()
+                .mapToDouble(point -> point.temperatureK() == hottest.temperatureK() ? 1.0 / 31 : 0)
+                .toArray();
+        double[] nothing = new double[ofHottest.length];
+        double a = Math.sqrt(curve.sharedErrors().variance(ofHottest, nothing));
+        double b = Math.sqrt(curve.sharedErrors().variance(nothing, ofHottest));
+        assertThat(a / Math.log(10)).isCloseTo(hottest.log10AU().orElseThrow(), within(1e-12));
+        assertThat(b / Math.log(10)).isCloseTo(hottest.log10BU().orElseThrow(), within(1e-12));
+        assertThat(curve.lnAU(curve.points().get(0).reduced().angularFrequency()))
+                .isCloseTo(a, within(1e-12));
+    }
+
     @Test
     void oneIsothermIsItsOwnMasterCurve() throws ReductionFault {
         MasterCurve curve = Superposition.of(
@@ -272,6 +344,7 @@ class SuperpositionTest {
             assertThat(shift.lawLog10A()).isEmpty();
             assertThat(shift.used()).isTrue();
         });
+        assertThat(curve.sharedErrors().isNone()).isTrue();
         assertThat(curve.markers()).isEmpty();
         assertThat(curve.points()).hasSize(31);
     }
@@ -305,7 +378,8 @@ class SuperpositionTest {
             List<ModulusReading> readings = new ArrayList<>();
             for (ModulusReading reading : isotherm.readings()) {
                 Moduli moduli = reading.moduli();
-                readings.add(new ModulusReading(reading.angularFrequency() / (2 * Math.PI), times(moduli, 1e-6)));
+                readings.add(new ModulusReading(
+                        reading.angularFrequency() / (2 * Math.PI), ModelMaterial.times(moduli, 1e-6)));
             }
             Collections.shuffle(readings, new Random(seed));
             other.add(new IsothermReadings(isotherm.temperatureK(), readings));
@@ -338,17 +412,6 @@ class SuperpositionTest {
                     .isCloseTo(shift.log10B().orElseThrow() - moved.log10B().orElseThrow(), within(1e-12));
         }
         assertThat(there.shifts().get(4).log10AU()).isEqualTo(moved.log10AU());
-    }
-
-    private static Moduli times(Moduli moduli, double factor) {
-        return new Moduli(
-                factor * moduli.storagePa(),
-                factor * moduli.lossPa(),
-                moduli.covariance()
-                        .map(known -> new ModuliCovariance(
-                                factor * factor * known.storageVariance(),
-                                factor * factor * known.lossVariance(),
-                                factor * factor * known.covariance())));
     }
 
     private static double log10A(ShiftFactor shift) {

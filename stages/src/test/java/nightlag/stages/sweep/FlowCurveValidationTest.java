@@ -97,6 +97,26 @@ class FlowCurveValidationTest {
                 .isCloseTo(expected, within(relative * Math.abs(expected)));
     }
 
+    /** Exact: with all readings moved alike, η0 goes as b/a, the time as 1/a, and the shape stays. */
+    @Test
+    void whatReadingsShareMovesTheConstantsAsShiftsDo() {
+        List<ModulusReading> readings =
+                readings(rate -> 1000 / (1 + Math.pow(2 * rate, 0.7)), 1e-3, 1e3, 10, 1e-6, new Random(1));
+        SharedErrors shared =
+                SharedErrors.of(new int[readings.size()], new double[][] {{0.01, 0.004}, {0.004, 0.0025}});
+
+        Map<String, Marker> moved = markers(FlowCurve.of(new SweepName("", ""), 298.15, readings, shared));
+
+        assertThat(relativeU(moved.get("cross_zero_rate_viscosity"))).isCloseTo(Math.sqrt(0.0045), within(1e-5));
+        assertThat(relativeU(moved.get("cross_time"))).isCloseTo(0.1, within(1e-5));
+        assertThat(relativeU(moved.get("cross_exponent"))).isLessThan(1e-5);
+        assertThat(relativeU(moved.get("carreau_yasuda_time"))).isCloseTo(0.1, within(1e-4));
+    }
+
+    private static double relativeU(Marker marker) {
+        return marker.u().orElseThrow() / marker.value();
+    }
+
     /** Six decades beyond the bend; the viscosity at infinite rate shows in them. */
     @ParameterizedTest(name = "{0}")
     @MethodSource("fluids")
