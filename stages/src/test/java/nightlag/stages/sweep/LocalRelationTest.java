@@ -47,14 +47,13 @@ class LocalRelationTest {
      * Laun, Rheol. Acta 17 (1978) 1, from memory. Exact: (π/2) dG'/d ln ω = π Σ g x²/(1 + x²)², x = ωτ; from 1 to 1000 rad/s that is
      * within 27 % of G'', up and down with modes a decade apart.
      */
-    @ParameterizedTest(name = "seed {0}")
-    @ValueSource(longs = {1, 2, 3, 4})
-    void ofABroadSpectrumItIsNearTheLossModulus(long seed) {
+    @Test
+    void ofABroadSpectrumItIsNearTheLossModulus() {
         double[] modes = {
             1.29e5, 1e-4, 9.48e4, 1e-3, 5.86e4, 1e-2, 2.67e4, 1e-1, 9.80e3, 1, 1.89e3, 10, 1.80e2, 100, 1.00, 1000
         };
-        List<ModulusReading> readings = MarkerModel.readings(
-                MarkerModel.maxwell(modes), MarkerModel.decades(0.1, 1000, 10), 0.01, new Random(seed));
+        List<ModulusReading> readings =
+                MarkerModel.readings(MarkerModel.maxwell(modes), MarkerModel.decades(0.1, 1000, 10), 0, new Random(1));
 
         List<LocalRelation.Place> line = LocalRelation.of(readings);
 
@@ -65,7 +64,7 @@ class LocalRelationTest {
                 double x = place.angularFrequency() * modes[i + 1];
                 exact += Math.PI * modes[i] * x * x / ((1 + x * x) * (1 + x * x));
             }
-            assertThat(place.lossPa()).isCloseTo(exact, withPercentage(10));
+            assertThat(place.lossPa()).isCloseTo(exact, withPercentage(2));
             if (place.angularFrequency() > 1) {
                 double loss = MarkerModel.maxwell(modes)
                         .apply(place.angularFrequency())
