@@ -115,7 +115,10 @@ public final class Prediction {
     }
 
     private boolean isInside(Instant instant, BoltzmannSum sum) {
-        return Arrays.stream(sum.sinceSteps(instant)).allMatch(spectrum::supports)
+        return Arrays.stream(sum.sinceSteps(instant))
+                        .allMatch(since -> plan.controlled() == Controlled.STRESS
+                                ? spectrum.supportsCreep(since)
+                                : spectrum.supportsRelaxation(since))
                 && IntStream.rangeClosed(0, Math.max(0, instant.segment()))
                         .allMatch(
                                 s -> shift.isWithin(programme.segments().get(s).temperatureK()));

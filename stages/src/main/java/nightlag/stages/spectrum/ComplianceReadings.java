@@ -177,6 +177,22 @@ final class ComplianceReadings {
         return all;
     }
 
+    /**
+     * The same for G. It follows from J up to its own time, and of that what came before the first reading counts for little from
+     * {@code e^{π/2}} times there on, unless other readings show it.
+     */
+    List<SupportedWindow> windowsOfRelaxation() {
+        List<SupportedWindow> all = windows();
+        return all.stream()
+                .map(window -> windows.contains(window)
+                                && all.stream()
+                                        .noneMatch(other -> other.shortestS() < window.shortestS()
+                                                && other.holds(window.shortestS()))
+                        ? window.later()
+                        : window)
+                .toList();
+    }
+
     /** The times that fix a density: the last of a creep curve tell less of it than of the compliance itself. */
     SupportedWindow windowOfDensity() {
         List<SupportedWindow> all =

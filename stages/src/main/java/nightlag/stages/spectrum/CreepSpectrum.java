@@ -107,8 +107,13 @@ public final class CreepSpectrum implements FittedSpectrum {
     }
 
     @Override
-    public boolean supports(double timeS) {
+    public boolean supportsCreep(double timeS) {
         return readings.windows().stream().anyMatch(window -> window.holds(timeS));
+    }
+
+    @Override
+    public boolean supportsRelaxation(double timeS) {
+        return readings.windowsOfRelaxation().stream().anyMatch(window -> window.holds(timeS));
     }
 
     /** The readings it was fitted to, brought to its temperature as the fit found best. */

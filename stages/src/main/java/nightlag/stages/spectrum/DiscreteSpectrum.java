@@ -60,7 +60,12 @@ public final class DiscreteSpectrum implements FittedSpectrum {
     }
 
     @Override
-    public boolean supports(double timeS) {
+    public boolean supportsCreep(double timeS) {
+        return window.holds(timeS);
+    }
+
+    @Override
+    public boolean supportsRelaxation(double timeS) {
         return window.holds(timeS);
     }
 

@@ -21,8 +21,11 @@ public sealed interface FittedSpectrum permits DiscreteSpectrum, CreepSpectrum {
     /** From the shortest to the longest time that the data support. */
     SupportedWindow window();
 
-    /** Whether the data support a time in s; between creep and oscillation that do not meet there is a gap. */
-    boolean supports(double timeS);
+    /** Whether the data support J at a time in s; between creep and oscillation that do not meet there is a gap. */
+    boolean supportsCreep(double timeS);
+
+    /** Whether they support G there; soon after the first reading of a creep curve it still hangs on the creep before. */
+    boolean supportsRelaxation(double timeS);
 
     /**
      * Standard uncertainty of each of several figures drawn from the modes, by the fit's covariance and by modes that the data do

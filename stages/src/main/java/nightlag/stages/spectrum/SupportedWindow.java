@@ -27,6 +27,11 @@ public record SupportedWindow(double shortestS, double longestS) {
         return new SupportedWindow(shortestS, longestS / Math.exp(Math.PI / 2));
     }
 
+    /** What is left of it where the beginning needs what came before. */
+    SupportedWindow later() {
+        return new SupportedWindow(shortestS * Math.exp(Math.PI / 2), longestS);
+    }
+
     /** From the earlier beginning to the later end of both. */
     SupportedWindow with(SupportedWindow other) {
         return new SupportedWindow(Math.min(shortestS, other.shortestS), Math.max(longestS, other.longestS));

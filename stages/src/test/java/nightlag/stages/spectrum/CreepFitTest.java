@@ -312,11 +312,15 @@ class CreepFitTest {
         CreepSpectrum gap = CreepFit.fit(apart, LIQUID);
         CreepSpectrum whole = CreepFit.fit(meeting, LIQUID);
 
-        assertThat(gap.supports(0.001)).isTrue();
-        assertThat(gap.supports(1)).isFalse();
-        assertThat(gap.supports(1000)).isTrue();
-        assertThat(whole.supports(0.15)).isTrue();
-        assertThat(whole.supports(0.05)).isTrue();
-        assertThat(whole.supports(2e5)).isFalse();
+        assertThat(gap.supportsCreep(0.001)).isTrue();
+        assertThat(gap.supportsCreep(1)).isFalse();
+        assertThat(gap.supportsCreep(20)).isTrue();
+        assertThat(gap.supportsRelaxation(20)).isFalse();
+        assertThat(gap.supportsRelaxation(50)).isTrue();
+        assertThat(whole.supportsRelaxation(0.15)).isTrue();
+        assertThat(gap.supportsCreep(1000)).isTrue();
+        assertThat(whole.supportsCreep(0.15)).isTrue();
+        assertThat(whole.supportsCreep(0.05)).isTrue();
+        assertThat(whole.supportsCreep(2e5)).isFalse();
     }
 }
