@@ -149,6 +149,19 @@ public final class SmoothCurve {
                 : free;
     }
 
+    /** The same where the uncertainties are believed in any case: what scatters by more is taken for what the curve does. */
+    public static SmoothCurve throughTrusted(double[] x, double[] y, double[] variance, double least) {
+        int order = order(x.length);
+        checkCount(x, order);
+        return new SmoothCurve(
+                x,
+                new double[][] {y},
+                variance,
+                true,
+                new Choice(least, least == 0),
+                new WienerProcess(order, x[0], x[x.length - 1] - x[0]));
+    }
+
     /** The usual order: 3, a spline of fifth degree; of three or four values, which tell too little, 2, the cubic spline. */
     static int order(int values) {
         return values < FEWEST_FOR_PARABOLA ? 2 : 3;

@@ -24,9 +24,21 @@ final class Crossing {
         double place = zero.place();
         double slope = curve.derivative(place, 1) + abscissae;
         double shared = near.covariance(figure, curve, Figure.LOSS_FACTOR, lossFactor, place);
-        double own = curve.estimate(place, 0).u();
-        double moved = slope * zero.u();
-        double correlation = -2 * slope / lossFactor.derivative(place, 1) * shared;
+        return u(curve.estimate(place, 0).u(), slope, zero.u(), lossFactor.derivative(place, 1), shared);
+    }
+
+    /**
+     * The standard uncertainty of one figure where another has a value.
+     *
+     * @param own u(f) of the one at that place
+     * @param slope s, how it changes along the place
+     * @param placeU u(x) of the place
+     * @param otherSlope t', how the other one changes along it
+     * @param shared u(f, t), the covariance of both there
+     */
+    static double u(double own, double slope, double placeU, double otherSlope, double shared) {
+        double moved = slope * placeU;
+        double correlation = -2 * slope / otherSlope * shared;
         // a correlation cannot take away more than all of it
         return Math.sqrt(
                 Math.max(own * own + moved * moved + correlation, (own - Math.abs(moved)) * (own - Math.abs(moved))));

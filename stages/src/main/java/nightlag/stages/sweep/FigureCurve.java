@@ -26,6 +26,7 @@ record FigureCurve(
         Optional<Sweep.Leg> leg,
         List<Place> places) {
     private static final double SAME_FREQUENCY = 0.01;
+    private static final Figure.Value NOTHING = new Figure.Value(0, 0, 0, 0);
 
     /**
      * One place on a curve and the figure there, the mean of all points at that place.
@@ -50,6 +51,38 @@ record FigureCurve(
                 sum += value.get().value();
             }
             return OptionalDouble.of(sum / points.size());
+        }
+
+        /**
+         * u² of a sum of the figure and another one here: the points' errors are independent of one another, and both figures
+         * of one point hang on the same modulus. Zero where they hang on nothing that was measured; empty where they hang on
+         * something without u.
+         */
+        OptionalDouble variance(double perFigure, Optional<Figure> other, double perOther) {
+            double variance = 0;
+            for (int i = 0; i < points.size(); i++) {
+                Figure.Value sum = sum(i, perFigure, other, perOther);
+                if (sum.byStorage() != 0 || sum.byLoss() != 0 || sum.byThird() != 0) {
+                    OptionalDouble known = sum.variance(points.get(i));
+                    if (known.isEmpty() || !Double.isFinite(known.getAsDouble())) {
+                        return OptionalDouble.empty();
+                    }
+                    variance += known.getAsDouble();
+                }
+            }
+            return OptionalDouble.of(variance / points.size() / points.size());
+        }
+
+        private Figure.Value sum(int i, double perFigure, Optional<Figure> other, double perOther) {
+            Figure.Value own = values.get(i);
+            Figure.Value added = perOther == 0
+                    ? NOTHING
+                    : other.flatMap(figure -> figure.at(points.get(i))).orElse(NOTHING);
+            return new Figure.Value(
+                    0,
+                    perFigure * own.byStorage() + perOther * added.byStorage(),
+                    perFigure * own.byLoss() + perOther * added.byLoss(),
+                    perFigure * own.byThird() + perOther * added.byThird());
         }
     }
 

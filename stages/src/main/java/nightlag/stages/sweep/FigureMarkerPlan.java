@@ -39,6 +39,12 @@ public record FigureMarkerPlan(
         LINEAR
     }
 
+    /** The same of the figure itself, neither its logarithm nor another one. */
+    FigureMarkerPlan raw() {
+        return new FigureMarkerPlan(
+                name, figure, reaches, along, Scale.LINEAR, temperatureK, frequencyHz, Optional.empty());
+    }
+
     /** The unit of the marker's value. */
     public String unit() {
         return report.map(Figure::unit).orElse(along == Along.FREQUENCY ? "Hz" : "°C");

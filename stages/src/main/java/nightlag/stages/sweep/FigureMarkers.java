@@ -7,7 +7,7 @@ import java.util.Locale;
 import java.util.Map;
 import java.util.Optional;
 import java.util.OptionalDouble;
-import java.util.stream.DoubleStream;
+import java.util.stream.IntStream;
 import nightlag.stages.fault.Reason;
 import nightlag.stages.fault.ReasonCode;
 import nightlag.stages.moduli.Figure;
@@ -19,14 +19,14 @@ import nightlag.stages.sweep.FigureMarkerPlan.Along;
 import nightlag.stages.sweep.FigureMarkerPlan.Scale;
 
 /**
- * Where a figure of the grade's own reaches a value, by interpolation between the two measured places on either side, and
- * never beyond them. Every such step of every curve gives a marker of its own, but for neighbouring ones between which the
- * figure stays as near the value as its noise may take it: these are one. u is that of the points on either side; where they
- * bring none, the scatter of the neighbouring ones about local parabolas takes its place, and of too few there is none. What
- * of it holds the method says.
+ * Where a figure of the grade's own reaches a value: between two measured places, on a smooth curve through the places about them,
+ * and never beyond the data. Every such passage of every curve gives a marker of its own, but for neighbouring ones between which
+ * the figure stays as near the value as its noise may take it: these are one. u is that of the points and of what the curve may
+ * do between them; where points bring none, the scatter about neighbouring ones takes its place, and of too few there is none. What of
+ * it holds the method says.
  */
 public final class FigureMarkers {
-    private static final double KELVIN_AT_ZERO_CELSIUS = 273.15;
+    private static final double KELVIN_AT_ZERO_CELSIUS = DrawnFigure.KELVIN_AT_ZERO_CELSIUS;
 
     /** Farther from the value than so many u a figure is not by noise. */
     private static final double NOISE = 3;
@@ -35,7 +35,6 @@ public final class FigureMarkers {
     private final FigureCurve curve;
     private final List<Marker> markers = new ArrayList<>();
     private final List<Reason> notes = new ArrayList<>();
-    private final List<Marker> together = new ArrayList<>();
     private boolean reached;
 
     private FigureMarkers(FigureMarkerPlan plan, FigureCurve curve) {
@@ -94,41 +93,128 @@ public final class FigureMarkers {
         return new Findings(markers, notes);
     }
 
+    /**
+     * Steps across the value that noise alone can make.
+     *
+     * @param steps the places from which they are taken to the next
+     * @param first the last place before them that noise alone does not bring near the value, or the first of all
+     * @param last the first one after them, or the last of all
+     */
+    private record Passage(List<Integer> steps, int first, int last) {
+        Passage with(Passage next) {
+            List<Integer> all = new ArrayList<>(steps);
+            all.addAll(next.steps());
+            return new Passage(all, first, next.last());
+        }
+    }
+
     private void look() {
+        List<Passage> passages = new ArrayList<>();
+        for (Passage next : passages()) {
+            int before = passages.size() - 1;
+            if (before >= 0 && !apart(passages.get(before), next)) {
+                passages.set(before, passages.get(before).with(next));
+            } else {
+                passages.add(next);
+            }
+        }
+        reached = !passages.isEmpty();
+        passages.forEach(this::read);
+    }
+
+    private List<Passage> passages() {
         List<Place> places = curve.places();
+        List<Passage> passages = new ArrayList<>();
+        List<Integer> steps = new ArrayList<>();
+        int left = 0;
         for (int i = 0; i + 1 < places.size(); i++) {
+            if (isLeft(places.get(i))) {
+                left = i;
+            }
             double before = places.get(i).mean() - plan.reaches();
             double after = places.get(i + 1).mean() - plan.reaches();
             boolean endsThere = i + 2 == places.size() && after == 0;
             if (before == 0 || Math.signum(before) * Math.signum(after) < 0 || endsThere) {
-                reached = true;
-                step(places.get(i), places.get(i + 1));
+                steps.add(i);
             }
-            if (leaves(places.get(i + 1))) {
-                close();
+            if (!steps.isEmpty() && (isLeft(places.get(i + 1)) || i + 2 == places.size())) {
+                passages.add(new Passage(List.copyOf(steps), left, i + 1));
+                steps.clear();
             }
         }
-        close();
+        return passages;
     }
 
-    /** Crossings so far are apart from those that follow. */
-    private void close() {
-        if (together.stream().allMatch(marker -> marker.u().isPresent()) && !together.isEmpty()) {
-            markers.add(NoisyCrossings.merged(together, plan));
+    /** Whether the figure is away from the value by more than noise; where nothing tells of noise, whether it is away at all. */
+    private boolean isLeft(Place place) {
+        // not its logarithm, which it need not have
+        double variance = FigureNoise.of(new DrawnFigure(plan.raw()), false, curve.places(), List.of(place))
+                .variance(place, 1, 0)
+                .orElse(0);
+        return Math.abs(place.mean() - plan.reaches()) > NOISE * Math.sqrt(variance);
+    }
+
+    /**
+     * Whether a smooth curve leaves the value between them as well: among many places some are far away by chance. Without u
+     * nobody knows.
+     */
+    private boolean apart(Passage one, Passage next) {
+        List<Place> places = curve.places();
+        Optional<LocalFigure> local =
+                LocalFigure.of(places, plan, one.first(), next.last(), next.steps().get(0));
+        return local.isEmpty()
+                || IntStream.rangeClosed(one.last(), next.first())
+                        .anyMatch(i -> local.get().standsOut(places.get(i).at()));
+    }
+
+    private void read(Passage passage) {
+        List<Integer> steps =
+                passage.steps().stream().filter(this::canBeReadOff).toList();
+        if (steps.size() % 2 == 1) {
+            markers.add(crossing(steps, passage.first(), passage.last()));
+            return;
+        }
+        // there and back again: the curve need not reach the value at all
+        List<Marker> each =
+                steps.stream().map(i -> marker(i, i, line(i).reached())).toList();
+        if (!each.isEmpty() && each.stream().allMatch(marker -> marker.u().isPresent())) {
+            markers.add(NoisyCrossings.merged(each, plan));
         } else {
-            markers.addAll(together);
+            markers.addAll(each);
         }
-        together.clear();
     }
 
-    /** Whether the figure is away from the value by more than noise; without a u, whether it is away at all. */
-    private boolean leaves(Place place) {
-        Weighed mean = new Weighed(place, 1, false, 0, false);
-        OptionalDouble variance = ownVariance(mean);
-        double u = variance.isPresent()
-                ? Math.sqrt(variance.getAsDouble())
-                : scatter(mean).orElse(0);
-        return Math.abs(place.mean() - plan.reaches()) > NOISE * u;
+    private Marker crossing(List<Integer> steps, int first, int last) {
+        List<Place> places = curve.places();
+        int middle = steps.get(steps.size() / 2);
+        StraightLine line = line(middle);
+        DrawnFigure drawn = new DrawnFigure(plan);
+        Reached at = LocalFigure.of(places, plan, first, last, middle)
+                .map(local -> local.reached(
+                        line,
+                        drawn.place(places.get(first).at()),
+                        drawn.place(places.get(last).at())))
+                .orElseGet(line::reached);
+        int from = middle;
+        while (from > first && places.get(from).at() > at.place()) {
+            from--;
+        }
+        while (from + 1 < last && places.get(from + 1).at() < at.place()) {
+            from++;
+        }
+        Marker marker = marker(middle, from, at);
+        return steps.size() == 1
+                ? marker
+                : marker.withMethod(marker.method()
+                        + NoisyCrossings.told(
+                                steps.size(),
+                                places.get(steps.get(0)).at(),
+                                places.get(steps.get(steps.size() - 1) + 1).at(),
+                                plan));
+    }
+
+    private StraightLine line(int from) {
+        return new StraightLine(plan, curve.places(), from);
     }
 
     private Reason notReached() {
@@ -146,81 +232,73 @@ public final class FigureMarkers {
                 plan.reaches());
     }
 
-    private void step(Place from, Place to) {
-        boolean log = plan.scale() == Scale.LOG;
-        if (log && Math.min(from.mean(), to.mean()) <= 0) {
+    /** Whether both ends of a step have what a marker is read off. */
+    private boolean canBeReadOff(int step) {
+        Place from = curve.places().get(step);
+        Place to = curve.places().get(step + 1);
+        if (plan.scale() == Scale.LOG && Math.min(from.mean(), to.mean()) <= 0) {
             absent(FigureReason.FIGURE_MARKER_NO_LOGARITHM, plan.figure());
-            return;
+            return false;
         }
-        double rise = scaled(to.mean(), log) - scaled(from.mean(), log);
-        double part = rise == 0 ? 0 : (scaled(plan.reaches(), log) - scaled(from.mean(), log)) / rise;
-        boolean logPlace = plan.along() == Along.FREQUENCY;
-        double run = scaled(to.at(), logPlace) - scaled(from.at(), logPlace);
-        double place = unscaled(scaled(from.at(), logPlace) + part * run, logPlace);
-        if (plan.report().isEmpty()) {
-            Uncertainty u = uncertainty(
-                    new Weighed(from, -(1 - part) * run / rise, log, 0, false),
-                    new Weighed(to, -part * run / rise, log, 0, false));
-            add(place, place, u.times(logPlace ? place : 1), from, to);
-            return;
-        }
-        Figure report = plan.report().get();
-        OptionalDouble first = from.mean(report);
-        OptionalDouble second = to.mean(report);
-        if (first.isEmpty() || second.isEmpty()) {
-            absent(FigureReason.FIGURE_MARKER_NOT_REPORTED, report);
-            return;
-        }
-        boolean logReport = Math.min(first.getAsDouble(), second.getAsDouble()) > 0;
-        double gain = scaled(second.getAsDouble(), logReport) - scaled(first.getAsDouble(), logReport);
-        double value = unscaled(scaled(first.getAsDouble(), logReport) + part * gain, logReport);
-        Uncertainty u = uncertainty(
-                new Weighed(from, -(1 - part) * gain / rise, log, 1 - part, logReport),
-                new Weighed(to, -part * gain / rise, log, part, logReport));
-        double offset = report.unit().equals("°C") ? KELVIN_AT_ZERO_CELSIUS : 0;
-        add(place, value + offset, u.times(logReport ? value : 1), from, to);
+        Optional<Figure> missing = plan.report()
+                .filter(report ->
+                        from.mean(report).isEmpty() || to.mean(report).isEmpty());
+        missing.ifPresent(report -> absent(FigureReason.FIGURE_MARKER_NOT_REPORTED, report));
+        return missing.isEmpty();
     }
 
-    private void add(double place, double value, Uncertainty u, Place from, Place to) {
+    /** What was reached between two places, in the direction of a step. */
+    private Marker marker(int step, int from, Reached at) {
         boolean overFrequency = plan.along() == Along.FREQUENCY;
-        together.add(new Marker(
+        return new Marker(
                 curve.name().specimen(),
                 curve.name().sweep(),
                 plan.name(),
-                overFrequency ? curve.temperatureK() : OptionalDouble.of(place),
-                overFrequency ? OptionalDouble.of(place) : curve.frequencyHz(),
-                value,
-                u.value(),
+                overFrequency ? curve.temperatureK() : OptionalDouble.of(at.place()),
+                overFrequency ? OptionalDouble.of(at.place()) : curve.frequencyHz(),
+                at.value(),
+                at.u(),
                 plan.unit(),
-                method(from, to) + curve.leg().map(leg -> "; " + leg.words()).orElse("") + u.source()));
+                method(step, from, at.how())
+                        + curve.leg().map(leg -> "; " + leg.words()).orElse("")
+                        + at.source().words());
     }
 
-    private String method(Place from, Place to) {
+    private String method(int step, int at, String how) {
         boolean overFrequency = plan.along() == Along.FREQUENCY;
         double offset = overFrequency ? 0 : KELVIN_AT_ZERO_CELSIUS;
+        Place before = curve.places().get(step);
+        Place after = curve.places().get(step + 1);
         String report = plan.report()
                 .map(figure -> figure.name()
-                        + (Math.min(from.mean(figure).orElse(0), to.mean(figure).orElse(0)) > 0
+                        + (Math.min(before.mean(figure).orElse(0), after.mean(figure).orElse(0)) > 0
                                 ? " (log)"
                                 : " (linear)")
                         + " where ")
                 .orElse("");
         return report
                 + plan.figure().name()
-                + (to.mean() < from.mean() ? " falls to " : " rises to ")
+                + (after.mean() < before.mean() ? " falls to " : " rises to ")
                 + ReasonCode.shortest(plan.reaches())
                 + (plan.figure().unit().equals("1") ? "" : " " + plan.figure().unit())
                 + (plan.scale() == Scale.LOG ? ", log over " : ", linear over ")
                 + (overFrequency ? "log frequency" : "temperature")
+                + " "
+                + how
                 + ", between "
-                + ReasonCode.shortest(from.at() - offset)
+                + ReasonCode.shortest(curve.places().get(at).at() - offset)
                 + " and "
-                + ReasonCode.shortest(to.at() - offset)
+                + ReasonCode.shortest(curve.places().get(at + 1).at() - offset)
                 + (overFrequency ? " Hz" : " °C");
     }
 
     private void absent(FigureReason why, Figure figure) {
-        notes.add(why.with(plan.name(), curve.name().specimen(), curve.name().sweep(), where(curve), figure.name()));
+        notes.add(why.with(
+                plan.name(),
+                curve.name().specimen(),
+                curve.name().sweep(),
+                where(curve),
+                figure.name()));
     }
 
     private static String where(FigureCurve curve) {
@@ -233,108 +311,5 @@ public final class FigureMarkers {
                         ? " at " + ReasonCode.shortest(temperatureK.getAsDouble() - KELVIN_AT_ZERO_CELSIUS) + " °C"
                         : "")
                 + (frequencyHz.isPresent() ? " at " + ReasonCode.shortest(frequencyHz.getAsDouble()) + " Hz" : "");
-    }
-
-    private static double scaled(double value, boolean log) {
-        return log ? Math.log(value) : value;
-    }
-
-    private static double unscaled(double value, boolean log) {
-        return log ? Math.exp(value) : value;
-    }
-
-    /**
-     * A standard uncertainty.
-     *
-     * @param value itself, where there is one
-     * @param source what the method says of it: nothing where it is the points' own
-     */
-    private record Uncertainty(OptionalDouble value, String source) {
-        Uncertainty times(double factor) {
-            return value.isPresent()
-                    ? new Uncertainty(OptionalDouble.of(value.getAsDouble() * Math.abs(factor)), source)
-                    : this;
-        }
-    }
-
-    /**
-     * A place and how much the result moves with its figure and with the one reported there, both as they are scaled.
-     */
-    private record Weighed(Place place, double byFigure, boolean log, double byReport, boolean logReport) {}
-
-    /** The errors at two places are independent of one another. */
-    private Uncertainty uncertainty(Weighed from, Weighed to) {
-        OptionalDouble first = ownVariance(from);
-        OptionalDouble second = ownVariance(to);
-        if (first.isPresent() && second.isPresent()) {
-            double variance = first.getAsDouble() + second.getAsDouble();
-            return new Uncertainty(variance > 0 ? OptionalDouble.of(Math.sqrt(variance)) : OptionalDouble.empty(), "");
-        }
-        OptionalDouble before = scatter(from);
-        OptionalDouble after = scatter(to);
-        return before.isPresent() && after.isPresent()
-                ? new Uncertainty(
-                        OptionalDouble.of(Math.hypot(before.getAsDouble(), after.getAsDouble())),
-                        "; u from the scatter about neighbouring points")
-                : new Uncertainty(
-                        OptionalDouble.empty(),
-                        "; no u, for the points bring none and are too few to tell their scatter");
-    }
-
-    /**
-     * From the u of a place's points. Their errors are independent of one another; both figures of one point hang on the same
-     * modulus. Empty where a point brings none.
-     */
-    private OptionalDouble ownVariance(Weighed weighed) {
-        Place place = weighed.place();
-        double variance = 0;
-        double perValue = weighed.byFigure() / place.points().size() / (weighed.log() ? place.mean() : 1);
-        double perReport = weighed.byReport()
-                / place.points().size()
-                / (weighed.logReport() ? place.mean(plan.report().orElseThrow()).orElseThrow() : 1);
-        for (int i = 0; i < place.points().size(); i++) {
-            ModulusPoint point = place.points().get(i);
-            Optional<Figure.Value> reported =
-                    perReport == 0 ? Optional.empty() : plan.report().flatMap(report -> report.at(point));
-            Figure.Value moved = sum(place.values().get(i), perValue, reported, perReport);
-            boolean fixed = DoubleStream.of(moved.byStorage(), moved.byLoss(), moved.byThird())
-                    .allMatch(derivative -> derivative == 0);
-            OptionalDouble own = fixed ? OptionalDouble.of(0) : moved.variance(point);
-            if (own.isEmpty() || !Double.isFinite(own.getAsDouble())) {
-                return OptionalDouble.empty();
-            }
-            variance += own.getAsDouble();
-        }
-        return OptionalDouble.of(variance);
-    }
-
-    /** By how much the result moves with the scatter of a place's figures about those of its neighbours. */
-    private OptionalDouble scatter(Weighed weighed) {
-        boolean logPlace = plan.along() == Along.FREQUENCY;
-        List<double[]> known = new ArrayList<>();
-        for (Place place : curve.places()) {
-            double moved = weighed.byFigure() * scaled(place.mean(), weighed.log());
-            if (weighed.byReport() != 0) {
-                OptionalDouble reported = place.mean(plan.report().orElseThrow());
-                moved += weighed.byReport() * scaled(reported.orElse(Double.NaN), weighed.logReport());
-            }
-            if (Double.isFinite(moved)) {
-                known.add(new double[] {scaled(place.at(), logPlace), moved});
-            }
-        }
-        return NeighbourScatter.at(
-                known.stream().mapToDouble(one -> one[0]).toArray(),
-                known.stream().mapToDouble(one -> one[1]).toArray(),
-                scaled(weighed.place().at(), logPlace));
-    }
-
-    private static Figure.Value sum(
-            Figure.Value figure, double perFigure, Optional<Figure.Value> report, double perReport) {
-        Figure.Value other = report.orElse(new Figure.Value(0, 0, 0, 0));
-        return new Figure.Value(
-                0,
-                perFigure * figure.byStorage() + perReport * other.byStorage(),
-                perFigure * figure.byLoss() + perReport * other.byLoss(),
-                perFigure * figure.byThird() + perReport * other.byThird());
     }
 }

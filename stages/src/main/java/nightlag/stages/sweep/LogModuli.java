@@ -118,15 +118,17 @@ final class LogModuli {
      * @param moduli as many, standing out from zero
      */
     static LogModuli overFrequency(double[] angularFrequencies, List<Moduli> moduli) {
-        return of(
-                angularFrequencies,
-                moduli,
-                medianInterval(angularFrequencies) > SPARSE ? UNSEEN_WAVES : WAVES_OF_MODES);
-    }
-
-    private static double medianInterval(double[] angularFrequencies) {
         double[] logs =
                 Arrays.stream(angularFrequencies).map(Math::log).sorted().toArray();
+        return of(angularFrequencies, moduli, leastStrength(logs));
+    }
+
+    /** How strong a process logarithms of moduli follow at the least, over these logarithms of frequencies, rising. */
+    static double leastStrength(double[] logs) {
+        return medianInterval(logs) > SPARSE ? UNSEEN_WAVES : WAVES_OF_MODES;
+    }
+
+    private static double medianInterval(double[] logs) {
         double[] intervals = IntStream.range(1, logs.length)
                 .mapToDouble(i -> logs[i] - logs[i - 1])
                 .filter(interval -> interval > SAME)

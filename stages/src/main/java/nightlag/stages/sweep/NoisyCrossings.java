@@ -73,6 +73,18 @@ final class NoisyCrossings {
                 + (overFrequency ? " Hz" : " °C");
     }
 
+    /** What to add to the method of a place on a smooth curve that stands for several crossings between two places, Hz or K. */
+    static String told(int crossings, double from, double to, FigureMarkerPlan plan) {
+        double offset = plan.along() == Along.FREQUENCY ? 0 : KELVIN_AT_ZERO_CELSIUS;
+        return "; the one place of "
+                + crossings
+                + " crossings that noise alone can make, from "
+                + ReasonCode.shortest(from - offset)
+                + " to "
+                + ReasonCode.shortest(to - offset)
+                + (plan.along() == Along.FREQUENCY ? " Hz" : " °C");
+    }
+
     private double place(Marker marker) {
         return (plan.along() == Along.FREQUENCY ? marker.frequencyHz() : marker.temperatureK()).orElseThrow();
     }
