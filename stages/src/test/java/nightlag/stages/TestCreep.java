@@ -67,13 +67,13 @@ public record TestCreep(
         Random random = new Random(seed);
         List<CreepStep> steps = new ArrayList<>();
         List<CreepReading> readings = new ArrayList<>();
-        steps.add(new CreepStep(CreepPart.LOAD, 0, 0, 0, STRESS_PA, 0, 0, 0));
+        steps.add(new CreepStep(CreepPart.LOAD, 0, 0, 0, STRESS_PA, 0, 0, 0, OptionalDouble.empty()));
         for (double t = firstS; t <= loadedS; t *= Math.pow(10, 0.05)) {
             readings.add(reading(1, t, t, STRESS_PA, STRESS_PA * compliancePerPa.applyAsDouble(t), 0, random));
         }
         if (untilS > loadedS) {
             double before = STRESS_PA * compliancePerPa.applyAsDouble(loadedS);
-            steps.add(new CreepStep(CreepPart.RECOVERY, loadedS, 0, 0, -STRESS_PA, 0, before, 0));
+            steps.add(new CreepStep(CreepPart.RECOVERY, loadedS, 0, 0, -STRESS_PA, 0, before, 0, OptionalDouble.empty()));
             for (double t = firstS; t <= untilS - loadedS; t *= Math.pow(10, 0.05)) {
                 double strain =
                         STRESS_PA * (compliancePerPa.applyAsDouble(loadedS + t) - compliancePerPa.applyAsDouble(t));

@@ -65,7 +65,7 @@ class ReductionJsonTest {
                         OptionalDouble.of(298.15),
                         OptionalDouble.empty(),
                         true,
-                        List.of(new CreepStep(CreepPart.LOAD, 0, 0.01, 0.1, 1e4, 3, 1e-5, 1e-7)),
+                        List.of(new CreepStep(CreepPart.LOAD, 0, 0.01, 0.1, 1e4, 3, 1e-5, 1e-7, OptionalDouble.of(2))),
                         List.of(new CreepReading(1, 1.0 / 3, 0.3, 1e4, 2e-3, 1e-7, 2e-7, Double.NaN)),
                         Quality.DOUBTFUL,
                         List.of(Flag.UNSETTLED),

@@ -32,6 +32,9 @@ public final class CreepAnalysis {
     /** Samples before a later step that tell where the strain was going. */
     private static final int BEFORE_A_STEP = 50;
 
+    /** Samples whose own scatter is better known than it may differ from the whole record's. */
+    private static final int ENOUGH_FOR_NOISE = 20;
+
     private static final double SIGNIFICANT = 3;
     private static final int LEAST_FOR_DRIFT = 10;
 
@@ -160,8 +163,8 @@ public final class CreepAnalysis {
         int from = k == 0 ? 0 : Math.min(here.foot(), found.get(k - 1).settled());
         double before = mean(stress, from, here.foot());
         double after = mean(stress, Math.min(begin, end), end);
-        double noise = LoadSteps.noise(timeS, stress);
-        double changeU = noise * Math.sqrt(1.0 / (here.foot() - from + 1) + 1.0 / Math.max(1, end - begin + 1));
+        double beforeU = meanU(stress, from, here.foot());
+        double afterU = meanU(stress, Math.min(begin, end), end);
         double[] strainBefore = k == 0 ? meanBefore(here) : lineBefore(here, from);
         return new CreepStep(
                 Math.abs(after - rest) > Math.abs(before - rest) ? CreepPart.LOAD : CreepPart.RECOVERY,
@@ -169,15 +172,25 @@ public final class CreepAnalysis {
                 here.atUS(),
                 rise(here),
                 after - before,
-                changeU,
+                Math.hypot(beforeU, afterU),
                 strainBefore[0],
-                strainBefore[1]);
+                strainBefore[1],
+                OptionalDouble.of(beforeU));
     }
 
     /** Before the first step: the mean, and its u. */
     private double[] meanBefore(LoadSteps.Step step) {
-        int count = step.foot() + 1;
-        return new double[] {mean(strain, 0, step.foot()), LoadSteps.noise(timeS, strain) / Math.sqrt(count)};
+        return new double[] {mean(strain, 0, step.foot()), meanU(strain, 0, step.foot())};
+    }
+
+    /** Of a channel's mean over some samples: by their own noise, which may grow with the load, where they are enough to tell. */
+    private double meanU(double[] values, int first, int last) {
+        int count = last - first + 1;
+        double noise = count < ENOUGH_FOR_NOISE
+                ? LoadSteps.noise(timeS, values)
+                : LoadSteps.noise(
+                        Arrays.copyOfRange(timeS, first, last + 1), Arrays.copyOfRange(values, first, last + 1));
+        return noise / Math.sqrt(count);
     }
 
     /** Before a later step: where a line through the last samples comes to at its instant, and its u. */

@@ -1,5 +1,7 @@
 package nightlag.stages.moduli;
 
+import java.util.OptionalDouble;
+
 /**
  * One step of the stress.
  *
@@ -10,7 +12,9 @@ package nightlag.stages.moduli;
  * @param changePa change of the stress, Pa
  * @param changeUPa standard uncertainty of the change, Pa
  * @param strainBefore strain at its instant
- * @param strainBeforeU standard uncertainty of that
+ * @param strainBeforeU standard uncertainty of that; that of the first step's is in every strain of the record
+ * @param stressBeforeUPa standard uncertainty of the level of stress before it, Pa: the part of {@code changeUPa} that it
+ *     shares with the step before; empty where it is not known apart
  */
 public record CreepStep(
         CreepPart part,
@@ -20,4 +24,5 @@ public record CreepStep(
         double changePa,
         double changeUPa,
         double strainBefore,
-        double strainBeforeU) {}
+        double strainBeforeU,
+        OptionalDouble stressBeforeUPa) {}

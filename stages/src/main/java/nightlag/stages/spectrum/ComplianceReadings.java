@@ -3,6 +3,7 @@ package nightlag.stages.spectrum;
 import java.util.ArrayList;
 import java.util.DoubleSummaryStatistics;
 import java.util.List;
+import java.util.function.ToDoubleFunction;
 import nightlag.stages.moduli.CreepCurve;
 import nightlag.stages.moduli.CreepReading;
 import nightlag.stages.moduli.CreepStep;
@@ -11,8 +12,9 @@ import nightlag.stages.moduli.ModulusReading;
 import nightlag.stages.numeric.Complex;
 
 /**
- * Readings that are linear in J0, 1/η0 and the strengths of retardation modes, each row over its uncertainty: strains of
- * creep curves, by the superposition of all steps before them (Boltzmann), and complex compliances 1/G*.
+ * Readings that are linear in J0, 1/η0 and the strengths of retardation modes, as rows of unit covariance: strains of creep
+ * curves, by the superposition of all steps before them (Boltzmann), with what those of a curve err by together
+ * ({@link SharedErrors}), and complex compliances 1/G*.
  */
 final class ComplianceReadings {
     /** What averaging over a twentieth of a decade may leave in a reading. */
@@ -25,19 +27,16 @@ final class ComplianceReadings {
     private static final double AT_REST = 0.05;
 
     private final List<CreepRow> creep = new ArrayList<>();
+    private final List<SharedErrors> curves = new ArrayList<>();
     private final List<Waves> waves = new ArrayList<>();
     private double shortestS = Double.POSITIVE_INFINITY;
     private double longestS;
     private double largestPerPa;
     private final List<Integer> ends = new ArrayList<>();
     private final List<SupportedWindow> windows = new ArrayList<>();
-    private final List<SharedErrors.Shared> sharedErrors = new ArrayList<>();
 
-    /**
-     * A strain after some steps: their stresses in Pa, the times since each in s, its u without what it shares with other
-     * readings, and with it.
-     */
-    private record CreepRow(double[] changesPa, double[] sinceS, double strain, double u, double wholeU) {
+    /** A strain after some steps, with its whole u: their stresses in Pa, the times since each in s. */
+    private record CreepRow(double[] changesPa, double[] sinceS, double strain, double u) {
         /** What a compliance makes of the steps. */
         double sum(Kernel kernel) {
             double sum = 0;
@@ -83,13 +82,13 @@ final class ComplianceReadings {
         return readings;
     }
 
-    private void add(CreepCurve curve, double a, double b) {
+    private void add(ShiftedCreep.Weighed weighed, double a, double b) {
+        CreepCurve curve = weighed.curve();
+        curves.add(weighed.errors());
         double zero = curve.steps().get(0).strainBefore();
         double shortest = Double.POSITIVE_INFINITY;
         double longest = 0;
-        SharedErrors shared = SharedErrors.of(curve);
-        for (int i = 0; i < curve.readings().size(); i++) {
-            CreepReading reading = curve.readings().get(i);
+        for (CreepReading reading : curve.readings()) {
             int steps = reading.step();
             double[] changes = new double[steps];
             double[] since = new double[steps];
@@ -99,17 +98,13 @@ final class ComplianceReadings {
                 since[k] = (reading.timeS() - step.atS()) / a;
             }
             double strain = reading.strain() - zero;
-            double whole = reading.complianceUPerPa()
+            double own = reading.complianceUPerPa()
                     * Math.abs(curve.steps().get(steps - 1).changePa());
-            double least = LEAST_RELATIVE_U * Math.abs(strain);
-            double own = Math.sqrt(Math.max(0, whole * whole - shared.variance(i)));
-            creep.add(new CreepRow(changes, since, strain, Math.max(own, least), Math.max(whole, least)));
+            creep.add(new CreepRow(changes, since, strain, Math.max(own, LEAST_RELATIVE_U * Math.abs(strain))));
             largestPerPa = Math.max(largestPerPa, Math.abs(reading.compliancePerPa()) / b);
             shortest = Math.min(shortest, reading.sinceStepS() / a);
             longest = Math.max(longest, reading.timeS() / a);
         }
-        sharedErrors.add(shared.over(
-                creep.size() - curve.readings().size(), row -> creep.get(row).u()));
         windows.add(new SupportedWindow(shortest, longest));
         shortestS = Math.min(shortestS, shortest);
         longestS = Math.max(longestS, longest);
@@ -224,10 +219,7 @@ final class ComplianceReadings {
     /** What was read. */
     double[] target() {
         double[] target = new double[rows()];
-        for (int i = 0; i < creep.size(); i++) {
-            target[i] = creep.get(i).strain() / creep.get(i).u();
-        }
-        sharedErrors.forEach(one -> one.whiten(target));
+        put(target, CreepRow::strain);
         for (int i = 0; i < waves.size(); i++) {
             put(target, i, waves.get(i).compliance());
         }
@@ -289,7 +281,7 @@ final class ComplianceReadings {
         double most = Double.POSITIVE_INFINITY;
         for (CreepRow row : creep) {
             if (row.sign() != 0) {
-                most = least(most, row.sign() * row.strain() + COVERAGE * row.wholeU(), row.sign() * row.sum(kernel));
+                most = least(most, row.sign() * row.strain() + COVERAGE * row.u(), row.sign() * row.sum(kernel));
             }
         }
         for (Waves row : waves) {
@@ -308,7 +300,7 @@ final class ComplianceReadings {
     double mostOfRelaxation(double tau) {
         double most = Double.POSITIVE_INFINITY;
         for (CreepRow row : creep) {
-            double least = row.sign() * row.strain() - COVERAGE * row.wholeU();
+            double least = row.sign() * row.strain() - COVERAGE * row.u();
             if (row.sinceS().length == 1 && least > 0) {
                 most = Math.min(most, Math.abs(row.changesPa()[0]) / least * Math.exp(row.sinceS()[0] / tau));
             }
@@ -325,15 +317,23 @@ final class ComplianceReadings {
 
     private double[] column(Kernel kernel, Response response) {
         double[] column = new double[rows()];
-        for (int i = 0; i < creep.size(); i++) {
-            CreepRow row = creep.get(i);
-            column[i] = row.sum(kernel) / row.u();
-        }
-        sharedErrors.forEach(one -> one.whiten(column));
+        put(column, row -> row.sum(kernel));
         for (int i = 0; i < waves.size(); i++) {
             put(column, i, response.at(waves.get(i).omega()));
         }
         return column;
+    }
+
+    /** The strains of each curve, whitened. */
+    private void put(double[] column, ToDoubleFunction<CreepRow> strain) {
+        int first = 0;
+        for (SharedErrors errors : curves) {
+            double[] strains = creep.subList(first, first + errors.size()).stream()
+                    .mapToDouble(strain)
+                    .toArray();
+            System.arraycopy(errors.whitened(strains), 0, column, first, strains.length);
+            first += strains.length;
+        }
     }
 
     private void put(double[] column, int i, Complex value) {

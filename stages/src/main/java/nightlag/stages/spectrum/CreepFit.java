@@ -22,10 +22,13 @@ public final class CreepFit {
     private static final int LEAST_READINGS = 8;
     private static final int GRID_PER_DECADE = 10;
     /** Faster than this share of the first time a mode is part of J0. */
-    private static final double FASTEST = 0.3;
+    static final double FASTEST = 0.3;
 
     private static final double SLOWEST = 3;
     private static final int CANDIDATES = 2;
+    /** u of a logarithm that is not told from minus infinity. */
+    private static final double UNTOLD = 1;
+
     private static final double ENOUGH = 1e-9;
     private static final int STEPS_WHILE_SEARCHING = 30;
     private static final int STEPS_AT_LAST = 200;

@@ -3,6 +3,8 @@ package nightlag.stages.spectrum;
 import java.util.ArrayList;
 import java.util.Arrays;
 import java.util.List;
+import java.util.stream.IntStream;
+import nightlag.stages.numeric.LinearisedUncertainty;
 import nightlag.stages.numeric.NonNegativeLeastSquares;
 
 /**
@@ -13,6 +15,12 @@ final class CreepRows {
     private static final int ROUNDS_OF_ALIGNING = 4;
     private static final double FINENESS = 1.1;
     private static final int MAX_TRIALS = 200;
+    /** What a logarithm is known to before the data. */
+    private static final double PRIOR_U_OF_LOGARITHM = 10;
+
+    /** By what factor a material is tried to be stiffer at once. */
+    private static final double FASTER = 1.15;
+
 
     private final CreepData data;
     private final boolean liquid;
@@ -144,6 +152,45 @@ final class CreepRows {
         return more.sorted(square(residuals(more)));
     }
 
+    /**
+     * A set with the strongest unseen fast relaxation mode that the readings allow, all strengths and flow making room for it. It
+     * makes the material f times as stiff at once, so that J0 is less by f and comes back f times as late as the mode relaxes.
+     *
+     * @param time relaxation time of the mode
+     * @param latest retardation time up to which it is unseen
+     * @param allowed what χ² may rise to
+     */
+    FittedCompliance withUnseenFast(FittedCompliance best, double time, double latest, double allowed) {
+        ComplianceReadings readings = at(best.moves());
+        double seen = best.instantaneous() > 0 ? best.instantaneous() : best.strengths()[0];
+        double[] instantaneous = readings.instantaneous();
+        double[] times = Arrays.copyOf(best.times(), best.count() + 1);
+        FittedCompliance last = best;
+        for (double factor = FASTER; factor * time <= latest; factor *= FASTER) {
+            times[best.count()] = factor * time;
+            double[][] all = columns(readings, times);
+            double[][] columns = IntStream.range(0, all.length)
+                    .filter(j -> j != times.length)
+                    .mapToObj(j -> all[j])
+                    .toArray(double[][]::new);
+            double[] rest = target.clone();
+            add(rest, instantaneous, -seen / factor);
+            double[] solution = NonNegativeLeastSquares.solve(columns, rest);
+            FittedCompliance slower = new FittedCompliance(
+                    times.clone(),
+                    Arrays.copyOf(solution, times.length),
+                    seen / factor,
+                    liquid ? solution[times.length] : 0,
+                    best.moves(),
+                    Double.NaN);
+            double chiSquared = square(residuals(slower));
+            if (chiSquared <= allowed) {
+                last = slower.sorted(chiSquared);
+            }
+        }
+        return last;
+    }
+
     double[] residuals(FittedCompliance modes) {
         double[] residuals = Arrays.copyOf(model(at(modes.moves()), modes), count());
         for (int row = 0; row < target.length; row++) {
@@ -209,6 +256,20 @@ final class CreepRows {
             byMove[m][readings() + m] = 1;
         }
         return byMove;
+    }
+
+    /** Standard uncertainty of one of the numbers of {@link FittedCompliance#place()}. */
+    double uOfLogarithm(FittedCompliance modes, int place) {
+        double[] figure = new double[modes.parameters()];
+        figure[place] = 1;
+        return linearised(modes).of(figure);
+    }
+
+    /** What the readings say about the numbers of {@link FittedCompliance#place()}. */
+    LinearisedUncertainty linearised(FittedCompliance modes) {
+        double[] priors = new double[modes.parameters()];
+        Arrays.fill(priors, PRIOR_U_OF_LOGARITHM);
+        return new LinearisedUncertainty(jacobian(modes), priors);
     }
 
     private double[] padded(double[] column, double factor) {

@@ -9,6 +9,7 @@ import java.util.OptionalDouble;
 import java.util.OptionalInt;
 import java.util.function.Function;
 import java.util.function.ToDoubleFunction;
+import java.util.stream.Stream;
 import nightlag.stages.fault.Reason;
 import nightlag.stages.moduli.Findings;
 import nightlag.stages.moduli.Marker;
@@ -19,14 +20,11 @@ import nightlag.stages.numeric.LinearisedUncertainty;
  * inverse, and what follows.
  */
 public final class CreepSpectrum implements FittedSpectrum {
-    /** What a logarithm is known to before the data. */
-    private static final double PRIOR_U_OF_LOGARITHM = 10;
-
     private static final double STEP = 1e-5;
     /** A slowest mode beyond this share of the longest time cannot be told from flow, or from what comes later. */
     private static final double LATEST = 0.5;
 
-    /** How far beyond the last time an unseen mode sits. */
+    /** How far beyond the first or last time an unseen mode sits. */
     private static final double REACH = Math.pow(10, 1.5);
     /** A shift this many of its uncertainties off is said. */
     private static final double SHIFT_OFF = 3;
@@ -38,7 +36,8 @@ public final class CreepSpectrum implements FittedSpectrum {
     private final RelaxationModes relaxation;
     private final LinearisedUncertainty linearised;
     private final double scatter;
-    private final List<RelaxationModes> alternatives;
+    private final Optional<RetardationModes> unseenFast;
+    private final Optional<RetardationModes> unseenSlow;
     private final OptionalInt wanted;
 
     /**
@@ -53,16 +52,17 @@ public final class CreepSpectrum implements FittedSpectrum {
         this.wanted = wanted;
         retardation = modes(fitted);
         relaxation = retardation.relaxation();
-        double[] priors = new double[fitted.parameters()];
-        Arrays.fill(priors, PRIOR_U_OF_LOGARITHM);
-        linearised = new LinearisedUncertainty(rows.jacobian(fitted), priors);
+        linearised = rows.linearised(fitted);
         int free = rows.count() - fitted.parameters();
         scatter = free > 0 ? Math.max(1, Math.sqrt(fitted.chiSquared() / free)) : 1;
-        alternatives = endsInside()
-                ? List.of()
-                : List.of(modes(rows.withUnseen(
-                                fitted, REACH * readings.longestS(), fitted.chiSquared() + scatter * scatter))
-                        .relaxation());
+        double allowed = fitted.chiSquared() + scatter * scatter;
+        unseenFast = beginsInside()
+                ? Optional.empty()
+                : Optional.of(modes(rows.withUnseenFast(
+                        fitted, readings.shortestS() / REACH, CreepFit.FASTEST * readings.shortestS(), allowed)));
+        unseenSlow = slowestStandsApart()
+                ? Optional.empty()
+                : Optional.of(modes(rows.withUnseen(fitted, REACH * readings.longestS(), allowed)));
     }
 
     /** Where no J0 is seen the fastest mode takes its place: nothing read tells the two apart. */
@@ -125,7 +125,10 @@ public final class CreepSpectrum implements FittedSpectrum {
     public Optional<double[]> uncertainties(Function<RelaxationModes, double[]> figures) {
         double[] values = figures.apply(relaxation);
         double[][] derivatives = derivatives(values.length, modes -> figures.apply(modes.relaxation()));
-        List<double[]> others = alternatives.stream().map(figures).toList();
+        List<double[]> others = Stream.of(unseenFast, unseenSlow)
+                .flatMap(Optional::stream)
+                .map(other -> figures.apply(other.relaxation()))
+                .toList();
         double[] u = new double[values.length];
         for (int k = 0; k < u.length; k++) {
             double square = Math.pow(scatter * linearised.of(derivatives[k]), 2);
@@ -146,13 +149,15 @@ public final class CreepSpectrum implements FittedSpectrum {
                 "1/Pa",
                 "fitted together with the modes" + fastEnd(),
                 temperatureK,
-                RetardationModes::instantaneousPerPa));
+                RetardationModes::instantaneousPerPa,
+                unseenFast));
         markers.add(marker(
                 "instantaneous_modulus",
                 "Pa",
                 "one over the instantaneous compliance" + fastEnd(),
                 temperatureK,
-                modes -> 1 / modes.instantaneousPerPa()));
+                modes -> 1 / modes.instantaneousPerPa(),
+                unseenFast));
         if (!endsInside()) {
             return markers;
         }
@@ -160,28 +165,32 @@ public final class CreepSpectrum implements FittedSpectrum {
             markers.add(marker(
                     "zero_shear_viscosity",
                     "Pa·s",
-                    "one over the slope of the flow",
+                    "one over the slope of the flow" + slowEnd(),
                     temperatureK,
-                    modes -> 1 / modes.fluidityPerPaS()));
+                    modes -> 1 / modes.fluidityPerPaS(),
+                    unseenSlow));
             markers.add(marker(
                     "steady_state_compliance",
                     "1/Pa",
-                    "instantaneous compliance and sum of j",
+                    "instantaneous compliance and sum of j" + slowEnd(),
                     temperatureK,
-                    RetardationModes::recoverablePerPa));
+                    RetardationModes::recoverablePerPa,
+                    unseenSlow));
             markers.add(marker(
                     "mean_relaxation_time",
                     "s",
-                    "steady-state compliance times viscosity",
+                    "steady-state compliance times viscosity" + slowEnd(),
                     temperatureK,
-                    modes -> modes.recoverablePerPa() / modes.fluidityPerPaS()));
+                    modes -> modes.recoverablePerPa() / modes.fluidityPerPaS(),
+                    unseenSlow));
         } else {
             markers.add(marker(
                     "equilibrium_modulus",
                     "Pa",
-                    "one over the instantaneous compliance and sum of j",
+                    "one over the instantaneous compliance and sum of j" + slowEnd(),
                     temperatureK,
-                    modes -> 1 / modes.recoverablePerPa()));
+                    modes -> 1 / modes.recoverablePerPa(),
+                    unseenSlow));
         }
         markers.addAll(ofRetardation(temperatureK).markers());
         return markers;
@@ -211,6 +220,36 @@ public final class CreepSpectrum implements FittedSpectrum {
         return notes;
     }
 
+    /** Whether the readings begin before the fastest mode, so that what yields at once stands apart from it. */
+    private boolean beginsInside() {
+        return relaxation.count() == 0 || relaxation.timesS()[0] >= firstSeen();
+    }
+
+    /** By a mode's own breadth after the first time; see {@link SupportedWindow}. */
+    private double firstSeen() {
+        return SupportedWindow.of(1, 1 / readings.shortestS()).shortestS();
+    }
+
+    /** Whether the slowest mode is over by the end, so that what may come after it is no part of it. */
+    private boolean slowestStandsApart() {
+        return retardation.count() == 0 || retardation.timesS()[retardation.count() - 1] <= lastSeen();
+    }
+
+    /** By a mode's own breadth before the last time; see {@link SupportedWindow}. */
+    private double lastSeen() {
+        return SupportedWindow.of(1 / readings.longestS(), 1).longestS();
+    }
+
+    private String slowEnd() {
+        return slowestStandsApart()
+                ? ""
+                : String.format(
+                        Locale.ROOT,
+                        "; the slowest mode, %.3g s, lies beyond the %.3g s the data support: u holds what could hide there",
+                        retardation.timesS()[retardation.count() - 1],
+                        lastSeen());
+    }
+
     private boolean endsInside() {
         return retardation.count() == 0
                 || retardation.timesS()[retardation.count() - 1] <= LATEST * readings.longestS();
@@ -221,15 +260,18 @@ public final class CreepSpectrum implements FittedSpectrum {
             String unit,
             String method,
             double temperatureK,
-            ToDoubleFunction<RetardationModes> figure) {
+            ToDoubleFunction<RetardationModes> figure,
+            Optional<RetardationModes> unseen) {
+        double value = figure.applyAsDouble(retardation);
+        double hidden = unseen.map(figure::applyAsDouble).orElse(value) - value;
         return new Marker(
                 "",
                 "",
                 property,
                 OptionalDouble.of(temperatureK),
                 OptionalDouble.empty(),
-                figure.applyAsDouble(retardation),
-                OptionalDouble.of(u(figure)),
+                value,
+                OptionalDouble.of(Math.hypot(u(figure), hidden)),
                 unit,
                 method + fittedTo());
     }
@@ -244,7 +286,15 @@ public final class CreepSpectrum implements FittedSpectrum {
     }
 
     private String fastEnd() {
-        return String.format(Locale.ROOT, ", what yields before %.3g s counted in", readings.shortestS());
+        String counted = String.format(Locale.ROOT, ", what yields before %.3g s counted in", readings.shortestS());
+        return beginsInside()
+                ? counted
+                : String.format(
+                        Locale.ROOT,
+                        "%s; the fastest mode, %.3g s, lies before the %.3g s the data support: u holds what could hide there",
+                        counted,
+                        relaxation.timesS()[0],
+                        firstSeen());
     }
 
     private double u(ToDoubleFunction<RetardationModes> figure) {

@@ -61,7 +61,8 @@ class CreepFitTest {
                                 -step.changePa(),
                                 step.changeUPa(),
                                 -step.strainBefore(),
-                                step.strainBeforeU()))
+                                step.strainBeforeU(),
+                                step.stressBeforeUPa()))
                         .toList(),
                 curve.readings().stream()
                         .map(reading -> new CreepReading(
