@@ -26,6 +26,9 @@ public final class CreepSpectrum implements FittedSpectrum {
 
     /** How far beyond the first or last time an unseen mode sits. */
     private static final double REACH = Math.pow(10, 1.5);
+    /** The same of one that would be taken for flow: further out it is flow. */
+    private static final double BESIDE_FLOW = 2;
+
     /** A shift this many of its uncertainties off is said. */
     private static final double SHIFT_OFF = 3;
 
@@ -62,7 +65,8 @@ public final class CreepSpectrum implements FittedSpectrum {
                         fitted, readings.shortestS() / REACH, CreepFit.FASTEST * readings.shortestS(), allowed)));
         unseenSlow = slowestStandsApart()
                 ? Optional.empty()
-                : Optional.of(modes(rows.withUnseen(fitted, REACH * readings.longestS(), allowed)));
+                : Optional.of(modes(rows.withUnseen(
+                        fitted, (fitted.fluidity() > 0 ? BESIDE_FLOW : REACH) * readings.longestS(), allowed)));
     }
 
     /** Where no J0 is seen the fastest mode takes its place: nothing read tells the two apart. */

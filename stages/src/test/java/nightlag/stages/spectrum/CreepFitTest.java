@@ -138,8 +138,8 @@ class CreepFitTest {
                 .findFirst()
                 .orElseThrow();
         assertThat(viscosity.value()).isCloseTo(1e7, within(3.5 * viscosity.u().getAsDouble()));
-        // 0.3 % of it; several times that where the noise calls for a mode beside the flow
-        assertThat(viscosity.u().getAsDouble()).isBetween(1e3, 5e5);
+        // 0.3 % of it; where the noise calls for a mode beside the flow, with what could hide between the two
+        assertThat(viscosity.u().getAsDouble()).isBetween(1e3, 2e6);
         for (double t = 0.01; t <= 100; t *= 3) {
             double truth = BURGERS.creepPerPa(t);
             assertThat(spectrum.retardation().creepPerPa(t)).isCloseTo(truth, within(0.02 * truth));
