@@ -1,6 +1,8 @@
 package nightlag.stages;
 
 import java.util.List;
+import nightlag.stages.acceptance.Judgement;
+import nightlag.stages.acceptance.Trend;
 import nightlag.stages.fault.Reason;
 import nightlag.stages.moduli.CreepCurve;
 import nightlag.stages.moduli.FigureRow;
@@ -28,6 +30,8 @@ import nightlag.stages.sweep.Sweep;
  * @param responses predictions, in the order of the configuration
  * @param prony the relaxation modes as parts of the instantaneous modulus
  * @param creep creep curves
+ * @param acceptance the lot against each limit of its grade, in the order of the configuration
+ * @param trend the lot among the grade's earlier ones, likewise; it takes more than this lot to know
  */
 public record LotResult(
         List<ModulusPoint> points,
@@ -41,7 +45,9 @@ public record LotResult(
         List<Sweep> sweeps,
         List<ResponseRow> responses,
         List<RelativeMode> prony,
-        List<CreepCurve> creep) {
+        List<CreepCurve> creep,
+        List<Judgement> acceptance,
+        List<Trend> trend) {
     /** Nothing is known of the lot, not even a point. */
     public static final LotResult EMPTY = builder().build();
 
@@ -59,6 +65,27 @@ public record LotResult(
         responses = List.copyOf(responses);
         prony = List.copyOf(prony);
         creep = List.copyOf(creep);
+        acceptance = List.copyOf(acceptance);
+        trend = List.copyOf(trend);
+    }
+
+    /** The same lot among these earlier ones. */
+    public LotResult withTrend(List<Trend> found) {
+        return new LotResult(
+                points,
+                markers,
+                shiftFactors,
+                masterCurve,
+                spectrum,
+                notes,
+                absent,
+                derived,
+                sweeps,
+                responses,
+                prony,
+                creep,
+                acceptance,
+                found);
     }
 
     /** A result that has what is set on it, and empty lists for all else. */
@@ -80,6 +107,8 @@ public record LotResult(
         private List<ResponseRow> responses = List.of();
         private List<RelativeMode> prony = List.of();
         private List<CreepCurve> creep = List.of();
+        private List<Judgement> acceptance = List.of();
+        private List<Trend> trend = List.of();
 
         private Builder() {}
 
@@ -143,6 +172,16 @@ public record LotResult(
             return this;
         }
 
+        public Builder acceptance(List<Judgement> given) {
+            this.acceptance = given;
+            return this;
+        }
+
+        public Builder trend(List<Trend> given) {
+            this.trend = given;
+            return this;
+        }
+
         public LotResult build() {
             return new LotResult(
                     points,
@@ -156,7 +195,9 @@ public record LotResult(
                     sweeps,
                     responses,
                     prony,
-                    creep);
+                    creep,
+                    acceptance,
+                    trend);
         }
     }
 }

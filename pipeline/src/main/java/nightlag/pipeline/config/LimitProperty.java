@@ -69,17 +69,13 @@ enum LimitProperty {
         return name().toLowerCase(Locale.ROOT);
     }
 
-    /** The unit its values stand in: SI without prefix, °C for a temperature, rad/s for an angular frequency. */
+    /** The unit its values stand in: SI without prefix, °C for a temperature, rad/s for an angular frequency, ° for an angle. */
     String unit() {
         return switch (kind) {
             case TEMPERATURE -> "°C";
             case FREQUENCY -> "rad/s";
+            case ANGLE -> "°";
             default -> kind.si();
         };
-    }
-
-    /** A limit in {@link #unit()}'s SI: K for a temperature, rad/s for an angular frequency. */
-    double value(Quantity quantity) {
-        return kind == QuantityKind.FREQUENCY ? 2 * Math.PI * quantity.si() : quantity.si();
     }
 }

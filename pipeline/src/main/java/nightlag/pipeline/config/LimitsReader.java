@@ -9,6 +9,7 @@ import java.util.Set;
 import java.util.stream.Collectors;
 import java.util.stream.Stream;
 import nightlag.stages.acceptance.LimitPlan;
+import nightlag.stages.acceptance.ShownUnit;
 
 /** Reads the sections {@code [[limit]]}. */
 final class LimitsReader {
@@ -49,8 +50,10 @@ final class LimitsReader {
                 }
             }
         }
-        OptionalDouble min = bound(section, GradeKeys.MIN, property.get());
-        OptionalDouble max = bound(section, GradeKeys.MAX, property.get());
+        Optional<Quantity> lowest = bound(section, GradeKeys.MIN, property.get());
+        Optional<Quantity> highest = bound(section, GradeKeys.MAX, property.get());
+        OptionalDouble min = value(lowest, property.get());
+        OptionalDouble max = value(highest, property.get());
         if (min.isPresent() && max.isPresent() && min.getAsDouble() >= max.getAsDouble()) {
             section.wrong(GradeKeys.MAX, "max is not above min", "a max above min");
         }
@@ -74,18 +77,23 @@ final class LimitsReader {
                 min,
                 max,
                 property.get().unit(),
+                lowest.or(() -> highest)
+                        .map(property.get()::shown)
+                        .orElseGet(() -> ShownUnit.plain(property.get().unit())),
                 coverage.getAsDouble()));
     }
 
-    private static OptionalDouble bound(SectionReader section, Key key, LimitSubject property) {
+    private static Optional<Quantity> bound(SectionReader section, Key key, LimitSubject property) {
         if (!section.has(key)) {
-            return OptionalDouble.empty();
+            return Optional.empty();
         }
         KeyType.Measured type =
                 new KeyType.Measured(property.kind(), KeyType.Sign.ANY, property.kind() == QuantityKind.RATIO);
-        return section.node(key)
-                .flatMap(node -> section.quantity(key, node, type))
-                .map(quantity -> OptionalDouble.of(property.value(quantity)))
+        return section.node(key).flatMap(node -> section.quantity(key, node, type));
+    }
+
+    private static OptionalDouble value(Optional<Quantity> bound, LimitSubject property) {
+        return bound.map(quantity -> OptionalDouble.of(property.value(quantity)))
                 .orElseGet(OptionalDouble::empty);
     }
 

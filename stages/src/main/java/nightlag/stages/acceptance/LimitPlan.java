@@ -11,9 +11,10 @@ import java.util.OptionalDouble;
  * @param temperatureK temperature, K; required for a quantity of the points
  * @param frequencyHz frequency, Hz; required for a quantity of the points
  * @param conditions temperature and frequency as the grade file writes them, for the team sheet's column
- * @param min lower limit, SI
- * @param max upper limit, SI
- * @param unit unit of the limits in SI without prefix, "1" for none
+ * @param min lower limit, in {@code unit}, but in K for a temperature
+ * @param max upper limit, likewise
+ * @param unit unit of the values, as the property has it in the tables; "1" for none
+ * @param shown the unit the grade file writes the limits in
  * @param coverage the guard band in standard uncertainties
  */
 public record LimitPlan(
@@ -25,4 +26,10 @@ public record LimitPlan(
         OptionalDouble min,
         OptionalDouble max,
         String unit,
-        double coverage) {}
+        ShownUnit shown,
+        double coverage) {
+    /** What it is called: its name, else property and conditions as the grade file writes them. No two of a grade are alike. */
+    public String title() {
+        return name.orElseGet(() -> (property + " " + conditions).strip());
+    }
+}
