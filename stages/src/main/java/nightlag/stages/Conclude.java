@@ -46,50 +46,82 @@ public final class Conclude {
                         .sorted(PointOrder.BY_KEY)
                         .toList(),
                 plan.sweeps());
-        Sweeps sweeps = Sweeps.of(lot.points(), lot.amplitudeSweeps(), plan.sweeps());
-        List<Reason> notes = new ArrayList<>(lot.notes());
-        notes.addAll(sweeps.notes());
-        List<Reason> absent = new ArrayList<>(sweeps.apart());
-        if (isCurveAsked(plan)) {
-            absent.addAll(sweeps.isotherms().notes());
-        }
         List<CreepCurve> creep = LotCreep.inOrder(reductions);
-        boolean creepAlone = !creep.isEmpty() && sweeps.isotherms().isotherms().isEmpty();
-        Optional<LotCurve> curve = creepAlone ? Optional.empty() : curve(sweeps, plan, notes);
-        Optional<MasterCurve> master = curve.flatMap(LotCurve::master);
-        LotSpectrum spectrum = plan.spectrum()
-                .map(wanted -> LotSpectrum.of(curve, creep, wanted, referenceK(plan)))
-                .orElse(LotSpectrum.NONE);
-        notes.addAll(spectrum.notes());
-        Findings markers = LotMarkers.of(sweeps.sweeps(), plan.sweeps(), curve);
-        List<ModulusPoint> usable = lot.points().stream()
-                .filter(point -> point.quality() != Quality.UNUSABLE)
-                .toList();
-        absent.addAll(markers.notes());
-        LotFigures figures = LotFigures.of(usable, lot.amplitudeSweeps(), plan.ownFigures());
+        Drawn drawn = Drawn.of(lot, creep, plan);
+        List<Reason> notes = new ArrayList<>(lot.notes());
+        notes.addAll(drawn.notes());
+        LotFigures figures = LotFigures.of(usable(lot), lot.amplitudeSweeps(), plan.ownFigures());
         notes.addAll(figures.findings().notes());
-        LotResponses responses = LotResponses.of(plan.responses(), spectrum);
+        LotResponses responses = LotResponses.of(plan.responses(), drawn.spectrum());
         notes.addAll(responses.notes());
+        Optional<MasterCurve> master = drawn.curve().flatMap(LotCurve::master);
+        List<Marker> markers = inOrder(drawn, figures);
         return LotResult.builder()
                 .points(lot.points())
-                .markers(Stream.of(
-                                markers.markers(),
-                                spectrum.markers(),
-                                figures.findings().markers())
-                        .flatMap(List::stream)
-                        .sorted(MARKER_ORDER)
-                        .toList())
+                .markers(markers)
                 .shiftFactors(master.map(MasterCurve::shifts).orElse(List.of()))
                 .masterCurve(master.map(MasterCurve::points).orElse(List.of()))
-                .spectrum(spectrum.rows().stream().sorted(ROW_ORDER).toList())
+                .spectrum(drawn.spectrum().rows().stream().sorted(ROW_ORDER).toList())
                 .notes(notes)
-                .absent(absent)
+                .absent(drawn.absent(plan))
                 .derived(figures.rows())
-                .sweeps(sweeps.sweeps())
+                .sweeps(drawn.sweeps().sweeps())
                 .responses(responses.rows())
                 .prony(responses.prony())
                 .creep(creep)
+                .acceptance(LotAcceptance.of(lot, markers, plan, moved -> markers(moved, creep, plan)))
                 .build();
+    }
+
+    /** The markers of a lot whose points were moved. What limits cannot be on is not asked for again. */
+    private static List<Marker> markers(LotPoints moved, List<CreepCurve> creep, ConclusionPlan plan) {
+        ConclusionPlan asked = plan.forMarkersAlone();
+        return inOrder(
+                Drawn.of(moved, creep, asked),
+                LotFigures.of(usable(moved), moved.amplitudeSweeps(), asked.ownFigures()));
+    }
+
+    private static List<Marker> inOrder(Drawn drawn, LotFigures figures) {
+        return Stream.of(
+                        drawn.markers().markers(),
+                        drawn.spectrum().markers(),
+                        figures.findings().markers())
+                .flatMap(List::stream)
+                .sorted(MARKER_ORDER)
+                .toList();
+    }
+
+    private static List<ModulusPoint> usable(LotPoints lot) {
+        return lot.points().stream()
+                .filter(point -> point.quality() != Quality.UNUSABLE)
+                .toList();
+    }
+
+    /** What is drawn from the points of a lot: its sweeps, its curve, the spectrum of the curve, the figures of all of them. */
+    private record Drawn(
+            Sweeps sweeps, Optional<LotCurve> curve, LotSpectrum spectrum, Findings markers, List<Reason> notes) {
+        static Drawn of(LotPoints lot, List<CreepCurve> creep, ConclusionPlan plan) {
+            Sweeps sweeps = Sweeps.of(lot.points(), lot.amplitudeSweeps(), plan.sweeps());
+            List<Reason> notes = new ArrayList<>(sweeps.notes());
+            boolean creepAlone =
+                    !creep.isEmpty() && sweeps.isotherms().isotherms().isEmpty();
+            Optional<LotCurve> curve = creepAlone ? Optional.empty() : Conclude.curve(sweeps, plan, notes);
+            LotSpectrum spectrum = plan.spectrum()
+                    .map(wanted -> LotSpectrum.of(curve, creep, wanted, referenceK(plan)))
+                    .orElse(LotSpectrum.NONE);
+            notes.addAll(spectrum.notes());
+            return new Drawn(sweeps, curve, spectrum, LotMarkers.of(sweeps.sweeps(), plan.sweeps(), curve), notes);
+        }
+
+        /** What the data do not support, and what stands apart from a curve that is asked for. */
+        List<Reason> absent(ConclusionPlan plan) {
+            return Stream.of(
+                            sweeps.apart(),
+                            isCurveAsked(plan) ? sweeps.isotherms().notes() : List.<Reason>of(),
+                            markers.notes())
+                    .flatMap(List::stream)
+                    .toList();
+        }
     }
 
     private static OptionalDouble referenceK(ConclusionPlan plan) {

@@ -47,4 +47,16 @@ public record ConclusionPlan(
             Map<Dimension, Double> dimensionUncertainty) {
         this(sweeps, superposition, spectrum, responses, limits, dimensionUncertainty, OwnFigures.NONE);
     }
+
+    /** A plan that gives the same markers and nothing else that takes time. */
+    ConclusionPlan forMarkersAlone() {
+        return new ConclusionPlan(
+                sweeps,
+                superposition,
+                spectrum.map(wanted -> new SpectrumPlan(wanted.fitEquilibrium(), wanted.modes(), false)),
+                List.of(),
+                List.of(),
+                dimensionUncertainty,
+                new OwnFigures(List.of(), ownFigures.markers()));
+    }
 }

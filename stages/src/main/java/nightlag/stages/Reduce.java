@@ -69,7 +69,8 @@ public final class Reduce {
             Ranges ranges = Ranges.of(
                     plan.deformationRange(), record.deformationSignal(), plan.loadRange(), record.loadSignal());
             Origin placed = record.waveform().isWindow() ? origin.after(fit.originS()) : origin;
-            return ModulusPoints.of(placed, record.waveform(), fit, correction, ranges, plan.screening());
+            return ModulusPoints.of(placed, record.waveform(), fit, correction, ranges, plan.screening())
+                    .sharing(SharedByRecords.of(record, plan, spec, fit));
         } catch (ReductionFault fault) {
             OptionalDouble tagged = record.waveform().nominalFrequencyHz();
             Origin placed = record.waveform().isWindow() ? origin.after(middle(record.waveform())) : origin;
@@ -93,11 +94,12 @@ public final class Reduce {
                                 0))
                         : Optional.empty();
         return ModulusPoints.given(
-                origin(record.tags()),
-                mode(plan),
-                record.frequencyHz(),
-                new Moduli(record.storagePa(), record.lossPa(), covariance),
-                record.strainAmplitude());
+                        origin(record.tags()),
+                        mode(plan),
+                        record.frequencyHz(),
+                        new Moduli(record.storagePa(), record.lossPa(), covariance),
+                        record.strainAmplitude())
+                .sharing(SharedByRecords.ofGiven(plan));
     }
 
     /** What a point is besides its measurement. */

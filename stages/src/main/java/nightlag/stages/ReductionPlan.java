@@ -8,6 +8,7 @@ import nightlag.stages.geometry.GeometrySpec;
 import nightlag.stages.geometry.LoadSignal;
 import nightlag.stages.moduli.ScreeningPlan;
 import nightlag.stages.moduli.SignalRange;
+import nightlag.stages.moduli.SignalUncertainty;
 import nightlag.stages.waveform.ExtractionPlan;
 
 /**
@@ -19,6 +20,7 @@ import nightlag.stages.waveform.ExtractionPlan;
  * @param geometry the specimen's geometry; empty where the files hold stress and strain and nothing is said
  * @param extraction how amplitudes are taken out
  * @param screening the thresholds behind the flags
+ * @param uncertainty what is not known of the instrument's signals, the same in all its records
  */
 public record ReductionPlan(
         Corrections corrections,
@@ -26,10 +28,22 @@ public record ReductionPlan(
         Map<LoadSignal, SignalRange> loadRange,
         Optional<GeometrySpec> geometry,
         ExtractionPlan extraction,
-        ScreeningPlan screening) {
+        ScreeningPlan screening,
+        SignalUncertainty uncertainty) {
     /** Copies the maps. */
     public ReductionPlan {
         deformationRange = Map.copyOf(deformationRange);
         loadRange = Map.copyOf(loadRange);
+    }
+
+    /** A plan for an instrument of whose signals nothing more is said. */
+    public ReductionPlan(
+            Corrections corrections,
+            Map<DeformationSignal, SignalRange> deformationRange,
+            Map<LoadSignal, SignalRange> loadRange,
+            Optional<GeometrySpec> geometry,
+            ExtractionPlan extraction,
+            ScreeningPlan screening) {
+        this(corrections, deformationRange, loadRange, geometry, extraction, screening, SignalUncertainty.NONE);
     }
 }

@@ -37,7 +37,8 @@ final class SeveralFrequencies {
             for (SignalFit fit : fits) {
                 String number = String.valueOf(points.size() + 1);
                 String suffix = "-" + "0".repeat(digits - number.length()) + number;
-                points.add(point(origin(record.tags(), suffix, fit), fit, correction, ranges, plan));
+                points.add(point(origin(record.tags(), suffix, fit), fit, correction, ranges, plan)
+                        .sharing(SharedByRecords.of(record, plan, spec, fit)));
             }
             return points;
         } catch (ReductionFault fault) {

@@ -13,6 +13,7 @@ import nightlag.stages.moduli.CreepReading;
 import nightlag.stages.moduli.CreepStep;
 import nightlag.stages.moduli.Harmonic;
 import nightlag.stages.moduli.LoopPair;
+import nightlag.stages.moduli.SharedEffect;
 
 /**
  * A reduction as one line of JSON and back, equal to the last bit: doubles are written so that they read back the same,
@@ -28,6 +29,7 @@ final class ReductionJson {
             .addMixIn(LoopPair.class, AsArray.class)
             .addMixIn(CreepReading.class, AsArray.class)
             .addMixIn(CreepStep.class, AsArray.class)
+            .addMixIn(SharedEffect.class, AsArray.class)
             .build();
     private static final ObjectWriter WRITER = MAPPER.writerFor(Reduction.class);
     private static final ObjectReader READER = MAPPER.readerFor(Reduction.class);

@@ -4,6 +4,7 @@ import java.util.EnumMap;
 import java.util.EnumSet;
 import java.util.Map;
 import java.util.Optional;
+import java.util.OptionalDouble;
 import java.util.Set;
 import nightlag.stages.ReductionPlan;
 import nightlag.stages.geometry.DeformationSignal;
@@ -13,6 +14,7 @@ import nightlag.stages.geometry.GeometrySpec;
 import nightlag.stages.geometry.LoadSignal;
 import nightlag.stages.geometry.Movement;
 import nightlag.stages.moduli.SignalRange;
+import nightlag.stages.moduli.SignalUncertainty;
 
 /** What an instrument and a grade come to when they meet, which is known only once a file has named its grade. */
 public final class Plans {
@@ -35,7 +37,24 @@ public final class Plans {
                 load,
                 geometry(instrument, grade),
                 grade.extraction(),
-                grade.screening());
+                grade.screening(),
+                uncertainty(instrument));
+    }
+
+    private static SignalUncertainty uncertainty(Instrument instrument) {
+        Map<DeformationSignal, Double> deformation = new EnumMap<>(DeformationSignal.class);
+        Map<LoadSignal, Double> load = new EnumMap<>(LoadSignal.class);
+        OptionalDouble temperatureK = OptionalDouble.empty();
+        for (Map.Entry<ChannelName, Double> own : instrument.uncertainty().entrySet()) {
+            if (own.getKey() == ChannelName.TEMPERATURE) {
+                temperatureK = OptionalDouble.of(own.getValue());
+            } else if (ChannelsReader.DEFORMATIONS.contains(own.getKey())) {
+                deformation.put(DeformationSignal.valueOf(own.getKey().name()), own.getValue());
+            } else {
+                load.put(LoadSignal.valueOf(own.getKey().name()), own.getValue());
+            }
+        }
+        return new SignalUncertainty(deformation, load, temperatureK);
     }
 
     /** The instrument's own geometry if it has one, else the grade's. */

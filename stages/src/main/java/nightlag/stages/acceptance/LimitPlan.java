@@ -32,4 +32,14 @@ public record LimitPlan(
     public String title() {
         return name.orElseGet(() -> (property + " " + conditions).strip());
     }
+
+    /**
+     * What it is on: property, temperature and frequency, whatever it is called and wherever its bounds lie. Values of lots can
+     * be compared where it is the same.
+     */
+    public String quantity() {
+        return property
+                + (temperatureK.isPresent() ? " " + temperatureK.getAsDouble() + " K" : "")
+                + (frequencyHz.isPresent() ? " " + frequencyHz.getAsDouble() + " Hz" : "");
+    }
 }

@@ -12,9 +12,11 @@ import nightlag.stages.fault.ReasonCode;
  * @param mean mean of the earlier values
  * @param lower lower control limit
  * @param upper upper control limit
- * @param earlier the earlier lots that have a value, the first one first
+ * @param lots how many earlier lots the control limits rest on
+ * @param earlier the latest of them, the first one first
  */
-public record Trend(LimitPlan limit, double value, double mean, double lower, double upper, List<LotValue> earlier) {
+public record Trend(
+        LimitPlan limit, double value, double mean, double lower, double upper, int lots, List<LotValue> earlier) {
     /** Copies the list. */
     public Trend {
         earlier = List.copyOf(earlier);
@@ -36,13 +38,13 @@ public record Trend(LimitPlan limit, double value, double mean, double lower, do
     /** In words; it begins with {@code trend}. */
     public String note() {
         String where = verdict() == Verdict.CONFORMING ? "among" : value > upper ? "above" : "below";
+        String unit = limit.shown().symbol().equals("1") ? "" : " " + limit.shown().symbol();
         return String.format(
-                        Locale.ROOT,
-                        "trend: %s its %d earlier lots, whose mean is %s %s; limits are this mean and 2.66 mean moving ranges",
-                        where,
-                        earlier.size(),
-                        ReasonCode.shortest(limit.shown().of(mean)),
-                        limit.shown().symbol().equals("1") ? "" : limit.shown().symbol())
-                .replace(" ;", ";");
+                Locale.ROOT,
+                "trend: %s its %d earlier lots; mean %s%s, control limits 2.66 mean moving ranges about it",
+                where,
+                lots,
+                ReasonCode.shortest(limit.shown().of(mean)),
+                unit);
     }
 }

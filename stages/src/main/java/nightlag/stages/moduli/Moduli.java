@@ -20,6 +20,12 @@ public record Moduli(double storagePa, double lossPa, Optional<ModuliCovariance>
         return new Complex(storagePa, lossPa);
     }
 
+    /** The same modulus larger by e to the {@code logFactor} and turned by a phase; the covariance stays as it is. */
+    Moduli turned(double logFactor, double phaseRad) {
+        Complex turned = complex().times(Complex.polar(Math.exp(logFactor), phaseRad));
+        return new Moduli(turned.re(), turned.im(), covariance);
+    }
+
     /** |G*| in Pa. */
     public double magnitudePa() {
         return Math.hypot(storagePa, lossPa);

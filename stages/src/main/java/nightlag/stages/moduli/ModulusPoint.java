@@ -37,6 +37,7 @@ import nightlag.stages.geometry.GeometryKind;
  * @param harmonicLimits the limits its harmonics are judged by again at the rim of parallel plates; empty where they are
  *     what they are
  * @param windowS the planned length of the window of a longer record that it comes from, s; empty for a record of its own
+ * @param shared how it moves with what it shares with other records; empty where that is not known
  */
 public record ModulusPoint(
         PointKey key,
@@ -62,13 +63,134 @@ public record ModulusPoint(
         Optional<GeometryKind> torqueGeometry,
         Optional<Flag> unusableOnlyBy,
         Optional<HarmonicLimits> harmonicLimits,
-        OptionalDouble windowS) {
+        OptionalDouble windowS,
+        Optional<SharedInfluences> shared) {
     /** Copies the lists. */
     public ModulusPoint {
         harmonics = List.copyOf(harmonics);
         flags = List.copyOf(flags);
         reasons = List.copyOf(reasons);
         loop = List.copyOf(loop);
+    }
+
+    /** A point of which nothing is known that it shares with others. */
+    public ModulusPoint(
+            PointKey key,
+            Optional<String> made,
+            DeformationMode deformation,
+            OptionalDouble temperatureK,
+            OptionalDouble taggedTemperatureK,
+            OptionalDouble frequencyHz,
+            OptionalDouble elapsedS,
+            OptionalDouble strainAmplitude,
+            OptionalDouble stressAmplitudePa,
+            Optional<Moduli> moduli,
+            List<Harmonic> harmonics,
+            Quality quality,
+            List<Flag> flags,
+            OptionalDouble cyclesUsed,
+            int samplesUsed,
+            OptionalDouble strainSnrDb,
+            OptionalDouble stressSnrDb,
+            OptionalDouble degreesOfFreedom,
+            List<Reason> reasons,
+            List<LoopPair> loop,
+            Optional<GeometryKind> torqueGeometry,
+            Optional<Flag> unusableOnlyBy,
+            Optional<HarmonicLimits> harmonicLimits,
+            OptionalDouble windowS) {
+        this(
+                key,
+                made,
+                deformation,
+                temperatureK,
+                taggedTemperatureK,
+                frequencyHz,
+                elapsedS,
+                strainAmplitude,
+                stressAmplitudePa,
+                moduli,
+                harmonics,
+                quality,
+                flags,
+                cyclesUsed,
+                samplesUsed,
+                strainSnrDb,
+                stressSnrDb,
+                degreesOfFreedom,
+                reasons,
+                loop,
+                torqueGeometry,
+                unusableOnlyBy,
+                harmonicLimits,
+                windowS,
+                Optional.empty());
+    }
+
+    /** The same point, known to move with these. */
+    public ModulusPoint sharing(SharedInfluences influences) {
+        return placed(temperatureK, taggedTemperatureK, strainAmplitude, stressAmplitudePa, moduli, Optional.of(influences));
+    }
+
+    /** The same point if what it shares with others were off by this. */
+    public ModulusPoint moved(SharedEffect effect) {
+        return placed(
+                temperatureK,
+                taggedTemperatureK,
+                times(strainAmplitude, effect.lnStrain()),
+                times(stressAmplitudePa, effect.lnStrain() + effect.lnModulus()),
+                moduli.map(own -> own.turned(effect.lnModulus(), effect.phaseRad())),
+                shared);
+    }
+
+    /** The same point if it had been so much warmer, K. */
+    public ModulusPoint warmer(double kelvin) {
+        OptionalDouble warmerTag =
+                taggedTemperatureK.equals(temperatureK) ? plus(taggedTemperatureK, kelvin) : taggedTemperatureK;
+        return placed(plus(temperatureK, kelvin), warmerTag, strainAmplitude, stressAmplitudePa, moduli, shared);
+    }
+
+    private static OptionalDouble times(OptionalDouble value, double logFactor) {
+        return value.isPresent() ? OptionalDouble.of(value.getAsDouble() * Math.exp(logFactor)) : value;
+    }
+
+    private static OptionalDouble plus(OptionalDouble value, double more) {
+        return value.isPresent() ? OptionalDouble.of(value.getAsDouble() + more) : value;
+    }
+
+    private ModulusPoint placed(
+            OptionalDouble newTemperatureK,
+            OptionalDouble newTagK,
+            OptionalDouble newStrain,
+            OptionalDouble newStressPa,
+            Optional<Moduli> newModuli,
+            Optional<SharedInfluences> newShared) {
+        return new ModulusPoint(
+                key,
+                made,
+                deformation,
+                newTemperatureK,
+                newTagK,
+                frequencyHz,
+                elapsedS,
+                newStrain,
+                newStressPa,
+                newModuli,
+                harmonics,
+                quality,
+                flags,
+                cyclesUsed,
+                samplesUsed,
+                strainSnrDb,
+                stressSnrDb,
+                degreesOfFreedom,
+                reasons,
+                loop,
+                torqueGeometry,
+                unusableOnlyBy,
+                harmonicLimits,
+                windowS,
+                newShared);
     }
 
     /**
@@ -188,6 +310,7 @@ public record ModulusPoint(
                 torqueGeometry,
                 newUnusableOnlyBy,
                 harmonicLimits,
-                windowS);
+                windowS,
+                shared);
     }
 }

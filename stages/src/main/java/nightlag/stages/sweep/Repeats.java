@@ -190,7 +190,8 @@ final class Repeats {
                 first.torqueGeometry(),
                 Optional.empty(),
                 Optional.empty(),
-                first.windowS());
+                first.windowS(),
+                first.shared());
     }
 
     private Moduli widened(Moduli moduli) {

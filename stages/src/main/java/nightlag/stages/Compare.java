@@ -1,0 +1,65 @@
+package nightlag.stages;
+
+import java.time.LocalDate;
+import java.util.ArrayList;
+import java.util.Comparator;
+import java.util.LinkedHashMap;
+import java.util.List;
+import java.util.Map;
+import java.util.Optional;
+import nightlag.stages.acceptance.IndividualsChart;
+import nightlag.stages.acceptance.LimitPlan;
+import nightlag.stages.acceptance.LotDate;
+import nightlag.stages.acceptance.LotRecord;
+import nightlag.stages.acceptance.Trend;
+import nightlag.stages.sweep.NaturalOrder;
+
+/** Each lot of a grade among the earlier ones. */
+public final class Compare {
+    private Compare() {}
+
+    /**
+     * Compares the lots of one grade.
+     *
+     * @param lots what is remembered of each, in any order
+     * @return by lot, the lots in their {@linkplain #inOrder order}: a trend for each limit that the lot and at least {@value
+     *     IndividualsChart#FEWEST} earlier ones have a value for, in the order of the configuration; a limit on the same
+     *     quantity as one before it says nothing new and has none
+     */
+    public static Map<String, List<Trend>> compare(List<LotRecord> lots, ConclusionPlan plan) {
+        Map<String, IndividualsChart> charts = new LinkedHashMap<>();
+        for (LimitPlan limit : plan.limits()) {
+            charts.putIfAbsent(limit.quantity(), new IndividualsChart(limit));
+        }
+        Map<String, List<Trend>> trends = new LinkedHashMap<>();
+        for (LotRecord lot : inOrder(lots)) {
+            List<Trend> own = new ArrayList<>();
+            charts.forEach((quantity, chart) -> value(lot, quantity)
+                    .flatMap(value -> chart.next(lot.lot(), value))
+                    .ifPresent(own::add));
+            trends.put(lot.lot(), List.copyOf(own));
+        }
+        return trends;
+    }
+
+    private static Optional<Double> value(LotRecord lot, String quantity) {
+        return lot.values().stream()
+                .filter(value -> value.quantity().equals(quantity) && Double.isFinite(value.value()))
+                .map(LotRecord.Value::value)
+                .findFirst();
+    }
+
+    /**
+     * The lots as they came: by date where every one has a date that can be read, those of one day by name; else all by name,
+     * digits compared as the numbers they are.
+     */
+    public static List<LotRecord> inOrder(List<LotRecord> lots) {
+        Map<LotRecord, Optional<LocalDate>> dates = new LinkedHashMap<>();
+        lots.forEach(lot -> dates.put(lot, lot.made().flatMap(LotDate::of)));
+        Comparator<LotRecord> byName = Comparator.comparing(LotRecord::lot, NaturalOrder::compare);
+        Comparator<LotRecord> order = dates.values().stream().allMatch(Optional::isPresent)
+                ? Comparator.comparing((LotRecord lot) -> dates.get(lot).orElseThrow()).thenComparing(byName)
+                : byName;
+        return lots.stream().sorted(order).toList();
+    }
+}
