@@ -27,19 +27,47 @@ public final class Compare {
      *     quantity as one before it says nothing new and has none
      */
     public static Map<String, List<Trend>> compare(List<LotRecord> lots, ConclusionPlan plan) {
+        Map<String, IndividualsChart> charts = charts(plan);
+        Map<String, List<Trend>> trends = new LinkedHashMap<>();
+        inOrder(lots).forEach(lot -> trends.put(lot.lot(), next(lot, charts)));
+        return trends;
+    }
+
+    /**
+     * The trends of one lot.
+     *
+     * @param earlier the grade's lots before it, in their {@linkplain #inOrder order}
+     */
+    public static List<Trend> compare(LotRecord lot, List<LotRecord> earlier, ConclusionPlan plan) {
+        Map<String, IndividualsChart> charts = charts(plan);
+        earlier.forEach(before -> next(before, charts));
+        return next(lot, charts);
+    }
+
+    /** What is to be remembered of a lot. */
+    public static List<LotRecord.Value> values(LotResult result) {
+        return result.acceptance().stream()
+                .filter(judged -> judged.value().isPresent())
+                .map(judged -> new LotRecord.Value(
+                        judged.limit().quantity(), judged.value().getAsDouble()))
+                .distinct()
+                .toList();
+    }
+
+    private static Map<String, IndividualsChart> charts(ConclusionPlan plan) {
         Map<String, IndividualsChart> charts = new LinkedHashMap<>();
         for (LimitPlan limit : plan.limits()) {
             charts.putIfAbsent(limit.quantity(), new IndividualsChart(limit));
         }
-        Map<String, List<Trend>> trends = new LinkedHashMap<>();
-        for (LotRecord lot : inOrder(lots)) {
-            List<Trend> own = new ArrayList<>();
-            charts.forEach((quantity, chart) -> value(lot, quantity)
-                    .flatMap(value -> chart.next(lot.lot(), value))
-                    .ifPresent(own::add));
-            trends.put(lot.lot(), List.copyOf(own));
-        }
-        return trends;
+        return charts;
+    }
+
+    private static List<Trend> next(LotRecord lot, Map<String, IndividualsChart> charts) {
+        List<Trend> trends = new ArrayList<>();
+        charts.forEach((quantity, chart) -> value(lot, quantity)
+                .flatMap(value -> chart.next(lot.lot(), value))
+                .ifPresent(trends::add));
+        return List.copyOf(trends);
     }
 
     private static Optional<Double> value(LotRecord lot, String quantity) {
@@ -58,7 +86,8 @@ public final class Compare {
         lots.forEach(lot -> dates.put(lot, lot.made().flatMap(LotDate::of)));
         Comparator<LotRecord> byName = Comparator.comparing(LotRecord::lot, NaturalOrder::compare);
         Comparator<LotRecord> order = dates.values().stream().allMatch(Optional::isPresent)
-                ? Comparator.comparing((LotRecord lot) -> dates.get(lot).orElseThrow()).thenComparing(byName)
+                ? Comparator.comparing((LotRecord lot) -> dates.get(lot).orElseThrow())
+                        .thenComparing(byName)
                 : byName;
         return lots.stream().sorted(order).toList();
     }

@@ -68,8 +68,7 @@ final class LotAcceptance {
         dimensionUncertainty.entrySet().stream()
                 .sorted(Map.Entry.comparingByKey())
                 .filter(entry -> entry.getValue() > 0
-                        && shared().stream()
-                                .anyMatch(own -> own.dimensions().containsKey(entry.getKey())))
+                        && shared().stream().anyMatch(own -> own.dimensions().containsKey(entry.getKey())))
                 .forEach(entry -> moved.add(off(
                         entry.getKey().word(),
                         own -> Optional.ofNullable(own.dimensions().get(entry.getKey()))
@@ -85,9 +84,7 @@ final class LotAcceptance {
     }
 
     private List<SharedInfluences> shared() {
-        return lot.points().stream()
-                .flatMap(point -> point.shared().stream())
-                .toList();
+        return lot.points().stream().flatMap(point -> point.shared().stream()).toList();
     }
 
     /** Every point by an effect on it. */

@@ -30,6 +30,14 @@ public record Reduction(List<ModulusPoint> points, Optional<CreepCurve> creep) {
                 points.stream().map(ModulusPoint::key), creep.stream().map(CreepCurve::key));
     }
 
+    /** The lot's date as the record tags it. */
+    public Optional<String> made() {
+        return Stream.concat(
+                        points.stream().flatMap(point -> point.made().stream()),
+                        creep.stream().flatMap(curve -> curve.made().stream()))
+                .findFirst();
+    }
+
     /** How many there are: points, and a curve counts as one. */
     public int count() {
         return points.size() + (creep.isPresent() ? 1 : 0);

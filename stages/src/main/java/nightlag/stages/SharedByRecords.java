@@ -50,8 +50,7 @@ final class SharedByRecords {
 
     /** Those on a point that was reduced elsewhere: its temperature, and the strain it was measured at. */
     static SharedInfluences ofGiven(ReductionPlan plan) {
-        return new SharedInfluences(
-                Map.of(), Map.of(), plan.uncertainty().temperatureK());
+        return new SharedInfluences(Map.of(), Map.of(), plan.uncertainty().temperatureK());
     }
 
     private SharedInfluences influences() {
@@ -59,8 +58,8 @@ final class SharedByRecords {
         Double ofDeformation = plan.uncertainty().deformation().get(record.deformationSignal());
         if (ofDeformation != null) {
             slope(step -> amplitudes(spec, 1 + step, 1), STEP)
-                    .ifPresent(effect -> signals.put(
-                            word(record.deformationSignal().name()), effect.times(ofDeformation)));
+                    .ifPresent(effect ->
+                            signals.put(word(record.deformationSignal().name()), effect.times(ofDeformation)));
         }
         Double ofLoad = plan.uncertainty().load().get(record.loadSignal());
         if (ofLoad != null) {
@@ -129,11 +128,10 @@ final class SharedByRecords {
         SignalCorrection correction =
                 SignalCorrection.of(changed, plan.corrections(), record.deformationSignal(), record.loadSignal());
         double omega = fit.angularFrequency();
-        CorrectedAmplitudes own = correction.correct(
-                omega, fit.deformation()[0].times(deformation), fit.load()[0].times(load));
+        CorrectedAmplitudes own =
+                correction.correct(omega, fit.deformation()[0].times(deformation), fit.load()[0].times(load));
         Optional<SampleInertia> inertia = correction.sampleInertia();
-        Complex modulus =
-                inertia.isPresent() ? inertia.get().correct(own.modulusPa(), omega) : own.modulusPa();
+        Complex modulus = inertia.isPresent() ? inertia.get().correct(own.modulusPa(), omega) : own.modulusPa();
         return new Amplitudes(modulus, own.strain().abs());
     }
 }

@@ -14,6 +14,7 @@ import java.util.List;
 import java.util.Optional;
 import nightlag.pipeline.archive.ArchiveException.Kind;
 import nightlag.stages.Reduction;
+import nightlag.stages.acceptance.LotRecord;
 
 /** The archive file. Not safe for use by several threads; the night's own thread owns it. */
 public final class Archive implements AutoCloseable {
@@ -77,7 +78,7 @@ public final class Archive implements AutoCloseable {
     /** All lots that have points, or are due because they lost theirs; sorted. */
     public List<LotState> lots() throws ArchiveException {
         String query = """
-                SELECT lot.grade, lot.lot, lot.due, lot.conclusion, coalesce(sum(record.points), 0)
+                SELECT lot.grade, lot.lot, lot.due, lot.conclusion, coalesce(sum(record.points), 0), lot.trend
                 FROM lot LEFT JOIN record ON record.grade = lot.grade AND record.lot = lot.lot
                 GROUP BY lot.grade, lot.lot""";
         List<LotState> lots = new ArrayList<>();
@@ -85,7 +86,7 @@ public final class Archive implements AutoCloseable {
                 ResultSet row = select.executeQuery()) {
             while (row.next()) {
                 LotName name = new LotName(row.getString(1), row.getString(2));
-                lots.add(new LotState(name, row.getBoolean(3), row.getString(4), row.getInt(5)));
+                lots.add(new LotState(name, row.getBoolean(3), row.getString(4), row.getInt(5), row.getString(6)));
             }
         } catch (SQLException cause) {
             throw StoreErrors.failure(file, "list the lots", cause);
@@ -140,19 +141,39 @@ public final class Archive implements AutoCloseable {
                 lot.lot());
     }
 
-    /** Notes that a lot's tables are swapped in; a lot without points is forgotten. */
-    public void concluded(LotName lot, String conclusionFingerprint) throws ArchiveException {
+    /** What is remembered of every lot of a grade that has points, to compare them; by name. */
+    public List<LotRecord> lotRecords(String grade) throws ArchiveException {
+        try {
+            return LotValues.of(connection, grade);
+        } catch (SQLException cause) {
+            throw StoreErrors.failure(file, "list the values of the lots of grade " + grade, cause);
+        }
+    }
+
+    /**
+     * Notes that a lot's tables are swapped in; a lot without points is forgotten.
+     *
+     * @param lot the lot
+     * @param conclusionFingerprint digest of what they were made with
+     * @param values its values for limits
+     * @param trendFingerprint digest of its trends
+     */
+    public void concluded(
+            LotName lot, String conclusionFingerprint, List<LotRecord.Value> values, String trendFingerprint)
+            throws ArchiveException {
         inTransaction("note that the tables of lot " + lot.lot() + " are written", () -> {
+            LotValues.put(connection, lot, values);
             try (PreparedStatement forget = connection.prepareStatement("""
                             DELETE FROM lot WHERE grade = ?1 AND lot = ?2
                             AND NOT EXISTS (SELECT 1 FROM record WHERE record.grade = ?1 AND record.lot = ?2)""");
                     PreparedStatement done = connection.prepareStatement(
-                            "UPDATE lot SET due = 0, conclusion = ?3 WHERE grade = ?1 AND lot = ?2")) {
+                            "UPDATE lot SET due = 0, conclusion = ?3, trend = ?4 WHERE grade = ?1 AND lot = ?2")) {
                 for (PreparedStatement statement : List.of(forget, done)) {
                     statement.setString(1, lot.grade());
                     statement.setString(2, lot.lot());
                 }
                 done.setString(3, conclusionFingerprint);
+                done.setString(4, trendFingerprint);
                 forget.executeUpdate();
                 done.executeUpdate();
             }

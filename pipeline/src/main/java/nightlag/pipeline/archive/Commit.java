@@ -39,8 +39,8 @@ final class Commit implements AutoCloseable {
                   rows_left_out = excluded.rows_left_out
                 RETURNING id""");
         putRecord = prepare(connection, """
-                INSERT INTO record (file, number, grade, lot, specimen, sweep, point, points, body)
-                VALUES (?, ?, ?, ?, ?, ?, ?, ?, ?)""");
+                INSERT INTO record (file, number, grade, lot, specimen, sweep, point, points, body, made)
+                VALUES (?, ?, ?, ?, ?, ?, ?, ?, ?, ?)""");
         lotDue = prepare(connection, """
                 INSERT INTO lot (grade, lot, due, conclusion) VALUES (?, ?, 1, '')
                 ON CONFLICT (grade, lot) DO UPDATE SET due = 1""");
@@ -124,6 +124,7 @@ final class Commit implements AutoCloseable {
         putRecord.setString(++column, key.point());
         putRecord.setInt(++column, reduction.count());
         putRecord.setString(++column, ReductionJson.write(reduction));
+        putRecord.setString(++column, reduction.made().orElse(""));
         putRecord.executeUpdate();
         lotDue.setString(1, key.grade());
         lotDue.setString(2, key.lot());

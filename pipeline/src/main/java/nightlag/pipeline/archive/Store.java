@@ -16,7 +16,7 @@ final class Store {
     private static final int APPLICATION_ID = 0x6e6c6167;
 
     /** Goes up by one with every change of the tables below or of the JSON in {@code record.body}. */
-    private static final int LAYOUT_VERSION = 1;
+    private static final int LAYOUT_VERSION = 2;
 
     private static final int WAIT_FOR_OTHERS_MS = 30_000;
 
@@ -60,6 +60,23 @@ final class Store {
           due        INTEGER NOT NULL,     -- 1: its tables are behind what stands here
           conclusion TEXT NOT NULL,        -- digest of what its tables were made with
           PRIMARY KEY (grade, lot)
+        )""",
+    };
+
+    /** What layout 2 has more than layout 1; an archive of layout 1 gets it when it is opened. */
+    private static final String[] SINCE_2 = {
+        // the lot's date as the record tags it; empty without one
+        "ALTER TABLE record ADD COLUMN made TEXT NOT NULL DEFAULT ''",
+        "CREATE INDEX record_by_date ON record (grade, lot, made)",
+        // digest of the lot's trends when its tables were written; empty without any
+        "ALTER TABLE lot ADD COLUMN trend TEXT NOT NULL DEFAULT ''",
+        """
+        CREATE TABLE lot_value (
+          grade    TEXT NOT NULL,
+          lot      TEXT NOT NULL,
+          quantity TEXT NOT NULL,          -- what a limit is on, and where
+          number   REAL NOT NULL,          -- the lot's value, in the limit's unit, K for a temperature
+          PRIMARY KEY (grade, lot, quantity)
         )""",
     };
 
@@ -124,7 +141,9 @@ final class Store {
             throw new ArchiveException(
                     Kind.FOREIGN, "the file " + file + " is a SQLite file, but not an archive of this program");
         }
-        if (version != LAYOUT_VERSION) {
+        if (version == 1) {
+            inTransaction(connection, () -> extend(connection));
+        } else if (version != LAYOUT_VERSION) {
             String which = version > LAYOUT_VERSION ? "a newer" : "an older";
             throw new ArchiveException(
                     Kind.OTHER_VERSION,
@@ -139,8 +158,15 @@ final class Store {
                 execute(connection, part);
             }
             execute(connection, "PRAGMA application_id = " + APPLICATION_ID);
-            execute(connection, "PRAGMA user_version = " + LAYOUT_VERSION);
+            extend(connection);
         });
+    }
+
+    private static void extend(Connection connection) throws SQLException {
+        for (String part : SINCE_2) {
+            execute(connection, part);
+        }
+        execute(connection, "PRAGMA user_version = " + LAYOUT_VERSION);
     }
 
     /**

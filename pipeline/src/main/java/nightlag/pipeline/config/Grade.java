@@ -1,6 +1,5 @@
 package nightlag.pipeline.config;
 
-import java.util.List;
 import java.util.Optional;
 import nightlag.stages.ConclusionPlan;
 import nightlag.stages.geometry.GeometrySpec;
@@ -18,7 +17,6 @@ import nightlag.stages.waveform.ExtractionPlan;
  * @param conclusion all else
  * @param reductionFingerprint digest of geometry, extraction and screening
  * @param conclusionFingerprint digest of all else
- * @param notActedOn names of sections that are read and checked but not acted on yet, such as {@code [superposition]}
  */
 public record Grade(
         String name,
@@ -28,10 +26,4 @@ public record Grade(
         ScreeningPlan screening,
         ConclusionPlan conclusion,
         String reductionFingerprint,
-        String conclusionFingerprint,
-        List<String> notActedOn) {
-    /** Copies the list. */
-    public Grade {
-        notActedOn = List.copyOf(notActedOn);
-    }
-}
+        String conclusionFingerprint) {}

@@ -1,6 +1,5 @@
 package nightlag.pipeline.config;
 
-import java.util.ArrayList;
 import java.util.EnumMap;
 import java.util.List;
 import java.util.Map;
@@ -69,8 +68,7 @@ final class GradeReader {
                 screening.get(),
                 conclusion,
                 Fingerprints.of(geometry, extraction.get(), screening.get()),
-                Fingerprints.of(conclusion),
-                notActedOn()));
+                Fingerprints.of(conclusion)));
     }
 
     private static Optional<ExtractionPlan> extraction(SectionReader section) {
@@ -145,16 +143,6 @@ final class GradeReader {
             }
         });
         return uncertainty;
-    }
-
-    private List<String> notActedOn() {
-        List<String> lines = new ArrayList<>();
-        for (Section section : List.of(GradeKeys.LIMIT, GradeKeys.UNCERTAINTY)) {
-            if (file.has(section)) {
-                lines.add(section.heading() + ": read and checked, not acted on yet");
-            }
-        }
-        return lines;
     }
 
     /** The words of the key {@code equilibrium}. */

@@ -81,17 +81,13 @@ final class NightReader {
         return instrumentProblems;
     }
 
-    /** Sections of the night file and of the instrument files in use that nothing is done with yet. */
+    /** Sections of the night file that nothing is done with yet. */
     List<String> notActedOn() {
         List<String> lines = new ArrayList<>();
         if (file.has(NightKeys.TEAM_SHEET)) {
             lines.add("[team_sheet]: read and checked, not acted on yet");
         }
         for (Optional<Instrument> instrument : instruments.values()) {
-            instrument
-                    .filter(found -> !found.uncertainty().isEmpty())
-                    .ifPresent(found -> lines.add(
-                            "[uncertainty] of instrument " + found.id() + ": read and checked, not acted on yet"));
             instrument.flatMap(NightReader::idleOnCreep).ifPresent(lines::add);
         }
         return lines;

@@ -6,9 +6,13 @@ import java.nio.file.InvalidPathException;
 import java.nio.file.Path;
 import java.util.ArrayList;
 import java.util.Comparator;
+import java.util.HashMap;
+import java.util.HashSet;
 import java.util.Iterator;
 import java.util.List;
+import java.util.Map;
 import java.util.Optional;
+import java.util.Set;
 import nightlag.pipeline.archive.ArchiveException;
 import nightlag.pipeline.archive.LotName;
 import nightlag.pipeline.archive.LotState;
@@ -17,6 +21,7 @@ import nightlag.pipeline.config.Grade;
 import nightlag.pipeline.tables.LotTables;
 import nightlag.pipeline.tables.Provenance;
 import nightlag.pipeline.tables.TableInUseException;
+import nightlag.stages.Compare;
 import nightlag.stages.Conclude;
 import nightlag.stages.LotResult;
 import nightlag.stages.Reduction;
@@ -31,9 +36,12 @@ final class LotStage {
     private static final long ROOM_BYTES = 1 << 24;
 
     private final NightWork night;
+    private final GradeTrends trends;
+    private final Set<LotName> seen = new HashSet<>();
 
     LotStage(NightWork night) {
         this.night = night;
+        this.trends = new GradeTrends(night.archive(), night.configuration());
     }
 
     /** A lot with everything it is concluded from. */
@@ -42,18 +50,62 @@ final class LotStage {
     /** What a lot became, or why it became nothing. */
     private record Concluded(Due due, Optional<LotResult> result, String reason) {}
 
-    /** Rebuilds what is due; the lots of a grade that has no right grade file stay due. */
+    /**
+     * Rebuilds what is due; the lots of a grade that has no right grade file stay due. Then the lots that stand among others
+     * than before, as when one came before them late, or changed.
+     */
     void work() throws ArchiveException, IOException, NightFault {
-        List<LotState> due = new ArrayList<>();
-        for (LotState lot : night.archive().lots()) {
-            Grade grade = night.configuration().grades().get(lot.name().grade());
-            if (grade != null && night.options().wants(lot.name()) && isDue(lot, grade)) {
-                due.add(lot);
+        List<LotState> due = wanted();
+        due.removeIf(
+                lot -> !isDue(lot, night.configuration().grades().get(lot.name().grade())));
+        rebuild(inOrder(due));
+        rebuild(inOrder(amongOthers()));
+    }
+
+    /** Lots the command line asks for, of grades that are right. */
+    private List<LotState> wanted() throws ArchiveException {
+        List<LotState> lots = new ArrayList<>(night.archive().lots());
+        lots.removeIf(
+                lot -> !night.configuration().grades().containsKey(lot.name().grade())
+                        || !night.options().wants(lot.name()));
+        return lots;
+    }
+
+    /** Lots whose trends are no longer those in their tables; one that has been rebuilt tonight has its own. */
+    private List<LotState> amongOthers() throws ArchiveException {
+        List<LotState> lots = new ArrayList<>();
+        Map<String, Map<LotName, String>> digests = new HashMap<>();
+        for (LotState lot : wanted()) {
+            String grade = lot.name().grade();
+            if (!digests.containsKey(grade)) {
+                digests.put(grade, trends.digests(grade));
+            }
+            String digest = digests.get(grade).getOrDefault(lot.name(), "");
+            if (!lot.trendFingerprint().equals(digest) && !seen.contains(lot.name())) {
+                lots.add(lot);
             }
         }
-        // a lot that lost its points goes first: where case does not count, one that took its place has the same folder
-        due.sort(Comparator.comparing(lot -> lot.points() > 0));
-        try (SideBySide<Due, Concluded> results = new SideBySide<>(read(due), LotStage::conclude, night.workers())) {
+        return lots;
+    }
+
+    /**
+     * A lot that lost its points goes first: where case does not count, one that took its place has the same folder. The others
+     * in the order in which they are compared, as each needs the values of those before it.
+     */
+    private List<LotState> inOrder(List<LotState> lots) throws ArchiveException {
+        Map<LotName, Integer> places = new HashMap<>();
+        for (LotState lot : lots) {
+            places.put(lot.name(), trends.place(lot.name()));
+        }
+        return lots.stream()
+                .sorted(Comparator.comparing((LotState lot) -> lot.points() > 0)
+                        .thenComparing(lot -> lot.name().grade())
+                        .thenComparing(lot -> places.get(lot.name())))
+                .toList();
+    }
+
+    private void rebuild(List<LotState> lots) throws ArchiveException, IOException, NightFault {
+        try (SideBySide<Due, Concluded> results = new SideBySide<>(read(lots), LotStage::conclude, night.workers())) {
             while (results.hasNext()) {
                 publish(results.next());
             }
@@ -109,12 +161,13 @@ final class LotStage {
 
     private void publish(Concluded concluded) throws ArchiveException, IOException, NightFault {
         LotName lot = concluded.due().lot();
+        seen.add(lot);
         if (concluded.result().isEmpty()) {
             night.tally().notConcluded(lot, concluded.reason());
             return;
         }
         Grade grade = concluded.due().grade();
-        LotResult result = concluded.result().get();
+        LotResult result = trends.compared(lot, concluded.result().get());
         try {
             LotTables.write(night.configuration().results(), result, provenance(lot, grade));
         } catch (TableInUseException e) {
@@ -136,7 +189,8 @@ final class LotStage {
                             .formatted(lot.grade(), lot.lot(), IoSentences.of(e)),
                     e);
         }
-        night.archive().concluded(lot, conclusionState(grade));
+        night.archive()
+                .concluded(lot, conclusionState(grade), Compare.values(result), GradeTrends.digest(result.trend()));
         night.tally().concluded(lot, result);
         night.report().lot(lot.grade(), lot.lot(), result);
     }

@@ -6,6 +6,7 @@ import java.util.Arrays;
 import java.util.Collections;
 import java.util.List;
 import java.util.Map;
+import java.util.Optional;
 import java.util.TreeMap;
 import java.util.stream.Collectors;
 import nightlag.pipeline.archive.LotName;
@@ -31,6 +32,9 @@ import nightlag.stages.moduli.Quality;
  * @param flags how often each flag was raised on them
  * @param rows rows read this night
  * @param rowsLeftOut rows among them left out: an empty cell, or outside the windows of a long record
+ * @param verdicts how many of each verdict the lots rebuilt got; empty where none has a limit
+ * @param notConforming all verdicts but conforming ones, the worst first
+ * @param unusual lots outside of what was usual in their grade before
  */
 public record NightOutcome(
         Path folder,
@@ -44,7 +48,10 @@ public record NightOutcome(
         List<String> notSound,
         Map<Flag, Integer> flags,
         long rows,
-        long rowsLeftOut) {
+        long rowsLeftOut,
+        Optional<String> verdicts,
+        List<String> notConforming,
+        List<String> unusual) {
     /** Copies the collections; the maps keep their order. */
     public NightOutcome {
         files = List.copyOf(files);
@@ -56,9 +63,14 @@ public record NightOutcome(
         quality = Collections.unmodifiableMap(new TreeMap<>(quality));
         notSound = List.copyOf(notSound);
         flags = Collections.unmodifiableMap(new TreeMap<>(flags));
+        notConforming = List.copyOf(notConforming);
+        unusual = List.copyOf(unusual);
     }
 
-    /** Whether all went well; files that wait, and files set aside before, do not count against it. */
+    /**
+     * Whether all went well; files that wait, and files set aside before, do not count against it, and no verdict does: a lot
+     * that does not conform is what the night is there to find.
+     */
     public boolean allWell() {
         return newlySetAside.isEmpty() && unreadableIntakes.isEmpty() && lotsNotConcluded.isEmpty();
     }
@@ -94,6 +106,7 @@ public record NightOutcome(
                             .collect(Collectors.joining(", ")));
         }
         lines.add("lots    " + lotsConcluded.size() + " rebuilt");
+        verdicts.ifPresent(counted -> lines.add("limits  " + counted));
         return lines;
     }
 
@@ -110,6 +123,8 @@ public record NightOutcome(
                         lotsNotConcluded.entrySet().stream()
                                 .map(lot -> named(lot.getKey()) + ": " + lot.getValue())
                                 .toList()),
+                new Concern("look at: lots against their limits", notConforming),
+                new Concern("look at: lots unlike the earlier ones of their grade", unusual),
                 new Concern("still set aside from an earlier night", stillSetAside),
                 new Concern("could not be had", notes),
                 new Concern(

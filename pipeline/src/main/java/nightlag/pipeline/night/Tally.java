@@ -45,6 +45,7 @@ final class Tally {
     private final Map<Flag, Integer> flags = new EnumMap<>(Flag.class);
     private final Set<String> reducedTonight = new HashSet<>();
     private final Map<Quality, List<String>> notSound = new EnumMap<>(Quality.class);
+    private final VerdictCount verdicts = new VerdictCount();
     private long rows;
     private long rowsLeftOut;
 
@@ -124,6 +125,7 @@ final class Tally {
         LOG.info("{} lot {}: tables rebuilt", lot.grade(), lot.lot());
         notes.forEach(note -> LOG.info("{} lot {}: {}", lot.grade(), lot.lot(), note));
         result.absent().forEach(why -> LOG.info("{} lot {}: {}", lot.grade(), lot.lot(), why.sentence()));
+        verdicts.add(lot.grade() + " lot " + lot.lot(), result).forEach(LOG::info);
         for (ModulusPoint point : result.points()) {
             if (reducedTonight.contains(point.key().sourceFile())) {
                 quality.merge(point.quality(), 1, Integer::sum);
@@ -174,6 +176,9 @@ final class Tally {
                 worstFirst,
                 flags,
                 rows,
-                rowsLeftOut);
+                rowsLeftOut,
+                verdicts.line(),
+                verdicts.notConforming(),
+                verdicts.unusual());
     }
 }

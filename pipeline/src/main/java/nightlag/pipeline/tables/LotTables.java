@@ -43,7 +43,9 @@ public final class LotTables {
                             .map(at -> new ResponseTable.Row(from.grade(), from.lot(), at))
                             .toList()),
             new LotTable<>(DerivedTable.TABLE, (result, from) -> result.derived()),
-            new LotTable<>(CreepTable.TABLE, (result, from) -> CreepTable.rows(result.creep())));
+            new LotTable<>(CreepTable.TABLE, (result, from) -> CreepTable.rows(result.creep())),
+            new LotTable<>(
+                    AcceptanceTable.TABLE, (result, from) -> AcceptanceTable.rows(result, from.grade(), from.lot())));
 
     private LotTables() {}
 

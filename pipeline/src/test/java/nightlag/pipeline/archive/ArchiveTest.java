@@ -40,7 +40,7 @@ class ArchiveTest {
             assertThat(archive.files()).containsExactly(outcome.file());
             assertThat(archive.filesOf(SEVENTEEN)).containsExactly(outcome.file());
             assertThat(archive.reductions(SEVENTEEN)).isEqualTo(outcome.reductions());
-            assertThat(archive.lots()).containsExactly(new LotState(SEVENTEEN, true, "", 3));
+            assertThat(archive.lots()).containsExactly(new LotState(SEVENTEEN, true, "", 3, ""));
         }
     }
 
@@ -60,7 +60,7 @@ class ArchiveTest {
     void openingAndReadingTouchesNothing() throws ArchiveException, IOException {
         try (Archive archive = open()) {
             archive.commit(List.of(reduced("a.csv", SEVENTEEN, 3), setAside("bad.csv", "empty")));
-            archive.concluded(SEVENTEEN, "c1");
+            archive.concluded(SEVENTEEN, "c1", List.of(), "");
         }
         FileTime longAgo = FileTime.fromMillis(1_000_000_000_000L);
         Files.setLastModifiedTime(archiveFile(), longAgo);
@@ -87,7 +87,7 @@ class ArchiveTest {
     void aChangedFileReplacesItsPointsAndBothLotsAreDue() throws ArchiveException {
         try (Archive archive = open()) {
             archive.commit(List.of(reduced("a.csv", SEVENTEEN, 3), reduced("b.csv", SEVENTEEN, 2)));
-            archive.concluded(SEVENTEEN, "c1");
+            archive.concluded(SEVENTEEN, "c1", List.of(), "");
 
             FileOutcome changed = reduced("a.csv", EIGHTEEN, 4);
             archive.commit(List.of(changed));
@@ -95,7 +95,8 @@ class ArchiveTest {
             assertThat(archive.reductions(EIGHTEEN)).isEqualTo(changed.reductions());
             assertThat(archive.reductions(SEVENTEEN)).hasSize(2);
             assertThat(archive.lots())
-                    .containsExactly(new LotState(SEVENTEEN, true, "c1", 2), new LotState(EIGHTEEN, true, "", 4));
+                    .containsExactly(
+                            new LotState(SEVENTEEN, true, "c1", 2, ""), new LotState(EIGHTEEN, true, "", 4, ""));
         }
     }
 
@@ -103,13 +104,13 @@ class ArchiveTest {
     void aFileThatFailsAfterAChangeTakesItsOldPointsOut() throws ArchiveException {
         try (Archive archive = open()) {
             archive.commit(List.of(reduced("a.csv", SEVENTEEN, 3)));
-            archive.concluded(SEVENTEEN, "c1");
+            archive.concluded(SEVENTEEN, "c1", List.of(), "");
 
             archive.commit(List.of(setAside("a.csv", "truncated")));
 
             assertThat(archive.reductions(SEVENTEEN)).isEmpty();
             assertThat(archive.filesOf(SEVENTEEN)).isEmpty();
-            assertThat(archive.lots()).containsExactly(new LotState(SEVENTEEN, true, "c1", 0));
+            assertThat(archive.lots()).containsExactly(new LotState(SEVENTEEN, true, "c1", 0, ""));
         }
     }
 
@@ -117,7 +118,7 @@ class ArchiveTest {
     void theSameContentAtANewPathTakesThePlaceOfAVanishedFile() throws ArchiveException {
         try (Archive archive = open()) {
             archive.commit(List.of(reduced("old/a.csv", SEVENTEEN, 3)));
-            archive.concluded(SEVENTEEN, "c1");
+            archive.concluded(SEVENTEEN, "c1", List.of(), "");
 
             FileOutcome moved = reduced("new/a.csv", EIGHTEEN, 3);
             archive.commit(
@@ -133,11 +134,11 @@ class ArchiveTest {
     void aConcludedLotIsNoLongerDueAndALotWithoutPointsIsForgotten() throws ArchiveException {
         try (Archive archive = open()) {
             archive.commit(List.of(reduced("a.csv", SEVENTEEN, 3)));
-            archive.concluded(SEVENTEEN, "c1");
-            assertThat(archive.lots()).containsExactly(new LotState(SEVENTEEN, false, "c1", 3));
+            archive.concluded(SEVENTEEN, "c1", List.of(), "");
+            assertThat(archive.lots()).containsExactly(new LotState(SEVENTEEN, false, "c1", 3, ""));
 
             archive.commit(List.of(setAside("a.csv", "truncated")));
-            archive.concluded(SEVENTEEN, "c2");
+            archive.concluded(SEVENTEEN, "c2", List.of(), "");
             assertThat(archive.lots()).isEmpty();
         }
     }
@@ -163,13 +164,13 @@ class ArchiveTest {
                 0);
         try (Archive archive = open()) {
             archive.commit(List.of(outcome));
-            archive.concluded(SEVENTEEN, "c1");
+            archive.concluded(SEVENTEEN, "c1", List.of(), "");
 
             archive.amend(List.of(stopped));
 
             assertThat(archive.files()).containsExactly(stopped);
             assertThat(archive.reductions(SEVENTEEN)).isEqualTo(outcome.reductions());
-            assertThat(archive.lots()).containsExactly(new LotState(SEVENTEEN, false, "c1", 3));
+            assertThat(archive.lots()).containsExactly(new LotState(SEVENTEEN, false, "c1", 3, ""));
         }
     }
 
@@ -202,7 +203,7 @@ class ArchiveTest {
                 identity("z.csv"), "z.csv", "bench", 1, 1, null, "", FileStatus.REDUCED, "", 0, "", "", "", 0, 0);
         try (Archive archive = open()) {
             archive.commit(List.of(reduced("a.csv", SEVENTEEN, 3)));
-            archive.concluded(SEVENTEEN, "c1");
+            archive.concluded(SEVENTEEN, "c1", List.of(), "");
 
             assertThatThrownBy(() -> archive.commit(List.of(
                             new FileOutcome(good, List.of(), Optional.of(identity("a.csv"))),
@@ -211,7 +212,7 @@ class ArchiveTest {
                     .hasMessageContaining("cannot keep what was reduced");
 
             assertThat(archive.files()).extracting(ArchivedFile::tableName).containsExactly("bench/a.csv");
-            assertThat(archive.lots()).containsExactly(new LotState(SEVENTEEN, false, "c1", 3));
+            assertThat(archive.lots()).containsExactly(new LotState(SEVENTEEN, false, "c1", 3, ""));
             archive.commit(List.of(reduced("c.csv", SEVENTEEN, 1)));
             assertThat(archive.files()).hasSize(2);
         }

@@ -60,10 +60,7 @@ class AcceptedConfigurationTest {
                         intake -> intake.name() + " by " + intake.instrument().id())
                 .containsExactly("bench by bench", "bench by bench-moduli", "frame by frame");
         assertThat(configuration.gradeProblems()).isEmpty();
-        assertThat(configuration.notActedOn())
-                .containsExactly(
-                        "[team_sheet]: read and checked, not acted on yet",
-                        "[uncertainty] of instrument bench: read and checked, not acted on yet");
+        assertThat(configuration.notActedOn()).containsExactly("[team_sheet]: read and checked, not acted on yet");
     }
 
     @Test
@@ -99,7 +96,6 @@ class AcceptedConfigurationTest {
         assertThat(plover.conclusion().sweeps()).isEqualTo(SweepPlan.withDefaults());
         assertThat(plover.conclusion().spectrum()).isEmpty();
         assertThat(plover.conclusion().superposition()).isEmpty();
-        assertThat(plover.notActedOn()).isEmpty();
     }
 
     @Test

@@ -35,8 +35,7 @@ public final class Acceptance {
      * @param moved the lot as each influence that many records share would have it
      * @return a judgement for each limit, in their order
      */
-    public static List<Judgement> of(
-            List<LimitPlan> limits, OwnFigures own, Lot lot, List<Lot.Moved> moved) {
+    public static List<Judgement> of(List<LimitPlan> limits, OwnFigures own, Lot lot, List<Lot.Moved> moved) {
         Acceptance acceptance = new Acceptance(own, lot, moved);
         return limits.stream().map(acceptance::judge).toList();
     }
@@ -70,8 +69,7 @@ public final class Acceptance {
 
     private static Judgement judged(LimitPlan limit, Estimate estimate) {
         if (!Double.isFinite(estimate.value())) {
-            return missing(
-                    limit, AcceptanceReason.ACCEPTANCE_NOT_FINITE.with().sentence());
+            return missing(limit, AcceptanceReason.ACCEPTANCE_NOT_FINITE.with().sentence());
         }
         List<String> notes = new ArrayList<>(estimate.notes());
         if (estimate.u().isEmpty() && limit.coverage() > 0) {

@@ -38,16 +38,9 @@ record Chord(Node from, Node to, double y, double variance, double slope, boolea
             bend = Math.max(bend, bend(from, to, rising.get(i + 2)));
         }
         double departure = bend * (x - from.x()) * (to.x() - x);
-        double variance = Node.square(1 - part) * from.variance()
-                + Node.square(part) * to.variance()
-                + Node.square(departure);
-        return new Chord(
-                from,
-                to,
-                from.y() + slope * (x - from.x()),
-                variance,
-                slope,
-                rising.size() > 2);
+        double variance =
+                Node.square(1 - part) * from.variance() + Node.square(part) * to.variance() + Node.square(departure);
+        return new Chord(from, to, from.y() + slope * (x - from.x()), variance, slope, rising.size() > 2);
     }
 
     /** Size of the second divided difference. */

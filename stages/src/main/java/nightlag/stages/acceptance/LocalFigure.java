@@ -92,7 +92,8 @@ final class LocalFigure {
         double offK = temperatureK - atTemperature.x();
         double offLnFrequency = lnFrequency - atFrequency.x();
         if (perKelvin.isEmpty() && Math.abs(offK) > NOTED_K) {
-            notes.add("measured at " + celsius(atTemperature.x()) + " and not moved, as no other temperature tells how");
+            notes.add(
+                    "measured at " + celsius(atTemperature.x()) + " and not moved, as no other temperature tells how");
         }
         if (perLnFrequency.isEmpty() && Math.abs(offLnFrequency) > NOTED_LN_FREQUENCY) {
             notes.add("measured at " + hertz(atFrequency.x()) + " and not moved, as no other frequency tells how");
@@ -111,8 +112,7 @@ final class LocalFigure {
 
     /** The figure at this frequency on the isotherms that none of these readings is on. */
     private List<Node> otherIsotherms(List<Reading> here, Scale scale) {
-        List<Double> own =
-                here.stream().map(Reading::isothermK).distinct().toList();
+        List<Double> own = here.stream().map(Reading::isothermK).distinct().toList();
         return isotherms().entrySet().stream()
                 .filter(isotherm -> !own.contains(isotherm.getKey()))
                 .flatMap(isotherm -> level(isotherm.getKey(), isotherm.getValue(), scale).stream())
@@ -121,8 +121,7 @@ final class LocalFigure {
     }
 
     private Map<Double, List<Reading>> isotherms() {
-        return readings.stream()
-                .collect(Collectors.groupingBy(Reading::isothermK, TreeMap::new, Collectors.toList()));
+        return readings.stream().collect(Collectors.groupingBy(Reading::isothermK, TreeMap::new, Collectors.toList()));
     }
 
     /** The figure at this frequency on an isotherm, over its temperature; with the line it comes from if it was interpolated. */
@@ -168,7 +167,9 @@ final class LocalFigure {
             return Optional.empty();
         }
         List<Level> levels = new ArrayList<>();
-        isotherms().forEach((isothermK, isotherm) -> level(isothermK, isotherm, scale).ifPresent(levels::add));
+        isotherms()
+                .forEach((isothermK, isotherm) ->
+                        level(isothermK, isotherm, scale).ifPresent(levels::add));
         List<Node> nodes = levels.stream().map(Level::node).toList();
         Optional<Level> own = levels.stream()
                 .filter(level -> Math.abs(level.node().x() - temperatureK) <= SAME_K)
@@ -182,8 +183,8 @@ final class LocalFigure {
     private Found withinIsotherm(Level level, List<Node> nodes, Scale scale) {
         List<String> notes = new ArrayList<>();
         level.over().ifPresent(chord -> {
-            notes.add("interpolated over frequency between " + hertz(chord.from().x()) + " and "
-                    + hertz(chord.to().x()));
+            notes.add("interpolated over frequency between "
+                    + hertz(chord.from().x()) + " and " + hertz(chord.to().x()));
             straight(chord, notes);
         });
         Node node = level.node();
@@ -200,11 +201,12 @@ final class LocalFigure {
 
     private Found betweenIsotherms(Chord chord, List<Level> levels, Scale scale) {
         List<String> notes = new ArrayList<>();
-        notes.add("interpolated between the isotherms at " + celsius(chord.from().x()) + " and "
-                + celsius(chord.to().x()));
+        notes.add("interpolated between the isotherms at "
+                + celsius(chord.from().x()) + " and " + celsius(chord.to().x()));
         straight(chord, notes);
         boolean alsoOverFrequency = levels.stream()
-                .filter(level -> level.node().equals(chord.from()) || level.node().equals(chord.to()))
+                .filter(level ->
+                        level.node().equals(chord.from()) || level.node().equals(chord.to()))
                 .anyMatch(level -> level.over().isPresent());
         if (alsoOverFrequency) {
             notes.add("and within them over frequency");

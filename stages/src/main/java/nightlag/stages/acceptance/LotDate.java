@@ -17,8 +17,8 @@ import java.util.regex.Pattern;
 public final class LotDate {
     private static final Pattern DATE_THEN_TIME = Pattern.compile("(\\S+?)(?:[T\\s].*)?");
 
-    private static final List<DateTimeFormatter> FORMS = List.of(
-            form("uuuu-M-d"), form("uuuu/M/d"), form("uuuuMMdd"), form("d.M.uuuu"));
+    private static final List<DateTimeFormatter> FORMS =
+            List.of(form("uuuu-M-d"), form("uuuu/M/d"), form("uuuuMMdd"), form("d.M.uuuu"));
 
     private LotDate() {}
 

@@ -1,7 +1,10 @@
 package nightlag.stages.acceptance;
 
+import java.util.Collection;
+import java.util.Comparator;
 import java.util.List;
 import java.util.Optional;
+import nightlag.stages.sweep.NaturalOrder;
 
 /**
  * What is remembered of a lot to compare others with.
@@ -14,6 +17,24 @@ public record LotRecord(String lot, Optional<String> made, List<Value> values) {
     /** Copies the list. */
     public LotRecord {
         values = List.copyOf(values);
+    }
+
+    /**
+     * A lot whose records may be tagged with several dates: the earliest that can be read as one counts, else the first of the
+     * texts in their order.
+     */
+    public static LotRecord of(String lot, Collection<String> dates, List<Value> values) {
+        Optional<String> made = dates.stream()
+                .filter(text -> LotDate.of(text).isPresent())
+                .min(Comparator.comparing((String text) -> LotDate.of(text).orElseThrow())
+                        .thenComparing(Comparator.naturalOrder()))
+                .or(() -> dates.stream().min(NaturalOrder::compare));
+        return new LotRecord(lot, made, values);
+    }
+
+    /** The same lot with other values. */
+    public LotRecord with(List<Value> others) {
+        return new LotRecord(lot, made, others);
     }
 
     /**

@@ -56,9 +56,7 @@ final class MarkerLimits {
         if (all.isEmpty()) {
             return new Outcome(
                     List.of(),
-                    AcceptanceReason.ACCEPTANCE_NO_MARKER
-                            .with(limit.property())
-                            .sentence());
+                    AcceptanceReason.ACCEPTANCE_NO_MARKER.with(limit.property()).sentence());
         }
         List<Marker> there = all.stream().filter(this::isThere).toList();
         if (there.isEmpty()) {
@@ -96,14 +94,9 @@ final class MarkerLimits {
         Set<SweepName> sweeps = new HashSet<>();
         return markers.stream()
                 .allMatch(marker -> sweeps.add(new SweepName(marker.specimen(), marker.sweep()))
-                        && (temperatureFound
-                                || alike(marker, first, Marker::temperatureK, LocalFigure.SAME_K))
+                        && (temperatureFound || alike(marker, first, Marker::temperatureK, LocalFigure.SAME_K))
                         && (frequencyFound
-                                || alike(
-                                        marker,
-                                        first,
-                                        one -> ln(one.frequencyHz()),
-                                        LocalFigure.SAME_LN_FREQUENCY)));
+                                || alike(marker, first, one -> ln(one.frequencyHz()), LocalFigure.SAME_LN_FREQUENCY)));
     }
 
     private static boolean alike(Marker one, Marker other, Function<Marker, OptionalDouble> place, double within) {
@@ -113,9 +106,7 @@ final class MarkerLimits {
     }
 
     private static boolean near(OptionalDouble one, OptionalDouble other, double within) {
-        return one.isPresent()
-                && other.isPresent()
-                && Math.abs(one.getAsDouble() - other.getAsDouble()) <= within;
+        return one.isPresent() && other.isPresent() && Math.abs(one.getAsDouble() - other.getAsDouble()) <= within;
     }
 
     private static OptionalDouble ln(OptionalDouble value) {
@@ -159,8 +150,8 @@ final class MarkerLimits {
 
     /** Of the same sweep the one at the same place of their order; where their number changed there is no telling. */
     private static Optional<Marker> counterpart(Marker marker, List<Marker> before, List<Marker> after) {
-        Predicate<Marker> ofTheSame =
-                other -> other.specimen().equals(marker.specimen()) && other.sweep().equals(marker.sweep());
+        Predicate<Marker> ofTheSame = other ->
+                other.specimen().equals(marker.specimen()) && other.sweep().equals(marker.sweep());
         List<Marker> own = before.stream().filter(ofTheSame).toList();
         List<Marker> others = after.stream().filter(ofTheSame).toList();
         return own.size() == others.size() ? Optional.of(others.get(own.indexOf(marker))) : Optional.empty();

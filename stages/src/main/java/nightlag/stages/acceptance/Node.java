@@ -19,8 +19,7 @@ record Node(double x, double y, double variance, int points, int doubtful) {
     private static final double SQRT_3 = Math.sqrt(3);
 
     /** Readings as nodes along an axis, rising; those no farther apart than {@code same} are one. */
-    static List<Node> along(
-            List<Reading> readings, ToDoubleFunction<Reading> axis, double same, Scale scale) {
+    static List<Node> along(List<Reading> readings, ToDoubleFunction<Reading> axis, double same, Scale scale) {
         List<Reading> rising = readings.stream()
                 .filter(scale::has)
                 .sorted(Comparator.comparingDouble(axis))
@@ -67,9 +66,8 @@ record Node(double x, double y, double variance, int points, int doubtful) {
      * sign and size. Empty without a neighbour.
      */
     Optional<Slope> slope(List<Node> rising, double apart) {
-        Optional<Node> below = rising.stream()
-                .filter(node -> node.x < x - apart)
-                .reduce((first, second) -> second);
+        Optional<Node> below =
+                rising.stream().filter(node -> node.x < x - apart).reduce((first, second) -> second);
         Optional<Node> above =
                 rising.stream().filter(node -> node.x > x + apart).findFirst();
         if (below.isPresent() && above.isPresent()) {
@@ -81,8 +79,8 @@ record Node(double x, double y, double variance, int points, int doubtful) {
                     + square(down / (up * (down + up))) * known(above.get())
                     + square(up / down - down / up) / square(down + up) * known(this);
             double curvature = (right - left) / (2 * SQRT_3);
-            return Optional.of(new Slope(
-                    (left * up + right * down) / (down + up), Math.sqrt(noise + square(curvature))));
+            return Optional.of(
+                    new Slope((left * up + right * down) / (down + up), Math.sqrt(noise + square(curvature))));
         }
         return below.or(() -> above).map(other -> {
             double run = other.x - x;

@@ -58,18 +58,21 @@ final class PointLimits {
         SharedPart shared = new SharedPart();
         for (Lot.Moved one : moved) {
             if (one.kelvin().isPresent()) {
-                shared.add(one.influence(), times(found.get().perKelvin(), one.kelvin().getAsDouble()));
+                shared.add(
+                        one.influence(),
+                        times(found.get().perKelvin(), one.kelvin().getAsDouble()));
             } else {
                 Optional<LocalFigure.Found> there = found(one.lot());
                 shared.add(
                         one.influence(),
                         there.isPresent()
-                                ? OptionalDouble.of(there.get().value() - found.get().value())
+                                ? OptionalDouble.of(
+                                        there.get().value() - found.get().value())
                                 : OptionalDouble.empty());
             }
         }
-        return Outcome.of(
-                shared.with(found.get().value() + offset, found.get().u(), found.get().notes()));
+        return Outcome.of(shared.with(
+                found.get().value() + offset, found.get().u(), found.get().notes()));
     }
 
     private static OptionalDouble times(OptionalDouble value, double factor) {

@@ -40,6 +40,8 @@ record Pooled(double mean, OptionalDouble u, double[] weights) {
         double variance = Double.isNaN(own) ? scatter : Double.isNaN(scatter) ? own : Math.max(own, scatter);
         Arrays.setAll(weights, i -> weights[i] / total);
         return new Pooled(
-                mean, Double.isNaN(variance) ? OptionalDouble.empty() : OptionalDouble.of(Math.sqrt(variance)), weights);
+                mean,
+                Double.isNaN(variance) ? OptionalDouble.empty() : OptionalDouble.of(Math.sqrt(variance)),
+                weights);
     }
 }

@@ -38,7 +38,8 @@ public record Trend(
     /** In words; it begins with {@code trend}. */
     public String note() {
         String where = verdict() == Verdict.CONFORMING ? "among" : value > upper ? "above" : "below";
-        String unit = limit.shown().symbol().equals("1") ? "" : " " + limit.shown().symbol();
+        String unit =
+                limit.shown().symbol().equals("1") ? "" : " " + limit.shown().symbol();
         return String.format(
                 Locale.ROOT,
                 "trend: %s its %d earlier lots; mean %s%s, control limits 2.66 mean moving ranges about it",

@@ -129,7 +129,8 @@ public record ModulusPoint(
 
     /** The same point, known to move with these. */
     public ModulusPoint sharing(SharedInfluences influences) {
-        return placed(temperatureK, taggedTemperatureK, strainAmplitude, stressAmplitudePa, moduli, Optional.of(influences));
+        return placed(
+                temperatureK, taggedTemperatureK, strainAmplitude, stressAmplitudePa, moduli, Optional.of(influences));
     }
 
     /** The same point if what it shares with others were off by this. */
