@@ -94,33 +94,28 @@ final class SharedByRecords {
 
     /** Per unit of the step; from one side where the other is no geometry, as a bar thicker than wide. */
     private static Optional<SharedEffect> slope(Changed changed, double step) {
-        try {
-            Amplitudes here = changed.by(0);
-            Amplitudes above = orElse(changed, step, here);
-            Amplitudes below = orElse(changed, -step, here);
-            double run = (above == here ? 0 : step) + (below == here ? 0 : step);
-            if (run == 0) {
-                return Optional.empty();
-            }
-            Complex ratio = above.modulus().over(below.modulus());
-            SharedEffect effect = new SharedEffect(
-                    Math.log(ratio.abs()) / run,
-                    ratio.argument() / run,
-                    Math.log(above.strain() / below.strain()) / run);
-            return Double.isFinite(effect.lnModulus() + effect.phaseRad() + effect.lnStrain())
-                    ? Optional.of(effect)
-                    : Optional.empty();
-        } catch (ReductionFault noPoint) {
-            // the point itself has the reason
+        Optional<Amplitudes> here = tried(changed, 0);
+        Optional<Amplitudes> above = tried(changed, step);
+        Optional<Amplitudes> below = tried(changed, -step);
+        double run = (above.isPresent() ? step : 0) + (below.isPresent() ? step : 0);
+        if (here.isEmpty() || run == 0) {
             return Optional.empty();
         }
+        Amplitudes from = below.orElse(here.get());
+        Amplitudes to = above.orElse(here.get());
+        Complex ratio = to.modulus().over(from.modulus());
+        SharedEffect effect = new SharedEffect(
+                Math.log(ratio.abs()) / run, ratio.argument() / run, Math.log(to.strain() / from.strain()) / run);
+        return Double.isFinite(effect.lnModulus() + effect.phaseRad() + effect.lnStrain())
+                ? Optional.of(effect)
+                : Optional.empty();
     }
 
-    private static Amplitudes orElse(Changed changed, double step, Amplitudes here) {
+    private static Optional<Amplitudes> tried(Changed changed, double step) {
         try {
-            return changed.by(step);
-        } catch (ReductionFault beyondAnEdge) {
-            return here;
+            return Optional.of(changed.by(step));
+        } catch (ReductionFault noGeometry) {
+            return Optional.empty();
         }
     }
 

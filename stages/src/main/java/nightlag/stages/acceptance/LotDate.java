@@ -32,13 +32,16 @@ public final class LotDate {
         if (!matcher.matches()) {
             return Optional.empty();
         }
-        for (DateTimeFormatter form : FORMS) {
-            try {
-                return Optional.of(LocalDate.parse(matcher.group(1), form));
-            } catch (DateTimeParseException anotherForm) {
-                continue;
-            }
+        return FORMS.stream()
+                .flatMap(form -> parsed(matcher.group(1), form).stream())
+                .findFirst();
+    }
+
+    private static Optional<LocalDate> parsed(String text, DateTimeFormatter form) {
+        try {
+            return Optional.of(LocalDate.parse(text, form));
+        } catch (DateTimeParseException ofAnotherForm) {
+            return Optional.empty();
         }
-        return Optional.empty();
     }
 }

@@ -102,7 +102,7 @@ final class MarkerLimits {
     private static boolean alike(Marker one, Marker other, Function<Marker, OptionalDouble> place, double within) {
         OptionalDouble here = place.apply(one);
         OptionalDouble there = place.apply(other);
-        return here.isEmpty() && there.isEmpty() || near(here, there, within);
+        return (here.isEmpty() && there.isEmpty()) || near(here, there, within);
     }
 
     private static boolean near(OptionalDouble one, OptionalDouble other, double within) {

@@ -3,7 +3,6 @@ package nightlag.stages.acceptance;
 import java.util.ArrayList;
 import java.util.IdentityHashMap;
 import java.util.List;
-import java.util.Map;
 import java.util.Optional;
 import java.util.OptionalDouble;
 import nightlag.stages.fault.Reason;
@@ -103,7 +102,7 @@ final class PointLimits {
                         && point.temperatureK().isPresent()
                         && point.frequencyHz().isPresent())
                 .toList();
-        Map<ModulusPoint, Double> isotherms = new IdentityHashMap<>();
+        IdentityHashMap<ModulusPoint, Double> isotherms = new IdentityHashMap<>();
         for (Isotherm isotherm : Isotherms.group(placed)) {
             isotherm.points().forEach(point -> isotherms.put(point, isotherm.temperatureK()));
         }
