@@ -5,6 +5,7 @@ import java.time.Duration;
 import java.util.List;
 import java.util.Map;
 import java.util.Optional;
+import java.util.OptionalInt;
 
 /**
  * A night's whole configuration: night and instrument files are right, grade files may be wrong.
@@ -15,6 +16,7 @@ import java.util.Optional;
  * @param settle a file changed less than this ago waits
  * @param intakes the folders raw files come in by, in the order of the night file
  * @param teamSheet the team's spreadsheet
+ * @param keepNights how many folders of nights are kept; empty: all
  * @param grades right grades by name
  * @param wrongGrades problems of wrong grade files, by the grade's name
  * @param gradeProblems every problem of every grade file, those whose grade is not even known included, in file order
@@ -27,6 +29,7 @@ public record Configuration(
         Duration settle,
         List<Intake> intakes,
         Optional<TeamSheet> teamSheet,
+        OptionalInt keepNights,
         Map<String, Grade> grades,
         Map<String, List<Problem>> wrongGrades,
         List<Problem> gradeProblems,

@@ -40,6 +40,7 @@ public final class ConfigurationReader {
                 Duration.ofNanos(Math.round(night.settleS().orElseThrow() * 1e9)),
                 night.intakes(),
                 night.teamSheet(),
+                night.keepNights(),
                 grades.right(),
                 grades.wrong(),
                 grades.problems(),

@@ -9,6 +9,7 @@ import nightlag.pipeline.config.KeyType.Whole;
 /** The keys of the night file. */
 final class NightKeys {
     private static final int MOST_WORKERS = 1024;
+    private static final int MOST_NIGHTS = 1_000_000;
 
     static final Key RESULTS =
             Key.required("results", new Shape("path of a folder"), "Everything a run writes goes below this folder.");
@@ -26,8 +27,13 @@ final class NightKeys {
             "\"0 s\"",
             "A file changed less than this ago waits for the next run. `\"60 s\"` suits a shared PC. "
                     + "A modified time in the future counts as settled.");
+    static final Key KEEP_NIGHTS = Key.optional(
+            "keep_nights",
+            new Whole(1, MOST_NIGHTS),
+            "How many folders of nights are kept, the newest ones; without it all. A run that ends takes older ones away, but "
+                    + "never one in which there is anything it did not put there.");
     static final Section TOP =
-            new Section("", "Where things are.", List.of(RESULTS, GRADES, INSTRUMENTS, WORKERS, SETTLE));
+            new Section("", "Where things are.", List.of(RESULTS, GRADES, INSTRUMENTS, WORKERS, SETTLE, KEEP_NIGHTS));
 
     static final Key FOLDER = Key.required(
             "folder", new Shape("path of a folder"), "The folder the instrument writes to; it is only read.");

@@ -53,6 +53,7 @@ final class NightReader {
      * @param settleS s
      * @param intakes intakes whose instrument is right
      * @param teamSheet the team's spreadsheet
+     * @param keepNights how many folders of nights are kept
      */
     record Night(
             Optional<Path> results,
@@ -60,7 +61,8 @@ final class NightReader {
             OptionalInt workers,
             OptionalDouble settleS,
             List<Intake> intakes,
-            Optional<TeamSheet> teamSheet) {}
+            Optional<TeamSheet> teamSheet,
+            OptionalInt keepNights) {}
 
     Night read() {
         SectionReader top = file.top();
@@ -74,7 +76,8 @@ final class NightReader {
                         path -> top.wrong(NightKeys.RESULTS, "this is a file", "a folder, which need not exist yet"));
         List<Intake> intakes = intakes(instrumentFolder, results);
         Optional<TeamSheet> teamSheet = file.optional(NightKeys.TEAM_SHEET).flatMap(this::teamSheet);
-        return new Night(results, grades, workers, settle, intakes, teamSheet);
+        OptionalInt keepNights = top.whole(NightKeys.KEEP_NIGHTS);
+        return new Night(results, grades, workers, settle, intakes, teamSheet, keepNights);
     }
 
     List<Problem> instrumentProblems() {

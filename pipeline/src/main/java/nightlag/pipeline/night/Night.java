@@ -109,6 +109,9 @@ public final class Night {
                 "{} files; {} lots rebuilt",
                 outcome.files().size(),
                 outcome.lotsConcluded().size());
+        configuration
+                .keepNights()
+                .ifPresent(keep -> OldNights.remove(NightFolder.nights(configuration.results()), folder, keep));
         return outcome;
     }
 
@@ -120,7 +123,7 @@ public final class Night {
                 .flatMap(lot -> entry(results, lot).stream())
                 .toList();
         try {
-            ResultsIndex.write(results, NightFolder.all(results), lots);
+            ResultsIndex.write(results, NightFolder.nights(results), lots);
         } catch (IOException e) {
             LOG.warn("{} cannot be written: {}", ResultsIndex.FILE_NAME, IoSentences.of(e));
         }

@@ -81,6 +81,7 @@ final class LotCharts {
                                 charts.density(SpectrumRow.Kind.RELAXATION, "Relaxation spectrum", "H"),
                                 charts.density(SpectrumRow.Kind.RETARDATION, "Retardation spectrum", "L")),
                         ResponseCharts.of(result.responses()).stream(),
+                        TrendCharts.of(result.trend()).stream(),
                         WorstPointCharts.of(result.points()).stream())
                 .flatMap(charted -> charted)
                 .filter(Chart::hasPoints)

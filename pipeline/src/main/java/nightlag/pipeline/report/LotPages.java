@@ -7,6 +7,10 @@ import java.util.List;
 import java.util.OptionalDouble;
 import java.util.stream.Collectors;
 import nightlag.stages.LotResult;
+import nightlag.stages.acceptance.Judgement;
+import nightlag.stages.acceptance.LimitPlan;
+import nightlag.stages.acceptance.Trend;
+import nightlag.stages.acceptance.Verdict;
 import nightlag.stages.fault.Reason;
 import nightlag.stages.moduli.CreepCurve;
 import nightlag.stages.moduli.Marker;
@@ -24,6 +28,7 @@ final class LotPages {
                 grade,
                 lot,
                 counts(result),
+                limits(result),
                 result.markers().stream().map(LotPages::figure).toList(),
                 result.notes().stream().map(Reason::sentence).toList(),
                 result.absent().stream().map(Reason::sentence).toList(),
@@ -50,6 +55,38 @@ final class LotPages {
                 + Arrays.stream(Quality.values())
                         .map(quality -> Collections.frequency(found, quality) + " " + quality.word())
                         .collect(Collectors.joining(", "));
+    }
+
+    private static List<LotPage.Limit> limits(LotResult result) {
+        List<LotPage.Limit> limits = new ArrayList<>();
+        for (Judgement judged : result.acceptance()) {
+            LimitPlan limit = judged.limit();
+            limits.add(new LotPage.Limit(
+                    limit.title(),
+                    judged.value().isPresent()
+                            ? VerdictWords.value(limit, judged.value().getAsDouble(), judged.u())
+                            : "",
+                    VerdictWords.limits(limit),
+                    judged.verdict().word(),
+                    judged.verdict() == Verdict.CONFORMING,
+                    judged.note()));
+            result.trend().stream()
+                    .filter(trend -> trend.limit().equals(limit))
+                    .map(LotPages::trend)
+                    .forEach(limits::add);
+        }
+        return limits;
+    }
+
+    private static LotPage.Limit trend(Trend trend) {
+        boolean usual = trend.verdict() == Verdict.CONFORMING;
+        return new LotPage.Limit(
+                trend.limit().title() + ", among earlier lots",
+                VerdictWords.value(trend.limit(), trend.value(), OptionalDouble.empty()),
+                "usual " + VerdictWords.between(trend.limit().shown(), trend.lower(), trend.upper()),
+                usual ? "usual" : "unusual",
+                usual,
+                trend.note());
     }
 
     private static LotPage.Figure figure(Marker marker) {

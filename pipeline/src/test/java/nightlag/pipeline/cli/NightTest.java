@@ -99,18 +99,4 @@ class NightTest {
 
         assertThat(lab.files()).hasSize(7).extracting(row -> row.get("lot")).containsOnly("A1");
     }
-
-    @Test
-    void sectionsNotActedOnYetAreSaid() {
-        lab.grade("plover", """
-                [[limit]]
-                property = "tan_delta"
-                temperature = "25 °C"
-                frequency = "1 Hz"
-                max = 2
-                """);
-        lab.sweep("plover", "A1");
-
-        assertThat(lab.run().out()).contains("[[limit]]");
-    }
 }

@@ -81,7 +81,11 @@ final class LocalFigure {
                 .get(0);
         Optional<Slope> perLnFrequency = atFrequency.slope(
                 Node.along(isotherm, Reading::lnFrequency, SAME_LN_FREQUENCY, scale), SAME_LN_FREQUENCY);
-        Optional<Slope> perKelvin = atTemperature.slope(otherIsotherms(here, scale), 0);
+        double offLnFrequency = lnFrequency - atFrequency.x();
+        // the other isotherms are at this frequency already
+        Optional<Slope> perKelvin = atTemperature
+                .raised(perLnFrequency.map(Slope::value).orElse(0.0) * offLnFrequency)
+                .slope(otherIsotherms(here, scale), 0);
         double[] moved = here.stream()
                 .mapToDouble(reading -> scale.of(reading)
                         + perLnFrequency.map(Slope::value).orElse(0.0) * (lnFrequency - reading.lnFrequency())
@@ -90,7 +94,6 @@ final class LocalFigure {
         Pooled pooled =
                 Pooled.of(moved, here.stream().mapToDouble(scale::variance).toArray());
         double offK = temperatureK - atTemperature.x();
-        double offLnFrequency = lnFrequency - atFrequency.x();
         if (perKelvin.isEmpty() && Math.abs(offK) > NOTED_K) {
             notes.add(
                     "measured at " + celsius(atTemperature.x()) + " and not moved, as no other temperature tells how");

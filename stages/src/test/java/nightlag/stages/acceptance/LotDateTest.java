@@ -26,7 +26,7 @@ class LotDateTest {
         assertThat(LotDate.of(made)).hasValue(LocalDate.of(2026, 3, 1));
     }
 
-    @ParameterizedTest(name = "{0}")
+    @ParameterizedTest(name = "\"{0}\"")
     @ValueSource(strings = {"", "03/01/2026", "1/3/2026", "2026-02-30", "week 9", "1.3.26", "2026"})
     void whatIsNoDateOrReadsTwoWaysIsNone(String made) {
         assertThat(LotDate.of(made)).isEmpty();
