@@ -14,7 +14,7 @@ import nightlag.stages.numeric.Complex;
 import nightlag.stages.sweep.OwnFigures;
 import org.junit.jupiter.api.Tag;
 import org.junit.jupiter.params.ParameterizedTest;
-import org.junit.jupiter.params.provider.EnumSource;
+import org.junit.jupiter.params.provider.MethodSource;
 
 /** How often value ± 1.96 u holds the true value, for each way in which a value at a limit is had. */
 @Tag("study")
@@ -37,21 +37,10 @@ class AcceptanceStudyTest {
     }
 
     /** Where the points lie about 190 °C and 1 Hz. */
-    enum Layout {
-        ONE_POINT(new double[] {175, 190, 205}, new double[] {0.4, 1, 2.5}, 1),
-        FIVE_REPEATS(new double[] {175, 190, 205}, new double[] {0.4, 1, 2.5}, 5),
-        BESIDE(new double[] {175.3, 190.4, 205.3}, new double[] {0.4, 1.007, 2.5}, 1),
-        BETWEEN_FREQUENCIES(new double[] {175, 190, 205}, new double[] {0.32, 0.68, 1.45, 3.1}, 1),
-        BETWEEN_ISOTHERMS(new double[] {172, 184, 196, 208}, new double[] {0.4, 1, 2.5}, 1);
-
-        private final double[] celsius;
-        private final double[] hertz;
-        private final int repeats;
-
-        Layout(double[] celsius, double[] hertz, int repeats) {
-            this.celsius = celsius;
-            this.hertz = hertz;
-            this.repeats = repeats;
+    private record Layout(String name, List<Double> celsius, List<Double> hertz, int repeats) {
+        @Override
+        public String toString() {
+            return name;
         }
 
         List<ModulusPoint> measured(Random random, double sharedScale, double sharedKelvin) {
@@ -77,10 +66,21 @@ class AcceptanceStudyTest {
         }
     }
 
-    @ParameterizedTest
-    @EnumSource(Layout.class)
+    private static List<Layout> layouts() {
+        List<Double> isotherms = List.of(175.0, 190.0, 205.0);
+        List<Double> frequencies = List.of(0.4, 1.0, 2.5);
+        return List.of(
+                new Layout("one point", isotherms, frequencies, 1),
+                new Layout("mean of five points", isotherms, frequencies, 5),
+                new Layout("a point 0.4 K and 0.7 % beside", List.of(175.3, 190.4, 205.3), List.of(0.4, 1.007, 2.5), 1),
+                new Layout("between frequencies", isotherms, List.of(0.32, 0.68, 1.45, 3.1), 1),
+                new Layout("between isotherms", List.of(172.0, 184.0, 196.0, 208.0), frequencies, 1));
+    }
+
+    @ParameterizedTest(name = "{0}")
+    @MethodSource("layouts")
     void intervalsHoldTheTruth(Layout layout) {
-        Random random = new Random(layout.ordinal() + 106L);
+        Random random = new Random(106);
         int draws = Study.draws(1500, 20_000);
         double truth = melt(190, 1).re();
         int held = 0;
