@@ -1,6 +1,5 @@
 package nightlag.stages;
 
-import java.time.LocalDate;
 import java.util.ArrayList;
 import java.util.Comparator;
 import java.util.LinkedHashMap;
@@ -9,7 +8,6 @@ import java.util.Map;
 import java.util.Optional;
 import nightlag.stages.acceptance.IndividualsChart;
 import nightlag.stages.acceptance.LimitPlan;
-import nightlag.stages.acceptance.LotDate;
 import nightlag.stages.acceptance.LotRecord;
 import nightlag.stages.acceptance.Trend;
 import nightlag.stages.sweep.NaturalOrder;
@@ -78,15 +76,13 @@ public final class Compare {
     }
 
     /**
-     * The lots as they came: by date where every one has a date that can be read, those of one day by name; else all by name,
-     * digits compared as the numbers they are.
+     * The lots as they came: by date where every one has a date, those of one day by name; else all by name, digits compared as
+     * the numbers they are.
      */
     public static List<LotRecord> inOrder(List<LotRecord> lots) {
-        Map<LotRecord, Optional<LocalDate>> dates = new LinkedHashMap<>();
-        lots.forEach(lot -> dates.put(lot, lot.made().flatMap(LotDate::of)));
         Comparator<LotRecord> byName = Comparator.comparing(LotRecord::lot, NaturalOrder::compare);
-        Comparator<LotRecord> order = dates.values().stream().allMatch(Optional::isPresent)
-                ? Comparator.comparing((LotRecord lot) -> dates.get(lot).orElseThrow())
+        Comparator<LotRecord> order = lots.stream().allMatch(lot -> lot.day().isPresent())
+                ? Comparator.comparingLong((LotRecord lot) -> lot.day().orElseThrow())
                         .thenComparing(byName)
                 : byName;
         return lots.stream().sorted(order).toList();

@@ -8,6 +8,7 @@ import java.util.Collections;
 import java.util.List;
 import java.util.Map;
 import java.util.Optional;
+import java.util.OptionalLong;
 import java.util.Random;
 import java.util.stream.IntStream;
 import nightlag.stages.acceptance.LimitPlan;
@@ -30,17 +31,16 @@ class CompareTest {
                 SweepPlan.withDefaults(), Optional.empty(), Optional.empty(), List.of(), List.of(limits), Map.of());
     }
 
-    private static LotRecord lot(String name, String made, double stiffness) {
-        return new LotRecord(
-                name,
-                made.isEmpty() ? Optional.empty() : Optional.of(made),
-                List.of(new LotRecord.Value(STIFFNESS.quantity(), stiffness)));
+    private static LotRecord lot(String name, double stiffness) {
+        return lot(name, OptionalLong.empty(), stiffness);
+    }
+
+    private static LotRecord lot(String name, OptionalLong day, double stiffness) {
+        return new LotRecord(name, day, List.of(new LotRecord.Value(STIFFNESS.quantity(), stiffness)));
     }
 
     private static List<LotRecord> lots(int count) {
-        return IntStream.rangeClosed(1, count)
-                .mapToObj(i -> lot("L" + i, "", i))
-                .toList();
+        return IntStream.rangeClosed(1, count).mapToObj(i -> lot("L" + i, i)).toList();
     }
 
     @Test
@@ -57,11 +57,11 @@ class CompareTest {
 
     @Test
     void datesGoBeforeNamesWhereEveryLotHasOne() {
-        List<LotRecord> dated =
-                List.of(lot("C", "2026-01-05", 1), lot("B", "3.1.2026", 2), lot("A", "2026-01-03T06:00", 3));
+        List<LotRecord> dated = List.of(
+                lot("C", OptionalLong.of(5), 1), lot("B", OptionalLong.of(3), 2), lot("A", OptionalLong.of(3), 3));
         assertThat(Compare.inOrder(dated)).extracting(LotRecord::lot).containsExactly("A", "B", "C");
         List<LotRecord> oneWithout = new ArrayList<>(dated);
-        oneWithout.add(lot("A2", "soon", 4));
+        oneWithout.add(lot("A2", 4));
         assertThat(Compare.inOrder(oneWithout)).extracting(LotRecord::lot).containsExactly("A", "A2", "B", "C");
     }
 
@@ -70,7 +70,7 @@ class CompareTest {
     void theOrderInWhichLotsAreGivenDoesNotMatterAndOneLotIsComparedAsAll(long seed) {
         Random random = new Random(seed);
         List<LotRecord> lots = new ArrayList<>(IntStream.range(0, 25)
-                .mapToObj(i -> lot("L" + i, "", random.nextGaussian()))
+                .mapToObj(i -> lot("L" + i, random.nextGaussian()))
                 .toList());
         Map<String, List<Trend>> all = Compare.compare(lots, plan(STIFFNESS));
         Collections.shuffle(lots, random);
@@ -85,9 +85,9 @@ class CompareTest {
     @Test
     void aLotWithoutTheValueIsNeitherComparedNorCounted() {
         List<LotRecord> lots = new ArrayList<>(lots(9));
-        lots.set(3, new LotRecord("L4", Optional.empty(), List.of()));
+        lots.set(3, new LotRecord("L4", OptionalLong.empty(), List.of()));
         assertThat(Compare.compare(lots, plan(STIFFNESS)).get("L9")).isEmpty();
-        lots.add(lot("L10", "", 10));
+        lots.add(lot("L10", 10));
         assertThat(Compare.compare(lots, plan(STIFFNESS)).get("L10").get(0).lots())
                 .isEqualTo(8);
     }

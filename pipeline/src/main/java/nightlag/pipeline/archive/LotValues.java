@@ -51,7 +51,8 @@ final class LotValues {
                 row -> values.computeIfAbsent(row.getString(1), lot -> new ArrayList<>())
                         .add(new LotRecord.Value(row.getString(2), row.getDouble(3))));
         List<LotRecord> records = new ArrayList<>();
-        made.forEach((lot, dates) -> records.add(LotRecord.of(lot, dates, values.getOrDefault(lot, List.of()))));
+        made.forEach((lot, dates) ->
+                records.add(new LotRecord(lot, LotDate.earliestDay(dates), values.getOrDefault(lot, List.of()))));
         return List.copyOf(records);
     }
 

@@ -22,6 +22,8 @@ class AcceptanceStudyTest {
     private static final double NOISE = 0.01;
     private static final double TORQUE = 0.008;
     private static final double KELVIN = 0.2;
+    /** Between points all that a parabola would be beside the line is in u, so that more intervals hold than need to. */
+    private static final double CLOSE = 0.975;
 
     /** Two Maxwell elements, a decade and a half apart; times fall by 4 % a kelvin. */
     private static Complex melt(double celsius, double hertz) {
@@ -37,7 +39,7 @@ class AcceptanceStudyTest {
     }
 
     /** Where the points lie about 190 °C and 1 Hz. */
-    private record Layout(String name, List<Double> celsius, List<Double> hertz, int repeats) {
+    private record Layout(String name, List<Double> celsius, List<Double> hertz, int repeats, double most) {
         @Override
         public String toString() {
             return name;
@@ -70,11 +72,13 @@ class AcceptanceStudyTest {
         List<Double> isotherms = List.of(175.0, 190.0, 205.0);
         List<Double> frequencies = List.of(0.4, 1.0, 2.5);
         return List.of(
-                new Layout("one point", isotherms, frequencies, 1),
-                new Layout("mean of five points", isotherms, frequencies, 5),
-                new Layout("a point 0.4 K and 0.7 % beside", List.of(175.3, 190.4, 205.3), List.of(0.4, 1.007, 2.5), 1),
-                new Layout("between frequencies", isotherms, List.of(0.32, 0.68, 1.45, 3.1), 1),
-                new Layout("between isotherms", List.of(172.0, 184.0, 196.0, 208.0), frequencies, 1));
+                new Layout("one point", isotherms, frequencies, 1, CLOSE),
+                new Layout("mean of five points", isotherms, frequencies, 5, CLOSE),
+                new Layout(
+                        "a point 0.4 K and 0.7 % beside",
+                        List.of(175.3, 190.4, 205.3), List.of(0.4, 1.007, 2.5), 1, CLOSE),
+                new Layout("between frequencies", isotherms, List.of(0.32, 0.68, 1.45, 3.1), 1, 1),
+                new Layout("between isotherms", List.of(172.0, 184.0, 196.0, 208.0), frequencies, 1, 1));
     }
 
     @ParameterizedTest(name = "{0}")
@@ -111,6 +115,6 @@ class AcceptanceStudyTest {
         }
         double share = held / (double) draws;
         Study.row("| %s | %.1f %% |", layout, 100 * share);
-        assertThat(share).isBetween(0.93, 0.995);
+        assertThat(share).isBetween(0.93, layout.most());
     }
 }

@@ -1,12 +1,14 @@
-package nightlag.stages.acceptance;
+package nightlag.pipeline.archive;
 
 import java.time.LocalDate;
 import java.time.format.DateTimeFormatter;
 import java.time.format.DateTimeParseException;
 import java.time.format.ResolverStyle;
+import java.util.Collection;
 import java.util.List;
 import java.util.Locale;
 import java.util.Optional;
+import java.util.OptionalLong;
 import java.util.regex.Matcher;
 import java.util.regex.Pattern;
 
@@ -14,7 +16,7 @@ import java.util.regex.Pattern;
  * The date in the tag {@code made}: {@code 2026-03-01}, {@code 2026/03/01}, {@code 20260301} or {@code 1.3.2026}; a time behind it
  * is left out. A date with strokes that begins with the day or the month is not read, as nobody can tell which.
  */
-public final class LotDate {
+final class LotDate {
     private static final Pattern DATE_THEN_TIME = Pattern.compile("(\\S+?)(?:[T\\s].*)?");
 
     private static final List<DateTimeFormatter> FORMS =
@@ -27,7 +29,7 @@ public final class LotDate {
     }
 
     /** The date; empty where the text is none. */
-    public static Optional<LocalDate> of(String made) {
+    static Optional<LocalDate> of(String made) {
         Matcher matcher = DATE_THEN_TIME.matcher(made.strip());
         if (!matcher.matches()) {
             return Optional.empty();
@@ -43,5 +45,13 @@ public final class LotDate {
         } catch (DateTimeParseException ofAnotherForm) {
             return Optional.empty();
         }
+    }
+
+    /** The earliest of several as days since 1970-01-01; empty where none can be read. */
+    static OptionalLong earliestDay(Collection<String> made) {
+        return made.stream()
+                .flatMap(text -> of(text).stream())
+                .mapToLong(LocalDate::toEpochDay)
+                .min();
     }
 }

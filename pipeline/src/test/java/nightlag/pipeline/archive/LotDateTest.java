@@ -1,4 +1,4 @@
-package nightlag.stages.acceptance;
+package nightlag.pipeline.archive;
 
 import static org.assertj.core.api.Assertions.assertThat;
 
@@ -34,11 +34,8 @@ class LotDateTest {
 
     @Test
     void theEarliestDateOfALotCounts() {
-        assertThat(LotRecord.of("L", List.of("2.3.2026", "2026-03-01", "28.2.2026"), List.of())
-                        .made())
-                .hasValue("28.2.2026");
-        assertThat(LotRecord.of("L", List.of("week 10", "week 9"), List.of()).made())
-                .hasValue("week 9");
-        assertThat(LotRecord.of("L", List.of(), List.of()).made()).isEmpty();
+        assertThat(LotDate.earliestDay(List.of("2.3.2026", "soon", "28.2.2026")))
+                .hasValue(LocalDate.of(2026, 2, 28).toEpochDay());
+        assertThat(LotDate.earliestDay(List.of("soon"))).isEmpty();
     }
 }
