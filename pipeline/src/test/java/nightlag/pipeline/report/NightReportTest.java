@@ -14,6 +14,10 @@ import java.util.OptionalDouble;
 import java.util.stream.IntStream;
 import nightlag.pipeline.tables.RandomLot;
 import nightlag.stages.LotResult;
+import nightlag.stages.acceptance.Judgement;
+import nightlag.stages.acceptance.LimitPlan;
+import nightlag.stages.acceptance.ShownUnit;
+import nightlag.stages.acceptance.Verdict;
 import nightlag.stages.moduli.Marker;
 import nightlag.stages.moduli.Moduli;
 import nightlag.stages.moduli.ModulusReading;
@@ -190,6 +194,62 @@ class NightReportTest {
                 "in words");
         LotResult result = LotResult.builder().markers(List.of(marker)).build();
         return LotPages.of("lot-1", "Heron 3", "L-17", result).figures().get(0).value();
+    }
+
+    private static LimitPlan limit(OptionalDouble min, OptionalDouble max, String unit, ShownUnit shown) {
+        return new LimitPlan(
+                Optional.of("softening"),
+                "glass_transition_loss_peak",
+                OptionalDouble.empty(),
+                OptionalDouble.empty(),
+                "",
+                min,
+                max,
+                unit,
+                shown,
+                2);
+    }
+
+    @Test
+    void verdictsAreToldInTheUnitsOfTheGradeFile() {
+        LimitPlan stiffness =
+                limit(OptionalDouble.of(12_000), OptionalDouble.of(15_000), "Pa", new ShownUnit("kPa", 1000, 0));
+        assertThat(VerdictWords.of(new Judgement(
+                        stiffness,
+                        OptionalDouble.of(12_100),
+                        OptionalDouble.of(100),
+                        Verdict.UNDECIDED,
+                        "mean of 3 points")))
+                .isEqualTo("softening undecided: 12.10 ± 0.10 kPa, limits 12 to 15 kPa (mean of 3 points)");
+        LimitPlan peak = limit(OptionalDouble.empty(), OptionalDouble.of(293.15), "°C", new ShownUnit("°C", 1, 273.15));
+        assertThat(VerdictWords.of(new Judgement(
+                        peak, OptionalDouble.of(303.15), OptionalDouble.of(0.5), Verdict.NONCONFORMING, "")))
+                .isEqualTo("softening nonconforming: 30.00 ± 0.50 °C, at most 20 °C");
+        assertThat(VerdictWords.of(new Judgement(
+                        peak,
+                        OptionalDouble.empty(),
+                        OptionalDouble.empty(),
+                        Verdict.MISSING,
+                        "the lot has no glass_transition_loss_peak")))
+                .isEqualTo("softening missing: at most 20 °C (the lot has no glass_transition_loss_peak)");
+    }
+
+    @Test
+    void aLotStandsAmongThoseBeforeIt() throws IOException {
+        LotResult result = new RandomLot(1).result("Heron 3", "L-17");
+
+        JsonNode chart = find(
+                JsonMapper.builder().build().readTree(ChartJson.of(LotCharts.of(result))),
+                "The lot among its predecessors: a limit on conforming");
+
+        // 20 earlier lots, of which the last twelve are shown; this one is the 21st
+        assertThat(chart.get("series").get(0).get("x").get(0).asInt()).isEqualTo(9);
+        assertThat(chart.get("series").get(1).get("x").get(0).asInt()).isEqualTo(21);
+        assertThat(chart.get("series").get(1).get("y").get(0).asDouble()).isEqualTo(3);
+        assertThat(chart.findValuesAsText("name")).containsOnlyOnce("mean of the earlier lots");
+        assertThat(LotPages.of("lot-1", "Heron 3", "L-17", result).limits())
+                .extracting(LotPage.Limit::verdict)
+                .containsExactly("conforming", "unusual", "nonconforming", "undecided", "missing");
     }
 
     private static JsonNode find(JsonNode charts, String title) {

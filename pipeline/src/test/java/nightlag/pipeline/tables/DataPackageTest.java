@@ -42,7 +42,8 @@ class DataPackageTest {
                         "prony",
                         "response",
                         "derived",
-                        "creep");
+                        "creep",
+                        "acceptance");
         for (JsonNode resource : descriptor.get("resources")) {
             JsonNode fields = resource.at("/schema/fields");
             assertThat(Files.readString(lot().resolve(resource.get("path").asText())))

@@ -49,6 +49,8 @@ class DataPackageValidationTest {
                 + result.spectrum().size()
                 + result.derived().size()
                 + result.responses().size()
+                + result.acceptance().size()
+                + result.trend().size()
                 + result.prony().size();
         assertThat(check(FROM)).containsExactly("rows read: " + rows);
     }

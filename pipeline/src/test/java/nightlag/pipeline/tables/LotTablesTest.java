@@ -290,6 +290,8 @@ class LotTablesTest {
                 .spectrum(shuffled(result.spectrum(), seed))
                 .derived(shuffled(result.derived(), seed))
                 .responses(result.responses())
+                .acceptance(result.acceptance())
+                .trend(result.trend())
                 .prony(shuffled(result.prony(), seed))
                 .build();
         Locale was = Locale.getDefault();
@@ -306,6 +308,7 @@ class LotTablesTest {
         assertThat(filesOfTheLot()).isEqualTo(first);
         assertThat(first.keySet())
                 .containsExactly(
+                        "acceptance.csv",
                         "creep.csv",
                         "datapackage.json",
                         "derived.csv",
@@ -331,6 +334,7 @@ class LotTablesTest {
 
         assertThat(filesOfTheLot().keySet())
                 .containsExactly(
+                        "acceptance.csv",
                         "creep.csv",
                         "datapackage.json",
                         "derived.csv",

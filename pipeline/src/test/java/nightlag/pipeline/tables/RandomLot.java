@@ -9,6 +9,11 @@ import java.util.stream.IntStream;
 import java.util.stream.Stream;
 import nightlag.pipeline.RandomPoints;
 import nightlag.stages.LotResult;
+import nightlag.stages.acceptance.Judgement;
+import nightlag.stages.acceptance.LimitPlan;
+import nightlag.stages.acceptance.ShownUnit;
+import nightlag.stages.acceptance.Trend;
+import nightlag.stages.acceptance.Verdict;
 import nightlag.stages.moduli.FigureRow;
 import nightlag.stages.moduli.Marker;
 import nightlag.stages.moduli.Moduli;
@@ -50,7 +55,44 @@ public final class RandomLot {
                 .sweeps(sweeps(made))
                 .responses(responses())
                 .prony(prony())
+                .acceptance(acceptance())
+                .trend(trend())
                 .build();
+    }
+
+    private static LimitPlan limit(String property, String unit) {
+        return new LimitPlan(
+                Optional.of("a limit on " + property),
+                property,
+                OptionalDouble.of(463.15),
+                OptionalDouble.of(1),
+                "190 °C 1 Hz",
+                OptionalDouble.of(1),
+                OptionalDouble.empty(),
+                unit,
+                ShownUnit.plain(unit),
+                2);
+    }
+
+    private List<Judgement> acceptance() {
+        List<Judgement> made = new ArrayList<>();
+        for (Verdict verdict : Verdict.values()) {
+            boolean there = verdict != Verdict.MISSING;
+            made.add(new Judgement(
+                    limit(verdict.word(), "Pa"),
+                    only(there, points.number()),
+                    only(there && random.nextBoolean(), Math.abs(points.number())),
+                    verdict,
+                    "=how it \"came\""));
+        }
+        return made;
+    }
+
+    private List<Trend> trend() {
+        List<Trend.LotValue> earlier = IntStream.rangeClosed(1, 12)
+                .mapToObj(i -> new Trend.LotValue("L" + i, random.nextDouble(1, 2)))
+                .toList();
+        return List.of(new Trend(limit(Verdict.CONFORMING.word(), "Pa"), 3, 1.5, 1, 2, 20, earlier));
     }
 
     /** Sweeps of every kind, whatever varies in them. */
