@@ -14,6 +14,7 @@ import nightlag.pipeline.decode.RawFileDecoder;
 import nightlag.pipeline.intake.IntakeScan;
 import nightlag.pipeline.tables.LotTables;
 import nightlag.pipeline.tables.NightTables;
+import nightlag.pipeline.teamsheet.TeamSheetFile;
 
 /** The rules that keep the rooms of the pipeline apart: the night alone knows them all. */
 @AnalyzeClasses(packages = "nightlag.pipeline", importOptions = ImportOption.DoNotIncludeTests.class)
@@ -35,6 +36,9 @@ class PipelineArchitectureTest {
 
     @ArchTest
     static final ArchRule theReportKnowsNoOtherRoom = room("report").mayUse();
+
+    @ArchTest
+    static final ArchRule theTeamSheetKnowsNoOtherRoom = room("teamsheet").mayUse();
 
     @ArchTest
     static final ArchRule nothingButTheCommandLineKnowsTheNight = noClasses()
@@ -66,7 +70,13 @@ class PipelineArchitectureTest {
             .resideInAPackage("nightlag.pipeline.cli..")
             .should()
             .dependOnClassesThat()
-            .belongToAnyOf(Archive.class, IntakeScan.class, LotTables.class, NightTables.class, RawFileDecoder.class);
+            .belongToAnyOf(
+                    Archive.class,
+                    IntakeScan.class,
+                    LotTables.class,
+                    NightTables.class,
+                    RawFileDecoder.class,
+                    TeamSheetFile.class);
 
     /** Expressions are compiled there and handed over as functions. */
     @ArchTest

@@ -180,6 +180,26 @@ public final class Archive implements AutoCloseable {
         });
     }
 
+    /** Keeps the row of a lot for the team sheet; one that says something new has not been written anywhere yet. */
+    public void keepSheetRow(LotName lot, String body) throws ArchiveException {
+        inTransaction(
+                "keep the row of lot " + lot.lot() + " for the team sheet", () -> SheetRows.put(connection, lot, body));
+    }
+
+    /** All rows of the team sheet, by grade and lot. */
+    public List<KeptRow> sheetRows() throws ArchiveException {
+        try {
+            return List.copyOf(SheetRows.all(connection));
+        } catch (SQLException cause) {
+            throw StoreErrors.failure(file, "list the rows of the team sheet", cause);
+        }
+    }
+
+    /** Notes where the rows of these lots stand now. */
+    public void sheetRowsWritten(Collection<LotName> lots, String where) throws ArchiveException {
+        inTransaction("note that the team sheet is written", () -> SheetRows.written(connection, lots, where));
+    }
+
     @Override
     public void close() throws ArchiveException {
         try {

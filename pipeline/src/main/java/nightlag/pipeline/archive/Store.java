@@ -60,7 +60,7 @@ final class Store {
           due        INTEGER NOT NULL,     -- 1: its tables are behind what stands here
           conclusion TEXT NOT NULL,        -- digest of what its tables were made with
           PRIMARY KEY (grade, lot)
-        )""",
+        )""", SheetRows.TABLE,
     };
 
     /** What layout 2 has more than layout 1; an archive of layout 1 gets it when it is opened. */

@@ -189,6 +189,8 @@ final class LotStage {
                             .formatted(lot.grade(), lot.lot(), IoSentences.of(e)),
                     e);
         }
+        // before the lot is noted as done: one that a kill leaves due is concluded again, to the same row
+        night.archive().keepSheetRow(lot, SheetStage.row(lot, result).toJson());
         night.archive()
                 .concluded(lot, conclusionState(grade), Compare.values(result), GradeTrends.digest(result.trend()));
         night.tally().concluded(lot, result);

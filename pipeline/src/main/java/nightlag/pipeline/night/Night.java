@@ -5,6 +5,7 @@ import java.nio.file.Files;
 import java.nio.file.InvalidPathException;
 import java.nio.file.Path;
 import java.time.Clock;
+import java.time.LocalDate;
 import java.util.Comparator;
 import java.util.List;
 import java.util.Optional;
@@ -24,7 +25,8 @@ import org.apache.logging.log4j.LogManager;
 import org.apache.logging.log4j.Logger;
 
 /**
- * One night's work: survey the intakes, look at what is new, commit it, rebuild the tables of the lots it touches.
+ * One night's work: survey the intakes, look at what is new, commit it, rebuild the tables of the lots it touches,
+ * put their rows into the team sheet.
  * Files are looked at side by side and committed in the order of their names, so that the number of workers shows nowhere.
  */
 public final class Night {
@@ -97,6 +99,7 @@ public final class Night {
             NightWork night = new NightWork(configuration, options, version, workers(), archive, tally, report);
             new FileStage(night, progress).work(survey, runSheets);
             new LotStage(night).work();
+            new SheetStage(night).work(LocalDate.now(clock));
             outcome = tally.outcome();
             NightTables.writeFiles(folder, outcome.files());
             report.finish(new NightHeading(

@@ -35,6 +35,7 @@ import nightlag.stages.moduli.Quality;
  * @param verdicts how many of each verdict the lots rebuilt got; empty where none has a limit
  * @param notConforming all verdicts but conforming ones, the worst first
  * @param unusual lots outside of what was usual in their grade before
+ * @param teamSheet what became of the team sheet
  */
 public record NightOutcome(
         Path folder,
@@ -51,7 +52,8 @@ public record NightOutcome(
         long rowsLeftOut,
         Optional<String> verdicts,
         List<String> notConforming,
-        List<String> unusual) {
+        List<String> unusual,
+        SheetReport teamSheet) {
     /** Copies the collections; the maps keep their order. */
     public NightOutcome {
         files = List.copyOf(files);
@@ -68,11 +70,14 @@ public record NightOutcome(
     }
 
     /**
-     * Whether all went well; files that wait, and files set aside before, do not count against it, and no verdict does: a lot
-     * that does not conform is what the night is there to find.
+     * Whether all went well; files that wait, files set aside before, and a team sheet that is open elsewhere do not count
+     * against it, and no verdict does: a lot that does not conform is what the night is there to find.
      */
     public boolean allWell() {
-        return newlySetAside.isEmpty() && unreadableIntakes.isEmpty() && lotsNotConcluded.isEmpty();
+        return newlySetAside.isEmpty()
+                && unreadableIntakes.isEmpty()
+                && lotsNotConcluded.isEmpty()
+                && !teamSheet.refused();
     }
 
     /** Whether there was nothing to do: all outside the night's own folder is as it was. */
@@ -107,6 +112,7 @@ public record NightOutcome(
         }
         lines.add("lots    " + lotsConcluded.size() + " rebuilt");
         verdicts.ifPresent(counted -> lines.add("limits  " + counted));
+        teamSheet.line().ifPresent(lines::add);
         return lines;
     }
 
@@ -125,6 +131,7 @@ public record NightOutcome(
                                 .toList()),
                 new Concern("look at: lots against their limits", notConforming),
                 new Concern("look at: lots unlike the earlier ones of their grade", unusual),
+                new Concern("look at: team sheet", teamSheet.concerns()),
                 new Concern("still set aside from an earlier night", stillSetAside),
                 new Concern("could not be had", notes),
                 new Concern(

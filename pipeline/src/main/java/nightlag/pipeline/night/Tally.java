@@ -48,6 +48,7 @@ final class Tally {
     private final VerdictCount verdicts = new VerdictCount();
     private long rows;
     private long rowsLeftOut;
+    private SheetReport teamSheet = SheetReport.NOTHING;
 
     Tally(Path folder) {
         this.folder = folder;
@@ -161,6 +162,13 @@ final class Tally {
         LOG.warn("{} lot {}: not concluded: {}", lot.grade(), lot.lot(), reason);
     }
 
+    /** What became of the team sheet. */
+    void teamSheet(SheetReport report) {
+        teamSheet = report;
+        report.line().ifPresent(line -> LOG.info("team sheet: {}", line));
+        report.concerns().forEach(concern -> LOG.warn("team sheet: {}", concern));
+    }
+
     NightOutcome outcome() {
         List<String> worstFirst = new ArrayList<>(notSound.getOrDefault(Quality.UNUSABLE, List.of()));
         worstFirst.addAll(notSound.getOrDefault(Quality.DOUBTFUL, List.of()));
@@ -179,6 +187,7 @@ final class Tally {
                 rowsLeftOut,
                 verdicts.line(),
                 verdicts.notConforming(),
-                verdicts.unusual());
+                verdicts.unusual(),
+                teamSheet);
     }
 }

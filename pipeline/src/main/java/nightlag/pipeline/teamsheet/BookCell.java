@@ -9,9 +9,20 @@ package nightlag.pipeline.teamsheet;
  * @param style its style; 0 is the default one
  * @param kind what it holds
  * @param value its text as it is shown, or its number as it is written; of a formula, what it last gave
- * @param formula what tells its formula from others, without the row it stands in; empty where there is none
+ * @param formula its formula
+ * @param resultStart where its value begins in the part; of a formula, this is what it last gave
+ * @param resultEnd where what follows that begins; the same place where it has none
  */
-record BookCell(int column, int start, int end, int style, Kind kind, String value, String formula) {
+record BookCell(
+        int column,
+        int start,
+        int end,
+        int style,
+        Kind kind,
+        String value,
+        Formula formula,
+        int resultStart,
+        int resultEnd) {
     /** What a cell holds. */
     enum Kind {
         EMPTY,
@@ -22,7 +33,7 @@ record BookCell(int column, int start, int end, int style, Kind kind, String val
     }
 
     boolean hasFormula() {
-        return !formula.isEmpty();
+        return formula.isThere();
     }
 
     boolean hasContent() {

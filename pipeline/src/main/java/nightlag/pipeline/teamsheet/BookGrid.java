@@ -3,8 +3,13 @@ package nightlag.pipeline.teamsheet;
 import java.io.IOException;
 import java.io.OutputStream;
 import java.math.BigDecimal;
+import java.util.LinkedHashMap;
+import java.util.List;
+import java.util.Map;
+import java.util.NavigableMap;
 import java.util.Optional;
 import java.util.TreeMap;
+import java.util.regex.Pattern;
 import nightlag.pipeline.teamsheet.BookCell.Kind;
 
 /**
@@ -13,21 +18,27 @@ import nightlag.pipeline.teamsheet.BookCell.Kind;
  * date, and that formulas are to be calculated when the workbook is next opened.
  */
 final class BookGrid implements Grid {
+    private static final Pattern FORMULA = Pattern.compile("<(?:[\\w.-]+:)?f[\\s>/]");
+
     private final Book book;
     private final BookParts parts;
+    private final String sheetName;
     private final String part;
+    private final List<String> sharedStrings;
     private final SheetPart sheet;
-    private final TreeMap<Integer, TreeMap<Integer, Value>> cells = new TreeMap<>();
+    private final NavigableMap<Integer, NavigableMap<Integer, Value>> cells = new TreeMap<>();
     private final int rows;
     private int widest;
     private Optional<Area> area = Optional.empty();
     private int firstNewRow = CellReference.MOST_ROWS;
 
-    private BookGrid(Book book, BookParts parts, String part) throws SheetFault {
+    private BookGrid(Book book, BookParts parts, String sheetName) throws SheetFault {
         this.book = book;
         this.parts = parts;
-        this.part = part;
-        this.sheet = SheetPart.of(part, book.text(part), parts.sharedStrings());
+        this.sheetName = sheetName;
+        this.part = parts.sheet(sheetName).orElseThrow();
+        this.sharedStrings = parts.sharedStrings();
+        this.sheet = SheetPart.of(part, book.text(part), sharedStrings);
         int last = 0;
         for (BookRow row : sheet.rows().values()) {
             int width = row.width();
@@ -45,7 +56,7 @@ final class BookGrid implements Grid {
             parts.addSheet(sheetName);
             parts = BookParts.of(book);
         }
-        return new BookGrid(book, parts, parts.sheet(sheetName).orElseThrow());
+        return new BookGrid(book, parts, sheetName);
     }
 
     @Override
@@ -99,7 +110,7 @@ final class BookGrid implements Grid {
         if (value instanceof Value.Text text) {
             return there.kind() == Kind.TEXT && there.value().equals(text.text());
         }
-        return value instanceof Value.Number number
+        return value instanceof Value.Figure number
                 && there.kind() == Kind.NUMBER
                 && there.value().strip().matches("[-+]?[0-9.]+([eE][-+]?[0-9]+)?")
                 && Double.parseDouble(there.value().strip()) == number.number();
@@ -144,7 +155,10 @@ final class BookGrid implements Grid {
     public void writeTo(OutputStream out) throws IOException, SheetFault {
         try (book) {
             BookStyles styles = styles();
-            book.replace(part, new SheetWriter(sheet, styles, parts.datesFrom1904(), this::styleLike).write(cells));
+            book.replace(
+                    part,
+                    new SheetWriter(sheet, styles, parts.datesFrom1904(), this::styleLike)
+                            .write(cells, staleResults()));
             if (area.isPresent()) {
                 int lastRow = cells.lastKey();
                 for (BookTable table : BookTable.of(book, part)) {
@@ -156,6 +170,31 @@ final class BookGrid implements Grid {
             parts.calculateOnOpening();
             book.writeTo(out);
         }
+    }
+
+    /** Formulas of this sheet that lose what they last gave; those of the other sheets have lost it then. */
+    private CellSet staleResults() throws SheetFault {
+        StaleResults stale = new StaleResults();
+        cells.forEach((row, columns) -> columns.keySet().forEach(column -> stale.change(sheetName, row, column)));
+        stale.addFormulas(sheetName, sheet);
+        Map<String, SheetPart> others = new LinkedHashMap<>();
+        for (String name : parts.sheetNames()) {
+            String other = parts.sheet(name).orElseThrow();
+            if (!other.equals(part) && FORMULA.matcher(book.text(other)).find()) {
+                others.put(name, SheetPart.of(other, book.text(other), sharedStrings));
+                stale.addFormulas(name, others.get(name));
+            }
+        }
+        stale.find();
+        for (Map.Entry<String, SheetPart> other : others.entrySet()) {
+            CellSet ofOther = stale.of(other.getKey());
+            if (!ofOther.isEmpty()) {
+                book.replace(
+                        parts.sheet(other.getKey()).orElseThrow(),
+                        SheetWriter.withoutResults(other.getValue(), ofOther));
+            }
+        }
+        return stale.of(sheetName);
     }
 
     /** The styles, with that of a date among them. */

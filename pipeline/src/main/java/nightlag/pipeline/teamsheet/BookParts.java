@@ -93,6 +93,15 @@ final class BookParts {
         return Optional.empty();
     }
 
+    /** The names of all sheets that hold rows. */
+    List<String> sheetNames() {
+        return sheets.stream()
+                .filter(sheet ->
+                        links.stream().anyMatch(link -> link.id().equals(sheet.link()) && link.is("worksheet")))
+                .map(Sheet::name)
+                .toList();
+    }
+
     /** The texts that cells share. */
     List<String> sharedStrings() throws SheetFault {
         Optional<String> part = linked("sharedStrings");

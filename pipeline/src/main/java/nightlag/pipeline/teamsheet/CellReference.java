@@ -23,13 +23,15 @@ record CellReference(int row, int column) {
         if (!parts.matches()) {
             return Optional.empty();
         }
-        int column = 0;
-        for (char letter : parts.group(1).toCharArray()) {
-            column = column * LETTERS + letter - 'A' + 1;
-        }
+        int column = columnOf(parts.group(1));
         int row = Integer.parseInt(parts.group(2));
-        boolean exists = row >= 1 && row <= MOST_ROWS && column <= MOST_COLUMNS;
-        return exists ? Optional.of(new CellReference(row - 1, column - 1)) : Optional.empty();
+        boolean exists = row >= 1 && row <= MOST_ROWS && column < MOST_COLUMNS;
+        return exists ? Optional.of(new CellReference(row - 1, column)) : Optional.empty();
+    }
+
+    /** The column of its letters; that of no letters is -1. */
+    static int columnOf(String letters) {
+        return letters.chars().reduce(0, (before, letter) -> before * LETTERS + letter - 'A' + 1) - 1;
     }
 
     String name() {

@@ -1,6 +1,5 @@
 package nightlag.pipeline.teamsheet;
 
-import java.math.BigDecimal;
 import java.util.Comparator;
 import java.util.HashMap;
 import java.util.List;
@@ -19,11 +18,6 @@ record CsvDialect(char delimiter, char decimal, String lineEnd) {
     private static final Pattern NUMBER = Pattern.compile("[+-]?\\d+(\\.\\d*)?([eE][+-]?\\d+)?");
     private static final Pattern WITH_POINT = Pattern.compile("[+-]?\\d+\\.\\d+([eE][+-]?\\d+)?");
     private static final Pattern WITH_COMMA = Pattern.compile("[+-]?\\d+,\\d+([eE][+-]?\\d+)?");
-
-    /** A number this far from 1, in powers of ten, is written with an exponent. */
-    private static final int MOST_PLAIN_DIGITS = 15;
-
-    private static final int MOST_PLAIN_ZEROS = 5;
 
     /**
      * What most cells of the file are written like. Where no number tells the decimal sign, a semicolon as delimiter speaks
@@ -56,8 +50,8 @@ record CsvDialect(char delimiter, char decimal, String lineEnd) {
         if (value instanceof Value.Text text) {
             return harmless(text.text());
         }
-        if (value instanceof Value.Number number) {
-            return number(number.number());
+        if (value instanceof Value.Figure number) {
+            return number.digits().replace('.', decimal);
         }
         if (value instanceof Value.Day day) {
             return day.date().toString();
@@ -87,13 +81,5 @@ record CsvDialect(char delimiter, char decimal, String lineEnd) {
     OptionalDouble number(String cell) {
         String plain = decimal == '.' ? cell : cell.replace('.', 'x').replace(decimal, '.');
         return NUMBER.matcher(plain).matches() ? OptionalDouble.of(Double.parseDouble(plain)) : OptionalDouble.empty();
-    }
-
-    private String number(double value) {
-        BigDecimal digits = BigDecimal.valueOf(value).stripTrailingZeros();
-        int exponent = digits.precision() - digits.scale() - 1;
-        boolean plain = value == 0 || (exponent > -MOST_PLAIN_ZEROS && exponent < MOST_PLAIN_DIGITS);
-        String text = plain ? digits.toPlainString() : digits.toString();
-        return text.replace('.', decimal);
     }
 }

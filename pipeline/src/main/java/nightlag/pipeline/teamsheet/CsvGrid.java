@@ -6,18 +6,19 @@ import java.util.ArrayList;
 import java.util.HashMap;
 import java.util.List;
 import java.util.Map;
+import java.util.NavigableMap;
 import java.util.TreeMap;
 
 /** A CSV file in whatever dialect it is in; a cell that is not ours keeps its bytes, quotation marks included. */
 final class CsvGrid implements Grid {
-    private static final String DELIMITERS = ",;\t|";
+    private static final List<Character> DELIMITERS = List.of(',', ';', '\t', '|');
 
     private final CsvText file;
     private final List<CsvLine> lines;
     private final CsvDialect dialect;
     private final int[] widths;
-    private final Map<Integer, TreeMap<Integer, String>> cells = new HashMap<>();
-    private final List<TreeMap<Integer, String>> added = new ArrayList<>();
+    private final Map<Integer, NavigableMap<Integer, String>> cells = new HashMap<>();
+    private final List<NavigableMap<Integer, String>> added = new ArrayList<>();
     private final int rows;
     private int widest;
     private int headingRow = -1;
@@ -52,7 +53,7 @@ final class CsvGrid implements Grid {
         CsvText file = CsvText.of(bytes);
         SheetFault unreadable = null;
         CsvGrid asLastResort = null;
-        for (char delimiter : DELIMITERS.toCharArray()) {
+        for (char delimiter : DELIMITERS) {
             List<CsvLine> lines;
             try {
                 lines = CsvLine.split(file.text(), delimiter);
@@ -114,7 +115,7 @@ final class CsvGrid implements Grid {
     @Override
     public boolean holds(int row, int column, Value value) {
         String there = text(row, column);
-        if (value instanceof Value.Number number) {
+        if (value instanceof Value.Figure number) {
             return dialect.number(there).stream().anyMatch(found -> found == number.number());
         }
         return there.equals(dialect.text(value).strip());
@@ -163,7 +164,7 @@ final class CsvGrid implements Grid {
             throw new SheetFault("the file is in " + file.charset() + ", which cannot hold \"" + text
                     + "\"; save it once as CSV in UTF-8");
         }
-        TreeMap<Integer, String> line =
+        NavigableMap<Integer, String> line =
                 row < rows ? cells.computeIfAbsent(row, any -> new TreeMap<>()) : added.get(row - rows);
         line.put(column, dialect.cell(text));
     }
@@ -189,7 +190,7 @@ final class CsvGrid implements Grid {
             if (i > 0 || !lastLineEnds) {
                 whole.append(dialect.lineEnd());
             }
-            TreeMap<Integer, String> line = added.get(i);
+            NavigableMap<Integer, String> line = added.get(i);
             for (int column = 0; column < widest; column++) {
                 whole.append(column == 0 ? "" : dialect.delimiter()).append(line.getOrDefault(column, ""));
             }
@@ -201,7 +202,7 @@ final class CsvGrid implements Grid {
 
     private void writeLine(StringBuilder whole, int row) {
         CsvLine line = lines.get(row);
-        TreeMap<Integer, String> ours = cells.getOrDefault(row, new TreeMap<>());
+        NavigableMap<Integer, String> ours = cells.getOrDefault(row, new TreeMap<>());
         int count = Math.max(line.cells(), ours.isEmpty() ? 0 : ours.lastKey() + 1);
         boolean belowHeadings = headingRow >= 0 && row >= headingRow && row < rows && widths[row] > 0;
         if (belowHeadings && line.cells() >= headingCells) {

@@ -41,7 +41,7 @@ final class RoomBelow {
                 && sheet.rows()
                         .get(area.lastRow())
                         .cell(cell.column())
-                        .filter(above -> above.formula().equals(cell.formula()))
+                        .filter(above -> above.formula().isSameAs(cell.formula()))
                         .isPresent();
     }
 }

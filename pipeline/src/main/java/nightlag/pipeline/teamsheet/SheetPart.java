@@ -1,11 +1,12 @@
 package nightlag.pipeline.teamsheet;
 
 import java.util.ArrayList;
+import java.util.HashMap;
 import java.util.List;
+import java.util.Map;
+import java.util.NavigableMap;
 import java.util.Optional;
 import java.util.TreeMap;
-import java.util.regex.Matcher;
-import java.util.regex.Pattern;
 import nightlag.pipeline.teamsheet.BookCell.Kind;
 
 /**
@@ -21,7 +22,7 @@ import nightlag.pipeline.teamsheet.BookCell.Kind;
 record SheetPart(
         String xml,
         String prefix,
-        TreeMap<Integer, BookRow> rows,
+        NavigableMap<Integer, BookRow> rows,
         XmlTags.Tag data,
         int dataClose,
         Optional<XmlTags.Tag> dimension) {
@@ -31,15 +32,16 @@ record SheetPart(
         }
     }
 
+    /** Stands for a formula that the cell does not tell, such as that of a data table. */
+    private static final String UNKNOWN = "?";
+
     /** Reads the rows one after the other. */
     private static final class Reader {
-        /** A cell's name, with or without a sign that says it does not move. */
-        private static final Pattern CELL_IN_FORMULA = Pattern.compile("(\\$?[A-Z]{1,3})(\\$?)([0-9]{1,7})");
-
         private final String part;
         private final String xml;
         private final XmlTags tags;
         private final List<String> sharedStrings;
+        private final Map<String, Formula> sharedFormulas = new HashMap<>();
 
         private Reader(String part, String xml, XmlTags tags, List<String> sharedStrings) {
             this.part = part;
@@ -56,7 +58,7 @@ record SheetPart(
                 } else if (tags.starts("sheetData")) {
                     XmlTags.Tag data = tags.tag();
                     String prefix = tags.prefix();
-                    TreeMap<Integer, BookRow> rows = rows();
+                    NavigableMap<Integer, BookRow> rows = rows();
                     int close = data.selfClosed() ? data.end() : tags.start();
                     while (tags.next()) {
                         // the rest is copied, but it has to be whole
@@ -67,8 +69,8 @@ record SheetPart(
             throw new SheetFault("the sheet holds no cells and no place for them; is it a chart?");
         }
 
-        private TreeMap<Integer, BookRow> rows() throws SheetFault {
-            TreeMap<Integer, BookRow> rows = new TreeMap<>();
+        private NavigableMap<Integer, BookRow> rows() throws SheetFault {
+            NavigableMap<Integer, BookRow> rows = new TreeMap<>();
             int next = 0;
             while (tags.next() && !tags.ends("sheetData")) {
                 if (tags.starts("row")) {
@@ -121,24 +123,28 @@ record SheetPart(
             int style = tags.number("s", 0);
             String type = tags.attribute("t").orElse("n");
             String value = "";
-            String formula = "";
+            Formula formula = Formula.NONE;
             boolean there = false;
+            int resultStart = 0;
+            int resultEnd = 0;
             while (tags.next() && !tags.ends("c")) {
                 if (tags.starts("v")) {
+                    resultStart = tags.start();
                     value = textUntilEnd("v");
+                    resultEnd = tags.end();
                     there = true;
                 } else if (tags.starts("is")) {
                     value = SharedStrings.textUntil(tags, "is");
                     there = true;
                 } else if (tags.starts("f")) {
-                    formula = formula(row);
+                    formula = formula(new CellReference(row, column));
                 }
             }
             if (!selfClosed) {
                 end = tags.end();
             }
             Kind kind = there ? kind(type) : Kind.EMPTY;
-            return new BookCell(column, start, end, style, kind, shown(type, value), formula);
+            return new BookCell(column, start, end, style, kind, shown(type, value), formula, resultStart, resultEnd);
         }
 
         private static Kind kind(String type) {
@@ -174,19 +180,21 @@ record SheetPart(
             return text.toString();
         }
 
-        /** The same for a formula and for one that was filled down from it. */
-        private String formula(int row) throws SheetFault {
-            String group = tags.attribute("si").map(si -> "group " + si).orElse("");
+        /** One that was filled down stands at the first cell only; the others name its group. */
+        private Formula formula(CellReference cell) throws SheetFault {
+            String type = tags.attribute("t").orElse("normal");
+            String group = tags.attribute("si").orElse("");
+            Optional<CellRange> array =
+                    type.equals("array") ? tags.attribute("ref").flatMap(CellRange::of) : Optional.empty();
             String text = textUntilEnd("f");
-            if (!group.isEmpty()) {
-                return group;
+            if (type.equals("shared") && text.isEmpty()) {
+                return sharedFormulas.getOrDefault(group, new Formula(UNKNOWN, cell, Optional.empty()));
             }
-            Matcher cells = CELL_IN_FORMULA.matcher(text);
-            return "="
-                    + cells.replaceAll(cell -> Matcher.quoteReplacement(
-                            cell.group(2).isEmpty()
-                                    ? cell.group(1) + "[" + (Integer.parseInt(cell.group(3)) - 1 - row) + "]"
-                                    : cell.group()));
+            Formula formula = new Formula(text.isEmpty() ? UNKNOWN : text, cell, array);
+            if (type.equals("shared")) {
+                sharedFormulas.put(group, formula);
+            }
+            return formula;
         }
     }
 }

@@ -1,10 +1,11 @@
 package nightlag.pipeline.teamsheet;
 
-import java.math.BigDecimal;
 import java.time.LocalDate;
 import java.time.temporal.ChronoUnit;
 import java.util.Map;
+import java.util.NavigableMap;
 import java.util.Optional;
+import java.util.Set;
 import java.util.TreeMap;
 
 /** Writes cells of ours into the part of a sheet. */
@@ -31,14 +32,20 @@ final class SheetWriter {
         this.styleOfNew = styleOfNew;
     }
 
-    /** The part with these cells in it, by row and column. */
-    String write(TreeMap<Integer, TreeMap<Integer, Value>> cells) {
+    /**
+     * The part with these cells in it.
+     *
+     * @param cells ours, by row and column
+     * @param stale formulas that lose what they last gave
+     */
+    String write(NavigableMap<Integer, NavigableMap<Integer, Value>> cells, CellSet stale) {
         Splice splice = new Splice(sheet.xml());
+        dropResults(splice, sheet, stale, cells.keySet());
         StringBuilder below = new StringBuilder();
-        for (Map.Entry<Integer, TreeMap<Integer, Value>> row : cells.entrySet()) {
+        for (Map.Entry<Integer, NavigableMap<Integer, Value>> row : cells.entrySet()) {
             BookRow there = sheet.rows().get(row.getKey());
             if (there != null) {
-                splice.replace(there.start(), there.end(), changed(there, row.getValue()));
+                splice.replace(there.start(), there.end(), changed(there, row.getValue(), stale));
                 continue;
             }
             Map.Entry<Integer, BookRow> next = sheet.rows().higherEntry(row.getKey());
@@ -60,7 +67,26 @@ final class SheetWriter {
         return splice.text();
     }
 
-    private String added(int row, TreeMap<Integer, Value> cells) {
+    /** The part without what these formulas last gave. */
+    static String withoutResults(SheetPart sheet, CellSet stale) {
+        Splice splice = new Splice(sheet.xml());
+        dropResults(splice, sheet, stale, Set.of());
+        return splice.text();
+    }
+
+    private static void dropResults(Splice splice, SheetPart sheet, CellSet stale, Set<Integer> rowsApart) {
+        for (BookRow row : sheet.rows().values()) {
+            if (!rowsApart.contains(row.number())) {
+                for (BookCell cell : row.cells()) {
+                    if (stale.has(row.number(), cell.column()) && cell.resultStart() < cell.resultEnd()) {
+                        splice.replace(cell.resultStart(), cell.resultEnd(), "");
+                    }
+                }
+            }
+        }
+    }
+
+    private String added(int row, NavigableMap<Integer, Value> cells) {
         StringBuilder xml = new StringBuilder();
         xml.append('<')
                 .append(sheet.prefix())
@@ -71,11 +97,11 @@ final class SheetWriter {
         return xml.append(endTag("row")).toString();
     }
 
-    private String changed(BookRow row, TreeMap<Integer, Value> cells) {
+    private String changed(BookRow row, NavigableMap<Integer, Value> cells, CellSet stale) {
         String text = sheet.xml();
         XmlTags.Tag tag = new XmlTags.Tag(row.start(), row.tagEnd(), text.substring(row.start(), row.tagEnd()));
         StringBuilder xml = new StringBuilder(opened(cellsOutside(row, cells) ? tag.without("spans") : tag.raw()));
-        TreeMap<Integer, Value> left = new TreeMap<>(cells);
+        NavigableMap<Integer, Value> left = new TreeMap<>(cells);
         int at = row.tagEnd();
         for (BookCell there : row.cells()) {
             while (!left.isEmpty() && left.firstKey() < there.column()) {
@@ -83,7 +109,9 @@ final class SheetWriter {
                 xml.append(cell(row.number(), next.getKey(), Optional.empty(), next.getValue()));
             }
             Value ours = left.remove(there.column());
-            if (ours == null) {
+            if (ours == null && there.resultStart() < there.resultEnd() && stale.has(row.number(), there.column())) {
+                xml.append(text, at, there.resultStart()).append(text, there.resultEnd(), there.end());
+            } else if (ours == null) {
                 xml.append(text, at, there.end());
             } else {
                 xml.append(text, at, there.start())
@@ -96,7 +124,7 @@ final class SheetWriter {
     }
 
     /** Whether the hint of how far the row reaches would be wrong. */
-    private static boolean cellsOutside(BookRow row, TreeMap<Integer, Value> cells) {
+    private static boolean cellsOutside(BookRow row, NavigableMap<Integer, Value> cells) {
         return row.cells().isEmpty()
                 || cells.firstKey() < row.cells().get(0).column()
                 || cells.lastKey() > row.cells().get(row.cells().size() - 1).column();
@@ -114,19 +142,16 @@ final class SheetWriter {
             return start + " t=\"inlineStr\"><" + p + "is><" + p + "t xml:space=\"preserve\">"
                     + XmlText.cell(text.text()) + "</" + p + "t></" + p + "is>" + endTag("c");
         }
-        if (value instanceof Value.Number number) {
-            return start + ">" + number(number.number()) + endTag("c");
+        if (value instanceof Value.Figure number) {
+            return start + ">" + number(number.digits()) + endTag("c");
         }
         if (value instanceof Value.Day day) {
-            return start + ">" + number(ChronoUnit.DAYS.between(dayZero, day.date())) + endTag("c");
+            return start + ">" + number(String.valueOf(ChronoUnit.DAYS.between(dayZero, day.date()))) + endTag("c");
         }
         return start + "/>";
     }
 
-    private String number(double value) {
-        String digits = value == 0
-                ? "0"
-                : BigDecimal.valueOf(value).stripTrailingZeros().toString();
+    private String number(String digits) {
         return "<" + sheet.prefix() + "v>" + digits + "</" + sheet.prefix() + "v>";
     }
 
@@ -138,7 +163,7 @@ final class SheetWriter {
         return "</" + sheet.prefix() + name + ">";
     }
 
-    private void growDimension(Splice splice, TreeMap<Integer, TreeMap<Integer, Value>> cells) {
+    private void growDimension(Splice splice, NavigableMap<Integer, NavigableMap<Integer, Value>> cells) {
         if (sheet.dimension().isEmpty()) {
             return;
         }
@@ -146,7 +171,7 @@ final class SheetWriter {
         Optional<CellRange> before =
                 sheet.rows().isEmpty() ? Optional.empty() : tag.attribute("ref").flatMap(CellRange::of);
         Optional<CellRange> range = before;
-        for (Map.Entry<Integer, TreeMap<Integer, Value>> row : cells.entrySet()) {
+        for (Map.Entry<Integer, NavigableMap<Integer, Value>> row : cells.entrySet()) {
             for (int column :
                     new int[] {row.getValue().firstKey(), row.getValue().lastKey()}) {
                 CellReference cell = new CellReference(row.getKey(), column);

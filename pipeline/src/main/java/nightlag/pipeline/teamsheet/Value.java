@@ -1,5 +1,6 @@
 package nightlag.pipeline.teamsheet;
 
+import java.math.BigDecimal;
 import java.time.LocalDate;
 import java.util.Optional;
 import java.util.OptionalDouble;
@@ -13,7 +14,21 @@ sealed interface Value {
     record Text(String text) implements Value {}
 
     /** A finite number. */
-    record Number(double number) implements Value {}
+    record Figure(double number) implements Value {
+        private static final int MOST_PLAIN_DIGITS = 15;
+        private static final int MOST_PLAIN_ZEROS = 5;
+
+        /** Its digits, which read back the same; with an exponent where plain digits would be hard to read. */
+        String digits() {
+            if (number == 0) {
+                return "0";
+            }
+            BigDecimal digits = BigDecimal.valueOf(number).stripTrailingZeros();
+            int exponent = digits.precision() - digits.scale() - 1;
+            boolean plain = exponent > -MOST_PLAIN_ZEROS && exponent < MOST_PLAIN_DIGITS;
+            return plain ? digits.toPlainString() : digits.toString();
+        }
+    }
 
     /** A date. */
     record Day(LocalDate date) implements Value {}
@@ -22,7 +37,7 @@ sealed interface Value {
     record Nothing() implements Value {}
 
     static Value of(OptionalDouble number) {
-        return number.isPresent() ? new Number(number.getAsDouble()) : NOTHING;
+        return number.isPresent() ? new Figure(number.getAsDouble()) : NOTHING;
     }
 
     static Value of(Optional<String> text) {
