@@ -22,6 +22,7 @@ public final class TeamSheetFile {
 
     private final Path file;
     private final String sheet;
+    private final Runnable beforeSwap;
 
     /**
      * A sheet in a file, which need not be there.
@@ -30,8 +31,14 @@ public final class TeamSheetFile {
      * @param sheet the sheet of an .xlsx
      */
     public TeamSheetFile(Path file, String sheet) {
+        this(file, sheet, () -> {});
+    }
+
+    /** With something that happens while the new file is written and the old one is still in its place. */
+    TeamSheetFile(Path file, String sheet, Runnable beforeSwap) {
         this.file = file;
         this.sheet = sheet;
+        this.beforeSwap = beforeSwap;
     }
 
     /** Whether the file is there. */
@@ -71,6 +78,7 @@ public final class TeamSheetFile {
         }
         try (Replacement replacement = Replacement.of(target)) {
             replacement.write(grid::writeTo);
+            beforeSwap.run();
             open = OpenElsewhere.reason(target);
             if (open.isPresent()) {
                 return Optional.of(new Waiting(open.get()));
@@ -92,6 +100,7 @@ public final class TeamSheetFile {
         Written written = Merge.into(grid, update);
         try (Replacement replacement = Replacement.of(target)) {
             replacement.write(grid::writeTo);
+            beforeSwap.run();
             if (Files.exists(target)) {
                 return Optional.empty();
             }
