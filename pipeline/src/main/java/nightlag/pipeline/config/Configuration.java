@@ -20,7 +20,7 @@ import java.util.OptionalInt;
  * @param grades right grades by name
  * @param wrongGrades problems of wrong grade files, by the grade's name
  * @param gradeProblems every problem of every grade file, those whose grade is not even known included, in file order
- * @param notActedOn what of night and instrument files is read and checked but not acted on, such as {@code [team_sheet]}
+ * @param notActedOn what of instrument files is read and checked but not acted on, because the layout has no use for it
  */
 public record Configuration(
         Path nightFile,

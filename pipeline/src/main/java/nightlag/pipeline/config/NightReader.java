@@ -84,12 +84,9 @@ final class NightReader {
         return instrumentProblems;
     }
 
-    /** Sections of the night file that nothing is done with yet. */
+    /** What instrument files ask for and their layout has no use for. */
     List<String> notActedOn() {
         List<String> lines = new ArrayList<>();
-        if (file.has(NightKeys.TEAM_SHEET)) {
-            lines.add("[team_sheet]: read and checked, not acted on yet");
-        }
         for (Optional<Instrument> instrument : instruments.values()) {
             instrument.flatMap(NightReader::idleOnCreep).ifPresent(lines::add);
         }

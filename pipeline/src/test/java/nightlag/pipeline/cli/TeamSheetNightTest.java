@@ -1,6 +1,7 @@
 package nightlag.pipeline.cli;
 
 import static org.assertj.core.api.Assertions.assertThat;
+import static org.assertj.core.data.Percentage.withPercentage;
 
 import java.nio.file.Path;
 import java.util.Map;
@@ -39,6 +40,39 @@ class TeamSheetNightTest {
     }
 
     @Test
+    void aLimitHasAColumnForItsValueAndOneForItsVerdict() {
+        lab.run();
+        lab.grade("plover", """
+                [[limit]]
+                property = "tan_delta"
+                temperature = "25 °C"
+                frequency = "1 Hz"
+                max = 100
+
+                [[limit]]
+                name = "stiffness"
+                property = "storage_modulus"
+                temperature = "25 °C"
+                frequency = "1 Hz"
+                min = "900 kPa"
+                """);
+
+        assertThat(lab.run().exitCode()).isZero();
+
+        assertThat(lab.read(SHEET))
+                .startsWith("grade,lot,updated,tan_delta 25 °C 1 Hz [1],tan_delta 25 °C 1 Hz verdict,stiffness [kPa],"
+                        + "stiffness verdict\r\n");
+        String[] cells = lab.read(SHEET).lines().skip(1).findFirst().orElseThrow().split(",", -1);
+        double[] moduli = Lab.moduli(2 * Math.PI);
+        assertThat(Double.parseDouble(cells[3])).isCloseTo(moduli[1] / moduli[0], withPercentage(1));
+        assertThat(cells[4]).isEqualTo("conforming");
+        assertThat(Double.parseDouble(cells[5])).isCloseTo(moduli[0] / 1000, withPercentage(1));
+        assertThat(cells[6]).isEqualTo("nonconforming");
+        assertThat(cells[3])
+                .isEqualTo(lab.table("plover", "A1", "acceptance").get(0).get("value"));
+    }
+
+    @Test
     void aNightWithNothingNewDoesNotTouchIt() {
         lab.run();
         Map<String, String> before = lab.state();
@@ -58,7 +92,8 @@ class TeamSheetNightTest {
         Lab.Ended open = lab.run();
 
         assertThat(open.exitCode()).isZero();
-        assertThat(open.out()).contains("sheet   1 rows wait in the archive", "look at: team sheet (1)", "open in an office program");
+        assertThat(open.out())
+                .contains("sheet   1 rows wait in the archive", "look at: team sheet (1)", "open in an office program");
         assertThat(lab.logLines("open in an office program")).hasSize(1);
         assertThat(lab.read(SHEET)).doesNotContain("A2");
 

@@ -60,7 +60,6 @@ class AcceptedConfigurationTest {
                         intake -> intake.name() + " by " + intake.instrument().id())
                 .containsExactly("bench by bench", "bench by bench-moduli", "frame by frame");
         assertThat(configuration.gradeProblems()).isEmpty();
-        assertThat(configuration.notActedOn()).containsExactly("[team_sheet]: read and checked, not acted on yet");
     }
 
     @Test

@@ -162,10 +162,11 @@ class CsvSheetTest {
                 List.of(row("B", damping(2, "conforming"))), List.of(row("A", damping(1, "conforming"))), MARCH_1));
 
         assertThat(outcome).isEqualTo(new Written(1, 1, List.of("damping [1]"), List.of()));
-        assertThat(after(UTF_8))
-                .isEqualTo("grade,lot,updated,loss factor,damping verdict,damping [1]\r\n"
-                        + "Heron 3,A,2026-03-01,1,conforming,1\r\n"
-                        + "Heron 3,B,2026-03-01,,conforming,2\r\n");
+        assertThat(after(UTF_8).lines())
+                .containsExactly(
+                        "grade,lot,updated,loss factor,damping verdict,damping [1]",
+                        "Heron 3,A,2026-03-01,1,conforming,1",
+                        "Heron 3,B,2026-03-01,,conforming,2");
     }
 
     @Test

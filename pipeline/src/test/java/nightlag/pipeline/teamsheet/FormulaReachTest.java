@@ -32,8 +32,15 @@ class FormulaReachTest {
     @ParameterizedTest
     @ValueSource(
             strings = {
-                "price*2", "INDIRECT(\"A1\")", "OFFSET(A1,1,1)", "Table1[count]", "SUM(first:last!A1)", "A1:INDEX(B:B,3)",
-                "[1]other!A1", "#REF!+1", "?"
+                "price*2",
+                "INDIRECT(\"A1\")",
+                "OFFSET(A1,1,1)",
+                "Table1[count]",
+                "SUM(first:last!A1)",
+                "A1:INDEX(B:B,3)",
+                "[1]other!A1",
+                "#REF!+1",
+                "?"
             })
     void whatDoesNotTellMayLookAtAnything(String formula) {
         assertThat(FormulaReach.of(formula).anything()).isTrue();
@@ -61,6 +68,8 @@ class FormulaReachTest {
                 : corner.column() < 0 ? "" : new CellReference(corner.row(), corner.column()).name();
         String letters = cell.replaceAll("[0-9]", "");
         String row = corner.row() < 0 ? "" : String.valueOf(corner.row() + 1);
-        return (letters.isEmpty() ? "" : (corner.columnStays() ? "$" : "") + letters) + (corner.rowStays() ? "$" : "") + row;
+        return (letters.isEmpty() ? "" : (corner.columnStays() ? "$" : "") + letters)
+                + (corner.rowStays() ? "$" : "")
+                + row;
     }
 }

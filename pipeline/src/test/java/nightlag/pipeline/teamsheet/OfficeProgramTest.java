@@ -67,11 +67,12 @@ class OfficeProgramTest {
         sheet.update(update(MARCH_2, row("B", damping(2.5, "conforming")), row("=1+1", damping(3, "nonconforming"))));
 
         List<List<String>> lots = table(converted(file), "lots");
-        assertThat(lots).contains(
-                List.of("grade", "lot", "updated", "damping [1]", "damping verdict", "twice"),
-                List.of("Heron 3", "A", "2026-03-01", "1.25", "conforming", "2.5"),
-                List.of("Heron 3", "B", "2026-03-02", "2.5", "conforming", "5"),
-                List.of("Heron 3", "=1+1", "2026-03-02", "3", "nonconforming"));
+        assertThat(lots)
+                .contains(
+                        List.of("grade", "lot", "updated", "damping [1]", "damping verdict", "twice"),
+                        List.of("Heron 3", "A", "2026-03-01", "1.25", "conforming", "2.5"),
+                        List.of("Heron 3", "B", "2026-03-02", "2.5", "conforming", "5"),
+                        List.of("Heron 3", "=1+1", "2026-03-02", "3", "nonconforming"));
         assertThat(table(converted(file), "summary").get(0)).containsExactly("6.75");
         // the chart has a document of its own inside, with the values it shows
         String chart = chart(file);

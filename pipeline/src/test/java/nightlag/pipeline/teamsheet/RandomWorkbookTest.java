@@ -73,7 +73,8 @@ class RandomWorkbookTest {
             Lot lot = lots.computeIfAbsent(name, any -> new Lot());
             double damping = random.nextInt(4) / 3.0;
             String verdict = random.nextBoolean() ? "conforming" : "nonconforming";
-            OptionalDouble stiff = random.nextInt(5) == 0 ? OptionalDouble.empty() : OptionalDouble.of(random.nextInt(3));
+            OptionalDouble stiff =
+                    random.nextInt(5) == 0 ? OptionalDouble.empty() : OptionalDouble.of(random.nextInt(3));
             boolean changes = lot.damping != damping || !lot.verdict.equals(verdict) || !lot.stiff.equals(stiff);
             lot.changed = changes ? day : lot.changed;
             lot.known = true;
@@ -98,8 +99,12 @@ class RandomWorkbookTest {
         Set<String> found = new HashSet<>();
         for (Row row : sheet) {
             Cell name = row.getCell(columns.get("lot"));
-            if (row.getRowNum() > headingRow.getRowNum() && name != null && !name.getStringCellValue().isEmpty()) {
-                assertThat(found.add(name.getStringCellValue())).as("one row a lot").isTrue();
+            if (row.getRowNum() > headingRow.getRowNum()
+                    && name != null
+                    && !name.getStringCellValue().isEmpty()) {
+                assertThat(found.add(name.getStringCellValue()))
+                        .as("one row a lot")
+                        .isTrue();
                 Lot lot = lots.get(name.getStringCellValue());
                 if (lot != null && lot.known) {
                     assertThat(row.getCell(columns.get("damping [1]")).getNumericCellValue())
@@ -156,14 +161,18 @@ class RandomWorkbookTest {
     }
 
     private static boolean inArray(XSSFSheet sheet, Cell cell) {
-        return sheet.getSheetName().equals("other") && List.of("D1", "D2").contains(cell.getAddress().formatAsString());
+        return sheet.getSheetName().equals("other")
+                && List.of("D1", "D2").contains(cell.getAddress().formatAsString());
     }
 
     private static String told(XSSFCell cell, boolean givenByFormula) {
         var xml = cell.getCTCell();
         String formula = xml.isSetF() ? xml.getF().xmlText() : "";
         // what a formula last gave may be gone, where it no longer holds; an office program then calculates it
-        String value = !givenByFormula ? xml.getT() + " " + xml.getV() + " " + (xml.isSetIs() ? xml.getIs().xmlText() : "") : "";
+        String value = !givenByFormula
+                ? xml.getT() + " " + xml.getV() + " "
+                        + (xml.isSetIs() ? xml.getIs().xmlText() : "")
+                : "";
         return formula + "|" + xml.getS() + "|" + value;
     }
 
@@ -172,11 +181,16 @@ class RandomWorkbookTest {
         Map<String, String> kept = new LinkedHashMap<>(parts);
         kept.remove("xl/styles.xml");
         kept.computeIfPresent(
-                "xl/workbook.xml", (name, xml) -> xml.replaceFirst("<calcPr[^>]*/>", "").replaceFirst("</workbook>\\s*$", ""));
-        kept.computeIfPresent("xl/worksheets/sheet1.xml", (name, xml) -> xml.replaceFirst("(?s)<sheetData>.*</sheetData>", "")
-                .replaceFirst("<dimension[^>]*>", ""));
-        kept.computeIfPresent("xl/worksheets/sheet2.xml", (name, xml) -> xml.replaceAll("</f><v>[^<]*</v>", "</f>")
-                .replaceAll("(<c r=\"D2\"[^>]*>)<v>[^<]*</v>", "$1"));
+                "xl/workbook.xml",
+                (name, xml) -> xml.replaceFirst("<calcPr[^>]*/>", "").replaceFirst("</workbook>\\s*$", ""));
+        kept.computeIfPresent(
+                "xl/worksheets/sheet1.xml",
+                (name, xml) ->
+                        xml.replaceFirst("(?s)<sheetData>.*</sheetData>", "").replaceFirst("<dimension[^>]*>", ""));
+        kept.computeIfPresent(
+                "xl/worksheets/sheet2.xml",
+                (name, xml) ->
+                        xml.replaceAll("</f><v>[^<]*</v>", "</f>").replaceAll("(<c r=\"D2\"[^>]*>)<v>[^<]*</v>", "$1"));
         return kept;
     }
 }

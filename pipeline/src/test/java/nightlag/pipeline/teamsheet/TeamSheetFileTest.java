@@ -96,8 +96,8 @@ class TeamSheetFileTest {
             }
         };
 
-        SheetOutcome outcome = new TeamSheetFile(file, "lots", saveOnce)
-                .update(update(MARCH_1, row("A", damping(1, "conforming"))));
+        SheetOutcome outcome =
+                new TeamSheetFile(file, "lots", saveOnce).update(update(MARCH_1, row("A", damping(1, "conforming"))));
 
         assertThat(outcome).isInstanceOf(Written.class);
         assertThat(file).content().contains("Heron 3,A,saved,2026-03-01,1,conforming");
@@ -127,7 +127,8 @@ class TeamSheetFileTest {
 
     @Test
     void aLinkStaysALink() throws IOException {
-        assumeTrue(FileSystems.getDefault().supportedFileAttributeViews().contains("posix"), "links need a POSIX system");
+        assumeTrue(
+                FileSystems.getDefault().supportedFileAttributeViews().contains("posix"), "links need a POSIX system");
         Path link = Files.createSymbolicLink(folder.resolve("link.csv"), file);
 
         new TeamSheetFile(link, "lots").update(update(MARCH_1, row("A", damping(1, "conforming"))));
@@ -143,7 +144,8 @@ class TeamSheetFileTest {
 
         put();
 
-        assertThat(PosixFilePermissions.toString(Files.getPosixFilePermissions(file))).isEqualTo("rw-rw-r--");
+        assertThat(PosixFilePermissions.toString(Files.getPosixFilePermissions(file)))
+                .isEqualTo("rw-rw-r--");
     }
 
     @Test

@@ -92,7 +92,8 @@ class WorkbookSheetTest {
         put(update(MARCH_1, row("A", damping(1, "conforming"))));
         byte[] before = Files.readAllBytes(file());
 
-        assertThat(put(update(MARCH_2, row("A", damping(1, "conforming"))))).isEqualTo(new Written(0, 0, List.of(), List.of()));
+        assertThat(put(update(MARCH_2, row("A", damping(1, "conforming")))))
+                .isEqualTo(new Written(0, 0, List.of(), List.of()));
         assertThat(Files.readAllBytes(file())).isEqualTo(before);
     }
 
@@ -135,8 +136,10 @@ class WorkbookSheetTest {
         put(update(MARCH_1, row("B", damping(3, "conforming")), row("C", damping(4, "conforming"))));
 
         for (int row = 2; row <= 3; row++) {
-            assertThat(lots().getRow(row).getCell(2).getCellStyle().getDataFormatString()).isEqualTo("dd.mm.yyyy");
-            assertThat(lots().getRow(row).getCell(3).getCellStyle().getDataFormatString()).isEqualTo("0.00");
+            assertThat(lots().getRow(row).getCell(2).getCellStyle().getDataFormatString())
+                    .isEqualTo("dd.mm.yyyy");
+            assertThat(lots().getRow(row).getCell(3).getCellStyle().getDataFormatString())
+                    .isEqualTo("0.00");
         }
     }
 
@@ -256,15 +259,15 @@ class WorkbookSheetTest {
 
     private String tableAfter(XSSFWorkbook book) {
         XSSFSheet sheet = book.getSheet("lots");
-        XSSFTable table = sheet.createTable(
-                new AreaReference("A1:F3", book.getSpreadsheetVersion()));
+        XSSFTable table = sheet.createTable(new AreaReference("A1:F3", book.getSpreadsheetVersion()));
         table.getCTTable().addNewAutoFilter().setRef("A1:F3");
         Books.write(file(), book);
 
         put(update(MARCH_1, row("C", damping(3, "conforming"))));
 
         XSSFTable after = Books.read(file()).getSheet("lots").getTables().get(0);
-        assertThat(after.getCTTable().getAutoFilter().getRef()).isEqualTo(after.getCTTable().getRef());
+        assertThat(after.getCTTable().getAutoFilter().getRef())
+                .isEqualTo(after.getCTTable().getRef());
         return after.getCTTable().getRef();
     }
 
@@ -307,7 +310,8 @@ class WorkbookSheetTest {
 
         assertThat(lots().getRow(1).getCell(1).getCellType()).isEqualTo(CellType.STRING);
         assertThat(lots().getRow(1).getCell(1).getStringCellValue()).isEqualTo(lot);
-        assertThat(put(update(MARCH_2, row(lot, damping(1, "conforming"))))).isEqualTo(new Written(0, 0, List.of(), List.of()));
+        assertThat(put(update(MARCH_2, row(lot, damping(1, "conforming")))))
+                .isEqualTo(new Written(0, 0, List.of(), List.of()));
     }
 
     @Test
@@ -318,8 +322,7 @@ class WorkbookSheetTest {
         Books.write(file(), book);
 
         assertThat(put(update(MARCH_1, row("417", damping(1, "conforming")))))
-                .isEqualTo(new Written(
-                        0, 1, List.of("updated", "damping [1]", "damping verdict"), List.of()));
+                .isEqualTo(new Written(0, 1, List.of("updated", "damping [1]", "damping verdict"), List.of()));
     }
 
     @Test
@@ -329,8 +332,9 @@ class WorkbookSheetTest {
         Books.write(file(), book);
         byte[] before = Files.readAllBytes(file());
 
-        assertThat(put(update(MARCH_1, row("A")))).isEqualTo(new Refused("Heron 3 lot A stands in more than one row (B2, B6);"
-                + " leave one of them, or name the lot differently in the others"));
+        assertThat(put(update(MARCH_1, row("A"))))
+                .isEqualTo(new Refused("Heron 3 lot A stands in more than one row (B2, B6);"
+                        + " leave one of them, or name the lot differently in the others"));
         assertThat(Files.readAllBytes(file())).isEqualTo(before);
     }
 
