@@ -62,7 +62,8 @@ class TeamSheetNightTest {
         assertThat(lab.read(SHEET))
                 .startsWith("grade,lot,updated,tan_delta 25 °C 1 Hz [1],tan_delta 25 °C 1 Hz verdict,stiffness [kPa],"
                         + "stiffness verdict\r\n");
-        String[] cells = lab.read(SHEET).lines().skip(1).findFirst().orElseThrow().split(",", -1);
+        String[] cells =
+                lab.read(SHEET).lines().skip(1).findFirst().orElseThrow().split(",", -1);
         double[] moduli = Lab.moduli(2 * Math.PI);
         assertThat(Double.parseDouble(cells[3])).isCloseTo(moduli[1] / moduli[0], withPercentage(1));
         assertThat(cells[4]).isEqualTo("conforming");
