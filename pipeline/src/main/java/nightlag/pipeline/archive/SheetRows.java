@@ -11,22 +11,9 @@ import java.util.List;
 
 /** The rows of the team sheet, each kept with where it was last written. */
 final class SheetRows {
-    /** An archive from before there were such rows gets the table with its first row. */
-    static final String TABLE = """
-            CREATE TABLE IF NOT EXISTS sheet_row (
-              grade   TEXT NOT NULL,
-              lot     TEXT NOT NULL,
-              body    TEXT NOT NULL,         -- the row, JSON
-              written TEXT NOT NULL,         -- the file and sheet it stands in as it is here; empty: none yet
-              PRIMARY KEY (grade, lot)
-            )""";
-
     private SheetRows() {}
 
     static void put(Connection connection, LotName lot, String body) throws SQLException {
-        try (Statement table = connection.createStatement()) {
-            table.executeUpdate(TABLE);
-        }
         try (PreparedStatement put = connection.prepareStatement("""
                 INSERT INTO sheet_row (grade, lot, body, written) VALUES (?, ?, ?, '')
                 ON CONFLICT (grade, lot) DO UPDATE SET body = excluded.body, written = ''
@@ -40,19 +27,12 @@ final class SheetRows {
 
     static List<KeptRow> all(Connection connection) throws SQLException {
         List<KeptRow> rows = new ArrayList<>();
-        try (Statement select = connection.createStatement()) {
-            try (ResultSet table =
-                    select.executeQuery("SELECT 1 FROM sqlite_schema WHERE type = 'table' AND name = 'sheet_row'")) {
-                if (!table.next()) {
-                    return rows;
-                }
-            }
-            try (ResultSet row =
-                    select.executeQuery("SELECT grade, lot, body, written FROM sheet_row ORDER BY grade, lot")) {
-                while (row.next()) {
-                    rows.add(new KeptRow(
-                            new LotName(row.getString(1), row.getString(2)), row.getString(3), row.getString(4)));
-                }
+        try (Statement select = connection.createStatement();
+                ResultSet row =
+                        select.executeQuery("SELECT grade, lot, body, written FROM sheet_row ORDER BY grade, lot")) {
+            while (row.next()) {
+                rows.add(new KeptRow(
+                        new LotName(row.getString(1), row.getString(2)), row.getString(3), row.getString(4)));
             }
         }
         return rows;

@@ -60,7 +60,7 @@ final class Store {
           due        INTEGER NOT NULL,     -- 1: its tables are behind what stands here
           conclusion TEXT NOT NULL,        -- digest of what its tables were made with
           PRIMARY KEY (grade, lot)
-        )""", SheetRows.TABLE,
+        )""",
     };
 
     /** What layout 2 has more than layout 1; an archive of layout 1 gets it when it is opened. */
@@ -77,6 +77,14 @@ final class Store {
           quantity TEXT NOT NULL,          -- what a limit is on, and where
           number   REAL NOT NULL,          -- the lot's value, in the limit's unit, K for a temperature
           PRIMARY KEY (grade, lot, quantity)
+        )""",
+        """
+        CREATE TABLE sheet_row (
+          grade   TEXT NOT NULL,
+          lot     TEXT NOT NULL,
+          body    TEXT NOT NULL,           -- the lot's row in the team sheet, JSON
+          written TEXT NOT NULL,           -- the file and sheet it stands in as it is here; empty: none yet
+          PRIMARY KEY (grade, lot)
         )""",
     };
 

@@ -80,7 +80,7 @@ class ArchiveFileTest {
     }
 
     @ParameterizedTest
-    @CsvSource({"2, a newer", "0, an older"})
+    @CsvSource({"3, a newer", "0, an older"})
     void anArchiveOfAnotherLayoutSaysWhich(int version, String which) throws ArchiveException, SQLException {
         fill(1);
         execute("PRAGMA user_version = " + version);

@@ -57,6 +57,25 @@ class ArchiveTest {
     }
 
     @Test
+    void aRowOfTheTeamSheetIsDueUntilItIsWrittenAndAgainWhenItChanges() throws ArchiveException {
+        try (Archive archive = open()) {
+            archive.keepSheetRow(EIGHTEEN, "18");
+            archive.keepSheetRow(SEVENTEEN, "17");
+            assertThat(archive.sheetRows())
+                    .containsExactly(new KeptRow(SEVENTEEN, "17", ""), new KeptRow(EIGHTEEN, "18", ""));
+
+            archive.sheetRowsWritten(List.of(SEVENTEEN, EIGHTEEN), "team.csv");
+            archive.keepSheetRow(SEVENTEEN, "17");
+            archive.keepSheetRow(EIGHTEEN, "18 again");
+        }
+
+        try (Archive archive = open()) {
+            assertThat(archive.sheetRows())
+                    .containsExactly(new KeptRow(SEVENTEEN, "17", "team.csv"), new KeptRow(EIGHTEEN, "18 again", ""));
+        }
+    }
+
+    @Test
     void openingAndReadingTouchesNothing() throws ArchiveException, IOException {
         try (Archive archive = open()) {
             archive.commit(List.of(reduced("a.csv", SEVENTEEN, 3), setAside("bad.csv", "empty")));
