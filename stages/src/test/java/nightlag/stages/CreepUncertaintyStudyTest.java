@@ -54,8 +54,8 @@ class CreepUncertaintyStudyTest {
     private static final RelaxationModes MELT = RelaxationModes.of(
             0, new double[] {1e-3, 1e-2, 0.08, 0.5, 2.5}, new double[] {9e4, 6e4, 3.5e4, 1.2e4, 2e3});
     /** An invented solid: J0 = 1/(3 MPa) and three modes. */
-    private static final RetardationModes SOLID = RetardationModes.of(
-            1 / 3e6, 0, new double[] {0.05, 0.5, 4}, new double[] {1e-7, 3e-7, 5e-7});
+    private static final RetardationModes SOLID =
+            RetardationModes.of(1 / 3e6, 0, new double[] {0.05, 0.5, 4}, new double[] {1e-7, 3e-7, 5e-7});
 
     /** What the draws of one figure came to. */
     private static final class Tally {
@@ -109,7 +109,8 @@ class CreepUncertaintyStudyTest {
         Map<String, Double> truths = truths(material);
         for (int draw = 0; draw < draws; draw++) {
             Random random = new Random(1000 + draw);
-            CreepData data = CreepData.of(ShiftedCreep.unmoved(List.of(record(material, intervalS, loadedS, noise, random))));
+            CreepData data =
+                    CreepData.of(ShiftedCreep.unmoved(List.of(record(material, intervalS, loadedS, noise, random))));
             if (withModuli) {
                 data = data.with(moduli(material, noise, random), Optional.empty());
             }
@@ -166,7 +167,8 @@ class CreepUncertaintyStudyTest {
                     * ((t >= load ? material.creepPerPa(t - load) : 0)
                             - (t >= unload ? material.creepPerPa(t - unload) : 0));
             double held = t >= load && t < unload ? STRESS_PA : 0;
-            strain[i] = exact + noise * (exact + 0.1 * STRESS_PA * material.instantaneousPerPa()) * random.nextGaussian();
+            strain[i] =
+                    exact + noise * (exact + 0.1 * STRESS_PA * material.instantaneousPerPa()) * random.nextGaussian();
             stress[i] = held + noise * (held + 0.1 * STRESS_PA) * random.nextGaussian();
         }
         return CreepAnalysis.of(
@@ -176,7 +178,12 @@ class CreepUncertaintyStudyTest {
                         OptionalDouble.of(298.15),
                         OptionalDouble.empty()),
                 new Waveform(
-                        DoubleStream.of(timeS).map(t -> t + STARTED_S).toArray(), strain, stress, new double[0], OptionalDouble.empty(), 0),
+                        DoubleStream.of(timeS).map(t -> t + STARTED_S).toArray(),
+                        strain,
+                        stress,
+                        new double[0],
+                        OptionalDouble.empty(),
+                        0),
                 SignalCorrection.of(
                         GeometrySpec.none(), Corrections.none(), DeformationSignal.STRAIN, LoadSignal.STRESS),
                 new Ranges(Optional.empty(), Optional.empty()),

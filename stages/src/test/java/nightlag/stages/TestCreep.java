@@ -73,7 +73,8 @@ public record TestCreep(
         }
         if (untilS > loadedS) {
             double before = STRESS_PA * compliancePerPa.applyAsDouble(loadedS);
-            steps.add(new CreepStep(CreepPart.RECOVERY, loadedS, 0, 0, -STRESS_PA, 0, before, 0, OptionalDouble.empty()));
+            steps.add(
+                    new CreepStep(CreepPart.RECOVERY, loadedS, 0, 0, -STRESS_PA, 0, before, 0, OptionalDouble.empty()));
             for (double t = firstS; t <= untilS - loadedS; t *= Math.pow(10, 0.05)) {
                 double strain =
                         STRESS_PA * (compliancePerPa.applyAsDouble(loadedS + t) - compliancePerPa.applyAsDouble(t));

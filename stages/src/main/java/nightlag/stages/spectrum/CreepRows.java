@@ -21,7 +21,6 @@ final class CreepRows {
     /** By what factor a material is tried to be stiffer at once. */
     private static final double FASTER = 1.15;
 
-
     private final CreepData data;
     private final boolean liquid;
     private final ComplianceReadings unmoved;

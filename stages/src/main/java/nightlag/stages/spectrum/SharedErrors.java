@@ -122,7 +122,8 @@ final class SharedErrors {
                     readings.stream().mapToDouble(CreepReading::timeS).max().orElseThrow();
             int steps = (int) Math.ceil(MODES_PER_DECADE * Math.log10(BEYOND * BEYOND * longest / shortest));
             times = IntStream.rangeClosed(0, steps)
-                    .mapToDouble(i -> shortest / BEYOND * Math.pow(BEYOND * BEYOND * longest / shortest, (double) i / steps))
+                    .mapToDouble(
+                            i -> shortest / BEYOND * Math.pow(BEYOND * BEYOND * longest / shortest, (double) i / steps))
                     .toArray();
             found = fit(u);
         }
@@ -132,8 +133,7 @@ final class SharedErrors {
             double[] weights = new double[u.length];
             double[] target = new double[u.length];
             for (int i = 0; i < u.length; i++) {
-                double change =
-                        curve.steps().get(readings.get(i).step() - 1).changePa();
+                double change = curve.steps().get(readings.get(i).step() - 1).changePa();
                 weights[i] = 1 / Math.max(u[i], Math.abs(readings.get(i).complianceUPerPa() * change));
                 target[i] = weights[i] * (readings.get(i).strain() - zero);
             }
@@ -141,7 +141,8 @@ final class SharedErrors {
             for (int j = 0; j < columns.length; j++) {
                 for (int i = 0; i < u.length; i++) {
                     int kind = j;
-                    columns[j][i] = weights[i] * sum(i, (k, since) -> curve.steps().get(k).changePa() * part(kind, since));
+                    columns[j][i] = weights[i]
+                            * sum(i, (k, since) -> curve.steps().get(k).changePa() * part(kind, since));
                 }
             }
             return NonNegativeLeastSquares.solve(columns, target);
@@ -205,7 +206,8 @@ final class SharedErrors {
             List<double[]> columns = new ArrayList<>();
             double zeroU = steps.get(0).strainBeforeU();
             columns.add(readings.stream().mapToDouble(reading -> zeroU).toArray());
-            // what drives the load and what records it often share a clock: all steps lie at like places between samples, and
+            // what drives the load and what records it often share a clock: all steps lie at like places between
+            // samples, and
             // every later one may be off by as much again on its own
             columns.add(column((n, since) -> byInstant(steps.get(n), since)));
             for (int k = 0; k < steps.size(); k++) {

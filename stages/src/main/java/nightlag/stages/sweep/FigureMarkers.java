@@ -160,8 +160,8 @@ public final class FigureMarkers {
      */
     private boolean apart(Passage one, Passage next) {
         List<Place> places = curve.places();
-        Optional<LocalFigure> local =
-                LocalFigure.of(places, plan, one.first(), next.last(), next.steps().get(0));
+        Optional<LocalFigure> local = LocalFigure.of(
+                places, plan, one.first(), next.last(), next.steps().get(0));
         return local.isEmpty()
                 || IntStream.rangeClosed(one.last(), next.first())
                         .anyMatch(i -> local.get().standsOut(places.get(i).at()));
@@ -241,8 +241,7 @@ public final class FigureMarkers {
             return false;
         }
         Optional<Figure> missing = plan.report()
-                .filter(report ->
-                        from.mean(report).isEmpty() || to.mean(report).isEmpty());
+                .filter(report -> from.mean(report).isEmpty() || to.mean(report).isEmpty());
         missing.ifPresent(report -> absent(FigureReason.FIGURE_MARKER_NOT_REPORTED, report));
         return missing.isEmpty();
     }
@@ -271,7 +270,10 @@ public final class FigureMarkers {
         Place after = curve.places().get(step + 1);
         String report = plan.report()
                 .map(figure -> figure.name()
-                        + (Math.min(before.mean(figure).orElse(0), after.mean(figure).orElse(0)) > 0
+                        + (Math.min(
+                                                before.mean(figure).orElse(0),
+                                                after.mean(figure).orElse(0))
+                                        > 0
                                 ? " (log)"
                                 : " (linear)")
                         + " where ")
@@ -293,12 +295,7 @@ public final class FigureMarkers {
     }
 
     private void absent(FigureReason why, Figure figure) {
-        notes.add(why.with(
-                plan.name(),
-                curve.name().specimen(),
-                curve.name().sweep(),
-                where(curve),
-                figure.name()));
+        notes.add(why.with(plan.name(), curve.name().specimen(), curve.name().sweep(), where(curve), figure.name()));
     }
 
     private static String where(FigureCurve curve) {

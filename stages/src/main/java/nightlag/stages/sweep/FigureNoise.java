@@ -1,7 +1,6 @@
 package nightlag.stages.sweep;
 
 import java.util.List;
-import java.util.Optional;
 import java.util.OptionalDouble;
 import nightlag.stages.sweep.FigureCurve.Place;
 
@@ -91,7 +90,11 @@ final class FigureNoise {
     }
 
     private double report(Place place) {
-        return drawn.plan().report().map(place::mean).orElse(OptionalDouble.empty()).orElse(Double.NaN);
+        return drawn.plan()
+                .report()
+                .map(place::mean)
+                .orElse(OptionalDouble.empty())
+                .orElse(Double.NaN);
     }
 
     private static double[] column(double[][] rows, int column) {

@@ -56,8 +56,7 @@ record FigureSeries(
             if (other.isPresent()) {
                 raw[i] = place.mean(other.get()).orElseThrow();
                 report[i] = DrawnFigure.scaled(raw[i], logReport);
-                reportVariance[i] = noise.variance(place, 0, 1).orElse(0)
-                        + least(logReport ? 1 : Math.abs(raw[i]));
+                reportVariance[i] = noise.variance(place, 0, 1).orElse(0) + least(logReport ? 1 : Math.abs(raw[i]));
                 shared[i] = (noise.variance(place, 1, 1).orElse(0)
                                 - noise.variance(place, 1, -1).orElse(0))
                         / 4;

@@ -22,6 +22,7 @@ final class LocalFigure {
     private static final int FEWEST = 3;
     /** Of fifth degree from so many on. */
     private static final int FEWEST_FOR_PARABOLA = 5;
+
     private static final double STANDS_OUT = 3;
     private static final int STEPS = 4;
     private static final int HALVINGS = 50;
@@ -39,7 +40,9 @@ final class LocalFigure {
         this.logReport = logReport;
         this.series = series;
         int freedom = series.count() - (series.count() < FEWEST_FOR_PARABOLA ? 2 : 3);
-        this.doubt = drawn.overFrequency() && series.count() >= FEWEST_FOR_PARABOLA ? 1 : freedom > 3 ? freedom / (freedom - 2.0) : 3;
+        this.doubt = drawn.overFrequency() && series.count() >= FEWEST_FOR_PARABOLA
+                ? 1
+                : freedom > 3 ? freedom / (freedom - 2.0) : 3;
         // a curve over frequency may wave as single modes make it, even where noise or sparse frequencies hide it
         this.figure = series.figure(least(drawn.log() ? 1 : series.size()));
     }
@@ -101,7 +104,8 @@ final class LocalFigure {
         double slope = figure.derivative(zero.place(), 1);
         double place = drawn.fromPlace(zero.place());
         if (drawn.plan().report().isEmpty()) {
-            return new Reached(place, place, u(zero.u() * (drawn.overFrequency() ? place : 1)), "by a smooth curve", source);
+            return new Reached(
+                    place, place, u(zero.u() * (drawn.overFrequency() ? place : 1)), "by a smooth curve", source);
         }
         SmoothCurve report = series.report(least(logReport ? 1 : series.reportSize()));
         double value = DrawnFigure.unscaled(report.derivative(zero.place(), 0), logReport);
@@ -131,8 +135,7 @@ final class LocalFigure {
         SmoothCurve.Local there = curve.at(place, 0);
         double noise = there.noise()[0][0];
         double besides = doubt * Math.max(there.full()[0][0] - noise, 0);
-        return new SmoothCurve.Estimate(
-                there.derivatives()[0], Math.sqrt(Math.max(noise + besides / 4, besides)));
+        return new SmoothCurve.Estimate(there.derivatives()[0], Math.sqrt(Math.max(noise + besides / 4, besides)));
     }
 
     private Zero zero(StraightLine line, double[] looked) {

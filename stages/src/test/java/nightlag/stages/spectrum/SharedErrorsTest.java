@@ -85,7 +85,8 @@ class SharedErrorsTest {
         CreepCurve curve = with(step -> changed(step, 0, 0, 1e-5));
         SharedErrors errors = SharedErrors.of(curve, 0);
         int n = errors.size();
-        double[] u = curve.readings().stream().mapToDouble(CreepReading::strainU).toArray();
+        double[] u =
+                curve.readings().stream().mapToDouble(CreepReading::strainU).toArray();
         double[] x = IntStream.range(0, n).mapToDouble(i -> 1e-4 * (1 + i)).toArray();
         double[] y = IntStream.range(0, n).mapToDouble(i -> 1e-4 * Math.cos(i)).toArray();
 
@@ -122,7 +123,8 @@ class SharedErrorsTest {
         double instantU = 0.1;
         double u = relativeU("steady_state_compliance", step -> changed(step, instantU, 0, 0));
         assertThat(u).isBetween(0.95 * instantU * 1e-7 / 1.5e-6, 1.5 * instantU * 1e-7 / 1.5e-6);
-        assertThat(relativeU("zero_shear_viscosity", step -> changed(step, instantU, 0, 0))).isLessThan(3e-3);
+        assertThat(relativeU("zero_shear_viscosity", step -> changed(step, instantU, 0, 0)))
+                .isLessThan(3e-3);
     }
 
     /** What is over before the first reading is in J0 or not: neither bound is the other's. */

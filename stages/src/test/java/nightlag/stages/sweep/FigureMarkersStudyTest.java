@@ -1,14 +1,11 @@
 package nightlag.stages.sweep;
 
-import static org.assertj.core.api.Assertions.assertThat;
-
 import java.util.ArrayList;
 import java.util.List;
 import java.util.Optional;
 import java.util.OptionalDouble;
 import java.util.Random;
 import java.util.function.DoubleFunction;
-import nightlag.stages.Study;
 import nightlag.stages.TestPoints;
 import nightlag.stages.moduli.Figure;
 import nightlag.stages.moduli.Marker;
@@ -18,8 +15,6 @@ import nightlag.stages.numeric.Complex;
 import nightlag.stages.sweep.FigureMarkerPlan.Along;
 import nightlag.stages.sweep.FigureMarkerPlan.Scale;
 import org.junit.jupiter.api.Tag;
-import org.junit.jupiter.params.ParameterizedTest;
-import org.junit.jupiter.params.provider.CsvSource;
 
 /**
  * How often the 95 % intervals of a grade's own crossings hold the truth where G' and G'' have 1 % noise each. The places measured
@@ -98,8 +93,7 @@ class FigureMarkersStudyTest {
         /** 1 MPa of rubber, and 1 GPa of glass by way of a relaxation that is broad. */
         private static Complex glass(double reduced) {
             Complex power = Complex.polar(Math.sqrt(reduced), Math.PI / 4);
-            return new Complex(1e6, 0)
-                    .plus(power.over(Complex.ONE.plus(power)).times(1e9));
+            return new Complex(1e6, 0).plus(power.over(Complex.ONE.plus(power)).times(1e9));
         }
 
         @Override
@@ -169,7 +163,8 @@ class FigureMarkersStudyTest {
         }
     }
 
-    private static List<ModulusPoint> measured(Material material, double noise, boolean known, double shift, Random random) {
+    private static List<ModulusPoint> measured(
+            Material material, double noise, boolean known, double shift, Random random) {
         List<ModulusPoint> points = new ArrayList<>();
         for (double place : material.places(shift)) {
             Complex exact = material.at(place);
@@ -197,7 +192,8 @@ class FigureMarkersStudyTest {
         int line = 0;
         double size = along == Along.TEMPERATURE && what != What.MAGNITUDE_AT_PHASE ? 1 : expected;
         for (int seed = 1; seed <= draws; seed++) {
-            List<Marker> markers = FigureMarkers.find(measured(material, noise, known, seed * 0.618034 % 1, new Random(seed)), plan)
+            List<Marker> markers = FigureMarkers.find(
+                            measured(material, noise, known, seed * 0.618034 % 1, new Random(seed)), plan)
                     .markers();
             if (markers.size() == 1) {
                 Marker marker = markers.get(0);
@@ -216,8 +212,17 @@ class FigureMarkersStudyTest {
         }
         System.out.printf(
                 "%-34s %-18s %s one %d many %d line %d  within %.1f  rms err %.3g  rms u %.3g  rms z %.2f worst %.3g%n",
-                name, what, known ? "" : "no u", one, many, line, 100.0 * within / one, Math.sqrt(squares / one), Math.sqrt(us / one),
-                Math.sqrt(z / one), worst);
+                name,
+                what,
+                known ? "" : "no u",
+                one,
+                many,
+                line,
+                100.0 * within / one,
+                Math.sqrt(squares / one),
+                Math.sqrt(us / one),
+                Math.sqrt(z / one),
+                worst);
     }
 
     public static void main(String[] args) {
@@ -227,14 +232,29 @@ class FigureMarkersStudyTest {
         for (What what : Boolean.getBoolean("t") ? new What[0] : What.values()) {
             for (Liquid liquid : Liquid.values()) {
                 for (double per : new double[] {3, 3.7, 4, 5, 10, 20}) {
-                    run(liquid + " " + per, new OverFrequency(liquid, per), Along.FREQUENCY, what, at[liquid.ordinal()], known, noise);
+                    run(
+                            liquid + " " + per,
+                            new OverFrequency(liquid, per),
+                            Along.FREQUENCY,
+                            what,
+                            at[liquid.ordinal()],
+                            known,
+                            noise);
                 }
             }
         }
-        for (What what : new What[] {What.STORAGE, What.PHASE, What.MAGNITUDE, What.TAN_DELTA, What.MAGNITUDE_AT_PHASE}) {
+        for (What what :
+                new What[] {What.STORAGE, What.PHASE, What.MAGNITUDE, What.TAN_DELTA, What.MAGNITUDE_AT_PHASE}) {
             for (boolean glass : new boolean[] {false, true}) {
                 for (double step : new double[] {2, 5, 7, 10}) {
-                    run((glass ? "glass " : "melt ") + step, new OverTemperature(glass, step), Along.TEMPERATURE, what, (glass ? 88 : 195) + ZERO_C, known, noise);
+                    run(
+                            (glass ? "glass " : "melt ") + step,
+                            new OverTemperature(glass, step),
+                            Along.TEMPERATURE,
+                            what,
+                            (glass ? 88 : 195) + ZERO_C,
+                            known,
+                            noise);
                 }
             }
         }
