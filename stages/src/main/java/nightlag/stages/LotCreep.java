@@ -203,7 +203,7 @@ final class LotCreep {
     }
 
     private static ShiftedCreep shifted(Group group, TemperatureShift to) {
-        return ShiftedCreep.of(
+        return new ShiftedCreep(
                 group.curves(), LN_10 * to.log10A(group.temperatureK()), LN_10 * to.log10B(group.temperatureK()));
     }
 

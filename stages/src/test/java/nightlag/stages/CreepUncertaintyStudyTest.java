@@ -221,6 +221,7 @@ class CreepUncertaintyStudyTest {
         "melt, 0.001, 20, 0.01, false",
         "melt, 0.01, 20, 0.003, false",
         "melt, 0.01, 20, 0.01, false",
+        "melt, 0.01, 3, 0.003, false",
         "melt, 0.05, 20, 0.0003, false",
         "melt, 0.05, 20, 0.003, false",
         "melt, 0.05, 20, 0.01, false",

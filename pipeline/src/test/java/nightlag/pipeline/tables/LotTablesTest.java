@@ -145,8 +145,8 @@ class LotTablesTest {
                 OptionalDouble.empty(),
                 true,
                 List.of(
-                        new CreepStep(CreepPart.LOAD, 0, 0, 0.5, 100, 0, 0, 0, OptionalDouble.empty()),
-                        new CreepStep(CreepPart.RECOVERY, 10, 0, 0.5, -100, 0, 2e-3, 0, OptionalDouble.empty())),
+                        new CreepStep(CreepPart.LOAD, 0, 0, 0.5, 100, 0, 0, 0),
+                        new CreepStep(CreepPart.RECOVERY, 10, 0, 0.5, -100, 0, 2e-3, 0)),
                 List.of(
                         new CreepReading(2, 11, 1, 0, 1e-3, 1e-6, 1e-5, 1e-8),
                         new CreepReading(1, 2.5, 2.5, 100, 2e-3, 1e-6, 2e-5, 1e-8)),

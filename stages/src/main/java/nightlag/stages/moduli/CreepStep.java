@@ -25,4 +25,17 @@ public record CreepStep(
         double changeUPa,
         double strainBefore,
         double strainBeforeU,
-        OptionalDouble stressBeforeUPa) {}
+        OptionalDouble stressBeforeUPa) {
+    /** A step of which only the u of the whole change is known. */
+    public CreepStep(
+            CreepPart part,
+            double atS,
+            double atUS,
+            double riseS,
+            double changePa,
+            double changeUPa,
+            double strainBefore,
+            double strainBeforeU) {
+        this(part, atS, atUS, riseS, changePa, changeUPa, strainBefore, strainBeforeU, OptionalDouble.empty());
+    }
+}

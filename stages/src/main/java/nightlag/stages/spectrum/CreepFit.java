@@ -82,7 +82,22 @@ public final class CreepFit {
 
     private FittedCompliance find(OptionalInt wanted) {
         FittedCompliance best = best(mergedGrid());
-        return wanted.isPresent() ? withExactly(wanted.getAsInt(), best) : refined(best, STEPS_AT_LAST);
+        return wanted.isPresent()
+                ? withExactly(wanted.getAsInt(), best)
+                : withoutUntoldInstantaneous(refined(best, STEPS_AT_LAST));
+    }
+
+    /** A J0 that may be nothing, beside a mode that is over by the first reading: that mode is all that is known of it. */
+    private FittedCompliance withoutUntoldInstantaneous(FittedCompliance found) {
+        if (!(found.instantaneous() > 0)
+                || found.count() < 2
+                || found.times()[0] > readings.shortestS()
+                || rows.uOfLogarithm(found, 2 * found.count()) < UNTOLD) {
+            return found;
+        }
+        FittedCompliance without = new FittedCompliance(
+                found.times(), found.strengths(), 0, found.fluidity(), found.moves(), Double.NaN);
+        return refined(without, STEPS_AT_LAST);
     }
 
     private FittedCompliance mergedGrid() {

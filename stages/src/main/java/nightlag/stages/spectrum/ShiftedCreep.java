@@ -15,12 +15,6 @@ public final class ShiftedCreep {
     private final double lnA;
     private final double lnB;
 
-    private ShiftedCreep(List<Weighed> curves, double lnA, double lnB) {
-        this.curves = curves;
-        this.lnA = lnA;
-        this.lnB = lnB;
-    }
-
     /** A curve and what its strains err by, which no shift changes. */
     record Weighed(CreepCurve curve, SharedErrors errors) {}
 
@@ -31,23 +25,29 @@ public final class ShiftedCreep {
      * @param lnA ln a
      * @param lnB ln b
      */
-    public static ShiftedCreep of(List<CreepCurve> curves, double lnA, double lnB) {
-        return new ShiftedCreep(
+    public ShiftedCreep(List<CreepCurve> curves, double lnA, double lnB) {
+        this(
+                lnA,
+                lnB,
                 curves.stream()
                         .map(curve -> new Weighed(curve, SharedErrors.of(curve, LEAST_RELATIVE_U)))
-                        .toList(),
-                lnA,
-                lnB);
+                        .toList());
+    }
+
+    private ShiftedCreep(double lnA, double lnB, List<Weighed> curves) {
+        this.curves = curves;
+        this.lnA = lnA;
+        this.lnB = lnB;
     }
 
     /** Curves measured at the temperature of the spectrum. */
     public static ShiftedCreep unmoved(List<CreepCurve> curves) {
-        return of(curves, 0, 0);
+        return new ShiftedCreep(curves, 0, 0);
     }
 
     /** The same curves, shifted by so much more. */
     ShiftedCreep moved(double byLnA, double byLnB) {
-        return new ShiftedCreep(curves, lnA + byLnA, lnB + byLnB);
+        return new ShiftedCreep(lnA + byLnA, lnB + byLnB, curves);
     }
 
     List<Weighed> curves() {
