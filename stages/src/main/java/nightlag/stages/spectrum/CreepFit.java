@@ -95,8 +95,8 @@ public final class CreepFit {
                 || rows.uOfLogarithm(found, 2 * found.count()) < UNTOLD) {
             return found;
         }
-        FittedCompliance without = new FittedCompliance(
-                found.times(), found.strengths(), 0, found.fluidity(), found.moves(), Double.NaN);
+        FittedCompliance without =
+                new FittedCompliance(found.times(), found.strengths(), 0, found.fluidity(), found.moves(), Double.NaN);
         return refined(without, STEPS_AT_LAST);
     }
 
