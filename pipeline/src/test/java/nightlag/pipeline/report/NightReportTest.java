@@ -8,19 +8,29 @@ import com.fasterxml.jackson.databind.json.JsonMapper;
 import java.io.IOException;
 import java.nio.file.Files;
 import java.nio.file.Path;
+import java.util.ArrayList;
 import java.util.List;
 import java.util.Optional;
 import java.util.OptionalDouble;
 import java.util.stream.IntStream;
+import java.util.stream.Stream;
 import nightlag.pipeline.tables.RandomLot;
 import nightlag.stages.LotResult;
 import nightlag.stages.acceptance.Judgement;
 import nightlag.stages.acceptance.LimitPlan;
 import nightlag.stages.acceptance.ShownUnit;
 import nightlag.stages.acceptance.Verdict;
+import nightlag.stages.geometry.DeformationMode;
+import nightlag.stages.moduli.CreepCurve;
+import nightlag.stages.moduli.CreepPart;
+import nightlag.stages.moduli.CreepReading;
+import nightlag.stages.moduli.CreepStep;
 import nightlag.stages.moduli.Marker;
 import nightlag.stages.moduli.Moduli;
 import nightlag.stages.moduli.ModulusReading;
+import nightlag.stages.moduli.PointKey;
+import nightlag.stages.moduli.Quality;
+import nightlag.stages.spectrum.RetardationModes;
 import nightlag.stages.spectrum.SpectrumRow;
 import nightlag.stages.superposition.MasterPoint;
 import org.junit.jupiter.api.Test;
@@ -168,6 +178,98 @@ class NightReportTest {
             double loss = 1000 * Math.sqrt(line.get("x").get(i).asDouble() / 2);
             assertThat(line.get("y").get(i).asDouble() / loss).isCloseTo(Math.PI / 4, within(1e-3));
         }
+    }
+
+    /** Exact: a Burgers body, creep and recovery; the line of the fit goes through the readings. */
+    @Test
+    void creepIsDrawnWithWhatTheFittedModesSayOfIt() throws IOException {
+        RetardationModes burgers = RetardationModes.of(1e-6, 1e-7, new double[] {2}, new double[] {0.5e-6});
+        LotResult result = LotResult.builder()
+                .creep(List.of(creep(burgers)))
+                .spectrum(Stream.concat(
+                                discrete(
+                                        SpectrumRow.Kind.RELAXATION,
+                                        burgers.relaxation().timesS(),
+                                        burgers.relaxation().strengthsPa()),
+                                discrete(SpectrumRow.Kind.RETARDATION, burgers.timesS(), burgers.strengthsPerPa()))
+                        .toList())
+                .build();
+
+        JsonNode charts = JsonMapper.builder().build().readTree(ChartJson.of(LotCharts.of(result)));
+
+        JsonNode compliance = find(charts, "Creep and recovery").get("series");
+        assertThat(compliance.findValuesAsText("name"))
+                .containsExactly(
+                        "specimen 1, 25.0 °C, load", "fitted modes", "specimen 1, 25.0 °C, recovery", "fitted modes");
+        assertLineThroughPoints(compliance.get(0), compliance.get(1));
+        assertLineThroughPoints(compliance.get(2), compliance.get(3));
+        // what has flowed does not come back
+        assertThat(compliance.get(2).get("y").get(3).asDouble()).isLessThan(1.5e-6);
+        JsonNode strain = find(charts, "Strain of creep records").get("series");
+        assertLineThroughPoints(strain.get(0), strain.get(1));
+        assertThat(strain.get(0).get("x")).hasSize(8);
+    }
+
+    @Test
+    void creepWithoutModesAtItsTemperatureIsDrawnAlone() throws IOException {
+        RetardationModes burgers = RetardationModes.of(1e-6, 1e-7, new double[] {2}, new double[] {0.5e-6});
+        LotResult result = LotResult.builder().creep(List.of(creep(burgers))).build();
+
+        JsonNode charts = JsonMapper.builder().build().readTree(ChartJson.of(LotCharts.of(result)));
+
+        assertThat(find(charts, "Creep and recovery").get("series")).hasSize(2);
+        assertThat(charts.findValuesAsText("name")).doesNotContain("fitted modes");
+    }
+
+    private static void assertLineThroughPoints(JsonNode points, JsonNode line) {
+        assertThat(line.get("joined").asBoolean()).isTrue();
+        assertThat(line.get("y")).hasSize(points.get("y").size());
+        for (int i = 0; i < points.get("y").size(); i++) {
+            double measured = points.get("y").get(i).asDouble();
+            assertThat(line.get("y").get(i).asDouble()).isCloseTo(measured, within(1e-9 * measured));
+        }
+    }
+
+    private static Stream<SpectrumRow> discrete(SpectrumRow.Kind kind, double[] times, double[] strengths) {
+        return IntStream.range(0, times.length)
+                .mapToObj(i -> new SpectrumRow(
+                        298.15,
+                        kind,
+                        SpectrumRow.Form.DISCRETE,
+                        times[i],
+                        strengths[i],
+                        OptionalDouble.empty(),
+                        OptionalDouble.empty()));
+    }
+
+    /** 1 kPa for 10 s, a strain of 0.01 before it. */
+    private static CreepCurve creep(RetardationModes material) {
+        double zero = 0.01;
+        double before = zero + 1000 * material.creepPerPa(10);
+        List<CreepReading> readings = new ArrayList<>();
+        for (double since : new double[] {0.1, 1, 5, 9}) {
+            double strain = zero + 1000 * material.creepPerPa(since);
+            readings.add(new CreepReading(1, since, since, 1000, strain, 1e-6, (strain - zero) / 1000, 1e-9));
+        }
+        for (double since : new double[] {0.1, 1, 5, 50}) {
+            double strain = zero + 1000 * (material.creepPerPa(10 + since) - material.creepPerPa(since));
+            readings.add(new CreepReading(2, 10 + since, since, 0, strain, 1e-6, (before - strain) / 1000, 1e-9));
+        }
+        return new CreepCurve(
+                new PointKey("Sedge 7", "S7-05", "1", "1", "run", "bench/run.dat"),
+                Optional.empty(),
+                DeformationMode.SHEAR,
+                OptionalDouble.of(298.15),
+                OptionalDouble.empty(),
+                true,
+                List.of(
+                        new CreepStep(CreepPart.LOAD, 0, 0, 0, 1000, 0, zero, 0, OptionalDouble.empty()),
+                        new CreepStep(CreepPart.RECOVERY, 10, 0, 0, -1000, 0, before, 0, OptionalDouble.empty())),
+                readings,
+                Quality.SOUND,
+                List.of(),
+                1000,
+                List.of());
     }
 
     @Test
