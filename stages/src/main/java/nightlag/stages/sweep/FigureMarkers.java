@@ -174,7 +174,10 @@ public final class FigureMarkers {
             markers.add(crossing(steps, passage.first(), passage.last()));
             return;
         }
-        // there and back again: the curve need not reach the value at all
+        if (!steps.isEmpty() && isNoise(passage, steps.get(0))) {
+            byNoise(steps.get(0));
+            return;
+        }
         List<Marker> each =
                 steps.stream().map(i -> marker(i, i, line(i).reached())).toList();
         if (!each.isEmpty() && each.stream().allMatch(marker -> marker.u().isPresent())) {
@@ -182,6 +185,31 @@ public final class FigureMarkers {
         } else {
             markers.addAll(each);
         }
+    }
+
+    /** Whether a smooth curve stays on one side where the points go there and back again. */
+    private boolean isNoise(Passage passage, int step) {
+        DrawnFigure drawn = new DrawnFigure(plan);
+        return LocalFigure.of(curve.places(), plan, passage.first(), passage.last(), step)
+                .filter(local -> local.staysAway(
+                        drawn.place(curve.places().get(passage.first()).at()),
+                        drawn.place(curve.places().get(passage.last()).at())))
+                .isPresent();
+    }
+
+    private void byNoise(int step) {
+        boolean overFrequency = plan.along() == Along.FREQUENCY;
+        double place = curve.places().get(step).at();
+        notes.add(FigureReason.FIGURE_MARKER_BY_NOISE.with(
+                plan.name(),
+                curve.name().specimen(),
+                curve.name().sweep(),
+                where(curve),
+                plan.figure().name(),
+                plan.reaches(),
+                plan.figure().unit(),
+                overFrequency ? place : place - KELVIN_AT_ZERO_CELSIUS,
+                overFrequency ? "Hz" : "°C"));
     }
 
     private Marker crossing(List<Integer> steps, int first, int last) {

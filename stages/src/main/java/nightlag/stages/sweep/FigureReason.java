@@ -14,6 +14,10 @@ public enum FigureReason implements ReasonCode {
     /** Marker, specimen, sweep, curves without, curves, figure, value to reach, unit. */
     FIGURE_MARKER_NOT_REACHED_ON(
             "{0} of specimen {1}, sweep {2}: none on {3} of {4} curves, where {5} does not reach {6} {7}"),
+    /** Marker, specimen, sweep, where, figure, value to reach, unit, place, unit of the place. */
+    FIGURE_MARKER_BY_NOISE(
+            "no {0} of specimen {1}, sweep {2}{3} near {7} {8}: {4} comes near {5} {6} there, and noise alone takes it across and"
+                    + " back"),
     /** Marker, specimen, sweep, where, figure. */
     FIGURE_MARKER_NO_LOGARITHM(
             "no {0} of specimen {1}, sweep {2}{3}: {4} is not above zero throughout; scale = \"linear\" would do without its"

@@ -24,6 +24,7 @@ final class LocalFigure {
     private static final int FEWEST_FOR_PARABOLA = 5;
 
     private static final double STANDS_OUT = 3;
+    private static final double MOST_DOUBT = 3;
     private static final int STEPS = 4;
     private static final int HALVINGS = 50;
 
@@ -39,10 +40,7 @@ final class LocalFigure {
         this.source = source;
         this.logReport = logReport;
         this.series = series;
-        int freedom = series.count() - (series.count() < FEWEST_FOR_PARABOLA ? 2 : 3);
-        this.doubt = drawn.overFrequency() && series.count() >= FEWEST_FOR_PARABOLA
-                ? 1
-                : freedom > 3 ? freedom / (freedom - 2.0) : 3;
+        this.doubt = hasLeast() ? 1 : doubt(series.count());
         // a curve over frequency may wave as single modes make it, even where noise or sparse frequencies hide it
         this.figure = series.figure(least(drawn.log() ? 1 : series.size()));
     }
@@ -87,9 +85,20 @@ final class LocalFigure {
 
     /** What is known beforehand: over frequency a curve may wave as single modes make it. */
     private double least(double size) {
-        return drawn.overFrequency() && series.count() >= FEWEST_FOR_PARABOLA
-                ? LogModuli.leastStrength(series.x()) * size * size
-                : 0;
+        return hasLeast() ? LogModuli.leastStrength(series.x()) * size * size : 0;
+    }
+
+    private boolean hasLeast() {
+        return drawn.overFrequency() && series.count() >= FEWEST_FOR_PARABOLA;
+    }
+
+    /**
+     * By how much larger the variance is of what the curve may do, where only the places tell how much it does: that of Student's t with
+     * as many degrees of freedom as there are places beyond those that fix the polynomial, ν/(ν − 2), and no more than 3.
+     */
+    private static double doubt(int places) {
+        double freedom = places - (places < FEWEST_FOR_PARABOLA ? 2.0 : 3.0);
+        return freedom > MOST_DOUBT ? freedom / (freedom - 2) : MOST_DOUBT;
     }
 
     /**
@@ -124,6 +133,11 @@ final class LocalFigure {
         double at = Math.min(Math.max(drawn.place(place), x[0]), x[x.length - 1]);
         SmoothCurve.Estimate there = estimate(figure, at);
         return !series.known() || Math.abs(there.value()) > STANDS_OUT * there.u();
+    }
+
+    /** Whether the curve does not reach the value from one place, as drawn, to another; never where noise is not known. */
+    boolean staysAway(double from, double to) {
+        return series.known() && zeros(series.between(from, to)).length == 0;
     }
 
     private OptionalDouble u(double u) {
