@@ -212,8 +212,8 @@ final class GradeKeys {
             "scale",
             KeyType.wordsOf(FigureMarkerPlan.Scale.class),
             "\"log\"",
-            "What is taken as straight between two points, over log frequency or over temperature. `log`: the logarithm of "
-                    + "the quantity. `linear`: the quantity itself.");
+            "What is interpolated by a smooth curve, over log frequency or over temperature. `log`: the logarithm of the "
+                    + "quantity. `linear`: the quantity itself.");
     static final Key MARKER_TEMPERATURE = Key.optional(
             "temperature",
             KeyType.quantity(QuantityKind.TEMPERATURE, Sign.ANY),

@@ -152,7 +152,8 @@ class OwnFiguresNightTest {
         assertThat(Double.parseDouble(row.get("frequency_Hz"))).isCloseTo(hertz, within(1e-12));
         assertThat(Double.parseDouble(row.get("u"))).isBetween(0.03, 0.12);
         assertThat(row.get("method"))
-                .isEqualTo("rutting_factor falls to 10000 Pa, log over temperature, between 34 and 46 °C");
+                .isEqualTo(
+                        "rutting_factor falls to 10000 Pa, log over temperature by a smooth curve, between 34 and 46 °C");
     }
 
     /** δ = 70° at lg f = T/20 − 2: 10^−0.3 Hz at 34 °C, 10^0.3 at 46 °C, 10^0.9 at 58 °C; |G*| there 1 MPa · 10^(−T/40 − 1). */

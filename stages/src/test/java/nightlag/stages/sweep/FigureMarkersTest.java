@@ -90,12 +90,16 @@ class FigureMarkersTest {
         assertThat(marker.frequencyHz()).hasValue(1.6);
         assertThat(marker.unit()).isEqualTo("°C");
         assertThat(marker.method())
-                .isEqualTo("complex_modulus falls to 10000 Pa, log over temperature, between 34 and 46 °C");
+                .isEqualTo(
+                        "complex_modulus falls to 10000 Pa, log over temperature by a smooth curve, between 34 and 46 °C");
     }
 
-    /** Half way between two points whose |G*| is known to 1 %: u(T) = √½ · 1 % / (ln 10 / 20 K) (exact). */
+    /**
+     * Half way between two points whose |G*| is known to 1 %: u(T) = √½ · 1 % / (ln 10 / 20 K), and as two points do not tell how
+     * the curve bends between them, 12 K · ½ · ½ / 2 / √3 besides (exact).
+     */
     @Test
-    void itsUncertaintyIsThatOfTheValuesOverTheSlope() {
+    void itsUncertaintyIsThatOfTheValuesOverTheSlopeAndOfABendBetweenTwoPoints() {
         List<ModulusPoint> points = Stream.of(34.0, 46.0)
                 .map(t -> TestPoints.point()
                         .at(t + ZERO_C)
@@ -107,7 +111,10 @@ class FigureMarkersTest {
         Marker marker = only(FigureMarkers.find(points, plan(STIFFNESS, 1e4, Along.TEMPERATURE, Scale.LOG)));
 
         assertThat(marker.u().orElseThrow())
-                .isCloseTo(0.01 * Math.sqrt(0.5) / (Math.log(10) / 20), withPercentage(1e-4));
+                .isCloseTo(
+                        Math.hypot(0.01 * Math.sqrt(0.5) / (Math.log(10) / 20), 12 / 8.0 / Math.sqrt(3)),
+                        withPercentage(1e-4));
+        assertThat(marker.method()).contains("log over temperature by a straight line");
     }
 
     /** Exact: 45° at 10^1.5 Hz, as the phase angle itself is straight over log f; |G*| there is 10^3.75 Pa. */
@@ -131,7 +138,7 @@ class FigureMarkersTest {
         assertThat(marker.unit()).isEqualTo("Pa");
         assertThat(marker.method())
                 .isEqualTo(
-                        "complex_modulus (log) where phase_angle falls to 45 °, linear over log frequency, between 30 and 33 Hz");
+                        "complex_modulus (log) where phase_angle falls to 45 °, linear over log frequency by a smooth curve, between 30 and 33 Hz");
     }
 
     /** |G*| taken as straight over ln f between 1 and 3 Hz has its mean at √3 Hz (exact). */
@@ -209,7 +216,15 @@ class FigureMarkersTest {
 
         Findings findings = FigureMarkers.find(points, plan(STIFFNESS, 2, Along.TEMPERATURE, Scale.LINEAR));
 
-        assertThat(findings.markers()).extracting(Marker::value).containsExactly(305.0, 315.0, 325.0);
+        assertThat(findings.markers())
+                .extracting(Marker::value)
+                .satisfiesExactly(
+                        value -> assertThat(value).isCloseTo(305, within(1.5)),
+                        value -> assertThat(value).isCloseTo(315, within(1e-6)),
+                        value -> assertThat(value).isCloseTo(325, within(1.5)));
+        // by a smooth curve, which lies as far off the straight line at both ends
+        assertThat(findings.markers().get(0).value() + findings.markers().get(2).value())
+                .isCloseTo(630, within(1e-6));
         assertThat(findings.markers())
                 .extracting(marker -> marker.method().contains("rises"))
                 .containsExactly(true, false, true);
@@ -266,7 +281,7 @@ class FigureMarkersTest {
                 .isEqualTo("no found: no specimen has complex_modulus at two places along temperature at 9 Hz");
     }
 
-    /** Over 2000 draws of 1 % noise, the scatter of the marker is what its u says, to 5 %. */
+    /** Over 500 draws of 1 % noise, the scatter of the marker is what its u says, to 10 %. */
     @Test
     void theUncertaintyIsTheScatter() {
         FigureMarkerPlan plan = new FigureMarkerPlan(
@@ -274,8 +289,9 @@ class FigureMarkersTest {
         Random random = new Random(42);
         List<Double> values = new ArrayList<>();
         double u = 0;
-        for (int draw = 0; draw < 2000; draw++) {
-            List<ModulusPoint> points = Stream.of(20.0, 44.0)
+        for (int draw = 0; draw < 500; draw++) {
+            List<ModulusPoint> points = IntStream.range(0, 25)
+                    .mapToObj(i -> 20.0 + i)
                     .map(t -> TestPoints.point()
                             .at(t + ZERO_C)
                             .modulus(new Complex(
@@ -285,7 +301,7 @@ class FigureMarkersTest {
                     .toList();
             Marker marker = only(FigureMarkers.find(points, plan));
             values.add(marker.value());
-            u += marker.u().orElseThrow() / 2000;
+            u += marker.u().orElseThrow() / 500;
         }
         double mean = values.stream().mapToDouble(v -> v).average().orElseThrow();
         double scatter = Math.sqrt(values.stream()
@@ -293,7 +309,7 @@ class FigureMarkersTest {
                 .average()
                 .orElseThrow());
 
-        assertThat(scatter / u).isCloseTo(1, within(0.05));
+        assertThat(scatter / u).isCloseTo(1, within(0.1));
     }
 
     /** δ falls by 4° over 200 points, each known to a third of a degree: it passes 45° at 10 Hz, its noise many times about it. */
@@ -319,6 +335,54 @@ class FigureMarkersTest {
 
     private static boolean aboveOne(ModulusPoint point) {
         return PointQuantity.TAN_DELTA.of(point).orElseThrow() > 1;
+    }
+
+    /** One point of a hump is above the value, by less than its noise, and the curve through all stays below. */
+    @Test
+    void thereAndBackByNoiseAloneIsNoCrossing() {
+        List<ModulusPoint> points = IntStream.rangeClosed(-4, 4)
+                .mapToObj(i -> TestPoints.point()
+                        .named("1", "ramp", "p" + i, "bench/" + i + ".csv")
+                        .at(ZERO_C + 40 + 5 * i)
+                        .modulus(new Complex(1e4 * Math.exp(0.01 * (i == 0 ? 0.3 : -0.6 - i * i)), 0))
+                        .build())
+                .toList();
+
+        Findings findings = FigureMarkers.find(points, plan(STIFFNESS, 1e4, Along.TEMPERATURE, Scale.LOG));
+
+        assertThat(findings.markers()).isEmpty();
+        assertThat(findings.notes())
+                .extracting(note -> note.sentence())
+                .containsExactly(
+                        "no found of specimen 1, sweep ramp at 1 Hz near 35 °C: complex_modulus comes near 10000 Pa"
+                                + " there, and noise alone takes it across and back");
+    }
+
+    /**
+     * One relaxation time of 1 s, ω² /(1 + ω²) of 1 Pa, a third of it at ω = √½ (exact). Straight lines between four points a
+     * decade err by up to 3 %.
+     */
+    @ParameterizedTest(name = "grid moved by {0} of its step")
+    @ValueSource(doubles = {0, 0.2, 0.4, 0.6, 0.8})
+    void betweenSparseFrequenciesTheCurveIsFollowed(double moved) {
+        List<ModulusPoint> points = IntStream.range(0, 13)
+                .mapToObj(i -> {
+                    double omega = Math.pow(10, (i - 6 + moved) / 4);
+                    return TestPoints.point()
+                            .named("1", "s", "p" + i, "bench/" + i + ".csv")
+                            .hz(omega / (2 * Math.PI))
+                            .modulus(new Complex(omega * omega, omega).times(1 / (1 + omega * omega)))
+                            .relativeU(1e-6)
+                            .build();
+                })
+                .toList();
+
+        Marker marker = only(FigureMarkers.find(
+                points, plan(Figure.column(PointQuantity.STORAGE_MODULUS), 1 / 3.0, Along.FREQUENCY, Scale.LOG)));
+
+        double exact = Math.sqrt(0.5) / (2 * Math.PI);
+        assertThat(marker.value()).isCloseTo(exact, withPercentage(0.2));
+        assertThat(marker.u().orElseThrow()).isGreaterThan(Math.abs(marker.value() - exact) / 2);
     }
 
     /** Far apart for their u, both ways through the value are told. */
