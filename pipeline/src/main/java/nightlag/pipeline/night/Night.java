@@ -105,7 +105,14 @@ public final class Night {
             report.finish(new NightHeading(
                     String.valueOf(folder.getFileName()), version, outcome.counts(), outcome.concerns(configuration)));
         }
-        if (!outcome.nothingNew() || !Files.exists(configuration.results().resolve(ResultsIndex.FILE_NAME))) {
+        boolean nightsGone = configuration.keepNights().isPresent()
+                && OldNights.remove(
+                        NightFolder.nights(configuration.results()),
+                        folder,
+                        configuration.keepNights().getAsInt());
+        if (nightsGone
+                || !outcome.nothingNew()
+                || !Files.exists(configuration.results().resolve(ResultsIndex.FILE_NAME))) {
             writeIndex(archive);
         }
         LOG.info(

@@ -15,9 +15,11 @@ import java.sql.SQLException;
 import java.sql.Statement;
 import java.util.List;
 import java.util.Optional;
+import java.util.OptionalLong;
 import java.util.stream.IntStream;
 import nightlag.pipeline.RandomPoints;
 import nightlag.pipeline.archive.ArchiveException.Kind;
+import nightlag.stages.acceptance.LotRecord;
 import org.junit.jupiter.api.Test;
 import org.junit.jupiter.api.io.TempDir;
 import org.junit.jupiter.params.ParameterizedTest;
@@ -87,6 +89,26 @@ class ArchiveFileTest {
 
         assertThat(failureToOpen().kind()).isEqualTo(Kind.OTHER_VERSION);
         assertThat(failureToOpen()).hasMessageContaining("written by " + which + " version");
+    }
+
+    @Test
+    void anArchiveOfLayout1IsExtendedAndKeepsWhatIsInIt() throws ArchiveException, SQLException {
+        fill(3);
+        execute("DROP TABLE lot_value");
+        execute("DROP INDEX record_by_date");
+        execute("ALTER TABLE record DROP COLUMN made");
+        execute("ALTER TABLE lot DROP COLUMN trend");
+        execute("PRAGMA user_version = 1");
+
+        for (int time = 0; time < 2; time++) {
+            try (Archive archive = Archive.open(file())) {
+                LotState lot = archive.lots().get(0);
+                assertThat(lot.points()).isEqualTo(3);
+                assertThat(lot.trendFingerprint()).isEmpty();
+                assertThat(archive.lotRecords(lot.name().grade()))
+                        .containsExactly(new LotRecord(lot.name().lot(), OptionalLong.empty(), List.of()));
+            }
+        }
     }
 
     @Test

@@ -319,14 +319,14 @@ class NightReportTest {
         assertThat(VerdictWords.of(new Judgement(
                         stiffness,
                         OptionalDouble.of(12_100),
-                        OptionalDouble.of(100),
+                        OptionalDouble.of(110),
                         Verdict.UNDECIDED,
                         "mean of 3 points")))
-                .isEqualTo("softening undecided: 12.10 ± 0.10 kPa, limits 12 to 15 kPa (mean of 3 points)");
+                .isEqualTo("softening undecided: 12.10 ± 0.11 kPa, limits 12 to 15 kPa (mean of 3 points)");
         LimitPlan peak = limit(OptionalDouble.empty(), OptionalDouble.of(293.15), "°C", new ShownUnit("°C", 1, 273.15));
         assertThat(VerdictWords.of(new Judgement(
-                        peak, OptionalDouble.of(303.15), OptionalDouble.of(0.5), Verdict.NONCONFORMING, "")))
-                .isEqualTo("softening nonconforming: 30.00 ± 0.50 °C, at most 20 °C");
+                        peak, OptionalDouble.of(303.15), OptionalDouble.of(0.51), Verdict.NONCONFORMING, "")))
+                .isEqualTo("softening nonconforming: 30.00 ± 0.51 °C, at most 20 °C");
         assertThat(VerdictWords.of(new Judgement(
                         peak,
                         OptionalDouble.empty(),
