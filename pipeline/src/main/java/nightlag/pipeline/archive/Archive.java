@@ -40,6 +40,18 @@ public final class Archive implements AutoCloseable {
         return new Archive(file, Store.open(file));
     }
 
+    /**
+     * Brings an archive that an earlier version laid out to the layout of this one, which all but {@link #files} needs; one that
+     * is up to date is not touched.
+     */
+    public void bringUpToDate() throws ArchiveException {
+        try {
+            Store.bringUpToDate(connection);
+        } catch (SQLException cause) {
+            throw StoreErrors.failure(file, "bring it up to date", cause);
+        }
+    }
+
     /** All files, by table name. */
     public List<ArchivedFile> files() throws ArchiveException {
         return files("list the files", "");

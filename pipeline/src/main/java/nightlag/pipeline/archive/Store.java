@@ -18,6 +18,8 @@ final class Store {
     /** Goes up by one with every change of the tables below or of the JSON in {@code record.body}. */
     private static final int LAYOUT_VERSION = 2;
 
+    private static final int CAN_BE_EXTENDED = 1;
+
     private static final int WAIT_FOR_OTHERS_MS = 30_000;
 
     private static final String[] LAYOUT = {
@@ -63,7 +65,7 @@ final class Store {
         )""",
     };
 
-    /** What layout 2 has more than layout 1; an archive of layout 1 gets it when it is opened. */
+    /** What layout 2 has more than layout 1; an archive of layout 1 gets it before a night works with it. */
     private static final String[] SINCE_2 = {
         // the lot's date as the record tags it; empty without one
         "ALTER TABLE record ADD COLUMN made TEXT NOT NULL DEFAULT ''",
@@ -149,9 +151,7 @@ final class Store {
             throw new ArchiveException(
                     Kind.FOREIGN, "the file " + file + " is a SQLite file, but not an archive of this program");
         }
-        if (version == 1) {
-            inTransaction(connection, () -> extend(connection));
-        } else if (version != LAYOUT_VERSION) {
+        if (version != LAYOUT_VERSION && version != CAN_BE_EXTENDED) {
             String which = version > LAYOUT_VERSION ? "a newer" : "an older";
             throw new ArchiveException(
                     Kind.OTHER_VERSION,
@@ -168,6 +168,13 @@ final class Store {
             execute(connection, "PRAGMA application_id = " + APPLICATION_ID);
             extend(connection);
         });
+    }
+
+    /** Brings an archive of layout 1 to the layout of this version; any other stays as it is. */
+    static void bringUpToDate(Connection connection) throws SQLException {
+        if (number(connection, "PRAGMA user_version") == CAN_BE_EXTENDED) {
+            inTransaction(connection, () -> extend(connection));
+        }
     }
 
     private static void extend(Connection connection) throws SQLException {

@@ -80,6 +80,7 @@ public final class Night {
 
     private NightOutcome workLocked(Path results) throws ArchiveException, IOException, NightFault {
         try (Archive archive = Archive.open(results.resolve(ARCHIVE))) {
+            archive.bringUpToDate();
             Path folder = NightFolder.make(results, clock);
             try (NightLog log = NightLog.open(folder)) {
                 log.info("Nightlag " + version + ", " + workers() + " workers, results in " + results);
@@ -119,9 +120,6 @@ public final class Night {
                 "{} files; {} lots rebuilt",
                 outcome.files().size(),
                 outcome.lotsConcluded().size());
-        configuration
-                .keepNights()
-                .ifPresent(keep -> OldNights.remove(NightFolder.nights(configuration.results()), folder, keep));
         return outcome;
     }
 

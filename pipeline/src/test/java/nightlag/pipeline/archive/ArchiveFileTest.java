@@ -102,6 +102,8 @@ class ArchiveFileTest {
 
         for (int time = 0; time < 2; time++) {
             try (Archive archive = Archive.open(file())) {
+                assertThat(archive.files()).hasSize(1);
+                archive.bringUpToDate();
                 LotState lot = archive.lots().get(0);
                 assertThat(lot.points()).isEqualTo(3);
                 assertThat(lot.trendFingerprint()).isEmpty();
