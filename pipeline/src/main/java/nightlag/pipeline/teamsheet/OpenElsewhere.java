@@ -28,14 +28,22 @@ final class OpenElsewhere {
         if (!Files.isWritable(file)) {
             return Optional.of("it is marked as read-only, or this user may not write it");
         }
-        try (FileChannel channel = FileChannel.open(file, StandardOpenOption.READ, StandardOpenOption.WRITE);
-                FileLock lock = channel.tryLock()) {
-            return lock == null ? Optional.of("another program holds a lock on it") : Optional.empty();
-        } catch (OverlappingFileLockException e) {
-            return Optional.of("another part of this program holds a lock on it");
+        try (FileChannel channel = FileChannel.open(file, StandardOpenOption.READ, StandardOpenOption.WRITE)) {
+            return isLocked(channel) ? Optional.of("another program holds a lock on it") : Optional.empty();
         } catch (IOException e) {
             return Optional.of(
                     "it cannot be opened for writing; is it open in another program? (" + e.getMessage() + ")");
+        }
+    }
+
+    private static boolean isLocked(FileChannel channel) {
+        try (FileLock lock = channel.tryLock()) {
+            return lock == null;
+        } catch (OverlappingFileLockException held) {
+            return true;
+        } catch (IOException noLocksHere) {
+            // some network shares have none; that nobody holds one is all that can be known then
+            return false;
         }
     }
 }

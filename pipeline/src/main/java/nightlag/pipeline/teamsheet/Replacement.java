@@ -55,6 +55,18 @@ final class Replacement implements AutoCloseable {
             }
         }
         Files.move(beside, target, StandardCopyOption.ATOMIC_MOVE, StandardCopyOption.REPLACE_EXISTING);
+        forceFolder();
+    }
+
+    /** So that the new name, too, is on the disk; a system that does not open folders sees to that by itself. */
+    private void forceFolder() throws IOException {
+        try (FileChannel channel = FileChannel.open(target.toAbsolutePath().getParent(), StandardOpenOption.READ)) {
+            channel.force(true);
+        } catch (IOException notOpened) {
+            if (!System.getProperty("os.name").startsWith("Windows")) {
+                throw notOpened;
+            }
+        }
     }
 
     private static void giveTo(PosixFileAttributeView view, PosixFileAttributes before) {
