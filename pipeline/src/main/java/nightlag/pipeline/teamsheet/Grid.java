@@ -2,7 +2,7 @@ package nightlag.pipeline.teamsheet;
 
 import java.io.IOException;
 import java.io.OutputStream;
-import java.util.Collection;
+import java.util.Set;
 
 /** One kind of file as rows and columns of cells, both counted from 0. What is put into it shows only in what it writes. */
 interface Grid {
@@ -57,5 +57,10 @@ interface Grid {
      * @param grade the column of the grade
      * @param lot the column of the lot
      */
-    record Area(int headingRow, int lastRow, Collection<Integer> columns, int grade, int lot) {}
+    record Area(int headingRow, int lastRow, Set<Integer> columns, int grade, int lot) {
+        /** Copies the set. */
+        public Area {
+            columns = Set.copyOf(columns);
+        }
+    }
 }

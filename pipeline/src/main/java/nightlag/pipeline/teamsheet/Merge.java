@@ -224,8 +224,7 @@ final class Merge {
         if (rows.isEmpty()) {
             return;
         }
-        Grid.Area area = new Grid.Area(
-                headingRow, lastRow, new HashSet<>(ourColumns(rows)), columns.get(GRADE), columns.get(LOT));
+        Grid.Area area = new Grid.Area(headingRow, lastRow, ourColumns(rows), columns.get(GRADE), columns.get(LOT));
         int next = grid.addRows(area, rows.size());
         for (SheetRow row : rows) {
             grid.put(next, area.grade(), new Value.Text(row.grade()));

@@ -60,7 +60,11 @@ final class Replacement implements AutoCloseable {
 
     /** So that the new name, too, is on the disk; a system that does not open folders sees to that by itself. */
     private void forceFolder() throws IOException {
-        try (FileChannel channel = FileChannel.open(target.toAbsolutePath().getParent(), StandardOpenOption.READ)) {
+        Path folder = target.toAbsolutePath().getParent();
+        if (folder == null) {
+            return;
+        }
+        try (FileChannel channel = FileChannel.open(folder, StandardOpenOption.READ)) {
             channel.force(true);
         } catch (IOException notOpened) {
             if (!System.getProperty("os.name").startsWith("Windows")) {

@@ -38,8 +38,7 @@ class MutatedSheetTest {
         for (int i = 0; i < MUTATIONS; i++) {
             Map<String, String> parts = new LinkedHashMap<>();
             String damaged = names.get(random.nextInt(names.size()));
-            whole.forEach((name, text) -> parts.put(
-                    name, utf8(name.equals(damaged) ? mutated(text, random) : text)));
+            whole.forEach((name, text) -> parts.put(name, utf8(name.equals(damaged) ? mutated(text, random) : text)));
             Books.writeParts(file, parts);
             assertWholeOrUntouched(file);
         }
@@ -57,7 +56,8 @@ class MutatedSheetTest {
     @ValueSource(longs = {1, 2, 3})
     void aCsvWithDamagedBytes(long seed) throws IOException {
         Path file = folder.resolve("team.csv");
-        Files.writeString(file, "grade;lot;\"a; note\";updated\r\nHeron 3;A;\"x\"\"y\";2026-01-01\r\nHeron 3;B;1,5;\r\n");
+        Files.writeString(
+                file, "grade;lot;\"a; note\";updated\r\nHeron 3;A;\"x\"\"y\";2026-01-01\r\nHeron 3;B;1,5;\r\n");
         assertOnMutatedBytes(file, seed);
     }
 
@@ -69,7 +69,11 @@ class MutatedSheetTest {
             for (int flip = 0; flip <= random.nextInt(4); flip++) {
                 damaged[random.nextInt(damaged.length)] = (byte) random.nextInt(256);
             }
-            Files.write(file, random.nextInt(5) == 0 ? java.util.Arrays.copyOf(damaged, random.nextInt(damaged.length)) : damaged);
+            Files.write(
+                    file,
+                    random.nextInt(5) == 0
+                            ? java.util.Arrays.copyOf(damaged, random.nextInt(damaged.length))
+                            : damaged);
             assertWholeOrUntouched(file);
         }
     }
@@ -77,7 +81,8 @@ class MutatedSheetTest {
     private static void assertWholeOrUntouched(Path file) throws IOException {
         byte[] before = Files.readAllBytes(file);
 
-        SheetOutcome outcome = new TeamSheetFile(file, "lots").update(update(MARCH_1, row("L1", damping(7, "conforming"))));
+        SheetOutcome outcome =
+                new TeamSheetFile(file, "lots").update(update(MARCH_1, row("L1", damping(7, "conforming"))));
 
         if (outcome instanceof Written written && written.touched()) {
             // what was written can be read, and says everything
