@@ -135,7 +135,7 @@ final class CreepRows {
             } else {
                 ceiling = strength;
             }
-            strength = ceiling == Double.POSITIVE_INFINITY
+            strength = Double.isInfinite(ceiling)
                     ? 4 * strength
                     : lastStrength == 0 ? strength / 4 : Math.sqrt(lastStrength * ceiling);
         }
