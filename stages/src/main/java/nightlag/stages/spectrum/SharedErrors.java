@@ -22,6 +22,9 @@ import nightlag.stages.numeric.NonNegativeLeastSquares;
 final class SharedErrors {
     private static final int MODES_PER_DECADE = 10;
     private static final double BEYOND = 3;
+    /** Intervals of sampling that differ by less than this factor are the same. */
+    private static final double ALIKE = 1.5;
+
     /** Of the largest strain no other is known to less. */
     private static final double TRACE = 1e-9;
 
@@ -206,10 +209,10 @@ final class SharedErrors {
             List<double[]> columns = new ArrayList<>();
             double zeroU = steps.get(0).strainBeforeU();
             columns.add(readings.stream().mapToDouble(reading -> zeroU).toArray());
-            // what drives the load and what records it often share a clock: all steps lie at like places between
-            // samples, and
-            // every later one may be off by as much again on its own
-            columns.add(column((n, since) -> byInstant(steps.get(n), since)));
+            // what drives the load and what records it often share a clock: steps between samples as far apart lie at
+            // like places
+            // between them, and every later one may be off by as much again on its own
+            columns.add(column((n, since) -> isLikeFirst(steps.get(n)) ? byInstant(steps.get(n), since) : 0));
             for (int k = 0; k < steps.size(); k++) {
                 int which = k;
                 if (k > 0) {
@@ -225,6 +228,11 @@ final class SharedErrors {
                         (n == from ? levelU : 0) * compliance(since) - (n == to ? levelU : 0) * compliance(since)));
             }
             return columns;
+        }
+
+        private boolean isLikeFirst(CreepStep step) {
+            double first = curve.steps().get(0).atUS();
+            return step.atUS() >= first / ALIKE && step.atUS() <= first * ALIKE;
         }
 
         private double byInstant(CreepStep step, double since) {
