@@ -78,7 +78,9 @@ final class FigureNoise {
                         .filter(one -> Double.isFinite(one[1]))
                         .toArray(double[][]::new);
                 OptionalDouble u = NeighbourScatter.at(column(known, 0), column(known, 1), drawn.place(place.at()));
-                yield u.isPresent() ? OptionalDouble.of(u.getAsDouble() * u.getAsDouble()) : u;
+                yield u.isPresent()
+                        ? OptionalDouble.of(NeighbourScatter.doubt(known.length) * u.getAsDouble() * u.getAsDouble())
+                        : u;
             }
             case NONE -> OptionalDouble.empty();
         };

@@ -16,7 +16,24 @@ final class NeighbourScatter {
     private static final int TOGETHER = 4;
     private static final int NEAREST = 20;
 
+    /**
+     * Neighbouring groups share values, which correlates them by −0.75, 0.3 and −0.05: their mean square has 1/(1 + 2 Σ ρ²) as many
+     * degrees of freedom as there are groups.
+     */
+    private static final double FREEDOM_OF_A_GROUP = 0.43;
+
+    private static final double MOST = 3;
+
     private NeighbourScatter() {}
+
+    /**
+     * By how much a variance from so many values is to be larger than the square of their scatter, as this is itself known from
+     * few: ν/(ν − 2), the variance of Student's t (JCGM 101:2008, 6.4.9.4), and no more than 3.
+     */
+    static double doubt(int values) {
+        double freedom = FREEDOM_OF_A_GROUP * Math.min(values - TOGETHER + 1, NEAREST);
+        return freedom > MOST ? freedom / (freedom - 2) : MOST;
+    }
 
     /**
      * The standard deviation of values about their neighbours.
