@@ -24,6 +24,7 @@ final class OldNights {
     /** What a run writes into its folder, finished or not. */
     private static final Set<String> OURS = Set.of(
             "files.csv",
+            "night.json",
             "night.log",
             NightReport.FILE_NAME,
             NightReport.FILE_NAME + ".lots",
@@ -39,18 +40,21 @@ final class OldNights {
      * @param nights the folder of all nights
      * @param tonight the folder of this night, which stays
      * @param keep how many stay, this night's among them
+     * @return whether any was taken away
      */
-    static void remove(Path nights, Path tonight, int keep) {
+    static boolean remove(Path nights, Path tonight, int keep) {
+        boolean any = false;
         try {
             List<Path> older = namedAsOurs(nights);
             older.remove(tonight);
             int surplus = older.size() - (keep - 1);
             for (Path night : older.subList(0, Math.max(0, surplus))) {
-                remove(night);
+                any |= isRemoved(night);
             }
         } catch (IOException e) {
             LOG.warn("older nights stay: {}", IoSentences.of(e));
         }
+        return any;
     }
 
     /** The folders that are named as nights are, the oldest first. */
@@ -71,7 +75,7 @@ final class OldNights {
         return String.valueOf(path.getFileName());
     }
 
-    private static void remove(Path night) {
+    private static boolean isRemoved(Path night) {
         try {
             List<Path> inside = new ArrayList<>();
             try (DirectoryStream<Path> all = Files.newDirectoryStream(night)) {
@@ -79,15 +83,17 @@ final class OldNights {
             }
             if (!inside.stream().allMatch(OldNights::isOurs)) {
                 LOG.info("{} stays, as there is something in it that no run put there", night);
-                return;
+                return false;
             }
             for (Path file : inside) {
                 Files.delete(file);
             }
             Files.delete(night);
             LOG.info("{} taken away, as keep_nights asks", night);
+            return true;
         } catch (IOException e) {
             LOG.warn("{} cannot be taken away: {}", night, IoSentences.of(e));
+            return false;
         }
     }
 
