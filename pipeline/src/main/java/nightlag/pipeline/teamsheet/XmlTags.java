@@ -1,6 +1,5 @@
 package nightlag.pipeline.teamsheet;
 
-import com.ctc.wstx.api.WstxInputProperties;
 import com.ctc.wstx.stax.WstxInputFactory;
 import java.io.StringReader;
 import java.util.Optional;
@@ -35,7 +34,7 @@ final class XmlTags implements AutoCloseable {
         factory.setProperty(XMLInputFactory.IS_COALESCING, true);
         factory.setProperty(XMLInputFactory2.P_PRESERVE_LOCATION, true);
         // else damage inside a text would come to light as a runtime exception, when the text is asked for
-        factory.setProperty(WstxInputProperties.P_LAZY_PARSING, false);
+        factory.setProperty(XMLInputFactory2.P_LAZY_PARSING, false);
         try {
             reader = (XMLStreamReader2) factory.createXMLStreamReader(new StringReader(xml));
         } catch (XMLStreamException e) {

@@ -95,6 +95,7 @@ class ArchiveFileTest {
     void anArchiveOfLayout1IsExtendedAndKeepsWhatIsInIt() throws ArchiveException, SQLException {
         fill(3);
         execute("DROP TABLE lot_value");
+        execute("DROP TABLE sheet_row");
         execute("DROP INDEX record_by_date");
         execute("ALTER TABLE record DROP COLUMN made");
         execute("ALTER TABLE lot DROP COLUMN trend");
