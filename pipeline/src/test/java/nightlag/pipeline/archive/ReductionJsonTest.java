@@ -58,24 +58,28 @@ class ReductionJsonTest {
     void aCreepCurveIsReadAsItWasWritten() throws JsonProcessingException {
         Reduction reduction = new Reduction(
                 List.of(),
-                Optional.of(new CreepCurve(
-                        new PointKey("Heron 3", "L-17", "1", "1", "run", "bench/run.csv"),
-                        Optional.of("2026-02-17"),
-                        DeformationMode.EXTENSION,
-                        OptionalDouble.of(298.15),
-                        OptionalDouble.empty(),
-                        true,
-                        List.of(new CreepStep(CreepPart.LOAD, 0, 0.01, 0.1, 1e4, 3, 1e-5, 1e-7, OptionalDouble.of(2))),
-                        List.of(new CreepReading(1, 1.0 / 3, 0.3, 1e4, 2e-3, 1e-7, 2e-7, Double.NaN)),
-                        Quality.DOUBTFUL,
-                        List.of(Flag.UNSETTLED),
-                        77,
-                        List.of())));
+                Optional.of(curve(List.of(
+                        new CreepStep(CreepPart.LOAD, 0, 0.01, 0.1, 1e4, 3, 1e-5, 1e-7, OptionalDouble.of(2))))));
 
         String text = ReductionJson.write(reduction);
 
         assertThat(ReductionJson.read(text)).isEqualTo(reduction);
         assertThat(text).contains("\"readings\":[[1,0.3333333333333333,0.3,10000.0,0.002,1.0E-7,2.0E-7,\"NaN\"]]");
+    }
+
+    @Test
+    void aStepWrittenBeforeItsLevelsWereToldApartReadsWithoutThem() throws JsonProcessingException {
+        String text = ReductionJson.write(new Reduction(
+                List.of(),
+                Optional.of(curve(List.of(
+                        new CreepStep(CreepPart.LOAD, 0, 0.01, 0.1, 1e4, 3, 1e-5, 1e-7, OptionalDouble.of(2)))))));
+
+        assertThat(text).contains(",1.0E-7,2.0]]");
+        assertThat(ReductionJson.read(text.replace(",1.0E-7,2.0]]", ",1.0E-7]]"))
+                        .creep()
+                        .orElseThrow()
+                        .steps())
+                .containsExactly(new CreepStep(CreepPart.LOAD, 0, 0.01, 0.1, 1e4, 3, 1e-5, 1e-7));
     }
 
     @Test
@@ -87,6 +91,22 @@ class ReductionJsonTest {
     @ValueSource(strings = {"", "{", "{\"points\":[{}]}", "{\"points\":[],\"curve\":1}", "not JSON"})
     void damagedTextIsRefused(String damaged) {
         assertThatThrownBy(() -> ReductionJson.read(damaged)).isInstanceOf(JsonProcessingException.class);
+    }
+
+    private static CreepCurve curve(List<CreepStep> steps) {
+        return new CreepCurve(
+                new PointKey("Heron 3", "L-17", "1", "1", "run", "bench/run.csv"),
+                Optional.of("2026-02-17"),
+                DeformationMode.EXTENSION,
+                OptionalDouble.of(298.15),
+                OptionalDouble.empty(),
+                true,
+                steps,
+                List.of(new CreepReading(1, 1.0 / 3, 0.3, 1e4, 2e-3, 1e-7, 2e-7, Double.NaN)),
+                Quality.DOUBTFUL,
+                List.of(Flag.UNSETTLED),
+                77,
+                List.of());
     }
 
     private static ModulusPoint plainPoint(OptionalDouble strainSnrDb, List<Harmonic> harmonics) {
