@@ -54,6 +54,9 @@ public final class Conclude {
         notes.addAll(figures.findings().notes());
         LotResponses responses = LotResponses.of(plan.responses(), drawn.spectrum());
         notes.addAll(responses.notes());
+        notes.addAll(LotNotes.taggedTemperatures(lot.points()));
+        List<Reason> absent = drawn.absent(plan);
+        notes.addAll(absent.stream().filter(LotNotes::isDoubt).toList());
         Optional<MasterCurve> master = drawn.curve().flatMap(LotCurve::master);
         List<Marker> markers = inOrder(drawn, figures);
         return LotResult.builder()
@@ -63,7 +66,9 @@ public final class Conclude {
                 .masterCurve(master.map(MasterCurve::points).orElse(List.of()))
                 .spectrum(drawn.spectrum().rows().stream().sorted(ROW_ORDER).toList())
                 .notes(notes)
-                .absent(drawn.absent(plan))
+                .absent(absent.stream()
+                        .filter(reason -> !LotNotes.isDoubt(reason))
+                        .toList())
                 .derived(figures.rows())
                 .sweeps(drawn.sweeps().sweeps())
                 .responses(responses.rows())

@@ -30,6 +30,9 @@ public enum ConclusionReason implements ReasonCode {
     /** Temperature of the creep, and of the moduli, °C. */
     CREEP_WITHOUT_SHIFT(
             "creep at {0} °C has a spectrum of its own: the moduli are of {1} °C, and no isotherms say how times move"),
+    /** How many points, of how many files, the first file, what is said of its first point. */
+    TAGGED_TEMPERATURES_OFF(
+            "points whose tag and channel give different temperatures: {0}, in files: {1}; the first, {2}: {3}"),
     /** Specimen, sweep, how many strains, how many are needed. */
     RIM_TOO_FEW_STRAINS(
             "specimen {0}, sweep {1}: {2} strains between parallel plates, {3} are needed to correct to the rim; its moduli"

@@ -164,7 +164,8 @@ final class LotCreep {
         } catch (ReductionFault fault) {
             notes.add(fault.reason());
         }
-        fit(all, to).ifPresent(spectrum -> replacesModuli = true);
+        boolean inDoubt = moduli.filter(LotCurve::isInDoubt).isPresent();
+        fit(all, to, inDoubt).ifPresent(spectrum -> replacesModuli = true);
     }
 
     private void fitAlone(Group group) {
@@ -176,13 +177,14 @@ final class LotCreep {
                                 celsius(group.temperatureK()), celsius(to.referenceK()))));
         fit(
                 CreepData.of(ShiftedCreep.unmoved(group.curves())),
-                TemperatureShift.of(group.temperatureK(), Optional.empty()));
+                TemperatureShift.of(group.temperatureK(), Optional.empty()),
+                false);
     }
 
-    private Optional<CreepSpectrum> fit(CreepData data, TemperatureShift at) {
+    private Optional<CreepSpectrum> fit(CreepData data, TemperatureShift at, boolean inDoubt) {
         try {
             CreepSpectrum spectrum = CreepFit.fit(data, plan);
-            spectra.add(new PublishedSpectrum(spectrum, at));
+            spectra.add(new PublishedSpectrum(spectrum, at, inDoubt));
             notes.addAll(spectrum.notes());
             if (plan.continuous()) {
                 addContinuous(spectrum, at);

@@ -46,6 +46,11 @@ record LotCurve(
         notes = List.copyOf(notes);
     }
 
+    /** Whether it is a master curve that does not superpose. */
+    boolean isInDoubt() {
+        return master.filter(MasterCurve::isInDoubt).isPresent();
+    }
+
     /**
      * The curve of a lot.
      *

@@ -50,12 +50,26 @@ final class LotMarkers {
         });
         markers.transitions(plan);
         markers.gelPoints();
+        int ofSweeps = markers.found.size();
         // of one isotherm alone its own sweeps already say what the curve would
         Optional<LotCurve> shifted = curve.filter(LotMarkers::isShifted);
         shifted.ifPresentOrElse(markers::ofMasterCurve, markers::flowOfSweeps);
         curve.flatMap(LotCurve::master)
                 .ifPresent(master -> markers.found.add(new Findings(master.markers(), List.of())));
+        curve.filter(LotCurve::isInDoubt).ifPresent(any -> markers.doubtFrom(ofSweeps));
         return Findings.together(markers.found);
+    }
+
+    /** What was found on the master curve itself says that it does not superpose; the misfit says so already. */
+    private void doubtFrom(int first) {
+        found.subList(first, found.size())
+                .replaceAll(some -> new Findings(
+                        some.markers().stream()
+                                .map(marker -> marker.property().equals("superposition_misfit")
+                                        ? marker
+                                        : marker.saying(MasterCurve.IN_DOUBT))
+                                .toList(),
+                        some.notes()));
     }
 
     private static boolean isShifted(LotCurve curve) {

@@ -23,7 +23,7 @@ import nightlag.stages.sweep.Sweep;
  * @param shiftFactors how far each isotherm is moved onto the master curve
  * @param masterCurve the points moved to the reference temperature
  * @param spectrum spectra
- * @param notes what was asked for and could not be had, or is unusual, and why
+ * @param notes what was asked for and could not be had, what is unusual, and what puts figures in doubt, and why
  * @param absent characteristic figures that the data do not support, and why; most materials lack some
  * @param derived the grade's own figures of each point
  * @param sweeps the sweeps its points were assembled to
@@ -67,6 +67,21 @@ public record LotResult(
         creep = List.copyOf(creep);
         acceptance = List.copyOf(acceptance);
         trend = List.copyOf(trend);
+    }
+
+    /** Those of the notes that put published figures in doubt. */
+    public List<Reason> doubts() {
+        return LotNotes.of(notes).doubts();
+    }
+
+    /** Those of the notes that say what was asked for and could not be had. */
+    public List<Reason> unattained() {
+        return LotNotes.of(notes).unattained();
+    }
+
+    /** Those of the notes that say how something was had, where that may not be what was expected. */
+    public List<Reason> remarks() {
+        return LotNotes.of(notes).remarks();
     }
 
     /** The same lot among these earlier ones. */

@@ -59,7 +59,8 @@ record LotSpectrum(
                             modes,
                             TemperatureShift.of(
                                     curve.orElseThrow().temperatureK(),
-                                    curve.get().master()))));
+                                    curve.get().master()),
+                            curve.get().isInDoubt())));
             notes.addAll(moduli.discreteNotes());
         }
         discrete.addAll(ofCreep.spectra());
@@ -88,9 +89,7 @@ record LotSpectrum(
 
     /** What completes the discrete spectra, and what follows from them. */
     List<Marker> markers() {
-        return discrete.stream()
-                .flatMap(one -> one.modes().markers(one.temperatureK()).stream())
-                .toList();
+        return discrete.stream().flatMap(one -> one.markers().stream()).toList();
     }
 
     /** Modes and nodes. */

@@ -257,6 +257,30 @@ class ConcludeTest {
         }
     }
 
+    @Test
+    void figuresOfAMasterCurveThatDoesNotSuperposeSaySo() {
+        RelaxationModes elsewhere = RelaxationModes.of(0, new double[] {0.01, 0.1, 1}, new double[] {3e4, 6e4, 1e3});
+        Stream<TestPoints> another =
+                sweep(483.15, "2").map(p -> p.modulus(elsewhere.modulusPa(0.3 * 2 * Math.PI * p.frequencyHz())));
+
+        LotResult result = conclude(Stream.concat(sweep(463.15, "1"), another), atReference(463.15));
+
+        assertThat(result.doubts()).extracting(Reason::code).containsExactly("DOES_NOT_SUPERPOSE");
+        assertThat(result.unattained()).doesNotContainAnyElementsOf(result.doubts());
+        assertThat(result.markers())
+                .filteredOn(
+                        marker -> marker.sweep().isEmpty() && !marker.property().equals("superposition_misfit"))
+                .extracting(Marker::property)
+                .contains("zero_shear_viscosity", "mean_relaxation_time", "crossover_modulus", "activation_energy");
+        assertThat(result.markers())
+                .filteredOn(marker -> marker.sweep().isEmpty())
+                .allMatch(marker -> marker.method().contains("does not superpose"));
+        assertThat(result.markers())
+                .filteredOn(marker -> !marker.sweep().isEmpty())
+                .isNotEmpty()
+                .noneMatch(marker -> marker.method().contains("does not superpose"));
+    }
+
     private static double marker(LotResult result, String property) {
         return result.markers().stream()
                 .filter(marker -> marker.property().equals(property))

@@ -11,6 +11,7 @@ import java.util.function.Predicate;
 import nightlag.stages.moduli.Marker;
 import nightlag.stages.moduli.ModulusPoint;
 import nightlag.stages.moduli.Quality;
+import nightlag.stages.superposition.MasterCurve;
 import nightlag.stages.sweep.FigureMarkerPlan;
 import nightlag.stages.sweep.OwnFigures;
 import nightlag.stages.sweep.SweepName;
@@ -130,6 +131,9 @@ final class MarkerLimits {
             where(markers.get(0)).ifPresent(notes::add);
         }
         doubtful(markers).ifPresent(notes::add);
+        if (markers.stream().anyMatch(marker -> marker.method().endsWith(MasterCurve.IN_DOUBT))) {
+            notes.add(MasterCurve.IN_DOUBT);
+        }
         return shared.with(pooled.mean(), pooled.u(), notes);
     }
 

@@ -3,10 +3,10 @@ package nightlag.stages.moduli;
 import java.util.ArrayList;
 import java.util.Arrays;
 import java.util.List;
-import java.util.Locale;
 import java.util.OptionalDouble;
 import java.util.stream.Collectors;
 import nightlag.stages.fault.Reason;
+import nightlag.stages.fault.ReasonCode;
 import nightlag.stages.fault.ReductionFault;
 import nightlag.stages.geometry.CorrectionMap;
 import nightlag.stages.geometry.SignalCorrection;
@@ -329,7 +329,7 @@ public final class CreepAnalysis {
     private void notes(
             List<LoadSteps.Step> found, List<CreepStep> steps, boolean fromRest, int spikes, double correlation) {
         reasons.add(CreepReason.CREEP_RAMP_LEFT_OUT.with(found.stream()
-                .map(step -> String.format(Locale.ROOT, "%.3g s", RISES_LEFT_OUT * rise(step)))
+                .map(step -> ReasonCode.rounded(RISES_LEFT_OUT * rise(step)) + " s")
                 .collect(Collectors.joining(", "))));
         if (!fromRest) {
             reasons.add(CreepReason.CREEP_BEGINS_UNDER_LOAD.with());

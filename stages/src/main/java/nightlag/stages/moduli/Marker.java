@@ -25,6 +25,11 @@ public record Marker(
         OptionalDouble u,
         String unit,
         String method) {
+    /** The same figure, with more to say of how it was found. */
+    public Marker saying(String more) {
+        return withMethod(method + "; " + more);
+    }
+
     /** The same figure, found in other words. */
     public Marker withMethod(String words) {
         return new Marker(specimen, sweep, property, temperatureK, frequencyHz, value, u, unit, words);

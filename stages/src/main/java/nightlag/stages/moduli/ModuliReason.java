@@ -10,6 +10,9 @@ public enum ModuliReason implements ReasonCode {
     MODULI_ZERO("the modulus is zero"),
     /** {0} frequency, Hz. */
     MODULI_FREQUENCY_NOT_POSITIVE("the frequency is {0} Hz; it must be above zero and finite"),
+    /** {0} tagged temperature, {1} mean of the channel, °C. */
+    MODULI_TAGGED_TEMPERATURE_OFF(
+            "the tag says {0} °C, the channel {1} °C: the point stands at the channel''s, its isotherm is that of the tag"),
     /** {0} loss modulus, Pa. */
     MODULI_LOSS_NEGATIVE(
             "the loss modulus is {0} Pa, below zero: a channel may be inverted, a delay wrong, or the inertia off"),

@@ -19,6 +19,9 @@ public final class ModulusPoints {
     /** Standard uncertainties by which a figure stands out of its noise. */
     private static final double STANDS_OUT = 3;
 
+    private static final double TAG_OFF_K = 5;
+    private static final double KELVIN_AT_ZERO_CELSIUS = 273.15;
+
     private ModulusPoints() {}
 
     /**
@@ -104,6 +107,7 @@ public final class ModulusPoints {
         List<Reason> reasons = new ArrayList<>(screening.reasons());
         reasons.addAll(fit.notes());
         reasons.addAll(signs(moduli));
+        taggedTemperatureOff(origin, fit).ifPresent(reasons::add);
         boolean inverted = isInverted(moduli);
         ModulusPoint screened = new ModulusPoint(
                 origin.key(),
@@ -136,6 +140,19 @@ public final class ModulusPoints {
                         .map(kind -> new HarmonicLimits(plan.thirdHarmonic().doubtful(), plan.evenHarmonics())),
                 windowS(waveform));
         return inverted ? inverted(screened, moduli) : screened;
+    }
+
+    /** A controller is seldom off by more; further apart, tag and channel speak of two temperatures. */
+    private static Optional<Reason> taggedTemperatureOff(Origin origin, SignalFit fit) {
+        if (origin.taggedTemperatureK().isEmpty() || fit.meanTemperatureK().isEmpty()) {
+            return Optional.empty();
+        }
+        double tagged = origin.taggedTemperatureK().getAsDouble();
+        double measured = fit.meanTemperatureK().getAsDouble();
+        return Math.abs(measured - tagged) <= TAG_OFF_K
+                ? Optional.empty()
+                : Optional.of(ModuliReason.MODULI_TAGGED_TEMPERATURE_OFF.with(
+                        tagged - KELVIN_AT_ZERO_CELSIUS, measured - KELVIN_AT_ZERO_CELSIUS));
     }
 
     /**

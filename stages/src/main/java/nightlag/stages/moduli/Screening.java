@@ -9,6 +9,7 @@ import java.util.Optional;
 import java.util.OptionalDouble;
 import java.util.Set;
 import nightlag.stages.fault.Reason;
+import nightlag.stages.fault.ReasonCode;
 import nightlag.stages.waveform.ClockJump;
 import nightlag.stages.waveform.CycleScatter;
 import nightlag.stages.waveform.ScreeningFigures;
@@ -231,8 +232,13 @@ final class Screening {
     private void raise(
             ScreeningReason reason, double figure, double doubtful, OptionalDouble unusable, Object... more) {
         Quality verdict = unusable.isPresent() ? Quality.UNUSABLE : Quality.DOUBTFUL;
-        List<Object> parts = new ArrayList<>(
-                List.of(figure, unusable.orElse(doubtful), verdict.name().toLowerCase(Locale.ROOT)));
+        // the limit is quoted, and what is beyond it has to look so
+        String limit = ReasonCode.shortest(unusable.orElse(doubtful));
+        String rounded = ReasonCode.rounded(figure);
+        List<Object> parts = new ArrayList<>(List.of(
+                rounded.equals(limit) ? ReasonCode.shortest(figure) : rounded,
+                limit,
+                verdict.name().toLowerCase(Locale.ROOT)));
         parts.addAll(List.of(more));
         reasons.add(reason.with(parts.toArray()));
         if (!flags.contains(reason.flag())) {

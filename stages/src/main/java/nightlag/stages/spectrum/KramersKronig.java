@@ -1,5 +1,7 @@
 package nightlag.stages.spectrum;
 
+import java.math.BigDecimal;
+import java.math.MathContext;
 import java.util.Arrays;
 import java.util.List;
 import java.util.Locale;
@@ -40,6 +42,8 @@ public final class KramersKronig {
      * phase of a good instrument is hardly known to better than a third of a degree.
      */
     private static final double TOLERANCE = 5e-3;
+    /** A fit that leaves as much of |G*| fits nothing, and readings that scatter as much can tell nothing of it. */
+    private static final double MOST_OF_MODULUS = 0.5;
 
     /** Smaller chances are not told apart. */
     private static final double LEAST_CHANCE = 1e-4;
@@ -63,14 +67,22 @@ public final class KramersKronig {
             return chance >= CHANCE || share <= TOLERANCE;
         }
 
+        /** The share in per cent, two digits of it. */
+        private String percent() {
+            return new BigDecimal(100 * share)
+                    .round(new MathContext(2))
+                    .stripTrailingZeros()
+                    .toPlainString();
+        }
+
         private String words() {
             return String.format(
                     Locale.ROOT,
-                    "%s: the best generalised Maxwell fit leaves %.2g %% of |G*| (rms), %s; chance of a worse fit %s%s",
+                    "%s: the best generalised Maxwell fit leaves %s %% of |G*| (rms), %s; chance of a worse fit %s%s",
                     isConsistent() ? "consistent" : "inconsistent",
-                    100 * share,
+                    percent(),
                     source.words,
-                    chance < LEAST_CHANCE ? "below " + LEAST_CHANCE : String.format(Locale.ROOT, "%.2g", chance),
+                    chance < LEAST_CHANCE ? "below 1e-4" : String.format(Locale.ROOT, "%.2g", chance),
                     chance < CHANCE && share <= TOLERANCE ? ", but the misfit is too small to matter" : "");
         }
     }
@@ -122,6 +134,9 @@ public final class KramersKronig {
             return Findings.absent(SpectrumReason.KRAMERS_KRONIG_NO_MODULUS.with(specimen, sweep));
         }
         Check check = check(readings);
+        if (check.isConsistent() && check.share() > MOST_OF_MODULUS) {
+            return Findings.absent(SpectrumReason.KRAMERS_KRONIG_LEFT_MOST.with(specimen, sweep, check.percent()));
+        }
         return new Findings(
                 List.of(new Marker(
                         specimen,
@@ -133,7 +148,9 @@ public final class KramersKronig {
                         OptionalDouble.of(check.misfitU()),
                         "1",
                         check.words())),
-                List.of());
+                check.isConsistent()
+                        ? List.of()
+                        : List.of(SpectrumReason.KRAMERS_KRONIG_INCONSISTENT.with(specimen, sweep, check.percent())));
     }
 
     /** The check itself, for readings at enough frequencies. */

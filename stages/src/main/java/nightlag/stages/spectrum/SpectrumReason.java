@@ -15,6 +15,14 @@ public enum SpectrumReason implements ReasonCode {
             "specimen {0}, sweep {1}: no Kramers–Kronig check, too few different frequencies, {2} (at least {3} are needed)"),
     /** Specimen, sweep. */
     KRAMERS_KRONIG_NO_MODULUS("specimen {0}, sweep {1}: no Kramers–Kronig check, every modulus is zero"),
+    /** Specimen, sweep, rms of what the fit leaves, % of |G*|. */
+    KRAMERS_KRONIG_INCONSISTENT(
+            "specimen {0}, sweep {1}: storage and loss modulus are inconsistent by Kramers–Kronig, the best fit leaves {2} % of"
+                    + " |G*|: the specimen changed, a channel is late, or the response is not linear"),
+    /** Specimen, sweep, rms of what the fit leaves, % of |G*|. */
+    KRAMERS_KRONIG_LEFT_MOST(
+            "specimen {0}, sweep {1}: no Kramers–Kronig check, the best fit leaves {2} % of |G*|: these moduli are no linear"
+                    + " material''s, as where a channel is inverted, or nothing but noise"),
     /** Decades of frequency found, decades needed. */
     CONTINUOUS_TOO_NARROW(
             "no continuous spectrum: {0} decades of frequency fix it at no time at all (more than {1} are needed)"),

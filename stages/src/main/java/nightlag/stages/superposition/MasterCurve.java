@@ -24,6 +24,9 @@ public record MasterCurve(
         List<Marker> markers,
         Optional<FittedLaw> law,
         List<Reason> notes) {
+    /** Said of each figure that is drawn from a curve whose isotherms do not superpose. */
+    public static final String IN_DOUBT = "of a master curve that does not superpose";
+
     private static final double NEAR_DECADES = 0.25;
 
     /** Copies the lists. */
@@ -32,6 +35,11 @@ public record MasterCurve(
         points = List.copyOf(points);
         markers = List.copyOf(markers);
         notes = List.copyOf(notes);
+    }
+
+    /** Whether its isotherms were found not to superpose; what is drawn from it is then in doubt. */
+    public boolean isInDoubt() {
+        return notes.stream().anyMatch(note -> note.code().equals(SuperpositionReason.DOES_NOT_SUPERPOSE.name()));
     }
 
     /** u of ln a of the curve at a reduced angular frequency, rad/s, from the isotherms whose points lie there. */

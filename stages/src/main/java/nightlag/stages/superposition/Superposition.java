@@ -186,7 +186,9 @@ public final class Superposition {
             points.addAll(moved(isotherms.get(i), lnA, lnB));
         }
         List<Marker> markers = new ArrayList<>(law.markers());
-        markers.add(Verdict.of(superposed, plan).marker(reference));
+        Verdict verdict = Verdict.of(superposed, plan);
+        markers.add(verdict.marker(reference));
+        verdict.doubt().ifPresent(notes::add);
         List<MasterPoint> rising = sorted(points);
         int[] isothermOf = rising.stream()
                 .mapToInt(point -> Arrays.binarySearch(temperatures, point.temperatureK()))

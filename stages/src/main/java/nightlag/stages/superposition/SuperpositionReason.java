@@ -9,6 +9,10 @@ public enum SuperpositionReason implements ReasonCode {
     /** {0} °C reference, {1} and {2} °C lowest and highest isotherm superposed. */
     SUPERPOSITION_REFERENCE_OUTSIDE(
             "no master curve: the reference temperature of {0} °C is outside the isotherms superposed, {1} to {2} °C"),
+    /** {0} rms distance from common curves, {1} tolerance, decades. */
+    DOES_NOT_SUPERPOSE(
+            "the isotherms do not superpose: they lie {0} decades (rms) off common curves, the tolerance is {1}; shifts, spectra,"
+                    + " figures and predictions drawn from the master curve are in doubt"),
     /** {0} the isotherms with their verb, {1} frequencies each has, {2} frequencies it needs. */
     ISOTHERM_TOO_FEW_FREQUENCIES(
             "{0} left out of the master curve: {1} with moduli above zero, at least {2} are needed"),

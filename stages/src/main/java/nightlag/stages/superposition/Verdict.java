@@ -1,7 +1,9 @@
 package nightlag.stages.superposition;
 
 import java.util.Locale;
+import java.util.Optional;
 import java.util.OptionalDouble;
+import nightlag.stages.fault.Reason;
 import nightlag.stages.moduli.Marker;
 import nightlag.stages.numeric.VarianceRatio;
 
@@ -36,6 +38,13 @@ record Verdict(
 
     boolean superposes() {
         return chance >= SMALL_CHANCE || misfitDecades <= toleranceDecades;
+    }
+
+    /** What a reader has to know of all that is drawn from the curves; empty where they superpose. */
+    Optional<Reason> doubt() {
+        return superposes()
+                ? Optional.empty()
+                : Optional.of(SuperpositionReason.DOES_NOT_SUPERPOSE.with(misfitDecades, toleranceDecades));
     }
 
     Marker marker(double referenceTemperatureK) {

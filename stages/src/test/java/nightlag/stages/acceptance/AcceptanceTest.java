@@ -13,6 +13,7 @@ import java.util.stream.Stream;
 import nightlag.stages.TestPoints;
 import nightlag.stages.moduli.Figure;
 import nightlag.stages.moduli.Marker;
+import nightlag.stages.superposition.MasterCurve;
 import nightlag.stages.moduli.ModulusPoint;
 import nightlag.stages.moduli.PointQuantity;
 import nightlag.stages.moduli.Quality;
@@ -349,6 +350,14 @@ class AcceptanceTest {
         assertThat(judge(List.of(marker("A", 190, 900, 10), marker("", 190, 1100, 10)), PLATEAU)
                         .value())
                 .hasValue(1100);
+    }
+
+    @Test
+    void aFigureOfAMasterCurveThatDoesNotSuperposeIsJudgedAndSaysSo() {
+        Marker inDoubt = marker("", 190, 1100, 10).saying(MasterCurve.IN_DOUBT);
+
+        assertThat(judge(List.of(inDoubt), PLATEAU).note()).contains("of a master curve that does not superpose");
+        assertThat(judge(List.of(marker("", 190, 1100, 10)), PLATEAU).note()).doesNotContain("superpose");
     }
 
     @Test

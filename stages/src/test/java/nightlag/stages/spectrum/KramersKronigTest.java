@@ -45,8 +45,24 @@ class KramersKronigTest {
         Marker marker = marker(SWEEP.spoilt((modulus, omega, part) -> new Complex(modulus.re(), 1.05 * modulus.im()))
                 .readings(Noise.OF_EACH, 0.01, true, 1));
 
-        assertThat(marker.method()).startsWith("inconsistent: ").contains("chance of a worse fit below 1.0E-4");
+        assertThat(marker.method()).startsWith("inconsistent: ").contains("chance of a worse fit below 1e-4");
         assertThat(marker.value()).isGreaterThan(1.5);
+    }
+
+    /** With a channel inverted no spectrum fits at all; that is not to be called consistent, whatever the scatter. */
+    @Test
+    void moduliOfAnInvertedChannelAreNeverConsistent() {
+        Findings inverted = KramersKronig.of(
+                "2",
+                "s",
+                OptionalDouble.of(463.15),
+                SWEEP.spoilt((modulus, omega, part) -> new Complex(-modulus.re(), -modulus.im()))
+                        .readings(Noise.OF_EACH, 0.01, true, 1));
+
+        assertThat(inverted.markers()).noneMatch(marker -> marker.method().startsWith("consistent"));
+        assertThat(inverted.notes())
+                .singleElement()
+                .satisfies(note -> assertThat(note.sentence()).contains("leaves 100 % of |G*|"));
     }
 
     @Test
@@ -78,7 +94,7 @@ class KramersKronigTest {
 
         assertThat(marker(off.readings(Noise.OF_EACH, 1e-4, true, 1)).method())
                 .startsWith("consistent: ")
-                .endsWith("chance of a worse fit below 1.0E-4, but the misfit is too small to matter");
+                .endsWith("chance of a worse fit below 1e-4, but the misfit is too small to matter");
     }
 
     static List<NoisySweep> exactSweeps() {
@@ -147,7 +163,8 @@ class KramersKronigTest {
 
     private static Marker marker(List<ModulusReading> readings) {
         Findings findings = KramersKronig.of("2", "s", OptionalDouble.of(463.15), readings);
-        assertThat(findings.notes()).isEmpty();
+        // a finding against a sweep is something to look at besides its marker
+        assertThat(findings.notes()).extracting(Reason::code).isSubsetOf("KRAMERS_KRONIG_INCONSISTENT");
         return findings.markers().get(0);
     }
 }
