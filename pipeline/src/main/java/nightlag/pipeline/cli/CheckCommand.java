@@ -35,6 +35,9 @@ import picocli.CommandLine.Spec;
         exitCodeList = {"0:the configuration is right", "2:something in the configuration is wrong; all of it is listed"
         })
 final class CheckCommand implements Callable<Integer> {
+    /** Of so many files the names show; a first night takes up thousands. */
+    private static final int MOST_LISTED = 10;
+
     @Spec
     private CommandSpec spec;
 
@@ -71,9 +74,14 @@ final class CheckCommand implements Callable<Integer> {
     }
 
     private static void print(Preview preview, PrintWriter out) {
-        out.println("next run  takes up " + preview.toLookAt().size() + " files, waits for "
+        int files = preview.toLookAt().size();
+        int again = preview.again().size();
+        out.println("next run  takes up " + files + (files == 1 ? " file" : " files")
+                + (again == 0 ? "" : ", looks again at " + again + " set aside")
+                + ", waits for "
                 + preview.waiting().size() + ", leaves " + preview.left() + " as they are");
         list(out, "takes up", preview.toLookAt());
+        list(out, "looks again at", preview.again());
         list(out, "waits for", preview.waiting());
         preview.unreadable().forEach(line -> out.println("cannot be read: " + line));
         preview.firstFiles().forEach((intake, first) -> print(out, intake, first));
@@ -90,7 +98,10 @@ final class CheckCommand implements Callable<Integer> {
     }
 
     private static void list(PrintWriter out, String heading, List<RawFile> files) {
-        files.forEach(file -> out.println("  " + heading + " " + file.tableName()));
+        files.stream().limit(MOST_LISTED).forEach(file -> out.println("  " + heading + " " + file.tableName()));
+        if (files.size() > MOST_LISTED) {
+            out.println("  " + heading + " " + (files.size() - MOST_LISTED) + " more");
+        }
     }
 
     private static void print(PrintWriter out, Intake intake, Optional<FirstFile> first) {

@@ -14,6 +14,7 @@ import java.util.Optional;
 import nightlag.pipeline.archive.Archive;
 import nightlag.pipeline.archive.ArchiveException;
 import nightlag.pipeline.archive.ArchivedFile;
+import nightlag.pipeline.archive.FileStatus;
 import nightlag.pipeline.config.Configuration;
 import nightlag.pipeline.config.Intake;
 import nightlag.pipeline.config.TagName;
@@ -27,6 +28,7 @@ import nightlag.pipeline.intake.RawFile;
  * What the next run would do, found without writing anything.
  *
  * @param toLookAt files it would take up
+ * @param again files set aside before that it would look at again, as what stands in their way may be gone
  * @param waiting files that have not settled
  * @param left how many files it would leave as they are
  * @param unreadable what could not be read, with the reason
@@ -35,6 +37,7 @@ import nightlag.pipeline.intake.RawFile;
  */
 public record Preview(
         List<RawFile> toLookAt,
+        List<RawFile> again,
         List<RawFile> waiting,
         int left,
         List<String> unreadable,
@@ -43,6 +46,7 @@ public record Preview(
     /** Copies the collections; the map keeps the order of the intakes. */
     public Preview {
         toLookAt = List.copyOf(toLookAt);
+        again = List.copyOf(again);
         waiting = List.copyOf(waiting);
         unreadable = List.copyOf(unreadable);
         firstFiles = Collections.unmodifiableMap(new LinkedHashMap<>(firstFiles));
@@ -67,13 +71,14 @@ public record Preview(
         Survey survey =
                 Survey.of(configuration, archived(configuration), runSheets, false, ProgramVersion.get(), clock);
         List<RawFile> toLookAt = new ArrayList<>();
+        List<RawFile> again = new ArrayList<>();
         List<RawFile> waiting = new ArrayList<>();
         Map<Intake, Optional<FirstFile>> firstFiles = new LinkedHashMap<>();
         configuration.intakes().forEach(intake -> firstFiles.put(intake, Optional.empty()));
         for (Survey.Candidate candidate : survey.candidates()) {
             RawFile file = candidate.file();
             if (candidate.task() == Survey.Task.LOOK) {
-                toLookAt.add(file);
+                (isTriedAgain(candidate) ? again : toLookAt).add(file);
             } else if (candidate.task() == Survey.Task.WAIT) {
                 waiting.add(file);
             }
@@ -84,11 +89,23 @@ public record Preview(
         }
         return new Preview(
                 toLookAt,
+                again,
                 waiting,
-                survey.candidates().size() - toLookAt.size() - waiting.size(),
+                survey.candidates().size() - toLookAt.size() - again.size() - waiting.size(),
                 survey.unreadable(),
                 Night.someIntakeReadable(configuration),
                 firstFiles);
+    }
+
+    /** Unchanged, and looked at every night: it is not taken up unless something else has changed. */
+    private static boolean isTriedAgain(Survey.Candidate candidate) {
+        return candidate
+                .known()
+                .filter(known -> known.status() == FileStatus.SET_ASIDE
+                        && known.fingerprint().equals(ReductionState.TRY_AGAIN)
+                        && known.bytes() == candidate.file().bytes()
+                        && known.modifiedMillis() == candidate.file().modifiedMillis())
+                .isPresent();
     }
 
     private static List<ArchivedFile> archived(Configuration configuration) throws NightFault {

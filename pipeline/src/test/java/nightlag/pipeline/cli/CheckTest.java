@@ -34,6 +34,34 @@ class CheckTest {
     }
 
     @Test
+    void ofManyFilesTheFirstAreNamedAndTheRestCounted() {
+        lab.sweep("plover", "A1");
+        lab.sweep("plover", "A2");
+
+        assertThat(lab.command("check").out())
+                .contains("takes up 12 files,")
+                .contains("takes up bench/A2/p4.csv")
+                .doesNotContain("p5.csv\n  takes up bench/A2/p6.csv")
+                .contains("  takes up 2 more");
+    }
+
+    /** Its lot is another's but for capitals: every night looks whether the other is still there. */
+    @Test
+    void aFileThatIsTriedEveryNightIsNotCountedAsTakenUp() {
+        lab.record("bench/p1.csv", "plover", "A1", 1, 1);
+        assertThat(lab.run().exitCode()).isZero();
+        lab.record("bench/p2.csv", "plover", "a1", 1, 1);
+        assertThat(lab.run().exitCode()).isEqualTo(1);
+
+        assertThat(lab.command("check").out())
+                .contains("takes up 0 files, looks again at 1 set aside")
+                .contains("  looks again at bench/p2.csv");
+
+        lab.record("bench/p2.csv", "plover", "A1", 3, 1);
+        assertThat(lab.command("check").out()).contains("takes up 1 file,");
+    }
+
+    @Test
     void checkSaysWhatWouldBeSetAsideAndWhatIsNotSet() {
         lab.sweep("curlew", "C1");
         lab.write(
