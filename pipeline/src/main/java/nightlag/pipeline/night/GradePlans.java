@@ -43,8 +43,10 @@ final class GradePlans {
     static Optional<String> stoppedBecause(String grade, Instrument instrument, Configuration configuration) {
         List<Problem> problems = configuration.wrongGrades().get(grade);
         if (problems != null) {
+            int more = problems.size() - 1;
             return Optional.of("the grade file of '" + grade + "' is wrong: "
-                    + problems.stream().map(Problem::sentence).collect(Collectors.joining(" | ")));
+                    + problems.get(0).sentence()
+                    + (more == 0 ? "" : "; and " + more + " more in it, all of them under wrong grade files"));
         }
         Grade right = configuration.grades().get(grade);
         if (right == null) {
