@@ -32,9 +32,11 @@ final class CreepTrace {
                     "corrections",
                     still.strainFromLoad().re() == 0
                             ? "none; inertia, friction and delays do not act on a creep record"
-                            : "compliance: the strain takes "
-                                    + digits(SHORT, still.strainFromLoad().re())
-                                    + " a unit of load; inertia, friction and delays do not act on a creep record");
+                            : "compliance: the movement of the frame is taken off the strain, "
+                                    + digits(
+                                            SHORT,
+                                            Math.abs(still.strainFromLoad().re()))
+                                    + " for each unit of load (SI); inertia, friction and delays do not act on a creep record");
         });
         curve.temperatureK()
                 .ifPresent(kelvin -> line.accept("temperature", digits(LONG, kelvin - KELVIN_AT_ZERO_CELSIUS) + " °C"));

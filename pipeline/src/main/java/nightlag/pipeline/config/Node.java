@@ -62,6 +62,10 @@ sealed interface Node {
             if (value instanceof String text) {
                 return "\"" + shown(text) + "\"";
             }
+            if (value instanceof Double number) {
+                // 1e-4 and 2.5e7, as it is typed
+                return number.toString().replace(".0E", "e").replace("E", "e");
+            }
             return value instanceof Boolean || value instanceof Number ? value.toString() : "the date " + value;
         }
     }

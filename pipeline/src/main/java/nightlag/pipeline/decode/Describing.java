@@ -100,7 +100,7 @@ final class Describing {
 
     private static String defaultPoint(Layout layout) {
         return switch (layout) {
-            case SINGLE, MULTISINE, CHIRP -> "default, the file's name";
+            case SINGLE, MULTISINE, CHIRP, CREEP -> "default, the file's name";
             case ROLLING -> "default, the window";
             default -> "default, the row";
         };

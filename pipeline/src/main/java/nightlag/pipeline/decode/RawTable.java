@@ -212,7 +212,7 @@ final class RawTable implements Closeable {
             throw complaints.at(
                     lines.number(),
                     columns.nameOf(cells.count()),
-                    "a row of " + cells.count() + " cells",
+                    "a row of " + cells.count() + (cells.count() == 1 ? " cell" : " cells"),
                     "at least " + width + (widthOfHeader ? ", as the header has" : ""));
         }
         if (widthOfHeader && cells.count() > columns.headers().size()) {

@@ -168,7 +168,8 @@ class CreepNightTest {
         assertThat(ended.exitCode()).as(ended.out() + ended.err()).isZero();
         requireCurve(lab.table("plover", "L1", "creep"));
         assertThat(lab.command("trace", "bench/run.csv").out())
-                .contains("corrections  compliance: the strain takes -0.0375 a unit of load");
+                .contains(
+                        "corrections  compliance: the movement of the frame is taken off the strain, 0.0375 for each unit");
     }
 
     @Test
