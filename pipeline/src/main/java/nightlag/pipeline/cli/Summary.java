@@ -21,7 +21,7 @@ final class Summary {
     void print(PrintWriter out) {
         outcome.counts().forEach(out::println);
         for (Concern concern : outcome.concerns(configuration)) {
-            list(out, concern.heading(), concern.lines());
+            list(out, concern.heading() + " (" + concern.things() + ")", concern.lines());
         }
         out.println("in      " + outcome.folder());
     }
@@ -30,7 +30,7 @@ final class Summary {
         if (lines.isEmpty()) {
             return;
         }
-        out.println(heading + " (" + lines.size() + ")");
+        out.println(heading);
         lines.stream().limit(MOST_LINES).forEach(line -> out.println("  " + line));
         if (lines.size() > MOST_LINES) {
             out.println("  and " + (lines.size() - MOST_LINES) + " more, all in files.csv and night.log");

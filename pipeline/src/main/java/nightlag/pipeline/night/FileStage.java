@@ -178,7 +178,7 @@ final class FileStage {
         pending.add(new FileOutcome(file, look.reductions(), replaces));
         FileStates.lots(look.reductions()).forEach(lot -> lotsByLowerCase.put(lowerCase(lot), lot));
         night.tally().file(FileStates.row(file, candidate.file(), Status.REDUCED));
-        night.tally().reduced(file.tableName(), look.counts(), look.reductions());
+        night.tally().reduced(file.tableName(), look.counts());
         if (pending.size() >= FILES_PER_COMMIT) {
             commit();
         }

@@ -7,8 +7,10 @@ import java.nio.file.Path;
 import java.time.Clock;
 import java.time.LocalDate;
 import java.util.Comparator;
+import java.util.HashSet;
 import java.util.List;
 import java.util.Optional;
+import java.util.Set;
 import java.util.stream.Collectors;
 import nightlag.pipeline.archive.Archive;
 import nightlag.pipeline.archive.ArchiveException;
@@ -100,6 +102,7 @@ public final class Night {
             NightWork night = new NightWork(configuration, options, version, workers(), archive, tally, report);
             new FileStage(night, progress).work(survey, runSheets);
             new LotStage(night).work();
+            sayUnknownLots(archive, tally);
             new SheetStage(night).work(LocalDate.now(clock));
             outcome = tally.outcome();
             NightTables.writeFiles(folder, outcome.files());
@@ -121,6 +124,18 @@ public final class Night {
                 outcome.files().size(),
                 outcome.lotsConcluded().size());
         return outcome;
+    }
+
+    /** A lot that is asked for and is nowhere, most often a slip of the pen, is not passed over. */
+    private void sayUnknownLots(Archive archive, Tally tally) throws ArchiveException {
+        Set<String> known = new HashSet<>();
+        for (LotState lot : archive.lots()) {
+            known.add(lot.name().lot());
+        }
+        options.lots().stream()
+                .filter(lot -> !known.contains(lot) && !tally.names(lot))
+                .sorted()
+                .forEach(tally::unknownLot);
     }
 
     /** The tables stand without it: one that is held open elsewhere is written the next night. */

@@ -26,6 +26,9 @@ import nightlag.stages.moduli.Quality;
  * @param stillSetAside files set aside before that have not changed, with the reason
  * @param unreadableIntakes intakes that could not be read, with the reason
  * @param lotsConcluded lots whose tables were rebuilt, with what could not be had for them
+ * @param remarks how figures of those lots were had, where that may not be what was expected
+ * @param doubts what puts figures of those lots in doubt, a line each
+ * @param unknownLots lots the command line asks for that are nowhere, a line each
  * @param lotsNotConcluded lots whose tables could not be rebuilt, with the reason
  * @param quality points reduced this night, by quality, as their lots publish them
  * @param notSound the first of them that are not sound, unusable ones first, each with its reasons
@@ -44,6 +47,9 @@ public record NightOutcome(
         List<String> stillSetAside,
         List<String> unreadableIntakes,
         Map<LotName, List<String>> lotsConcluded,
+        Map<LotName, List<String>> remarks,
+        List<String> doubts,
+        List<String> unknownLots,
         Map<LotName, String> lotsNotConcluded,
         Map<Quality, Integer> quality,
         List<String> notSound,
@@ -61,6 +67,9 @@ public record NightOutcome(
         stillSetAside = List.copyOf(stillSetAside);
         unreadableIntakes = List.copyOf(unreadableIntakes);
         lotsConcluded = Collections.unmodifiableMap(new TreeMap<>(lotsConcluded));
+        remarks = Collections.unmodifiableMap(new TreeMap<>(remarks));
+        doubts = List.copyOf(doubts);
+        unknownLots = List.copyOf(unknownLots);
         lotsNotConcluded = Collections.unmodifiableMap(new TreeMap<>(lotsNotConcluded));
         quality = Collections.unmodifiableMap(new TreeMap<>(quality));
         notSound = List.copyOf(notSound);
@@ -77,6 +86,7 @@ public record NightOutcome(
         return newlySetAside.isEmpty()
                 && unreadableIntakes.isEmpty()
                 && lotsNotConcluded.isEmpty()
+                && unknownLots.isEmpty()
                 && !teamSheet.refused();
     }
 
@@ -118,27 +128,37 @@ public record NightOutcome(
 
     /** What a person should look at, worst first; some may have no lines. */
     public List<Concern> concerns(Configuration configuration) {
-        List<String> notes = new ArrayList<>();
-        lotsConcluded.forEach((lot, absent) -> absent.forEach(note -> notes.add(named(lot) + ": " + note)));
         return List.of(
                 new Concern("look at: set aside", newlySetAside),
-                new Concern("look at: points that are not sound", notSound),
+                new Concern(
+                        "look at: points that are not sound",
+                        notSound,
+                        quality.getOrDefault(Quality.UNUSABLE, 0) + quality.getOrDefault(Quality.DOUBTFUL, 0)),
                 new Concern("look at: intakes that cannot be read", unreadableIntakes),
                 new Concern(
                         "look at: lots not concluded",
                         lotsNotConcluded.entrySet().stream()
                                 .map(lot -> named(lot.getKey()) + ": " + lot.getValue())
                                 .toList()),
+                new Concern("look at: lots asked for that are nowhere", unknownLots),
+                new Concern("look at: lots whose figures are in doubt", doubts),
                 new Concern("look at: lots against their limits", notConforming),
                 new Concern("look at: lots unlike the earlier ones of their grade", unusual),
                 new Concern("look at: team sheet", teamSheet.concerns()),
                 new Concern("still set aside from an earlier night", stillSetAside),
-                new Concern("could not be had", notes),
+                new Concern("could not be had", lines(lotsConcluded)),
+                new Concern("worth knowing", lines(remarks)),
                 new Concern(
                         "wrong grade files",
                         configuration.gradeProblems().stream()
                                 .map(Problem::sentence)
                                 .toList()));
+    }
+
+    private static List<String> lines(Map<LotName, List<String>> byLot) {
+        List<String> lines = new ArrayList<>();
+        byLot.forEach((lot, said) -> said.forEach(line -> lines.add(named(lot) + ": " + line)));
+        return lines;
     }
 
     private static String named(LotName lot) {

@@ -4,17 +4,15 @@ import java.nio.file.Path;
 import java.util.ArrayList;
 import java.util.EnumMap;
 import java.util.HashSet;
-import java.util.LinkedHashMap;
 import java.util.List;
 import java.util.Map;
 import java.util.Set;
 import java.util.TreeMap;
-import java.util.stream.Collectors;
 import nightlag.pipeline.archive.LotName;
 import nightlag.pipeline.decode.DecodeCounts;
+import nightlag.pipeline.report.AlikeTogether;
 import nightlag.pipeline.tables.NightFileRow;
 import nightlag.stages.LotResult;
-import nightlag.stages.Reduction;
 import nightlag.stages.fault.Reason;
 import nightlag.stages.moduli.CreepCurve;
 import nightlag.stages.moduli.Flag;
@@ -28,11 +26,8 @@ import org.apache.logging.log4j.Logger;
 final class Tally {
     private static final Logger LOG = LogManager.getLogger(Tally.class);
 
-    /** Of so many points that are not sound a person reads the reasons at the end; the log has them all. */
+    /** So many lines on points of a lot that are not sound a person reads at the end; the log has them all. */
     private static final int MOST_NOT_SOUND = 100;
-
-    /** So many points that share a reason are named, the others are counted. */
-    private static final int MOST_NAMED = 3;
 
     private final Path folder;
     private final List<NightFileRow> files = new ArrayList<>();
@@ -40,6 +35,9 @@ final class Tally {
     private final List<String> stillSetAside = new ArrayList<>();
     private final List<String> unreadableIntakes = new ArrayList<>();
     private final Map<LotName, List<String>> lotsConcluded = new TreeMap<>();
+    private final Map<LotName, List<String>> remarks = new TreeMap<>();
+    private final List<String> doubts = new ArrayList<>();
+    private final List<String> unknownLots = new ArrayList<>();
     private final Map<LotName, String> lotsNotConcluded = new TreeMap<>();
     private final Map<Quality, Integer> quality = new EnumMap<>(Quality.class);
     private final Map<Flag, Integer> flags = new EnumMap<>(Flag.class);
@@ -75,8 +73,8 @@ final class Tally {
         LOG.warn("intake cannot be read: {}", sentence);
     }
 
-    /** Says what each point of a file was found to be; they are counted as their lots publish them. */
-    void reduced(String file, DecodeCounts counts, List<Reduction> reductions) {
+    /** Counts the rows of a file; its points are counted, and spoken of, as their lots publish them. */
+    void reduced(String file, DecodeCounts counts) {
         reducedTonight.add(file);
         rows += counts.rows();
         rowsLeftOut += counts.leftOut();
@@ -89,72 +87,58 @@ final class Tally {
                     counts.leftOut() - counts.outsideWindows(),
                     counts.outsideWindows());
         }
-        Map<String, List<String>> pointsBySentence = new LinkedHashMap<>();
-        for (Reduction reduction : reductions) {
-            for (ModulusPoint point : reduction.points()) {
-                for (Reason reason : point.reasons()) {
-                    pointsBySentence
-                            .computeIfAbsent(reason.sentence(), any -> new ArrayList<>())
-                            .add(point.key().point());
-                }
-            }
-        }
-        for (Reduction reduction : reductions) {
-            reduction
-                    .creep()
-                    .ifPresent(curve -> curve.reasons()
-                            .forEach(reason -> pointsBySentence
-                                    .computeIfAbsent(reason.sentence(), any -> new ArrayList<>())
-                                    .add(curve.key().point())));
-        }
-        pointsBySentence.forEach((sentence, points) -> LOG.info("{}, {}: {}", file, named(points), sentence));
     }
 
-    /** One sentence about many points of a long record is one line of the log. */
-    private static String named(List<String> points) {
-        if (points.size() == 1) {
-            return "point " + points.get(0);
-        }
-        String first = String.join(", ", points.subList(0, Math.min(MOST_NAMED, points.size())));
-        return "points " + first + (points.size() > MOST_NAMED ? " and " + (points.size() - MOST_NAMED) + " more" : "");
-    }
-
-    /** Counts the points of a lot that come from files reduced this night, as they are published. */
+    /** Counts the points of a lot that come from files reduced this night, as they are published, and says what was found. */
     void concluded(LotName lot, LotResult result) {
-        List<String> notes = result.notes().stream().map(Reason::sentence).toList();
-        lotsConcluded.put(lot, notes);
-        LOG.info("{} lot {}: tables rebuilt", lot.grade(), lot.lot());
-        notes.forEach(note -> LOG.info("{} lot {}: {}", lot.grade(), lot.lot(), note));
-        result.absent().forEach(why -> LOG.info("{} lot {}: {}", lot.grade(), lot.lot(), why.sentence()));
-        verdicts.add(lot.grade() + " lot " + lot.lot(), result).forEach(LOG::info);
+        String name = lot.grade() + " lot " + lot.lot();
+        lotsConcluded.put(lot, AlikeTogether.lines(result.unattained()));
+        remarks.put(lot, AlikeTogether.lines(result.remarks()));
+        List<String> inDoubt = AlikeTogether.lines(result.doubts());
+        LOG.info("{}: tables rebuilt", name);
+        inDoubt.forEach(line -> {
+            doubts.add(name + ": " + line);
+            LOG.info("{}: look at: {}", name, line);
+        });
+        lotsConcluded.get(lot).forEach(line -> LOG.info("{}: {}", name, line));
+        remarks.get(lot).forEach(line -> LOG.info("{}: {}", name, line));
+        AlikeTogether.lines(result.absent()).forEach(line -> LOG.info("{}: {}", name, line));
+        verdicts.add(name, result).forEach(LOG::info);
+        PointLines lines = new PointLines();
         for (ModulusPoint point : result.points()) {
-            if (reducedTonight.contains(point.key().sourceFile())) {
-                quality.merge(point.quality(), 1, Integer::sum);
-                point.flags().forEach(flag -> flags.merge(flag, 1, Integer::sum));
-                if (point.quality() != Quality.SOUND) {
-                    notSound(point.key(), point.quality(), point.reasons());
-                }
-            }
+            found(point.key(), point.quality(), point.flags(), point.reasons(), lines);
         }
         for (CreepCurve curve : result.creep()) {
-            if (reducedTonight.contains(curve.key().sourceFile())) {
-                quality.merge(curve.quality(), 1, Integer::sum);
-                curve.flags().forEach(flag -> flags.merge(flag, 1, Integer::sum));
-                if (curve.quality() != Quality.SOUND) {
-                    notSound(curve.key(), curve.quality(), curve.reasons());
-                }
+            found(curve.key(), curve.quality(), curve.flags(), curve.reasons(), lines);
+        }
+        for (Quality each : Quality.values()) {
+            lines.of(each).forEach(LOG::info);
+            if (each != Quality.SOUND) {
+                lines.of(each).stream()
+                        .limit(MOST_NOT_SOUND)
+                        .forEach(notSound.computeIfAbsent(each, any -> new ArrayList<>())::add);
             }
         }
     }
 
-    private void notSound(PointKey key, Quality found, List<Reason> why) {
-        String name = key.sourceFile() + ", point " + key.point();
-        String reasons = why.stream().map(Reason::sentence).collect(Collectors.joining("; "));
-        LOG.info("{}: published as {}: {}", name, found.word(), reasons);
-        List<String> lines = notSound.computeIfAbsent(found, any -> new ArrayList<>());
-        if (lines.size() < MOST_NOT_SOUND) {
-            lines.add(name + ", " + found.word() + ": " + reasons);
+    private void found(PointKey key, Quality found, List<Flag> raised, List<Reason> why, PointLines lines) {
+        if (reducedTonight.contains(key.sourceFile())) {
+            quality.merge(found, 1, Integer::sum);
+            raised.forEach(flag -> flags.merge(flag, 1, Integer::sum));
+            lines.add(key, found, why);
         }
+    }
+
+    /** A lot the command line asks for that is nowhere. */
+    void unknownLot(String lot) {
+        String line = "no lot '" + lot + "' in the archive or in the files looked at (capitals and spaces count)";
+        unknownLots.add(line);
+        LOG.warn("{}", line);
+    }
+
+    /** Whether a file of this night names a lot. */
+    boolean names(String lot) {
+        return files.stream().anyMatch(file -> file.lot().equals(lot));
     }
 
     void notConcluded(LotName lot, String reason) {
@@ -179,6 +163,9 @@ final class Tally {
                 stillSetAside,
                 unreadableIntakes,
                 lotsConcluded,
+                remarks,
+                doubts,
+                unknownLots,
                 lotsNotConcluded,
                 quality,
                 worstFirst,

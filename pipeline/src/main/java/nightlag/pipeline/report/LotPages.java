@@ -11,7 +11,6 @@ import nightlag.stages.acceptance.Judgement;
 import nightlag.stages.acceptance.LimitPlan;
 import nightlag.stages.acceptance.Trend;
 import nightlag.stages.acceptance.Verdict;
-import nightlag.stages.fault.Reason;
 import nightlag.stages.moduli.CreepCurve;
 import nightlag.stages.moduli.Marker;
 import nightlag.stages.moduli.ModulusPoint;
@@ -30,8 +29,8 @@ final class LotPages {
                 counts(result),
                 limits(result),
                 result.markers().stream().map(LotPages::figure).toList(),
-                result.notes().stream().map(Reason::sentence).toList(),
-                result.absent().stream().map(Reason::sentence).toList(),
+                AlikeTogether.lines(result.notes()),
+                AlikeTogether.lines(result.absent()),
                 ChartJson.of(LotCharts.of(result)));
     }
 

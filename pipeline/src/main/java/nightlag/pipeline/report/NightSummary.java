@@ -41,8 +41,7 @@ record NightSummary(String night, String version, List<String> counts, List<Coun
                 heading.version(),
                 heading.counts(),
                 heading.concerns().stream()
-                        .map(concern ->
-                                new Count(concern.underACall(), concern.lines().size()))
+                        .map(concern -> new Count(concern.underACall(), concern.things()))
                         .toList(),
                 lots);
     }

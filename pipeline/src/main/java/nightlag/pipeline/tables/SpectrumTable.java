@@ -55,12 +55,12 @@ final class SpectrumTable {
                             Column.optional(
                                     "low",
                                     SEE_UNIT,
-                                    "lower end of the 95 % band",
+                                    "lower end of the 95 % band of a continuous spectrum; modes have none",
                                     row -> row.mode().low()),
                             Column.optional(
                                     "high",
                                     SEE_UNIT,
-                                    "upper end of the 95 % band",
+                                    "upper end of it, likewise",
                                     row -> row.mode().high()),
                             Column.word(
                                     "unit",
