@@ -54,7 +54,7 @@ public final class Conclude {
         notes.addAll(figures.findings().notes());
         LotResponses responses = LotResponses.of(plan.responses(), drawn.spectrum());
         notes.addAll(responses.notes());
-        notes.addAll(LotNotes.taggedTemperatures(lot.points()));
+        notes.addAll(LotNotes.taggedTemperatures(lot.points(), creep));
         List<Reason> absent = drawn.absent(plan);
         notes.addAll(absent.stream().filter(LotNotes::isDoubt).toList());
         Optional<MasterCurve> master = drawn.curve().flatMap(LotCurve::master);

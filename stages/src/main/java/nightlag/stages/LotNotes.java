@@ -9,8 +9,10 @@ import java.util.stream.Collectors;
 import java.util.stream.Stream;
 import nightlag.stages.fault.Reason;
 import nightlag.stages.fault.ReasonCode;
+import nightlag.stages.moduli.CreepCurve;
 import nightlag.stages.moduli.ModuliReason;
 import nightlag.stages.moduli.ModulusPoint;
+import nightlag.stages.moduli.PointKey;
 import nightlag.stages.spectrum.SpectrumReason;
 import nightlag.stages.superposition.SuperpositionReason;
 import nightlag.stages.sweep.SweepReason;
@@ -74,14 +76,10 @@ record LotNotes(List<Reason> doubts, List<Reason> unattained, List<Reason> remar
     }
 
     /** One sentence about the files whose tagged temperatures are far from the measured ones. */
-    static List<Reason> taggedTemperatures(List<ModulusPoint> points) {
+    static List<Reason> taggedTemperatures(List<ModulusPoint> points, List<CreepCurve> creep) {
         Map<String, List<Reason>> byFile = new LinkedHashMap<>();
-        for (ModulusPoint point : points) {
-            point.reasons().stream()
-                    .filter(reason -> reason.code().equals(ModuliReason.MODULI_TAGGED_TEMPERATURE_OFF.name()))
-                    .forEach(reason -> byFile.computeIfAbsent(point.key().sourceFile(), any -> new ArrayList<>())
-                            .add(reason));
-        }
+        points.forEach(point -> addTagged(point.key(), point.reasons(), byFile));
+        creep.forEach(curve -> addTagged(curve.key(), curve.reasons(), byFile));
         if (byFile.isEmpty()) {
             return List.of();
         }
@@ -91,6 +89,13 @@ record LotNotes(List<Reason> doubts, List<Reason> unattained, List<Reason> remar
                 byFile.size(),
                 first,
                 byFile.get(first).get(0).sentence()));
+    }
+
+    private static void addTagged(PointKey key, List<Reason> reasons, Map<String, List<Reason>> byFile) {
+        reasons.stream()
+                .filter(reason -> reason.code().equals(ModuliReason.MODULI_TAGGED_TEMPERATURE_OFF.name()))
+                .forEach(reason -> byFile.computeIfAbsent(key.sourceFile(), any -> new ArrayList<>())
+                        .add(reason));
     }
 
     private static Set<String> codes(ReasonCode... codes) {

@@ -121,6 +121,7 @@ public final class CreepAnalysis {
         reasons.addAll(screening.reasons());
         notes(found, steps, fromRest, spikes, correlation);
         OptionalDouble temperature = temperatureK();
+        ModulusPoints.taggedTemperatureOff(origin, temperature).ifPresent(reasons::add);
         return new CreepCurve(
                 origin.key(),
                 origin.made(),

@@ -107,7 +107,7 @@ public final class ModulusPoints {
         List<Reason> reasons = new ArrayList<>(screening.reasons());
         reasons.addAll(fit.notes());
         reasons.addAll(signs(moduli));
-        taggedTemperatureOff(origin, fit).ifPresent(reasons::add);
+        taggedTemperatureOff(origin, fit.meanTemperatureK()).ifPresent(reasons::add);
         boolean inverted = isInverted(moduli);
         ModulusPoint screened = new ModulusPoint(
                 origin.key(),
@@ -143,12 +143,12 @@ public final class ModulusPoints {
     }
 
     /** A controller is seldom off by more; further apart, tag and channel speak of two temperatures. */
-    private static Optional<Reason> taggedTemperatureOff(Origin origin, SignalFit fit) {
-        if (origin.taggedTemperatureK().isEmpty() || fit.meanTemperatureK().isEmpty()) {
+    static Optional<Reason> taggedTemperatureOff(Origin origin, OptionalDouble meanK) {
+        if (origin.taggedTemperatureK().isEmpty() || meanK.isEmpty()) {
             return Optional.empty();
         }
         double tagged = origin.taggedTemperatureK().getAsDouble();
-        double measured = fit.meanTemperatureK().getAsDouble();
+        double measured = meanK.getAsDouble();
         return Math.abs(measured - tagged) <= TAG_OFF_K
                 ? Optional.empty()
                 : Optional.of(ModuliReason.MODULI_TAGGED_TEMPERATURE_OFF.with(

@@ -2,10 +2,10 @@ package nightlag.stages.superposition;
 
 import java.util.Arrays;
 import java.util.List;
-import java.util.Locale;
 import java.util.Optional;
 import java.util.stream.IntStream;
 import nightlag.stages.fault.Reason;
+import nightlag.stages.fault.ReasonCode;
 import nightlag.stages.numeric.Cholesky;
 import nightlag.stages.superposition.SuperpositionPlan.ShiftLaw;
 
@@ -105,17 +105,16 @@ public final class LawFit {
         double gain = arrhenius.quality().chiSquared() - bend.quality().chiSquared();
         double scaled = gain / (bend.quality().scale() * bend.quality().scale());
         if (scaled <= WORTH_A_CONSTANT) {
-            return found(
-                    because(arrhenius, "chosen over WLF, whose further constant takes %.3g off chi squared", gain));
+            return found(because(
+                    arrhenius,
+                    "chosen over WLF, whose further constant takes " + ReasonCode.rounded(gain) + " off chi squared"));
         }
         return refusal.isPresent()
                 ? instead(arrhenius, refusal.get())
                 : found(wlf(
                         bend,
-                        String.format(
-                                Locale.ROOT,
-                                "chosen over Arrhenius, as its further constant takes %.3g off chi squared",
-                                gain)));
+                        "chosen over Arrhenius, as its further constant takes " + ReasonCode.rounded(gain)
+                                + " off chi squared"));
     }
 
     private WlfLaw wlf(WeightedShifts.Bend bend, String why) {
@@ -128,12 +127,12 @@ public final class LawFit {
                 law.quality().because(why));
     }
 
-    private static ArrheniusLaw because(ArrheniusLaw law, String why, double gain) {
+    private static ArrheniusLaw because(ArrheniusLaw law, String why) {
         return new ArrheniusLaw(
                 law.referenceTemperatureK(),
                 law.activationEnergy(),
                 law.activationEnergyU(),
-                law.quality().because(String.format(Locale.ROOT, why, gain)));
+                law.quality().because(why));
     }
 
     private static LawOutcome found(FittedLaw law) {
