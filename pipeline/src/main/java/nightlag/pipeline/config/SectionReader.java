@@ -166,11 +166,11 @@ final class SectionReader {
             Quantity bare = new Quantity(number.doubleValue(), new Unit("1", 1, 0));
             return checked(key, node, bare, type);
         }
-        if (node instanceof Node.Scalar scalar && scalar.value() instanceof Number number) {
+        if (node instanceof Node.Scalar scalar && scalar.value() instanceof Number) {
             wrong(
                     key,
                     node,
-                    "the bare number " + number + " has no unit",
+                    "the bare number " + scalar.found() + " has no unit",
                     Quantity.example(type.kind()) + ", in quotes");
             return Optional.empty();
         }

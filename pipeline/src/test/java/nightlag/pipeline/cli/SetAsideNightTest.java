@@ -73,6 +73,23 @@ class SetAsideNightTest {
     }
 
     @Test
+    void theErrorsOfAGradeFileStandOnceHoweverManyFilesTheyStop() {
+        lab.write(
+                "config/grades/heron.toml",
+                "grade = \"heron\"\n[superposition]\nreference_temperature = 1e-4\nlaww = \"wlf\"\n");
+        lab.sweep("heron", "B1");
+
+        Lab.Ended night = lab.run();
+
+        assertThat(night.out()).contains("wrong grade files (2)").containsOnlyOnce("laww");
+        assertThat(lab.files())
+                .extracting(row -> row.get("reason"))
+                .hasSize(6)
+                .allMatch(reason -> reason.contains("the bare number 1e-4 has no unit")
+                        && reason.endsWith("; and 1 more in it, all of them under wrong grade files"));
+    }
+
+    @Test
     void aWrongGradeFileStopsThatGradeAloneAndNothingIsLost() {
         lab.grade("heron", "");
         lab.sweep("plover", "A1");

@@ -56,7 +56,7 @@ class RetardationMarkersTest {
                 .extracting(Reason::sentence)
                 .anySatisfy(sentence -> assertThat(sentence)
                         .startsWith("equilibrium_compliance is left out: 0.6")
-                        .endsWith("slower than the 2.0788 s that the data support, more than its own u"));
+                        .endsWith("slower than the 2.079 s that the data support, more than its own u"));
         // the mean time stands, with a u that has room for all that could hide there
         Marker mean = marker(spectrum, "mean_retardation_time").orElseThrow();
         assertThat(mean.u().orElseThrow()).isGreaterThan(MEAN_S);

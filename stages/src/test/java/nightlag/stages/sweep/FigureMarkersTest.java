@@ -162,7 +162,7 @@ class FigureMarkersTest {
         assertThat(findings.notes()).hasSize(1);
         assertThat(findings.notes().get(0).sentence())
                 .isEqualTo(
-                        "no found of specimen 1, sweep ramp at 1.6 Hz: complex_modulus stays between 1258.93 and 79432.8 Pa"
+                        "no found of specimen 1, sweep ramp at 1.6 Hz: complex_modulus stays between 1259 and 79430 Pa"
                                 + " and does not reach 100 Pa");
     }
 
