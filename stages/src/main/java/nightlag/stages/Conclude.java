@@ -114,7 +114,9 @@ public final class Conclude {
             LotSpectrum spectrum = plan.spectrum()
                     .map(wanted -> LotSpectrum.of(curve, creep, wanted, referenceK(plan)))
                     .orElse(LotSpectrum.NONE);
-            notes.addAll(spectrum.notes());
+            spectrum.notes().stream()
+                    .filter(note -> !LotNotes.isUnsupported(note))
+                    .forEach(notes::add);
             return new Drawn(sweeps, curve, spectrum, LotMarkers.of(sweeps.sweeps(), plan.sweeps(), curve), notes);
         }
 
@@ -123,7 +125,10 @@ public final class Conclude {
             return Stream.of(
                             sweeps.apart(),
                             isCurveAsked(plan) ? sweeps.isotherms().notes() : List.<Reason>of(),
-                            markers.notes())
+                            markers.notes(),
+                            spectrum.notes().stream()
+                                    .filter(LotNotes::isUnsupported)
+                                    .toList())
                     .flatMap(List::stream)
                     .toList();
         }

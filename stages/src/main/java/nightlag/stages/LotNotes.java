@@ -75,6 +75,11 @@ record LotNotes(List<Reason> doubts, List<Reason> unattained, List<Reason> remar
         return DOUBTS.contains(note.code());
     }
 
+    /** Whether it is why a figure is absent that the data do not reach, which is usual. */
+    static boolean isUnsupported(Reason note) {
+        return note.code().equals(SpectrumReason.MARKER_BEYOND_DATA.name());
+    }
+
     /** One sentence about the files whose tagged temperatures are far from the measured ones. */
     static List<Reason> taggedTemperatures(List<ModulusPoint> points, List<CreepCurve> creep) {
         Map<String, List<Reason>> byFile = new LinkedHashMap<>();

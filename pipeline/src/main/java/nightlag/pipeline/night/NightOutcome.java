@@ -86,7 +86,6 @@ public record NightOutcome(
         return newlySetAside.isEmpty()
                 && unreadableIntakes.isEmpty()
                 && lotsNotConcluded.isEmpty()
-                && unknownLots.isEmpty()
                 && !teamSheet.refused();
     }
 

@@ -41,7 +41,7 @@ class SaidOnceNightTest {
 
         Lab.Ended night = lab.run("--lot", "A2");
 
-        assertThat(night.exitCode()).isEqualTo(1);
+        assertThat(night.exitCode()).as("it may come tomorrow").isZero();
         assertThat(night.out()).contains("look at: lots asked for that are nowhere (1)\n  no lot 'A2'");
         assertThat(lab.logLines("no lot 'A2' in the archive")).hasSize(1);
         assertThat(lab.run("--lot", "A1").exitCode()).isZero();
