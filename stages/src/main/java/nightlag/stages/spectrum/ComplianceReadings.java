@@ -14,7 +14,7 @@ import nightlag.stages.numeric.Complex;
 /**
  * Readings that are linear in J0, 1/η0 and the strengths of retardation modes, as rows of unit covariance: strains of creep
  * curves, by the superposition of all steps before them (Boltzmann), with what those of a curve err by together
- * ({@link SharedErrors}), and complex compliances 1/G*.
+ * ({@link CreepErrors}), and complex compliances 1/G*.
  */
 final class ComplianceReadings {
     /** What averaging over a twentieth of a decade may leave in a reading. */
@@ -27,7 +27,7 @@ final class ComplianceReadings {
     private static final double AT_REST = 0.05;
 
     private final List<CreepRow> creep = new ArrayList<>();
-    private final List<SharedErrors> curves = new ArrayList<>();
+    private final List<CreepErrors> curves = new ArrayList<>();
     private final List<Waves> waves = new ArrayList<>();
     private double shortestS = Double.POSITIVE_INFINITY;
     private double longestS;
@@ -327,7 +327,7 @@ final class ComplianceReadings {
     /** The strains of each curve, whitened. */
     private void put(double[] column, ToDoubleFunction<CreepRow> strain) {
         int first = 0;
-        for (SharedErrors errors : curves) {
+        for (CreepErrors errors : curves) {
             double[] strains = creep.subList(first, first + errors.size()).stream()
                     .mapToDouble(strain)
                     .toArray();

@@ -16,7 +16,7 @@ public final class ShiftedCreep {
     private final double lnB;
 
     /** A curve and what its strains err by, which no shift changes. */
-    record Weighed(CreepCurve curve, SharedErrors errors) {}
+    record Weighed(CreepCurve curve, CreepErrors errors) {}
 
     /**
      * Curves to be shifted.
@@ -30,7 +30,7 @@ public final class ShiftedCreep {
                 lnA,
                 lnB,
                 curves.stream()
-                        .map(curve -> new Weighed(curve, SharedErrors.of(curve, LEAST_RELATIVE_U)))
+                        .map(curve -> new Weighed(curve, CreepErrors.of(curve, LEAST_RELATIVE_U)))
                         .toList());
     }
 

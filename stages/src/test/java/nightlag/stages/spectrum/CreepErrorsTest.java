@@ -22,7 +22,7 @@ import org.junit.jupiter.params.provider.ValueSource;
  * What all strains of a record have in common: where a step lies between two samples, what the stress comes to, the strain's zero.
  * Exact: a Burgers body, J0 = 1e-6/Pa, 1/η0 = 1e-7/(Pa·s).
  */
-class SharedErrorsTest {
+class CreepErrorsTest {
     private static final SpectrumPlan LIQUID = new SpectrumPlan(false, OptionalInt.empty(), false);
     private static final double MODE_S = 2;
     private static final double MODE_PER_PA = 0.5e-6;
@@ -83,7 +83,7 @@ class SharedErrorsTest {
     @Test
     void rowsHaveTheCovarianceOfAnErrorOfTheZero() {
         CreepCurve curve = with(step -> changed(step, 0, 0, 1e-5));
-        SharedErrors errors = SharedErrors.of(curve, 0);
+        CreepErrors errors = CreepErrors.of(curve, 0);
         int n = errors.size();
         double[] u =
                 curve.readings().stream().mapToDouble(CreepReading::strainU).toArray();

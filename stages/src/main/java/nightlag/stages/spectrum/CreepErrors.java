@@ -19,7 +19,7 @@ import nightlag.stages.numeric.NonNegativeLeastSquares;
  * <p>How a strain changes with an instant or a level needs J and its slope at every time since a step: they are taken from many
  * modes fitted to the same strains.
  */
-final class SharedErrors {
+final class CreepErrors {
     private static final int MODES_PER_DECADE = 10;
     private static final double BEYOND = 3;
     /** Intervals of sampling that differ by less than this factor are the same. */
@@ -32,7 +32,7 @@ final class SharedErrors {
     private final List<double[]> vectors = new ArrayList<>();
     private final double[] factors;
 
-    private SharedErrors(double[] u, List<double[]> columns) {
+    private CreepErrors(double[] u, List<double[]> columns) {
         this.u = u;
         for (double[] column : columns) {
             double[] vector = over(column);
@@ -43,7 +43,7 @@ final class SharedErrors {
                 vectors.add(vector);
             }
         }
-        this.factors = vectors.stream().mapToDouble(SharedErrors::factor).toArray();
+        this.factors = vectors.stream().mapToDouble(CreepErrors::factor).toArray();
     }
 
     /**
@@ -51,7 +51,7 @@ final class SharedErrors {
      *
      * @param leastRelativeU what no strain is taken to be better known than, as a share of it
      */
-    static SharedErrors of(CreepCurve curve, double leastRelativeU) {
+    static CreepErrors of(CreepCurve curve, double leastRelativeU) {
         double zero = curve.steps().get(0).strainBefore();
         double largest = curve.readings().stream()
                 .mapToDouble(reading -> Math.abs(reading.strain() - zero))
@@ -62,7 +62,7 @@ final class SharedErrors {
                         Math.hypot(reading.strainU(), leastRelativeU * (reading.strain() - zero)),
                         Math.max(Double.MIN_NORMAL, TRACE * largest)))
                 .toArray();
-        return new SharedErrors(u, new Sensitivities(curve, u).columns());
+        return new CreepErrors(u, new Sensitivities(curve, u).columns());
     }
 
     /** How many strains there are. */
