@@ -88,12 +88,12 @@ record LotNotes(List<Reason> doubts, List<Reason> unattained, List<Reason> remar
         if (byFile.isEmpty()) {
             return List.of();
         }
-        String first = byFile.keySet().iterator().next();
+        Map.Entry<String, List<Reason>> first = byFile.entrySet().iterator().next();
         return List.of(ConclusionReason.TAGGED_TEMPERATURES_OFF.with(
                 byFile.values().stream().mapToInt(List::size).sum(),
                 byFile.size(),
-                first,
-                byFile.get(first).get(0).sentence()));
+                first.getKey(),
+                first.getValue().get(0).sentence()));
     }
 
     private static void addTagged(PointKey key, List<Reason> reasons, Map<String, List<Reason>> byFile) {
