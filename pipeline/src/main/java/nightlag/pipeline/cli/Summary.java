@@ -33,7 +33,7 @@ final class Summary {
         out.println(heading);
         lines.stream().limit(MOST_LINES).forEach(line -> out.println("  " + line));
         if (lines.size() > MOST_LINES) {
-            out.println("  and " + (lines.size() - MOST_LINES) + " more, all in files.csv and night.log");
+            out.println("  and " + (lines.size() - MOST_LINES) + " more, all in night.log");
         }
     }
 }

@@ -1,6 +1,7 @@
 package nightlag.stages.acceptance;
 
 import java.util.ArrayList;
+import java.util.Comparator;
 import java.util.HashSet;
 import java.util.List;
 import java.util.Optional;
@@ -122,7 +123,13 @@ final class MarkerLimits {
                         .toArray());
         SharedPart shared = new SharedPart();
         for (Lot.Moved one : moved) {
-            shared.add(one.influence(), effect(markers, pooled.weights(), one.lot()));
+            boolean held = one.kelvin().isPresent() && areHeldAtATemperature(markers);
+            shared.add(
+                    one.influence(),
+                    held
+                            ? effectOfTemperature(
+                                    markers, pooled.mean(), one.kelvin().getAsDouble())
+                            : effect(markers, pooled.weights(), one.lot()));
         }
         List<String> notes = new ArrayList<>();
         if (markers.size() > 1) {
@@ -135,6 +142,41 @@ final class MarkerLimits {
             notes.add(MasterCurve.IN_DOUBT);
         }
         return shared.with(pooled.mean(), pooled.u(), notes);
+    }
+
+    /** Whether they are of single sweeps, each at one temperature: moved with it, such a sweep gives the same figure. */
+    private boolean areHeldAtATemperature(List<Marker> markers) {
+        return !temperatureFound
+                && markers.stream()
+                        .allMatch(marker -> !marker.specimen().isEmpty()
+                                && marker.temperatureK().isPresent());
+    }
+
+    /** By the slope of the figure's logarithm between its neighbours at other temperatures; empty where it was found at no other. */
+    private OptionalDouble effectOfTemperature(List<Marker> markers, double mean, double kelvin) {
+        double here = markers.get(0).temperatureK().orElseThrow();
+        List<Marker> others = named(lot).stream()
+                .filter(marker ->
+                        !marker.specimen().isEmpty() && marker.temperatureK().isPresent() && marker.value() / mean > 0)
+                .filter(marker -> Math.abs(marker.temperatureK().getAsDouble() - here) > LocalFigure.SAME_K)
+                .toList();
+        Optional<Marker> below = nearest(others, here, -1);
+        Optional<Marker> above = nearest(others, here, 1);
+        if (below.isEmpty() && above.isEmpty()) {
+            return OptionalDouble.empty();
+        }
+        double cold = below.map(marker -> marker.temperatureK().getAsDouble()).orElse(here);
+        double hot = above.map(marker -> marker.temperatureK().getAsDouble()).orElse(here);
+        double ratio =
+                above.map(Marker::value).orElse(mean) / below.map(Marker::value).orElse(mean);
+        return OptionalDouble.of(mean * Math.log(ratio) / (hot - cold) * kelvin);
+    }
+
+    private static Optional<Marker> nearest(List<Marker> markers, double kelvin, int side) {
+        return markers.stream()
+                .filter(marker -> side * (marker.temperatureK().getAsDouble() - kelvin) > 0)
+                .min(Comparator.comparingDouble(
+                        marker -> Math.abs(marker.temperatureK().getAsDouble() - kelvin)));
     }
 
     /** How much the mean moves; empty where one of the markers is no longer there. */

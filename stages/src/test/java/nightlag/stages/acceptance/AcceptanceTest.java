@@ -54,8 +54,9 @@ class AcceptanceTest {
                 .get(0);
     }
 
-    private static Judgement judge(List<Marker> markers, Limits limit) {
-        return Acceptance.of(List.of(limit.guarded(2)), OwnFigures.NONE, new Lot(List.of(), () -> markers), List.of())
+    private static Judgement judge(List<Marker> markers, Limits limit, Lot.Moved... moved) {
+        return Acceptance.of(
+                        List.of(limit.guarded(2)), OwnFigures.NONE, new Lot(List.of(), () -> markers), List.of(moved))
                 .get(0);
     }
 
@@ -343,6 +344,25 @@ class AcceptanceTest {
         Judgement elsewhere = judge(both, PLATEAU.atTemperature(205));
         assertThat(elsewhere.verdict()).isEqualTo(Verdict.MISSING);
         assertThat(elsewhere.note()).isEqualTo("the lot has 2 of plateau_modulus, none of them there");
+    }
+
+    /** A sweep at one temperature gives the same figure wherever its thermometer is off; the neighbours tell what that costs. */
+    @Test
+    void theTemperatureOfAFigureHeldAtOneEntersByItsNeighbours() {
+        List<Marker> markers = List.of(
+                marker("A", 180, 1100 * Math.exp(0.3), 11),
+                marker("B", 190, 1100, 11),
+                marker("C", 200, 1100 * Math.exp(-0.3), 11));
+        Lot.Moved warmer = new Lot.Moved("temperature", OptionalDouble.of(0.5), new Lot(List.of(), () -> markers));
+
+        Judgement judged = judge(markers, PLATEAU.atTemperature(190), warmer);
+        assertThat(judged.u().orElseThrow() / judged.value().orElseThrow())
+                .isCloseTo(Math.hypot(0.01, 0.03 * 0.5), within(1e-9));
+        assertThat(judged.note()).endsWith("u holds that of temperature");
+
+        List<Marker> alone = List.of(markers.get(1));
+        assertThat(judge(alone, PLATEAU, warmer).note())
+                .endsWith("what temperature leaves open of it is not known and not in u");
     }
 
     @Test
