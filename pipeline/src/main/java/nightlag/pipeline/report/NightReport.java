@@ -24,7 +24,7 @@ public final class NightReport implements AutoCloseable {
     public static final String FILE_NAME = "report.html";
 
     /** A longer list is opened by who wants it, so that the way to the lots is not a screen away. */
-    public static final int MOST_OPEN = 20;
+    public static final int MOST_OPEN = 50;
 
     private final Path folder;
     private final Path lotsFile;

@@ -17,7 +17,8 @@ import nightlag.stages.response.ResponseRow.Band;
 final class ResponseCharts {
     private static final String CAUTION =
             " A linear viscoelastic estimate from small samples; not a design value. Ageing, moisture, damage and yield are not in it,"
-                    + " nor are thermal strain and the vertical shift.";
+                    + " nor are thermal strain and the vertical shift. Structural, pressure or medical use needs the applicable"
+                    + " code and a licensed engineer's judgement.";
 
     /** A first stretch shorter than this share of the whole would be lost on an axis that is not logarithmic. */
     private static final double LEAST_SHARE = 0.02;

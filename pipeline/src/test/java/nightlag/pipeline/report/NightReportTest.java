@@ -49,7 +49,8 @@ class NightReportTest {
         assertThat(page)
                 .startsWith("<!DOCTYPE html>")
                 .contains("<title>Night 2026-03-01T020000</title>")
-                .contains("Nothing: all files were reduced, and every point is sound.")
+                .contains(
+                        "Nothing in what was new this night. What earlier nights found stands in their pages, and in the lots’ tables.")
                 .contains("None: nothing was new.");
         try (var left = Files.list(folder)) {
             assertThat(left).containsExactlyInAnyOrder(folder.resolve("report.html"), folder.resolve("night.json"));

@@ -4,6 +4,7 @@ import java.util.ArrayList;
 import java.util.Arrays;
 import java.util.Comparator;
 import java.util.List;
+import java.util.function.Function;
 import java.util.stream.IntStream;
 import nightlag.stages.moduli.Moduli;
 import nightlag.stages.moduli.ModuliCovariance;
@@ -12,8 +13,8 @@ import nightlag.stages.numeric.SmoothCurve;
 /**
  * Logarithms of the moduli over the logarithm of frequency or strain, ready for smooth curves through them. Moduli within a
  * thousandth of each other in frequency or strain are one, at their weighted mean; where such repeats scatter by more than
- * their uncertainties say, all of these are widened. Where one of the moduli has no covariance, all have
- * the same unknown share of |G*|, which the scatter about the curve tells.
+ * their uncertainties say, all of these are widened. Where one of the moduli has no covariance, the scatter of
+ * neighbours stands in for all of them.
  */
 final class LogModuli {
     /** No logarithm is taken to be known better. */
@@ -165,7 +166,71 @@ final class LogModuli {
         double widening = known ? widening(groups) : 1;
         Entry[] merged =
                 groups.stream().map(group -> together(group).widened(widening)).toArray(Entry[]::new);
-        return new LogModuli(Arrays.stream(merged).mapToDouble(Entry::x).toArray(), merged, leastStrength);
+        double[] places = Arrays.stream(merged).mapToDouble(Entry::x).toArray();
+        return new LogModuli(places, known ? merged : scattering(places, merged), leastStrength);
+    }
+
+    /**
+     * With the scatter of neighbours for the covariance that nobody gave; that of the curve alone would be a guess, as it follows
+     * values that are said to be exact. Errors grow with each modulus or with |G*|, whichever makes the scatter likelier. Too few
+     * places tell no scatter, and stay as they are.
+     */
+    private static Entry[] scattering(double[] places, Entry[] entries) {
+        if (places.length < NeighbourScatter.FEWEST) {
+            return entries;
+        }
+        Scatter each = Scatter.of(places, entries, entry -> new double[] {1, 1});
+        Scatter ofSize = Scatter.of(places, entries, entry ->
+                new double[] {1 / entry.storageShare(), 1 / (1 - entry.storageShare())});
+        Scatter likelier = each.likelihood() > ofSize.likelihood() ? each : ofSize;
+        double variance = NeighbourScatter.doubt(places.length) * likelier.variance();
+        return Arrays.stream(entries)
+                .map(entry -> {
+                    double[] shares = likelier.shares().apply(entry);
+                    return new Entry(
+                            entry.x(),
+                            entry.storage(),
+                            entry.loss(),
+                            variance * shares[0] + LEAST_VARIANCE,
+                            variance * shares[1] + LEAST_VARIANCE,
+                            0);
+                })
+                .toArray(Entry[]::new);
+    }
+
+    /**
+     * How the logarithms scatter about their neighbours.
+     *
+     * @param shares how the variances of ln G' and ln G'' grow from point to point
+     * @param variance what these are multiplied by
+     * @param likelihood logarithm of the likelihood, but for a constant
+     */
+    private record Scatter(Function<Entry, double[]> shares, double variance, double likelihood) {
+        static Scatter of(double[] places, Entry[] entries, Function<Entry, double[]> shares) {
+            double squares = 0;
+            double logarithms = 0;
+            int count = 0;
+            for (int from = 0; from + NeighbourScatter.TOGETHER <= entries.length; from++) {
+                double[] factors = NeighbourScatter.blindToParabolas(places, from);
+                double[] differences = new double[2];
+                double[] variances = new double[2];
+                for (int i = 0; i < factors.length; i++) {
+                    Entry entry = entries[from + i];
+                    double[] share = shares.apply(entry);
+                    differences[0] += factors[i] * entry.storage();
+                    differences[1] += factors[i] * entry.loss();
+                    variances[0] += square(factors[i]) * share[0];
+                    variances[1] += square(factors[i]) * share[1];
+                }
+                for (int part = 0; part < 2; part++) {
+                    squares += square(differences[part]) / variances[part];
+                    logarithms += Math.log(variances[part]);
+                    count++;
+                }
+            }
+            double variance = squares / count;
+            return new Scatter(shares, variance, -0.5 * (count * Math.log(variance) + logarithms));
+        }
     }
 
     private static Entry entry(double x, Moduli moduli, boolean known) {

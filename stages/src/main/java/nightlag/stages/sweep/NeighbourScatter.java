@@ -13,7 +13,9 @@ final class NeighbourScatter {
     /** Fewer values tell too little. */
     static final int FEWEST = 8;
 
-    private static final int TOGETHER = 4;
+    /** So many neighbours are looked at together. */
+    static final int TOGETHER = 4;
+
     private static final int NEAREST = 20;
 
     /**
@@ -65,17 +67,27 @@ final class NeighbourScatter {
     }
 
     private static double beyondAParabola(double[] x, double[] y, int from) {
-        double span = x[from + TOGETHER - 1] - x[from];
+        double[] factors = blindToParabolas(x, from);
         double difference = 0;
         double squares = 0;
-        for (int i = from; i < from + TOGETHER; i++) {
-            double product = 1;
-            for (int j = from; j < from + TOGETHER; j++) {
-                product *= j == i ? 1 : (x[i] - x[j]) / span;
-            }
-            difference += y[i] / product;
-            squares += 1 / (product * product);
+        for (int i = 0; i < TOGETHER; i++) {
+            difference += factors[i] * y[from + i];
+            squares += factors[i] * factors[i];
         }
         return difference / Math.sqrt(squares);
+    }
+
+    /** Factors of four neighbours' values whose sum is zero for any parabola: those of the third divided difference. */
+    static double[] blindToParabolas(double[] x, int from) {
+        double span = x[from + TOGETHER - 1] - x[from];
+        double[] factors = new double[TOGETHER];
+        for (int i = 0; i < TOGETHER; i++) {
+            double product = 1;
+            for (int j = 0; j < TOGETHER; j++) {
+                product *= j == i ? 1 : (x[from + i] - x[from + j]) / span;
+            }
+            factors[i] = 1 / product;
+        }
+        return factors;
     }
 }

@@ -10,6 +10,7 @@ import java.util.function.Function;
 import nightlag.stages.Study;
 import nightlag.stages.moduli.Findings;
 import nightlag.stages.moduli.Marker;
+import nightlag.stages.moduli.ModulusReading;
 import nightlag.stages.numeric.Complex;
 import org.junit.jupiter.api.Tag;
 import org.junit.jupiter.params.ParameterizedTest;
@@ -72,6 +73,29 @@ class MarkerStudyTest {
         covered("springpots", perDecade, model, MarkerModel.decades(place / 50, place * 30, perDecade), new double[] {
             place, model.apply(place).re()
         });
+    }
+
+    /** Moduli that nobody gave an uncertainty: the scatter of neighbours stands in for it. */
+    @ParameterizedTest(name = "{0} a decade")
+    @ValueSource(ints = {5, 10, 20})
+    void crossoverOfABranchedPolyethyleneWithoutU(int perDecade) {
+        DoubleFunction<Complex> model = MarkerModel.maxwell(LAUN);
+        double[] places = MarkerModel.decades(0.01, 100, perDecade);
+        covered(
+                "Laun 1978, without u",
+                perDecade,
+                List.of("crossover_angular_frequency", "crossover_modulus"),
+                new double[] {1.604072, 9806.011},
+                random -> FrequencyMarkers.of(
+                        PLACE,
+                        MarkerModel.readings(model, places, NOISE, random).stream()
+                                .map(reading -> new ModulusReading(
+                                        reading.angularFrequency(),
+                                        SeriesPoint.exact(
+                                                reading.moduli().storagePa(),
+                                                reading.moduli().lossPa(),
+                                                0)))
+                                .toList()));
     }
 
     @ParameterizedTest(name = "{0} a decade")
