@@ -8,12 +8,16 @@ import java.time.Clock;
 import java.time.LocalDate;
 import java.util.Comparator;
 import java.util.HashSet;
+import java.util.LinkedHashMap;
 import java.util.List;
+import java.util.Map;
 import java.util.Optional;
 import java.util.Set;
 import java.util.stream.Collectors;
 import nightlag.pipeline.archive.Archive;
 import nightlag.pipeline.archive.ArchiveException;
+import nightlag.pipeline.archive.KeptRow;
+import nightlag.pipeline.archive.LotName;
 import nightlag.pipeline.archive.LotState;
 import nightlag.pipeline.config.Configuration;
 import nightlag.pipeline.config.Intake;
@@ -23,6 +27,7 @@ import nightlag.pipeline.report.NightReport;
 import nightlag.pipeline.report.ResultsIndex;
 import nightlag.pipeline.tables.LotTables;
 import nightlag.pipeline.tables.NightTables;
+import nightlag.pipeline.teamsheet.SheetRow;
 import org.apache.logging.log4j.LogManager;
 import org.apache.logging.log4j.Logger;
 
@@ -141,9 +146,11 @@ public final class Night {
     /** The tables stand without it: one that is held open elsewhere is written the next night. */
     private void writeIndex(Archive archive) throws ArchiveException {
         Path results = configuration.results();
+        Map<LotName, String> verdicts = archive.sheetRows().stream()
+                .collect(Collectors.toMap(KeptRow::lot, kept -> verdicts(SheetRow.fromJson(kept.body()))));
         List<ResultsIndex.Entry> lots = archive.lots().stream()
                 .filter(lot -> lot.points() > 0)
-                .flatMap(lot -> entry(results, lot).stream())
+                .flatMap(lot -> entry(results, lot, verdicts.getOrDefault(lot.name(), "")).stream())
                 .toList();
         try {
             ResultsIndex.write(results, NightFolder.nights(results), lots);
@@ -152,13 +159,27 @@ public final class Night {
         }
     }
 
-    private static Optional<ResultsIndex.Entry> entry(Path results, LotState lot) {
+    private static String verdicts(SheetRow row) {
+        Map<String, Long> counts = row.values().stream()
+                .flatMap(value -> value.verdict().stream())
+                .collect(Collectors.groupingBy(verdict -> verdict, LinkedHashMap::new, Collectors.counting()));
+        return counts.entrySet().stream()
+                .map(count -> count.getValue() + " " + count.getKey())
+                .collect(Collectors.joining(", "));
+    }
+
+    private static Optional<ResultsIndex.Entry> entry(Path results, LotState lot, String verdicts) {
         try {
             Path folder =
                     LotTables.folder(results, lot.name().grade(), lot.name().lot());
             return Files.isDirectory(folder)
                     ? Optional.of(new ResultsIndex.Entry(
-                            lot.name().grade(), lot.name().lot(), lot.points(), folder, LotTables.fileNames()))
+                            lot.name().grade(),
+                            lot.name().lot(),
+                            lot.points(),
+                            verdicts,
+                            folder,
+                            LotTables.fileNames()))
                     : Optional.empty();
         } catch (InvalidPathException cannotBeNamedHere) {
             return Optional.empty();

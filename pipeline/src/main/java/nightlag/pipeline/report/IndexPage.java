@@ -39,10 +39,11 @@ public record IndexPage(List<GradePart> grades, List<NightRow> nights) {
      *
      * @param name its name
      * @param points how many points it has
+     * @param verdicts its verdicts, counted in words
      * @param page the part of the latest night's page that has it; empty where no page has
      * @param tables its tables
      */
-    public record LotRow(String name, int points, Optional<Link> page, List<Link> tables) {
+    public record LotRow(String name, int points, String verdicts, Optional<Link> page, List<Link> tables) {
         /** Copies the list. */
         public LotRow {
             tables = List.copyOf(tables);

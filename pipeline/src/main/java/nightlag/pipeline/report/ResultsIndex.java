@@ -46,10 +46,11 @@ public final class ResultsIndex {
      * @param grade grade
      * @param lot lot
      * @param points how many points it has
+     * @param verdicts its verdicts, counted in words; empty where it has no limits
      * @param folder where its tables are, below the results folder
      * @param tables their file names
      */
-    public record Entry(String grade, String lot, int points, Path folder, List<String> tables) {
+    public record Entry(String grade, String lot, int points, String verdicts, Path folder, List<String> tables) {
         /** Copies the list. */
         public Entry {
             tables = List.copyOf(tables);
@@ -137,6 +138,7 @@ public final class ResultsIndex {
         return new LotRow(
                 lot.lot(),
                 lot.points(),
+                lot.verdicts(),
                 Optional.ofNullable(latestPages.get(new Place(lot.grade(), lot.lot()))),
                 lot.tables().stream()
                         .map(table -> new Link(

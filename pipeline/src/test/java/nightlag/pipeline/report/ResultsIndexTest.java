@@ -61,7 +61,12 @@ class ResultsIndexTest {
         String hostile = "\"><img src=x onerror=alert(1)>&";
 
         String page = index(new ResultsIndex.Entry(
-                hostile, hostile, 3, results.resolve("Grüne #1").resolve("a b?c"), List.of("master_curve.csv")));
+                hostile,
+                hostile,
+                3,
+                hostile,
+                results.resolve("Grüne #1").resolve("a b?c"),
+                List.of("master_curve.csv")));
 
         assertThat(page)
                 .doesNotContain("<img")
@@ -77,6 +82,9 @@ class ResultsIndexTest {
         JsonNode found = Browser.found("check-index.js", results.resolve(ResultsIndex.FILE_NAME), "l-17 HERON");
 
         assertThat(found.get("faults")).isEmpty();
+        assertThat(Browser.found("check-index.js", results.resolve(ResultsIndex.FILE_NAME), "undecided")
+                        .get("found"))
+                .hasSize(2);
         assertThat(found.get("found")).hasSize(1);
         assertThat(found.get("found").get(0).asText()).isEqualTo("L-17");
         assertThat(found.get("said").asText()).isEqualTo("1 lots, 0 nights");
@@ -99,7 +107,13 @@ class ResultsIndexTest {
     }
 
     private ResultsIndex.Entry lot(String grade, String lot) {
-        return new ResultsIndex.Entry(grade, lot, 50, results.resolve(grade).resolve(lot), List.of("points.csv"));
+        return new ResultsIndex.Entry(
+                grade,
+                lot,
+                50,
+                lot.endsWith("17") ? "2 conforming, 1 undecided" : "",
+                results.resolve(grade).resolve(lot),
+                List.of("points.csv"));
     }
 
     private String index(ResultsIndex.Entry... lots) throws IOException {
