@@ -27,9 +27,19 @@ final class CreepBins {
     private int spikes;
     private double correlation;
 
-    /** The means over one stretch; {@code scatter} is the sum of squares about its line, with so many degrees of freedom. */
+    /**
+     * The means over one stretch; {@code spreadS2} is the mean square of the times about theirs, {@code scatter} the sum of squares
+     * about its line, with so many degrees of freedom.
+     */
     private record Bin(
-            int samples, double timeS, double stressPa, double strain, double scatter, int freedom, double products) {}
+            int samples,
+            double timeS,
+            double spreadS2,
+            double stressPa,
+            double strain,
+            double scatter,
+            int freedom,
+            double products) {}
 
     /** A mean with the standard uncertainty of its strain. */
     record Mean(double timeS, double stressPa, double strain, double strainU, int samples) {}
@@ -67,11 +77,28 @@ final class CreepBins {
             means.add(new Mean(
                     bin.timeS(),
                     bin.stressPa(),
-                    bin.strain(),
+                    bin.strain() - bin.spreadS2() / 2 * curvature(k),
                     deviation / Math.sqrt(Math.max(1, bin.samples() * worth)),
                     bin.samples()));
         }
         return means;
+    }
+
+    /**
+     * Second derivative of the strain by time about a mean. The mean of a curve is not its value at the mean time: it is off by half
+     * the curvature times the spread of the times.
+     */
+    private double curvature(int k) {
+        if (bins.size() < 3) {
+            return 0;
+        }
+        int middle = Math.max(1, Math.min(bins.size() - 2, k));
+        Bin before = bins.get(middle - 1);
+        Bin here = bins.get(middle);
+        Bin after = bins.get(middle + 1);
+        double rising = (here.strain() - before.strain()) / (here.timeS() - before.timeS());
+        double further = (after.strain() - here.strain()) / (after.timeS() - here.timeS());
+        return 2 * (further - rising) / (after.timeS() - before.timeS());
     }
 
     /** Isolated spikes left out. */
@@ -105,11 +132,13 @@ final class CreepBins {
         }
         int used = 0;
         double[] sums = new double[3];
+        double squares = 0;
         double scatter = 0;
         double products = 0;
         for (int i = 0; i < count; i++) {
             if (!out[i]) {
                 used++;
+                squares += (timeS[begin + i] - timeS[begin]) * (timeS[begin + i] - timeS[begin]);
                 sums[0] += timeS[begin + i] - timeS[begin];
                 sums[1] += stress[begin + i] - stress[begin];
                 sums[2] += strain[begin + i] - strain[begin];
@@ -120,6 +149,7 @@ final class CreepBins {
         bins.add(new Bin(
                 used,
                 timeS[begin] + sums[0] / used,
+                Math.max(0, squares / used - sums[0] / used * (sums[0] / used)),
                 stress[begin] + sums[1] / used,
                 strain[begin] + sums[2] / used,
                 used < LEAST_FOR_SCATTER ? 0 : scatter,

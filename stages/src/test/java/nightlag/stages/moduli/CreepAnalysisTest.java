@@ -70,6 +70,24 @@ class CreepAnalysisTest {
         requireCompliance(CreepRecording.after(curve, 2), t -> 1e-6 + 5e-7 * -Math.expm1(-t / 2), 2e-3);
     }
 
+    /** The mean over a stretch of a decaying strain lies above its value at the mean time; left in, that is 3 % here at 8 λ. */
+    @Test
+    void whatAModeStillHasToGoIsReadWellAfterManyOfItsTimes() throws ReductionFault {
+        List<CreepReading> readings =
+                CreepRecording.after(loadAndUnload(CreepAnalysisTest::solid).curve(), 1);
+        List<CreepReading> late = readings.stream()
+                .filter(reading -> reading.sinceStepS() > 30 && reading.sinceStepS() < 85)
+                .toList();
+
+        assertThat(late).hasSizeGreaterThan(5);
+        for (CreepReading reading : late) {
+            double toGo = 1e-5 - solid(reading.sinceStepS());
+            assertThat((1e-5 - reading.compliancePerPa()) / toGo)
+                    .as("at %s s", reading.sinceStepS())
+                    .isCloseTo(1, within(5e-3));
+        }
+    }
+
     @Test
     void standardLinearSolidAndPowerLaw() throws ReductionFault {
         requireCompliance(
