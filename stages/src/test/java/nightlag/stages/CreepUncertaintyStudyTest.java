@@ -211,9 +211,10 @@ class CreepUncertaintyStudyTest {
     private static RetardationModes material(String name) {
         return name.equals("melt") ? MELT.retardation() : SOLID;
     }
+
     /**
-     * Bounds of the long form: 95 % intervals hold the truth of η0, Je0, the mean time and Ge in 88 to 100 % of the draws (200
-     * draws are good to 3 %), and errors are between 0.7 and 1.25 times u; in the short form no error is beyond 4 u.
+     * Bounds of the long form: 95 % intervals hold the truth of η0, Je0, the mean time and Ge in at least 88 % of the draws
+     * (200 draws are good to 3 %), and errors are at most 1.25 times u, rms; u may be on the safe side. In the short form no error is beyond 4 u.
      */
     @ParameterizedTest(name = "{0}, samples every {1} s about the steps, {2} s of load, {3} of noise, with moduli: {4}")
     @CsvSource({
