@@ -11,6 +11,6 @@
     const words = event.target.value.trim().toLowerCase().split(/\s+/);
     rows.forEach(({ row, name }) => { row.hidden = !words.every((word) => name.includes(word)); });
     groups.forEach((group) => { group.hidden = !group.querySelector('[data-name]:not([hidden])'); });
-    found.textContent = `${counted('lot-row')} lots, ${counted('night-row')} nights`;
+    found.textContent = `lots: ${counted('lot-row')}, nights: ${counted('night-row')}`;
   });
 })();

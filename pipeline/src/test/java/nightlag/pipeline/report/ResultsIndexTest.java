@@ -87,7 +87,7 @@ class ResultsIndexTest {
                 .hasSize(2);
         assertThat(found.get("found")).hasSize(1);
         assertThat(found.get("found").get(0).asText()).isEqualTo("L-17");
-        assertThat(found.get("said").asText()).isEqualTo("1 lots, 0 nights");
+        assertThat(found.get("said").asText()).isEqualTo("lots: 1, nights: 0");
         assertThat(found.get("overflow").asBoolean()).isFalse();
     }
 
